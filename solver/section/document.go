@@ -1,0 +1,204 @@
+package section
+
+import "gopkg.in/yaml.v3"
+
+// FormatVersion is the value of the key `packrise` that this program writes and the newest that it reads.
+const FormatVersion = 1
+
+// Limits of a document: more is refused with these numbers.
+const (
+	MaxParts   = 500      // parts after unfolding builds
+	MaxNesting = 6        // cables within cables
+	MaxBytes   = 16 << 20 // size of a file
+)
+
+// Opt is a value that a document may leave out. The zero Opt is "not written", which is never read as zero.
+type Opt[T any] struct {
+	V  T
+	OK bool
+}
+
+// Some returns a written value.
+func Some[T any](v T) Opt[T] { return Opt[T]{V: v, OK: true} }
+
+// Or returns the value, or otherwise where it was not written.
+func (o Opt[T]) Or(otherwise T) T {
+	if o.OK {
+		return o.V
+	}
+	return otherwise
+}
+
+// Point is a place in the section plane in millimetres, x to the right, y up.
+type Point struct{ X, Y float64 }
+
+// Document is one design. It is immutable: an edit returns a new Document that shares what it did not touch, so nobody may
+// write to a Document, its slices or what they point to once it has been handed out.
+type Document struct {
+	Title, Notes string
+	Surroundings Surroundings
+	Holder       Holder
+	Parts        []Part
+	Builds       []Build
+	Loads        []Load
+	Materials    []Material
+	StockUsed    []StockRow // rows of the catalogue that the design used when it was saved
+
+	origin *yaml.Node // as read: order of keys, style and comments, for the next save; nil for a new design
+}
+
+// Kinds of surroundings.
+const (
+	StillAir   = "still-air"
+	MovingAir  = "moving-air"
+	FixedFilm  = "fixed-film"
+	FixedWall  = "fixed-wall"
+	Buried     = "buried"
+	Water      = "water"
+	Vacuum     = "vacuum"
+	Insulation = "insulation"
+)
+
+// Surroundings are what the section gives its heat to.
+type Surroundings struct {
+	Kind     string
+	AmbientC Opt[float64]
+	FilmWM2K Opt[float64] // fixed-film: one constant coefficient, radiation included
+}
+
+// Kinds of holder.
+const (
+	Jacket     = "jacket"
+	Conduit    = "conduit"
+	Wireway    = "wireway"
+	OpenBundle = "open-bundle"
+	Apart      = "apart"
+	NoHolder   = "none"
+)
+
+// Holder is what encloses the parts.
+type Holder struct {
+	Kind              string
+	InsideMM          Opt[float64] // round
+	WidthMM, HeightMM Opt[float64] // rectangle
+	Stock             string       // a catalogue entry instead of size and layers
+	Sides             Sides
+	Layers            []Layer // from the inside outwards
+	Fill              string  // "" means air
+	ClearanceMM       Opt[float64]
+}
+
+// Sides of a rectangle: how each side's whole outer face meets the surroundings.
+type Sides struct{ Left, Right, Top, Bottom Side }
+
+// Kinds of side.
+const (
+	SideOpen      = "open"
+	SideInsulated = "insulated"
+	SideFixed     = "fixed"
+)
+
+// Side is open (the default, also when Kind is ""), insulated, or held at FixedC.
+type Side struct {
+	Kind   string
+	FixedC float64
+}
+
+// Layer is one ring or wall layer.
+type Layer struct {
+	Material    string
+	ThicknessMM float64
+}
+
+// Kinds of part.
+const (
+	Core  = "core"
+	Cable = "cable"
+	Rod   = "rod"
+)
+
+// Roles of a conductor ("" means line).
+const (
+	RoleLine    = "line"
+	RoleNeutral = "neutral"
+	RoleEarth   = "earth"
+	RoleControl = "control"
+	RoleSpare   = "spare"
+)
+
+// Part is one thing inside the holder.
+type Part struct {
+	ID        string
+	Kind      string
+	Stock     string     // core: conductor, layers and type from the catalogue
+	Conductor *Conductor // core
+	Layers    []Layer    // insulation (core) or covering (rod) from the inside outwards
+	Type      string     // wire type
+	Role      string
+	Build     string       // cable
+	TurnDeg   Opt[float64] // cable
+	Diameter  Opt[float64] // rod, mm, over the material, under Layers
+	BoreMM    Opt[float64] // rod: a hose's bore
+	Bore      Bore         // what the bore holds
+	Material  string       // rod
+	At        Opt[Point]   // not written: the part is unplaced
+	LimitC    Opt[float64]
+}
+
+// Bore is what fills a hose: air (also ""), a material's name, or a temperature it is held at.
+type Bore struct {
+	Material string
+	FixedC   Opt[float64]
+}
+
+// Metals and classes of a conductor.
+const (
+	Copper       = "copper"
+	TinnedCopper = "tinned-copper"
+	Aluminium    = "aluminium"
+	Solid        = "solid"    // IEC 60228 class 1
+	Stranded     = "stranded" // class 2
+	Flexible     = "flexible" // class 5
+)
+
+// Conductor is the metal of a core. Exactly one of Size, AreaMM2, DiameterMM is written.
+type Conductor struct {
+	Size       string
+	AreaMM2    Opt[float64]
+	DiameterMM Opt[float64]
+	Metal      string // "" means copper
+	Class      string // "" means stranded
+}
+
+// Build is a reusable cable: a jacket and parts of its own.
+type Build struct {
+	Name   string
+	Holder Holder
+	Parts  []Part
+}
+
+// Load is what a group of conductors carries. Exactly one of CurrentA, Unknown and HeatWM is written.
+type Load struct {
+	ID          string
+	Conductors  []string     // ids, nested ones as C1/L1
+	CurrentA    Opt[float64] // r.m.s. in each
+	Unknown     bool         // current_a: unknown
+	HeatWM      Opt[float64] // a fixed heat per metre of each
+	FrequencyHz Opt[float64]
+}
+
+// Material is a document's own material or its override of the catalogue's.
+type Material struct {
+	Name         string
+	KWMK         float64
+	RhoCpMJM3K   Opt[float64]
+	LimitC       Opt[float64]
+	Emissivity   Opt[float64]
+	Absorptivity Opt[float64]
+	Gas          bool
+	Source       string
+}
+
+// StockRow is a row of the catalogue as it stood when the design was saved. Group is the catalogue file's name for its kind
+// of row, ID the row's id, YAML the row itself as one YAML mapping.
+type StockRow struct{ Group, ID, YAML string }
