@@ -1,0 +1,43 @@
+package ui
+
+import (
+	"path/filepath"
+
+	"packrise/solver/section"
+)
+
+// Load puts another design on the desk, with its file ("" for none), what its reader warned of, and a history of its own.
+func (k *Desk) Load(d *section.Document, path string, warnings []section.Problem) {
+	k.trial = nil
+	k.history = section.NewHistory(d)
+	k.path, k.opened = path, warnings
+	c := ChangedDocument | ChangedFile | ChangedSelection
+	k.selection, k.pointed = nil, ""
+	k.changed(c, ask{interrupt: true})
+}
+
+// Path returns the design's file, "" if it has none.
+func (k *Desk) Path() string { return k.path }
+
+// Name returns how the window calls the design: its file's name, else its title.
+func (k *Desk) Name() string {
+	switch {
+	case k.path != "":
+		return filepath.Base(k.path)
+	case k.Document().Title != "":
+		return k.Document().Title
+	}
+	return "Untitled"
+}
+
+// Dirty tells whether the design differs from its file.
+func (k *Desk) Dirty() bool { return k.trial != nil || k.history.Dirty() }
+
+// Saved notes that d has been written to path. It counts as saved only if it is still the current document.
+func (k *Desk) Saved(d *section.Document, path string) {
+	k.path = path
+	if k.trial == nil && k.history.Now() == d {
+		k.history.MarkSaved()
+	}
+	k.tell(ChangedFile)
+}

@@ -1,0 +1,180 @@
+package ui
+
+import (
+	"fmt"
+	"math"
+	"strings"
+
+	"packrise/render"
+	"packrise/solver/heat"
+	"packrise/solver/rating"
+	"packrise/solver/section"
+)
+
+// State is the colour of the sentence's edge. It never speaks alone: the sentence begins with the same word.
+type State int
+
+// States.
+const (
+	Unknown State = iota // solving, or nothing to judge
+	Within               // everything is within its limit
+	Over                 // something is over its limit, or no steady temperature exists
+	Refusal              // the section can't be solved as it is
+)
+
+// Sentence returns the answer as the two lines on top, and its state. They always belong to the picture that Scene returns.
+func (k *Desk) Sentence() (answer, assumed string, state State) {
+	r, fresh := k.Result()
+	switch {
+	case k.Failure() != nil:
+		return "The calculation failed: " + k.Failure().Error() + ".", "Undo the last step, or save the design and report this.", Refusal
+	case r != nil && (fresh || !k.Stale()):
+		answer, assumed = r.Sentence()
+		return answer, assumed, stateOf(r)
+	}
+	if answer, more := k.refusal(); answer != "" {
+		return answer, more, Refusal
+	}
+	if len(k.Document().Parts) == 0 {
+		return "Nothing in the section yet.", "Type what goes in, such as 12 thhn or 4G1.5, and press Enter.", Unknown
+	}
+	return "Solving …", "", Unknown
+}
+
+// stateOf judges a result on its unrounded values.
+func stateOf(r *rating.Result) State {
+	switch {
+	case r.Status == heat.ThermalRunaway:
+		return Over
+	case r.Governing == nil:
+		return Unknown
+	case r.Governing.MarginK < 0:
+		return Over
+	}
+	return Within
+}
+
+// refusal puts the first problem that stops the work into a sentence and says how many more there are.
+func (k *Desk) refusal() (first, more string) {
+	refused := refusedOf(k.Problems())
+	if len(refused) == 0 {
+		return "", ""
+	}
+	p := refused[0]
+	first = "Not solved: " + p.What + "."
+	more = upperFirst(p.Do)
+	if more != "" {
+		more += "."
+	}
+	switch n := len(refused) - 1; {
+	case n == 1:
+		more += " One more problem stands behind it."
+	case n > 1:
+		more += fmt.Sprintf(" %d more problems stand behind it.", n)
+	}
+	return first, strings.TrimSpace(more)
+}
+
+func refusedOf(all []section.Problem) []section.Problem {
+	var refused []section.Problem
+	for _, p := range all {
+		if p.Severity == section.Refused {
+			refused = append(refused, p)
+		}
+	}
+	return refused
+}
+
+func upperFirst(s string) string {
+	if s == "" {
+		return s
+	}
+	r := []rune(s)
+	return strings.ToUpper(string(r[:1])) + string(r[1:])
+}
+
+// Scene returns what the pictures show. Shapes and readings always belong together: while a newer answer is awaited it is the older section with
+// its own numbers, after staleAfter the new section without any.
+func (k *Desk) Scene() render.Scene {
+	s := render.Scene{
+		Title:    k.Document().Title,
+		AmbientC: k.Document().Surroundings.AmbientC.V,
+		Selected: k.selection,
+		Pointed:  k.pointed,
+		Caution:  rating.Caution,
+		Status:   k.Status(),
+	}
+	s.Answer, s.Assumed, _ = k.Sentence()
+	shapes, _ := k.Shapes()
+	s.Shapes = shapes
+	s.Bad = badIDs(k.Problems())
+	r, fresh := k.Result()
+	if r == nil || !fresh && k.Stale() {
+		s.Stale = r != nil
+		return s
+	}
+	s.Shapes, s.Readings, s.AmbientC, s.Notes = r.Shapes, r.Readings(), r.AmbientC, r.Notes
+	s.Bad = nil
+	if r.Status != heat.ThermalRunaway {
+		s.Field = r
+	}
+	return s
+}
+
+// badIDs returns the parts that stop the work.
+func badIDs(all []section.Problem) []string {
+	var ids []string
+	for _, p := range refusedOf(all) {
+		ids = append(ids, p.IDs...)
+	}
+	return ids
+}
+
+// Status returns the quiet line: heat in and out, numerical error, time.
+func (k *Desk) Status() string {
+	r, fresh := k.Result()
+	if r == nil || !fresh && k.Stale() {
+		if k.Solving() {
+			return "solving …"
+		}
+		return ""
+	}
+	return statusLine(r, k.Draft())
+}
+
+// statusLine says how the answer came about.
+func statusLine(r *rating.Result, draft bool) string {
+	parts := []string{fmt.Sprintf("heat in %s W/m, out %s W/m", shortNumber(r.Generated), shortNumber(r.Released+r.Absorbed))}
+	switch r.Status {
+	case heat.Converged:
+		if r.ErrorK > 0 {
+			parts = append(parts, fmt.Sprintf("±%s K numerical", shortNumber(r.ErrorK)))
+		}
+	case heat.StoppedEarly:
+		parts = append(parts, "stopped before it settled")
+	case heat.Cancelled:
+		parts = append(parts, "cancelled")
+	case heat.ThermalRunaway:
+		parts = []string{"no steady temperature exists"}
+	}
+	parts = append(parts, fmt.Sprintf("%s ms", shortNumber(1000*r.Seconds)))
+	if draft {
+		parts = append(parts, "coarse while dragging")
+	}
+	return strings.Join(parts, " · ")
+}
+
+// shortNumber writes a number with two or three figures that matter.
+func shortNumber(v float64) string {
+	switch a := math.Abs(v); {
+	case a == 0:
+		return "0"
+	case a >= 100:
+		return fmt.Sprintf("%.0f", v)
+	case a >= 1:
+		return fmt.Sprintf("%.1f", v)
+	case a >= 0.001:
+		return fmt.Sprintf("%.2g", v)
+	}
+	return "under 0.001"
+}

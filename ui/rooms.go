@@ -1,0 +1,80 @@
+package ui
+
+import (
+	"context"
+	"time"
+
+	"fyne.io/fyne/v2"
+
+	"packrise/solver/catalog"
+	"packrise/solver/heat"
+	"packrise/solver/rating"
+	"packrise/solver/section"
+)
+
+// Rooms are what a desk asks of the rest of the program, so that tests can stand in for it.
+type Rooms struct {
+	// Solve answers for a document. It is called on the runner's goroutine, one call at a time.
+	Solve func(context.Context, *section.Document, rating.Options) (*rating.Result, []section.Problem, error)
+	// Outline returns what to draw of a document.
+	Outline func(*section.Document, *catalog.Catalog) ([]section.Shape, []section.Problem)
+	// MakeRoom pushes parts apart. Called on the goroutine of Beside.
+	MakeRoom func(d *section.Document, cat *catalog.Catalog, held string) (map[string]section.Point, bool)
+	// Hop runs f on the window's goroutine.
+	Hop func(f func())
+	// Beside runs f beside the window's goroutine.
+	Beside func(f func())
+	// After calls f on any goroutine when d has passed, unless stop is called first.
+	After func(d time.Duration, f func()) (stop func())
+}
+
+// filled puts the program's own rooms where r has none.
+func (r Rooms) filled(cat *catalog.Catalog) Rooms {
+	if r.Solve == nil {
+		r.Solve = rating.NewEngine(cat).Solve
+	}
+	if r.Outline == nil {
+		r.Outline = rating.Outline
+	}
+	if r.MakeRoom == nil {
+		r.MakeRoom = rating.MakeRoom
+	}
+	if r.Hop == nil {
+		r.Hop = fyne.Do
+	}
+	if r.Beside == nil {
+		r.Beside = func(f func()) { go f() }
+	}
+	if r.After == nil {
+		r.After = func(d time.Duration, f func()) func() {
+			t := time.AfterFunc(d, f)
+			return func() { t.Stop() }
+		}
+	}
+	return r
+}
+
+// request is one document to answer for.
+type request struct {
+	doc    *section.Document
+	rev    uint64
+	number uint64 // counts requests: the same document may be asked about twice
+	draft  bool
+}
+
+// answer is what came back.
+type answer struct {
+	result   *rating.Result
+	problems []section.Problem
+	err      error
+}
+
+// work answers a request, on the runner's goroutine.
+func (r Rooms) work(ctx context.Context, q request) answer {
+	o := rating.Options{Accuracy: heat.Standard}
+	if q.draft {
+		o.Accuracy = heat.Draft
+	}
+	res, problems, err := r.Solve(ctx, q.doc, o)
+	return answer{result: res, problems: problems, err: err}
+}
