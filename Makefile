@@ -1,0 +1,46 @@
+# Packrise. `make run` opens the window, `make test` checks the engine; each does its own set-up.
+SHELL := bash
+NODISPLAY := ./assets/... ./solver/... ./render/... ./ui/... ./cmd/packrise-cli/...
+
+.PHONY: run build cli test race lint e2e soak bench clean
+
+run: build ## open the window on a demo design (FILE=… for another)
+	@bin/packrise $(FILE)
+
+build:
+	@.ci/setup go window
+	go build -o bin/packrise ./cmd/packrise
+
+cli: ## the command line alone: no C compiler, no display
+	@.ci/setup go
+	CGO_ENABLED=0 go build -o bin/packrise-cli ./cmd/packrise-cli
+
+test: ## no display, no C compiler, no OpenGL
+	@.ci/setup go
+	CGO_ENABLED=0 go test $(NODISPLAY)
+
+race: ## the same under the race detector, shortened
+	@.ci/setup go race
+	CGO_ENABLED=1 go test -race -short $(NODISPLAY)
+
+lint:
+	@.ci/setup go window
+	@bad=$$(go tool gofumpt -l .); if [ -n "$$bad" ]; then echo "not formatted (go tool gofumpt -w .):"; echo "$$bad"; exit 1; fi
+	go vet ./...
+	go tool staticcheck ./...
+
+e2e: build cli ## the real window under a display without a screen
+	@.ci/setup look
+	bash .ci/e2e.sh
+
+soak: ## long runs: more random sections, fuzzing; by hand
+	@.ci/setup go
+	CGO_ENABLED=0 PACKRISE_SOAK=1 go test -timeout 60m $(NODISPLAY)
+	CGO_ENABLED=0 go test ./solver/section -run '^$$' -fuzz FuzzRead -fuzztime 5m
+
+bench: ## speed, with allocations
+	@.ci/setup go
+	CGO_ENABLED=0 go test -run '^$$' -bench . -benchmem $(NODISPLAY)
+
+clean:
+	rm -rf bin out
