@@ -1,5 +1,7 @@
 package pack
 
+import "math"
+
 // Disc is a round part.
 type Disc struct {
 	X, Y, R float64
@@ -10,35 +12,74 @@ type Disc struct {
 // wall.
 type Box struct{ R, W, H float64 }
 
-// Settle lets the discs fall (towards −y) until they rest on each other and the wall. Same seed, same result; never an overlap. The error is
-// one sentence when they do not fit; the discs' places are ignored except for Fixed ones.
-func Settle(discs []Disc, in Box, seed uint64) ([]Disc, error) { panic("pack: not built") }
+func (b Box) round() bool { return b.R > 0 }
+func (b Box) rect() bool  { return b.R <= 0 && b.W > 0 && b.H > 0 }
+func (b Box) open() bool  { return !b.round() && !b.rect() }
 
-// LayUp places discs in concentric layers, in the given order from the centre outwards, the way that a cable is laid: (1+6+12 for equals), each layer touching the one
-// below; it returns the places and the radius of the circle that holds them.
-func LayUp(radii []float64) ([]Disc, float64) { panic("pack: not built") }
-
-// PushApart removes overlaps with the least movement. The disc with index held (−1: none) stays where it is unless the wall forbids it. gap is the least
-// distance to keep between discs and to the wall. ok is false if no place without overlap was found; the discs are then returned as they came.
-func PushApart(discs []Disc, in Box, held int, gap float64) (placed []Disc, ok bool) {
-	panic("pack: not built")
+// area of the inside, +Inf without a wall.
+func (b Box) area() float64 {
+	switch {
+	case b.round():
+		return math.Pi * b.R * b.R
+	case b.rect():
+		return b.W * b.H
+	}
+	return math.Inf(1)
 }
 
-// Enclose returns the smallest circle around the discs as they lie.
-func Enclose(discs []Disc) (x, y, r float64) { panic("pack: not built") }
-
-// SmallestHolder searches for the smallest circle into which the radii fit; it returns centres about the origin and the circle's radius.
-func SmallestHolder(radii []float64, seed uint64) ([]Disc, float64) { panic("pack: not built") }
-
-// Overlap returns the deepest overlap, of two discs (i, j) or of a disc with the wall (j = −1); depth ≤ 0 when there is none.
-func Overlap(discs []Disc, in Box) (i, j int, depth float64) { panic("pack: not built") }
-
-// Arc is a piece of the taut-string hull: the arc of disc Disc from angle From to angle To (radians, counterclockwise), followed by a straight string to
-// the next arc's disc.
-type Arc struct {
-	Disc     int
-	From, To float64
+// room is the largest radius that fits into the empty box.
+func (b Box) room() float64 {
+	switch {
+	case b.round():
+		return b.R
+	case b.rect():
+		return min(b.W, b.H) / 2
+	}
+	return math.Inf(1)
 }
 
-// Hull returns the taut string round the discs, counterclockwise, its perimeter and the total length of its straight strings.
-func Hull(discs []Disc) (arcs []Arc, perimeter, strings float64) { panic("pack: not built") }
+// clear is the gap between the disc and the nearest wall, negative when the disc reaches through it, +Inf without a wall.
+func (b Box) clear(x, y, r float64) float64 {
+	switch {
+	case b.round():
+		return b.R - r - math.Hypot(x, y)
+	case b.rect():
+		return min(x-r, b.W-x-r, y-r, b.H-y-r)
+	}
+	return math.Inf(1)
+}
+
+// clamp moves the centre to the nearest place where a disc of radius r lies inside; ok is false when it is too big for the box.
+func (b Box) clamp(x, y, r float64) (cx, cy float64, ok bool) {
+	switch {
+	case b.round():
+		a := b.R - r
+		if a < 0 {
+			return 0, 0, false
+		}
+		if d := math.Hypot(x, y); d > a+4e-16*b.R { // not again for the last bit
+			return x * a / d, y * a / d, true
+		}
+	case b.rect():
+		if 2*r > b.W || 2*r > b.H {
+			return b.W / 2, b.H / 2, false
+		}
+		return min(max(x, r), b.W-r), min(max(y, r), b.H-r), true
+	}
+	return x, y, true
+}
+
+// reach is the length that tolerances are measured against: the box or, without one, the extent of the discs.
+func reach(discs []Disc, in Box) float64 {
+	if !in.open() {
+		return max(in.R, in.W, in.H)
+	}
+	s := 0.0
+	for _, d := range discs {
+		s = max(s, math.Abs(d.X)+d.R, math.Abs(d.Y)+d.R)
+	}
+	return s
+}
+
+// slack is the overlap that counts as touching, as a share of reach: a few roundings, far below the promised 1e-9.
+const slack = 2e-12
