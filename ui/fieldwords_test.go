@@ -1,0 +1,68 @@
+package ui
+
+import (
+	"errors"
+	"testing"
+
+	"packrise/solver/section"
+)
+
+// The expected strings follow from the rule written at the functions, worked by hand.
+func TestDegreesNeverRoundPastTheLimit(t *testing.T) {
+	limit := section.Some(90.0)
+	for _, c := range []struct {
+		t     float64
+		limit section.Opt[float64]
+		want  string
+	}{
+		{86.4, limit, "86"},
+		{89.4, limit, "89"},
+		{89.6, limit, "89.6"},
+		{89.96, limit, "89.9"}, // not "90": it is below
+		{90, limit, "90"},
+		{90.04, limit, "90.1"}, // not "90": it is over
+		{90.4, limit, "90.4"},
+		{90.6, limit, "91"},
+		{62.6, section.Some(62.7), "62.6"}, // 63 would read as over
+		{-39.6, section.Opt[float64]{}, "−40"},
+		{-0.2, section.Opt[float64]{}, "0"},
+		{123.5, section.Opt[float64]{}, "124"},
+	} {
+		if got := degrees(c.t, c.limit); got != c.want {
+			t.Errorf("degrees(%v, %v) = %q, want %q", c.t, c.limit, got, c.want)
+		}
+	}
+}
+
+func TestKelvinsRoundDown(t *testing.T) {
+	for _, c := range []struct {
+		m    float64
+		want string
+	}{
+		{3.6, "3"}, {3, "3"}, {0.96, "0.9"}, {0.04, "0"}, {0, "0"}, {-0.04, "−0.1"}, {-0.96, "−1"}, {-1.2, "−2"}, {-12, "−12"},
+	} {
+		if got := kelvins(c.m); got != c.want {
+			t.Errorf("kelvins(%v) = %q, want %q", c.m, got, c.want)
+		}
+	}
+}
+
+func TestWords(t *testing.T) {
+	for _, c := range []struct{ got, want string }{
+		{written(16), "16"},
+		{written(16.25), "16.25"},
+		{written(100.0 / 3), "33.333"},
+		{written(-4.2), "−4.2"},
+		{withUnit("36", "A"), "36\u00a0A"},
+		{someIDs([]string{"a", "b", "c"}, 2), "a, b, c"},
+		{someIDs([]string{"a", "b", "c", "d"}, 2), "a, b and 2 more"},
+		{plainMinus("−4.2"), "-4.2"},
+		{sentence(errors.New("quantity: 5 furlong isn't a length")), "5 furlong isn't a length."},
+		{sentence(errors.New("no such size: try 12 AWG")), "No such size: try 12 AWG."},
+		{sentence(nil), ""},
+	} {
+		if c.got != c.want {
+			t.Errorf("got %q, want %q", c.got, c.want)
+		}
+	}
+}
