@@ -1,0 +1,163 @@
+package harmonic
+
+import "math"
+
+// sourceCut ends the running powers of far monopoles.
+const sourceCut = 1e-9
+
+// Mono adds to y what monopoles of strength q_j/(2πk) in the discs bring to every disc, scaled like the system's unknowns; they
+// are given as q, one a disc.
+func (s *System) Mono(y, q []float64) {
+	for i := range s.discs {
+		s.monoAt(i, q, y[s.off[i]:s.off[i+1]])
+	}
+	if s.circle == nil || len(s.circle.Sigma) == 0 {
+		return
+	}
+	alpha := make([]complex128, s.top)
+	for j, f := range q {
+		s.chargeOut(j, f, alpha)
+	}
+	for n := range alpha {
+		if n < len(s.circle.Sigma) {
+			alpha[n] = scale(s.circle.Sigma[n], alpha[n])
+		} else {
+			alpha[n] = 0
+		}
+	}
+	s.Spread(y, alpha)
+}
+
+// monoAt adds the direct and image parts at disc i.
+func (s *System) monoAt(i int, q, y []float64) {
+	d := s.discs[i]
+	for j, f := range q {
+		if f == 0 {
+			continue
+		}
+		if j != i {
+			series(y, d.S, f, conj(over(-d.A, apart(d, s.discs[j]))))
+		}
+		if s.circle != nil && s.circle.RhoInf != 0 {
+			series(y, d.S, f*s.circle.RhoInf, conj(s.eta(i, j)))
+		}
+	}
+}
+
+// eta is the ratio of the Taylor series of the image of j's monopole about disc i.
+func (s *System) eta(i, j int) complex128 {
+	cj := conj(s.discs[j].C)
+	gamma := complex(s.circle.R*s.circle.R, 0) - cj*s.discs[i].C
+	return scale(s.discs[i].A, cj) * over(1, gamma)
+}
+
+func conj(z complex128) complex128 { return complex(real(z), -imag(z)) }
+
+// series adds f S_n z^n/√n.
+func series(y, s []float64, f float64, z complex128) {
+	p := complex(f, 0)
+	r := size(z)
+	a := math.Abs(f)
+	for n, g := range s {
+		p *= z
+		if a *= r; a < sourceCut {
+			return
+		}
+		g /= roots[n]
+		y[2*n] += g * real(p)
+		y[2*n+1] += g * imag(p)
+	}
+}
+
+// chargeOut adds the circle's outgoing amplitudes of a monopole in disc j: f (c/R)^n/√n.
+func (s *System) chargeOut(j int, f float64, alpha []complex128) {
+	if f == 0 {
+		return
+	}
+	z := scale(1/s.circle.R, s.discs[j].C)
+	p := complex(f, 0)
+	for n := range alpha {
+		p *= z
+		alpha[n] += scale(1/math.Sqrt(float64(n+1)), p)
+	}
+}
+
+// ChargeOut sets alpha to the circle's outgoing scaled amplitudes of monopoles q in the discs, in units of 1/(2πk).
+func (s *System) ChargeOut(alpha []complex128, q []float64) {
+	for n := range alpha {
+		alpha[n] = 0
+	}
+	for j, f := range q {
+		s.chargeOut(j, f, alpha)
+	}
+}
+
+// MonoDot returns, for each disc, the inner product of its unit monopole's share (as of Mono) with x: the mean temperature that outgoing
+// amplitudes x bring to it.
+func (s *System) MonoDot(out, x []float64) {
+	for j := range out {
+		out[j] = 0
+	}
+	for i, d := range s.discs {
+		xi := x[s.off[i]:s.off[i+1]]
+		for j := range s.discs {
+			if j != i {
+				out[j] += against(xi, d.S, conj(over(-d.A, apart(d, s.discs[j]))))
+			}
+			if s.circle != nil && s.circle.RhoInf != 0 {
+				out[j] += s.circle.RhoInf * against(xi, d.S, conj(s.eta(i, j)))
+			}
+		}
+	}
+	if s.circle == nil || len(s.circle.Sigma) == 0 {
+		return
+	}
+	s.Gather(s.alpha, x)
+	for j := range out {
+		z := scale(1/s.circle.R, s.discs[j].C)
+		p := complex(1, 0)
+		for n, g := range s.circle.Sigma {
+			p *= z
+			out[j] += g / math.Sqrt(float64(n+1)) * (real(p)*real(s.alpha[n]) + imag(p)*imag(s.alpha[n]))
+		}
+	}
+}
+
+// against is series' inner product with x.
+func against(x, s []float64, z complex128) float64 {
+	p := complex(1, 0)
+	r, a, sum := size(z), 1.0, 0.0
+	for n, g := range s {
+		p *= z
+		if a *= r; a < sourceCut {
+			break
+		}
+		sum += g / roots[n] * (real(p)*x[2*n] + imag(p)*x[2*n+1])
+	}
+	return sum
+}
+
+// Log returns the mean temperature that a unit monopole in disc j brings to the rim of disc i (or, i = j, its own rim), in units of
+// 1/(2πk), wall included but for the wall's own series resistance.
+func (s *System) Log(i, j int) float64 {
+	var g float64
+	switch {
+	case s.circle == nil && i == j:
+		return -math.Log(s.discs[i].A)
+	case s.circle == nil:
+		return -math.Log(size(apart(s.discs[i], s.discs[j])))
+	case i == j:
+		g = -math.Log(s.discs[i].A / s.circle.R)
+	default:
+		g = -math.Log(size(apart(s.discs[i], s.discs[j])) / s.circle.R)
+	}
+	gamma := complex(s.circle.R*s.circle.R, 0) - conj(s.discs[j].C)*s.discs[i].C
+	g -= s.circle.RhoInf * math.Log(size(gamma)/(s.circle.R*s.circle.R))
+	z := scale(1/(s.circle.R*s.circle.R), s.discs[i].C) * conj(s.discs[j].C)
+	p := complex(1, 0)
+	for n, f := range s.circle.Sigma {
+		p *= z
+		g += f / float64(n+1) * real(p)
+	}
+	return g
+}
