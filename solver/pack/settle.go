@@ -41,16 +41,61 @@ func Settle(discs []Disc, in Box, seed uint64) ([]Disc, error) {
 		return nil, err
 	}
 	rng := rand.New(rand.NewPCG(seed, 0x5e771e))
-	for try := range 12 {
+	for try := range 3 {
 		order := rng.Perm(len(discs))
-		if try%2 == 1 {
+		if try == 2 {
 			largestFirst(order, discs)
 		}
 		if out, ok := drop(discs, in, order, rng); ok {
-			return out, nil
+			return rest(out, in), nil
 		}
 	}
+	if out, ok := squeeze(discs, in, rng); ok {
+		return rest(out, in), nil
+	}
 	return nil, &FitError{Disc: -1, Fill: fill(discs, in), Count: len(discs)}
+}
+
+// rest lets discs that lie free of overlap sink together, without friction, until their weights are in balance with the forces at the contacts.
+func rest(discs []Disc, in Box) []Disc {
+	out := slices.Clone(discs)
+	r, r2 := means(discs)
+	if r == 0 {
+		return out
+	}
+	n := len(discs)
+	a := aim{fy: make([]float64, n), rounds: 100 + n/2, precision: 1e-10 * reach(discs, in)}
+	if in.rect() { // on a level floor a slight pull to the middle keeps them together
+		a.kx, a.to = make([]float64, n), make([]Disc, n)
+	}
+	for i, d := range discs {
+		// Weight goes with the area; the lightest are made heavier so that their contacts close to the same precision.
+		a.fy[i] = max(d.R*d.R/r2, 0.01)
+		if in.rect() {
+			a.kx[i], a.to[i].X = 0.02*a.fy[i]/in.W, in.W/2
+		}
+	}
+	c := newCrowd(out, in, 0, r)
+	c.press(a)
+	c.close()
+	if _, _, depth := Overlap(out, in); !(depth <= slack*reach(discs, in)) {
+		return discs
+	}
+	return out
+}
+
+// means of the radii of the discs that may move, and of their squares.
+func means(discs []Disc) (r, r2 float64) {
+	n := 0.0
+	for _, d := range discs {
+		if !d.Fixed {
+			n, r, r2 = n+1, r+d.R, r2+d.R*d.R
+		}
+	}
+	if n == 0 {
+		return 0, 0
+	}
+	return r / n, r2 / n
 }
 
 func fill(discs []Disc, in Box) float64 {

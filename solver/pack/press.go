@@ -1,0 +1,274 @@
+package pack
+
+import (
+	"math"
+	"slices"
+)
+
+// aim is what a crowd strives for: the least of
+//
+//	Σ fy y + Σ kx/2 (x − tx)² + Σ ky/2 (y − ty)² − grow · size.
+type aim struct {
+	fy        []float64 // weight of each disc, which pulls it towards −y
+	kx, ky    []float64 // springs of each disc along x and y
+	to        []Disc    // the springs' ends
+	grow      float64   // pull on the size of all, 0: the size is given
+	enough    float64   // size at which growing may stop, 0: the largest
+	rounds    int       // most Newton steps
+	precision float64   // wanted of the gaps, in units of length
+}
+
+// press moves the discs to the (local) least of the aim without overlap, by a primal-dual interior-point method (S. Boyd and L. Vandenberghe,
+// "Convex Optimization", 2004, section 11.7; slacks of their own as in J. Nocedal and S. J. Wright, "Numerical Optimization", 2006, chapter 19).
+// The gap of two discs is linearised at each step, which errs towards a wider gap, so that steps keep discs apart. done is false when the rounds
+// ran out.
+func (c *crowd) press(a aim) (done bool) {
+	p := presser{crowd: c, aim: a}
+	p.mu = 0.02 * c.near
+	c.list(p.mu)
+	p.layout()
+	for range a.rounds {
+		if c.strayed() > c.near/4 {
+			c.list(p.mu)
+			p.layout()
+		}
+		p.assemble()
+		p.step()
+		if p.finished() || p.enough > 0 && p.size > p.enough {
+			return true
+		}
+	}
+	return false
+}
+
+// strayed is the farthest that a disc has gone since the contacts were listed.
+func (c *crowd) strayed() float64 {
+	far := 0.0
+	for i, d := range c.discs {
+		far = max(far, math.Hypot(d.X-c.since[i].X, d.Y-c.since[i].Y))
+	}
+	return far
+}
+
+type presser struct {
+	*crowd
+	aim
+	mu    float64
+	m     skyline
+	b, dx []float64
+	moved float64 // in the last step
+	alpha float64 // its share
+	tight float64 // largest lack of gap
+}
+
+// bears reports whether a contact carries force at the end of press, as opposed to a gap that is merely small.
+func (c *crowd) bears(t contact) bool { return t.f*c.near > t.s }
+
+// close shuts the bearing contacts' last gaps by Newton steps of least length. It gives back the old places when that makes an overlap.
+func (c *crowd) close() {
+	before := slices.Clone(c.discs)
+	all := c.contacts
+	c.contacts = slices.DeleteFunc(slices.Clone(all), func(t contact) bool { return !c.bears(t) })
+	p := presser{crowd: c}
+	p.layout()
+	for range 4 {
+		p.m.clear()
+		clear(p.b)
+		for k := range p.order {
+			p.m.add(2*k, 2*k, 1e-9)
+			p.m.add(2*k+1, 2*k+1, 1e-9)
+		}
+		for k := range p.contacts {
+			t := &p.contacts[k]
+			p.look(t)
+			t.f = 0
+			p.couple(t, 1, -t.g)
+		}
+		p.m.factor(1e-14)
+		p.m.solve(p.b)
+		for k, i := range p.order {
+			p.discs[i].X += p.b[2*k]
+			p.discs[i].Y += p.b[2*k+1]
+		}
+	}
+	c.contacts = all
+	for k := range all {
+		c.look(&all[k])
+		if all[k].g < -slack*reach(c.discs, c.in) {
+			copy(c.discs, before)
+			break
+		}
+	}
+}
+
+func (p *presser) layout() {
+	p.m.shape(p.shape(p.grow > 0))
+	p.b = make([]float64, len(p.m.first))
+}
+
+// assemble sets up the Newton equations in the places and the size.
+func (p *presser) assemble() {
+	p.m.clear()
+	clear(p.b)
+	for k, i := range p.order {
+		p.spring(2*k, i)
+	}
+	last := len(p.b) - 1
+	if p.grow > 0 {
+		p.b[last] = p.grow
+		p.m.add(last, last, 1e-9*p.grow)
+	}
+	for k := range p.contacts {
+		t := &p.contacts[k]
+		p.look(t)
+		if t.g > 0.1*t.s {
+			t.s = t.g
+		}
+		w := t.f / t.s
+		h := (p.mu - t.f*(t.g-t.s)) / t.s
+		p.couple(t, w, h)
+	}
+}
+
+func (p *presser) spring(row, i int) {
+	d := p.discs[i]
+	qx, qy := 1e-6/p.near, 1e-6/p.near // keeps a disc that nothing holds from flying off
+	if p.kx != nil {
+		qx += p.kx[i]
+		p.b[row] -= p.kx[i] * (d.X - p.to[i].X)
+	}
+	if p.ky != nil {
+		qy += p.ky[i]
+		p.b[row+1] -= p.ky[i] * (d.Y - p.to[i].Y)
+	}
+	if p.fy != nil {
+		p.b[row+1] -= p.fy[i]
+	}
+	p.m.add(row, row, qx)
+	p.m.add(row+1, row+1, qy)
+}
+
+// couple enters one contact with stiffness w and push h.
+func (p *presser) couple(t *contact, w, h float64) {
+	row := 2 * p.rank[t.i]
+	xx, xy, yy := w*t.nx*t.nx, w*t.nx*t.ny, w*t.ny*t.ny
+	p.b[row] += h * t.nx
+	p.b[row+1] += h * t.ny
+	if t.j == wallRound { // the wall's own curvature
+		if d := math.Hypot(p.discs[t.i].X, p.discs[t.i].Y); d > 0 {
+			e := t.f / d
+			p.m.add(row, row, e*t.ny*t.ny)
+			p.m.add(row+1, row, -e*t.nx*t.ny)
+			p.m.add(row+1, row+1, e*t.nx*t.nx)
+		}
+	}
+	p.m.add(row, row, xx)
+	p.m.add(row+1, row, xy)
+	p.m.add(row+1, row+1, yy)
+	last := len(p.b) - 1
+	if p.grow > 0 {
+		p.b[last] -= h * t.need
+		p.m.add(last, row, -w*t.nx*t.need)
+		p.m.add(last, row+1, -w*t.ny*t.need)
+		p.m.add(last, last, w*t.need*t.need)
+	}
+	if t.j < 0 || p.rank[t.j] < 0 {
+		return
+	}
+	col := 2 * p.rank[t.j]
+	p.b[col] -= h * t.nx
+	p.b[col+1] -= h * t.ny
+	p.m.add(col, col, xx)
+	p.m.add(col+1, col, xy)
+	p.m.add(col+1, col+1, yy)
+	p.m.add(row, col, -xx)
+	p.m.add(row, col+1, -xy)
+	p.m.add(row+1, col, -xy)
+	p.m.add(row+1, col+1, -yy)
+	if p.grow > 0 {
+		p.m.add(last, col, w*t.nx*t.need)
+		p.m.add(last, col+1, w*t.ny*t.need)
+	}
+}
+
+// rate is how fast a contact's gap opens along the step dx.
+func (p *presser) rate(t *contact) float64 {
+	row := 2 * p.rank[t.i]
+	v := t.nx*p.dx[row] + t.ny*p.dx[row+1]
+	if t.j >= 0 && p.rank[t.j] >= 0 {
+		col := 2 * p.rank[t.j]
+		v -= t.nx*p.dx[col] + t.ny*p.dx[col+1]
+	}
+	if p.grow > 0 {
+		v -= t.need * p.dx[len(p.dx)-1]
+	}
+	return v
+}
+
+// step solves for the step and takes as much of it as keeps slacks and forces positive.
+func (p *presser) step() {
+	p.m.factor(1e-14)
+	p.dx = append(p.dx[:0], p.b...)
+	p.m.solve(p.dx)
+	primal, dual := 1.0, 1.0
+	const keep = 0.98
+	for k := range p.contacts {
+		t := &p.contacts[k]
+		ds := p.rate(t) + t.g - t.s
+		df := (p.mu-t.f*ds)/t.s - t.f
+		if ds < 0 {
+			primal = min(primal, -keep*t.s/ds)
+		}
+		if df < 0 {
+			dual = min(dual, -keep*t.f/df)
+		}
+	}
+	far := 0.0
+	for k := range p.order {
+		far = max(far, math.Hypot(p.dx[2*k], p.dx[2*k+1]))
+	}
+	if far*primal > p.near/4 {
+		primal = p.near / 4 / far
+		dual = min(dual, primal)
+	}
+	sum := 0.0
+	p.tight = 0
+	for k := range p.contacts {
+		t := &p.contacts[k]
+		ds := p.rate(t) + t.g - t.s
+		df := (p.mu-t.f*ds)/t.s - t.f
+		t.s += primal * ds
+		t.f += dual * df
+		sum += t.s * t.f
+		p.tight = max(p.tight, t.s-t.g-primal*p.rate(t))
+	}
+	for k, i := range p.order {
+		p.discs[i].X += primal * p.dx[2*k]
+		p.discs[i].Y += primal * p.dx[2*k+1]
+	}
+	if p.grow > 0 {
+		p.size += primal * p.dx[len(p.dx)-1]
+	}
+	p.moved, p.alpha = far*primal, min(primal, dual)
+	p.lower(sum)
+}
+
+// lower chooses the next target of slack × force: much less after a good step, about the same after a short one.
+func (p *presser) lower(sum float64) {
+	if len(p.contacts) == 0 {
+		return
+	}
+	mean := sum / float64(len(p.contacts))
+	share := 0.7
+	switch {
+	case p.alpha > 0.9:
+		share = 0.1
+	case p.alpha > 0.5:
+		share = 0.3
+	}
+	p.mu = max(share*mean, 1e-3*p.precision)
+}
+
+func (p *presser) finished() bool {
+	return p.mu <= 2e-3*p.precision && p.moved < p.precision && p.tight < p.precision
+}
