@@ -1,8 +1,7 @@
 package render
 
 import (
-	"image"
-	"io"
+	"image/color"
 
 	"packrise/solver/section"
 )
@@ -30,60 +29,70 @@ type Scene struct {
 	Selected []string // ringed
 	Pointed  string   // lit up
 	Stale    bool     // the readings belong to an older section: greyed
+	Draft    bool     // within a drag: lines of equal temperature are drawn more coarsely
 	Bad      []string // ids that overlap or lie outside: marked
 }
 
-// View maps millimetres to pixels: centre of the picture in mm, pixels per mm, size in pixels. y is up in mm and down in pixels.
-type View struct {
-	CX, CY  float64
-	PxPerMM float64
-	W, H    int
+// solved tells whether the scene has temperatures.
+func (s Scene) solved() bool { return len(s.Readings) > 0 || s.Field != nil }
+
+// State is the answer in one word.
+type State int
+
+// States, the worst last.
+const (
+	Unknown State = iota // nothing is solved, or nothing has a limit
+	Within
+	Near
+	Over
+)
+
+// stateWords are the words with which a sentence begins.
+var stateWords = map[State]string{Within: "Within", Near: "Close", Over: "Over"}
+
+// Word returns the state's word as a sentence begins with it, "" for Unknown.
+func (t State) Word() string { return stateWords[t] }
+
+// StateOf returns the state that the readings and the sentence say: the worse of the two.
+func StateOf(s Scene) State {
+	state := Unknown
+	for _, r := range s.Readings {
+		switch _, limited := r.MarginK(); {
+		case r.Over():
+			return Over
+		case limited:
+			state = Within
+		}
+	}
+	for t, w := range stateWords {
+		if t > state && beginsWithWord(s.Answer, w) {
+			state = t
+		}
+	}
+	return state
 }
 
-// Style chooses light or dark and the device scale (1 = 96 dpi) by which text and line widths grow.
-type Style struct {
-	Dark  bool
-	Scale float64
+// beginsWithWord tells whether a sentence begins with the word, as a whole word.
+func beginsWithWord(sentence, word string) bool {
+	if len(sentence) < len(word) || sentence[:len(word)] != word {
+		return false
+	}
+	if len(sentence) == len(word) {
+		return true
+	}
+	c := sentence[len(word)] | 0x20
+	return c < 'a' || c > 'z'
 }
 
-// Scale maps temperature to colour: from Low to High °C.
-type Scale struct{ Low, High float64 }
-
-// ScaleOf returns the automatic scale of a scene: ambient to the hottest reading or nearby limit, at round numbers.
-func ScaleOf(s Scene) Scale { panic("render: not built") }
-
-// FitView returns the view that shows all shapes with a margin for labels.
-func FitView(shapes []section.Shape, w, h int, st Style) View { panic("render: not built") }
-
-// ToPx maps mm to pixels; ToMM is its inverse.
-func (v View) ToPx(p section.Point) (x, y float64) { panic("render: not built") }
-
-// ToMM maps pixels to mm.
-func (v View) ToMM(x, y float64) section.Point { panic("render: not built") }
-
-// Hit returns the id of the innermost part at p (mm), "" for none.
-func Hit(shapes []section.Shape, p section.Point) string { panic("render: not built") }
-
-// HeatLayer paints the heat map alone (transparent outside the section) into a picture of the view's size; coarse samples every few pixels and interpolates, for dragging.
-func HeatLayer(s Scene, v View, sc Scale, coarse bool) *image.RGBA { panic("render: not built") }
-
-// SectionLayer paints what lies over the heat map: outlines with halo, isotherms, ids, labels on leaders, hatching, selection,
-// scale in mm.
-func SectionLayer(c Canvas, s Scene, v View, sc Scale, st Style) { panic("render: not built") }
-
-// Ladder paints the ladder into the canvas: colour scale with unit, rungs, limits, ambient. It returns where each rung is, for hit tests.
-func Ladder(c Canvas, s Scene, sc Scale, st Style) []Rung { panic("render: not built") }
-
-// Rung is one line of the ladder in pixels.
-type Rung struct {
-	IDs    []string // several when equal ones are folded
-	Y0, Y1 float64
+// StateColor returns the palette's colour of a state.
+func (p Palette) StateColor(t State) color.NRGBA {
+	switch t {
+	case Over:
+		return p.Over
+	case Near:
+		return p.Close
+	case Within:
+		return p.Within
+	}
+	return p.Quiet
 }
-
-// Canvas is the small drawing interface that back ends fill. Coordinates are pixels, y down.
-type Canvas interface {
-	Size() (w, h float64)
-}
-
-// WritePNG draws the whole picture (sentence, ladder, section, status, notes, caution) at w × h pixels.
-func WritePNG(out io.Writer, s Scene, w, h int, st Style) error { panic("render: not built") }

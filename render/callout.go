@@ -1,0 +1,3 @@
+package render
+
+func (p *sectionPainter) callouts() {}

@@ -1,0 +1,209 @@
+package render
+
+import (
+	"fmt"
+	"image/color"
+	"math"
+	"sort"
+	"strconv"
+	"strings"
+
+	"packrise/solver/section"
+)
+
+// step is one label of the ladder.
+type step struct {
+	ids       []string
+	name      string
+	temp      float64 // where it stands
+	low, high float64 // how far a folded group reaches
+	limit     bool
+	bold      bool
+	color     color.NRGBA
+	selected  bool
+	pointed   bool
+	label     float64 // height of the label in pixels
+}
+
+// number is what stands behind a step's name: its temperature, or the group's lowest and highest.
+func (s step) number() string {
+	a, b := wholeC(s.low), wholeC(s.high)
+	if a == b {
+		return a
+	}
+	return a + "–" + b
+}
+
+// steps lists the ladder's labels, hottest first: parts of their own, folded groups, the holder's layers, ambient, limits.
+func (l *ladder) steps() []step {
+	fixed := l.limitSteps()
+	if finite(l.s.AmbientC) {
+		t := l.s.AmbientC
+		fixed = append(fixed, step{name: "ambient", temp: t, low: t, high: t, color: l.pal.Ink})
+	}
+	fixed = append(fixed, l.wallSteps()...)
+	named, others := l.partSteps()
+	room := int((l.h-l.top)/(rowHeight*l.k)) - len(fixed) - len(named)
+	out := append(fixed, named...)
+	out = append(out, l.fold(others, max(1, room), len(named) > 0)...)
+	sort.SliceStable(out, func(i, j int) bool { return out[i].temp > out[j].temp })
+	return out
+}
+
+// partSteps splits the parts' readings into those with a label of their own and the rest.
+func (l *ladder) partSteps() (named, others []step) {
+	for _, r := range l.s.Readings {
+		if r.Kind == "layer" || r.Kind == "surface" || !finite(r.TempC) {
+			continue
+		}
+		s := step{
+			ids: []string{r.ID}, name: r.ID, temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs,
+			selected: contains(l.s.Selected, r.ID), pointed: r.ID == l.s.Pointed,
+		}
+		if r.Over() {
+			s.color = l.pal.Over
+		}
+		if r.Governs || r.Hottest || s.pointed || s.selected && len(l.s.Selected) <= 3 {
+			named = append(named, s)
+		} else {
+			others = append(others, s)
+		}
+	}
+	return named, others
+}
+
+// fold joins steps of equal temperature, and ever less equal ones until they fit into the rows left.
+func (l *ladder) fold(parts []step, rows int, beside bool) []step {
+	sort.SliceStable(parts, func(i, j int) bool { return parts[i].temp > parts[j].temp })
+	var out []step
+	for tol := 1.0; ; tol *= 1.4 {
+		out = nil
+		for _, s := range parts {
+			if n := len(out); n > 0 && out[n-1].high-s.low <= tol && out[n-1].color == s.color {
+				g := &out[n-1]
+				g.ids = append(g.ids, s.ids...)
+				g.low = s.low
+				g.selected = g.selected || s.selected
+				continue
+			}
+			s.ids = append([]string(nil), s.ids...)
+			out = append(out, s)
+		}
+		if len(out) <= rows || tol > 1e4 {
+			break
+		}
+	}
+	for i := range out {
+		g := &out[i]
+		g.temp = (g.low + g.high) / 2
+		g.name = l.groupName(g.ids, beside && len(out) == 1)
+	}
+	return out
+}
+
+// groupName names a group by its ids when there is room, else by their number.
+func (l *ladder) groupName(ids []string, others bool) string {
+	if len(ids) == 1 {
+		return ids[0]
+	}
+	all := strings.Join(ids, ", ")
+	if len(ids) <= 4 && l.c.MeasureText(all+" 100–100", l.font()) <= l.w-l.text-4*l.k {
+		return all
+	}
+	if others {
+		return strconv.Itoa(len(ids)) + " others"
+	}
+	return strconv.Itoa(len(ids)) + " parts"
+}
+
+// wallSteps are the holder's layers and its outer surface; equal ones share a label.
+func (l *ladder) wallSteps() []step {
+	layers := 0
+	for _, r := range l.s.Readings {
+		if r.Kind == "layer" {
+			layers++
+		}
+	}
+	var out []step
+	for _, r := range l.s.Readings {
+		if r.Kind != "layer" && r.Kind != "surface" || !finite(r.TempC) {
+			continue
+		}
+		s := step{ids: []string{r.ID}, name: l.wallName(r, layers), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs}
+		if r.Over() {
+			s.color = l.pal.Over
+		}
+		if n := len(out); n > 0 && math.Abs(out[n-1].low-s.temp) < 0.5 && out[n-1].color == s.color {
+			g := &out[n-1]
+			g.ids, g.name = append(g.ids, r.ID), g.name+", "+s.name
+			g.low, g.high = min(g.low, s.low), max(g.high, s.high)
+			g.temp, g.bold = (g.low+g.high)/2, g.bold || s.bold
+			continue
+		}
+		out = append(out, s)
+	}
+	return out
+}
+
+// wallName is what people call a layer of the holder.
+func (l *ladder) wallName(r section.Reading, layers int) string {
+	if r.Kind == "surface" {
+		return "outside"
+	}
+	name := "wall"
+	if h := holderOf(l.s.Shapes); h != nil {
+		switch h.Kind {
+		case section.Jacket, section.Conduit, section.Wireway:
+			name = h.Kind
+		}
+	}
+	if layers > 1 {
+		return fmt.Sprintf("%s %d", name, layerIndex(r.ID)+1)
+	}
+	return name
+}
+
+// limitSteps are the notches: one for every different limit, with what it belongs to when there are several.
+func (l *ladder) limitSteps() []step {
+	type notch struct {
+		ids  []string
+		over bool
+	}
+	found := map[float64]*notch{}
+	var temps []float64
+	for _, r := range l.s.Readings {
+		if !r.LimitC.OK || !finite(r.LimitC.V) {
+			continue
+		}
+		if found[r.LimitC.V] == nil {
+			found[r.LimitC.V] = &notch{}
+			temps = append(temps, r.LimitC.V)
+		}
+		n := found[r.LimitC.V]
+		n.ids, n.over = append(n.ids, r.ID), n.over || r.Over()
+	}
+	var out []step
+	for _, t := range temps {
+		n := found[t]
+		if l.sc.at(t) > 1.0001 || l.sc.at(t) < -0.0001 {
+			continue // beyond the scale: nothing on it is near that limit
+		}
+		name := "limit " + strings.TrimSuffix(degrees(t), "°")
+		if len(temps) > 1 {
+			if len(n.ids) == 1 {
+				name += " · " + n.ids[0]
+			} else {
+				name += fmt.Sprintf(" · %d parts", len(n.ids))
+			}
+		}
+		s := step{name: name, temp: t, low: t, high: t, limit: true, color: l.pal.Ink, bold: false}
+		if n.over {
+			s.color = l.pal.Over
+		}
+		out = append(out, s)
+	}
+	return out
+}
+
+// wholeOrHalf writes an axis number.
+func wholeOrHalf(t float64) string { return strings.TrimSuffix(degrees(t), "°") }
