@@ -1,0 +1,82 @@
+package catalog
+
+import (
+	"cmp"
+	"slices"
+	"strings"
+)
+
+// Nearest returns up to n ids of the group ("material", "type", "wire", "holder", "metal", "conductor") that are spelt most like id.
+func (c *Catalog) Nearest(group, id string, n int) []string {
+	return nearest(c.order(group), id, n)
+}
+
+// order lists the ids of a group.
+func (c *Catalog) order(group string) []string {
+	switch group {
+	case "metal":
+		return c.metals.order
+	case "material":
+		return c.materials.order
+	case "type":
+		return c.types.order
+	case "conductor":
+		return c.conductors.order
+	case "wire":
+		return c.wires.order
+	case "holder":
+		return c.holders.order
+	}
+	return nil
+}
+
+// nearest returns up to n words that are spelt most like word, the most like first; words that share nothing with it are left out.
+func nearest(words []string, word string, n int) []string {
+	type scored struct {
+		word string
+		d    int
+	}
+	word = plainWord(word)
+	var all []scored
+	for _, w := range words {
+		p := plainWord(w)
+		if d := distance(word, p); d < max(len(word), len(p)) {
+			all = append(all, scored{w, d})
+		}
+	}
+	slices.SortStableFunc(all, func(a, b scored) int { return cmp.Compare(a.d, b.d) })
+	var out []string
+	for _, s := range all[:min(max(n, 0), len(all))] {
+		out = append(out, s.word)
+	}
+	return out
+}
+
+// plainWord is a word as it is compared: small letters, hyphens for spaces and underscores.
+func plainWord(s string) string {
+	return strings.NewReplacer(" ", "-", "_", "-").Replace(strings.ToLower(strings.TrimSpace(s)))
+}
+
+// distance is the number of letters to insert, delete, change or swap with their neighbour (optimal string alignment).
+func distance(a, b string) int {
+	s, t := []rune(a), []rune(b)
+	before, last, row := make([]int, len(t)+1), make([]int, len(t)+1), make([]int, len(t)+1)
+	for j := range last {
+		last[j] = j
+	}
+	for i := 1; i <= len(s); i++ {
+		row[0] = i
+		for j := 1; j <= len(t); j++ {
+			cost := 1
+			if s[i-1] == t[j-1] {
+				cost = 0
+			}
+			row[j] = min(last[j]+1, row[j-1]+1, last[j-1]+cost)
+			if i > 1 && j > 1 && s[i-1] == t[j-2] && s[i-2] == t[j-1] {
+				row[j] = min(row[j], before[j-2]+1)
+			}
+		}
+		before, last, row = last, row, before
+	}
+	return last[len(t)]
+}
