@@ -1,7 +1,5 @@
 package section
 
-import "gopkg.in/yaml.v3"
-
 // FormatVersion is the value of the key `packrise` that this program writes and the newest that it reads.
 const FormatVersion = 1
 
@@ -44,7 +42,7 @@ type Document struct {
 	Materials    []Material
 	StockUsed    []StockRow // rows of the catalogue that the design used when it was saved
 
-	origin *yaml.Node // as read: order of keys, style and comments, for the next save; nil for a new design
+	origin *origin // the file as read: order of keys, style and comments, for the next save; nil for a new design
 }
 
 // Kinds of surroundings.

@@ -1,0 +1,7 @@
+//go:build unix
+
+package section
+
+import "syscall"
+
+var errQuota error = syscall.EDQUOT

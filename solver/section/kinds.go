@@ -1,0 +1,163 @@
+package section
+
+import (
+	"fmt"
+	"strings"
+
+	"gopkg.in/yaml.v3"
+)
+
+// word is one of the words that a key takes. A word that is not built yet is refused with a sentence that says what to use
+// meanwhile: building it means to delete instead.
+type word struct {
+	name    string
+	instead string
+}
+
+var (
+	surroundingsKinds = []word{
+		{name: FixedFilm},
+		{name: FixedWall},
+		{StillAir, "use fixed-film with film_w_m2k, one constant coefficient with radiation included"},
+		{MovingAir, "use fixed-film with film_w_m2k, one constant coefficient with radiation included"},
+		{Buried, "use fixed-wall, which holds the outer surface at ambient_c"},
+		{Water, "use fixed-wall, which holds the outer surface at ambient_c"},
+		{Vacuum, "use fixed-film with film_w_m2k, one constant coefficient for radiation alone"},
+		{Insulation, "use fixed-film with film_w_m2k, one constant coefficient for the wrap and what lies beyond"},
+	}
+	holderKinds = []word{
+		{name: Jacket},
+		{name: Conduit},
+		{name: Wireway},
+		{name: OpenBundle},
+		{name: NoHolder},
+		{Apart, "use a holder, or kind: none with one bare part"},
+	}
+	partKinds = []word{{name: Core}, {name: Cable}, {name: Rod}}
+	roles     = []word{{name: RoleLine}, {name: RoleNeutral}, {name: RoleEarth}, {name: RoleControl}, {name: RoleSpare}}
+	metals    = []word{{name: Copper}, {name: TinnedCopper}, {name: Aluminium}}
+	classes   = []word{{name: Solid}, {name: Stranded}, {name: Flexible}}
+	sideKinds = []word{{name: SideOpen}, {name: SideInsulated}}
+
+	// other spellings of words, for the suggestion
+	alsoWritten = map[string]string{
+		"aluminum": Aluminium, "al": Aluminium, "cu": Copper, "tinned copper": TinnedCopper, "tinned": TinnedCopper, "class 1": Solid, "class 2": Stranded,
+		"class 5": Flexible, "1": Solid, "2": Stranded, "5": Flexible, "fine-stranded": Flexible, "pe": RoleEarth, "ground": RoleEarth, "phase": RoleLine,
+		"tray": Wireway, "trunking": Wireway, "pipe": Conduit, "tube": Conduit, "sheath": Jacket, "bundle": OpenBundle, "air": StillAir, "wire": Core,
+		"conductor": Core, "filler": Rod, "hose": Rod, "closed": SideInsulated,
+	}
+)
+
+// oneOf is the codec of a key that takes one of a few words.
+type oneOf struct {
+	text
+	what  string // "surroundings kind"
+	words []word
+}
+
+func (c oneOf) names() []string {
+	var out []string
+	for _, w := range c.words {
+		if w.instead == "" {
+			out = append(out, w.name)
+		}
+	}
+	return out
+}
+
+func (c oneOf) check(r *report, v string, at path) {
+	if v == "" {
+		return
+	}
+	for _, w := range c.words {
+		switch {
+		case w.name != v:
+		case w.instead == "":
+			return
+		default:
+			r.add(at, "not-built", fmt.Sprintf("%s `%s` is not built yet in this version", c.what, v), w.instead)
+			return
+		}
+	}
+	do := "write one of " + strings.Join(c.names(), ", ")
+	near := alsoWritten[strings.ToLower(v)]
+	if near == "" || !has(c.words, near) {
+		near = nearest(v, c.names())
+	}
+	if near != "" {
+		do = "did you mean `" + near + "`? " + do
+	}
+	r.add(at, "unknown-word", fmt.Sprintf("%s %s is unknown", c.what, show(v)), do)
+}
+
+func has(words []word, name string) bool {
+	for _, w := range words {
+		if w.name == name {
+			return true
+		}
+	}
+	return false
+}
+
+// sideCodec is the codec of one side: open, insulated or {fixed_c: …}.
+type sideCodec struct{}
+
+var fixedTable = &table[Side]{what: "a fixed temperature", fields: []field[Side]{
+	need(on("fixed_c", func(s *Side) *float64 { return &s.FixedC }, number{temperature})),
+}}
+
+func (sideCodec) read(r *report, n *yaml.Node, at path) Side {
+	if n.Kind == yaml.MappingNode {
+		s := fixedTable.read(r, n, at)
+		s.Kind = SideFixed
+		return s
+	}
+	return Side{Kind: text{}.read(r, n, at)}
+}
+
+func (sideCodec) node(s Side) *yaml.Node {
+	if s.Kind == SideFixed {
+		return fixedTable.node(s)
+	}
+	return text{}.node(s.Kind)
+}
+
+func (sideCodec) check(r *report, s Side, at path) {
+	if s.Kind == SideFixed {
+		fixedTable.check(r, s, at)
+		return
+	}
+	if s.FixedC != 0 {
+		r.add(at, "key-of-kind", "¤ has a temperature but is not held at one", "write {fixed_c: …}")
+	}
+	oneOf{what: "side", words: sideKinds}.check(r, s.Kind, at)
+}
+
+// boreCodec is the codec of what a hose holds: air, a material or {fixed_c: …}.
+type boreCodec struct{}
+
+var boreFixed = &table[Bore]{what: "a fixed temperature", fields: []field[Bore]{
+	need(on("fixed_c", func(b *Bore) *Opt[float64] { return &b.FixedC }, optNumber{temperature})),
+}}
+
+func (boreCodec) read(r *report, n *yaml.Node, at path) Bore {
+	if n.Kind == yaml.MappingNode {
+		return boreFixed.read(r, n, at)
+	}
+	return Bore{Material: text{}.read(r, n, at)}
+}
+
+func (boreCodec) node(b Bore) *yaml.Node {
+	if b.FixedC.OK {
+		return boreFixed.node(b)
+	}
+	return text{}.node(b.Material)
+}
+
+func (boreCodec) check(r *report, b Bore, at path) {
+	if b.FixedC.OK && b.Material != "" {
+		r.add(at, "one-of", "¤ has both a material and a temperature", "choose one of them")
+	}
+	optNumber{temperature}.check(r, b.FixedC, at.key("fixed_c"))
+	text{}.check(r, b.Material, at)
+}
