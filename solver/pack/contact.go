@@ -43,7 +43,7 @@ func newCrowd(discs []Disc, in Box, gap, near float64) *crowd {
 }
 
 // list finds the pairs that are near, keeping what is known of old ones; force is the push that a new one starts with.
-func (c *crowd) list(mu float64) {
+func (c *crowd) list(mu, slack float64) {
 	old := make(map[[2]int]contact, len(c.contacts))
 	for _, k := range c.contacts {
 		old[[2]int{k.i, k.j}] = k
@@ -59,7 +59,7 @@ func (c *crowd) list(mu float64) {
 		if o, ok := old[[2]int{i, j}]; ok {
 			k.s, k.f = o.s, o.f
 		} else {
-			k.s = max(k.g, 1e-3*c.near)
+			k.s = max(k.g, slack)
 			k.f = mu / k.s
 		}
 		c.contacts = append(c.contacts, k)

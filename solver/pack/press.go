@@ -16,6 +16,8 @@ type aim struct {
 	enough    float64   // size at which growing may stop, 0: the largest
 	rounds    int       // most Newton steps
 	precision float64   // wanted of the gaps, in units of length
+	still     float64   // last step that counts as having arrived, 0: precision
+	slack     float64   // first slack of a closed contact, 0: little, for discs that do not overlap at the start
 }
 
 // press moves the discs to the (local) least of the aim without overlap, by a primal-dual interior-point method (S. Boyd and L. Vandenberghe,
@@ -25,17 +27,26 @@ type aim struct {
 func (c *crowd) press(a aim) (done bool) {
 	p := presser{crowd: c, aim: a}
 	p.mu = 0.02 * c.near
-	c.list(p.mu)
+	p.slack = max(p.slack, 1e-3*c.near)
+	p.still = max(p.still, p.precision)
+	c.list(p.mu, p.slack)
 	p.layout()
+	stuck := 0
 	for range a.rounds {
 		if c.strayed() > c.near/4 {
-			c.list(p.mu)
+			c.list(p.mu, 1e-3*c.near)
 			p.layout()
 		}
 		p.assemble()
 		p.step()
 		if p.finished() || p.enough > 0 && p.size > p.enough {
 			return true
+		}
+		if stuck++; p.alpha > 1e-3 {
+			stuck = 0
+		}
+		if stuck > 6 {
+			break
 		}
 	}
 	return false
@@ -270,5 +281,5 @@ func (p *presser) lower(sum float64) {
 }
 
 func (p *presser) finished() bool {
-	return p.mu <= 2e-3*p.precision && p.moved < p.precision && p.tight < p.precision
+	return p.mu <= 2e-3*p.precision && p.moved < p.still && p.tight < p.precision
 }

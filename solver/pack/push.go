@@ -1,72 +1,247 @@
 package pack
 
 import (
+	"cmp"
 	"math"
+	"math/rand/v2"
 	"slices"
 )
 
-// PushApart removes overlaps with the least movement. The disc with index held (−1: none) stays where it is unless the wall forbids it. gap is the least
-// distance to keep between discs and to the wall. ok is false if no place without overlap was found; the discs are then returned as they came.
+// PushApart removes overlaps with the least movement. The disc with index held (−1: none) stays where it is unless the wall or a Fixed disc forbids it, and
+// then goes to the nearest place free of them. gap is the least distance to keep between discs and to the wall. ok is false if no place without overlap was found; the discs
+// are then returned as they came.
+//
+// The least sum of squared movements is found to the accuracy of touching (1e-9 of the box) as long as discs need not pass one another. Where they
+// must, those in the way change over to the nearest free place.
 func PushApart(discs []Disc, in Box, held int, gap float64) (placed []Disc, ok bool) {
-	out := slices.Clone(discs)
-	tol := 1e-10 * reach(discs, in)
-	free := func(i int) float64 {
-		if out[i].Fixed || i == held {
-			return 0
-		}
-		return 1
+	if held < -1 || held >= len(discs) {
+		panic("pack: the held disc does not exist")
 	}
-	clamp := func(i int) {
-		if !out[i].Fixed {
-			out[i].X, out[i].Y, _ = in.clamp(out[i].X, out[i].Y, out[i].R+gap)
-		}
+	p := pusher{from: discs, in: in, gap: gap, tol: 2e-10 * reach(discs, in), stays: make([]bool, len(discs))}
+	for i, d := range discs {
+		p.stays[i] = d.Fixed || i == held
 	}
-	for range 2000 {
-		worst := 0.0
-		for i := range out {
-			clamp(i)
-			for j := range i {
-				wi, wj := free(i), free(j)
-				dx, dy := out[i].X-out[j].X, out[i].Y-out[j].Y
-				need := out[i].R + out[j].R + gap
-				d := math.Hypot(dx, dy)
-				if d >= need {
-					continue
-				}
-				worst = max(worst, need-d)
-				if wi+wj == 0 {
-					continue
-				}
-				if d == 0 {
-					s, c := math.Sincos(2.4 * float64(i))
-					dx, dy, d = c, s, 1
-					need++
-				}
-				k := (need - d) / d / (wi + wj)
-				out[i].X, out[i].Y = out[i].X+wi*k*dx, out[i].Y+wi*k*dy
-				out[j].X, out[j].Y = out[j].X-wj*k*dx, out[j].Y-wj*k*dy
-			}
-		}
-		if worst <= tol {
-			break
-		}
+	start, ok := p.start(held)
+	if !ok {
+		return discs, false
 	}
-	for i := range out {
-		clamp(i)
-		out[i].R += gap / 2
-	}
-	wall := in
-	if in.round() {
-		wall.R -= gap / 2
-	}
-	if _, _, depth := Overlap(out, Box{}); depth > 2*tol {
+	p.from = start
+	out, ok := p.run(start)
+	if !ok {
 		return discs, false
 	}
 	for i := range out {
-		out[i].R = discs[i].R
-		if in.clear(out[i].X, out[i].Y, out[i].R) < gap-2*tol {
-			return discs, false
-		}
+		out[i].Fixed = discs[i].Fixed
 	}
 	return out, true
+}
+
+// pusher carries one call of PushApart. Inside it Fixed marks whatever does not move at the time.
+type pusher struct {
+	from  []Disc // where the discs want to be
+	in    Box
+	gap   float64
+	tol   float64
+	stays []bool
+}
+
+// start brings the discs inside the wall, and the held one off the fixed ones.
+func (p *pusher) start(held int) ([]Disc, bool) {
+	out := slices.Clone(p.from)
+	for i := range out {
+		d := &out[i]
+		if d.Fixed {
+			continue
+		}
+		var ok bool
+		if d.X, d.Y, ok = p.in.clamp(d.X, d.Y, d.R+p.gap); !ok {
+			return nil, false
+		}
+	}
+	if held < 0 || out[held].Fixed {
+		return out, true
+	}
+	b := newBed(p.in, reach(out, p.in), len(out))
+	for _, d := range out {
+		if d.Fixed {
+			b.discs = append(b.discs, d)
+		}
+	}
+	h := &out[held]
+	if b.free(h.X, h.Y, h.R+p.gap-p.tol) {
+		return out, true
+	}
+	var ok bool
+	h.X, h.Y, ok = b.nearest(*h, p.gap)
+	return out, ok
+}
+
+// run tries ever harder ways, until one leaves no overlap.
+func (p *pusher) run(start []Disc) ([]Disc, bool) {
+	if p.clear(start) {
+		return start, true
+	}
+	r, _ := means(p.frozen(start))
+	if r == 0 {
+		return nil, false
+	}
+	if out, ok := p.push(start, r); ok {
+		return out, true
+	}
+	// Discs caught in line between the held one and the wall need a nudge to know which way to go.
+	rng := rand.New(rand.NewPCG(7, 11))
+	if out, ok := p.push(p.nudged(start, 0.1, rng), r); ok {
+		return out, true
+	}
+	if out, ok := p.hop(start); ok {
+		return p.shorten(out, r), true
+	}
+	for k := range 3 {
+		out := p.frozen(p.nudged(start, 0.2*float64(k), rng))
+		soften(out, p.in, 1, 60)
+		if swell(out, p.in, p.gap, 1.001, 1e-3*r) >= 1 {
+			return p.shorten(out, r), true
+		}
+	}
+	return nil, false
+}
+
+// shorten takes a free arrangement and reduces the movements if it can.
+func (p *pusher) shorten(discs []Disc, r float64) []Disc {
+	if out, ok := p.push(discs, r); ok {
+		return out
+	}
+	return discs
+}
+
+// clear reports whether all gaps are kept.
+func (p *pusher) clear(discs []Disc) bool {
+	i, _ := p.worst(discs)
+	return i < 0
+}
+
+// worst finds the disc that lacks most gap, −1 when none does.
+func (p *pusher) worst(discs []Disc) (i int, lack float64) {
+	c := newCrowd(p.frozen(discs), p.in, p.gap, p.tol)
+	c.list(0, 0)
+	i, lack = -1, p.tol
+	for _, t := range c.contacts {
+		if !(-t.g <= lack) {
+			i, lack = t.i, -t.g
+		}
+	}
+	return i, lack
+}
+
+// frozen marks as Fixed what may not move.
+func (p *pusher) frozen(discs []Disc) []Disc {
+	out := slices.Clone(discs)
+	for i := range out {
+		out[i].Fixed = p.stays[i]
+	}
+	return out
+}
+
+func (p *pusher) nudged(discs []Disc, share float64, rng *rand.Rand) []Disc {
+	out := slices.Clone(discs)
+	for i := range out {
+		if d := &out[i]; !p.stays[i] {
+			d.X, d.Y, _ = p.in.clamp(d.X+share*d.R*rng.NormFloat64(), d.Y+share*d.R*rng.NormFloat64(), d.R+p.gap)
+		}
+	}
+	return out
+}
+
+// push moves all discs to the least sum of squared movements; r is their mean radius.
+func (p *pusher) push(start []Disc, r float64) ([]Disc, bool) {
+	_, far := p.worst(start)
+	far = max(far, 1e-6*r)
+	for i, d := range start {
+		far = max(far, math.Hypot(d.X-p.from[i].X, d.Y-p.from[i].Y))
+	}
+	spring := make([]float64, len(start))
+	for i := range spring {
+		spring[i] = 1 / far
+	}
+	c := newCrowd(p.frozen(start), p.in, p.gap, r)
+	c.press(aim{kx: spring, ky: spring, to: p.from, rounds: 80, precision: p.tol, still: 1e-4 * min(r, far), slack: 0.2 * r})
+	for _, little := range [3]float64{1e-3, 1e-4, 1e-6} {
+		if out := p.settled(c, little*far); p.clear(out) {
+			return out, true
+		}
+	}
+	c.close()
+	return c.discs, p.clear(c.discs)
+}
+
+// settled puts back the discs that hardly moved and closes the contacts of the others upon them.
+func (p *pusher) settled(c *crowd, little float64) []Disc {
+	still := newCrowd(slices.Clone(c.discs), p.in, p.gap, c.near)
+	for i, d := range c.discs {
+		if !p.stays[i] && math.Hypot(d.X-p.from[i].X, d.Y-p.from[i].Y) < little {
+			still.discs[i] = p.from[i]
+			still.discs[i].Fixed = true
+		}
+	}
+	press := map[[2]int]contact{}
+	for _, t := range c.contacts {
+		press[[2]int{t.i, t.j}] = t
+	}
+	still.list(0, 0)
+	for k := range still.contacts {
+		t := &still.contacts[k]
+		o, ok := press[[2]int{t.i, t.j}]
+		if !ok {
+			o = press[[2]int{t.j, t.i}]
+		}
+		t.s, t.f = o.s, o.f
+	}
+	still.close()
+	return still.discs
+}
+
+// hop takes out what overlaps, smallest first, and puts each, largest first, into the nearest free place.
+func (p *pusher) hop(start []Disc) ([]Disc, bool) {
+	out := slices.Clone(start)
+	order := make([]int, len(out))
+	for i := range order {
+		order[i] = i
+	}
+	slices.SortStableFunc(order, func(a, b int) int {
+		if p.stays[a] != p.stays[b] {
+			return -cmp.Compare(btoi(p.stays[a]), btoi(p.stays[b]))
+		}
+		return cmp.Compare(out[b].R, out[a].R)
+	})
+	b := newBed(p.in, reach(out, p.in), len(out))
+	var homeless []int
+	for _, i := range order {
+		if d := out[i]; p.stays[i] || b.free(d.X, d.Y, d.R+p.gap-p.tol) {
+			b.discs = append(b.discs, d)
+		} else {
+			homeless = append(homeless, i)
+		}
+	}
+	for _, i := range homeless {
+		var ok bool
+		if out[i].X, out[i].Y, ok = b.nearest(out[i], p.gap); !ok {
+			return nil, false
+		}
+		b.discs = append(b.discs, out[i])
+	}
+	return out, true
+}
+
+func btoi(b bool) int {
+	if b {
+		return 1
+	}
+	return 0
+}
+
+// nearest is the free place nearest to where the disc is.
+func (b *bed) nearest(d Disc, gap float64) (x, y float64, ok bool) {
+	return b.best(d.R+gap, func(x, y float64) (cost, tie float64) {
+		return math.Hypot(x-d.X, y-d.Y), math.Atan2(y-d.Y, x-d.X)
+	})
 }

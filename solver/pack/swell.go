@@ -6,20 +6,20 @@ import (
 	"slices"
 )
 
-// fitting is the largest share of their full radius that the discs may have where they lie.
-func fitting(discs []Disc, in Box) float64 {
+// fitting is the largest share of their full radius that the discs may have where they lie, with the gap kept.
+func fitting(discs []Disc, in Box, gap float64) float64 {
 	t := math.Inf(1)
 	for i, p := range discs {
 		if !p.Fixed {
-			t = min(t, in.clear(p.X, p.Y, 0)/p.R)
+			t = min(t, (in.clear(p.X, p.Y, 0)-gap)/p.R)
 		}
 		for _, q := range discs[:i] {
 			if p.Fixed && q.Fixed {
 				continue
 			}
 			dx, dy, s := p.X-q.X, p.Y-q.Y, p.R+q.R
-			if d2 := dx*dx + dy*dy; d2 < t*t*s*s {
-				t = math.Sqrt(d2) / s
+			if d2, m := dx*dx+dy*dy, t*s+gap; d2 < m*m {
+				t = (math.Sqrt(d2) - gap) / s
 			}
 		}
 	}
@@ -33,7 +33,7 @@ func soften(discs []Disc, in Box, size float64, sweeps int) {
 	for s := range sweeps {
 		if s%5 == 0 {
 			c.near = math.Inf(1)
-			c.list(0)
+			c.list(0, 0)
 		}
 		for k := range c.contacts {
 			t := &c.contacts[k]
@@ -72,12 +72,12 @@ func scatter(discs []Disc, in Box, rng *rand.Rand) {
 }
 
 // swell grows all discs together from where they lie, as far as they go or until they are enough; it returns the size reached.
-func swell(discs []Disc, in Box, enough, precision float64) float64 {
+func swell(discs []Disc, in Box, gap, enough, precision float64) float64 {
 	r, _ := means(discs)
-	c := newCrowd(discs, in, 0, r)
-	c.size = 0.95 * fitting(discs, in)
+	c := newCrowd(discs, in, gap, r)
+	c.size = max(0.95*fitting(discs, in, gap), 1e-3)
 	c.press(aim{grow: 4 * float64(len(discs)) * r, enough: enough, rounds: 100, precision: precision})
-	return fitting(discs, in)
+	return fitting(discs, in, gap)
 }
 
 // squeeze looks for any arrangement without overlap, from many random beginnings.
@@ -88,7 +88,7 @@ func squeeze(discs []Disc, in Box, rng *rand.Rand) ([]Disc, bool) {
 		out := slices.Clone(discs)
 		scatter(out, in, rng)
 		soften(out, in, 1, 60)
-		size := swell(out, in, 1.001, 1e-4*reach(discs, in))
+		size := swell(out, in, 0, 1.001, 1e-4*reach(discs, in))
 		if size >= 1 {
 			return out, true
 		}
