@@ -140,19 +140,10 @@ func against(x, s []float64, z complex128) float64 {
 // Log returns the mean temperature that a unit monopole in disc j brings to the rim of disc i (or, i = j, its own rim), in units of
 // 1/(2πk), wall included but for the wall's own series resistance.
 func (s *System) Log(i, j int) float64 {
-	var g float64
-	switch {
-	case s.circle == nil && i == j:
-		return -math.Log(s.discs[i].A)
-	case s.circle == nil:
-		return -math.Log(size(apart(s.discs[i], s.discs[j])))
-	case i == j:
-		g = -math.Log(s.discs[i].A / s.circle.R)
-	default:
-		g = -math.Log(size(apart(s.discs[i], s.discs[j])) / s.circle.R)
+	g := s.near(i, j)
+	if s.circle == nil {
+		return g
 	}
-	gamma := complex(s.circle.R*s.circle.R, 0) - conj(s.discs[j].C)*s.discs[i].C
-	g -= s.circle.RhoInf * math.Log(size(gamma)/(s.circle.R*s.circle.R))
 	z := scale(1/(s.circle.R*s.circle.R), s.discs[i].C) * conj(s.discs[j].C)
 	p := complex(1, 0)
 	for n, f := range s.circle.Sigma {
@@ -160,4 +151,51 @@ func (s *System) Log(i, j int) float64 {
 		g += f / float64(n+1) * real(p)
 	}
 	return g
+}
+
+// near is Log but for what Sigma reflects.
+func (s *System) near(i, j int) float64 {
+	r := s.discs[i].A
+	if i != j {
+		r = size(apart(s.discs[i], s.discs[j]))
+	}
+	if s.circle == nil {
+		return -math.Log(r)
+	}
+	r2 := s.circle.R * s.circle.R
+	g := -math.Log(r / s.circle.R)
+	if s.circle.RhoInf != 0 {
+		g -= s.circle.RhoInf * math.Log(size(complex(r2, 0)-conj(s.discs[j].C)*s.discs[i].C)/r2)
+	}
+	return g
+}
+
+// Logs sets out_i = Σ_j Log(i, j) q_j.
+func (s *System) Logs(out, q []float64) {
+	for i := range out {
+		out[i] = 0
+		for j, f := range q {
+			if f != 0 {
+				out[i] += f * s.near(i, j)
+			}
+		}
+	}
+	if s.circle == nil || len(s.circle.Sigma) == 0 {
+		return
+	}
+	alpha := make([]complex128, len(s.circle.Sigma))
+	for j, f := range q {
+		s.chargeOut(j, f, alpha)
+	}
+	for n, f := range s.circle.Sigma {
+		alpha[n] = scale(f, alpha[n])
+	}
+	for i := range out {
+		z := scale(1/s.circle.R, s.discs[i].C)
+		p := complex(1, 0)
+		for n, a := range alpha {
+			p *= z
+			out[i] += (real(p)*real(a) + imag(p)*imag(a)) / math.Sqrt(float64(n+1))
+		}
+	}
 }

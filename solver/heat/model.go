@@ -1,25 +1,258 @@
 package heat
 
-import "context"
+import (
+	"context"
+	"math"
+
+	"packrise/solver/harmonic"
+)
 
 // Model is a Problem made ready: the matrix is written once and serves many sets of heats. Not safe for concurrent use.
-type Model struct{}
+type Model struct {
+	p    Problem
+	set  Settings
+	top  *region // nil: one bare part without an inside
+	bare *bare
+
+	ready   bool
+	x       []float64   // last solution
+	held    []int       // sources that are bores held at a temperature
+	heldCol [][]float64 // their columns
+	bores   [][]float64 // rises of held bores for 1 W/m in each
+}
+
+// factor is C of the order rule, cut the size below which entries of the matrix are dropped, tol the relative residual at which the
+// iteration ends.
+func (a Accuracy) settings() (factor, cut, tol float64) {
+	switch a {
+	case Draft:
+		return 0.7, 3e-5, 1e-4
+	case Fine:
+		return 1.5, 1e-7, 1e-8
+	}
+	return 1, 1e-5, 1e-6
+}
 
 // New checks the geometry (misuse panics: negative radii, a part before its cable, non-finite numbers; overlaps over 1 µm are
-// the caller's to exclude and only cost accuracy) and writes the matrix.
-func New(p Problem, s Settings) *Model { panic("heat: New is not built") }
+// the caller's to exclude and only cost accuracy). The matrix is written by the first call that needs it, so that it can be cancelled.
+func New(p Problem, s Settings) *Model {
+	p.check()
+	p.Parts = append([]Part(nil), p.Parts...)
+	m := &Model{p: p, set: s}
+	m.layout()
+	return m
+}
+
+// layout finds the regions and their orders.
+func (m *Model) layout() {
+	p := &m.p
+	w := &p.Wall
+	factor, _, _ := m.set.Accuracy.settings()
+	switch w.Shape {
+	case BarePart:
+		m.layoutBare()
+	case Round:
+		m.top = newRegion(p, -1, p.MediumK)
+		m.top.loosen(p.Clearance)
+		m.top.wall = outerWall(p.MediumK, w.R, w.Rings, w.Film)
+		m.top.r = w.R + p.Clearance/2
+	case Rect:
+		panic("heat: rectangles are not built")
+	}
+	if m.top != nil {
+		m.top.order(factor)
+	}
+}
+
+// outerWall is a round wall seen from a medium of conductivity k.
+func outerWall(k, r float64, layers []Ring, film float64) harmonic.Stack {
+	s := harmonic.Stack{Inner: harmonic.End{Kind: harmonic.Medium, V: k}, R: r, Rings: rings(r, layers)}
+	s.Outer = harmonic.End{Kind: harmonic.Film, V: film}
+	if math.IsInf(film, 1) {
+		s.Outer.Kind = harmonic.Held
+	}
+	return s
+}
+
+// prepare writes the matrix if that is still to do; false if ctx ended first.
+func (m *Model) prepare(ctx context.Context) bool {
+	if m.ready || m.top == nil {
+		return true
+	}
+	_, cut, _ := m.set.Accuracy.settings()
+	if !m.top.assemble(cut, ended(ctx)) {
+		return false
+	}
+	m.ready = true
+	m.heldCol, m.bores = nil, nil
+	m.held = m.held[:0]
+	for k, s := range m.top.sources {
+		if m.p.Parts[s.part].Core == FixedBore {
+			m.held = append(m.held, k)
+		}
+	}
+	return true
+}
+
+func ended(ctx context.Context) func() bool { return func() bool { return ctx.Err() != nil } }
+
+// outsideR is the wall's series resistance and its film's, K·m/W, on top of everything.
+func (m *Model) outsideR() float64 {
+	s := &m.top.wall
+	r := s.Series()
+	if f := m.p.Wall.Film; !math.IsInf(f, 1) {
+		r += 1 / (2 * math.Pi * s.Outside() * f)
+	}
+	return r
+}
 
 // Solve finds the temperatures for the given heats (W/m, one per part, read for Metal parts only); nil means the Problem's own. It starts from
 // the last solution. Status is Cancelled when ctx ends first, and the Result then holds the best so far.
-func (m *Model) Solve(ctx context.Context, heats []float64) *Result { panic("heat: not built") }
+func (m *Model) Solve(ctx context.Context, heats []float64) *Result {
+	heats = m.heats(heats)
+	if m.top == nil {
+		return m.bare.solve(heats)
+	}
+	if !m.prepare(ctx) {
+		return m.blank(Cancelled)
+	}
+	q := make([]float64, len(m.top.sources))
+	for k, s := range m.top.sources {
+		if m.p.Parts[s.part].Core == Metal {
+			q[k] = heats[s.part]
+		}
+	}
+	return m.solve(ctx, q)
+}
 
-// Influence returns K[i][j] in K per W/m: the rise of part i's Core temperature for 1 W/m made in part j; rows and columns of parts that
-// aren't Metal are nil.
-func (m *Model) Influence(ctx context.Context) ([][]float64, Status) { panic("heat: not built") }
+func (m *Model) heats(heats []float64) []float64 {
+	if heats == nil {
+		heats = make([]float64, len(m.p.Parts))
+		for i := range heats {
+			heats[i] = m.p.Parts[i].Heat
+		}
+	}
+	if len(heats) != len(m.p.Parts) {
+		panic(badHeats)
+	}
+	if !good(heats...) {
+		panic(badNumber)
+	}
+	return heats
+}
+
+// solve does the work for heats q by source.
+func (m *Model) solve(ctx context.Context, q []float64) *Result {
+	g := m.top
+	_, _, tol := m.set.Accuracy.settings()
+	if len(m.x) != g.sys.Len() {
+		m.x = make([]float64, g.sys.Len())
+	}
+	if !m.holdBores(ctx, q) {
+		return m.blank(Cancelled)
+	}
+	f := g.loadColumn(q)
+	steps, ok := g.iterate(m.x, f, tol, ended(ctx))
+	total := 0.0
+	for _, v := range q {
+		total += v
+	}
+	s := g.solved(q, m.x, m.p.Wall.Ambient+total*m.outsideR(), nil)
+	r := m.result(s)
+	r.Steps = steps
+	switch {
+	case !ok:
+		r.Status = Cancelled
+	case steps >= maxSteps:
+		r.Status = StoppedEarly
+	}
+	return r
+}
+
+// loadColumn is the right-hand side for heats q by source.
+func (g *region) loadColumn(q []float64) []float64 {
+	y := make([]float64, g.sys.Len())
+	charge := make([]float64, len(g.pieces))
+	var v []float64
+	for k, f := range q {
+		s := &g.sources[k]
+		charge[s.piece] += g.c2() * f
+		if s.u != nil && f != 0 {
+			if v == nil {
+				v = make([]float64, g.sys.Len())
+			}
+			axpy(v[g.sys.Offset(s.piece):], f, s.u)
+		}
+	}
+	if v != nil {
+		g.sys.Apply(y, v)
+	}
+	g.sys.Mono(y, charge)
+	g.drop(y)
+	for i := range y {
+		y[i] = -y[i]
+	}
+	return y
+}
+
+// blank is a result that holds nothing but its status.
+func (m *Model) blank(s Status) *Result {
+	n := len(m.p.Parts)
+	r := &Result{Core: make([]float64, n), Surfaces: make([][]float64, n), Absorbed: make([]float64, n), PartErrorK: make([]float64, n), Status: s}
+	for i := range r.Core {
+		r.Core[i] = math.NaN()
+		r.Surfaces[i] = make([]float64, len(m.p.Parts[i].Rings)+1)
+		for k := range r.Surfaces[i] {
+			r.Surfaces[i][k] = math.NaN()
+		}
+	}
+	r.WallMax = make([]float64, len(m.p.Wall.Rings)+1)
+	for k := range r.WallMax {
+		r.WallMax[k] = math.NaN()
+	}
+	r.WallMean, r.ErrorK = math.NaN(), math.NaN()
+	r.Field = nowhere{}
+	return r
+}
+
+// result reads the answer off a state.
+func (m *Model) result(s *state) *Result {
+	r := m.blank(Converged)
+	r.ErrorK = 0
+	m.read(r, s)
+	r.WallMax, r.WallMean, r.Released = s.wallFaces(&m.p.Wall)
+	r.Unknowns = m.top.sys.Len()
+	r.Field = nowhere{}
+	return r
+}
+
+// read fills in the pieces of a state, going down into the cables.
+func (m *Model) read(r *Result, s *state) {
+	for i := range s.pieces {
+		p := &s.pieces[i]
+		faces := p.faces()
+		r.Surfaces[p.part] = faces
+		r.Core[p.part] = p.core(faces)
+		switch m.p.Parts[p.part].Core {
+		case Metal:
+			r.Generated += p.q
+		case FixedBore:
+			r.Absorbed[p.part] = -p.q
+		case Inside:
+			m.read(r, p.inside)
+		}
+	}
+}
 
 // Move puts a part of the top level elsewhere and rewrites only its blocks: for dragging. Orders are fixed at the larger of old and new.
 func (m *Model) Move(part int, x, y float64) { panic("heat: not built") }
 
-// Ground returns the Core temperatures (K above the common zero) with all heats zero: Ambient, unless sides or bores are held at other
-// temperatures.
-func (m *Model) Ground(ctx context.Context) ([]float64, Status) { panic("heat: not built") }
+// nowhere is the field of nothing.
+type nowhere struct{}
+
+func (nowhere) Row(dst []float64, _, _, _ float64) {
+	for i := range dst {
+		dst[i] = math.NaN()
+	}
+}
+func (nowhere) At(_, _ float64) float64 { return math.NaN() }

@@ -1,0 +1,164 @@
+package heat
+
+import (
+	"math"
+
+	"packrise/solver/harmonic"
+)
+
+// Harmonics that a part neither reflects nor lets pass are left out below this reflection.
+const deafT = 1e-12
+
+// maxSigma ends the sum for what the wall reflects besides the images.
+const maxSigma = 600
+
+// assemble writes the region's system, cables first. stop is asked between pieces of work; it reports whether all was done.
+func (g *region) assemble(cut float64, stop func() bool) bool {
+	g.sources = nil
+	g.laws = make([]*law, len(g.pieces))
+	g.definite = true
+	discs := make([]harmonic.Disc, len(g.pieces))
+	for i := range g.pieces {
+		c := &g.pieces[i]
+		if c.inside != nil {
+			if !c.inside.assemble(cut, stop) {
+				return false
+			}
+			var ok bool
+			if g.laws[i], ok = c.inside.eliminate(c, stop); !ok {
+				return false
+			}
+		}
+		discs[i] = g.disc(i)
+		g.addSources(i)
+	}
+	if g.r > 0 {
+		g.circle = g.newCircle()
+	}
+	g.sys = harmonic.NewSystem(discs, g.circle, g.port, cut)
+	g.setSigns()
+	for i := range discs {
+		if stop() {
+			return false
+		}
+		g.sys.Build(i)
+	}
+	return true
+}
+
+// disc is piece i as the system sees it: a part's scales are the roots of its reflections, a cable's are one.
+func (g *region) disc(i int) harmonic.Disc {
+	c := &g.pieces[i]
+	d := harmonic.Disc{C: c.at, A: c.a, S: make([]float64, g.orders[i])}
+	for n := range d.S {
+		if g.laws[i] != nil {
+			d.S[n] = 1
+			continue
+		}
+		if t := c.stack.Port(n + 1).T; math.Abs(t) > deafT {
+			d.S[n] = math.Sqrt(math.Abs(t))
+		}
+	}
+	return d
+}
+
+// setSigns fills sign and definite.
+func (g *region) setSigns() {
+	g.sign = make([]float64, g.sys.Len())
+	g.definite = true
+	for i := range g.pieces {
+		o := g.sys.Offset(i)
+		if l := g.laws[i]; l != nil {
+			copy(g.sign[o:], l.sign)
+			g.definite = g.definite && l.definite
+			continue
+		}
+		for n := range g.orders[i] {
+			s := 1.0
+			if t := g.pieces[i].stack.Port(n + 1).T; t > 0 {
+				s = -1
+				g.definite = g.definite && t < 1e-6
+			}
+			g.sign[o+2*n], g.sign[o+2*n+1] = s, s
+		}
+	}
+}
+
+func (g *region) addSources(i int) {
+	c := &g.pieces[i]
+	if c.source {
+		g.sources = append(g.sources, source{piece: i, part: c.part, own: -1})
+	}
+	if c.inside == nil {
+		return
+	}
+	for s := range c.inside.sources {
+		g.sources = append(g.sources, source{piece: i, part: c.inside.sources[s].part, own: s, u: g.laws[i].u[s]})
+	}
+}
+
+// newCircle describes the round wall to the system.
+func (g *region) newCircle() *harmonic.Circle {
+	w := &g.wall
+	first := w.Outer
+	if len(w.Rings) > 0 {
+		first = harmonic.End{Kind: harmonic.Medium, V: w.Rings[0].K}
+	}
+	c := &harmonic.Circle{R: g.r}
+	switch {
+	case first.Kind == harmonic.Medium:
+		c.RhoInf = (g.k - first.V) / (g.k + first.V)
+	case first.Kind == harmonic.Held, math.IsInf(first.V, 1):
+		c.RhoInf = -1
+	default:
+		c.RhoInf = 1
+	}
+	reach := g.reach()
+	f := 1.0
+	for n := 1; n <= maxSigma; n++ {
+		s := w.Port(n).Rho - c.RhoInf
+		if f *= reach; math.Abs(s)*f < 1e-7 {
+			break
+		}
+		c.Sigma = append(c.Sigma, s)
+	}
+	return c
+}
+
+// reach is the largest ratio (c_i/R)² of the pieces' places: what they send to the wall's harmonic n falls off like its power.
+func (g *region) reach() float64 {
+	q := 0.0
+	for i := range g.pieces {
+		c := &g.pieces[i]
+		q = math.Max(q, math.Min(1, (math.Hypot(real(c.at), imag(c.at))+c.a)/g.r))
+	}
+	return q * q
+}
+
+// lift turns unknowns into the system's scaled amplitudes, in place; drop is its adjoint.
+func (g *region) lift(x []float64) {
+	for i, l := range g.laws {
+		if l != nil {
+			l.lift(x[g.sys.Offset(i):g.sys.Offset(i+1)])
+		}
+	}
+}
+
+func (g *region) drop(y []float64) {
+	for i, l := range g.laws {
+		if l != nil {
+			l.drop(y[g.sys.Offset(i):g.sys.Offset(i+1)])
+		}
+	}
+}
+
+// product sets y = A x, using tmp of the same length.
+func (g *region) product(y, x, tmp []float64) {
+	copy(tmp, x)
+	g.lift(tmp)
+	g.sys.Apply(y, tmp)
+	g.drop(y)
+	for i, s := range g.sign {
+		y[i] += s * x[i]
+	}
+}

@@ -1,0 +1,160 @@
+package heat
+
+import (
+	"math"
+
+	"packrise/solver/harmonic"
+)
+
+// region is one medium with the pieces that lie in it and what it ends at: the holder's wall, or a cable's jacket.
+type region struct {
+	k      float64
+	r      float64        // inside radius, clearance added; 0 of a rectangle
+	wall   harmonic.Stack // round: as drawn, from the medium outwards
+	pieces []piece
+	orders []int
+
+	sys      *harmonic.System
+	circle   *harmonic.Circle
+	sign     []float64 // of each unknown in A = diag(−sgn) + 𝒢: +1 where the piece conducts better than the medium
+	laws     []*law    // of cables, nil for others
+	definite bool
+	sources  []source
+	port     int // harmonics of a cable as a piece outside, 0 of the holder
+}
+
+// source is a metal or held bore of the region or of a cable in it.
+type source struct {
+	piece int
+	part  int
+	own   int       // index among the sources of its cable, −1 if it is the piece itself
+	u     []float64 // scaled outgoing amplitudes of its cable for 1 W/m, nil for the piece itself
+}
+
+// c2 is 1/(2πk): K per W/m of a logarithm.
+func (g *region) c2() float64 { return 1 / (2 * math.Pi * g.k) }
+
+// newRegion collects the pieces of holder or cable in (−1 for the holder).
+func newRegion(p *Problem, in int, k float64) *region {
+	g := &region{k: k}
+	for i := range p.Parts {
+		if p.Parts[i].In == in {
+			g.pieces = append(g.pieces, newPiece(p, i, k))
+		}
+	}
+	for i := range g.pieces {
+		c := &g.pieces[i]
+		if q := &p.Parts[c.part]; q.Core == Inside {
+			c.inside = newRegion(p, c.part, q.K)
+			c.inside.r = q.Radius
+			c.inside.wall = c.stack
+		}
+		c.loosen(0)
+	}
+	return g
+}
+
+// loosen applies the clearance to the pieces.
+func (g *region) loosen(clearance float64) {
+	for i := range g.pieces {
+		g.pieces[i].loosen(clearance)
+	}
+}
+
+// settle keeps the pieces inside the round wall: what sticks out counts as touching.
+func (g *region) settle(i int) {
+	c := &g.pieces[i]
+	if g.r == 0 {
+		return
+	}
+	if c.a > g.r {
+		c.a = g.r * (1 - 1e-9)
+	}
+	if l := math.Hypot(real(c.at), imag(c.at)); l+c.a > g.r {
+		c.at *= complex((g.r-c.a)/l, 0)
+	}
+}
+
+// order sets the harmonics of every piece at factor f, going down into the cables.
+func (g *region) order(f float64) {
+	g.orders = make([]int, len(g.pieces))
+	for i := range g.pieces {
+		g.settle(i)
+	}
+	for i := range g.pieces {
+		g.orders[i] = g.orderOf(i, f)
+		if c := &g.pieces[i]; c.inside != nil {
+			c.inside.port = g.orders[i]
+			c.inside.order(f)
+		}
+	}
+}
+
+// orderOf applies the order rule to piece i.
+func (g *region) orderOf(i int, f float64) int {
+	c := &g.pieces[i]
+	low := 6
+	if g.k > 0.5*c.skin() {
+		low = 3
+	}
+	m := low
+	for j := range g.pieces {
+		if j != i {
+			m = max(m, g.orderBeside(c, &g.pieces[j], f, m))
+		}
+	}
+	if g.r > 0 {
+		m = max(m, g.orderAtWall(c, f, m))
+	}
+	return m
+}
+
+const maxOrder = 40
+
+// orderBeside is the order that c needs beside d, 0 if it is not above m.
+func (g *region) orderBeside(c, d *piece, f float64, m int) int {
+	gap := dist(c.at, d.at) - c.a - d.a
+	reff := c.a * d.a / (c.a + d.a)
+	if openEnough(f*c.a, reff, gap, m) {
+		return 0
+	}
+	x := harmonic.Scale(reff, gap, g.k, func(x float64) float64 {
+		return between(c.conductivity(x), d.conductivity(x))
+	})
+	return harmonic.Order(f, c.a, x, 0, maxOrder)
+}
+
+// openEnough tells whether the gap alone keeps the order within m.
+func openEnough(ca, reff, gap float64, m int) bool {
+	return gap > 0 && ca*ca < float64(m*m)*2*reff*gap
+}
+
+// orderAtWall is the order that c needs beside the round wall, 0 if it is not above m.
+func (g *region) orderAtWall(c *piece, f float64, m int) int {
+	gap := g.r - math.Hypot(real(c.at), imag(c.at)) - c.a
+	reff := math.Min(c.a*g.r/(g.r-c.a), 1e3*c.a)
+	if openEnough(f*c.a, reff, gap, m) {
+		return 0
+	}
+	x := harmonic.Scale(reff, gap, g.k, func(x float64) float64 {
+		n := int(math.Min(math.Max(g.r/x, 1), 2000))
+		return between(c.conductivity(x), shows(g.k, g.wall.Port(n).Rho))
+	})
+	return harmonic.Order(f, c.a, x, 0, maxOrder)
+}
+
+// between is the harmonic mean.
+func between(y, z float64) float64 {
+	if math.IsInf(y, 1) {
+		return 2 * z
+	}
+	if math.IsInf(z, 1) {
+		return 2 * y
+	}
+	if y+z == 0 {
+		return 0
+	}
+	return 2 * y * z / (y + z)
+}
+
+func dist(a, b complex128) float64 { return math.Hypot(real(a-b), imag(a-b)) }

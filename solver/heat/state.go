@@ -1,0 +1,172 @@
+package heat
+
+import (
+	"math"
+
+	"packrise/solver/harmonic"
+)
+
+// state is a region after solving: all that temperatures anywhere in it need. It is not changed once made.
+type state struct {
+	k      float64
+	r      float64
+	wall   harmonic.Stack
+	cloud  harmonic.Cloud
+	level  float64 // mean temperature of the wall's inside
+	total  float64 // W/m through the wall
+	pieces []pieceState
+}
+
+// pieceState is a piece after solving.
+type pieceState struct {
+	piece
+	mean   float64      // of its outer rim
+	q      float64      // W/m out of it
+	b      []complex128 // what comes in, n = 1 …
+	a      []complex128 // conj(A_n) of what a cable's inside sends out
+	inside *state
+}
+
+// solved makes the state of g for heats q (W/m, by source), unknowns x, mean wall temperature level, and a regular field omega
+// (√n conj(B_n)) that a cable's jacket lets in, nil for the holder.
+func (g *region) solved(q, x []float64, level float64, omega []complex128) *state {
+	s := &state{k: g.k, r: g.r, wall: g.wall, level: level}
+	v := append([]float64(nil), x...)
+	g.lift(v)
+	charge := make([]float64, len(g.pieces))
+	for k, f := range q {
+		src := &g.sources[k]
+		charge[src.piece] += f
+		s.total += f
+		for i, e := range src.u {
+			v[g.sys.Offset(src.piece)+i] += f * e
+		}
+	}
+	mean := g.means(charge, v, omega)
+	s.cloud = g.cloud(charge, v, level, omega)
+	s.pieces = make([]pieceState, len(g.pieces))
+	for i := range s.pieces {
+		p := &s.pieces[i]
+		p.piece, p.q, p.mean = g.pieces[i], charge[i], level+mean[i]
+		p.b = g.incoming(&s.cloud, i)
+	}
+	g.enter(s, q)
+	return s
+}
+
+// means returns the mean temperatures of the pieces' rims over the wall's.
+func (g *region) means(charge, v []float64, omega []complex128) []float64 {
+	mean, dots := make([]float64, len(g.pieces)), make([]float64, len(g.pieces))
+	g.sys.Logs(mean, charge)
+	g.sys.MonoDot(dots, v)
+	for i := range mean {
+		mean[i] = g.c2()*mean[i] + dots[i]
+		if omega == nil {
+			continue
+		}
+		z := g.pieces[i].at / complex(g.r, 0)
+		p := complex(1, 0)
+		for n, w := range omega { // Re Σ B_n (c/R)^n, B_n = conj(omega_n)/√n
+			p *= z
+			mean[i] += (real(p)*real(w) + imag(p)*imag(w)) / math.Sqrt(float64(n+1))
+		}
+	}
+	return mean
+}
+
+// cloud collects the outgoing amplitudes v.
+func (g *region) cloud(charge, v []float64, level float64, omega []complex128) harmonic.Cloud {
+	c := harmonic.Cloud{Circle: g.circle, Level: level}
+	for i := range g.pieces {
+		p := &g.pieces[i]
+		c.C, c.A, c.Q = append(c.C, p.at), append(c.A, p.a), append(c.Q, g.c2()*charge[i])
+		s := g.sys.Disc(i).S
+		d := make([]complex128, len(s))
+		o := g.sys.Offset(i)
+		for n := range d {
+			f := s[n] / math.Sqrt(float64(n+1))
+			d[n] = complex(f*v[o+2*n], f*v[o+2*n+1])
+		}
+		c.D = append(c.D, d)
+	}
+	c.Remainder()
+	for n, w := range omega {
+		for len(c.B) <= n {
+			c.B = append(c.B, 0)
+		}
+		c.B[n] += complex(real(w), -imag(w)) / complex(math.Sqrt(float64(n+1)), 0)
+	}
+	return c
+}
+
+// clearT is the reflection below which incoming amplitudes are summed anew and not read off what goes out.
+const clearT = 0.05
+
+// incoming returns b_n of piece i.
+func (g *region) incoming(c *harmonic.Cloud, i int) []complex128 {
+	p := &g.pieces[i]
+	b := make([]complex128, g.orders[i])
+	known := g.laws[i] == nil
+	for n := range b {
+		if !known {
+			break
+		}
+		t := p.stack.Port(n + 1).T
+		if math.Abs(t) < clearT {
+			known = false
+			break
+		}
+		d := c.D[i][n]
+		b[n] = complex(real(d)/t, -imag(d)/t)
+	}
+	if known {
+		return b
+	}
+	b = make([]complex128, 1+max(len(b), 12))
+	c.About(p.at, p.a, i, b)
+	return b[1:]
+}
+
+// enter makes the states of the cables' insides, for heats q of the region's sources.
+func (g *region) enter(s *state, q []float64) {
+	for i := range s.pieces {
+		p := &s.pieces[i]
+		l := g.laws[i]
+		if l == nil {
+			continue
+		}
+		in := g.pieces[i].inside
+		heats := make([]float64, len(in.sources))
+		for k, f := range q {
+			if src := &g.sources[k]; src.piece == i {
+				heats[src.own] = f
+			}
+		}
+		omega := make([]complex128, in.sys.Top())
+		x := make([]float64, in.sys.Len())
+		for r, f := range heats {
+			axpy(x, f, l.response[r])
+		}
+		for n := range l.tau {
+			w := complex(math.Sqrt(float64(n+1)), 0) * complex(real(p.b[n]), -imag(p.b[n]))
+			axpy(x, real(w), l.drive[2*n])
+			axpy(x, imag(w), l.drive[2*n+1])
+			omega[n] = complex(l.in[n], 0) * w
+		}
+		p.inside = in.solved(heats, x, p.mean+p.q*p.series, omega)
+		p.a = p.inside.cloud.Outgoing(len(p.b))
+		for n, a := range p.a {
+			p.a[n] = complex(real(a), -imag(a))
+		}
+	}
+}
+
+func axpy(y []float64, f float64, x []float64) {
+	if f == 0 {
+		return
+	}
+	y = y[:len(x)]
+	for i, v := range x {
+		y[i] += f * v
+	}
+}
