@@ -1,3 +1,319 @@
 package render
 
-func (p *sectionPainter) callouts() {}
+import (
+	"image/color"
+	"math"
+	"sort"
+
+	"packrise/solver/section"
+)
+
+// callout is a label outside the section with its leader. Pixels.
+type callout struct {
+	head, sub string
+	color     color.NRGBA
+	path      []section.Point
+	box       box
+	align     float64 // 0 left, 0.5 middle, 1 right within the box
+}
+
+// wanted is a reading that deserves a label outside.
+type wanted struct {
+	id, kind  string
+	head, sub string
+	color     color.NRGBA
+}
+
+// Sizes of callouts at device scale 1.
+const (
+	calloutLine = 16 // from one line to the next
+	leaderSlack = 0.35
+	mostCalls   = 5
+)
+
+// callouts labels the governing, the hottest and the worst parts outside the section.
+func (p *sectionPainter) callouts() {
+	for _, c := range p.called {
+		p.drawCallout(c)
+	}
+}
+
+// planCallouts chooses texts and places, the most important first, before anything is drawn.
+func (p *sectionPainter) planCallouts() {
+	if p.s.Stale {
+		return
+	}
+	p.outside = map[string]bool{}
+	for _, w := range p.wantCallouts() {
+		leads := p.leadsOf(w)
+		if p.placeCallout(w, leads) {
+			p.outside[w.id] = true
+			continue
+		}
+		w.sub = ""
+		p.outside[w.id] = p.placeCallout(w, leads)
+	}
+}
+
+// wantCallouts lists what deserves a label: what governs, what is over its limit (worst first), the hottest conductor.
+func (p *sectionPainter) wantCallouts() []wanted {
+	rs := append([]section.Reading(nil), p.s.Readings...)
+	rank := func(r section.Reading) int {
+		switch {
+		case r.Governs:
+			return 0
+		case r.Over():
+			return 1
+		case r.Hottest:
+			return 2
+		}
+		return 3
+	}
+	sort.SliceStable(rs, func(i, j int) bool {
+		a, b := rank(rs[i]), rank(rs[j])
+		if a != b || a != 1 {
+			return a < b
+		}
+		ki, _ := rs[i].MarginK()
+		kj, _ := rs[j].MarginK()
+		return ki < kj
+	})
+	most := mostCalls
+	if p.frame.y1-p.frame.y0 < 240*p.k {
+		most = 2
+	}
+	var out []wanted
+	for _, r := range rs {
+		if rank(r) == 3 || len(out) == most {
+			break
+		}
+		out = append(out, p.wording(r))
+	}
+	return out
+}
+
+func (p *sectionPainter) wording(r section.Reading) wanted {
+	name := r.ID
+	if r.Kind == "layer" || r.Kind == "surface" {
+		name = wallName(r, p.s)
+	}
+	w := wanted{id: r.ID, kind: r.Kind, head: name + " " + wholeC(r.TempC) + " °C", color: p.pal.Ink}
+	k, limited := r.MarginK()
+	if limited {
+		w.sub = marginText(k)
+	}
+	switch {
+	case r.Over():
+		w.color = p.pal.Over
+	case r.Governs && limited:
+		w.sub = "governs, " + w.sub
+	case r.Hottest && limited:
+		w.sub = "hottest, " + w.sub
+	case r.Hottest:
+		w.sub = "hottest"
+	}
+	return w
+}
+
+// leadsOf returns the ways that a leader can take from what is labelled: straight ones, else through the gaps.
+func (p *sectionPainter) leadsOf(w wanted) []lead {
+	slack := leaderSlack * p.k
+	if w.kind == "layer" || w.kind == "surface" {
+		return p.wallLeads(w)
+	}
+	at := -1
+	for i, s := range p.shapes {
+		if s.ID == w.id && !s.Unset && p.inSight(p.disc(s)) {
+			at = i
+		}
+	}
+	if at < 0 {
+		return nil
+	}
+	target, others := p.disc(p.shapes[at]), p.obstacles(p.shapes[at].ID)
+	if leads := straightLeads(target, others, slack); len(leads) > 0 {
+		return leads
+	}
+	g := newGaps(append([]disc{target}, others...), slack)
+	return append(g.straight(0), g.from(0)...)
+}
+
+// obstacles returns the outlines of the parts that a leader from id must not cross: its neighbours, and those of the cables
+// that it lies in, but not these cables themselves.
+func (p *sectionPainter) obstacles(id string) []disc {
+	var out []disc
+	for _, s := range p.shapes {
+		if s.ID == id || isInside(id, s.ID) || isInside(s.ID, id) {
+			continue
+		}
+		if up := parentID(s.ID); up == "" || isInside(id, up) {
+			out = append(out, p.disc(s))
+		}
+	}
+	return out
+}
+
+// wallLeads start in the middle of a layer of the wall, or on the outer surface, and go straight outwards.
+func (p *sectionPainter) wallLeads(w wanted) []lead {
+	depth := 0.0 // below the outer surface
+	if p.holder != nil && w.kind == "layer" {
+		rings := p.holder.Rings
+		if p.edge.round != nil {
+			rings = wall(*p.holder)
+		}
+		if i := layerIndex(w.id); i >= 0 && i < len(rings) {
+			depth = (p.holder.OuterR() - (rings[i].R0+rings[i].R1)/2) * p.v.PxPerMM
+		}
+	}
+	b := p.edge.box()
+	if b.empty() {
+		return nil
+	}
+	cx, cy := (b.x0+b.x1)/2, (b.y0+b.y1)/2
+	var out []lead
+	for n := range headings {
+		sin, cos := math.Sincos(2 * pi * float64(n) / headings)
+		t := p.edge.leave(cx, cy, cos, sin) - depth
+		out = append(out, lead{[]section.Point{{X: cx + t*cos, Y: cy + t*sin}}, cos, sin})
+	}
+	return out
+}
+
+// placeCallout tries the leads, the shortest and flattest first, until a label fits.
+func (p *sectionPainter) placeCallout(w wanted, leads []lead) bool {
+	type option struct {
+		l    lead
+		cost float64
+	}
+	options := make([]option, len(leads))
+	for i, l := range leads {
+		options[i] = option{l, p.leadCost(l)}
+	}
+	sort.SliceStable(options, func(i, j int) bool { return options[i].cost < options[j].cost })
+	for _, gap := range []float64{16, 34, 60} {
+		for _, o := range options {
+			if c, ok := p.fit(w, o.l, gap*p.k); ok {
+				p.called = append(p.called, c)
+				p.taken = append(p.taken, c.box.grown(3*p.k))
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// leadCost is the length of a leader up to the outer surface, with so much for every bend and for running up or down, where
+// labels stand less well than at the sides.
+func (p *sectionPainter) leadCost(l lead) float64 {
+	last := l.pts[len(l.pts)-1]
+	cost := p.edge.leave(last.X, last.Y, l.dx, l.dy) + 70*p.k*l.dy*l.dy
+	for i := 1; i < len(l.pts); i++ {
+		cost += between(l.pts[i-1], l.pts[i]) + 40*p.k
+	}
+	return cost
+}
+
+// fit puts a label at the end of a lead, gap pixels outside, if there is room for it there.
+func (p *sectionPainter) fit(w wanted, l lead, gap float64) (callout, bool) {
+	last := l.pts[len(l.pts)-1]
+	t := p.edge.leave(last.X, last.Y, l.dx, l.dy) + gap
+	x, y := last.X+t*l.dx, last.Y+t*l.dy
+	head, sub := p.calloutFonts(w.color)
+	width := max(p.c.MeasureText(w.head, head), p.c.MeasureText(w.sub, sub))
+	height := calloutLine * p.k
+	if w.sub != "" {
+		height *= 2
+	}
+	// the middle of the box lies on the line, just far enough for the box to begin where the leader ends
+	reach := min(width/2/max(1e-9, math.Abs(l.dx)), height/2/max(1e-9, math.Abs(l.dy))) + 4*p.k
+	cx, cy := x+reach*l.dx, y+reach*l.dy
+	c := callout{head: w.head, sub: w.sub, color: w.color, box: box{cx - width/2, cy - height/2, cx + width/2, cy + height/2}, align: 0.5}
+	switch {
+	case l.dx > 0.25:
+		c.align = 0
+	case l.dx < -0.25:
+		c.align = 1
+	}
+	c.path = append(append(c.path, l.pts...), section.Point{X: x, Y: y})
+	return c, p.calloutFree(c)
+}
+
+func (p *sectionPainter) calloutFree(c callout) bool {
+	if !c.box.within(p.frame.grown(-2*p.k)) || p.edge.meetsBox(c.box.grown(5*p.k)) || !p.isFree(c.box.grown(2*p.k)) {
+		return false
+	}
+	for i := 1; i < len(c.path); i++ {
+		for _, t := range p.taken {
+			if segmentMeetsBox(c.path[i-1], c.path[i], t) {
+				return false
+			}
+		}
+	}
+	for _, o := range p.called {
+		for i := 1; i < len(o.path); i++ {
+			if segmentMeetsBox(o.path[i-1], o.path[i], c.box.grown(3*p.k)) {
+				return false
+			}
+			for j := 1; j < len(c.path); j++ {
+				if segmentsCross(o.path[i-1], o.path[i], c.path[j-1], c.path[j]) {
+					return false
+				}
+			}
+		}
+	}
+	return true
+}
+
+func (p *sectionPainter) calloutFonts(col color.NRGBA) (head, sub Font) {
+	head = Font{Size: 13 * p.k, Bold: true, Color: col, AY: 0.5}
+	sub = Font{Size: 12 * p.k, Color: col, AY: 0.5}
+	return head, sub
+}
+
+func (p *sectionPainter) drawCallout(c callout) {
+	for _, pen := range []Pen{{Width: 3.8 * p.k, Color: alpha(p.pal.Paper, 0.85), Round: true}, {Width: 1.3 * p.k, Color: p.pal.Ink, Round: true}} {
+		for i, q := range c.path {
+			if i == 0 {
+				p.c.MoveTo(q.X, q.Y)
+			} else {
+				p.c.LineTo(q.X, q.Y)
+			}
+		}
+		p.c.Stroke(pen)
+	}
+	p.c.Circle(c.path[0].X, c.path[0].Y, 3.2*p.k)
+	p.c.Fill(p.pal.Paper)
+	p.c.Circle(c.path[0].X, c.path[0].Y, 2.2*p.k)
+	p.c.Fill(p.pal.Ink)
+	head, sub := p.calloutFonts(c.color)
+	head.AX, sub.AX = c.align, c.align
+	x, y := c.box.x0+c.align*(c.box.x1-c.box.x0), c.box.y0+calloutLine*p.k/2
+	p.write(c.head, x, y, head)
+	if c.sub != "" {
+		p.write(c.sub, x, y+calloutLine*p.k, sub)
+	}
+}
+
+// segmentsCross tells whether two straight lines have a point in common.
+func segmentsCross(a, b, c, d section.Point) bool {
+	side := func(p, q, r section.Point) float64 { return (q.X-p.X)*(r.Y-p.Y) - (q.Y-p.Y)*(r.X-p.X) }
+	return side(a, b, c)*side(a, b, d) < 0 && side(c, d, a)*side(c, d, b) < 0
+}
+
+// segmentMeetsBox tells whether a straight line runs through a box.
+func segmentMeetsBox(a, b section.Point, r box) bool {
+	lo, hi := 0.0, 1.0
+	cut := func(p, d, from, to float64) {
+		if d == 0 {
+			if p < from || p > to {
+				hi = -1
+			}
+			return
+		}
+		t0, t1 := (from-p)/d, (to-p)/d
+		lo, hi = max(lo, min(t0, t1)), min(hi, max(t0, t1))
+	}
+	cut(a.X, b.X-a.X, r.x0, r.x1)
+	cut(a.Y, b.Y-a.Y, r.y0, r.y1)
+	return lo < hi
+}

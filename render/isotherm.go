@@ -30,7 +30,7 @@ func (p *sectionPainter) isotherms() []isoline {
 		return nil
 	}
 	var out []isoline
-	for _, t := range levels(p.sc.Low, p.sc.High, roundStep((p.sc.High-p.sc.Low)/7)) {
+	for _, t := range levels(p.sc.Low, p.sc.High, roundStep((p.sc.High-p.sc.Low)/11)) {
 		out = append(out, isoline{temp: t})
 	}
 	for _, t := range p.limits() {
@@ -166,8 +166,15 @@ func (p *sectionPainter) isoPlace(l isoline, w float64, f Font) (x, y float64, o
 	return x, y, ok
 }
 
-// isFree tells whether a box lies on no part and on nothing written.
+// isFree tells whether a box lies on no part, on nothing written and on no leader.
 func (p *sectionPainter) isFree(b box) bool {
+	for _, c := range p.called {
+		for i := 1; i < len(c.path); i++ {
+			if segmentMeetsBox(c.path[i-1], c.path[i], b.grown(8*p.k)) {
+				return false
+			}
+		}
+	}
 	for _, t := range p.taken {
 		if t.meets(b) {
 			return false

@@ -42,13 +42,13 @@ const rowHeight = 16
 func (l *ladder) font() Font { return Font{Size: 12 * l.k, Color: l.pal.Ink, AY: 0.5} }
 
 func (l *ladder) layout() {
-	l.top, l.bottom = 34*l.k, max(35*l.k, l.h-16*l.k)
+	l.top, l.bottom = math.Round(34*l.k), math.Round(max(35*l.k, l.h-16*l.k))
 	wide := 0.0
 	for _, t := range l.ticks() {
 		wide = max(wide, l.c.MeasureText(wholeOrHalf(t), l.font()))
 	}
-	l.bar0 = 10*l.k + wide + 7*l.k
-	l.bar1 = l.bar0 + max(9*l.k, min(15*l.k, l.w*0.08))
+	l.bar0 = math.Round(10*l.k + wide + 7*l.k)
+	l.bar1 = l.bar0 + math.Round(max(9*l.k, min(15*l.k, l.w*0.08)))
 	l.text = l.bar1 + 24*l.k
 }
 
@@ -98,7 +98,7 @@ func (l *ladder) colorBar() {
 		y0 := l.top + math.Round(float64(i)*(l.bottom-l.top)/float64(n))
 		y1 := l.top + math.Round(float64(i+1)*(l.bottom-l.top)/float64(n))
 		t := l.sc.High - (float64(i)+0.5)/float64(n)*(l.sc.High-l.sc.Low)
-		rectangle(l.c, l.bar0, y0, l.bar1-l.bar0, min(y1, l.bottom)-y0)
+		rectangle(l.c, l.bar0, y0, l.bar1-l.bar0, min(y1+1, l.bottom)-y0) // a pixel more, so that no seam shows
 		l.c.Fill(l.sc.Color(t))
 	}
 }
@@ -177,6 +177,9 @@ func (l *ladder) write(s step, col color.NRGBA) {
 	nw := 0.0
 	if number != "" {
 		nw = l.c.MeasureText(" "+number, g)
+	}
+	if l.c.MeasureText(s.name, f) > room-nw { // the name counts for more than the number
+		number, nw = "", 0
 	}
 	name := Elide(s.name, room-nw, func(t string) float64 { return l.c.MeasureText(t, f) })
 	l.c.Text(name, l.text, s.label, f)

@@ -22,7 +22,7 @@ func ScaleOf(s Scene) Scale {
 	if !finite(low) || !finite(high) {
 		return Scale{0, 100}
 	}
-	near := high + max(10, 0.35*(high-low))
+	near := high + max(15, 0.6*(high-low))
 	top := high
 	for _, r := range s.Readings {
 		if r.LimitC.OK && r.LimitC.V <= near {

@@ -5,31 +5,44 @@ import (
 	"strconv"
 )
 
-// scaleBar draws a line of a round length in mm at the lower left.
-func (p *sectionPainter) scaleBar() {
+// bar is the scale in mm: a line of a round length at the lower left, in pixels.
+type bar struct {
+	x, y, long float64
+	text       string
+}
+
+// planScaleBar keeps room for the scale.
+func (p *sectionPainter) planScaleBar() bar {
 	longest := min(130*p.k, 0.3*(p.frame.x1-p.frame.x0))
 	mm := roundLength(longest / p.v.PxPerMM)
-	l := mm * p.v.PxPerMM
-	if !finite(l) || l < 8*p.k {
+	b := bar{12 * p.k, p.frame.y1 - 12*p.k, mm * p.v.PxPerMM, lengthText(mm)}
+	if !finite(b.long) || b.long < 8*p.k {
+		return bar{}
+	}
+	f := p.barFont()
+	t := textBox(b.x, b.y-7*p.k, p.c.MeasureText(b.text, f), f).with(box{b.x, b.y - 4*p.k, b.x + b.long, b.y + 4*p.k})
+	p.taken = append(p.taken, t.grown(2*p.k))
+	return b
+}
+
+func (p *sectionPainter) barFont() Font {
+	return Font{Size: 12 * p.k, Color: p.pal.Ink, Halo: p.pal.Paper, HaloWidth: 2 * p.k}
+}
+
+func (p *sectionPainter) drawScaleBar(b bar) {
+	if b.long == 0 {
 		return
 	}
-	x, y := 12*p.k, p.frame.y1-12*p.k
-	f := Font{Size: 12 * p.k, Color: p.pal.Ink, Halo: p.pal.Paper, HaloWidth: 2 * p.k}
-	text := lengthText(mm)
-	b := textBox(x, y-7*p.k, p.c.MeasureText(text, f), f).with(box{x, y - 4*p.k, x + l, y + 4*p.k})
-	p.taken = append(p.taken, b.grown(2*p.k))
-	tick := func(pen Pen) {
-		for _, t := range []float64{x, x + l} {
-			p.c.MoveTo(t, y-4*p.k)
-			p.c.LineTo(t, y+4*p.k)
+	for _, pen := range []Pen{{Width: 4.5 * p.k, Color: p.pal.Paper}, {Width: 1.5 * p.k, Color: p.pal.Ink}} {
+		for _, t := range []float64{b.x, b.x + b.long} {
+			p.c.MoveTo(t, b.y-4*p.k)
+			p.c.LineTo(t, b.y+4*p.k)
 		}
-		p.c.MoveTo(x, y)
-		p.c.LineTo(x+l, y)
+		p.c.MoveTo(b.x, b.y)
+		p.c.LineTo(b.x+b.long, b.y)
 		p.c.Stroke(pen)
 	}
-	tick(Pen{Width: 4.5 * p.k, Color: p.pal.Paper})
-	tick(Pen{Width: 1.5 * p.k, Color: p.pal.Ink})
-	p.write(text, x, y-7*p.k, f)
+	p.write(b.text, b.x, b.y-7*p.k, p.barFont())
 }
 
 // roundLength returns the largest of 1, 2, 5 × a power of ten that is not above x.

@@ -250,3 +250,78 @@ func touchBoth(a, b disc, r float64) []section.Point {
 	ux, uy := (b.x-a.x)/d, (b.y-a.y)/d
 	return []section.Point{{X: a.x + t*ux - h*uy, Y: a.y + t*uy + h*ux}, {X: a.x + t*ux + h*uy, Y: a.y + t*uy - h*ux}}
 }
+
+// wirewayScene is a rectangular wireway with two layers of wall and n cores on its floor.
+func wirewayScene(n int) Scene {
+	s := Scene{AmbientC: 35}
+	s.Shapes = append(s.Shapes, section.Shape{
+		Kind: section.Wireway, Width: 60, Height: 40,
+		Rings: []section.Ring{{Material: "pvc", R0: 0, R1: 1}, {Material: "steel", Metal: true, R0: 1, R1: 2.5}},
+	})
+	x, y := 3.0, 3.0
+	for i := range n {
+		s.Shapes = append(s.Shapes, core(fmt.Sprintf("W%d", i+1), section.Point{X: x, Y: y}, 1.8, 3))
+		if x += 6; x > 57 {
+			x, y = 3, y+6
+		}
+	}
+	return withField(s, 1)
+}
+
+// nestedScene is a jacket with two cables of four cores, a hose and a filler.
+func nestedScene() Scene {
+	s := Scene{AmbientC: 30}
+	s.Shapes = append(s.Shapes, section.Shape{Kind: section.Jacket, Rings: []section.Ring{{Material: "pur", R0: 12, R1: 13.4}}})
+	for c, at := range []section.Point{{X: -5.5, Y: -3}, {X: 5.5, Y: -3}} {
+		id := fmt.Sprintf("C%d", c+1)
+		s.Shapes = append(s.Shapes, section.Shape{ID: id, Kind: section.Cable, At: at, Rings: []section.Ring{{Material: "pur", R0: 4.2, R1: 5.2}}})
+		for k := range 4 {
+			sin, cos := math.Sincos(float64(k)*math.Pi/2 + 0.4)
+			sh := core(fmt.Sprintf("%s/L%d", id, k+1), section.Point{X: at.X + 2.4*cos, Y: at.Y + 2.4*sin}, 1, 1.6)
+			sh.Depth = 1
+			s.Shapes = append(s.Shapes, sh)
+		}
+	}
+	s.Shapes = append(s.Shapes,
+		section.Shape{ID: "H1", Kind: section.Rod, At: section.Point{X: 0, Y: 5.5}, Rings: []section.Ring{{Material: "pa", R0: 2.5, R1: 3.6}}},
+		section.Shape{ID: "F1", Kind: section.Rod, At: section.Point{X: 5.5, Y: 6}, Rings: []section.Ring{{Material: "pp", R1: 1.8}}},
+	)
+	return withField(s, 1)
+}
+
+// bundleScene is an open bundle of n cores; the holder has no size of its own.
+func bundleScene(n int) Scene {
+	s := Scene{AmbientC: 30}
+	s.Shapes = append(s.Shapes, section.Shape{Kind: section.OpenBundle})
+	for i, p := range hexPlaces(n, 1.5) {
+		s.Shapes = append(s.Shapes, core(fmt.Sprintf("L%d", i+1), p, 0.9, 1.5))
+	}
+	return withField(s, 1)
+}
+
+// oneScene is a single part with no holder.
+func oneScene() Scene {
+	return withField(Scene{AmbientC: 30, Shapes: []section.Shape{core("L1", section.Point{}, 2, 3)}}, 1)
+}
+
+// overScene is a loose scene of which some parts are over their limit.
+func overScene() Scene {
+	s := looseScene(9, 1)
+	tight := 0
+	for i := range s.Readings {
+		r := &s.Readings[i]
+		if r.Kind == section.Core {
+			r.LimitC = section.Some(65.0)
+		}
+		if r.Governs {
+			tight = i
+		}
+	}
+	return withWords(s, tight)
+}
+
+// unsolved takes everything that a solution gives out of a scene.
+func unsolved(s Scene) Scene {
+	s.Readings, s.Field, s.Answer, s.Status = nil, nil, "", ""
+	return s
+}

@@ -18,26 +18,30 @@ func SectionLayer(c Canvas, s Scene, v View, sc Scale, st Style) {
 	p.hatching()
 	p.outlines()
 	p.marks()
+	bar := p.planScaleBar()
+	p.planCallouts()
 	p.ids()
-	p.scaleBar()
+	p.drawScaleBar(bar)
 	p.callouts()
 	p.isothermLabels(lines)
 }
 
 // sectionPainter holds what the steps of SectionLayer share. Lengths in pixels.
 type sectionPainter struct {
-	c      Canvas
-	s      Scene
-	v      View
-	sc     Scale
-	k      float64 // device scale
-	pal    Palette
-	frame  box // the canvas
-	read   map[string]section.Reading
-	shapes []section.Shape // parts, outer ones first, without the holder
-	holder *section.Shape
-	edge   outline
-	taken  []box // where something is written
+	c       Canvas
+	s       Scene
+	v       View
+	sc      Scale
+	k       float64 // device scale
+	pal     Palette
+	frame   box // the canvas
+	read    map[string]section.Reading
+	shapes  []section.Shape // parts, outer ones first, without the holder
+	holder  *section.Shape
+	edge    outline
+	taken   []box // where something is written
+	called  []callout
+	outside map[string]bool // what has a label outside
 }
 
 func newSectionPainter(c Canvas, s Scene, v View, sc Scale, st Style) *sectionPainter {
@@ -307,3 +311,11 @@ func contains(list []string, id string) bool {
 
 // shortID is what is written inside a part: the last step of a nested id.
 func shortID(id string) string { return id[strings.LastIndexByte(id, '/')+1:] }
+
+// parentID is the cable that a nested part lies in, "" for none.
+func parentID(id string) string { return id[:max(0, strings.LastIndexByte(id, '/'))] }
+
+// isInside tells whether part id lies, at any depth, in the cable.
+func isInside(id, cable string) bool {
+	return len(id) > len(cable) && cable != "" && id[:len(cable)] == cable && id[len(cable)] == '/'
+}

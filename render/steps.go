@@ -11,6 +11,9 @@ import (
 	"packrise/solver/section"
 )
 
+// mostGroups keeps the ladder of a large section calm.
+const mostGroups = 10
+
 // step is one label of the ladder.
 type step struct {
 	ids       []string
@@ -45,7 +48,7 @@ func (l *ladder) steps() []step {
 	named, others := l.partSteps()
 	room := int((l.h-l.top)/(rowHeight*l.k)) - len(fixed) - len(named)
 	out := append(fixed, named...)
-	out = append(out, l.fold(others, max(1, room), len(named) > 0)...)
+	out = append(out, l.fold(others, max(1, min(room, mostGroups)), len(named) > 0)...)
 	sort.SliceStable(out, func(i, j int) bool { return out[i].temp > out[j].temp })
 	return out
 }
@@ -118,18 +121,12 @@ func (l *ladder) groupName(ids []string, others bool) string {
 
 // wallSteps are the holder's layers and its outer surface; equal ones share a label.
 func (l *ladder) wallSteps() []step {
-	layers := 0
-	for _, r := range l.s.Readings {
-		if r.Kind == "layer" {
-			layers++
-		}
-	}
 	var out []step
 	for _, r := range l.s.Readings {
 		if r.Kind != "layer" && r.Kind != "surface" || !finite(r.TempC) {
 			continue
 		}
-		s := step{ids: []string{r.ID}, name: l.wallName(r, layers), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs}
+		s := step{ids: []string{r.ID}, name: wallName(r, l.s), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs}
 		if r.Over() {
 			s.color = l.pal.Over
 		}
@@ -145,16 +142,22 @@ func (l *ladder) wallSteps() []step {
 	return out
 }
 
-// wallName is what people call a layer of the holder.
-func (l *ladder) wallName(r section.Reading, layers int) string {
+// wallName is what people call a layer of the holder or its outer surface.
+func wallName(r section.Reading, s Scene) string {
 	if r.Kind == "surface" {
 		return "outside"
 	}
 	name := "wall"
-	if h := holderOf(l.s.Shapes); h != nil {
+	if h := holderOf(s.Shapes); h != nil {
 		switch h.Kind {
 		case section.Jacket, section.Conduit, section.Wireway:
 			name = h.Kind
+		}
+	}
+	layers := 0
+	for _, r := range s.Readings {
+		if r.Kind == "layer" {
+			layers++
 		}
 	}
 	if layers > 1 {
