@@ -93,10 +93,7 @@ func (g *region) order(f float64) {
 // orderOf applies the order rule to piece i.
 func (g *region) orderOf(i int, f float64) int {
 	c := &g.pieces[i]
-	low := 6
-	if g.k > 0.5*c.skin() {
-		low = 3
-	}
+	low := lowest(f, g.k/c.skin())
 	m := low
 	for j := range g.pieces {
 		if j != i {
@@ -109,7 +106,18 @@ func (g *region) orderOf(i int, f float64) int {
 	return m
 }
 
-const maxOrder = 40
+// maxOrder bounds the harmonics of a piece: a large one that touches small ones needs a/x of them.
+const maxOrder = harmonic.MaxOrder
+
+// lowest is the fewest harmonics of any piece at factor f of the order rule, for a medium of ratio times the conductivity of its
+// skin. Where the two are alike harmonics die out by themselves.
+func lowest(f, ratio float64) int {
+	low := 6.0
+	if ratio > 0.5 {
+		low = 5
+	}
+	return int(math.Ceil(low * math.Sqrt(f)))
+}
 
 // orderBeside is the order that c needs beside d, 0 if it is not above m.
 func (g *region) orderBeside(c, d *piece, f float64, m int) int {

@@ -1,0 +1,57 @@
+package heat_test
+
+import (
+	"context"
+	"fmt"
+	"testing"
+
+	"packrise/solver/heat"
+)
+
+var timed = []struct {
+	parts int
+	name  string
+}{{7, "c04_hex7_touch_wall_air"}, {37, "t37_settled_air"}, {91, "t91_settled_air"}, {200, "t200_settled_air"}}
+
+func one(acc heat.Accuracy) heat.Settings { return heat.Settings{Accuracy: acc, Threads: 1} }
+
+func BenchmarkOneLoad(b *testing.B) {
+	for _, c := range timed {
+		l := load(b, c.name)
+		b.Run(fmt.Sprint(c.parts), func(b *testing.B) {
+			b.ReportAllocs()
+			for b.Loop() {
+				heat.New(l.Problem, one(heat.Standard)).Solve(context.Background(), nil)
+			}
+		})
+	}
+}
+
+func BenchmarkSecondLoad(b *testing.B) {
+	for _, c := range timed {
+		l := load(b, c.name)
+		m := heat.New(l.Problem, one(heat.Standard))
+		heats := make([]float64, len(l.Parts))
+		b.Run(fmt.Sprint(c.parts), func(b *testing.B) {
+			b.ReportAllocs()
+			for n := 0; b.Loop(); n++ {
+				for i := range heats {
+					heats[i] = l.Parts[i].Heat * float64(1+(n+i)%3)
+				}
+				m.Solve(context.Background(), heats)
+			}
+		})
+	}
+}
+
+func BenchmarkInfluence(b *testing.B) {
+	for _, c := range timed {
+		l := load(b, c.name)
+		b.Run(fmt.Sprint(c.parts), func(b *testing.B) {
+			b.ReportAllocs()
+			for b.Loop() {
+				heat.New(l.Problem, one(heat.Standard)).Influence(context.Background())
+			}
+		})
+	}
+}
