@@ -2,124 +2,175 @@ package pack
 
 import "math"
 
-// spot is a place for a disc's centre and what it costs to lie there; the cheapest free one is taken.
+// spot is a place for a disc's centre and what it costs to lie there; the cheapest free one is taken, and tie decides between equals.
 type spot struct{ cost, tie, x, y float64 }
 
-func (s spot) before(t spot, eps float64) bool {
-	if math.Abs(s.cost-t.cost) > eps {
-		return s.cost < t.cost
-	}
-	return s.tie < t.tie
-}
+// worth is what it costs to lie at a place, and the direction in which the cost rises.
+type worth func(x, y float64) (cost, tie, upx, upy float64)
 
-// bed is what already lies in the box, and finds places for the next disc that touch two things (two discs, or a disc and the wall).
+// bed is what already lies in the box. It finds places for the next disc that touch two things (two discs, or a disc and the wall) and from
+// which it cannot slide to where it would cost less.
 type bed struct {
 	in    Box
 	discs []Disc
 	eps   float64 // overlap that counts as touching
-	spots []spot  // scratch
+	grid  grid
+	near  *Disc // where cost is the distance from: nil, cost is a height
+
+	r     float64 // of the disc that is being placed
+	worth worth
+	spots []spot
 }
 
-func newBed(in Box, scale float64, n int) *bed {
-	return &bed{in: in, eps: slack * scale, discs: make([]Disc, 0, n)}
-}
-
-// best returns the free place of least cost for a disc of radius r. tie decides between places of equal cost.
-func (b *bed) best(r float64, cost func(x, y float64) (cost, tie float64)) (x, y float64, ok bool) {
-	b.spots = b.spots[:0]
-	add := func(x, y float64) {
-		if b.in.clear(x, y, r) >= -b.eps {
-			c, t := cost(x, y)
-			b.spots = append(b.spots, spot{c, t, x, y})
-		}
+// newBed makes a bed for discs of the mean radius that lie within scale of the origin.
+func newBed(in Box, scale, mean float64) *bed {
+	b := &bed{in: in, eps: slack * scale}
+	if in.rect() {
+		b.grid = newGrid(0, 0, in.W, in.H, 2*mean)
+	} else {
+		b.grid = newGrid(-scale, -scale, 2*scale, 2*scale, 2*mean)
 	}
-	b.wallSpots(r, add)
-	b.discSpots(r, add)
-	less := func(s, t spot) bool { return s.before(t, b.eps) }
-	heapify(b.spots, less)
+	return b
+}
+
+// put lays a disc in its place.
+func (b *bed) put(d Disc) {
+	b.grid.put(d, len(b.discs))
+	b.discs = append(b.discs, d)
+}
+
+// best returns the free place of least cost for a disc of radius r.
+func (b *bed) best(r float64, w worth) (x, y float64, ok bool) {
+	b.r, b.worth, b.spots = r, w, b.spots[:0]
+	b.wallSpots()
+	b.oneSpots()
+	b.discSpots()
+	b.heapify()
 	for len(b.spots) > 0 {
-		s := b.spots[0]
-		if b.free(s.x, s.y, r) {
+		if s := b.spots[0]; b.free(s.x, s.y, r) {
 			return s.x, s.y, true
 		}
-		b.spots = pop(b.spots, less)
+		b.pop()
 	}
 	return 0, 0, false
 }
 
 // free reports whether a disc of radius r at (x, y) overlaps no disc.
 func (b *bed) free(x, y, r float64) bool {
-	for _, d := range b.discs {
-		dx, dy, s := d.X-x, d.Y-y, d.R+r-b.eps
-		if dx*dx+dy*dy < s*s {
-			return false
+	i0, j0, i1, j1 := b.grid.span(x, y, r)
+	for j := j0; j <= j1; j++ {
+		for i := i0; i <= i1; i++ {
+			for _, k := range b.grid.cells[j*b.grid.nx+i] {
+				d := &b.discs[k]
+				dx, dy, s := d.X-x, d.Y-y, d.R+r-b.eps
+				if dx*dx+dy*dy < s*s {
+					return false
+				}
+			}
 		}
 	}
 	return true
 }
 
-// wallSpots adds the places on the wall alone: the deepest point, the corners, the middle of the floor.
-func (b *bed) wallSpots(r float64, add func(x, y float64)) {
-	switch {
-	case b.in.round():
-		add(0, -(b.in.R - r))
-	case b.in.rect():
-		add(b.in.W/2, r)
-		add(r, r)
-		add(b.in.W-r, r)
-		add(r, b.in.H-r)
-		add(b.in.W-r, b.in.H-r)
-	default:
-		b.openSpots(r, add)
+// add takes a place into the choice if it is inside.
+func (b *bed) add(x, y float64) {
+	if b.in.clear(x, y, b.r) >= -b.eps {
+		c, t, _, _ := b.worth(x, y)
+		b.spots = append(b.spots, spot{c, t, x, y})
 	}
 }
 
-// openSpots adds, without a wall, the middle and the places where a disc lies on one other, towards the middle and away from it.
-func (b *bed) openSpots(r float64, add func(x, y float64)) {
-	add(0, 0)
+// rest takes a place into the choice if the two supports, whose pushes point along p and q, hold the disc there.
+func (b *bed) rest(x, y, px, py, qx, qy float64) {
+	if b.in.clear(x, y, b.r) < -b.eps {
+		return
+	}
+	c, t, ux, uy := b.worth(x, y)
+	// Components of the pushes across and along the rise of cost: held when a mix of both points straight up.
+	pc, pu, qc, qu := px*uy-py*ux, px*ux+py*uy, qx*uy-qy*ux, qx*ux+qy*uy
+	if pc > qc {
+		pc, pu, qc, qu = qc, qu, pc, pu
+	}
+	tiny := 1e-9 * b.r * b.r
+	if pc*qc > tiny || qc*pu-pc*qu < -tiny {
+		return
+	}
+	b.spots = append(b.spots, spot{c, t, x, y})
+}
+
+// wallSpots adds the places on the wall alone: the deepest point, the corners, the middle of the floor.
+func (b *bed) wallSpots() {
+	in, r := b.in, b.r
+	switch {
+	case in.round():
+		b.add(0, -(in.R - r))
+	case in.rect():
+		b.add(in.W/2, r)
+		b.add(r, r)
+		b.add(in.W-r, r)
+		b.add(r, in.H-r)
+		b.add(in.W-r, in.H-r)
+	}
+}
+
+// oneSpots adds, where cost is a distance, the nearest place of all and the nearest on each disc.
+func (b *bed) oneSpots() {
+	if b.near == nil {
+		return
+	}
+	x, y, _ := b.in.clamp(b.near.X, b.near.Y, b.r)
+	b.add(x, y)
 	for _, p := range b.discs {
-		a, h := p.R+r, math.Hypot(p.X, p.Y)
-		ux, uy := 1.0, 0.0
-		if h > 0 {
-			ux, uy = p.X/h, p.Y/h
+		a, dx, dy := p.R+b.r, b.near.X-p.X, b.near.Y-p.Y
+		h := math.Hypot(dx, dy)
+		if h == 0 {
+			dx, h = 1, 1
 		}
-		add(p.X-a*ux, p.Y-a*uy)
-		add(p.X+a*ux, p.Y+a*uy)
+		b.add(p.X+a*dx/h, p.Y+a*dy/h)
 	}
 }
 
 // discSpots adds the places that touch a disc and the wall, and those that touch two discs.
-func (b *bed) discSpots(r float64, add func(x, y float64)) {
+func (b *bed) discSpots() {
 	for i, p := range b.discs {
-		a := p.R + r
+		a := p.R + b.r
 		switch {
 		case b.in.round():
-			meet(p.X, p.Y, a, 0, 0, b.in.R-r, add)
+			if math.Hypot(p.X, p.Y)+a >= b.in.R-b.r {
+				b.meet(p.X, p.Y, a, 0, 0, b.in.R-b.r, -1)
+			}
 		case b.in.rect():
-			for _, y := range [2]float64{r, b.in.H - r} {
-				if h := a*a - (y-p.Y)*(y-p.Y); h >= 0 {
-					add(p.X-math.Sqrt(h), y)
-					add(p.X+math.Sqrt(h), y)
-				}
-			}
-			for _, x := range [2]float64{r, b.in.W - r} {
-				if h := a*a - (x-p.X)*(x-p.X); h >= 0 {
-					add(x, p.Y-math.Sqrt(h))
-					add(x, p.Y+math.Sqrt(h))
-				}
-			}
+			b.sideSpots(p, a)
 		}
 		for _, q := range b.discs[:i] {
-			dx, dy, s := q.X-p.X, q.Y-p.Y, p.R+q.R+2*r
+			dx, dy, s := q.X-p.X, q.Y-p.Y, p.R+q.R+2*b.r
 			if dx*dx+dy*dy <= s*s {
-				meet(p.X, p.Y, a, q.X, q.Y, q.R+r, add)
+				b.meet(p.X, p.Y, a, q.X, q.Y, q.R+b.r, 1)
 			}
 		}
 	}
 }
 
-// meet calls add with the two points where circles cross.
-func meet(x1, y1, r1, x2, y2, r2 float64, add func(x, y float64)) {
+// sideSpots adds the places at distance a from disc p that touch a side.
+func (b *bed) sideSpots(p Disc, a float64) {
+	for k, y := range [2]float64{b.r, b.in.H - b.r} {
+		if h := a*a - (y-p.Y)*(y-p.Y); h >= 0 {
+			h, n := math.Sqrt(h), b.r*float64(1-2*k)
+			b.rest(p.X-h, y, -h, y-p.Y, 0, n)
+			b.rest(p.X+h, y, h, y-p.Y, 0, n)
+		}
+	}
+	for k, x := range [2]float64{b.r, b.in.W - b.r} {
+		if h := a*a - (x-p.X)*(x-p.X); h >= 0 {
+			h, n := math.Sqrt(h), b.r*float64(1-2*k)
+			b.rest(x, p.Y-h, x-p.X, -h, n, 0)
+			b.rest(x, p.Y+h, x-p.X, h, n, 0)
+		}
+	}
+}
+
+// meet adds the two points where circles cross; the second pushes outwards (side 1) or, as a wall does, inwards (−1).
+func (b *bed) meet(x1, y1, r1, x2, y2, r2, side float64) {
 	dx, dy := x2-x1, y2-y1
 	d2 := dx*dx + dy*dy
 	if d2 == 0 {
@@ -130,37 +181,8 @@ func meet(x1, y1, r1, x2, y2, r2 float64, add func(x, y float64)) {
 	if h2 < 0 {
 		return
 	}
-	h := math.Sqrt(h2)
-	add(x1+t*dx-h*dy, y1+t*dy+h*dx)
-	add(x1+t*dx+h*dy, y1+t*dy-h*dx)
-}
-
-func heapify(s []spot, less func(a, b spot) bool) {
-	for i := len(s)/2 - 1; i >= 0; i-- {
-		sift(s, i, less)
-	}
-}
-
-func pop(s []spot, less func(a, b spot) bool) []spot {
-	n := len(s) - 1
-	s[0] = s[n]
-	sift(s[:n], 0, less)
-	return s[:n]
-}
-
-func sift(s []spot, i int, less func(a, b spot) bool) {
-	for {
-		k := 2*i + 1
-		if k >= len(s) {
-			return
-		}
-		if k+1 < len(s) && less(s[k+1], s[k]) {
-			k++
-		}
-		if !less(s[k], s[i]) {
-			return
-		}
-		s[i], s[k] = s[k], s[i]
-		i = k
+	for _, h := range [2]float64{math.Sqrt(h2), -math.Sqrt(h2)} {
+		ex, ey := t*dx-h*dy, t*dy+h*dx
+		b.rest(x1+ex, y1+ey, ex, ey, side*(ex-dx), side*(ey-dy))
 	}
 }

@@ -118,16 +118,17 @@ func nested(radii []float64, largest bool) ([]Disc, float64, bool) {
 	if largest {
 		slices.SortStableFunc(order, func(a, b int) int { return cmp.Compare(radii[b], radii[a]) })
 	}
-	b := newBed(Box{}, sum, len(radii))
+	b := newBed(Box{}, 2*sum, sum/float64(len(radii)))
+	b.near = &Disc{}
 	for _, i := range order {
-		x, y, ok := b.best(out[i].R, func(x, y float64) (cost, tie float64) {
-			return math.Hypot(x, y), math.Atan2(y, x)
+		x, y, ok := b.best(out[i].R, func(x, y float64) (cost, tie, upx, upy float64) {
+			return math.Hypot(x, y), math.Atan2(y, x), x, y
 		})
 		if !ok {
 			return nil, 0, false
 		}
 		out[i].X, out[i].Y = x, y
-		b.discs = append(b.discs, out[i])
+		b.put(out[i])
 	}
 	return out, centreOn(out), true
 }

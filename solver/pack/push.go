@@ -61,10 +61,11 @@ func (p *pusher) start(held int) ([]Disc, bool) {
 	if held < 0 || out[held].Fixed {
 		return out, true
 	}
-	b := newBed(p.in, reach(out, p.in), len(out))
+	r, _ := means(p.from)
+	b := newBed(p.in, reach(out, p.in), r)
 	for _, d := range out {
 		if d.Fixed {
-			b.discs = append(b.discs, d)
+			b.put(d)
 		}
 	}
 	h := &out[held]
@@ -213,11 +214,12 @@ func (p *pusher) hop(start []Disc) ([]Disc, bool) {
 		}
 		return cmp.Compare(out[b].R, out[a].R)
 	})
-	b := newBed(p.in, reach(out, p.in), len(out))
+	r, _ := means(p.from)
+	b := newBed(p.in, reach(out, p.in), r)
 	var homeless []int
 	for _, i := range order {
 		if d := out[i]; p.stays[i] || b.free(d.X, d.Y, d.R+p.gap-p.tol) {
-			b.discs = append(b.discs, d)
+			b.put(d)
 		} else {
 			homeless = append(homeless, i)
 		}
@@ -227,7 +229,7 @@ func (p *pusher) hop(start []Disc) ([]Disc, bool) {
 		if out[i].X, out[i].Y, ok = b.nearest(out[i], p.gap); !ok {
 			return nil, false
 		}
-		b.discs = append(b.discs, out[i])
+		b.put(out[i])
 	}
 	return out, true
 }
@@ -241,7 +243,9 @@ func btoi(b bool) int {
 
 // nearest is the free place nearest to where the disc is.
 func (b *bed) nearest(d Disc, gap float64) (x, y float64, ok bool) {
-	return b.best(d.R+gap, func(x, y float64) (cost, tie float64) {
-		return math.Hypot(x-d.X, y-d.Y), math.Atan2(y-d.Y, x-d.X)
+	b.near = &d
+	return b.best(d.R+gap, func(x, y float64) (cost, tie, upx, upy float64) {
+		dx, dy := x-d.X, y-d.Y
+		return math.Hypot(dx, dy), math.Atan2(dy, dx), dx, dy
 	})
 }

@@ -134,10 +134,11 @@ func largestFirst(order []int, discs []Disc) {
 // drop puts one disc after the other into the lowest free place.
 func drop(discs []Disc, in Box, order []int, rng *rand.Rand) ([]Disc, bool) {
 	out := slices.Clone(discs)
-	b := newBed(in, reach(discs, in), len(discs))
+	r, _ := means(discs)
+	b := newBed(in, reach(discs, in), r)
 	for _, d := range discs {
 		if d.Fixed {
-			b.discs = append(b.discs, d)
+			b.put(d)
 		}
 	}
 	for _, i := range order {
@@ -145,17 +146,17 @@ func drop(discs []Disc, in Box, order []int, rng *rand.Rand) ([]Disc, bool) {
 			continue
 		}
 		side := float64(1 - 2*int(rng.Uint64()&1)) // equal heights left and right: toss
-		x, y, ok := b.best(out[i].R, func(x, y float64) (cost, tie float64) {
+		x, y, ok := b.best(out[i].R, func(x, y float64) (cost, tie, upx, upy float64) {
 			if in.rect() {
 				x -= in.W / 2
 			}
-			return y, math.Abs(x) + 1e-9*side*x
+			return y, math.Abs(x) + 1e-9*side*x, 0, 1
 		})
 		if !ok {
 			return nil, false
 		}
 		out[i].X, out[i].Y = x, y
-		b.discs = append(b.discs, out[i])
+		b.put(out[i])
 	}
 	return out, true
 }
