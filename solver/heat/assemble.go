@@ -32,11 +32,14 @@ func (g *region) assemble(cut float64, stop func() bool) bool {
 		discs[i] = g.disc(i)
 		g.addSources(i)
 	}
-	if g.r > 0 {
+	if g.rect == nil {
 		g.circle = g.newCircle()
 	}
 	g.sys = harmonic.NewSystem(discs, g.circle, g.port, cut)
 	g.setSigns()
+	if g.rect != nil {
+		g.rect.write(g)
+	}
 	for i := range discs {
 		if stop() {
 			return false
@@ -157,6 +160,9 @@ func (g *region) product(y, x, tmp []float64) {
 	copy(tmp, x)
 	g.lift(tmp)
 	g.sys.Apply(y, tmp)
+	if g.rect != nil {
+		g.rect.bring(g, nil, tmp, false, y, nil)
+	}
 	g.drop(y)
 	for i, s := range g.sign {
 		y[i] += s * x[i]

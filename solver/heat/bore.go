@@ -11,27 +11,24 @@ func (m *Model) holdBores(ctx context.Context, q []float64) bool {
 	if len(m.held) == 0 {
 		return true
 	}
-	k, ok := m.coefficients(ctx)
-	if !ok {
+	if !m.prepareBores(ctx) {
 		return false
 	}
 	h := len(m.held)
 	a, b := mat.NewDense(h, h, nil), mat.NewVecDense(h, nil)
 	for i, s := range m.held {
-		v := m.p.Parts[m.top.sources[s].part].Fixed - m.p.Wall.Ambient
+		v := m.p.Parts[m.top.sources[s].part].Fixed - m.floor[s]
 		for t, f := range q {
-			if m.p.Parts[m.top.sources[t].part].Core == Metal {
-				v -= k[s][t] * f
-			}
+			v -= m.rises[i][t] * f // reciprocity
 		}
 		b.SetVec(i, v)
 		for j, t := range m.held {
-			a.Set(i, j, k[s][t])
+			a.Set(i, j, m.rises[i][t]/2+m.rises[j][s]/2)
 		}
 	}
 	var x mat.VecDense
 	if err := x.SolveVec(a, b); err != nil && x.IsEmpty() {
-		return true
+		return true // no bore can give or take heat: impossible for a checked problem
 	}
 	for i, s := range m.held {
 		q[s] = x.AtVec(i)
@@ -39,12 +36,65 @@ func (m *Model) holdBores(ctx context.Context, q []float64) bool {
 	return true
 }
 
-// coefficients returns the rises of all sources over ambient for 1 W/m in each, held bores being left to float.
-func (m *Model) coefficients(ctx context.Context) ([][]float64, bool) {
-	if m.bores != nil {
-		return m.bores, true
+// prepareBores solves for 1 W/m in each held bore, and for no heat at all.
+func (m *Model) prepareBores(ctx context.Context) bool {
+	if m.rises != nil {
+		return true
 	}
+	rises := make([][]float64, len(m.held))
+	for len(m.columns) < len(m.held) {
+		m.columns = append(m.columns, nil)
+	}
+	for i, s := range m.held {
+		var ok bool
+		if m.columns[i], rises[i], ok = m.unit(ctx, s, m.columns[i]); !ok {
+			return false
+		}
+	}
+	var ok bool
+	if m.floorX, m.floor, ok = m.unit(ctx, -1, m.floorX); !ok {
+		return false
+	}
+	m.rises = rises
+	return true
+}
+
+// unit solves for 1 W/m in source s, or for no heat with s −1, from x, and returns the temperatures of all sources: rises, or absolute for
+// no heat.
+func (m *Model) unit(ctx context.Context, s int, x []float64) (_, t []float64, ok bool) {
 	g := m.top
+	q := make([]float64, len(g.sources))
+	_, _, tol := m.set.Accuracy.settings()
+	if len(x) != g.sys.Len() {
+		x = make([]float64, g.sys.Len())
+	}
+	if s < 0 && g.rect == nil {
+		for k := range q {
+			q[k] = m.p.Wall.Ambient
+		}
+		return x, q, true
+	}
+	if s >= 0 {
+		q[s] = 1
+	}
+	if _, ok = g.iterate(x, g.loadColumn(q, s < 0), tol, ended(ctx)); !ok {
+		return x, nil, false
+	}
+	t = g.temperatures(q, x, s < 0)
+	if g.rect == nil {
+		for k := range t {
+			t[k] += m.outsideR()
+		}
+	}
+	return x, t, true
+}
+
+// coefficients returns the rises of all sources for 1 W/m in each, held bores being left to float.
+func (m *Model) coefficients(ctx context.Context) ([][]float64, bool) {
+	g := m.top
+	if g.rect != nil {
+		return m.coefficientsRect(ctx)
+	}
 	f := make([][]float64, len(g.sources))
 	for s := range f {
 		f[s] = g.sourceColumn(s)
@@ -60,7 +110,25 @@ func (m *Model) coefficients(ctx context.Context) ([][]float64, bool) {
 			k[i][j] += r
 		}
 	}
-	m.bores = k
+	return k, true
+}
+
+// coefficientsRect goes column by column; the small asymmetry of the discretised wall is averaged away, reciprocity being exact.
+func (m *Model) coefficientsRect(ctx context.Context) ([][]float64, bool) {
+	n := len(m.top.sources)
+	k := make([][]float64, n)
+	for s := range k {
+		var ok bool
+		if _, k[s], ok = m.unit(ctx, s, nil); !ok {
+			return nil, false
+		}
+	}
+	for i := range k {
+		for j := range i {
+			v := (k[i][j] + k[j][i]) / 2
+			k[i][j], k[j][i] = v, v
+		}
+	}
 	return k, true
 }
 

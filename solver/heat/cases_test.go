@@ -13,6 +13,7 @@ import (
 var referenceCases = []string{
 	"c01_single_touch_air", "c02_hex7_spaced_air", "c04_hex7_touch_wall_air", "c05_hex7_touch_filler", "c06_mixed19_settled_air",
 	"c07_hex37_gap100um_filler", "c12_nested_cable_air", "m01_screen7", "m02_hose_air", "h01_hex7_conductive", "h02b_ratio12",
+	"c09_rect7_floor_air", "c11_rect6_spaced_filler", "c13_sides_steel8", "c14b_sides_bare4",
 }
 
 func TestReferenceCases(t *testing.T) {

@@ -35,6 +35,9 @@ func (g *region) columns(f [][]float64, tol float64, stop func() bool) (x, z [][
 func (g *region) iterate(x, f []float64, tol float64, stop func() bool) (steps int, ok bool) {
 	tmp := make([]float64, len(x))
 	a := func(y, x []float64) { g.product(y, x, tmp) }
+	if g.rect != nil {
+		return gmres(a, x, f, tol, stop)
+	}
 	if g.definite {
 		if steps, ok = conjugate(a, x, f, tol, stop); steps >= 0 {
 			return steps, ok

@@ -1,33 +1,76 @@
 package heat
 
-// charges returns, for unit heat in source s, the monopoles in units of 1/(2πk) and the amplitudes that its cable sends out by itself.
+// sourceParts returns, for unit heat in source s, the monopoles in units of 1/(2πk) and the amplitudes that its cable sends out by itself.
 func (g *region) sourceParts(s int) (q, u []float64) {
 	q = make([]float64, len(g.pieces))
 	q[g.sources[s].piece] = g.c2()
 	return q, g.sources[s].u
 }
 
-// incomingOf returns φ + 𝒢 u of a unit source: what comes in at every piece before anything reflects.
-func (g *region) incomingOf(s int) []float64 {
-	y := make([]float64, g.sys.Len())
-	q, u := g.sourceParts(s)
-	if u != nil {
-		x := make([]float64, g.sys.Len())
-		copy(x[g.sys.Offset(g.sources[s].piece):], u)
-		g.sys.Apply(y, x)
-	}
-	g.sys.Mono(y, q)
-	return y
-}
-
 // sourceColumn is the right-hand side −Lᵀ(φ + 𝒢 u) for 1 W/m in source s.
 func (g *region) sourceColumn(s int) []float64 {
-	y := g.incomingOf(s)
+	q := make([]float64, len(g.sources))
+	q[s] = 1
+	return g.loadColumn(q, false)
+}
+
+// loadColumn is the right-hand side for heats q by source; ground adds the drive of a rectangle's sides and ambient.
+func (g *region) loadColumn(q []float64, ground bool) []float64 {
+	y, none := make([]float64, g.sys.Len()), make([]float64, g.sys.Len())
+	charge, v := g.outgoing(q, none)
+	for k := range q {
+		if g.sources[k].u != nil {
+			g.sys.Apply(y, v)
+			break
+		}
+	}
+	if g.rect != nil {
+		g.rect.bring(g, charge, v, ground, y, nil)
+	}
+	for i := range charge {
+		charge[i] *= g.c2()
+	}
+	g.sys.Mono(y, charge)
 	g.drop(y)
 	for i := range y {
 		y[i] = -y[i]
 	}
 	return y
+}
+
+// temperatures returns those of all sources for heats q and unknowns x, relative to the round wall's mean; of a rectangle, absolute if
+// ground is set.
+func (g *region) temperatures(q, x []float64, ground bool) []float64 {
+	charge, v := g.outgoing(q, x)
+	mean := g.means(charge, v, nil)
+	y := make([]float64, len(x))
+	if g.rect != nil {
+		g.rect.bring(g, charge, v, ground, y, mean)
+	}
+	nested := false
+	for k := range q {
+		nested = nested || g.sources[k].u != nil
+	}
+	if nested {
+		w := make([]float64, len(x))
+		g.sys.Apply(w, v)
+		axpy(y, 1, w)
+		for i := range charge {
+			charge[i] *= g.c2()
+		}
+		g.sys.Mono(y, charge)
+	}
+	t := make([]float64, len(q))
+	for k := range q {
+		src := &g.sources[k]
+		t[k] = mean[src.piece] + dot(src.u, y[g.sys.Offset(src.piece):])/g.c2()
+		for r, f := range q {
+			if f != 0 {
+				t[k] += f * g.ownTerm(src, &g.sources[r])
+			}
+		}
+	}
+	return t
 }
 
 // sourceOut is what a unit source sends to the wall by itself, √n A_n.

@@ -17,8 +17,10 @@ type Model struct {
 	ready   bool
 	x       []float64   // last solution
 	held    []int       // sources that are bores held at a temperature
-	heldCol [][]float64 // their columns
-	bores   [][]float64 // rises of held bores for 1 W/m in each
+	columns [][]float64 // solutions for 1 W/m in each of them
+	rises   [][]float64 // of all sources for 1 W/m in each of them
+	floor   []float64   // temperatures of all sources without any heat, held bores floating
+	floorX  []float64
 }
 
 // factor is C of the order rule, cut the size below which entries of the matrix are dropped, tol the relative residual at which the
@@ -57,7 +59,12 @@ func (m *Model) layout() {
 		m.top.wall = outerWall(p.MediumK, w.R, w.Rings, w.Film)
 		m.top.r = w.R + p.Clearance/2
 	case Rect:
-		panic("heat: rectangles are not built")
+		m.top = newRegion(p, -1, p.MediumK)
+		m.top.loosen(p.Clearance)
+		m.top.rect = newRectWall(p, factor)
+		for i := range m.top.pieces {
+			m.top.pieces[i].at += complex(p.Clearance/2, p.Clearance/2)
+		}
 	}
 	if m.top != nil {
 		m.top.order(factor)
@@ -84,7 +91,7 @@ func (m *Model) prepare(ctx context.Context) bool {
 		return false
 	}
 	m.ready = true
-	m.heldCol, m.bores = nil, nil
+	m.rises, m.floor = nil, nil
 	m.held = m.held[:0]
 	for k, s := range m.top.sources {
 		if m.p.Parts[s.part].Core == FixedBore {
@@ -95,6 +102,18 @@ func (m *Model) prepare(ctx context.Context) bool {
 }
 
 func ended(ctx context.Context) func() bool { return func() bool { return ctx.Err() != nil } }
+
+// level is the mean temperature of a round wall's inside for heats q; 0 of a rectangle, whose wall counts absolutely.
+func (m *Model) level(q []float64) float64 {
+	if m.top.rect != nil {
+		return 0
+	}
+	total := 0.0
+	for _, v := range q {
+		total += v
+	}
+	return m.p.Wall.Ambient + total*m.outsideR()
+}
 
 // outsideR is the wall's series resistance and its film's, K·m/W, on top of everything.
 func (m *Model) outsideR() float64 {
@@ -151,13 +170,9 @@ func (m *Model) solve(ctx context.Context, q []float64) *Result {
 	if !m.holdBores(ctx, q) {
 		return m.blank(Cancelled)
 	}
-	f := g.loadColumn(q)
+	f := g.loadColumn(q, true)
 	steps, ok := g.iterate(m.x, f, tol, ended(ctx))
-	total := 0.0
-	for _, v := range q {
-		total += v
-	}
-	s := g.solved(q, m.x, m.p.Wall.Ambient+total*m.outsideR(), nil)
+	s := g.solved(q, m.x, m.level(q), nil)
 	r := m.result(s)
 	r.Steps = steps
 	switch {
@@ -167,32 +182,6 @@ func (m *Model) solve(ctx context.Context, q []float64) *Result {
 		r.Status = StoppedEarly
 	}
 	return r
-}
-
-// loadColumn is the right-hand side for heats q by source.
-func (g *region) loadColumn(q []float64) []float64 {
-	y := make([]float64, g.sys.Len())
-	charge := make([]float64, len(g.pieces))
-	var v []float64
-	for k, f := range q {
-		s := &g.sources[k]
-		charge[s.piece] += g.c2() * f
-		if s.u != nil && f != 0 {
-			if v == nil {
-				v = make([]float64, g.sys.Len())
-			}
-			axpy(v[g.sys.Offset(s.piece):], f, s.u)
-		}
-	}
-	if v != nil {
-		g.sys.Apply(y, v)
-	}
-	g.sys.Mono(y, charge)
-	g.drop(y)
-	for i := range y {
-		y[i] = -y[i]
-	}
-	return y
 }
 
 // blank is a result that holds nothing but its status.
@@ -220,10 +209,39 @@ func (m *Model) result(s *state) *Result {
 	r := m.blank(Converged)
 	r.ErrorK = 0
 	m.read(r, s)
-	r.WallMax, r.WallMean, r.Released = s.wallFaces(&m.p.Wall)
+	m.readWall(r, s)
 	r.Unknowns = m.top.sys.Len()
 	r.Field = nowhere{}
 	return r
+}
+
+// readWall fills in the wall. A bare cable's jacket is its wall.
+func (m *Model) readWall(r *Result, s *state) {
+	if s.rect != nil {
+		r.WallMax, r.WallMean, r.SideOut = s.rect.hot, s.rect.mean, s.rect.sides
+		for _, q := range s.rect.sides {
+			r.Released += q
+		}
+		return
+	}
+	r.WallMax, r.WallMean, r.Released = s.wallFaces(&m.p.Wall)
+	if i := m.bareCable(); i >= 0 {
+		r.Surfaces[i], r.Core[i] = r.WallMax, r.WallMax[0]
+		r.WallMax = r.WallMax[len(r.WallMax)-1:]
+	}
+}
+
+// bareCable is the index of a cable that has no holder, −1 if there is none.
+func (m *Model) bareCable() int {
+	if m.p.Wall.Shape != BarePart || m.top == nil {
+		return -1
+	}
+	for i := range m.p.Parts {
+		if m.p.Parts[i].In == -1 {
+			return i
+		}
+	}
+	return -1
 }
 
 // read fills in the pieces of a state, going down into the cables.

@@ -10,6 +10,7 @@ import (
 type region struct {
 	k      float64
 	r      float64        // inside radius, clearance added; 0 of a rectangle
+	rect   *rectWall      // nil of a round region
 	wall   harmonic.Stack // round: as drawn, from the medium outwards
 	pieces []piece
 	orders []int
@@ -64,7 +65,8 @@ func (g *region) loosen(clearance float64) {
 // settle keeps the pieces inside the round wall: what sticks out counts as touching.
 func (g *region) settle(i int) {
 	c := &g.pieces[i]
-	if g.r == 0 {
+	if g.rect != nil {
+		g.rect.settle(c)
 		return
 	}
 	if c.a > g.r {
@@ -100,10 +102,10 @@ func (g *region) orderOf(i int, f float64) int {
 			m = max(m, g.orderBeside(c, &g.pieces[j], f, m))
 		}
 	}
-	if g.r > 0 {
-		m = max(m, g.orderAtWall(c, f, m))
+	if g.rect != nil {
+		return max(m, g.rect.order(g, c, f, m))
 	}
-	return m
+	return max(m, g.orderAtWall(c, f, m))
 }
 
 // maxOrder bounds the harmonics of a piece: a large one that touches small ones needs a/x of them.

@@ -14,6 +14,7 @@ type state struct {
 	cloud  harmonic.Cloud
 	level  float64 // mean temperature of the wall's inside
 	total  float64 // W/m through the wall
+	rect   *rectState
 	pieces []pieceState
 }
 
@@ -31,30 +32,41 @@ type pieceState struct {
 // (√n conj(B_n)) that a cable's jacket lets in, nil for the holder.
 func (g *region) solved(q, x []float64, level float64, omega []complex128) *state {
 	s := &state{k: g.k, r: g.r, wall: g.wall, level: level}
-	v := append([]float64(nil), x...)
-	g.lift(v)
-	charge := make([]float64, len(g.pieces))
-	for k, f := range q {
-		src := &g.sources[k]
-		charge[src.piece] += f
+	charge, v := g.outgoing(q, x)
+	for _, f := range q {
 		s.total += f
-		for i, e := range src.u {
-			v[g.sys.Offset(src.piece)+i] += f * e
-		}
 	}
 	mean := g.means(charge, v, omega)
 	s.cloud = g.cloud(charge, v, level, omega)
+	if g.rect != nil {
+		s.rect = g.rect.solved(g, charge, v, mean)
+	}
 	s.pieces = make([]pieceState, len(g.pieces))
 	for i := range s.pieces {
 		p := &s.pieces[i]
 		p.piece, p.q, p.mean = g.pieces[i], charge[i], level+mean[i]
-		p.b = g.incoming(&s.cloud, i)
+		p.b = g.incoming(s, i)
 	}
 	g.enter(s, q)
 	return s
 }
 
-// means returns the mean temperatures of the pieces' rims over the wall's.
+// outgoing returns the heats of the pieces and the scaled amplitudes that they send out, for heats q by source and unknowns x.
+func (g *region) outgoing(q, x []float64) (charge, v []float64) {
+	charge = make([]float64, len(g.pieces))
+	v = append([]float64(nil), x...)
+	g.lift(v)
+	for k, f := range q {
+		src := &g.sources[k]
+		charge[src.piece] += f
+		if src.u != nil {
+			axpy(v[g.sys.Offset(src.piece):], f, src.u)
+		}
+	}
+	return charge, v
+}
+
+// means returns the mean temperatures of the pieces' rims over the round wall's; of a rectangle, without what the wall sends back.
 func (g *region) means(charge, v []float64, omega []complex128) []float64 {
 	mean, dots := make([]float64, len(g.pieces)), make([]float64, len(g.pieces))
 	g.sys.Logs(mean, charge)
@@ -103,8 +115,8 @@ func (g *region) cloud(charge, v []float64, level float64, omega []complex128) h
 const clearT = 0.05
 
 // incoming returns b_n of piece i.
-func (g *region) incoming(c *harmonic.Cloud, i int) []complex128 {
-	p := &g.pieces[i]
+func (g *region) incoming(s *state, i int) []complex128 {
+	p, c := &g.pieces[i], &s.cloud
 	b := make([]complex128, g.orders[i])
 	known := g.laws[i] == nil
 	for n := range b {
@@ -124,6 +136,11 @@ func (g *region) incoming(c *harmonic.Cloud, i int) []complex128 {
 	}
 	b = make([]complex128, 1+max(len(b), 12))
 	c.About(p.at, p.a, i, b)
+	if s.rect != nil {
+		for n, w := range s.rect.b[i] {
+			b[n] += w
+		}
+	}
 	return b[1:]
 }
 
