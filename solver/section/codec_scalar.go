@@ -182,10 +182,10 @@ func (c ident) check(r *report, v string, at path) {
 	}
 }
 
-// flag is the codec of true or false; false is not written.
-type flag struct{}
+// yesNo is the codec of true or false; false is not written.
+type yesNo struct{}
 
-func (flag) read(r *report, n *yaml.Node, at path) bool {
+func (yesNo) read(r *report, n *yaml.Node, at path) bool {
 	if n.Kind != yaml.ScalarNode || n.ShortTag() != "!!bool" {
 		r.addLine(at, n.Line, "wrong-type", "¤ holds "+kindName(n)+" where true or false belongs", "write true or false")
 		return false
@@ -193,14 +193,14 @@ func (flag) read(r *report, n *yaml.Node, at path) bool {
 	return strings.EqualFold(n.Value, "true")
 }
 
-func (flag) node(v bool) *yaml.Node {
+func (yesNo) node(v bool) *yaml.Node {
 	if !v {
 		return nil
 	}
 	return &yaml.Node{Kind: yaml.ScalarNode, Tag: "!!bool", Value: "true"}
 }
 
-func (flag) check(*report, bool, path) {}
+func (yesNo) check(*report, bool, path) {}
 
 // place is the codec of at_mm: [x, y].
 type place struct{}

@@ -95,12 +95,12 @@ func (stockCodec) node(rows []StockRow) *yaml.Node {
 	if len(rows) == 0 {
 		return nil
 	}
-	root := &yaml.Node{Kind: yaml.MappingNode, Tag: "!!map"}
+	root := &yaml.Node{Kind: yaml.MappingNode, Tag: "!!map", Column: ordered}
 	groups := map[string]*yaml.Node{}
 	for _, row := range rows {
 		g := groups[row.Group]
 		if g == nil {
-			g = &yaml.Node{Kind: yaml.MappingNode, Tag: "!!map"}
+			g = &yaml.Node{Kind: yaml.MappingNode, Tag: "!!map", Column: ordered}
 			groups[row.Group] = g
 			root.Content = append(root.Content, textNode(row.Group), g)
 		}
@@ -142,15 +142,17 @@ func rowNode(text string) *yaml.Node {
 func rowText(n *yaml.Node) string { return strings.TrimSuffix(encode(oneLine(n)), "\n") }
 
 func oneLine(n *yaml.Node) *yaml.Node {
-	c := &yaml.Node{Kind: n.Kind, Tag: n.Tag, Value: n.Value}
+	c := &yaml.Node{Kind: n.Kind, Tag: n.ShortTag(), Value: n.Value}
 	switch n.Kind {
 	case yaml.MappingNode, yaml.SequenceNode:
-		c.Style = yaml.FlowStyle
+		c.Style, c.Column = yaml.FlowStyle, ordered
 	case yaml.ScalarNode:
 		if n.ShortTag() == "!!str" {
-			return textNode(n.Value)
+			if c = textNode(n.Value); c.Style == yaml.LiteralStyle {
+				c.Style = yaml.DoubleQuotedStyle
+			}
+			return c
 		}
-		c.Tag = n.ShortTag()
 	}
 	for _, k := range n.Content {
 		c.Content = append(c.Content, oneLine(k))

@@ -227,7 +227,7 @@ func (d dict[E]) node(v []E) *yaml.Node {
 	if len(v) == 0 {
 		return nil
 	}
-	n := &yaml.Node{Kind: yaml.MappingNode, Tag: "!!map"}
+	n := &yaml.Node{Kind: yaml.MappingNode, Tag: "!!map", Column: ordered}
 	for i := range v {
 		n.Content = append(n.Content, textNode(*d.name(&v[i])), d.elem.node(v[i]))
 	}

@@ -171,7 +171,7 @@ var materialTable = &table[Material]{
 		on("limit_c", func(m *Material) *Opt[float64] { return &m.LimitC }, optNumber{temperature}),
 		on("emissivity", func(m *Material) *Opt[float64] { return &m.Emissivity }, optNumber{emissive}),
 		on("absorptivity", func(m *Material) *Opt[float64] { return &m.Absorptivity }, optNumber{share}),
-		on("gas", func(m *Material) *bool { return &m.Gas }, flag{}),
+		on("gas", func(m *Material) *bool { return &m.Gas }, yesNo{}),
 		on("source", func(m *Material) *string { return &m.Source }, text{free: true}),
 	},
 }

@@ -23,6 +23,14 @@ func newOrigin(text []byte) *origin {
 	return &origin{text, root}
 }
 
+// tidied returns the origin as the YAML library would write it, which patch can always follow.
+func (o *origin) tidied() *origin {
+	if o == nil {
+		return nil
+	}
+	return newOrigin([]byte(encode(o.root)))
+}
+
 // Equal tells whether two documents say the same, whatever files they came from.
 func Equal(a, b *Document) bool {
 	if a == b {
@@ -36,7 +44,11 @@ func Equal(a, b *Document) bool {
 // write tries the ways to write d from the kindest to the plainest, and takes the first whose text reads back as d.
 func (f format) write(d *Document) ([]byte, error) {
 	tree := f.tree(d)
-	ways := []func() []byte{func() []byte { return canonical(tree) }}
+	ways := []func() []byte{
+		func() []byte { return d.origin.patch(tree) },
+		func() []byte { return d.origin.tidied().patch(tree) },
+		func() []byte { return canonical(tree) },
+	}
 	var why string
 	for _, way := range ways {
 		text := way()

@@ -1,0 +1,333 @@
+package section
+
+import (
+	"strings"
+
+	"gopkg.in/yaml.v3"
+)
+
+// patch returns the text of the origin with only those spans changed in which the tree of the new document differs. Blank lines,
+// comments, quotes and the order of keys stay. It returns nil where the text is written in a way that it can't follow.
+func (o *origin) patch(tree *yaml.Node) []byte {
+	if o == nil {
+		return nil
+	}
+	p := &patcher{newSource(string(o.text))}
+	if o.root.Style&yaml.FlowStyle != 0 {
+		from, to, text, ok := p.inline(o.root, tree)
+		if !ok {
+			return nil
+		}
+		return []byte(p.text[:from] + text + p.text[to:])
+	}
+	from, text, ok := p.block(o.root, tree, 0, len(p.text))
+	if !ok {
+		return nil
+	}
+	return []byte(p.text[:from] + text)
+}
+
+type patcher struct{ *source }
+
+// entry is an item of a sequence or a pair of a mapping: old in the source, or fresh.
+type entry struct {
+	key, val *yaml.Node // key is nil for an item
+	from, to int        // the chunk of lines in the source, with the comments above
+	start    int        // where the key or dash stands
+	index    int        // among the old entries, −1 for a fresh one
+}
+
+// entries returns the entries of a block collection; to is where the collection ends, low what its comments must not go above.
+func (p *patcher) entries(n *yaml.Node, low, to int) (out []entry, ok bool) {
+	step := 1
+	if n.Kind == yaml.MappingNode {
+		step = 2
+	}
+	for i := 0; i+step <= len(n.Content); i += step {
+		e := entry{val: n.Content[i+step-1], index: i / step}
+		first := n.Content[i]
+		if step == 2 {
+			e.key = first
+		}
+		if e.start, ok = p.offset(first); !ok {
+			return nil, false
+		}
+		if step == 1 {
+			dash := &yaml.Node{Line: first.Line, Column: n.Column}
+			if e.start, ok = p.offset(dash); !ok || e.start >= len(p.text) || p.text[e.start] != '-' {
+				return nil, false
+			}
+		}
+		e.from = e.start
+		if p.ownLine(e.start) {
+			e.from = p.heads(e.start, low)
+		} else if i > 0 {
+			return nil, false
+		}
+		if len(out) > 0 {
+			out[len(out)-1].to = e.from
+		}
+		low = e.start
+		out = append(out, e)
+	}
+	if len(out) == 0 {
+		return nil, false
+	}
+	out[len(out)-1].to = to
+	return out, true
+}
+
+// ownLine tells whether only spaces stand before an offset on its line.
+func (p *patcher) ownLine(at int) bool {
+	return strings.Trim(p.text[p.lineStart(at):at], " ") == ""
+}
+
+// block returns the new text of a block collection and where its old text begins; the old text ends at to.
+func (p *patcher) block(old, fresh *yaml.Node, low, to int) (from int, text string, ok bool) {
+	if old.Kind != fresh.Kind || old.Style&yaml.FlowStyle != 0 {
+		return 0, "", false
+	}
+	entries, ok := p.entries(old, low, to)
+	if !ok {
+		return 0, "", false
+	}
+	from = entries[0].from
+	order := arrange(old, fresh, entries)
+	if len(order) == 0 || !p.ownLine(entries[0].start) && order[0].index != 0 {
+		return 0, "", false
+	}
+	a := assembly{p: p, entries: entries, kept: map[int]bool{}, root: low == 0, col: p.indent(entries[0].start)}
+	for _, e := range order {
+		a.kept[e.index] = true
+	}
+	for i, e := range order {
+		if !a.add(e, i+1 < len(order)) {
+			return 0, "", false
+		}
+	}
+	return from, a.finish(), true
+}
+
+// assembly puts chunks together.
+type assembly struct {
+	p       *patcher
+	entries []entry
+	kept    map[int]bool // by index
+	root    bool
+	col     int
+	b       strings.Builder
+}
+
+// add writes one entry. The blank lines and comments below the last old chunk wait for finish.
+func (a *assembly) add(e entry, more bool) bool {
+	if e.index < 0 {
+		a.fresh(e, more)
+		return true
+	}
+	old := a.entries[e.index]
+	text, ok := a.p.entryText(old, e)
+	if !ok {
+		return false
+	}
+	if old.index == len(a.entries)-1 {
+		text = strings.TrimSuffix(text, a.lastTail())
+	}
+	a.endLine()
+	a.remarks(e.index)
+	a.b.WriteString(text)
+	return true
+}
+
+// remarks writes the comments that stand apart below entries that were just above the index-th and are gone.
+func (a *assembly) remarks(index int) {
+	first := index
+	for first > 0 && !a.kept[first-1] {
+		first--
+	}
+	for _, e := range a.entries[first:index] {
+		text := a.p.text[a.p.tail(e.from, e.to, a.col):e.to]
+		if !strings.Contains(text, "#") {
+			continue
+		}
+		if strings.HasSuffix(a.b.String(), "\n\n") {
+			text = strings.TrimPrefix(text, "\n")
+		}
+		a.b.WriteString(text)
+	}
+}
+
+func (a *assembly) fresh(e entry, more bool) {
+	airy := a.root && e.val.Kind != yaml.ScalarNode && a.airy()
+	a.endLine()
+	if airy && !strings.HasSuffix(a.b.String(), "\n\n") && a.b.Len() > 0 {
+		a.b.WriteString("\n")
+	}
+	a.b.WriteString(freshEntry(e, a.col))
+	if airy && more {
+		a.b.WriteString("\n")
+	}
+}
+
+// airy tells whether the file has blank lines between its blocks.
+func (a *assembly) airy() bool {
+	for _, e := range a.entries {
+		if t := a.p.tail(e.from, e.to, a.col); strings.Contains("\n"+a.p.text[t:e.to], "\n\n") {
+			return true
+		}
+	}
+	return len(a.entries) < 3
+}
+
+func (a *assembly) endLine() {
+	if s := a.b.String(); s != "" && !strings.HasSuffix(s, "\n") {
+		a.b.WriteString("\n")
+	}
+}
+
+func (a *assembly) lastTail() string {
+	e := a.entries[len(a.entries)-1]
+	return a.p.text[a.p.tail(e.from, e.to, a.col):e.to]
+}
+
+func (a *assembly) finish() string {
+	if last := len(a.entries) - 1; !a.kept[last] {
+		a.endLine()
+		a.remarks(last)
+	}
+	if tail := a.lastTail(); tail != "" {
+		a.endLine()
+		a.b.WriteString(tail)
+	}
+	return a.b.String()
+}
+
+// entryText returns an old entry's chunk with the value, and the name, of e.
+func (p *patcher) entryText(old, e entry) (string, bool) {
+	var b strings.Builder
+	at := old.from
+	if old.key != nil && old.key.Value != e.key.Value {
+		from, to, ok := p.span(old.key)
+		if !ok {
+			return "", false
+		}
+		b.WriteString(p.text[at:from] + inlineText(e.key))
+		at = to
+	}
+	if same(old.val, e.val) {
+		return b.String() + p.text[at:old.to], true
+	}
+	if from, to, text, ok := p.inline(old.val, e.val); ok && !strings.Contains(e.val.Value, "\n") {
+		return b.String() + p.text[at:from] + text + p.text[to:old.to], true
+	}
+	if from, text, ok := p.block(old.val, e.val, p.nextLine(old), old.to); ok {
+		return b.String() + p.text[at:from] + text, true
+	}
+	col := p.indent(old.start) // written anew, under its old comments
+	if !p.ownLine(old.start) {
+		return "", false
+	}
+	return p.text[old.from:p.lineStart(old.start)] + freshEntry(e, col) + p.text[p.tail(old.from, old.to, col):old.to], true
+}
+
+// nextLine is what comments of a value's entries must not go above: the line after its key, or its dash.
+func (p *patcher) nextLine(e entry) int {
+	if i := strings.IndexByte(p.text[e.start:], '\n'); i >= 0 && e.key != nil {
+		return e.start + i + 1
+	}
+	return e.start
+}
+
+// inline returns the new text of a scalar or flow collection and the span of its old text.
+func (p *patcher) inline(old, fresh *yaml.Node) (from, to int, text string, ok bool) {
+	if from, to, ok = p.span(old); !ok {
+		return 0, 0, "", false
+	}
+	switch {
+	case same(old, fresh):
+		return from, to, p.text[from:to], true
+	case old.Kind != fresh.Kind:
+		return from, to, inlineText(fresh), true
+	case old.Kind == yaml.ScalarNode:
+		return from, to, scalarText(old, fresh), true
+	}
+	text, ok = p.flow(old, fresh, from, to)
+	return from, to, text, ok
+}
+
+// flow puts a flow collection together, with the old text between entries that were neighbours.
+func (p *patcher) flow(old, fresh *yaml.Node, from, to int) (string, bool) {
+	entries, ok := p.flowEntries(old)
+	if !ok {
+		return "", false
+	}
+	order := arrange(old, fresh, entries)
+	if len(order) == 0 || len(entries) == 0 {
+		return inlineText(fresh), true
+	}
+	between := ", "
+	for i := 1; i < len(entries); i++ {
+		if s := p.text[entries[i-1].to:entries[i].from]; !strings.Contains(s, "#") {
+			between = s
+			break
+		}
+	}
+	var b strings.Builder
+	b.WriteString(p.text[from:entries[0].from])
+	for i, e := range order {
+		switch {
+		case i == 0:
+		case e.index > 0 && order[i-1].index == e.index-1:
+			b.WriteString(p.text[entries[e.index-1].to:entries[e.index].from])
+		default:
+			b.WriteString(between)
+		}
+		text, ok := p.flowEntry(entries, e)
+		if !ok {
+			return "", false
+		}
+		b.WriteString(text)
+	}
+	b.WriteString(p.text[entries[len(entries)-1].to:to])
+	return b.String(), true
+}
+
+func (p *patcher) flowEntries(n *yaml.Node) (out []entry, ok bool) {
+	step := 1
+	if n.Kind == yaml.MappingNode {
+		step = 2
+	}
+	for i := 0; i+step <= len(n.Content); i += step {
+		e := entry{val: n.Content[i+step-1], index: i / step}
+		if step == 2 {
+			e.key = n.Content[i]
+		}
+		var ok1, ok2 bool
+		e.from, _, ok1 = p.span(n.Content[i])
+		_, e.to, ok2 = p.span(e.val)
+		if !ok1 || !ok2 {
+			return nil, false
+		}
+		e.start = e.from
+		out = append(out, e)
+	}
+	return out, true
+}
+
+func (p *patcher) flowEntry(entries []entry, e entry) (string, bool) {
+	if e.index < 0 {
+		if e.key == nil {
+			return inlineText(e.val), true
+		}
+		return inlineText(e.key) + ": " + inlineText(e.val), true
+	}
+	old := entries[e.index]
+	from, to, text, ok := p.inline(old.val, e.val)
+	if !ok {
+		return "", false
+	}
+	if e.key != nil && old.key.Value != e.key.Value {
+		_, keyEnd, ok := p.span(old.key)
+		return inlineText(e.key) + p.text[keyEnd:from] + text + p.text[to:old.to], ok
+	}
+	return p.text[old.from:from] + text + p.text[to:old.to], true
+}
