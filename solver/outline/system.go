@@ -2,6 +2,8 @@ package outline
 
 import (
 	"math"
+	"runtime"
+	"sync"
 
 	"gonum.org/v1/gonum/blas"
 	"gonum.org/v1/gonum/blas/blas64"
@@ -12,59 +14,81 @@ import (
 // concurrent use after New, except for Move.
 type System struct {
 	rect    Rect
+	k       []float64 // of the medium and of each layer
 	edges   []edge
-	panels  []panel
 	rows    []row // per edge
-	n       int   // densities; the unknown n is T_c
-	points  int   // ends of cells
+	grading grading
+	panels  []panel
+	n       int // densities; the unknown n is T_c
 	lu      blas64.General
 	pivots  []int
-	temps   []float64 // points × n: temperature at the ends of cells per density
+	temps   []float64 // temperature at the ends of cells per density, n columns
+	outer   outer
 	discs   []disc
-	surface surface
 }
 
 // New discretises the outlines (elements graded to corners and to the discs' gaps; fineness 1 is standard, 0.7 draft, 1.5 fine) and factorises.
+// Layers may be of any conductivity and thickness, metal and foil included, in any order. Lengths and conductivities that aren't positive and
+// finite panic. Where no side lets heat out there is no steady temperature and all answers are NaN.
 func New(r Rect, discs []Disc, fineness float64) *System {
-	s := &System{rect: r, edges: r.edges()}
+	r.check()
+	s := &System{rect: r, k: r.conductivities(), edges: r.edges(), grading: newGrading(&r, fineness)}
 	s.rect.Layers = append([]Layer(nil), r.Layers...)
-	g := newGrading(&s.rect, discs, fineness)
-	s.panels, s.n, s.points = g.panels(s.edges)
+	var ends int
+	s.panels, s.n, ends = s.grading.panels(s.edges, discs)
 	s.rows = s.rect.rows(s.edges)
-	s.factorise()
+	s.factorise(ends)
+	s.outer = s.newOuter()
 	s.discs = make([]disc, len(discs))
-	for i, d := range discs {
-		s.discs[i].Disc = d
+	each(len(discs), func(i int) {
+		s.discs[i].Disc = discs[i]
 		s.link(&s.discs[i])
-	}
-	s.measure()
+	})
 	return s
 }
 
 // Len returns the number of unknowns.
 func (s *System) Len() int { return s.n + 1 }
 
+// each calls f for 0 … n−1 on all processors.
+func each(n int, f func(i int)) {
+	workers := min(runtime.GOMAXPROCS(0), n)
+	var wg sync.WaitGroup
+	for w := range workers {
+		wg.Go(func() {
+			for i := w; i < n; i += workers {
+				f(i)
+			}
+		})
+	}
+	wg.Wait()
+}
+
 // factorise writes the wall's own equations and takes them apart.
-func (s *System) factorise() {
+func (s *System) factorise(ends int) {
 	n := s.n + 1
 	s.lu = blas64.General{Rows: n, Cols: n, Stride: n, Data: make([]float64, n*n)}
-	s.temps = make([]float64, s.points*s.n)
-	var b block
-	for j := range s.panels {
-		from := &s.panels[j]
-		for i := range s.panels {
-			b.write(s, from, &s.panels[i])
+	s.temps = make([]float64, ends*s.n)
+	each(len(s.panels), func(i int) {
+		var b block
+		to := &s.panels[i]
+		for j := range s.panels {
+			from := &s.panels[j]
+			b.look(from, to, s.rows[to.edge].temp != 0)
+			b.equations(s, from, to)
+			b.temperatures(s, from, to)
 		}
-		s.lu.Data[s.n*n+from.dof] = 2 * from.half // no net source
-	}
-	for i := range s.panels {
-		t := &s.panels[i]
-		for l := range t.p {
-			s.lu.Data[(t.dof+l)*n+s.n] = s.rows[t.edge].temp
+		for c := range to.p {
+			s.lu.Data[(to.dof+c)*n+s.n] = s.rows[to.edge].temp
 		}
+	})
+	for i := range s.panels { // no net source
+		s.lu.Data[s.n*n+s.panels[i].dof] = 2 * s.panels[i].half
 	}
 	s.pivots = make([]int, n)
-	lapack64.Getrf(s.lu, s.pivots)
+	if ok := lapack64.Getrf(s.lu, s.pivots); !ok || s.rect.sealed() {
+		s.lu.Data[n*n-1] = math.NaN()
+	}
 }
 
 // solve overwrites the right-hand side y with the unknowns.
@@ -77,68 +101,4 @@ func (s *System) solve(y []float64) {
 	blas64.Trsv(blas.NoTrans, t, v)
 	t.Uplo, t.Diag = blas.Upper, blas.NonUnit
 	blas64.Trsv(blas.NoTrans, t, v)
-}
-
-// block is the work space for the equations of one panel in the modes of another.
-type block struct {
-	w [maxModes + 1]complex128
-	f [maxModes + 1]potential
-}
-
-// look evaluates the potentials of a panel at the ends of the cells of another.
-func (b *block) look(from, to *panel, second bool) {
-	at := cellsOf[to.p].at
-	inv := 1 / from.half
-	if from.edge == to.edge {
-		mid := (to.lo+to.hi)/2 - (from.lo+from.hi)/2
-		for l, x := range at {
-			b.w[l] = complex((mid+to.half*x)*inv, 0)
-			b.f[l].at(b.w[l], from.p, mid < 0, second)
-		}
-		return
-	}
-	turn := scale(inv, conj(from.dir))
-	mid, step := (to.mid-from.mid)*turn, to.dir*turn
-	for l, x := range at {
-		b.w[l] = mid + scale(to.half*x, step)
-		b.f[l].at(b.w[l], from.p, real(mid) < 0, second)
-	}
-}
-
-func (b *block) write(s *System, from, to *panel) {
-	r := &s.rows[to.edge]
-	c := &cellsOf[to.p]
-	n := s.n + 1
-	b.look(from, to, r.temp != 0)
-	unit := -from.half / (2 * math.Pi)
-	log := 2 * math.Log(from.half) // ln(half) over the panel
-	for l := range to.p {
-		a := s.lu.Data[(to.dof+l)*n+from.dof:][:from.p]
-		lo, hi := &b.f[l], &b.f[l+1]
-		if from == to {
-			for k := range a {
-				a[k] = r.density * c.mean[l][k]
-			}
-		}
-		if r.flux != 0 && from.edge != to.edge { // nothing crosses the line of a straight edge
-			u := unit * r.flux / (to.half * (c.at[l+1] - c.at[l]))
-			for k := range a {
-				a[k] += u * (imag(hi.first[k]) - imag(lo.first[k]))
-			}
-		}
-		if r.temp != 0 {
-			step := inverse(b.w[l+1] - b.w[l])
-			for k := range a {
-				a[k] += unit * r.temp * real((hi.second[k]-lo.second[k])*step)
-			}
-			a[0] += unit * r.temp * log
-		}
-	}
-	for l := range c.at {
-		t := s.temps[(to.pt+l)*s.n+from.dof:][:from.p]
-		for k := range t {
-			t[k] = unit * real(b.f[l].first[k])
-		}
-		t[0] += unit * log
-	}
 }
