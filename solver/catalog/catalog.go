@@ -23,6 +23,7 @@ type Catalog struct {
 	conductors table[Conductor, conductorRow]
 	wires      table[Wire, wireRow]
 	holders    table[Holder, holderRow]
+	sizes      [2][]quantity.Size // of the conductors, thin first: mm², then AWG and kcmil
 	formula    formula
 	thickness  map[string]steps  // by wire type
 	aliases    map[string]string // other names of wire types
@@ -53,6 +54,7 @@ func read(files fs.FS, dir string) (*Catalog, error) {
 		}
 	}
 	c.sortWires()
+	c.listSizes()
 	return c, nil
 }
 
@@ -191,5 +193,9 @@ func (c *Catalog) refers(k *check, key, group, id string) {
 	if k.err != nil || slices.Contains(c.order(group), id) {
 		return
 	}
-	k.fail("%s is %q, which the catalogue doesn't have; the nearest is %s", key, id, orList(c.Nearest(group, id, 2)))
+	near := c.Nearest(group, id, 2)
+	if len(near) == 0 {
+		near = c.order(group)
+	}
+	k.fail("%s is %q, which the catalogue doesn't have; write %s", key, id, orList(near))
 }

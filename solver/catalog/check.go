@@ -78,10 +78,22 @@ func (c *check) size(v string) quantity.Size {
 	return s
 }
 
-// orList joins words as in "a, b or c".
-func orList(words []string) string {
+// orList joins words as in "a, b or c", andList as in "a, b and c".
+func orList(words []string) string { return list(words, " or ") }
+
+func andList(words []string) string { return list(words, " and ") }
+
+// nearestAre is "the nearest is a" or "the nearest are a and b".
+func nearestAre(words []string) string {
+	if len(words) == 1 {
+		return "the nearest is " + words[0]
+	}
+	return "the nearest are " + andList(words)
+}
+
+func list(words []string, last string) string {
 	if len(words) < 2 {
 		return strings.Join(words, "")
 	}
-	return strings.Join(words[:len(words)-1], ", ") + " or " + words[len(words)-1]
+	return strings.Join(words[:len(words)-1], ", ") + last + words[len(words)-1]
 }

@@ -4,7 +4,6 @@ import (
 	"fmt"
 	"math"
 	"slices"
-	"strings"
 
 	"packrise/solver/quantity"
 )
@@ -74,6 +73,9 @@ func (c *check) strands(cat *Catalog, metal string, area, diameter, r20 float64)
 
 // Conductor returns the row for a size as a person wrote it ("12 AWG", "2,5 mm²"); the error is one sentence that names the nearest sizes.
 func (c *Catalog) Conductor(size, metal, class string) (Conductor, error) {
+	if row, ok := c.conductors.get(conductorID(size, metal, class)); ok {
+		return row, nil // written as the catalogue writes it, the usual case
+	}
 	s, err := quantity.ParseSize(size)
 	if err != nil {
 		return Conductor{}, err
@@ -88,7 +90,12 @@ func (c *Catalog) Conductor(size, metal, class string) (Conductor, error) {
 	if len(near) == 0 {
 		return Conductor{}, fmt.Errorf("no table here has %s %s conductors in %s sizes; choose another class, or write area_mm2 in place of size", class, metal, system(s))
 	}
-	return Conductor{}, fmt.Errorf("there is no %s %s conductor of %s in the tables; the nearest is %s, or write area_mm2 in place of size", class, metal, s, orList(near))
+	return Conductor{}, noSize(s, metal, class, near, "or write area_mm2 in place of size")
+}
+
+// noSize says which sizes are nearest to one that the tables lack.
+func noSize(s quantity.Size, metal, class string, near []string, hint string) error {
+	return fmt.Errorf("there is no %s %s conductor of %s in the tables; %s; %s", class, metal, s, nearestAre(near), hint)
 }
 
 // known checks metal and class.
@@ -115,7 +122,7 @@ func system(s quantity.Size) string {
 // nearestSizes returns the next thinner and thicker size that the tables have.
 func (c *Catalog) nearestSizes(s quantity.Size, metal, class string) []string {
 	var thinner, thicker string
-	for _, t := range c.sizes(american(s)) {
+	for _, t := range c.sizes[index(american(s))] {
 		if _, ok := c.conductors.get(conductorID(t.String(), metal, class)); !ok {
 			continue
 		}
@@ -128,22 +135,34 @@ func (c *Catalog) nearestSizes(s quantity.Size, metal, class string) []string {
 	return slices.DeleteFunc([]string{thinner, thicker}, func(s string) bool { return s == "" })
 }
 
-func (c *Catalog) sizes(ofAmerica bool) []quantity.Size {
-	var out []quantity.Size
+// listSizes remembers the sizes of the conductors from thin to thick, first mm², then AWG and kcmil.
+func (c *Catalog) listSizes() {
+	seen := map[string]bool{}
+	c.sizes = [2][]quantity.Size{}
 	for _, id := range c.conductors.order {
-		text, _, _ := strings.Cut(strings.Replace(id, "/0 ", "\x00 ", 1), "/")
-		s, err := quantity.ParseSize(strings.Replace(text, "\x00 ", "/0 ", 1))
-		if err == nil && american(s) == ofAmerica {
-			out = append(out, s)
+		text := c.conductors.at[id].value.Size
+		if seen[text] {
+			continue
 		}
+		seen[text] = true
+		s := parsed(text)
+		c.sizes[index(american(s))] = append(c.sizes[index(american(s))], s)
 	}
-	slices.SortFunc(out, quantity.Size.Compare)
-	return slices.Compact(out)
+	for i := range c.sizes {
+		slices.SortFunc(c.sizes[i], quantity.Size.Compare)
+	}
+}
+
+func index(american bool) int {
+	if american {
+		return 1
+	}
+	return 0
 }
 
 // Sizes lists canonical sizes from thin to thick: AWG and kcmil if american, else mm².
 func (c *Catalog) Sizes(american bool) []string {
-	sizes := c.sizes(american)
+	sizes := c.sizes[index(american)]
 	out := make([]string, len(sizes))
 	for i, s := range sizes {
 		out[i] = s.String()

@@ -4,6 +4,7 @@ import (
 	"cmp"
 	"slices"
 	"strings"
+	"unicode/utf8"
 )
 
 // Nearest returns up to n ids of the group ("material", "type", "wire", "holder", "metal", "conductor") that are spelt most like id.
@@ -30,7 +31,8 @@ func (c *Catalog) order(group string) []string {
 	return nil
 }
 
-// nearest returns up to n words that are spelt most like word, the most like first; words that share nothing with it are left out.
+// nearest returns up to n words that are spelt most like word, the most like first. Words of which more than half differs are left out,
+// unless one is part of the other.
 func nearest(words []string, word string, n int) []string {
 	type scored struct {
 		word string
@@ -40,7 +42,11 @@ func nearest(words []string, word string, n int) []string {
 	var all []scored
 	for _, w := range words {
 		p := plainWord(w)
-		if d := distance(word, p); d < max(len(word), len(p)) {
+		d, longer := distance(word, p), max(utf8.RuneCountInString(word), len(p))
+		if len(word) > 2 && strings.Contains(p, word) || len(p) > 2 && strings.Contains(word, p) {
+			d = 1 + d/4
+		}
+		if d <= longer/2 {
 			all = append(all, scored{w, d})
 		}
 	}

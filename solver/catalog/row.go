@@ -47,6 +47,9 @@ func (c *Catalog) With(group, id, yaml string) (cat *Catalog, changed bool, err 
 			a.Source, b.Source = Source{}, Source{}
 			return a == b
 		})
+		if len(out.conductors.order) > len(c.conductors.order) {
+			out.listSizes()
+		}
 	case "wire":
 		changed, err = out.wires.with(c, id, yaml, func(a, b Wire) bool {
 			a.Name, a.Source, a.Own.Source, b.Name, b.Source, b.Own.Source = "", Source{}, Source{}, "", Source{}, Source{}

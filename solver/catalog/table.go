@@ -23,7 +23,7 @@ type entry[V, R any] struct {
 // table holds the rows of one group in the order of the files.
 type table[V any, R rowOf[V]] struct {
 	order []string
-	at    map[string]entry[V, R]
+	at    map[string]*entry[V, R] // an entry never changes
 }
 
 func (t *table[V, R]) add(c *Catalog, row R) error {
@@ -36,9 +36,9 @@ func (t *table[V, R]) add(c *Catalog, row R) error {
 		return fmt.Errorf("%s: %w", id, err)
 	}
 	if t.at == nil {
-		t.at = map[string]entry[V, R]{}
+		t.at = map[string]*entry[V, R]{}
 	}
-	t.at[id] = entry[V, R]{v, row}
+	t.at[id] = &entry[V, R]{v, row}
 	t.order = append(t.order, id)
 	return nil
 }
@@ -54,7 +54,11 @@ func (t *table[V, R]) addAll(c *Catalog, rows []R) error {
 
 func (t *table[V, R]) get(id string) (V, bool) {
 	e, ok := t.at[id]
-	return e.value, ok
+	if !ok {
+		var none V
+		return none, false
+	}
+	return e.value, true
 }
 
 func (t *table[V, R]) list() []V {
@@ -102,6 +106,6 @@ func (t *table[V, R]) with(c *Catalog, id, text string, same func(a, b V) bool) 
 	if !known {
 		t.order = append(slices.Clone(t.order), id)
 	}
-	t.at[id] = entry[V, R]{v, row}
+	t.at[id] = &entry[V, R]{v, row}
 	return !known || !same(v, old.value), nil
 }
