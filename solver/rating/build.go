@@ -1,0 +1,133 @@
+package rating
+
+import (
+	"math"
+
+	"packrise/solver/fluid"
+	"packrise/solver/heat"
+	"packrise/solver/section"
+)
+
+// zeroC is 0 °C in K.
+const zeroC = 273.15
+
+// spaces are the air-filled regions of a scene, whose conductivity follows their own temperature: the holder (index −1), cables and bores
+// by part index.
+type spaces map[int]float64 // °C
+
+// airSpaces lists the regions that hold air.
+func (s *scene) airSpaces(start float64) spaces {
+	out := spaces{}
+	if s.holder.fill.air && s.holder.kind != section.NoHolder {
+		out[-1] = start
+	}
+	for i := range s.parts {
+		p := &s.parts[i]
+		if (p.inside != nil && p.inside.fill.air) || (p.bore != nil && p.bore.fill.air && !p.bore.fixed.OK) {
+			out[i] = start
+		}
+	}
+	return out
+}
+
+// k returns the conductivity (W/mK) of what fills a region.
+func (a spaces) k(i int, m medium) float64 {
+	if m.air {
+		return fluid.AirConductivity(a[i] + zeroC)
+	}
+	return m.k
+}
+
+// build writes the heat problem of a scene at given temperatures of its air. Temperatures are °C throughout.
+func (s *scene) build(air spaces) heat.Problem {
+	h := &s.holder
+	p := heat.Problem{
+		Parts:     make([]heat.Part, len(s.parts)),
+		MediumK:   air.k(-1, h.fill),
+		Clearance: h.gap,
+		Wall:      heat.Wall{R: h.radius, W: h.w, H: h.h, Rings: heatRings(h.layers), Film: s.filmW, Ambient: s.doc.Surroundings.AmbientC.V},
+	}
+	switch h.kind {
+	case section.Wireway:
+		p.Wall.Shape = heat.Rect
+		sides := s.doc.Holder.Sides
+		p.Wall.Sides = [4]heat.Side{heat.Bottom: side(sides.Bottom), heat.Right: side(sides.Right), heat.Top: side(sides.Top), heat.Left: side(sides.Left)}
+	case section.NoHolder:
+		p.Wall.Shape = heat.BarePart
+	}
+	for i := range s.parts {
+		p.Parts[i] = s.heatPart(i, air)
+	}
+	return p
+}
+
+func side(s section.Side) heat.Side {
+	switch s.Kind {
+	case section.SideInsulated:
+		return heat.Side{Kind: heat.Insulated}
+	case section.SideFixed:
+		return heat.Side{Kind: heat.Held, Temp: s.FixedC}
+	}
+	return heat.Side{}
+}
+
+func heatRings(layers []layer) []heat.Ring {
+	out := make([]heat.Ring, len(layers))
+	for i, l := range layers {
+		out[i] = heat.Ring{K: l.material.k, Thickness: l.thickness}
+	}
+	return out
+}
+
+func (s *scene) heatPart(i int, air spaces) heat.Part {
+	p := &s.parts[i]
+	out := heat.Part{In: p.in, X: p.x, Y: p.y, Radius: p.radius, Rings: heatRings(p.layers)}
+	switch {
+	case p.metal:
+		out.Core = heat.Metal
+	case p.inside != nil:
+		out.Core, out.K = heat.Inside, air.k(i, p.inside.fill)
+	case p.bore != nil && p.bore.fixed.OK:
+		out.Core, out.Fixed = heat.FixedBore, p.bore.fixed.V
+	case p.bore != nil:
+		out.Core, out.K = heat.Bore, air.k(i, p.bore.fill)
+	default:
+		out.Core, out.K = heat.Body, p.body
+	}
+	return out
+}
+
+// update moves the temperature of every air region to the mean of its surfaces (weighted by circumference) and returns the largest relative
+// change of a conductivity.
+func (a spaces) update(s *scene, r *heat.Result) float64 {
+	worst := 0.0
+	for i, old := range a {
+		t := s.airTemperature(i, r)
+		k0, k1 := fluid.AirConductivity(old+zeroC), fluid.AirConductivity(t+zeroC)
+		worst = max(worst, math.Abs(k1/k0-1))
+		a[i] = t
+	}
+	return worst
+}
+
+// airTemperature is the mean of the surfaces that face region i, weighted by their circumference.
+func (s *scene) airTemperature(i int, r *heat.Result) float64 {
+	if i >= 0 && s.parts[i].inside == nil {
+		return r.Surfaces[i][0]
+	}
+	wall := r.WallMax[0]
+	around := 2 * math.Pi * s.holder.radius
+	if s.holder.kind == section.Wireway {
+		around = 2 * (s.holder.w + s.holder.h)
+	}
+	if i >= 0 {
+		wall, around = r.Surfaces[i][0], 2*math.Pi*s.parts[i].radius
+	}
+	sum, weight := wall*around, around
+	for _, j := range s.children(i) {
+		c := 2 * math.Pi * s.parts[j].outer()
+		sum += c * r.Surfaces[j][len(r.Surfaces[j])-1]
+		weight += c
+	}
+	return sum / weight
+}

@@ -1,0 +1,45 @@
+package rating
+
+import (
+	"slices"
+
+	"packrise/solver/heat"
+)
+
+// What difference found, besides the index of the one part that moved.
+const (
+	same  = -1
+	other = -2
+)
+
+// difference compares two heat problems but for the heats: same, other, or the index of the only top-level part that moved.
+func difference(a, b *heat.Problem) int {
+	if a.MediumK != b.MediumK || a.Clearance != b.Clearance || len(a.Parts) != len(b.Parts) || !sameWall(a.Wall, b.Wall) {
+		return other
+	}
+	moved := same
+	for i := range a.Parts {
+		p, q := a.Parts[i], b.Parts[i]
+		if !samePart(p, q) {
+			return other
+		}
+		if p.X == q.X && p.Y == q.Y {
+			continue
+		}
+		if moved != same || p.In >= 0 {
+			return other
+		}
+		moved = i
+	}
+	return moved
+}
+
+func sameWall(a, b heat.Wall) bool {
+	return a.Shape == b.Shape && a.R == b.R && a.W == b.W && a.H == b.H && a.Film == b.Film && a.Ambient == b.Ambient &&
+		a.Sides == b.Sides && slices.Equal(a.Rings, b.Rings)
+}
+
+// samePart compares all but place and heat.
+func samePart(a, b heat.Part) bool {
+	return a.In == b.In && a.Core == b.Core && a.Radius == b.Radius && a.K == b.K && a.Fixed == b.Fixed && slices.Equal(a.Rings, b.Rings)
+}
