@@ -195,7 +195,11 @@ func (c *Cloud) mirrored(j int, at complex128, a float64, b []complex128) {
 	al := scale(c.A[j], at) * inv
 	be := scale(a*c.A[j], inv)
 	de := scale(-a, cj) * inv
-	p, q := make([]complex128, len(b)), make([]complex128, len(b))
+	var small [2][16]complex128
+	p, q := small[0][:], small[1][:]
+	if len(b) > len(p) {
+		p, q = make([]complex128, len(b)), make([]complex128, len(b))
+	}
 	p[0] = 1
 	for _, d := range c.D[j] {
 		q[0] = al * p[0]
@@ -212,16 +216,27 @@ func (c *Cloud) mirrored(j int, at complex128, a float64, b []complex128) {
 // shifted adds the regular field B.
 func (c *Cloud) shifted(at complex128, a float64, b []complex128) {
 	z := scale(1/c.Circle.R, at)
-	t := complex(a/c.Circle.R, 0)
+	t := a / c.Circle.R
+	top := len(c.B)
+	for r, s := size(z)+t, 0.0; top > 0 && r < 1; top-- { // what has died out this far inside
+		if s = size(c.B[top-1]) * math.Pow(r, float64(top)); s > 1e-7 {
+			break
+		}
+	}
 	// Repeated synthetic division by (z − at): the Taylor coefficients of the polynomial, one order a sweep.
-	w := make([]complex128, len(c.B)+1)
-	copy(w[1:], c.B)
-	p := complex(1, 0)
+	var few [64]complex128
+	w := few[:]
+	if top+1 > len(w) {
+		w = make([]complex128, top+1)
+	}
+	w = w[:top+1]
+	copy(w[1:], c.B[:top])
+	p := 1.0
 	for n := 0; n < len(b) && n < len(w); n++ {
 		for m := len(w) - 2; m >= n; m-- {
 			w[m] += z * w[m+1]
 		}
-		b[n] += w[n] * p
+		b[n] += scale(p, w[n])
 		p *= t
 	}
 }

@@ -57,6 +57,7 @@ func (b *bare) solve(heats []float64) *Result {
 	r.WallMean = s.mean
 	r.Released = b.released(s.mean, q)
 	r.ErrorK = 0
+	r.Field = &bareField{p: &s, l: s.layers()}
 	return r
 }
 
@@ -76,4 +77,28 @@ func (b *bare) influence(out [][]float64) {
 	whole, _ := b.resistance()
 	out[i] = make([]float64, len(out))
 	out[i][i] = whole
+}
+
+// bareField is the field of a bare part.
+type bareField struct {
+	p *pieceState
+	l layers
+}
+
+func (f *bareField) At(x, y float64) float64 {
+	z := complex(x, y) - f.p.at
+	r := math.Hypot(real(z), imag(z))
+	switch {
+	case r > f.p.drawn*(1+1e-12):
+		return math.NaN()
+	case r > f.l.r0:
+		return f.l.at(z, r)
+	}
+	return f.l.innerT
+}
+
+func (f *bareField) Row(dst []float64, y, x0, dx float64) {
+	for i := range dst {
+		dst[i] = f.At(x0+float64(i)*dx, y)
+	}
 }

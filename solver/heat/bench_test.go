@@ -55,3 +55,30 @@ func BenchmarkInfluence(b *testing.B) {
 		})
 	}
 }
+
+func BenchmarkField(b *testing.B) {
+	for _, name := range []string{"t37_settled_air", "t200_settled_air", "c09_rect7_floor_air"} {
+		l := load(b, name)
+		m := heat.New(l.Problem, one(heat.Standard))
+		half := l.Wall.R
+		x, y := 0.0, 0.0
+		if half == 0 {
+			half = l.Wall.W / 2
+			x, y = half, half
+		}
+		half *= 1.15
+		b.Run(name, func(b *testing.B) {
+			b.ReportAllocs()
+			const px = 512
+			row := make([]float64, px)
+			for b.Loop() {
+				b.StopTimer()
+				f := m.Solve(context.Background(), nil).Field
+				b.StartTimer()
+				for i := range px {
+					f.Row(row, y-half+2*half*float64(i)/px, x-half, 2*half/px)
+				}
+			}
+		})
+	}
+}

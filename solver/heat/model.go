@@ -211,7 +211,11 @@ func (m *Model) result(s *state) *Result {
 	m.read(r, s)
 	m.readWall(r, s)
 	r.Unknowns = m.top.sys.Len()
-	r.Field = nowhere{}
+	f := &field{top: s}
+	if s.rect != nil {
+		f.shift = complex(m.p.Clearance/2, m.p.Clearance/2)
+	}
+	r.Field = f
 	return r
 }
 

@@ -16,6 +16,7 @@ type state struct {
 	total  float64 // W/m through the wall
 	rect   *rectState
 	pieces []pieceState
+	charts charts
 }
 
 // pieceState is a piece after solving.
