@@ -76,12 +76,21 @@ func (k *Desk) Close() {
 // Listen calls f after every change, on the window's goroutine.
 func (k *Desk) Listen(f func(Changed)) { k.listen = append(k.listen, f) }
 
+// listenUntil is Listen until stop is called.
+func (k *Desk) listenUntil(f func(Changed)) (stop func()) {
+	i := len(k.listen)
+	k.listen = append(k.listen, f)
+	return func() { k.listen[i] = nil }
+}
+
 func (k *Desk) tell(c Changed) {
 	if k.closed || c == 0 {
 		return
 	}
 	for _, f := range k.listen {
-		f(c)
+		if f != nil {
+			f(c)
+		}
 	}
 }
 
@@ -114,7 +123,8 @@ func (k *Desk) Apply(e section.Edit, draft bool) {
 		k.changed(ChangedDocument, ask{draft: true})
 		return
 	}
-	if k.commit(e) {
+	drafted := k.trial != nil
+	if k.commit(e) || drafted {
 		k.changed(ChangedDocument, ask{interrupt: true})
 		return
 	}

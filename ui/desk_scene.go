@@ -121,6 +121,18 @@ func (k *Desk) Scene() render.Scene {
 	return s
 }
 
+// Scale returns the colours' scale of the scene.
+func (k *Desk) Scale() render.Scale { return render.ScaleOf(k.Scene()) }
+
+// shownShapes returns the shapes of the scene.
+func (k *Desk) shownShapes() []section.Shape {
+	if r, fresh := k.Result(); r != nil && (fresh || !k.Stale()) {
+		return r.Shapes
+	}
+	shapes, _ := k.Shapes()
+	return shapes
+}
+
 // badIDs returns the parts that stop the work.
 func badIDs(all []section.Problem) []string {
 	var ids []string

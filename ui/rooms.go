@@ -18,8 +18,9 @@ type Rooms struct {
 	Solve func(context.Context, *section.Document, rating.Options) (*rating.Result, []section.Problem, error)
 	// Outline returns what to draw of a document.
 	Outline func(*section.Document, *catalog.Catalog) ([]section.Shape, []section.Problem)
-	// MakeRoom pushes parts apart. Called on the goroutine of Beside.
-	MakeRoom func(d *section.Document, cat *catalog.Catalog, held string) (map[string]section.Point, bool)
+	// Settle, LayUp and MakeRoom place the parts of the top level. They are called on the goroutine of Beside.
+	Settle, LayUp func(*section.Document, *catalog.Catalog) (map[string]section.Point, error)
+	MakeRoom      func(d *section.Document, cat *catalog.Catalog, held string) (map[string]section.Point, bool)
 	// Hop runs f on the window's goroutine.
 	Hop func(f func())
 	// Beside runs f beside the window's goroutine.
@@ -35,6 +36,12 @@ func (r Rooms) filled(cat *catalog.Catalog) Rooms {
 	}
 	if r.Outline == nil {
 		r.Outline = rating.Outline
+	}
+	if r.Settle == nil {
+		r.Settle = rating.Settle
+	}
+	if r.LayUp == nil {
+		r.LayUp = rating.LayUp
 	}
 	if r.MakeRoom == nil {
 		r.MakeRoom = rating.MakeRoom
