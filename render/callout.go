@@ -4,24 +4,28 @@ import (
 	"image/color"
 	"math"
 	"sort"
+	"strings"
+	"sync"
 
 	"packrise/solver/section"
 )
 
 // callout is a label outside the section with its leader. Pixels.
 type callout struct {
-	head, sub string
-	color     color.NRGBA
-	path      []section.Point
-	box       box
-	align     float64 // 0 left, 0.5 middle, 1 right within the box
+	head  string
+	sub   []string // lines below
+	color color.NRGBA
+	path  []section.Point
+	box   box
+	align float64 // 0 left, 0.5 middle, 1 right within the box
 }
 
 // wanted is a reading that deserves a label outside.
 type wanted struct {
-	id, kind  string
-	head, sub string
-	color     color.NRGBA
+	id, kind string
+	head     string
+	sub      []string
+	color    color.NRGBA
 }
 
 // Sizes of callouts at device scale 1.
@@ -45,14 +49,25 @@ func (p *sectionPainter) planCallouts() {
 	}
 	p.outside = map[string]bool{}
 	for _, w := range p.wantCallouts() {
-		leads := p.leadsOf(w)
-		if p.placeCallout(w, leads) {
-			p.outside[w.id] = true
-			continue
-		}
-		w.sub = ""
-		p.outside[w.id] = p.placeCallout(w, leads)
+		p.outside[w.id] = p.planCallout(w)
 	}
+}
+
+// planCallout tries straight leaders, then ones through the gaps, each with the whole text, a narrower one and the head alone.
+func (p *sectionPainter) planCallout(w wanted) bool {
+	straight, bent := p.leadsOf(w)
+	full := w.sub
+	narrow := strings.Split(strings.Join(full, ""), ", ")
+	for _, leads := range []func() []lead{func() []lead { return straight }, bent} {
+		ways := leads()
+		for _, w.sub = range [][]string{full, narrow} {
+			if p.placeCallout(w, ways) {
+				return true
+			}
+		}
+	}
+	w.sub = nil
+	return p.placeCallout(w, append(straight, bent()...))
 }
 
 // wantCallouts lists what deserves a label: what governs, what is over its limit (worst first), the hottest conductor.
@@ -99,27 +114,26 @@ func (p *sectionPainter) wording(r section.Reading) wanted {
 	}
 	w := wanted{id: r.ID, kind: r.Kind, head: name + " " + wholeC(r.TempC) + " °C", color: p.pal.Ink}
 	k, limited := r.MarginK()
-	if limited {
-		w.sub = marginText(k)
-	}
 	switch {
 	case r.Over():
-		w.color = p.pal.Over
+		w.color, w.sub = p.pal.Over, []string{marginText(k)}
 	case r.Governs && limited:
-		w.sub = "governs, " + w.sub
+		w.sub = []string{"governs, " + marginText(k)}
 	case r.Hottest && limited:
-		w.sub = "hottest, " + w.sub
+		w.sub = []string{"hottest, " + marginText(k)}
 	case r.Hottest:
-		w.sub = "hottest"
+		w.sub = []string{"hottest"}
 	}
 	return w
 }
 
-// leadsOf returns the ways that a leader can take from what is labelled: straight ones, else through the gaps.
-func (p *sectionPainter) leadsOf(w wanted) []lead {
+// leadsOf returns the ways that a leader can take from what is labelled: straight ones, and those through the gaps, which take
+// longer to find.
+func (p *sectionPainter) leadsOf(w wanted) (straight []lead, bent func() []lead) {
 	slack := leaderSlack * p.k
+	bent = func() []lead { return nil }
 	if w.kind == "layer" || w.kind == "surface" {
-		return p.wallLeads(w)
+		return p.wallLeads(w), bent
 	}
 	at := -1
 	for i, s := range p.shapes {
@@ -128,14 +142,13 @@ func (p *sectionPainter) leadsOf(w wanted) []lead {
 		}
 	}
 	if at < 0 {
-		return nil
+		return nil, bent
 	}
 	target, others := p.disc(p.shapes[at]), p.obstacles(p.shapes[at].ID)
-	if leads := straightLeads(target, others, slack); len(leads) > 0 {
-		return leads
-	}
-	g := newGaps(append([]disc{target}, others...), slack)
-	return append(g.straight(0), g.from(0)...)
+	return straightLeads(target, others, slack), sync.OnceValue(func() []lead {
+		g := newGaps(append([]disc{target}, others...), slack)
+		return append(g.straight(0), g.from(0)...)
+	})
 }
 
 // obstacles returns the outlines of the parts that a leader from id must not cross: its neighbours, and those of the cables
@@ -192,10 +205,12 @@ func (p *sectionPainter) placeCallout(w wanted, leads []lead) bool {
 	sort.SliceStable(options, func(i, j int) bool { return options[i].cost < options[j].cost })
 	for _, gap := range []float64{16, 34, 60} {
 		for _, o := range options {
-			if c, ok := p.fit(w, o.l, gap*p.k); ok {
-				p.called = append(p.called, c)
-				p.taken = append(p.taken, c.box.grown(3*p.k))
-				return true
+			for _, c := range p.fits(w, o.l, gap*p.k) {
+				if p.calloutFree(c) {
+					p.called = append(p.called, c)
+					p.taken = append(p.taken, c.box.grown(3*p.k))
+					return true
+				}
 			}
 		}
 	}
@@ -207,27 +222,27 @@ func (p *sectionPainter) placeCallout(w wanted, leads []lead) bool {
 func (p *sectionPainter) leadCost(l lead) float64 {
 	last := l.pts[len(l.pts)-1]
 	cost := p.edge.leave(last.X, last.Y, l.dx, l.dy) + 70*p.k*l.dy*l.dy
+	if l.dx < 0 {
+		cost += 8 * p.k
+	}
 	for i := 1; i < len(l.pts); i++ {
 		cost += between(l.pts[i-1], l.pts[i]) + 40*p.k
 	}
 	return cost
 }
 
-// fit puts a label at the end of a lead, gap pixels outside, if there is room for it there.
-func (p *sectionPainter) fit(w wanted, l lead, gap float64) (callout, bool) {
+// fits puts a label at the end of a lead, gap pixels outside: beside the end where the lead runs sideways, else on its line.
+func (p *sectionPainter) fits(w wanted, l lead, gap float64) []callout {
 	last := l.pts[len(l.pts)-1]
 	t := p.edge.leave(last.X, last.Y, l.dx, l.dy) + gap
 	x, y := last.X+t*l.dx, last.Y+t*l.dy
 	head, sub := p.calloutFonts(w.color)
-	width := max(p.c.MeasureText(w.head, head), p.c.MeasureText(w.sub, sub))
-	height := calloutLine * p.k
-	if w.sub != "" {
-		height *= 2
+	width := p.c.MeasureText(w.head, head)
+	for _, t := range w.sub {
+		width = max(width, p.c.MeasureText(t, sub))
 	}
-	// the middle of the box lies on the line, just far enough for the box to begin where the leader ends
-	reach := min(width/2/max(1e-9, math.Abs(l.dx)), height/2/max(1e-9, math.Abs(l.dy))) + 4*p.k
-	cx, cy := x+reach*l.dx, y+reach*l.dy
-	c := callout{head: w.head, sub: w.sub, color: w.color, box: box{cx - width/2, cy - height/2, cx + width/2, cy + height/2}, align: 0.5}
+	height := calloutLine * p.k * float64(1+len(w.sub))
+	c := callout{head: w.head, sub: w.sub, color: w.color, align: 0.5}
 	switch {
 	case l.dx > 0.25:
 		c.align = 0
@@ -235,7 +250,16 @@ func (p *sectionPainter) fit(w wanted, l lead, gap float64) (callout, bool) {
 		c.align = 1
 	}
 	c.path = append(append(c.path, l.pts...), section.Point{X: x, Y: y})
-	return c, p.calloutFree(c)
+	at := func(cx, cy float64) callout {
+		c.box = box{cx - width/2, cy - height/2, cx + width/2, cy + height/2}
+		return c
+	}
+	var out []callout
+	if math.Abs(l.dx) > 0.35 {
+		out = append(out, at(x+math.Copysign(width/2+4*p.k, l.dx), y+0.35*height*l.dy))
+	}
+	reach := min(width/2/max(1e-9, math.Abs(l.dx)), height/2/max(1e-9, math.Abs(l.dy))) + 4*p.k
+	return append(out, at(x+reach*l.dx, y+reach*l.dy))
 }
 
 func (p *sectionPainter) calloutFree(c callout) bool {
@@ -289,8 +313,9 @@ func (p *sectionPainter) drawCallout(c callout) {
 	head.AX, sub.AX = c.align, c.align
 	x, y := c.box.x0+c.align*(c.box.x1-c.box.x0), c.box.y0+calloutLine*p.k/2
 	p.write(c.head, x, y, head)
-	if c.sub != "" {
-		p.write(c.sub, x, y+calloutLine*p.k, sub)
+	for _, t := range c.sub {
+		y += calloutLine * p.k
+		p.write(t, x, y, sub)
 	}
 }
 

@@ -2,16 +2,33 @@ package render
 
 import "packrise/solver/section"
 
-// contour returns the lines where the grid has the value t, as polylines in pixels (marching squares: each cell's crossings are
-// joined, ambiguous saddles by the cell's mean). Cells with an unknown corner have none.
-func (g *tempGrid) contour(t float64) [][]section.Point {
-	c := &tracer{g: g, t: t, at: map[int]section.Point{}, next: map[int][]int{}}
+// contours returns for each value the lines where the grid has it, as polylines in pixels (marching squares: each cell's
+// crossings are joined, ambiguous saddles by the cell's mean). Cells with an unknown corner have none.
+func (g *tempGrid) contours(values []float64) [][][]section.Point {
+	tracers := make([]*tracer, len(values))
+	for i, t := range values {
+		tracers[i] = &tracer{g: g, t: t, at: map[int]section.Point{}, next: map[int][2]int{}}
+	}
 	for j := range g.ny - 1 {
 		for i := range g.nx - 1 {
-			c.cell(i, j)
+			n := j*g.nx + i
+			a, b, c, d := g.v[n], g.v[n+1], g.v[n+g.nx+1], g.v[n+g.nx]
+			lo, hi := min(a, b, c, d), max(a, b, c, d)
+			if lo != lo { // min and max of a NaN are NaN
+				continue
+			}
+			for k, t := range values {
+				if lo < t && t <= hi {
+					tracers[k].cell(i, j)
+				}
+			}
 		}
 	}
-	return c.chain()
+	out := make([][][]section.Point, len(values))
+	for i, c := range tracers {
+		out[i] = c.chain()
+	}
+	return out
 }
 
 // tracer collects crossings by the number of the grid edge they lie on: 2·node for the edge to the right of a node, 2·node + 1
@@ -20,8 +37,8 @@ type tracer struct {
 	g     *tempGrid
 	t     float64
 	at    map[int]section.Point
-	next  map[int][]int
-	order []int // edges as first met, so that the result does not hang on map order
+	next  map[int][2]int // the neighbours along the line, plus one; 0 for none
+	order []int          // edges as first met, so that the result does not hang on map order
 }
 
 func (c *tracer) cell(i, j int) {
@@ -32,9 +49,6 @@ func (c *tracer) cell(i, j int) {
 	k := 0
 	for e := range 4 {
 		a, b := v[e], v[(e+1)%4]
-		if a != a || b != b {
-			return
-		}
 		if (a < c.t) != (b < c.t) {
 			crossed[k] = e
 			k++
@@ -74,44 +88,55 @@ func (c *tracer) cross(id, i, j, e int, v [4]float64) {
 }
 
 func (c *tracer) join(a, b int) {
-	c.next[a] = append(c.next[a], b)
-	c.next[b] = append(c.next[b], a)
+	c.link(a, b)
+	c.link(b, a)
 }
 
-// chain walks the joined crossings into lines, open ones first.
+func (c *tracer) link(from, to int) {
+	n := c.next[from]
+	if n[0] == 0 {
+		n[0] = to + 1
+	} else {
+		n[1] = to + 1
+	}
+	c.next[from] = n
+}
+
+// chain walks the joined crossings into lines, open ones first so that each is walked from its end.
 func (c *tracer) chain() [][]section.Point {
 	var out [][]section.Point
-	done := map[int]bool{}
-	walk := func(from int) {
-		var line []section.Point
-		for e, ok := from, true; ok; {
-			done[e] = true
-			line = append(line, c.at[e])
-			ok = false
-			for _, n := range c.next[e] {
-				if !done[n] {
-					e, ok = n, true
-					break
-				}
-			}
-			if !ok && len(line) > 2 {
-				for _, n := range c.next[e] {
-					if n == from {
-						line = append(line, c.at[from])
-					}
-				}
-			}
-		}
-		if len(line) > 1 {
-			out = append(out, line)
-		}
-	}
-	for _, pass := range []int{1, 2} {
+	done := make(map[int]bool, len(c.order))
+	for _, open := range []bool{true, false} {
 		for _, e := range c.order {
-			if !done[e] && len(c.next[e]) <= pass {
-				walk(e)
+			if !done[e] && (c.next[e][1] == 0) == open {
+				if line := c.walk(e, done); len(line) > 1 {
+					out = append(out, line)
+				}
 			}
 		}
 	}
 	return out
+}
+
+// walk follows a line from one of its crossings to the end, or once round.
+func (c *tracer) walk(from int, done map[int]bool) []section.Point {
+	var line []section.Point
+	for e, ok := from, true; ok; {
+		done[e] = true
+		line = append(line, c.at[e])
+		ok = false
+		for _, n := range c.next[e] {
+			switch {
+			case n == 0:
+			case !done[n-1]:
+				e, ok = n-1, true
+			case n-1 == from && len(line) > 2:
+				line = append(line, c.at[from])
+			}
+			if ok {
+				break
+			}
+		}
+	}
+	return line
 }

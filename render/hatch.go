@@ -11,15 +11,17 @@ import (
 // span is a piece of a straight line, from a to b along it.
 type span struct{ a, b float64 }
 
-// hatching draws slanting lines over whatever is over its limit, so that this does not hang on a colour alone.
-func (p *sectionPainter) hatching() {
+// hatching draws slanting lines over whatever is over its limit, so that this does not hang on a colour alone, and tells
+// whether there was anything.
+func (p *sectionPainter) hatching() (any bool) {
 	if p.s.Stale {
-		return
+		return false
 	}
 	for _, s := range p.shapes {
 		if r, ok := p.read[s.ID]; !ok || !r.Over() || s.Unset {
 			continue
 		}
+		any = true
 		d := p.disc(s)
 		hole := 0.0
 		if w := wall(s); s.Kind == section.Cable && len(w) > 0 {
@@ -33,9 +35,11 @@ func (p *sectionPainter) hatching() {
 	}
 	for _, r := range p.s.Readings {
 		if r.Over() && r.Kind == "layer" {
+			any = true
 			p.hatchLayer(layerIndex(r.ID))
 		}
 	}
+	return any
 }
 
 // layerIndex returns which layer of the holder a reading "jacket", "jacket/2" … is of, from 0.

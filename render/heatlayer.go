@@ -202,15 +202,6 @@ func paintRow(pix, cover []uint8, nodes []float32, step int) {
 	}
 }
 
-// fade multiplies the four bytes of a word by c/255.
-func fade(word, c uint32) uint32 {
-	rb := (word & 0xff00ff) * c
-	ga := (word >> 8 & 0xff00ff) * c
-	rb = (rb + 0x800080 + (rb >> 8 & 0xff00ff)) >> 8 & 0xff00ff
-	ga = (ga + 0x800080 + (ga >> 8 & 0xff00ff)) >> 8 & 0xff00ff
-	return rb | ga<<8
-}
-
 // fillReadings paints every placed part in the colour of its reading.
 func fillReadings(img *image.RGBA, s Scene, v View, sc Scale) {
 	if len(s.Readings) == 0 {

@@ -27,9 +27,26 @@ func (p *sectionPainter) ids() {
 		if !ok {
 			continue
 		}
+		if t, ok := p.insideTemp(s, d); ok && x == d.x && y == d.y {
+			y -= 8 * p.k
+			g := Font{Size: 12 * p.k, AX: 0.5, AY: 0.5}
+			p.write(t, x, y+16*p.k, p.inkOn(s, g))
+		}
 		p.write(text, x, y, p.inkOn(s, f))
 		p.taken = append(p.taken, textBox(x, y, w, f))
 	}
+}
+
+// tempRoom is the diameter in pixels at device scale 1 from which a part that has no label outside also carries its temperature.
+const tempRoom = 76
+
+// insideTemp returns the temperature to write below a part's id.
+func (p *sectionPainter) insideTemp(s section.Shape, d disc) (string, bool) {
+	r, ok := p.read[s.ID]
+	if !ok || p.s.Stale || s.Unset || p.outside[s.ID] || 2*d.r < tempRoom*p.k || !finite(r.TempC) {
+		return "", false
+	}
+	return wholeC(r.TempC) + " °C", true
 }
 
 // inkOn gives the font the colours for writing inside a part.

@@ -36,9 +36,13 @@ func (p *sectionPainter) isotherms() []isoline {
 	for _, t := range p.limits() {
 		out = append(out, isoline{temp: t, limit: true})
 	}
+	values := make([]float64, len(out))
 	for i := range out {
+		values[i] = out[i].temp
+	}
+	for i, lines := range g.contours(values) {
 		l := &out[i]
-		l.lines = g.contour(l.temp)
+		l.lines = lines
 		pen := Pen{Width: p.k, Color: p.isoColor(l.temp)}
 		if l.limit {
 			pen = Pen{Width: 1.6 * p.k, Color: overOnMap, Dash: []float64{6 * p.k, 3 * p.k}}

@@ -54,7 +54,7 @@ func (l *ladder) layout() {
 
 // ticks returns the numbers on the axis.
 func (l *ladder) ticks() []float64 {
-	if !(l.sc.High > l.sc.Low) {
+	if !(l.sc.High > l.sc.Low) || !l.s.solved() {
 		return nil
 	}
 	return levels(l.sc.Low, l.sc.High, roundStep((l.sc.High-l.sc.Low)*30*l.k/(l.bottom-l.top)))
@@ -207,7 +207,12 @@ func (l *ladder) drawLimit(s step) {
 	l.c.Fill(col)
 	f := l.font()
 	f.Color, f.Bold = col, s.bold
-	l.c.Text(Elide(s.name, l.w-l.text-4*l.k, func(t string) float64 { return l.c.MeasureText(t, f) }), l.text, s.label, f)
+	room, measure := l.w-l.text-4*l.k, func(t string) float64 { return l.c.MeasureText(t, f) }
+	name := s.name
+	if measure(name) > room {
+		name = s.short
+	}
+	l.c.Text(Elide(name, room, measure), l.text, s.label, f)
 }
 
 // highlight puts the selection's wash behind a label, or a frame round the one pointed at.

@@ -1,32 +1,39 @@
 package render
 
 import (
+	"encoding/binary"
 	"image"
 	"image/color"
 	"math"
 )
 
-// source is a colour made ready for blending: its premultiplied bytes.
-type source struct{ r, g, b, a uint32 }
+// source is a colour made ready for blending: its premultiplied bytes in one word, red lowest, as image.RGBA has them.
+type source uint32
 
 func sourceOf(c color.NRGBA) source {
-	a := uint32(c.A)
-	return source{mul255(uint32(c.R), a), mul255(uint32(c.G), a), mul255(uint32(c.B), a), a}
-}
-
-func mul255(a, b uint32) uint32 {
-	t := a*b + 128
-	return (t + t>>8) >> 8
+	w := uint32(c.R) | uint32(c.G)<<8 | uint32(c.B)<<16 | 255<<24
+	return source(fade(w, uint32(c.A)))
 }
 
 // over lays the colour with coverage c (0 … 255) over four bytes.
 func (s source) over(p []uint8, c uint32) {
-	_ = p[3]
-	rest := 255 - mul255(s.a, c)
-	p[0] = uint8(mul255(s.r, c) + mul255(uint32(p[0]), rest))
-	p[1] = uint8(mul255(s.g, c) + mul255(uint32(p[1]), rest))
-	p[2] = uint8(mul255(s.b, c) + mul255(uint32(p[2]), rest))
-	p[3] = uint8(mul255(s.a, c) + mul255(uint32(p[3]), rest))
+	w := uint32(s)
+	if c != 255 {
+		w = fade(w, c)
+	}
+	if rest := 255 - w>>24; rest != 0 {
+		w += fade(binary.LittleEndian.Uint32(p), rest)
+	}
+	binary.LittleEndian.PutUint32(p, w)
+}
+
+// fade multiplies the four bytes of a word by c/255.
+func fade(word, c uint32) uint32 {
+	rb := (word & 0xff00ff) * c
+	ga := (word >> 8 & 0xff00ff) * c
+	rb = (rb + 0x800080 + (rb >> 8 & 0xff00ff)) >> 8 & 0xff00ff
+	ga = (ga + 0x800080 + (ga >> 8 & 0xff00ff)) >> 8 & 0xff00ff
+	return rb | ga<<8
 }
 
 // paintDisc fills a circle.

@@ -46,16 +46,16 @@ func alpha(c color.NRGBA, a float64) color.NRGBA {
 }
 
 var lightPalette = Palette{
-	Paper: rgb(0xfbf9f3), Sheet: rgb(0xfffefb), Panel: rgb(0xf3f0e7), Ink: rgb(0x1d1f23), Quiet: rgb(0x5f625f), Rule: rgb(0xd9d4c7),
-	Accent: rgb(0x14677a), Wash: rgb(0xe0eeef), Over: rgb(0xa8351f), Close: rgb(0x8a5a00), Within: rgb(0x2b6350),
+	Paper: rgb(0xfdfcf8), Sheet: rgb(0xffffff), Panel: rgb(0xf4f2ec), Ink: rgb(0x1c1d21), Quiet: rgb(0x67665f), Rule: rgb(0xe0ddd3),
+	Accent: rgb(0x1d6a75), Wash: rgb(0xe0eeef), Over: rgb(0xb0412a), Close: rgb(0x8a5a00), Within: rgb(0x1d6a75),
 	Line: rgb(0x1a1c20), Halo: rgb(0xffffff),
-	Metal: rgb(0xc9c2b4), Insulation: rgb(0xefece3), Wall: rgb(0xdcd7ca), Fill: rgb(0xf7f5ee),
+	Metal: rgb(0xc9c2b4), Insulation: rgb(0xefece3), Wall: rgb(0xdcd7ca), Fill: rgb(0xf8f6ef),
 	Veil: color.NRGBA{0xe8, 0xe5, 0xdc, 0xb0},
 }
 
 var darkPalette = Palette{
-	Paper: rgb(0x1b1d20), Sheet: rgb(0x212327), Panel: rgb(0x26292d), Ink: rgb(0xeceae4), Quiet: rgb(0xa5a59f), Rule: rgb(0x3b3e43),
-	Accent: rgb(0x5fb8c9), Wash: rgb(0x21393f), Over: rgb(0xf08a70), Close: rgb(0xe0b45a), Within: rgb(0x86c5ab),
+	Paper: rgb(0x1b1c1e), Sheet: rgb(0x212326), Panel: rgb(0x26282b), Ink: rgb(0xe9e7e1), Quiet: rgb(0xa6a49d), Rule: rgb(0x393b3f),
+	Accent: rgb(0x66bac4), Wash: rgb(0x21393f), Over: rgb(0xf0836c), Close: rgb(0xdca94b), Within: rgb(0x66bac4),
 	Line: rgb(0x14161a), Halo: rgb(0xf4f2ec),
 	Metal: rgb(0x8d897f), Insulation: rgb(0x5a5b5c), Wall: rgb(0x494b4e), Fill: rgb(0x2e3034),
 	Veil: color.NRGBA{0x2b, 0x2d, 0x31, 0xb0},

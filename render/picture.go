@@ -49,7 +49,7 @@ func Draw(c Canvas, s Scene, st Style) {
 	bottom := p.footer()
 	left, right := 0.0, w
 	if len(s.Notes) > 0 {
-		if w >= 980*k && (bottom-top) > 240*k {
+		if w*(1-0.26)-215*k > 1.2*(bottom-top) && w >= 980*k && bottom-top > 240*k {
 			right = p.notesBeside(top, bottom)
 		} else {
 			bottom = p.notesBelow(top, bottom)
@@ -100,7 +100,7 @@ func (p *page) sentence() string {
 		return "Not solved."
 	case t == "" && word != "":
 		return word + "."
-	case word != "" && !beginsWithWord(t, word):
+	case word != "" && !beginsWithWord(t, word): // something is over, and the sentence does not say so
 		return word + ". " + t
 	}
 	return t

@@ -22,10 +22,13 @@ func ScaleOf(s Scene) Scale {
 	if !finite(low) || !finite(high) {
 		return Scale{0, 100}
 	}
-	near := high + max(15, 0.6*(high-low))
 	top := high
 	for _, r := range s.Readings {
-		if r.LimitC.OK && r.LimitC.V <= near {
+		reach := 0.6
+		if r.Governs {
+			reach = 0.75
+		}
+		if r.LimitC.OK && r.LimitC.V <= high+max(15, reach*(high-low)) {
 			top = max(top, r.LimitC.V)
 		}
 	}

@@ -53,21 +53,23 @@ var stateWords = map[State]string{Within: "Within", Near: "Close", Over: "Over"}
 // Word returns the state's word as a sentence begins with it, "" for Unknown.
 func (t State) Word() string { return stateWords[t] }
 
-// StateOf returns the state that the readings and the sentence say: the worse of the two.
+// StateOf returns the state of a scene: Over as soon as any reading is, else what the sentence's first word says. A sentence that
+// begins with none of the words makes no claim, and neither does the picture.
 func StateOf(s Scene) State {
-	state := Unknown
+	state, limited := Unknown, false
 	for _, r := range s.Readings {
-		switch _, limited := r.MarginK(); {
-		case r.Over():
+		if r.Over() {
 			return Over
-		case limited:
-			state = Within
 		}
+		limited = limited || r.LimitC.OK
 	}
 	for t, w := range stateWords {
-		if t > state && beginsWithWord(s.Answer, w) {
-			state = t
+		if beginsWithWord(s.Answer, w) {
+			return t
 		}
+	}
+	if s.Answer == "" && limited {
+		state = Within
 	}
 	return state
 }

@@ -2,7 +2,6 @@ package render
 
 import (
 	"image/color"
-	"math"
 	"strings"
 
 	"packrise/solver/section"
@@ -15,13 +14,14 @@ func SectionLayer(c Canvas, s Scene, v View, sc Scale, st Style) {
 	p.fills()
 	p.veil()
 	lines := p.isotherms()
-	p.hatching()
+	hatched := p.hatching()
 	p.outlines()
 	p.marks()
 	bar := p.planScaleBar()
 	p.planCallouts()
 	p.ids()
 	p.drawScaleBar(bar)
+	p.key(bar, hatched, lines)
 	p.callouts()
 	p.isothermLabels(lines)
 }
@@ -159,154 +159,6 @@ func (p *sectionPainter) outlinePath() {
 			p.c.Circle(d.x, d.y, d.r)
 		}
 	}
-}
-
-// outlines draws all edges: a light halo first, so that they stand out from any colour of the map, then the line.
-func (p *sectionPainter) outlines() {
-	p.holderOutline()
-	for _, s := range p.shapes {
-		d := p.disc(s)
-		if !p.inSight(d) {
-			continue
-		}
-		fine := min(1, d.r/(10*p.k)) // small parts get finer lines
-		inner := Pen{Width: 0.9 * p.k * fine, Color: alpha(p.line(s), 0.75)}
-		last := d.r
-		for i := len(s.Rings) - 1; i >= 0; i-- {
-			if r := s.Rings[i].R0 * p.v.PxPerMM; r > 1.5*p.k && last-r > 1.5*p.k {
-				p.c.Circle(d.x, d.y, r)
-				p.c.Stroke(inner)
-				last = r
-			}
-		}
-		p.c.Circle(d.x, d.y, d.r)
-		p.c.Stroke(Pen{Width: 3.4 * p.k * fine, Color: p.halo(s)})
-		pen := Pen{Width: 1.4 * p.k * fine, Color: p.line(s)}
-		if s.Unset {
-			pen = Pen{Width: 1.3 * p.k * fine, Color: p.pal.Quiet, Dash: []float64{4 * p.k, 3 * p.k}}
-		}
-		p.c.Circle(d.x, d.y, d.r)
-		p.c.Stroke(pen)
-	}
-}
-
-// line and halo return the colours of a part's outline: dark on light over the map, the style's own without one.
-func (p *sectionPainter) line(s section.Shape) color.NRGBA {
-	if p.s.solved() && !s.Unset {
-		return p.pal.Line
-	}
-	return p.pal.Ink
-}
-
-func (p *sectionPainter) halo(s section.Shape) color.NRGBA {
-	if p.s.solved() && !s.Unset {
-		return alpha(p.pal.Halo, 0.8)
-	}
-	return alpha(p.pal.Paper, 0.8)
-}
-
-// holderOutline draws the outer surface and the wall's layers; an open bundle, which has no wall, gets a dashed circle.
-func (p *sectionPainter) holderOutline() {
-	if p.holder == nil {
-		return
-	}
-	halo := Pen{Width: 3.6 * p.k, Color: p.halo(*p.holder)}
-	pen := Pen{Width: 1.7 * p.k, Color: p.line(*p.holder)}
-	inner := Pen{Width: p.k, Color: alpha(p.line(*p.holder), 0.8)}
-	if p.holder.Kind == section.OpenBundle {
-		pen = Pen{Width: 1.5 * p.k, Color: p.pal.Ink, Dash: []float64{7 * p.k, 5 * p.k}}
-	}
-	switch e := p.edge; {
-	case e.rect != nil:
-		p.rectWall(*e.rect, inner)
-		for _, pen := range []Pen{halo, pen} {
-			rectangle(p.c, e.rect.x0, e.rect.y0, e.rect.x1-e.rect.x0, e.rect.y1-e.rect.y0)
-			p.c.Stroke(pen)
-		}
-	case e.round != nil:
-		last := e.round.r
-		for i := len(p.holder.Rings) - 1; i >= 0; i-- {
-			r := p.holder.Rings[i].R0 * p.v.PxPerMM
-			if r > 0 && last-r > 1.5*p.k {
-				p.c.Circle(e.round.x, e.round.y, r)
-				p.c.Stroke(inner)
-				last = r
-			}
-		}
-		for _, pen := range []Pen{halo, pen} {
-			p.c.Circle(e.round.x, e.round.y, e.round.r)
-			p.c.Stroke(pen)
-		}
-	}
-}
-
-// rectWall draws the inner faces of a rectangle's wall layers.
-func (p *sectionPainter) rectWall(b box, pen Pen) {
-	t := p.holder.OuterR()
-	last := 0.0
-	for i := len(p.holder.Rings) - 1; i >= 0; i-- {
-		in := (t - p.holder.Rings[i].R0) * p.v.PxPerMM
-		if in-last < 1.5*p.k {
-			continue
-		}
-		g := b.grown(-in)
-		rectangle(p.c, g.x0, g.y0, g.x1-g.x0, g.y1-g.y0)
-		p.c.Stroke(pen)
-		last = in
-	}
-}
-
-// marks lights up the part under the pointer, rings the selected ones and crosses the bad ones.
-func (p *sectionPainter) marks() {
-	for _, s := range p.shapes {
-		d := p.disc(s)
-		if s.ID == p.s.Pointed && p.s.Pointed != "" {
-			p.c.Circle(d.x, d.y, d.r)
-			p.c.Fill(alpha(p.pal.Halo, 0.3))
-			p.c.Circle(d.x, d.y, d.r)
-			p.c.Stroke(Pen{Width: 2.4 * p.k, Color: p.line(s)})
-		}
-	}
-	for _, s := range p.shapes {
-		d := p.disc(s)
-		if contains(p.s.Selected, s.ID) {
-			p.c.Circle(d.x, d.y, d.r+2.5*p.k)
-			p.c.Stroke(Pen{Width: 5.5 * p.k, Color: p.halo(s)})
-			p.c.Circle(d.x, d.y, d.r+2.5*p.k)
-			p.c.Stroke(Pen{Width: 3 * p.k, Color: p.pal.Accent})
-		}
-		if contains(p.s.Bad, s.ID) {
-			p.bad(d)
-		}
-	}
-}
-
-// bad marks a part that overlaps or lies outside: a dashed ring in the warning colour and a cross at its upper right.
-func (p *sectionPainter) bad(d disc) {
-	p.c.Circle(d.x, d.y, d.r)
-	p.c.Stroke(Pen{Width: 4.5 * p.k, Color: p.pal.Paper})
-	p.c.Circle(d.x, d.y, d.r)
-	p.c.Stroke(Pen{Width: 2.5 * p.k, Color: p.pal.Over, Dash: []float64{6 * p.k, 3 * p.k}})
-	x, y := d.x+d.r*math.Sqrt2/2, d.y-d.r*math.Sqrt2/2
-	p.c.Circle(x, y, 7*p.k)
-	p.c.Fill(p.pal.Paper)
-	p.c.Circle(x, y, 7*p.k)
-	p.c.Stroke(Pen{Width: 1.5 * p.k, Color: p.pal.Over})
-	a := 3 * p.k
-	p.c.MoveTo(x-a, y-a)
-	p.c.LineTo(x+a, y+a)
-	p.c.MoveTo(x-a, y+a)
-	p.c.LineTo(x+a, y-a)
-	p.c.Stroke(Pen{Width: 1.8 * p.k, Color: p.pal.Over, Round: true})
-}
-
-func contains(list []string, id string) bool {
-	for _, s := range list {
-		if s == id {
-			return true
-		}
-	}
-	return false
 }
 
 // shortID is what is written inside a part: the last step of a nested id.

@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"image/color"
 	"math"
+	"slices"
 	"sort"
 	"strconv"
 	"strings"
@@ -18,6 +19,7 @@ const mostGroups = 10
 type step struct {
 	ids       []string
 	name      string
+	short     string  // in its place where there is no room for it
 	temp      float64 // where it stands
 	low, high float64 // how far a folded group reaches
 	limit     bool
@@ -61,7 +63,7 @@ func (l *ladder) partSteps() (named, others []step) {
 		}
 		s := step{
 			ids: []string{r.ID}, name: r.ID, temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs,
-			selected: contains(l.s.Selected, r.ID), pointed: r.ID == l.s.Pointed,
+			selected: slices.Contains(l.s.Selected, r.ID), pointed: r.ID == l.s.Pointed,
 		}
 		if r.Over() {
 			s.color = l.pal.Over
@@ -169,8 +171,8 @@ func wallName(r section.Reading, s Scene) string {
 // limitSteps are the notches: one for every different limit, with what it belongs to when there are several.
 func (l *ladder) limitSteps() []step {
 	type notch struct {
-		ids  []string
-		over bool
+		ids           []string
+		over, governs bool
 	}
 	found := map[float64]*notch{}
 	var temps []float64
@@ -183,23 +185,25 @@ func (l *ladder) limitSteps() []step {
 			temps = append(temps, r.LimitC.V)
 		}
 		n := found[r.LimitC.V]
-		n.ids, n.over = append(n.ids, r.ID), n.over || r.Over()
+		n.ids, n.over, n.governs = append(n.ids, r.ID), n.over || r.Over(), n.governs || r.Governs
 	}
 	var out []step
 	for _, t := range temps {
 		n := found[t]
-		if l.sc.at(t) > 1.0001 || l.sc.at(t) < -0.0001 {
+		if l.sc.at(t) < -0.0001 || l.sc.at(t) > 1.0001 && !n.governs {
 			continue // beyond the scale: nothing on it is near that limit
 		}
-		name := "limit " + strings.TrimSuffix(degrees(t), "°")
-		if len(temps) > 1 {
-			if len(n.ids) == 1 {
-				name += " · " + n.ids[0]
-			} else {
-				name += fmt.Sprintf(" · %d parts", len(n.ids))
-			}
+		short := "limit " + wholeOrHalf(t)
+		if l.sc.at(t) > 1.0001 {
+			short += " ↑"
 		}
-		s := step{name: name, temp: t, low: t, high: t, limit: true, color: l.pal.Ink, bold: false}
+		name := short
+		if len(temps) > 1 && len(n.ids) == 1 {
+			name += " · " + n.ids[0]
+		} else if len(temps) > 1 {
+			name += fmt.Sprintf(" · %d parts", len(n.ids))
+		}
+		s := step{name: name, short: short, temp: t, low: t, high: t, limit: true, color: l.pal.Ink}
 		if n.over {
 			s.color = l.pal.Over
 		}

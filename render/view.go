@@ -53,24 +53,35 @@ func FitView(shapes []section.Shape, w, h int, st Style) View {
 	if b.empty() {
 		return v
 	}
-	left, right, top, bottom := fitMargins(float64(w), float64(h), st)
-	roomW, roomH := float64(w)-left-right, float64(h)-top-bottom
-	v.PxPerMM = min(roomW/max(b.x1-b.x0, 1e-6), roomH/max(b.y1-b.y0, 1e-6))
-	v.CX = (b.x0+b.x1)/2 - (left-right)/2/v.PxPerMM
-	v.CY = (b.y0+b.y1)/2 + (top-bottom)/2/v.PxPerMM
+	v.PxPerMM = 0
+	for _, m := range fitMargins(float64(w), float64(h), outlineOf(shapes).rect != nil, st) {
+		k := min((float64(w)-2*m.side)/max(b.x1-b.x0, 1e-6), (float64(h)-m.top-m.bottom)/max(b.y1-b.y0, 1e-6))
+		if k > v.PxPerMM {
+			v.PxPerMM, v.CX = k, (b.x0+b.x1)/2
+			v.CY = (b.y0+b.y1)/2 + (m.top-m.bottom)/2/k
+		}
+	}
 	return v
 }
 
-// fitMargins leaves room for labels at both sides and for the scale in mm below; small pictures give up labels first.
-func fitMargins(w, h float64, st Style) (left, right, top, bottom float64) {
+// margins is room in pixels left round the section.
+type margins struct{ side, top, bottom float64 }
+
+// fitMargins returns the ways to leave room for labels: at the sides, or above and below. Round sections leave their corners
+// free as well, so they need less. The scale in mm stands below at the left.
+func fitMargins(w, h float64, rect bool, st Style) []margins {
 	k := st.k()
-	side := min(132*k, max(8*k, w*0.2))
-	if w < 320*k {
-		side = max(4, min(8*k, w*0.03))
+	side, share := 84*k, 0.14
+	if rect {
+		side, share = 136*k, 0.2
 	}
-	top = min(30*k, h*0.07)
-	bottom = min(38*k, h*0.12)
-	return side, side, top, bottom
+	if w < 320*k {
+		share = 0.04
+	}
+	least := min(10*k, 0.05*w)
+	top, bottom := min(20*k, h*0.06), min(36*k, h*0.12)
+	high := min(64*k, h*0.16)
+	return []margins{{max(least, min(side, share*w)), top, bottom}, {least, high, high}}
 }
 
 // box is an upright rectangle, in mm or pixels.

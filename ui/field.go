@@ -2,6 +2,7 @@ package ui
 
 import (
 	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/container"
 	"fyne.io/fyne/v2/theme"
 	"fyne.io/fyne/v2/widget"
 )
@@ -18,8 +19,10 @@ type field struct {
 
 	label   *prose
 	entry   *fieldEntry
+	frame   fyne.CanvasObject // the entry with less padding
 	message *prose
-	moved   func() // the height may have changed
+	moved   func()       // the height may have changed
+	about   func(string) // what the entry takes, while it has the focus
 	width   float32
 }
 
@@ -27,7 +30,12 @@ func newField(k *Desk, in *input, moved func()) *field {
 	f := &field{label: newProse(k), message: newProse(k), entry: newFieldEntry(k, in), moved: moved}
 	f.message.size = smallText(f.message)
 	f.entry.say = f.say
-	f.entry.after = nil
+	f.entry.about = func(text string) {
+		if f.about != nil {
+			f.about(text)
+		}
+	}
+	f.frame = container.NewThemeOverride(f.entry, denseTheme{fieldPad})
 	f.ExtendBaseWidget(f)
 	f.show(in)
 	return f
@@ -41,7 +49,11 @@ func smallText(w fyne.Widget) func() float32 {
 // show puts an input into the field, for other parts or as it stands now.
 func (f *field) show(in *input) {
 	f.entry.show(in)
-	f.label.say(run{text: in.label, tone: quiet})
+	label := in.label
+	if in.unit != "" {
+		label += ", " + in.unit
+	}
+	f.label.say(run{text: label, tone: quiet})
 }
 
 // say writes below the entry.
@@ -72,9 +84,9 @@ func (f *field) columns(width float32) (label, entry float32) {
 func (f *field) heightFor(width float32) float32 {
 	f.width = width
 	label, entry := f.columns(width)
-	h := max(f.label.heightFor(label), f.entry.MinSize().Height)
+	h := max(f.label.heightFor(label), f.frame.MinSize().Height)
 	if label == width {
-		h = f.label.heightFor(label) + f.entry.MinSize().Height
+		h = f.label.heightFor(label) + f.frame.MinSize().Height
 	}
 	if len(f.message.runs) > 0 {
 		h += f.message.heightFor(entry) + proseLeading
@@ -90,7 +102,7 @@ func (f *field) MinSize() fyne.Size {
 
 // CreateRenderer lays label, entry and message out.
 func (f *field) CreateRenderer() fyne.WidgetRenderer {
-	return widget.NewSimpleRenderer(&fyne.Container{Layout: fieldLayout{f}, Objects: []fyne.CanvasObject{f.label, f.entry, f.message}})
+	return widget.NewSimpleRenderer(&fyne.Container{Layout: fieldLayout{f}, Objects: []fyne.CanvasObject{f.label, f.frame, f.message}})
 }
 
 type fieldLayout struct{ f *field }
@@ -101,7 +113,7 @@ func (l fieldLayout) Layout(_ []fyne.CanvasObject, s fyne.Size) {
 	f := l.f
 	f.heightFor(s.Width)
 	label, entry := f.columns(s.Width)
-	tall := f.entry.MinSize().Height
+	tall := f.frame.MinSize().Height
 	at := fyne.NewPos(s.Width-entry, 0)
 	high := f.label.heightFor(label)
 	if label == s.Width {
@@ -111,8 +123,8 @@ func (l fieldLayout) Layout(_ []fyne.CanvasObject, s fyne.Size) {
 		f.label.Move(fyne.NewPos(0, max(0, (tall-high)/2)))
 	}
 	f.label.Resize(fyne.NewSize(label, high))
-	f.entry.Move(at)
-	f.entry.Resize(fyne.NewSize(entry, tall))
+	f.frame.Move(at)
+	f.frame.Resize(fyne.NewSize(entry, tall))
 	f.message.Move(at.AddXY(0, tall+proseLeading/2))
 	f.message.Resize(fyne.NewSize(entry, f.message.heightFor(entry)))
 }

@@ -25,7 +25,7 @@ func sizeInput(k *Desk, ids []string) *input {
 		s, err := quantity.ParseSize(first.Conductor.Size)
 		american = err == nil && s.Kind() != quantity.MM2
 	}
-	in := input{key: "size", label: "Size", about: "AWG, kcmil or mm² of metal; ⌀ 3.2 mm for a conductor of that diameter"}
+	in := input{key: "size", label: "Size", about: "AWG, kcmil or mm² of metal, or ⌀ 3.2 mm for a conductor of that diameter."}
 	for _, s := range cat.Sizes(american) {
 		in.choices = append(in.choices, prettySize(s))
 	}
@@ -71,7 +71,7 @@ func metalInput(k *Desk, ids []string) *input {
 }
 
 func strandInput(k *Desk, ids []string) *input {
-	return conductorWordInput(k, ids, input{key: "class", label: "Strands", about: "IEC 60228 class 1 solid, 2 stranded, 5 flexible"},
+	return conductorWordInput(k, ids, input{key: "class", label: "Strands", about: "Class 1 (solid), 2 (stranded) or 5 (flexible) of IEC 60228."},
 		[]string{section.Stranded, section.Flexible, section.Solid}, func(c *section.Conductor) *string { return &c.Class })
 }
 
@@ -123,7 +123,7 @@ func oneOf(text string, words []string) (string, error) {
 // typeInput is the wire type, which sets the limit and the insulation.
 func typeInput(k *Desk, ids []string) *input {
 	cat := k.Catalog()
-	in := input{key: "type", label: "Wire type", hint: "none", about: "sets the temperature limit, dry or wet"}
+	in := input{key: "type", label: "Wire type", hint: "none", about: "Sets the temperature limit, dry or wet, and the insulation."}
 	for _, t := range cat.WireTypes() {
 		in.choices = append(in.choices, t.Name)
 	}
@@ -184,7 +184,7 @@ func degreesC(c float64) string { return withUnit(written(c), "°C") }
 
 // limitInput is a limit that a person sets in place of the type's or the material's.
 func limitInput(k *Desk, ids []string) *input {
-	in := input{key: "limit", label: "Limit", unit: "°C", hint: limitHint(k, ids), about: "°C or °F; empty: the wire type's, else the lowest of its materials"}
+	in := input{key: "limit", label: "Limit", unit: "°C", hint: limitHint(k, ids), about: "In °C or °F. Empty: the limit of the wire type, else the lowest of its materials."}
 	return partInput(k, ids, in, func(p section.Part) string { return optText(p.LimitC) },
 		func(text string) (string, func(section.Part) (section.Part, error), error) {
 			v, meant, err := readOptTemperature(text, "from type and material")
@@ -231,7 +231,7 @@ func readOptTemperature(text, otherwise string) (section.Opt[float64], string, e
 // roleInput is a conductor's role.
 func roleInput(k *Desk, ids []string) *input {
 	words := []string{section.RoleLine, section.RoleNeutral, section.RoleEarth, section.RoleControl, section.RoleSpare}
-	in := input{key: "role", label: "Role", choices: words, about: "an earth needs no load"}
+	in := input{key: "role", label: "Role", choices: words, about: "What the conductor is for; an earth needs no load."}
 	return partInput(k, ids, in, func(p section.Part) string { return orWord(p.Role, section.RoleLine) },
 		func(text string) (string, func(section.Part) (section.Part, error), error) {
 			w, err := oneOf(text, words)

@@ -40,7 +40,7 @@ func loadShown(l *section.Load) string {
 func currentInput(k *Desk, ids []string) *input {
 	d := k.Document()
 	in := &input{key: "current", label: "Current", unit: "A", hint: unknownWord, on: strings.Join(ids, " ")}
-	in.about = "r.m.s. in each conductor; 0 is idle, empty is unknown and never read as 0; 5 W/m is a fixed heat"
+	in.about = "Effective value (r.m.s.) in each conductor. 0 is idle; empty is unknown and never read as 0; 5 W/m is a fixed heat."
 	var who, loads []string
 	for i, id := range ids {
 		l := section.LoadOf(d, id)
@@ -108,26 +108,8 @@ func setCurrent(a section.Opt[float64]) func(*section.Document, string) *section
 	return func(d *section.Document, id string) *section.Document { return section.SetCurrent(d, id, a) }
 }
 
-// setHeat gives the conductor's load a fixed heat per metre in place of a current.
 func setHeat(w float64) func(*section.Document, string) *section.Document {
-	return func(d *section.Document, id string) *section.Document {
-		if section.LoadOf(d, id) == nil {
-			d = section.SetCurrent(d, id, section.Opt[float64]{})
-		}
-		l := section.LoadOf(d, id)
-		if l == nil {
-			return d
-		}
-		load := l.ID
-		return d.With(func(d *section.Document) {
-			d.Loads = slices.Clone(d.Loads)
-			for i := range d.Loads {
-				if m := &d.Loads[i]; m.ID == load {
-					m.CurrentA, m.Unknown, m.HeatWM = section.Opt[float64]{}, false, section.Some(w)
-				}
-			}
-		})
-	}
+	return func(d *section.Document, id string) *section.Document { return section.SetHeat(d, id, w) }
 }
 
 // circuitInput is the load that conductors belong to.
@@ -135,7 +117,7 @@ func circuitInput(k *Desk, ids []string) *input {
 	d := k.Document()
 	in := &input{
 		key: "circuit", label: "Circuit", hint: "in no load", on: strings.Join(ids, " "), step: "circuit of " + someIDs(ids, 3),
-		about: "conductors of one circuit carry the same current; a new name begins a new circuit",
+		about: "Conductors of one circuit carry the same current; a new name begins a new circuit.",
 	}
 	for i, id := range ids {
 		t := ""

@@ -15,6 +15,7 @@ type fieldEntry struct {
 	desk   *Desk
 	say    func(understood string, err error) // beside the entry, while typing
 	after  func(how fieldEnd)                 // editing has ended; nil: the entry stays
+	about  func(text string)                  // what the entry takes, while it has the focus
 	ending bool
 	menu   *widget.PopUpMenu
 }
@@ -102,6 +103,9 @@ func (e *fieldEntry) finish(how fieldEnd) {
 // FocusLost commits, except to the entry's own menu.
 func (e *fieldEntry) FocusLost() {
 	e.Entry.FocusLost()
+	if e.about != nil {
+		e.about("")
+	}
 	if e.menu == nil {
 		e.finish(fieldLeft)
 	}
@@ -110,6 +114,9 @@ func (e *fieldEntry) FocusLost() {
 // FocusGained selects the whole text, so that typing replaces it.
 func (e *fieldEntry) FocusGained() {
 	e.Entry.FocusGained()
+	if e.about != nil {
+		e.about(e.in.about)
+	}
 	e.TypedShortcut(&fyne.ShortcutSelectAll{})
 }
 

@@ -41,7 +41,7 @@ func layerMaterial(k *Desk, label string, i int) layerField {
 	return layerField{
 		in: input{
 			key: "material" + strconv.Itoa(i), label: label, hint: "such as pvc 0.8", choices: materialNames(cat, d),
-			about: "a material, or all layers from the inside outwards: pvc 0.48 + pa 0.1; none takes them off",
+			about: "A material, or all layers from the inside outwards, such as pvc 0.48 + pa 0.1; none takes them off.",
 		},
 		text: func(l []section.Layer) string {
 			if i < len(l) {
@@ -72,7 +72,7 @@ var errThin = errors.New("a layer is thicker than nothing; write its thickness i
 // layerThickness is the thickness of layer i.
 func layerThickness(label string, i int) layerField {
 	return layerField{
-		in: input{key: "thickness" + strconv.Itoa(i), label: label + " thickness", unit: "mm", about: "mm, mil or in"},
+		in: input{key: "thickness" + strconv.Itoa(i), label: label + " thickness", unit: "mm", about: "In mm, mil or inches."},
 		text: func(l []section.Layer) string {
 			if i < len(l) {
 				return written(l[i].ThicknessMM)

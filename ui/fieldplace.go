@@ -24,7 +24,7 @@ func idInput(k *Desk, id string) *input {
 			return "", nil, fmt.Errorf("%s is there already; write another id, such as %s", text, section.FreshID(d, stemOf(text)))
 		}
 		in.then = func() { k.Select(text) }
-		return text, func(d *section.Document) *section.Document { return renamed(d, id, text) }, nil
+		return text, func(d *section.Document) *section.Document { return section.RenamePart(d, id, text) }, nil
 	}
 	return in
 }
@@ -46,7 +46,7 @@ func placeInputs(k *Desk, ids []string) []*input {
 }
 
 func placeInput(k *Desk, ids []string, axis string, of func(*section.Point) *float64) *input {
-	in := input{key: axis, label: "Place " + axis, unit: "mm", hint: "not placed", about: "mm or in, from the centre of a round holder or the lower left inside corner; x to the right, y up"}
+	in := input{key: axis, label: "Place " + axis, unit: "mm", hint: "not placed", about: "In mm or inches from the middle of a round holder, or from the lower left inside corner; x to the right, y up."}
 	return partInput(k, ids, in,
 		func(p section.Part) string {
 			if !p.At.OK {
@@ -71,9 +71,9 @@ func placeInput(k *Desk, ids []string, axis string, of func(*section.Point) *flo
 // rodInputs are the inputs of rods beside their place.
 func rodInputs(k *Desk, ids []string) []*input {
 	cat, d := k.Catalog(), k.Document()
-	diameter := lengthInput(k, ids, input{key: "diameter", label: "Diameter", unit: "mm", about: "over the material, under any covering"}, false,
+	diameter := lengthInput(k, ids, input{key: "diameter", label: "Diameter", unit: "mm", about: "Over the material, under any covering; in mm or inches."}, false,
 		func(p *section.Part) *section.Opt[float64] { return &p.Diameter })
-	bore := lengthInput(k, ids, input{key: "bore", label: "Bore", unit: "mm", hint: "none", about: "of a hose; empty: a solid rod"}, true,
+	bore := lengthInput(k, ids, input{key: "bore", label: "Bore", unit: "mm", hint: "none", about: "Of a hose, in mm or inches; empty: a solid rod."}, true,
 		func(p *section.Part) *section.Opt[float64] { return &p.BoreMM })
 	material := partInput(k, ids, input{key: "rodmaterial", label: "Material", choices: materialNames(cat, d)},
 		func(p section.Part) string { return materialName(cat, p.Material) },
@@ -111,7 +111,7 @@ func readOptLength(text string, optional bool) (section.Opt[float64], string, er
 
 // cableInputs are the inputs of cables beside their place.
 func cableInputs(k *Desk, ids []string) []*input {
-	turn := partInput(k, ids, input{key: "turn", label: "Turn", unit: "°", hint: "0", about: "degrees counterclockwise"},
+	turn := partInput(k, ids, input{key: "turn", label: "Turn", unit: "°", hint: "0", about: "In degrees, counterclockwise."},
 		func(p section.Part) string { return optText(p.TurnDeg) },
 		func(text string) (string, func(section.Part) (section.Part, error), error) {
 			text = strings.TrimSuffix(strings.TrimSpace(text), "°")

@@ -37,6 +37,7 @@ type prose struct {
 	size   func() float32 // of the text
 	desk   *Desk          // for inputs
 	moved  func()         // the height may have changed
+	about  func(string)   // what the input being edited takes
 	width  float32        // for which pieces are laid out
 	pieces []piece
 	height float32
@@ -195,6 +196,7 @@ func (p *prose) edit(i int) {
 		}
 		p.relay()
 	}
+	e.about = p.about
 	e.after = func(fieldEnd) {
 		p.editing, p.entry, p.message = -1, nil, ""
 		if c := fyne.CurrentApp().Driver().CanvasForObject(p); c != nil && c.Focused() == fyne.Focusable(e) {

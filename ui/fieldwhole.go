@@ -48,9 +48,9 @@ func titleInput(k *Desk) *input {
 
 // ambientInput is the temperature of the surroundings, far away.
 func ambientInput(k *Desk) *input {
-	in := input{key: "ambient", label: "Ambient", unit: "°C", text: optText(k.Document().Surroundings.AmbientC), about: "°C or °F, of the surroundings far away"}
+	in := input{key: "ambient", label: "Ambient", unit: "°C", text: optText(k.Document().Surroundings.AmbientC), about: "In °C or °F, of the surroundings far away."}
 	if k.Document().Surroundings.Kind == section.FixedWall {
-		in.label, in.about = "Outside at", "°C or °F: the outer surface is held at it"
+		in.label, in.about = "Outside at", "In °C or °F: the outer surface is held at it."
 	}
 	in.missing = in.text == ""
 	return wholeInput(in, func(text string) (string, func(*section.Document), error) {
@@ -63,7 +63,7 @@ func ambientInput(k *Desk) *input {
 func filmInput(k *Desk) *input {
 	in := input{
 		key: "film", label: "Film", unit: "W/m²K", text: optText(k.Document().Surroundings.FilmWM2K),
-		about: "heat given off per m² of outer surface and kelvin, radiation included; 5 to 15 in still air",
+		about: "Heat that a square metre of the outer surface gives off for each kelvin, radiation included.",
 	}
 	return wholeInput(in, func(text string) (string, func(*section.Document), error) {
 		v, err := quantity.ParseNumber(strings.TrimSpace(strings.TrimSuffix(strings.TrimSpace(text), "W/m²K")))
@@ -88,7 +88,7 @@ func holderWord(kind string) string {
 // holderInput is the holder's trade size.
 func holderInput(k *Desk) *input {
 	cat, now := k.Catalog(), k.Document().Holder
-	in := input{key: "holder", label: upperFirst(holderWord(now.Kind)), hint: "own size", text: now.Stock, about: "a trade or metric size of the catalogue; empty: its own size and wall"}
+	in := input{key: "holder", label: upperFirst(holderWord(now.Kind)), hint: "own size", text: now.Stock, about: "A trade or metric size of the catalogue; empty: its own size and wall."}
 	for _, h := range cat.Holders() {
 		if h.ID == now.Stock {
 			in.text = h.Name
@@ -111,7 +111,7 @@ func holderInput(k *Desk) *input {
 func holderSizeInputs(k *Desk) []*input {
 	h := spelledHolder(k.Catalog(), k.Document().Holder)
 	one := func(key, label string, of func(*section.Holder) *section.Opt[float64]) *input {
-		in := input{key: key, label: label, unit: "mm", text: optText(*of(&h)), about: "clear inside, in mm or in"}
+		in := input{key: key, label: label, unit: "mm", text: optText(*of(&h)), about: "Clear inside, in mm or inches."}
 		return wholeInput(in, func(text string) (string, func(*section.Document), error) {
 			v, meant, err := readOptLength(text, false)
 			return meant, func(d *section.Document) {
@@ -132,7 +132,7 @@ func holderSizeInputs(k *Desk) []*input {
 // fillInput is the medium between the parts.
 func fillInput(k *Desk) *input {
 	cat, d := k.Catalog(), k.Document()
-	in := input{key: "fill", label: "Fill", text: "air", choices: append([]string{"air"}, materialNames(cat, d)...), about: "what is between the parts: air, or a filler"}
+	in := input{key: "fill", label: "Fill", text: "air", choices: append([]string{"air"}, materialNames(cat, d)...), about: "What is between the parts: air, or a filler."}
 	if f := d.Holder.Fill; f != "" && f != "air" {
 		in.text = materialName(cat, f)
 	}

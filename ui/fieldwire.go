@@ -46,7 +46,7 @@ func spelled(cat *catalog.Catalog, p section.Part) section.Part {
 	if p.Type == "" {
 		p.Type = w.Type
 	}
-	if c, err := conductorOf(cat, p.Conductor); err == nil && len(p.Layers) == 0 {
+	if c, err := conductorOf(cat, p.Conductor); err == nil && len(p.Layers) == 0 && w.DiameterM > c.DiameterM {
 		p.Layers = []section.Layer{{Material: w.Insulation, ThicknessMM: micrometres((w.DiameterM - c.DiameterM) / 2 * 1e3)}}
 	}
 	return p
@@ -62,10 +62,7 @@ func stocked(cat *catalog.Catalog, c *section.Conductor, typ string) string {
 		return ""
 	}
 	for _, w := range cat.Wires() {
-		if w.Type != typ || w.Metal != want.Metal || w.Class != want.Class {
-			continue
-		}
-		if got, err := cat.Conductor(w.Size, w.Metal, w.Class); err == nil && got.Size == want.Size {
+		if w.Type == typ && w.Metal == want.Metal && w.Class == want.Class && w.Size == want.Size {
 			return w.ID
 		}
 	}

@@ -1,14 +1,159 @@
-// Command packrise opens the window.
+// Command packrise opens the window on a design: how hot does each run of a packed section get, which one governs, and by how much. Without a
+// display it solves the demo and writes its picture.
 package main
 
 import (
+	"context"
+	"errors"
+	"fmt"
+	"io"
+	"os"
+	"path/filepath"
+	"runtime/debug"
+	"strings"
+
+	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/app"
-	"fyne.io/fyne/v2/widget"
+
+	"packrise/solver/catalog"
+	"packrise/solver/section"
+	"packrise/ui"
 )
 
-func main() {
-	a := app.NewWithID("app.packrise")
-	w := a.NewWindow("Packrise")
-	w.SetContent(widget.NewLabel(""))
+const help = `packrise – how hot each run of a packed section gets, and which one governs
+
+  packrise            open the window on a demo design
+  packrise FILE       open the window on a design (.yaml)
+  packrise --version  print the version
+  packrise --help     print this
+
+Without a display the design is solved and its picture is written into the current folder. For scripts there is packrise-cli.
+`
+
+func main() { os.Exit(run(os.Args[1:], os.Stdout, os.Stderr)) }
+
+// run is the program; it returns the exit status: 0 done, 2 the input is wrong, 3 the program failed.
+func run(args []string, out, errs io.Writer) int {
+	path := ""
+	for _, a := range args {
+		switch {
+		case a == "--help" || a == "-h":
+			fmt.Fprint(out, help)
+			return 0
+		case a == "--version":
+			fmt.Fprintln(out, "packrise", version())
+			return 0
+		case strings.HasPrefix(a, "-") || path != "":
+			fmt.Fprintf(errs, "packrise: %q is one too many; write packrise FILE, or packrise --help\n", a)
+			return 2
+		default:
+			path = a
+		}
+	}
+	d, warnings, status := begin(path, errs)
+	if d == nil {
+		return status
+	}
+	cat := catalog.Load()
+	if os.Getenv("DISPLAY") == "" && os.Getenv("WAYLAND_DISPLAY") == "" {
+		return withoutDisplay(cat, d, path, out, errs)
+	}
+	quietLocale()
+	w := ui.NewWindow(newApp(), ui.Options{
+		Catalog: cat, Document: d, Path: path, Warnings: warnings, Version: version(), Trace: trace(),
+	})
 	w.ShowAndRun()
+	return 0
+}
+
+// begin reads the design that the window opens on: the file, or a demo.
+func begin(path string, errs io.Writer) (*section.Document, []section.Problem, int) {
+	if path == "" {
+		d, err := ui.FirstDesign()
+		if err != nil {
+			fmt.Fprintln(errs, "packrise:", err)
+			return nil, nil, 3
+		}
+		return d, nil, 0
+	}
+	d, problems, err := section.Open(path)
+	if err != nil {
+		fmt.Fprintln(errs, "packrise:", err)
+		return nil, nil, 2
+	}
+	if d == nil {
+		for i, p := range problems {
+			if i == 50 {
+				fmt.Fprintf(errs, "… and %d more\n", len(problems)-i)
+				break
+			}
+			fmt.Fprintln(errs, p.At(path))
+		}
+		return nil, nil, 2
+	}
+	return d, problems, 0
+}
+
+// withoutDisplay solves the design by the same engine and writes its picture.
+func withoutDisplay(cat *catalog.Catalog, d *section.Document, path string, out, errs io.Writer) int {
+	fmt.Fprintln(out, "packrise: there is no display (DISPLAY is not set), so the picture goes into a file")
+	name := "packrise-demo.png"
+	if path != "" {
+		name = strings.TrimSuffix(filepath.Base(path), filepath.Ext(path)) + ".png"
+	}
+	answer, problems, err := ui.Picture(context.Background(), cat, d, name)
+	if errors.Is(err, ui.ErrRefused) {
+		for _, p := range problems {
+			fmt.Fprintln(errs, p.At(path))
+		}
+		return 2
+	}
+	if err != nil {
+		fmt.Fprintln(errs, "packrise:", err)
+		return 3
+	}
+	full, err := filepath.Abs(name)
+	if err != nil {
+		full = name
+	}
+	fmt.Fprintf(out, "%s\n%s\n", answer, full)
+	return 0
+}
+
+// trace is where lines for scripts go, nil unless the environment asks for them.
+func trace() io.Writer {
+	if os.Getenv("PACKRISE_TRACE") == "" {
+		return nil
+	}
+	return os.Stderr
+}
+
+// quietLocale gives the toolkit a locale that it can read where there is none worth the name.
+func quietLocale() {
+	for _, v := range []string{"LC_ALL", "LANG"} {
+		if s := os.Getenv(v); s == "C" || s == "POSIX" || strings.HasPrefix(s, "C.") {
+			os.Setenv(v, "en_US.UTF-8")
+		}
+	}
+	if os.Getenv("LC_ALL") == "" && os.Getenv("LANG") == "" {
+		os.Setenv("LANG", "en_US.UTF-8")
+	}
+}
+
+func newApp() fyne.App {
+	app.SetMetadata(fyne.AppMetadata{ID: "app.packrise", Name: "Packrise", Version: version(), Icon: ui.Icon()})
+	a := app.NewWithID("app.packrise")
+	if icon := ui.Icon(); icon != nil {
+		a.SetIcon(icon)
+	}
+	return a
+}
+
+// version is what the build says of itself.
+func version() string {
+	info, ok := debug.ReadBuildInfo()
+	if !ok || info.Main.Version == "" || info.Main.Version == "(devel)" {
+		return "development"
+	}
+	return info.Main.Version
 }

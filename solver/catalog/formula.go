@@ -9,13 +9,8 @@ import (
 
 // formula makes a conductor that no table lists.
 type formula struct {
-	Classes map[string]struct {
-		Fill       float64 `yaml:"fill"`       // metal area / area of the circle over the strands
-		Resistance float64 `yaml:"resistance"` // resistance / (resistivity / area)
-		Strands    float64 `yaml:"strands"`    // number of strands, or
-		StrandMM   float64 `yaml:"strand_mm"`  // diameter of one
-	} `yaml:"classes"`
-	Rope struct {
+	Classes map[string]formulaClass `yaml:"classes"`
+	Rope    struct {
 		OverMM2    float64 `yaml:"over_mm2"`
 		Resistance float64 `yaml:"resistance"`
 		StrandMM   float64 `yaml:"strand_mm"`
@@ -25,6 +20,13 @@ type formula struct {
 		Factor float64 `yaml:"factor"`
 	} `yaml:"coating"`
 	Source sourceRow `yaml:"source"`
+}
+
+type formulaClass struct {
+	Fill       float64 `yaml:"fill"`       // metal area / area of the circle over the strands
+	Resistance float64 `yaml:"resistance"` // resistance / (resistivity / area)
+	Strands    float64 `yaml:"strands"`    // number of strands, or
+	StrandMM   float64 `yaml:"strand_mm"`  // diameter of one
 }
 
 func (f *formula) check() error {

@@ -17,9 +17,6 @@ type Tree struct {
 	cloud *Cloud
 	r     []float64 // radii as drawn: no medium inside
 	cells []cell
-	side  float64
-	mid   complex128
-	more  func(at complex128, r float64, b []complex128) bool
 }
 
 // cell is a square; leaves have no kids.
@@ -28,16 +25,14 @@ type cell struct {
 	half   float64
 	kids   int32 // index of the first of four, 0 for a leaf
 	solid  int32 // 1 + the disc that covers the cell, 0 if none does
-	direct bool  // more could not be expanded here
 	near   []int32
 	images []int32
 	b      [treeOrder + 1]complex128
 }
 
-// NewTree covers the square of half-side side about mid. drawn are the discs' radii as drawn, at least those of the cloud. more, unless nil, adds the
-// expansion of a further field about a cell and reports whether it could.
-func NewTree(c *Cloud, drawn []float64, mid complex128, side float64, more func(at complex128, r float64, b []complex128) bool) *Tree {
-	t := &Tree{cloud: c, r: drawn, side: side, mid: mid, more: more}
+// NewTree covers the square of half-side side about mid. drawn are the discs' radii as drawn, at least those of the cloud.
+func NewTree(c *Cloud, drawn []float64, mid complex128, side float64) *Tree {
+	t := &Tree{cloud: c, r: drawn}
 	root := cell{mid: mid, half: side}
 	for j := range c.D {
 		root.near = append(root.near, int32(j))
@@ -127,9 +122,6 @@ func (t *Tree) finish(c *cell) {
 	if len(t.cloud.B) > 0 && size(c.mid) < t.cloud.Circle.R+rho {
 		t.cloud.shifted(c.mid, rho, c.b[:])
 	}
-	if t.more != nil {
-		c.direct = !t.more(c.mid, rho, c.b[:])
-	}
 }
 
 // shift writes to dst the expansion src re-expanded about a centre moved by d, in units of the old radius, for a radius f times the old.
@@ -163,17 +155,16 @@ func (t *Tree) leaf(z complex128) *cell {
 	return c
 }
 
-// At returns the medium's temperature at z without the further field where that could not be expanded (direct), or the disc that z lies in, −1 if
-// none.
-func (t *Tree) At(z complex128) (temp float64, disc int, direct bool) {
+// At returns the medium's temperature at z, or the disc that z lies in, −1 if none.
+func (t *Tree) At(z complex128) (temp float64, disc int) {
 	c := t.leaf(z)
 	if c.solid > 0 {
-		return 0, int(c.solid) - 1, false
+		return 0, int(c.solid) - 1
 	}
 	for _, j := range c.near {
 		v := z - t.cloud.C[j]
 		if real(v)*real(v)+imag(v)*imag(v) <= t.r[j]*t.r[j] {
-			return 0, int(j), false
+			return 0, int(j)
 		}
 	}
 	w := scale(1/(math.Sqrt2*c.half), z-c.mid)
@@ -184,5 +175,5 @@ func (t *Tree) At(z complex128) (temp float64, disc int, direct bool) {
 	for _, j := range c.images {
 		temp += t.cloud.image(int(j), z)
 	}
-	return temp, -1, c.direct
+	return temp, -1
 }

@@ -10,7 +10,7 @@ import (
 func TestTreeIsTheCloud(t *testing.T) {
 	r := rand.New(rand.NewPCG(6, 6))
 	c := randomCloud(r, -0.7, []float64{0.3, -0.2, 0.1, 0.05})
-	tree := NewTree(c, c.A, 0, 10, nil)
+	tree := NewTree(c, c.A, 0, 10)
 	worst := 0.0
 	for range 4000 {
 		z := complex(20*r.Float64()-10, 20*r.Float64()-10)
@@ -23,7 +23,7 @@ func TestTreeIsTheCloud(t *testing.T) {
 				in = j
 			}
 		}
-		got, disc, _ := tree.At(z)
+		got, disc := tree.At(z)
 		if disc != in {
 			t.Fatalf("%v lies in disc %d, not %d", z, in, disc)
 		}

@@ -5,6 +5,7 @@ import (
 	"sync"
 
 	"packrise/solver/harmonic"
+	"packrise/solver/outline"
 )
 
 // field is the temperature of a solved section. Its look-up tables are made by the first point that is asked for.
@@ -25,8 +26,9 @@ func (f *field) Row(dst []float64, y, x0, dx float64) {
 type charts struct {
 	once   sync.Once
 	tree   *harmonic.Tree
-	layers []layers // per piece
-	wall   layers
+	layers []layers       // per piece
+	wall   layers         // round
+	rect   *outline.Field // rectangle
 }
 
 // layers are the waves in the rings of a piece or a round wall: per ring f (r/R1)^n and g (R0/r)^n, and its mean temperature at R1.
@@ -50,14 +52,13 @@ func (s *state) chart() *charts {
 			drawn[i] = p.drawn
 			c.layers[i] = p.layers()
 		}
-		mid, side := complex(0, 0), s.r
-		var more func(complex128, float64, []complex128) bool
 		if s.rect != nil {
-			mid, side, more = s.rect.frame()
-		} else {
-			c.wall = s.wallLayers()
+			mid, half := s.rect.frame()
+			c.tree, c.rect = harmonic.NewTree(&s.cloud, drawn, mid, half), s.rect.sys.Field(s.rect.y)
+			return
 		}
-		c.tree = harmonic.NewTree(&s.cloud, drawn, mid, side, more)
+		c.wall = s.wallLayers()
+		c.tree = harmonic.NewTree(&s.cloud, drawn, 0, s.r)
 	})
 	return &s.charts
 }
@@ -121,23 +122,20 @@ func (s *state) wallLayers() layers {
 // at returns the temperature at z of the region, NaN beyond its outer surface.
 func (s *state) at(z complex128) float64 {
 	c := s.chart()
-	r := math.Hypot(real(z), imag(z))
-	if s.rect != nil {
-		if !s.rect.inside(z) {
-			return s.rect.inWall(z) + s.cloud.At(z)
+	if s.rect == nil {
+		if r := math.Hypot(real(z), imag(z)); r > s.wall.R {
+			if r > s.wall.Outside()*(1+1e-12) {
+				return math.NaN()
+			}
+			return c.wall.at(z, r)
 		}
-	} else if r > s.wall.R {
-		if r > s.wall.Outside()*(1+1e-12) {
-			return math.NaN()
-		}
-		return c.wall.at(z, r)
 	}
-	t, i, direct := c.tree.At(z)
+	t, i := c.tree.At(z)
 	if i >= 0 {
 		return s.inPiece(i, z-s.pieces[i].at)
 	}
-	if direct {
-		t += s.rect.at(z)
+	if s.rect != nil {
+		t += c.rect.At(z)
 	}
 	return t
 }

@@ -143,30 +143,13 @@ func (r *rectWall) solved(g *region, charge, v, mean []float64) *rectState {
 	return s
 }
 
-// frame is the square that covers the inside. The wall's own field is left to single points.
-func (s *rectState) frame() (mid complex128, side float64, more func(complex128, float64, []complex128) bool) {
-	return complex(s.rect.W/2, s.rect.H/2), math.Max(s.rect.W, s.rect.H) / 2, func(complex128, float64, []complex128) bool { return false }
-}
-
-// inside tells whether z lies within the inside outline.
-func (s *rectState) inside(z complex128) bool {
-	return real(z) >= 0 && imag(z) >= 0 && real(z) <= s.rect.W && imag(z) <= s.rect.H
-}
-
-// at is the wall's own field.
-func (s *rectState) at(z complex128) float64 { return s.sys.At(s.y, z) }
-
-// inWall is the wall's own field in its layers, NaN beyond them.
-func (s *rectState) inWall(z complex128) float64 {
+// frame is the square that covers everything.
+func (s *rectState) frame() (mid complex128, half float64) {
 	t := 0.0
 	for _, l := range s.rect.Layers {
 		t += l.Thickness
 	}
-	const slack = 1e-12
-	if real(z) < -t-slack || imag(z) < -t-slack || real(z) > s.rect.W+t+slack || imag(z) > s.rect.H+t+slack {
-		return math.NaN()
-	}
-	return s.sys.At(s.y, z)
+	return complex(s.rect.W/2, s.rect.H/2), math.Max(s.rect.W, s.rect.H)/2 + t
 }
 
 // inverseRoots[n-1] = 1/√n.

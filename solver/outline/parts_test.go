@@ -295,13 +295,20 @@ func expected(t testing.TB, file, name string) map[string]float64 {
 	out := map[string]float64{}
 	for _, row := range rows {
 		if row[0] == name {
-			if out[row[1]], err = strconv.ParseFloat(row[2], 64); err != nil {
-				t.Fatal(err)
-			}
+			out[row[1]] = number(t, row[2])
 		}
 	}
 	if len(out) == 0 {
 		t.Fatalf("%s has no %s", file, name)
 	}
 	return out
+}
+
+func number(t testing.TB, s string) float64 {
+	t.Helper()
+	x, err := strconv.ParseFloat(s, 64)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return x
 }

@@ -23,16 +23,16 @@ func Hull(discs []Disc) (arcs []Arc, perimeter, strings float64) {
 		return nil, 0, 0
 	}
 	tol := 1e-12 * reach(discs, Box{})
-	first := 0
-	for i, d := range discs { // the disc under the string at θ = 0; of equal ones the upper
-		f := discs[first]
+	outer := notHeld(discs, tol)
+	at, from := outer[0], 0.0
+	for _, i := range outer { // the disc under the string at θ = 0; of equal ones the upper
+		d, f := discs[i], discs[at]
 		if h, g := d.X+d.R, f.X+f.R; h > g+tol || h > g-tol && d.Y > f.Y {
-			first = i
+			at = i
 		}
 	}
-	at, from := first, 0.0
 	for range 4*len(discs) + 4 {
-		next, to := overtake(discs, at, from, tol)
+		next, to := overtake(discs, outer, at, from, tol)
 		if next < 0 || to >= 2*math.Pi {
 			break
 		}
@@ -44,26 +44,48 @@ func Hull(discs []Disc) (arcs []Arc, perimeter, strings float64) {
 	return measure(discs, arcs)
 }
 
+// notHeld lists the discs that lie inside no other; of equal ones the first.
+func notHeld(discs []Disc, tol float64) []int {
+	var outer []int
+	for i, d := range discs {
+		held := func(j int, e Disc) bool {
+			return math.Hypot(e.X-d.X, e.Y-d.Y) <= e.R-d.R+tol && (e.R > d.R+tol || j < i)
+		}
+		inside := false
+		for j, e := range discs {
+			if j != i && held(j, e) {
+				inside = true
+				break
+			}
+		}
+		if !inside {
+			outer = append(outer, i)
+		}
+	}
+	return outer
+}
+
 // overtake returns the disc that takes over the string from disc i at the least angle ≥ from, −1 when none does.
-func overtake(discs []Disc, i int, from, tol float64) (next int, at float64) {
+func overtake(discs []Disc, outer []int, i int, from, tol float64) (next int, at float64) {
 	next, at = -1, math.Inf(1)
 	best := 0.0
-	for j, d := range discs {
+	for _, j := range outer {
+		if j == i {
+			continue
+		}
+		d := discs[j]
 		dx, dy := d.X-discs[i].X, d.Y-discs[i].Y
 		dist, diff := math.Hypot(dx, dy), discs[i].R-d.R
-		if j == i || dist <= math.Abs(diff)+tol {
+		if dist <= math.Abs(diff) {
 			continue // one holds the other: no tangent between them
 		}
 		length := math.Sqrt(dist*dist - diff*diff)
 		// The support of j rises through that of i where the outer tangent's normal points.
 		theta := math.Atan2(dy, dx) - math.Acos(diff/dist)
 		eps := 2 * tol / length
-		turn := math.Mod(theta-from, 2*math.Pi)
-		if turn < -eps {
+		turn := theta - from // from −4π to π
+		for turn < -eps {
 			turn += 2 * math.Pi
-		}
-		if turn > 2*math.Pi-eps {
-			turn -= 2 * math.Pi
 		}
 		turn = max(turn, 0)
 		if t := from + turn; next < 0 || t < at-eps || t <= at+eps && length > best {

@@ -10,8 +10,8 @@ import (
 // below; it returns the places and the radius of the circle that holds them, which is centred on the origin.
 //
 // Equal discs follow the trade's layers: a centre of one to five, and six more in each layer than in the one below (1-6-12, 2-8-14, 3-9-15,
-// 4-10-16, 5-11-17); the centre is the one that makes the smallest circle. Mixed discs sink into the valleys below them where that makes the circle smaller, and when it saves more
-// than 3 % the larger go in first.
+// 4-10-16, 5-11-17); the centre is the one that makes the smallest circle. Mixed discs sink into the valleys below them where that makes the circle at least
+// 2 % smaller, and where it saves 5 % more the larger go in first.
 func LayUp(radii []float64) ([]Disc, float64) {
 	if len(radii) == 0 {
 		return nil, 0
@@ -20,10 +20,10 @@ func LayUp(radii []float64) ([]Disc, float64) {
 	if equal(radii) {
 		return best, r
 	}
-	if d, nr, ok := nested(radii, false); ok && nr < 0.99*r {
+	if d, nr := nestedBest(radii, false); nr < 0.98*r {
 		best, r = d, nr
 	}
-	if d, nr, ok := nested(radii, true); ok && nr < 0.97*r {
+	if d, nr := nestedBest(radii, true); nr < 0.95*r {
 		best, r = d, nr
 	}
 	return best, r
@@ -61,7 +61,8 @@ func layersOn(radii []float64, centre int) []Disc {
 		n := len(g.r)
 		switch {
 		case n < len(rest) && centre == 1 && len(out) == 1:
-			if w, loose := ringWithin(rest); loose-2*slices.Max(rest) <= base+looseCore*slices.Min(rest) {
+			w, out := ringWithin(rest)
+			if off := out - 2*slices.Max(rest) - base; off >= 0 && off <= looseCore*slices.Min(rest) {
 				g, n = w, len(rest)
 			}
 		case same && n < len(rest) && n > below+6:
@@ -106,28 +107,50 @@ func outermost(discs []Disc) float64 {
 	return at
 }
 
-// nested puts each disc as near to the middle as it goes, in valleys where there are any.
-func nested(radii []float64, largest bool) ([]Disc, float64, bool) {
-	out := make([]Disc, len(radii))
+// nestedBest tries each size of the centre and keeps the smallest circle.
+func nestedBest(radii []float64, largest bool) (best []Disc, r float64) {
 	order := make([]int, len(radii))
-	sum := 0.0
-	for i, r := range radii {
-		out[i].R, order[i] = r, i
-		sum += r
+	for i := range radii {
+		order[i] = i
 	}
 	if largest {
 		slices.SortStableFunc(order, func(a, b int) int { return cmp.Compare(radii[b], radii[a]) })
 	}
+	r = math.Inf(1)
+	for centre := 1; centre <= min(5, len(radii)); centre++ {
+		if d, nr, ok := nested(radii, order, centre); ok && nr < r*(1-1e-9) {
+			best, r = d, nr
+		}
+	}
+	return best, r
+}
+
+// nested puts each disc, in the order, as near to the middle of a centre group as it goes, in valleys where there are any.
+func nested(radii []float64, order []int, centre int) ([]Disc, float64, bool) {
+	out := make([]Disc, len(radii))
+	sum := 0.0
+	for _, r := range radii {
+		sum += r
+	}
 	b := newBed(Box{}, 2*sum, sum/float64(len(radii)))
 	b.near = &Disc{}
-	for _, i := range order {
-		x, y, ok := b.best(out[i].R, func(x, y float64) (cost, tie, upx, upy float64) {
+	var core []float64
+	for _, i := range order[:centre] {
+		core = append(core, radii[i])
+	}
+	g, _ := ringWithin(core)
+	for k, d := range g.discs(math.Pi / 2) {
+		out[order[k]] = d
+		b.put(d)
+	}
+	for _, i := range order[centre:] {
+		x, y, ok := b.best(radii[i], func(x, y float64) (cost, tie, upx, upy float64) {
 			return math.Hypot(x, y), math.Atan2(y, x), x, y
 		})
 		if !ok {
 			return nil, 0, false
 		}
-		out[i].X, out[i].Y = x, y
+		out[i] = Disc{X: x, Y: y, R: radii[i]}
 		b.put(out[i])
 	}
 	return out, centreOn(out), true

@@ -143,7 +143,9 @@ func (p *presser) assemble() {
 
 func (p *presser) spring(row, i int) {
 	d := p.discs[i]
-	qx, qy := 1e-6/p.near, 1e-6/p.near // keeps a disc that nothing holds from flying off
+	// A disc that nothing holds would fly off: let it go about as far as its neighbours in one step, less held back as the forces settle.
+	q := max(1e-6, 20*p.mu/p.near) / p.near
+	qx, qy := q, q
 	if p.kx != nil {
 		qx += p.kx[i]
 		p.b[row] -= p.kx[i] * (d.X - p.to[i].X)

@@ -64,7 +64,7 @@ func rest(discs []Disc, in Box) []Disc {
 		return out
 	}
 	n := len(discs)
-	a := aim{fy: make([]float64, n), rounds: 100 + n/2, precision: 1e-10 * reach(discs, in)}
+	a := aim{fy: make([]float64, n), rounds: 600, precision: 1e-10 * reach(discs, in)}
 	if in.rect() { // on a level floor a slight pull to the middle keeps them together
 		a.kx, a.to = make([]float64, n), make([]Disc, n)
 	}
@@ -76,7 +76,11 @@ func rest(discs []Disc, in Box) []Disc {
 		}
 	}
 	c := newCrowd(out, in, 0, r)
-	c.press(a)
+	for range 3 {
+		if c.press(a) {
+			break
+		}
+	}
 	c.close()
 	if _, _, depth := Overlap(out, in); !(depth <= slack*reach(discs, in)) {
 		return discs

@@ -27,9 +27,9 @@ func (r *Result) Table() [][6]string {
 }
 
 func (r *Result) row(id, carries, makes string, t float64, limit section.Opt[float64]) [6]string {
-	lim, margin := "none", ""
+	lim, left := "none", ""
 	if limit.OK {
-		lim, margin = digits(limit.V, 1)+" °C", kelvins(limit.V-t)+" K"
+		lim, left = digits(limit.V, 1)+" °C", margin(t, limit.V)+" K"
 	}
-	return [6]string{id, carries, makes, degrees(t, limit.V, limit.OK) + " °C", lim, margin}
+	return [6]string{id, carries, makes, degrees(t, limit.V, limit.OK) + " °C", lim, left}
 }

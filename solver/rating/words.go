@@ -21,26 +21,24 @@ func digits(v float64, n int) string {
 	return strings.Replace(s, "-", minus, 1)
 }
 
-// degrees formats a temperature beside its limit: the nearest whole kelvin, but a digit more where rounding would carry it onto
-// or across the limit (rounded away from the limit then).
-func degrees(t, limit float64, hasLimit bool) string {
+// shown rounds a temperature beside its limit: to the nearest whole kelvin, but a tenth away from the limit where whole kelvins
+// would carry it onto or across the limit.
+func shown(t, limit float64, hasLimit bool) float64 {
 	near := math.Round(t)
-	if !hasLimit || t == limit || (near != limit && (t > limit) == (near > limit)) {
-		return digits(near, 0)
+	switch {
+	case !hasLimit || t == limit || (near != limit && (t > limit) == (near > limit)):
+		return near
+	case t > limit:
+		return math.Ceil(t*10) / 10
 	}
-	if t > limit {
-		return digits(math.Ceil(t*10)/10, 1)
-	}
-	return digits(math.Floor(t*10)/10, 1)
+	return math.Floor(t*10) / 10
 }
 
-// kelvins formats a margin: whole kelvins rounded down, one digit more within a kelvin of zero.
-func kelvins(m float64) string {
-	if math.Abs(m) < 1 {
-		return digits(math.Floor(m*10)/10, 1)
-	}
-	return digits(math.Floor(m), 0)
-}
+// degrees formats a temperature beside its limit.
+func degrees(t, limit float64, hasLimit bool) string { return digits(shown(t, limit, hasLimit), 1) }
+
+// margin formats limit − temperature so that it agrees with the temperature as shown.
+func margin(t, limit float64) string { return digits(limit-shown(t, limit, true), 1) }
 
 // list joins ids for a sentence and cuts a long list.
 func list(ids []string) string {

@@ -1,18 +1,20 @@
 package section
 
 import (
+	"regexp"
 	"strings"
 
 	"gopkg.in/yaml.v3"
 )
 
 // patch returns the text of the origin with only those spans changed in which the tree of the new document differs. Blank lines,
-// comments, quotes and the order of keys stay. It returns nil where the text is written in a way that it can't follow.
-func (o *origin) patch(tree *yaml.Node) []byte {
+// comments, quotes and the order of keys stay. It returns nil where the text is written in a way that it can't follow; where it would
+// lose a comment it does so only if lossy.
+func (o *origin) patch(tree *yaml.Node, lossy bool) []byte {
 	if o == nil {
 		return nil
 	}
-	p := &patcher{newSource(string(o.text))}
+	p := &patcher{newSource(string(o.text)), lossy}
 	if o.root.Style&yaml.FlowStyle != 0 {
 		from, to, text, ok := p.inline(o.root, tree)
 		if !ok {
@@ -20,14 +22,24 @@ func (o *origin) patch(tree *yaml.Node) []byte {
 		}
 		return []byte(p.text[:from] + text + p.text[to:])
 	}
-	from, text, ok := p.block(o.root, tree, 0, len(p.text))
+	end := len(p.text)
+	if m := documentEnd.FindStringIndex(p.text); m != nil {
+		end = m[0]
+	}
+	from, text, ok := p.block(o.root, tree, 0, end)
 	if !ok {
 		return nil
 	}
-	return []byte(p.text[:from] + text)
+	return []byte(p.text[:from] + text + p.text[end:])
 }
 
-type patcher struct{ *source }
+// documentEnd is the line that ends a YAML document, which most files do not have.
+var documentEnd = regexp.MustCompile(`(?m)^\.\.\.\s`)
+
+type patcher struct {
+	*source
+	lossy bool
+}
 
 // entry is an item of a sequence or a pair of a mapping: old in the source, or fresh.
 type entry struct {
@@ -53,8 +65,7 @@ func (p *patcher) entries(n *yaml.Node, low, to int) (out []entry, ok bool) {
 			return nil, false
 		}
 		if step == 1 {
-			dash := &yaml.Node{Line: first.Line, Column: n.Column}
-			if e.start, ok = p.offset(dash); !ok || e.start >= len(p.text) || p.text[e.start] != '-' {
+			if e.start, ok = p.dash(first, n.Column, low); !ok {
 				return nil, false
 			}
 		}
@@ -75,6 +86,23 @@ func (p *patcher) entries(n *yaml.Node, low, to int) (out []entry, ok bool) {
 	}
 	out[len(out)-1].to = to
 	return out, true
+}
+
+// dash returns where the dash of an item stands: on the item's line or above it, with nothing but comments between.
+func (p *patcher) dash(item *yaml.Node, column, low int) (int, bool) {
+	for line := item.Line; line > 0 && p.lines[line-1]+column > low; line-- {
+		at, ok := p.offset(&yaml.Node{Line: line, Column: column})
+		if ok && at < len(p.text) && p.text[at] == '-' && (p.ownLine(at) || line == item.Line) {
+			return at, true
+		}
+		if line == item.Line {
+			continue
+		}
+		if text := strings.TrimSpace(p.text[p.lines[line-1]:p.lines[line]]); text != "" && text[0] != '#' {
+			break
+		}
+	}
+	return 0, false
 }
 
 // ownLine tells whether only spaces stand before an offset on its line.
@@ -216,6 +244,9 @@ func (p *patcher) entryText(old, e entry) (string, bool) {
 	if same(old.val, e.val) {
 		return b.String() + p.text[at:old.to], true
 	}
+	if from, to, ok := p.span(old.val); ok && e.key != nil && len(old.val.Content) == 0 && isBlock(e.val) && p.ownLine(old.start) {
+		return b.String() + p.opened(old, e, at, from, to), true
+	}
 	if from, to, text, ok := p.inline(old.val, e.val); ok && !strings.Contains(e.val.Value, "\n") {
 		return b.String() + p.text[at:from] + text + p.text[to:old.to], true
 	}
@@ -223,10 +254,24 @@ func (p *patcher) entryText(old, e entry) (string, bool) {
 		return b.String() + p.text[at:from] + text, true
 	}
 	col := p.indent(old.start) // written anew, under its old comments
-	if !p.ownLine(old.start) {
+	loses := old.val.Kind != yaml.ScalarNode && strings.Contains(p.text[old.start:p.tail(old.from, old.to, col)], "#")
+	if !p.ownLine(old.start) || loses && !p.lossy {
 		return "", false
 	}
 	return p.text[old.from:p.lineStart(old.start)] + freshEntry(e, col) + p.text[p.tail(old.from, old.to, col):old.to], true
+}
+
+func isBlock(n *yaml.Node) bool { return n.Kind != yaml.ScalarNode && n.Style&yaml.FlowStyle == 0 }
+
+// opened returns a pair whose one-line value, from to to, becomes a block: what stands behind the old value stays on the key's line.
+func (p *patcher) opened(old, e entry, at, from, to int) string {
+	line := to + len(p.text[to:old.to])
+	if i := strings.IndexByte(p.text[to:old.to], '\n'); i >= 0 {
+		line = to + i + 1
+	}
+	_, block, _ := strings.Cut(freshEntry(e, p.indent(old.start)), "\n")
+	head := strings.TrimRight(p.text[at:from], " ") + strings.TrimRight(p.text[to:line], "\r\n")
+	return head + "\n" + block + p.text[line:old.to]
 }
 
 // nextLine is what comments of a value's entries must not go above: the line after its key, or its dash.

@@ -32,7 +32,7 @@ func patched(t interface {
 	Fatalf(string, ...any)
 }, d *Document,
 ) string {
-	text := d.origin.patch(current.tree(d))
+	text := d.origin.patch(current.tree(d), false)
 	if text == nil {
 		t.Fatal("the origin can't be patched")
 	}

@@ -42,11 +42,6 @@ func (p path) steps() []step {
 	return out
 }
 
-// within tells whether p is q or lies beneath it.
-func (p path) within(q path) bool {
-	return strings.HasPrefix(string(p), string(q)) && (len(p) == len(q) || p[len(q)] <= indexMark[0])
-}
-
 // parents calls f for p and all paths above it, the root last.
 func (p path) parents(f func(path) bool) {
 	for {

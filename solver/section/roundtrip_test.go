@@ -131,9 +131,9 @@ func TestPatchFollowsEdits(t *testing.T) {
 			rt.Fatal(err)
 		}
 		all++
-		if string(d.origin.patch(current.tree(d))) != string(got) {
+		if string(d.origin.patch(current.tree(d), false)) != string(got) {
 			fallbacks++
-			rt.Logf("not patched:\n%s\nas\n%s\nto\n%s", text, d.origin.patch(current.tree(d)), got)
+			t.Logf("not patched:\n%s\nas\n%s\nto\n%s", text, d.origin.patch(current.tree(d), false), got)
 		}
 		again, problems := Read(got)
 		if len(problems) > 0 || diff(d, again) != "" {

@@ -45,8 +45,9 @@ func Equal(a, b *Document) bool {
 func (f format) write(d *Document) ([]byte, error) {
 	tree := f.tree(d)
 	ways := []func() []byte{
-		func() []byte { return d.origin.patch(tree) },
-		func() []byte { return d.origin.tidied().patch(tree) },
+		func() []byte { return d.origin.patch(tree, false) },
+		func() []byte { return d.origin.tidied().patch(tree, false) },
+		func() []byte { return d.origin.patch(tree, true) },
 		func() []byte { return canonical(tree) },
 	}
 	var why string

@@ -1,0 +1,4 @@
+package rating
+
+// Skin opens the skin effect to the tests.
+var Skin = skin

@@ -1,0 +1,199 @@
+package ui
+
+import (
+	"slices"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/canvas"
+	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/theme"
+	"fyne.io/fyne/v2/widget"
+)
+
+// Details tells about the selection, or the whole section, in sentences whose inputs edit in place, and below them in fields.
+type Details struct {
+	widget.BaseWidget
+
+	desk   *Desk
+	column *fyne.Container
+	scroll *container.Scroll
+	help   *prose // about the field that has the focus
+
+	sentences []*prose
+	rule      *canvas.Rectangle
+	more      *prose // folds the fields
+	folded    bool
+	fields    []*field
+	known     map[string]*field // by key, to keep an entry while its part changes
+	selection []string
+	relaying  bool
+}
+
+// NewDetails shows the desk's selection.
+func NewDetails(k *Desk) *Details {
+	d := &Details{desk: k, known: map[string]*field{}}
+	d.column = &fyne.Container{Layout: &fieldColumn{gap: 7, margin: 14}}
+	d.scroll = container.NewVScroll(d.column)
+	d.help = newProse(k)
+	d.help.size = smallText(d.help)
+	d.rule = canvas.NewRectangle(nil)
+	d.more = newProse(k)
+	d.more.moved = d.relay
+	d.ExtendBaseWidget(d)
+	k.Listen(d.changed)
+	d.rewrite(true)
+	return d
+}
+
+func (d *Details) changed(c Changed) {
+	moved := !slices.Equal(d.selection, d.desk.Selection())
+	if c&(ChangedDocument|ChangedResult) == 0 && !moved {
+		return // pointed at
+	}
+	d.rewrite(c&ChangedDocument != 0 || moved)
+	if moved {
+		d.scroll.ScrollToTop()
+	}
+}
+
+// Fold hides or shows the fields below the sentences.
+func (d *Details) Fold(folded bool) {
+	d.folded = folded
+	d.rewrite(true)
+}
+
+// EditCurrent puts the cursor into the current of the selection, where it has one.
+func (d *Details) EditCurrent() bool { return d.edit("current") }
+
+// FocusFirst puts the keyboard into what is most often entered: the current of conductors, else the first field.
+func (d *Details) FocusFirst() {
+	if d.EditCurrent() {
+		return
+	}
+	if d.folded {
+		d.Fold(false)
+	}
+	if c := fyne.CurrentApp().Driver().CanvasForObject(d); c != nil && len(d.fields) > 0 {
+		c.Focus(d.fields[0].entry)
+	}
+}
+
+// edit opens the first word of that input.
+func (d *Details) edit(key string) bool {
+	for _, p := range d.sentences {
+		for i, r := range p.runs {
+			if r.in != nil && r.in.key == key {
+				p.edit(i)
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// rewrite writes the sentences anew and, where inputs may have changed, the fields.
+func (d *Details) rewrite(inputs bool) {
+	d.selection = slices.Clone(d.desk.Selection())
+	paragraphs := tell(d.desk)
+	for len(d.sentences) < len(paragraphs) {
+		p := newProse(d.desk)
+		p.moved, p.about = d.relay, d.about
+		d.sentences = append(d.sentences, p)
+	}
+	d.relaying = true // one lay-out for all
+	d.sentences = d.sentences[:len(paragraphs)]
+	for i, p := range paragraphs {
+		d.sentences[i].say(p...)
+	}
+	if inputs {
+		d.refill()
+	}
+	d.relaying = false
+	d.relay()
+}
+
+// refill puts the inputs of the selection into the fields.
+func (d *Details) refill() {
+	word := "Hide the fields"
+	if d.folded {
+		word = "Show the fields"
+	}
+	d.more.say(run{text: word, tap: func() { d.Fold(!d.folded) }})
+	d.fields = d.fields[:0]
+	if d.folded {
+		return
+	}
+	ins := wholeInputs(d.desk)
+	if len(d.selection) > 0 {
+		ins = inputsOf(d.desk, d.selection)
+	}
+	for _, in := range ins {
+		f := d.known[in.key]
+		if f == nil {
+			f = newField(d.desk, in, d.relay)
+			f.about = d.about
+			d.known[in.key] = f
+		}
+		f.show(in)
+		d.fields = append(d.fields, f)
+	}
+}
+
+// about tells below what the entry with the focus takes, "" when none has it.
+func (d *Details) about(text string) {
+	d.help.say(run{text: text, tone: quiet})
+	d.help.Refresh()
+}
+
+// relay stacks sentences and fields for their heights as they are now.
+func (d *Details) relay() {
+	if d.relaying {
+		return
+	}
+	objects := make([]fyne.CanvasObject, 0, len(d.sentences)+len(d.fields)+2)
+	for _, p := range d.sentences {
+		objects = append(objects, p)
+	}
+	objects = append(objects, d.rule, d.more)
+	for _, f := range d.fields {
+		objects = append(objects, f)
+	}
+	d.rule.FillColor = themeColor(theme.ColorNameSeparator)
+	d.rule.SetMinSize(fyne.NewSize(1, 1))
+	if !slices.Equal(objects, d.column.Objects) {
+		d.column.Objects = objects
+	}
+	d.column.Layout.Layout(objects, fyne.NewSize(d.scroll.Size().Width, 0))
+	d.scroll.Refresh()
+}
+
+// detailsHelpHeight is the height of the pane from which on the line of help has its place.
+const detailsHelpHeight = 260
+
+// MinSize is small: the pane scrolls.
+func (d *Details) MinSize() fyne.Size {
+	d.ExtendBaseWidget(d)
+	return fyne.NewSize(200, 80)
+}
+
+// CreateRenderer lays out the scroll and the line of help below it.
+func (d *Details) CreateRenderer() fyne.WidgetRenderer {
+	return widget.NewSimpleRenderer(&fyne.Container{Layout: detailsLayout{d}, Objects: []fyne.CanvasObject{d.scroll, d.help}})
+}
+
+type detailsLayout struct{ d *Details }
+
+func (l detailsLayout) MinSize([]fyne.CanvasObject) fyne.Size { return l.d.MinSize() }
+
+func (l detailsLayout) Layout(_ []fyne.CanvasObject, s fyne.Size) {
+	d := l.d
+	line := 2*fyne.MeasureText("Mg", d.help.textSize(), fyne.TextStyle{}).Height + 2*proseLeading
+	if s.Height < detailsHelpHeight {
+		line = 0
+	}
+	d.help.Hidden = line == 0
+	d.help.Move(fyne.NewPos(14, s.Height-line))
+	d.help.Resize(fyne.NewSize(max(s.Width-28, 1), line))
+	d.scroll.Resize(fyne.NewSize(s.Width, s.Height-line))
+	d.relay()
+}

@@ -1,0 +1,160 @@
+package ui
+
+import (
+	"errors"
+	"slices"
+	"strings"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/dialog"
+
+	"packrise/solver/catalog"
+	"packrise/solver/section"
+)
+
+// showHolder edits what encloses the parts. Each entry is an undo step of its own and takes effect at once; the section behind the dialog follows.
+func (w *Window) showHolder() {
+	w.showInputs(upperFirst(holderWord(w.desk.Document().Holder.Kind)), func(k *Desk) []*input {
+		return append([]*input{holderKindInput(k)}, slices.DeleteFunc(wholeInputs(k), func(in *input) bool {
+			return slices.Contains([]string{"title", "ambient", "film"}, in.key)
+		})...)
+	})
+}
+
+// showSurroundings edits what the section gives its heat to.
+func (w *Window) showSurroundings() {
+	w.showInputs("Surroundings", func(k *Desk) []*input {
+		return append([]*input{surroundingsKindInput(k)}, slices.DeleteFunc(wholeInputs(k), func(in *input) bool {
+			return !slices.Contains([]string{"ambient", "film"}, in.key)
+		})...)
+	})
+}
+
+// showInputs is a dialog of fields that follow the document.
+func (w *Window) showInputs(title string, inputs func(*Desk) []*input) {
+	s := &inputSheet{desk: w.desk, inputs: inputs, known: map[string]*field{}}
+	s.column = &fyne.Container{Layout: &fieldColumn{gap: 8, margin: 8}}
+	s.follow()
+	stop := w.desk.listenUntil(func(c Changed) {
+		if c&ChangedDocument != 0 {
+			s.follow()
+		}
+	})
+	d := dialog.NewCustom(title, "Close", container.NewVScroll(s.column), w.win)
+	w.show(d, fyne.NewSize(460, 480))
+	w.closing(d, stop)
+}
+
+// inputSheet is a column of fields, kept while their inputs stay.
+type inputSheet struct {
+	desk   *Desk
+	inputs func(*Desk) []*input
+	known  map[string]*field
+	column *fyne.Container
+}
+
+func (s *inputSheet) follow() {
+	s.column.Objects = nil
+	for _, in := range s.inputs(s.desk) {
+		f := s.known[in.key]
+		if f == nil {
+			f = newField(s.desk, in, s.relay)
+			s.known[in.key] = f
+		} else {
+			f.show(in)
+		}
+		s.column.Objects = append(s.column.Objects, f)
+	}
+	s.relay()
+}
+
+func (s *inputSheet) relay() { s.column.Refresh() }
+
+// choice is one of few words, with what it does.
+type choice struct {
+	kind, word string
+}
+
+// choiceInput is an input that takes one of few words.
+func choiceInput(in input, now string, of []choice, do func(d *section.Document, kind string) *section.Document) *input {
+	for _, c := range of {
+		in.choices = append(in.choices, c.word)
+		if c.kind == now {
+			in.text = c.word
+		}
+	}
+	if in.text == "" {
+		in.text = now
+	}
+	made := wholeInput(in, func(string) (string, func(*section.Document), error) { return "", nil, nil })
+	made.read = func(text string) (string, func(*section.Document) *section.Document, error) {
+		for _, c := range of {
+			if squeezed(c.word) == squeezed(text) || c.kind == squeezed(text) {
+				return "", func(d *section.Document) *section.Document { return do(d, c.kind) }, nil
+			}
+		}
+		return "", nil, errors.New("choose one of " + strings.Join(in.choices, ", "))
+	}
+	return made
+}
+
+// holderKindInput is the kind of the holder.
+func holderKindInput(k *Desk) *input {
+	kinds := []choice{
+		{section.Jacket, "jacket"},
+		{section.Conduit, "conduit"},
+		{section.Wireway, "wireway"},
+		{section.OpenBundle, "bundle"},
+		{section.NoHolder, "bare part"},
+	}
+	in := input{key: "kind", label: "Kind", step: "kind of holder", about: "what is around the parts"}
+	return choiceInput(in, k.Document().Holder.Kind, kinds, func(d *section.Document, kind string) *section.Document {
+		return withHolderKind(k.Catalog(), d, kind)
+	})
+}
+
+// withHolderKind changes the kind of the holder and keeps what the new one can have; parts keep their place relative to the middle.
+func withHolderKind(cat *catalog.Catalog, d *section.Document, kind string) *section.Document {
+	was := spelledHolder(cat, d.Holder)
+	now := section.Holder{Kind: kind, Fill: was.Fill, ClearanceMM: was.ClearanceMM, Layers: was.Layers}
+	round := was.InsideMM.Or(min(was.WidthMM.Or(20), was.HeightMM.Or(20)))
+	switch kind {
+	case section.Jacket, section.Conduit:
+		now.InsideMM = section.Some(round)
+	case section.Wireway:
+		now.WidthMM, now.HeightMM = section.Some(was.WidthMM.Or(round)), section.Some(was.HeightMM.Or(round))
+		now.Sides = was.Sides
+	default:
+		now.Layers = nil
+	}
+	from, to := middleOf(cat, was), middleOf(cat, now)
+	return d.With(func(d *section.Document) {
+		d.Holder = now
+		parts := slices.Clone(d.Parts)
+		for i := range parts {
+			if parts[i].At.OK {
+				parts[i].At.V.X += to.X - from.X
+				parts[i].At.V.Y += to.Y - from.Y
+			}
+		}
+		d.Parts = parts
+	})
+}
+
+// surroundingsKindInput is the kind of the surroundings.
+func surroundingsKindInput(k *Desk) *input {
+	kinds := []choice{{section.FixedFilm, "fixed film"}, {section.FixedWall, "surface held"}}
+	in := input{key: "surroundings", label: "Kind", step: "kind of surroundings", about: "one film coefficient all round, or the outer surface held at a temperature"}
+	return choiceInput(in, k.Document().Surroundings.Kind, kinds, func(d *section.Document, kind string) *section.Document {
+		return d.With(func(d *section.Document) {
+			d.Surroundings.Kind = kind
+			if kind == section.FixedFilm && !d.Surroundings.FilmWM2K.OK {
+				d.Surroundings.FilmWM2K = section.Some(9.0)
+			}
+			if kind != section.FixedFilm {
+				d.Surroundings.FilmWM2K = section.Opt[float64]{}
+			}
+		})
+	})
+}

@@ -1,0 +1,116 @@
+package ui
+
+import (
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/theme"
+)
+
+// Sizes within the list.
+const (
+	wireEdge     = 14  // left and right of the columns
+	wireGap      = 14  // least space between two columns
+	wireGapMost  = 30  // most
+	wireBar      = 96  // of the margin's bar
+	wireBarSpace = 10  // between the margin's number and its bar
+	wireWordMost = 240 // of a column of words; more is elided, with the whole on hover
+	wireRowSpace = 8   // above and below a row's text together
+)
+
+// wireLayout is where the columns stand.
+type wireLayout struct {
+	rowHeight, headHeight float32
+	textSize, small       float32
+	at, wide              [wireColumns]float32
+	bar                   float32 // left edge of the margin's bar
+	shown                 [wireColumns]bool
+	width                 float32 // of all columns
+}
+
+// measureWires gives every column the room that its header and cells need and shares out what is left.
+func measureWires(l *WireList) wireLayout {
+	th := theme.CurrentForWidget(l)
+	m := wireLayout{textSize: th.Size(theme.SizeNameText), small: smallText(l)()}
+	m.rowHeight = fyne.MeasureText("Mg", m.textSize, fyne.TextStyle{}).Height + wireRowSpace
+	m.headHeight = m.rowHeight + 2
+	sum, n := float32(2*wireEdge), 0
+	for c := range wireColumns {
+		m.shown[c] = l.shows(c)
+		if !m.shown[c] {
+			continue
+		}
+		m.wide[c] = l.columnWidth(c, m)
+		sum += m.wide[c]
+		n++
+	}
+	gap := (l.Size().Width - sum) / float32(max(n-1, 1))
+	gap = min(max(gap, wireGap), wireGapMost)
+	x := float32(wireEdge)
+	for c := range wireColumns {
+		if !m.shown[c] {
+			continue
+		}
+		m.at[c] = x
+		if c == wireRemark {
+			m.wide[c] = max(m.wide[c], l.Size().Width-wireEdge-x)
+		}
+		x += m.wide[c] + gap
+	}
+	m.bar = m.at[wireMargin] + m.wide[wireMargin] - wireBar
+	m.width = x - gap + wireEdge
+	if room := l.Size().Width; m.width < room+1 { // no scroll bar for a rounding
+		m.width = min(m.width, room)
+	}
+	return m
+}
+
+// shows tells whether a column has anything to show: there are no empty columns.
+func (l *WireList) shows(c wireColumn) bool {
+	return c != wireCircuit || len(l.desk.Document().Loads) > 0
+}
+
+// columnWidth is the width of the widest cell. Numbers get room for three figures in any case, so that columns stand still while numbers change.
+func (l *WireList) columnWidth(c wireColumn, m wireLayout) float32 {
+	w := fyne.MeasureText(wireHeads[c].name, m.textSize, fyne.TextStyle{Bold: true}).Width
+	if u := wireHeads[c].unit; u != "" {
+		w += fyne.MeasureText(" "+u, m.textSize, fyne.TextStyle{}).Width
+	}
+	w += wireArrow
+	if c.number() {
+		w = max(w, fyne.MeasureText("−888.8", m.textSize, fyne.TextStyle{}).Width)
+	}
+	seen := map[string]bool{}
+	for i := range l.rows {
+		t := c.text(&l.rows[i])
+		if c == wireTemp || c == wireMargin || seen[t] {
+			continue
+		}
+		seen[t] = true
+		w = max(w, fyne.MeasureText(t, m.textSize, fyne.TextStyle{}).Width)
+	}
+	if !c.number() {
+		w = min(w, wireWordMost)
+	}
+	if c == wireMargin {
+		w += wireBarSpace + wireBar
+	}
+	return w
+}
+
+// column returns the column at x, −1 if none.
+func (m wireLayout) column(x float32) wireColumn {
+	found := wireColumn(-1)
+	for c := range wireColumns {
+		if m.shown[c] && x >= m.at[c]-wireGap/2 {
+			found = c
+		}
+	}
+	return found
+}
+
+// numberEdge is the right edge of a column's numbers.
+func (m wireLayout) numberEdge(c wireColumn) float32 {
+	if c == wireMargin {
+		return m.bar - wireBarSpace
+	}
+	return m.at[c] + m.wide[c]
+}
