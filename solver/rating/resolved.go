@@ -97,14 +97,6 @@ func (p *item) outer() float64 {
 	return r
 }
 
-// current returns the current in A; ok is false for a fixed heat, an unknown or an unassigned current.
-func (p *item) current() (a float64, ok bool) {
-	if p.load == nil || !p.load.CurrentA.OK {
-		return 0, false
-	}
-	return p.load.CurrentA.V, true
-}
-
 // loadKnown tells whether the heat of a conductor is known. Earth conductors and everything that is no conductor make none.
 func (p *item) loadKnown() bool {
 	if !p.metal {
@@ -114,12 +106,4 @@ func (p *item) loadKnown() bool {
 		return p.src.Role == section.RoleEarth
 	}
 	return !p.load.Unknown
-}
-
-// idle tells whether the part makes no heat of its own.
-func (p *item) idle() bool {
-	if !p.metal || p.load == nil {
-		return true
-	}
-	return p.load.CurrentA.Or(0) == 0 && p.load.HeatWM.Or(0) == 0
 }
