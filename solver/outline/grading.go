@@ -1,16 +1,19 @@
 package outline
 
-import "math"
+import (
+	"math"
+	"sort"
+)
 
 // Measured on the finite-element cases and on thin metal walls against three times finer panels: a few mK at fineness 1.
 const (
 	modes       = 5    // per panel
-	inCorner    = 12.0 // the shorter inside over the scale of lengths in a corner, where densities grow like distance^(−1/3)
-	fromCorner  = 0.72 // growth of lengths away from a corner: fourfold from panel to panel
+	inCorner    = 60.0 // the shorter inside over the scale of lengths in a corner, where densities grow like distance^(−1/3)
+	fromCorner  = 1.5  // growth of lengths away from a corner: e^1.5 from panel to panel
 	perHarmonic = 10.0 // a panel at distance r from a centre resolves harmonic m if it is no longer than perHarmonic·r/m
 	visible     = 0.1  // a harmonic that has decayed to this no longer needs resolving
-	reach       = 2.0  // no panel is longer than this times the distance to a centre
-	thinMetal   = 1e-4 // m: an error of the flux into a layer of good metal grows as the layer gets thinner
+	reach       = 1.4  // no panel is longer than this times the distance to a centre
+	thinMetal   = 2e-4 // m: an error of the flux into a layer of good metal grows as the layer gets thinner
 )
 
 // grading decides how long a panel may be.
@@ -21,7 +24,7 @@ type grading struct {
 
 func newGrading(r *Rect, fineness float64) grading {
 	for _, l := range r.Layers {
-		if l.K > 5 && l.Thickness < thinMetal {
+		if l.K > 5 && l.Thickness <= thinMetal {
 			fineness *= 1.5
 			break
 		}
@@ -53,36 +56,50 @@ func (g *grading) length(e *edge, discs []Disc, s float64) float64 {
 	return l
 }
 
-// cuts divides e into panels of those lengths: at equal steps of ∫ ds/length.
+// cuts divides e into panels of those lengths: at equal steps of ∫ ds/length, taken from both ends so that mirrored edges have mirrored cuts.
 func (g *grading) cuts(e *edge, discs []Disc) []float64 {
-	at, sum := []float64{0}, []float64{0}
-	before := g.length(e, discs, 0)
-	for s, total := 0.0, 0.0; s < e.length; {
+	middle := e.length / 2
+	left, leftSum := march(middle, func(s float64) float64 { return g.length(e, discs, s) })
+	right, rightSum := march(middle, func(s float64) float64 { return g.length(e, discs, e.length-s) })
+	a, b := leftSum[len(left)-1], rightSum[len(right)-1]
+	n := max(2, int(math.Ceil(a+b-0.05)))
+	cuts := make([]float64, n+1)
+	for i := range cuts {
+		if want := (a + b) * float64(i) / float64(n); want <= a {
+			cuts[i] = lookUp(left, leftSum, want)
+		} else {
+			cuts[i] = e.length - lookUp(right, rightSum, (a+b)*float64(n-i)/float64(n))
+		}
+	}
+	cuts[0], cuts[n] = 0, e.length
+	return cuts
+}
+
+// march tabulates ∫ ds/length from 0 to end.
+func march(end float64, length func(s float64) float64) (at, sum []float64) {
+	at, sum = []float64{0}, []float64{0}
+	before := length(0)
+	for s, total := 0.0, 0.0; s < end; {
 		step := before / 4
-		if e.length-s < 1.5*step {
-			step = e.length - s
-			s = e.length
+		if end-s < 1.5*step {
+			step = end - s
+			s = end
 		} else {
 			s += step
 		}
-		l := g.length(e, discs, s)
+		l := length(s)
 		total += step / 2 * (1/before + 1/l)
 		before = l
 		at, sum = append(at, s), append(sum, total)
 	}
-	total := sum[len(sum)-1]
-	n := int(math.Ceil(total - 0.05))
-	cuts := make([]float64, n+1)
-	for i, j := 1, 1; i < n; i++ {
-		want := total * float64(i) / float64(n)
-		for sum[j] < want {
-			j++
-		}
-		t := (want - sum[j-1]) / (sum[j] - sum[j-1])
-		cuts[i] = at[j-1] + t*(at[j]-at[j-1])
-	}
-	cuts[n] = e.length
-	return cuts
+	return at, sum
+}
+
+// lookUp inverts the table.
+func lookUp(at, sum []float64, want float64) float64 {
+	j := min(max(sort.SearchFloat64s(sum, want), 1), len(sum)-1)
+	t := (want - sum[j-1]) / (sum[j] - sum[j-1])
+	return at[j-1] + t*(at[j]-at[j-1])
 }
 
 // panels cuts every edge and numbers the unknowns and the ends of cells.

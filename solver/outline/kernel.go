@@ -17,24 +17,28 @@ type potential struct {
 // at fills the first p entries. Legendre functions Q_n: Abramowitz and Stegun 8.5.3 (recurrence in n), 8.4.2 (Q_0); their integrals follow
 // from (2n+1) Q_n = Q'_{n+1} − Q'_{n−1}.
 func (f *potential) at(w complex128, p int, flipped, second bool) {
-	up, down := w+1, w-1
-	var lu, ld complex128
+	right, left := w+1, w-1 // of the ends
+	var lr, ll complex128
 	if flipped {
-		lu, ld = clog(-up), clog(-down)
+		lr, ll = clog(-right), clog(-left)
 	} else {
-		lu, ld = clog(up), clog(down)
+		lr, ll = clog(right), clog(left)
 	}
-	f.legendreQ(w, 0.5*(lu-ld), p+1)
-	e := 0.5 * (up*lu - down*ld) // w Q_0 + ½ ln(w²−1), finite at ±1
+	n := p
+	if second {
+		n++
+	}
+	f.legendreQ(w, scale(0.5, lr-ll), n)
+	e := scale(0.5, right*lr-left*ll) // w Q_0 + ½ ln(w²−1), finite at ±1
 	q := &f.q
-	f.first[0] = 2*e - 2
+	f.first[0] = e + e - 2
 	for k := 1; k < p; k++ {
 		f.first[k] = scale(2/float64(2*k+1), q[k+1]-q[k-1])
 	}
 	if !second {
 		return
 	}
-	f.second[0] = 0.5*(up*up*lu-down*down*ld) - 3*w
+	f.second[0] = scale(0.5, right*right*lr-left*left*ll) - scale(3, w)
 	if p > 1 {
 		f.second[1] = scale(2.0/3, scale(0.2, q[3]-q[1])-(e-1))
 	}
@@ -43,8 +47,8 @@ func (f *potential) at(w complex128, p int, flipped, second bool) {
 	}
 }
 
-// legendreQ fills q[0..n] given Q_0. Upwards the recurrence loses |w+√(w²−1)|^(2n), so away from the panel it runs downwards on the
-// ratios (Gautschi, SIAM Review 9, 1967).
+// legendreQ fills q[0..n] given Q_0. Upwards the recurrence loses |w+√(w²−1)|^(2n), so away from the panel it runs downwards from a start far
+// enough above n and is scaled to Q_0 (Miller's algorithm; Gautschi, SIAM Review 9, 1967).
 func (f *potential) legendreQ(w, q0 complex128, n int) {
 	q := &f.q
 	q[0] = q0
@@ -52,30 +56,40 @@ func (f *potential) legendreQ(w, q0 complex128, n int) {
 	if size < 4 {
 		q[1] = w*q0 - 1
 		for k := 1; k < n; k++ {
-			c := 1 / float64(k+1)
-			q[k+1] = scale(float64(2*k+1)*c, w*q[k]) - scale(float64(k)*c, q[k-1])
+			q[k+1] = scale(up[k], w*q[k]) - scale(over[k], q[k-1])
 		}
 		return
 	}
-	extra := 6
+	extra := 7
 	switch {
 	case size > 900:
 		extra = 2
 	case size > 64:
 		extra = 3
 	case size > 16:
-		extra = 4
+		extra = 5
 	}
-	r := scale(0.5, inverse(w)) // its limit for large k and w
-	ratio := [maxModes + 2]complex128{}
+	a, b := complex128(0), complex(1, 0) // Q_{k+1}, Q_k but for a factor
 	for k := n + extra; k > 0; k-- {
-		r = scale(float64(k), inverse(scale(float64(2*k+1), w)-scale(float64(k+1), r)))
 		if k <= n {
-			ratio[k] = r
+			q[k] = b
 		}
+		a, b = b, scale(down[k], w*b)-scale(under[k], a)
 	}
+	c := q0 * inverse(b)
 	for k := 1; k <= n; k++ {
-		q[k] = q[k-1] * ratio[k]
+		q[k] *= c
+	}
+}
+
+// Coefficients of the recurrence (k+1) Q_{k+1} = (2k+1) w Q_k − k Q_{k−1}, solved for either end.
+var up, over, down, under [maxModes + 10]float64
+
+func init() {
+	for k := 1; k < len(up); k++ {
+		n := float64(k)
+		up[k], over[k] = (2*n+1)/(n+1), n/(n+1)
+		down[k], under[k] = (2*n+1)/n, (n+1)/n
 	}
 }
 

@@ -47,17 +47,17 @@ func TestOuterCondition(t *testing.T) {
 // TestInterface checks that temperature and heat flow are continuous where medium and layers meet.
 func TestInterface(t *testing.T) {
 	r, rods := steel()
-	r.Layers[0].K = 2 // the fluxes into good metal are too small to difference
-	w := solveWhole(r, rods, 2, true)
+	r.Layers[0].K = 0.4 // gradients in good metal are too small to difference
+	w := solveWhole(r, rods, 3, true)
 	at := func(z complex128) float64 { return w.wall.InWall(w.y, w.src, z) }
 	for _, c := range []struct {
 		z, n    complex128
 		in, out float64
-	}{{complex(0.0213, 0), -1i, 0.03, 2}, {complex(0.05, 0.017), 1, 0.03, 2}, {complex(0.0213, 0.031), 1i, 2, 0.2}} {
+	}{{complex(0.0213, 0), -1i, 0.03, 0.4}, {complex(0.05, 0.017), 1, 0.03, 0.4}, {complex(0.0213, 0.031), 1i, 0.4, 0.2}} {
 		const e = 1e-5
 		in := c.in * (4*at(c.z-e*c.n) - 3*at(c.z) - at(c.z-2*e*c.n)) / (2 * e)
 		out := c.out * (3*at(c.z) - 4*at(c.z+e*c.n) + at(c.z+2*e*c.n)) / (2 * e)
-		if !near(in, out, 0.03) {
+		if !near(in, out, 0.05) {
 			t.Errorf("at %v: heat flow %.3f and %.3f W/m²", c.z, in, out)
 		}
 	}
@@ -102,8 +102,8 @@ func TestReciprocity(t *testing.T) {
 	s := New(r, []Disc{point(0.012 + 0.004i), point(0.041 + 0.026i)}, 1)
 	a := s.Respond(s.bare(1, 0), false)
 	b := s.Respond(s.bare(0, 1), false)
-	there, here := s.InWall(a, s.bare(1, 0), 0.041+0.026i), s.InWall(b, s.bare(0, 1), 0.012+0.004i)
-	if !near(there, here, 1e-5) {
+	there, here := s.At(a, 0.041+0.026i), s.At(b, 0.012+0.004i) // the direct part is the same anyhow
+	if !near(there, here, 2e-5) {
 		t.Errorf("%.7f there, %.7f here", there, here)
 	}
 }
@@ -119,7 +119,7 @@ func TestMirror(t *testing.T) {
 	}
 	m := solveWhole(r, mirrored, 1, true)
 	for i := range rods {
-		if d := w.core[i] - m.core[i]; !(math.Abs(d) < 1e-3) { // the cuts of an edge are not exactly mirrored
+		if d := w.core[i] - m.core[i]; !(math.Abs(d) < 1e-6) {
 			t.Errorf("part %d: %.6f and %.6f", i, w.core[i], m.core[i])
 		}
 	}
@@ -178,7 +178,7 @@ func TestLinear(t *testing.T) {
 	}
 	a, b, g := s.Respond(double, true), s.Respond(w.src, false), s.Respond(zero, true)
 	for i := range a {
-		if d := a[i] - 2*b[i] - g[i]; !(math.Abs(d) <= 1e-9*(1+math.Abs(a[i])+math.Abs(g[i]))) {
+		if d := a[i] - 2*b[i] - g[i]; !(math.Abs(d) <= 1e-7*(1+math.Abs(a[i])+math.Abs(g[i]))) {
 			t.Fatalf("unknown %d: %g, %g and %g", i, a[i], b[i], g[i])
 		}
 	}
@@ -198,16 +198,16 @@ func TestMove(t *testing.T) {
 	y := s.Respond(fresh.src, true)
 	b := [][]complex128{make([]complex128, 17), make([]complex128, 9), make([]complex128, 9)}
 	s.Incoming(y, b)
-	q := &rods[1]
 	got := real(b[1][0])
 	want := make([]complex128, 9)
 	fresh.wall.IncomingAt(1, fresh.y, want)
 	if !(math.Abs(got-real(want[0])) < 2e-3) {
 		t.Errorf("b_0 %.6f after Move, %.6f fresh", got, real(want[0]))
 	}
-	if s.Move(1, complex(0.03, q.radius)) {
+	if s.Move(0, complex(0.03, rods[0].radius)) {
 		t.Error("coarse panels are said to resolve a part on the floor")
 	}
+	s.Move(0, rods[0].c)
 	s.Move(1, from)
 	if y = s.Respond(w.src, true); !slices.Equal(y, w.y) {
 		t.Error("moving back is not the start again")
