@@ -54,7 +54,6 @@ func read(files fs.FS, dir string) (*Catalog, error) {
 		}
 	}
 	c.sortWires()
-	c.listSizes()
 	return c, nil
 }
 
@@ -112,7 +111,11 @@ func (c *Catalog) takeConductors(s sheet) error {
 	if err != nil {
 		return err
 	}
-	return c.conductors.addAll(c, rows)
+	if err := c.conductors.addAll(c, rows); err != nil {
+		return err
+	}
+	c.listSizes()
+	return nil
 }
 
 func (c *Catalog) takeWires(s sheet) error {

@@ -44,7 +44,7 @@ func nearest(words []string, word string, n int) []string {
 		p := plainWord(w)
 		d, longer := distance(word, p), max(utf8.RuneCountInString(word), len(p))
 		if len(word) > 2 && strings.Contains(p, word) || len(p) > 2 && strings.Contains(word, p) {
-			d = 1 + d/4
+			d = min(d, 1+d/4)
 		}
 		if d <= longer/2 {
 			all = append(all, scored{w, d})

@@ -189,3 +189,12 @@ func count(of ...bool) (n int) {
 	}
 	return n
 }
+
+func BenchmarkParse(b *testing.B) {
+	c := Load()
+	for b.Loop() {
+		if _, err := c.Parse("3x 12 thhn"); err != nil {
+			b.Fatal(err)
+		}
+	}
+}
