@@ -2,11 +2,9 @@ package ui
 
 import (
 	"fmt"
-	"math"
 	"strings"
 
 	"packrise/render"
-	"packrise/solver/heat"
 	"packrise/solver/rating"
 	"packrise/solver/section"
 )
@@ -41,17 +39,15 @@ func (k *Desk) Sentence() (answer, assumed string, state State) {
 	return "Solving …", "", Unknown
 }
 
-// stateOf judges a result on its unrounded values.
+// stateOf is the colour of the result's state word.
 func stateOf(r *rating.Result) State {
-	switch {
-	case r.Status == heat.ThermalRunaway:
-		return Over
-	case r.Governing == nil:
-		return Unknown
-	case r.Governing.MarginK < 0:
+	switch r.State() {
+	case rating.Within:
+		return Within
+	case rating.OverWord:
 		return Over
 	}
-	return Within
+	return Unknown
 }
 
 // refusal puts the first problem that stops the work into a sentence and says how many more there are.
@@ -115,7 +111,7 @@ func (k *Desk) Scene() render.Scene {
 	}
 	s.Shapes, s.Readings, s.AmbientC, s.Notes = r.Shapes, r.Readings(), r.AmbientC, r.Notes
 	s.Bad = nil
-	if r.Status != heat.ThermalRunaway {
+	if r.Solved() {
 		s.Field = r
 	}
 	return s
@@ -156,37 +152,9 @@ func (k *Desk) Status() string {
 
 // statusLine says how the answer came about.
 func statusLine(r *rating.Result, draft bool) string {
-	parts := []string{fmt.Sprintf("heat in %s W/m, out %s W/m", shortNumber(r.Generated), shortNumber(r.Released+r.Absorbed))}
-	switch r.Status {
-	case heat.Converged:
-		if r.ErrorK > 0 {
-			parts = append(parts, fmt.Sprintf("±%s K numerical", shortNumber(r.ErrorK)))
-		}
-	case heat.StoppedEarly:
-		parts = append(parts, "stopped before it settled")
-	case heat.Cancelled:
-		parts = append(parts, "cancelled")
-	case heat.ThermalRunaway:
-		parts = []string{"no steady temperature exists"}
-	}
-	parts = append(parts, fmt.Sprintf("%s ms", shortNumber(1000*r.Seconds)))
+	s := r.Balance()
 	if draft {
-		parts = append(parts, "coarse while dragging")
+		s += " · coarse while dragging"
 	}
-	return strings.Join(parts, " · ")
-}
-
-// shortNumber writes a number with two or three figures that matter.
-func shortNumber(v float64) string {
-	switch a := math.Abs(v); {
-	case a == 0:
-		return "0"
-	case a >= 100:
-		return fmt.Sprintf("%.0f", v)
-	case a >= 1:
-		return fmt.Sprintf("%.1f", v)
-	case a >= 0.001:
-		return fmt.Sprintf("%.2g", v)
-	}
-	return "under 0.001"
+	return strings.TrimPrefix(s, " · ")
 }

@@ -33,7 +33,7 @@ func FirstDesign() (*section.Document, error) {
 	return all[0].doc, nil
 }
 
-const firstDemo = "umbilical.yaml"
+const firstDemo = "robot-umbilical.yaml"
 
 // Picture solves a design without a window and writes its picture as PNG; it returns the answer's sentence.
 func Picture(ctx context.Context, cat *catalog.Catalog, d *section.Document, path string) (answer string, problems []section.Problem, err error) {
@@ -50,8 +50,11 @@ func Picture(ctx context.Context, cat *catalog.Catalog, d *section.Document, pat
 // sceneOf is what a picture of a solved design shows.
 func sceneOf(r *rating.Result) render.Scene {
 	s := render.Scene{
-		Shapes: r.Shapes, Readings: r.Readings(), Field: r, AmbientC: r.AmbientC, Title: r.Title,
+		Shapes: r.Shapes, Readings: r.Readings(), AmbientC: r.AmbientC, Title: r.Title,
 		Notes: r.Notes, Status: statusLine(r, false), Caution: rating.Caution,
+	}
+	if r.Solved() {
+		s.Field = r
 	}
 	s.Answer, s.Assumed = r.Sentence()
 	return s

@@ -28,20 +28,20 @@ func (v *SectionView) MouseMoved(e *desktop.MouseEvent) {
 func (v *SectionView) MouseOut() {
 	v.over = false
 	v.desk.Point("")
-	v.hint.say(nil, fyne.Position{}, v.Size())
+	v.hint.say(nil)
 }
 
 // hover puts the read-out beside the pointer.
 func (v *SectionView) hover() {
 	if !v.over && v.drag.mode != dragParts || v.camera.scale == 0 {
-		v.hint.say(nil, fyne.Position{}, v.Size())
+		v.hint.say(nil)
 		return
 	}
 	id := v.desk.Pointed()
 	if v.drag.mode == dragParts {
 		id = v.drag.id
 	}
-	v.hint.say(v.desk.readOut(id, v.camera.toMM(v.at, v.Size())), v.at, v.Size())
+	v.hint.say(v.desk.readOut(id, v.camera.toMM(v.at, v.Size())))
 }
 
 // readOut says what is at a place: the part, and the temperature there.
@@ -86,15 +86,15 @@ func readingLine(q section.Reading) string {
 	return s + ", margin " + withUnit(kelvins(m), "K")
 }
 
-// readout is a little box of text beside the pointer.
+// readout is what is under the pointer, in the upper left corner of the canvas, where it covers no part of a section that fits.
 type readout struct {
-	box   *canvas.Rectangle
+	box   *fill
 	lines [2]*canvas.Text
 }
 
 func newReadout() *readout {
-	r := &readout{box: canvas.NewRectangle(nil)}
-	r.box.CornerRadius, r.box.StrokeWidth = 4, 1
+	r := &readout{box: newFill(theme.ColorNameBackground)}
+	r.box.rect.CornerRadius = 4
 	r.box.Hide()
 	for i := range r.lines {
 		r.lines[i] = canvas.NewText("", nil)
@@ -107,49 +107,36 @@ func (r *readout) objects() []fyne.CanvasObject {
 	return []fyne.CanvasObject{r.box, r.lines[0], r.lines[1]}
 }
 
-// say shows the lines beside a position, within the canvas; no lines hide it.
-func (r *readout) say(lines []string, at fyne.Position, within fyne.Size) {
-	if len(lines) == 0 {
-		if r.box.Visible() {
-			for _, o := range r.objects() {
-				o.Hide()
-			}
-		}
-		return
-	}
-	const pad, off = 6, 16
-	var w, h float32
+// say shows the lines; no lines hide it.
+func (r *readout) say(lines []string) {
+	const off, pad = 8, 4
+	var w, y float32 = 0, off + pad
 	for i, t := range r.lines {
 		if i >= len(lines) {
 			t.Hide()
 			continue
 		}
-		t.Text, t.TextSize = lines[i], theme.CaptionTextSize()
-		t.Color = themeColor(theme.ColorNameForeground)
+		t.Text, t.TextSize, t.Color = lines[i], theme.CaptionTextSize(), themeColor(ColorNameQuiet)
+		if i == 0 {
+			t.Color = themeColor(theme.ColorNameForeground)
+		}
 		size := t.MinSize()
-		w = max(w, size.Width)
+		put(t, off+pad, y, size.Width, size.Height)
+		w, y = max(w, size.Width), y+size.Height
 		t.Show()
-		h += size.Height
+		t.Refresh()
 	}
-	x, y := at.X+off, at.Y+off
-	if x+w+2*pad > within.Width {
-		x = max(0, at.X-off-w-2*pad)
-	}
-	if y+h+2*pad > within.Height {
-		y = max(0, at.Y-off-h-2*pad)
-	}
-	r.box.FillColor, r.box.StrokeColor = themeColor(theme.ColorNameMenuBackground), themeColor(theme.ColorNameSeparator)
-	r.box.Move(fyne.NewPos(x, y))
-	r.box.Resize(fyne.NewSize(w+2*pad, h+2*pad))
-	r.box.Show()
-	row := y + pad
+	setVisible(len(lines) > 0, r.box)
+	put(r.box, off, off, w+2*pad, y+pad-off)
+}
+
+// text is what is shown.
+func (r *readout) text() string {
+	var s []string
 	for _, t := range r.lines {
 		if t.Visible() {
-			t.Move(fyne.NewPos(x+pad, row))
-			t.Resize(t.MinSize())
-			row += t.MinSize().Height
-			t.Refresh()
+			s = append(s, t.Text)
 		}
 	}
-	r.box.Refresh()
+	return strings.Join(s, "\n")
 }

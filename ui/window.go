@@ -7,7 +7,6 @@ import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/dialog"
 	"fyne.io/fyne/v2/theme"
-	"fyne.io/fyne/v2/widget"
 
 	"packrise/solver/catalog"
 	"packrise/solver/section"
@@ -33,7 +32,7 @@ type Window struct {
 	frame   *frame
 	content *fyne.Container
 	cmds    *commands
-	status  *widget.Label
+	status  *quietLine
 	putLine fyne.CanvasObject
 	menu    *menus
 	version string
@@ -90,10 +89,7 @@ func (w *Window) build() {
 	k := w.desk
 	w.cmds = newCommands(w)
 	w.putLine = NewPutLine(k)
-	w.status = widget.NewLabelWithStyle("", fyne.TextAlignTrailing, fyne.TextStyle{})
-	w.status.Importance = widget.LowImportance
-	w.status.SizeName = theme.SizeNameCaptionText
-	w.status.Truncation = fyne.TextTruncateEllipsis
+	w.status = newQuietLine()
 	c := w.cmds
 	sentence := NewSentenceView(k, w.relayout)
 	sentence.OnProblems = func() { w.showProblems() }
