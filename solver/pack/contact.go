@@ -36,6 +36,7 @@ type crowd struct {
 	rank     []int // of each disc in order, −1 when it stays
 	contacts []contact
 	since    []Disc // places when the contacts were listed
+	sizeThen float64
 }
 
 func newCrowd(discs []Disc, in Box, gap, near float64) *crowd {
@@ -75,7 +76,7 @@ func (c *crowd) list(mu, slack float64) {
 			}
 		}
 	}
-	c.since = append(c.since[:0], c.discs...)
+	c.since, c.sizeThen = append(c.since[:0], c.discs...), c.size
 }
 
 // sort orders the unknowns along the longer side, which keeps neighbours near each other in the matrix.

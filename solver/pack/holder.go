@@ -7,7 +7,7 @@ import (
 )
 
 // SmallestHolder searches for the smallest circle into which the radii fit; it returns centres about the origin and the circle's radius. Same seed, same
-// result.
+// result. It panics on a radius that is not positive and finite.
 //
 // The best of many local optima: from the concentric lay, from random scatter, and from the best so far with some discs moved into other places. For equal
 // discs up to 37 it comes within a few tenths of a percent of the best known; a proof of the least is not to be had.

@@ -2,7 +2,9 @@ package pack
 
 import (
 	"encoding/csv"
+	"math"
 	"os"
+	"slices"
 	"strconv"
 	"testing"
 )
@@ -55,5 +57,46 @@ func TestSmallestHolderAgainstPublished(t *testing.T) {
 		if r > 1.01*ref[n] || r < ref[n]-1e-5 {
 			t.Errorf("%d circles: radius %.7f, published %.7f", n, r, ref[n])
 		}
+	}
+}
+
+// TestSmallestHolderMixed: closed forms. A small disc in the gap of three (radius 2/√3 − 1) or of four (√2 − 1) costs nothing; two lie side by side; one that
+// holds the place of all others beside it decides alone.
+func TestSmallestHolderMixed(t *testing.T) {
+	for _, c := range []struct {
+		name  string
+		radii []float64
+		want  float64
+	}{
+		{"two", []float64{1, 3}, 4},
+		{"three and the gap", []float64{2/math.Sqrt(3) - 1, 1, 1, 1}, 1 + 2/math.Sqrt(3)},
+		{"four and the gap", []float64{1, 1, math.Sqrt2 - 1, 1, 1}, 1 + math.Sqrt2},
+		{"two large and two in the valleys", []float64{3, 3, 2, 2}, 6}, // Descartes: curvatures −1/6, 1/3, 1/3 give 1/2
+		{"in the other order", []float64{2, 3, 2, 3}, 6},
+	} {
+		d, r := SmallestHolder(c.radii, 1)
+		if math.Abs(r-c.want) > 1e-9*c.want {
+			t.Errorf("%s: radius %.12g, want %.12g: %v", c.name, r, c.want, d)
+		}
+	}
+}
+
+func TestSmallestHolderSeed(t *testing.T) {
+	radii := radiiOf(mixed(15, 3, 1))
+	a, r := SmallestHolder(radii, 4)
+	b, s := SmallestHolder(radii, 4)
+	if r != s || !slices.Equal(a, b) {
+		t.Errorf("the same seed gave %g and %g", r, s)
+	}
+	for i, d := range a {
+		if d.R != radii[i] {
+			t.Errorf("disc %d has radius %g, want %g", i, d.R, radii[i])
+		}
+	}
+}
+
+func BenchmarkSmallestHolder37(b *testing.B) {
+	for b.Loop() {
+		SmallestHolder(equals(37, 1), 1)
 	}
 }

@@ -11,8 +11,9 @@ import (
 //
 // Equal discs follow the trade's layers: a centre of one to five, and six more in each layer than in the one below (1-6-12, 2-8-14, 3-9-15,
 // 4-10-16, 5-11-17); the centre is the one that makes the smallest circle. Mixed discs sink into the valleys below them where that makes the circle at least
-// 2 % smaller, and where it saves 5 % more the larger go in first.
+// 2 % smaller, and where it saves 5 % more the larger go in first. It panics on a radius that is not positive and finite.
 func LayUp(radii []float64) ([]Disc, float64) {
+	checkRadii(radii)
 	if len(radii) == 0 {
 		return nil, 0
 	}

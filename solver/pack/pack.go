@@ -8,6 +8,20 @@ type Disc struct {
 	Fixed   bool // must stay where it is
 }
 
+// finite reports whether the disc has a size and a place.
+func (d Disc) finite() bool {
+	return d.R > 0 && !math.IsInf(d.R, 0) && math.Abs(d.X)+math.Abs(d.Y) < math.Inf(1)
+}
+
+// checkRadii panics on misuse.
+func checkRadii(radii []float64) {
+	for _, r := range radii {
+		if !(r > 0) || math.IsInf(r, 0) {
+			panic("pack: radii must be positive and finite")
+		}
+	}
+}
+
 // Box is the inside of a holder. Round: R > 0, centre at the origin. Rectangle: W, H > 0, lower left corner at the origin. All zero: no
 // wall.
 type Box struct{ R, W, H float64 }

@@ -1,9 +1,6 @@
 package pack
 
-import (
-	"math"
-	"slices"
-)
+import "math"
 
 // aim is what a crowd strives for: the least of
 //
@@ -52,13 +49,14 @@ func (c *crowd) press(a aim) (done bool) {
 	return false
 }
 
-// strayed is the farthest that a disc has gone since the contacts were listed.
+// strayed is the farthest that a disc's rim has gone, by moving and by growing, since the contacts were listed.
 func (c *crowd) strayed() float64 {
-	far := 0.0
+	far, most := 0.0, 0.0
 	for i, d := range c.discs {
 		far = max(far, math.Hypot(d.X-c.since[i].X, d.Y-c.since[i].Y))
+		most = max(most, d.R)
 	}
-	return far
+	return far + most*(c.size-c.sizeThen)
 }
 
 type presser struct {
@@ -70,46 +68,6 @@ type presser struct {
 	moved float64 // in the last step
 	alpha float64 // its share
 	tight float64 // largest lack of gap
-}
-
-// bears reports whether a contact carries force at the end of press, as opposed to a gap that is merely small.
-func (c *crowd) bears(t contact) bool { return t.f*c.near > t.s }
-
-// close shuts the bearing contacts' last gaps by Newton steps of least length. It gives back the old places when that makes an overlap.
-func (c *crowd) close() {
-	before := slices.Clone(c.discs)
-	all := c.contacts
-	c.contacts = slices.DeleteFunc(slices.Clone(all), func(t contact) bool { return !c.bears(t) })
-	p := presser{crowd: c}
-	p.layout()
-	for range 4 {
-		p.m.clear()
-		clear(p.b)
-		for k := range p.order {
-			p.m.add(2*k, 2*k, 1e-9)
-			p.m.add(2*k+1, 2*k+1, 1e-9)
-		}
-		for k := range p.contacts {
-			t := &p.contacts[k]
-			p.look(t)
-			t.f = 0
-			p.couple(t, 1, -t.g)
-		}
-		p.m.factor(1e-14)
-		p.m.solve(p.b)
-		for k, i := range p.order {
-			p.discs[i].X += p.b[2*k]
-			p.discs[i].Y += p.b[2*k+1]
-		}
-	}
-	c.contacts = all
-	for k := range all {
-		c.look(&all[k])
-		if all[k].g < -slack*reach(c.discs, c.in) {
-			copy(c.discs, before)
-			break
-		}
-	}
 }
 
 func (p *presser) layout() {
@@ -164,43 +122,44 @@ func (p *presser) spring(row, i int) {
 // couple enters one contact with stiffness w and push h.
 func (p *presser) couple(t *contact, w, h float64) {
 	row := 2 * p.rank[t.i]
-	xx, xy, yy := w*t.nx*t.nx, w*t.nx*t.ny, w*t.ny*t.ny
 	p.b[row] += h * t.nx
 	p.b[row+1] += h * t.ny
+	p.block(row, row, w, t)
 	if t.j == wallRound { // the wall's own curvature
 		if d := math.Hypot(p.discs[t.i].X, p.discs[t.i].Y); d > 0 {
-			e := t.f / d
-			p.m.add(row, row, e*t.ny*t.ny)
-			p.m.add(row+1, row, -e*t.nx*t.ny)
-			p.m.add(row+1, row+1, e*t.nx*t.nx)
+			p.block(row, row, t.f/d, &contact{nx: -t.ny, ny: t.nx})
 		}
 	}
-	p.m.add(row, row, xx)
-	p.m.add(row+1, row, xy)
-	p.m.add(row+1, row+1, yy)
-	last := len(p.b) - 1
-	if p.grow > 0 {
-		p.b[last] -= h * t.need
-		p.m.add(last, row, -w*t.nx*t.need)
-		p.m.add(last, row+1, -w*t.ny*t.need)
-		p.m.add(last, last, w*t.need*t.need)
+	two := t.j >= 0 && p.rank[t.j] >= 0
+	if two {
+		col := 2 * p.rank[t.j]
+		p.b[col] -= h * t.nx
+		p.b[col+1] -= h * t.ny
+		p.block(col, col, w, t)
+		p.block(row, col, -w, t)
 	}
-	if t.j < 0 || p.rank[t.j] < 0 {
+	if p.grow == 0 {
 		return
 	}
-	col := 2 * p.rank[t.j]
-	p.b[col] -= h * t.nx
-	p.b[col+1] -= h * t.ny
-	p.m.add(col, col, xx)
-	p.m.add(col+1, col, xy)
-	p.m.add(col+1, col+1, yy)
-	p.m.add(row, col, -xx)
-	p.m.add(row, col+1, -xy)
-	p.m.add(row+1, col, -xy)
-	p.m.add(row+1, col+1, -yy)
-	if p.grow > 0 {
+	last := len(p.b) - 1
+	p.b[last] -= h * t.need
+	p.m.add(last, row, -w*t.nx*t.need)
+	p.m.add(last, row+1, -w*t.ny*t.need)
+	p.m.add(last, last, w*t.need*t.need)
+	if two {
+		col := 2 * p.rank[t.j]
 		p.m.add(last, col, w*t.nx*t.need)
 		p.m.add(last, col+1, w*t.ny*t.need)
+	}
+}
+
+// block adds w n nᵀ at the rows of one disc and the columns of another, or of the same.
+func (p *presser) block(row, col int, w float64, t *contact) {
+	p.m.add(row, col, w*t.nx*t.nx)
+	p.m.add(row+1, col, w*t.nx*t.ny)
+	p.m.add(row+1, col+1, w*t.ny*t.ny)
+	if row != col {
+		p.m.add(row, col+1, w*t.nx*t.ny)
 	}
 }
 
@@ -223,12 +182,36 @@ func (p *presser) step() {
 	p.m.factor(1e-14)
 	p.dx = append(p.dx[:0], p.b...)
 	p.m.solve(p.dx)
-	primal, dual := 1.0, 1.0
-	const keep = 0.98
+	primal, dual := p.shares()
+	far, most := 0.0, 0.0
+	for k, i := range p.order {
+		far = max(far, math.Hypot(p.dx[2*k], p.dx[2*k+1]))
+		most = max(most, p.discs[i].R)
+	}
+	if p.grow > 0 {
+		far += most * max(0, p.dx[len(p.dx)-1])
+	}
+	if far*primal > p.near/4 { // no farther than the list of contacts is good for
+		primal = p.near / 4 / far
+		dual = min(dual, primal)
+	}
+	p.moved, p.alpha = far*primal, min(primal, dual)
+	p.advance(primal, dual)
+}
+
+// change is what the whole step would do to a contact's slack and force.
+func (p *presser) change(t *contact) (ds, df float64) {
+	ds = p.rate(t) + t.g - t.s
+	return ds, (p.mu-t.f*ds)/t.s - t.f
+}
+
+// shares are the parts of the step that the slacks and the forces allow.
+func (p *presser) shares() (primal, dual float64) {
+	primal, dual = 1, 1
+	const keep = 0.98 // of the way to zero
 	for k := range p.contacts {
 		t := &p.contacts[k]
-		ds := p.rate(t) + t.g - t.s
-		df := (p.mu-t.f*ds)/t.s - t.f
+		ds, df := p.change(t)
 		if ds < 0 {
 			primal = min(primal, -keep*t.s/ds)
 		}
@@ -236,20 +219,16 @@ func (p *presser) step() {
 			dual = min(dual, -keep*t.f/df)
 		}
 	}
-	far := 0.0
-	for k := range p.order {
-		far = max(far, math.Hypot(p.dx[2*k], p.dx[2*k+1]))
-	}
-	if far*primal > p.near/4 {
-		primal = p.near / 4 / far
-		dual = min(dual, primal)
-	}
+	return primal, dual
+}
+
+// advance takes the step.
+func (p *presser) advance(primal, dual float64) {
 	sum := 0.0
 	p.tight = 0
 	for k := range p.contacts {
 		t := &p.contacts[k]
-		ds := p.rate(t) + t.g - t.s
-		df := (p.mu-t.f*ds)/t.s - t.f
+		ds, df := p.change(t)
 		t.s += primal * ds
 		t.f += dual * df
 		sum += t.s * t.f
@@ -262,7 +241,6 @@ func (p *presser) step() {
 	if p.grow > 0 {
 		p.size += primal * p.dx[len(p.dx)-1]
 	}
-	p.moved, p.alpha = far*primal, min(primal, dual)
 	p.lower(sum)
 }
 

@@ -17,6 +17,11 @@ func PushApart(discs []Disc, in Box, held int, gap float64) (placed []Disc, ok b
 	if held < -1 || held >= len(discs) {
 		panic("pack: the held disc does not exist")
 	}
+	for _, d := range discs {
+		if !d.finite() {
+			return discs, false
+		}
+	}
 	p := pusher{from: discs, in: in, gap: gap, tol: 2e-10 * reach(discs, in), stays: make([]bool, len(discs))}
 	for i, d := range discs {
 		p.stays[i] = d.Fixed || i == held
@@ -27,7 +32,7 @@ func PushApart(discs []Disc, in Box, held int, gap float64) (placed []Disc, ok b
 	}
 	p.from = start
 	out, ok := p.run(start)
-	if !ok {
+	if _, _, depth := Overlap(out, in); !ok || !(depth <= 5*p.tol) { // fixed discs may overlap each other for good
 		return discs, false
 	}
 	for i := range out {

@@ -14,19 +14,32 @@ var ErrNoWall = errors.New("parts cannot settle without a holder: give the holde
 
 // FitError says why discs do not go into a box.
 type FitError struct {
-	Disc  int     // index of a disc that is too large or fixed in the way, −1: all together
-	Fill  float64 // discs' area over the box's
+	Why   Misfit
+	Disc  int     // index of the disc that Why is about; −1: all together
+	Fill  float64 // area of the discs over that of the box
 	Count int     // discs in all
-	Fixed bool    // the disc is held where it overlaps another or the wall
 }
 
-// Error names the fill and what to do, in one sentence.
+// Misfit is the kind of a FitError.
+type Misfit int
+
+// Kinds of misfit.
+const (
+	TooFull  Misfit = iota // no arrangement was found
+	TooLarge               // the disc is larger than the empty box
+	Stuck                  // the disc is fixed where it overlaps another fixed one or the wall
+	NoSize                 // the disc's radius or its fixed place is no usable number
+)
+
+// Error names the part or the fill, and what to do, in one sentence.
 func (e *FitError) Error() string {
-	switch {
-	case e.Fixed:
-		return fmt.Sprintf("part number %d is held in a place where it overlaps another held part or the wall: move it or let it go", e.Disc+1)
-	case e.Disc >= 0:
+	switch e.Why {
+	case TooLarge:
 		return fmt.Sprintf("part number %d is larger than the inside of the holder: choose a larger holder or a smaller part", e.Disc+1)
+	case Stuck:
+		return fmt.Sprintf("part number %d is held in a place where it overlaps another held part or the wall: move it or let it go", e.Disc+1)
+	case NoSize:
+		return fmt.Sprintf("part number %d has no size that can be used: give it an outside diameter above zero", e.Disc+1)
 	}
 	return fmt.Sprintf("no arrangement found for the %d parts, which would fill %.0f %% of the inside: choose a larger holder or take parts out", e.Count, 100*e.Fill)
 }
@@ -53,7 +66,7 @@ func Settle(discs []Disc, in Box, seed uint64) ([]Disc, error) {
 	if out, ok := squeeze(discs, in, rng); ok {
 		return rest(out, in), nil
 	}
-	return nil, &FitError{Disc: -1, Fill: fill(discs, in), Count: len(discs)}
+	return nil, misfit(TooFull, -1, discs, in)
 }
 
 // rest lets discs that lie free of overlap sink together, without friction, until their weights are in balance with the forces at the contacts.
@@ -102,12 +115,13 @@ func means(discs []Disc) (r, r2 float64) {
 	return r / n, r2 / n
 }
 
-func fill(discs []Disc, in Box) float64 {
+// misfit makes the error with the fill counted.
+func misfit(why Misfit, disc int, discs []Disc, in Box) *FitError {
 	s := 0.0
 	for _, d := range discs {
 		s += math.Pi * d.R * d.R
 	}
-	return s / in.area()
+	return &FitError{Why: why, Disc: disc, Fill: s / in.area(), Count: len(discs)}
 }
 
 // checkFit finds discs that can never fit: too large, or held in an overlap.
@@ -115,18 +129,23 @@ func checkFit(discs []Disc, in Box) error {
 	var held []Disc
 	var index []int
 	for i, d := range discs {
-		if !(d.R <= in.room()) {
-			return &FitError{Disc: i, Fill: fill(discs, in), Count: len(discs)}
+		if !d.Fixed {
+			d.X, d.Y = 0, 0
 		}
-		if d.Fixed {
+		switch {
+		case !d.finite():
+			return misfit(NoSize, i, discs, in)
+		case d.R > in.room():
+			return misfit(TooLarge, i, discs, in)
+		case d.Fixed:
 			held, index = append(held, d), append(index, i)
 		}
 	}
 	if i, j, depth := Overlap(held, in); depth > 1e-9*reach(discs, in) {
-		return &FitError{Disc: index[max(i, j)], Fill: fill(discs, in), Count: len(discs), Fixed: true}
+		return misfit(Stuck, index[max(i, j)], discs, in)
 	}
-	if f := fill(discs, in); f > 1 {
-		return &FitError{Disc: -1, Fill: f, Count: len(discs)}
+	if e := misfit(TooFull, -1, discs, in); e.Fill > 1+1e-9 {
+		return e
 	}
 	return nil
 }

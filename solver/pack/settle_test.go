@@ -169,6 +169,15 @@ func TestSettleTightEquals(t *testing.T) {
 	}
 }
 
+// TestSettleToTheLastDigit: a holder that the discs fill exactly still takes them.
+func TestSettleToTheLastDigit(t *testing.T) {
+	for _, n := range []int{1, 2, 3, 4, 5, 7, 8, 12, 19} {
+		_, r := SmallestHolder(equals(n, 1), 1)
+		mustSettle(t, fmt.Sprintf("%d equals", n), alike(n), Box{R: r}, 1)
+	}
+	mustSettle(t, "slot", alike(4), Box{W: 8, H: 2}, 1)
+}
+
 // TestSettleSeventyPercent: mixed discs go in up to 70 % of the area.
 func TestSettleSeventyPercent(t *testing.T) {
 	for _, n := range []int{20, 60, 200} {
@@ -215,7 +224,8 @@ func TestSettleRefuses(t *testing.T) {
 		{"no wall", alike(3), Box{}, "without a holder"},
 		{"too large", []Disc{{R: 1}, {R: 3}}, Box{R: 2}, "part number 2 is larger"},
 		{"too wide", []Disc{{R: 1}, {R: 3}}, Box{W: 20, H: 5}, "part number 2 is larger"},
-		{"not a number", []Disc{{R: math.NaN()}}, Box{R: 2}, "part number 1"},
+		{"not a number", []Disc{{R: math.NaN()}}, Box{R: 2}, "part number 1 has no size"},
+		{"nothing", []Disc{{R: 1}, {}}, Box{R: 2}, "part number 2 has no size"},
 		{"too full", alike(20), Box{R: 4.7}, "fill 91 %"},
 		{"more than full", alike(20), Box{R: 4}, "fill 125 %"},
 		{"held in the wall", []Disc{{R: 1}, {X: 3.5, R: 1, Fixed: true}}, Box{R: 4}, "part number 2 is held"},

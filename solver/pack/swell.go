@@ -89,7 +89,10 @@ func squeeze(discs []Disc, in Box, rng *rand.Rand) ([]Disc, bool) {
 		scatter(out, in, rng)
 		soften(out, in, 1, 60)
 		size := swell(out, in, 0, 1.001, 1e-4*reach(discs, in))
-		if size >= 1 {
+		if size > 0.999 && size < 1 { // it may fit to the last digit
+			size = swell(out, in, 0, 0, 1e-13*reach(discs, in))
+		}
+		if size >= 1-1e-11 {
 			return out, true
 		}
 		if best = max(best, size); try >= 5 && best < 0.9 {
