@@ -103,7 +103,12 @@ func (c *Cloud) regular(z complex128) float64 {
 	if len(c.B) == 0 {
 		return 0
 	}
-	return horner(c.B, scale(1/c.Circle.R, z))
+	w := scale(1/c.Circle.R, z)
+	top := len(c.B)
+	if r := size(w); r < 1 {
+		top = min(top, 1+int(-20/math.Log(r+1e-300))) // e⁻²⁰ is nothing beside the first terms
+	}
+	return horner(c.B[:top], w)
 }
 
 // horner returns Re Σ d[m-1] x^m.

@@ -25,6 +25,7 @@ type cell struct {
 	half   float64
 	kids   int32 // index of the first of four, 0 for a leaf
 	solid  int32 // 1 + the disc that covers the cell, 0 if none does
+	rim    bool  // too near the circle to expand the regular field about it
 	near   []int32
 	images []int32
 	b      [treeOrder + 1]complex128
@@ -49,7 +50,8 @@ func NewTree(c *Cloud, drawn []float64, mid complex128, side float64) *Tree {
 // divide splits cell i until few sources are near.
 func (t *Tree) divide(i, depth int) {
 	c := t.cells[i]
-	if c.solid > 0 || depth >= treeDepth || len(c.near)+len(c.images) <= fewNear && depth > 2 || t.outside(&c) {
+	few := len(c.near)+len(c.images) <= fewNear && !t.atRim(&c)
+	if c.solid > 0 || depth >= treeDepth || few && depth > 2 || t.outside(&c) {
 		t.finish(&t.cells[i])
 		return
 	}
@@ -71,6 +73,11 @@ func (t *Tree) outside(c *cell) bool {
 		return false
 	}
 	return size(c.mid) > t.cloud.Circle.R+math.Sqrt2*c.half
+}
+
+// atRim tells whether a cell is so near the circle that the regular field, which may end there, has to be summed point by point.
+func (t *Tree) atRim(c *cell) bool {
+	return len(t.cloud.B) > 0 && size(c.mid)+2*math.Sqrt2*c.half > t.cloud.Circle.R
 }
 
 // inherit moves the parent's expansion and sorts its near sources into far ones, which are expanded, and near ones.
@@ -118,9 +125,8 @@ func (t *Tree) finish(c *cell) {
 	if c.solid > 0 {
 		return
 	}
-	rho := math.Sqrt2 * c.half
-	if len(t.cloud.B) > 0 && size(c.mid) < t.cloud.Circle.R+rho {
-		t.cloud.shifted(c.mid, rho, c.b[:])
+	if c.rim = t.atRim(c); !c.rim && len(t.cloud.B) > 0 {
+		t.cloud.shifted(c.mid, math.Sqrt2*c.half, c.b[:])
 	}
 }
 
@@ -174,6 +180,9 @@ func (t *Tree) At(z complex128) (temp float64, disc int) {
 	}
 	for _, j := range c.images {
 		temp += t.cloud.image(int(j), z)
+	}
+	if c.rim {
+		temp += t.cloud.regular(z)
 	}
 	return temp, -1
 }

@@ -116,26 +116,14 @@ func (g *region) newCircle() *harmonic.Circle {
 	default:
 		c.RhoInf = 1
 	}
-	reach := g.reach()
-	f := 1.0
 	for n := 1; n <= maxSigma; n++ {
 		s := w.Port(n).Rho - c.RhoInf
-		if f *= reach; math.Abs(s)*f < 1e-7 {
+		if math.Abs(s) < 1e-6 {
 			break
 		}
 		c.Sigma = append(c.Sigma, s)
 	}
 	return c
-}
-
-// reach is the largest ratio (c_i/R)² of the pieces' places: what they send to the wall's harmonic n falls off like its power.
-func (g *region) reach() float64 {
-	q := 0.0
-	for i := range g.pieces {
-		c := &g.pieces[i]
-		q = math.Max(q, math.Min(1, (math.Hypot(real(c.at), imag(c.at))+c.a)/g.r))
-	}
-	return q * q
 }
 
 // lift turns unknowns into the system's scaled amplitudes, in place; drop is its adjoint.

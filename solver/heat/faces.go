@@ -141,7 +141,7 @@ func (s *state) wallFaces(w *Wall) (hot []float64, mean, released float64) {
 		}
 	}
 	hot[0] = math.Max(hot[0], s.insideFace())
-	return hot, mean, s.leaves(w, mean, waves[len(rings)])
+	return hot, mean, s.leaves(w, mean)
 }
 
 // insideFace is the hottest temperature of the wall's inside at the places nearest to the pieces.
@@ -155,19 +155,12 @@ func (s *state) insideFace() float64 {
 	return hot
 }
 
-// leaves integrates the film's heat over the outside's temperatures; where the outside is held it is what the medium's sources carry.
-func (s *state) leaves(w *Wall, mean float64, outside []complex128) float64 {
-	r := s.wall.Outside()
+// leaves is the heat that the film takes at the outside's mean temperature; where the outside is held, what the medium's sources carry.
+func (s *state) leaves(w *Wall, mean float64) float64 {
 	if math.IsInf(w.Film, 1) {
 		return s.carried()
 	}
-	var t [rimPoints]float64
-	sampleRim(outside, &t)
-	sum := 0.0
-	for _, v := range t {
-		sum += w.Film * (mean + v - w.Ambient)
-	}
-	return sum / rimPoints * 2 * math.Pi * r
+	return w.Film * (mean - w.Ambient) * 2 * math.Pi * s.wall.Outside()
 }
 
 // carried is the heat that the medium's sources send through any closed line round them, W/m.

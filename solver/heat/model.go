@@ -211,11 +211,7 @@ func (m *Model) result(s *state) *Result {
 	m.read(r, s)
 	m.readWall(r, s)
 	r.Unknowns = m.top.sys.Len()
-	f := &field{top: s}
-	if s.rect != nil {
-		f.shift = complex(m.p.Clearance/2, m.p.Clearance/2)
-	}
-	r.Field = f
+	r.Field = &field{top: s, shift: m.shift()}
 	return r
 }
 
@@ -265,9 +261,6 @@ func (m *Model) read(r *Result, s *state) {
 		}
 	}
 }
-
-// Move puts a part of the top level elsewhere and rewrites only its blocks: for dragging. Orders are fixed at the larger of old and new.
-func (m *Model) Move(part int, x, y float64) { panic("heat: not built") }
 
 // nowhere is the field of nothing.
 type nowhere struct{}

@@ -90,6 +90,12 @@ func (r *rectWall) write(g *region) {
 	r.y = make([]float64, r.sys.Len())
 }
 
+// move puts piece i elsewhere; false if the wall has to be discretised anew.
+func (r *rectWall) move(g *region, i int) bool {
+	r.discs[i].C = g.pieces[i].at
+	return r.sys.Move(i, r.discs[i].C)
+}
+
 // bring adds what the wall sends back to scaled outgoing amplitudes v and heats charge (W/m, nil for none): the scaled incoming amplitudes
 // to y, the mean temperatures to mean unless it is nil. ground adds the drive of sides and ambient.
 func (r *rectWall) bring(g *region, charge, v []float64, ground bool, y, mean []float64) {

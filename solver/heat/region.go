@@ -103,13 +103,16 @@ func (g *region) orderOf(i int, f float64) int {
 		}
 	}
 	if g.rect != nil {
-		return max(m, g.rect.order(g, c, f, m))
+		return min(max(m, g.rect.order(g, c, f, m)), maxOrderRect)
 	}
 	return max(m, g.orderAtWall(c, f, m))
 }
 
 // maxOrder bounds the harmonics of a piece: a large one that touches small ones needs a/x of them.
 const maxOrder = harmonic.MaxOrder
+
+// maxOrderRect is maxOrder within a rectangle, whose outline keeps no more.
+const maxOrderRect = 64
 
 // lowest is the fewest harmonics of any piece at factor f of the order rule, for a medium of ratio times the conductivity of its
 // skin. Where the two are alike harmonics die out by themselves.
