@@ -26,7 +26,8 @@ type request[Req any] struct {
 }
 
 // New starts a runner. work runs on the runner's goroutine; done is called there after each job with its request's revision (the caller hops to
-// its own goroutine).
+// its own goroutine). An interrupted job's result is delivered too, whatever work returned by then: the caller drops it by its revision. Revisions
+// come in rising order.
 func New[Req, Res any](work func(context.Context, Req) Res, done func(rev uint64, req Req, res Res)) *Runner[Req, Res] {
 	r := &Runner[Req, Res]{
 		work:  work,
