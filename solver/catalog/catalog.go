@@ -1,6 +1,7 @@
 package catalog
 
 import (
+	"cmp"
 	"fmt"
 	"io/fs"
 	"slices"
@@ -84,7 +85,7 @@ func (c *Catalog) take(s sheet) error {
 	return c.takeThickness(s)
 }
 
-func add[V any, R rowOf[V]](c *Catalog, t *table[V, R], s sheet) error {
+func add[V comparable, R rowOf[V]](c *Catalog, t *table[V, R], s sheet) error {
 	rows, err := rowsOf[R](s)
 	if err != nil {
 		return err
@@ -172,13 +173,19 @@ func (c *Catalog) readAliases() error {
 	return nil
 }
 
+// sortWires puts the wires in the order of their types, and each type's from thin to thick.
 func (c *Catalog) sortWires() {
+	type place struct {
+		typ  int
+		area float64
+	}
+	at := make(map[string]place, len(c.wires.order))
+	for _, id := range c.wires.order {
+		w, _ := c.wires.get(id)
+		at[id] = place{slices.Index(c.types.order, w.Type), parsed(w.Size).AreaMM2()}
+	}
 	slices.SortStableFunc(c.wires.order, func(a, b string) int {
-		v, w := c.wires.at[a].value, c.wires.at[b].value
-		if d := slices.Index(c.types.order, v.Type) - slices.Index(c.types.order, w.Type); d != 0 {
-			return d
-		}
-		return parsed(v.Size).Compare(parsed(w.Size))
+		return cmp.Or(cmp.Compare(at[a].typ, at[b].typ), cmp.Compare(at[a].area, at[b].area))
 	})
 }
 

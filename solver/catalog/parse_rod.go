@@ -37,34 +37,41 @@ func (c *Catalog) parseRod(words []string) (Parsed, error) {
 	if m.Gas {
 		return Parsed{}, fmt.Errorf("a %s can't be of %s, which is a gas; write for example %q", what, m.Name, what+" 4 polypropylene")
 	}
-	text := strings.Join(size, " ")
-	if text == "" {
-		return Parsed{}, fmt.Errorf("the diameter is missing; write for example %q", what+" 4")
-	}
-	assumed := ""
-	if both := hoseSizes.FindStringSubmatch(text); p.Hose && both != nil {
-		bore, err := quantity.ParseNumber(both[2])
-		if err != nil {
-			return Parsed{}, err
-		}
-		text, p.BoreMM = both[1], bore
-	}
-	d, err := quantity.ParseLength(text, quantity.Millimetre)
+	assumed, err := p.rodSize(what, strings.Join(size, " "))
 	if err != nil {
-		return Parsed{}, fmt.Errorf("%q is no diameter; write for example %q", text, what+" 4")
-	}
-	if d < 0.1 || d > 500 {
-		return Parsed{}, fmt.Errorf("a %s of %s mm is outside what a section holds, 0.1 to 500 mm; write for example %q", what, quantity.Trimmed(d, 3), what+" 4")
-	}
-	p.RodMM = d
-	if p.Hose && p.BoreMM == 0 {
-		p.BoreMM, assumed = usualBore(d), " (assumed)"
-	}
-	if p.Hose && (p.BoreMM <= 0 || p.BoreMM >= d) {
-		return Parsed{}, fmt.Errorf("a bore of %s mm does not fit into a hose of %s mm; write outside then bore, for example \"hose 8/5\"", quantity.Trimmed(p.BoreMM, 3), quantity.Trimmed(d, 3))
+		return Parsed{}, err
 	}
 	p.Meant = rodMeant(what, m, p, assumed)
 	return p, nil
+}
+
+// rodSize reads the diameter, and a hose's bore; assumed says so where the bore is the usual one.
+func (p *Parsed) rodSize(what, text string) (assumed string, err error) {
+	if text == "" {
+		return "", fmt.Errorf("the diameter is missing; write for example %q", what+" 4")
+	}
+	both := hoseSizes.FindStringSubmatch(text)
+	if p.Hose && both != nil {
+		if p.BoreMM, err = quantity.ParseNumber(both[2]); err != nil {
+			return "", err
+		}
+		text = both[1]
+	}
+	d, err := quantity.ParseLength(text, quantity.Millimetre)
+	if err != nil {
+		return "", fmt.Errorf("%q is no diameter; write for example %q", text, what+" 4")
+	}
+	if d < 0.1 || d > 500 {
+		return "", fmt.Errorf("a %s of %s mm is outside what a section holds, 0.1 to 500 mm; write for example %q", what, quantity.Trimmed(d, 3), what+" 4")
+	}
+	if p.Hose && both == nil {
+		p.BoreMM, assumed = usualBore(d), " (assumed)"
+	}
+	if p.Hose && (p.BoreMM <= 0 || p.BoreMM >= d) {
+		return "", fmt.Errorf("a bore of %s mm does not fit into a hose of %s mm; write outside then bore, for example \"hose 8/5\"", quantity.Trimmed(p.BoreMM, 3), quantity.Trimmed(d, 3))
+	}
+	p.RodMM = d
+	return assumed, nil
 }
 
 func rodMeant(what string, m Material, p Parsed, assumed string) string {

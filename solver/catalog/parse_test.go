@@ -99,6 +99,7 @@ func TestParseRefuses(t *testing.T) {
 		"filler abc":                    `"abc" is no diameter`,
 		"filler 0":                      "0.1 to 500 mm",
 		"filler -4":                     "0.1 to 500 mm",
+		"hose 8/0":                      "a bore of 0 mm does not fit",
 		"hose 5/8":                      "does not fit into a hose of 5 mm",
 		"rod 4 air":                     "which is a gas",
 		"12 thhn thhn":                  "is not a conductor size",

@@ -28,38 +28,20 @@ func (c *Catalog) With(group, id, yaml string) (cat *Catalog, changed bool, err 
 	out := *c
 	switch group {
 	case "metal":
-		changed, err = out.metals.with(c, id, yaml, func(a, b Metal) bool {
-			a.Name, a.Source, b.Name, b.Source = "", Source{}, "", Source{}
-			return a == b
-		})
+		changed, err = out.metals.with(c, id, yaml, func(v *Metal) { v.Name, v.Source = "", Source{} })
 	case "material":
-		changed, err = out.materials.with(c, id, yaml, func(a, b Material) bool {
-			a.Name, a.Source, b.Name, b.Source = "", Source{}, "", Source{}
-			return a == b
-		})
+		changed, err = out.materials.with(c, id, yaml, func(v *Material) { v.Name, v.Source = "", Source{} })
 	case "type":
-		changed, err = out.types.with(c, id, yaml, func(a, b WireType) bool {
-			a.Name, a.Source, b.Name, b.Source = "", Source{}, "", Source{}
-			return a == b
-		})
+		changed, err = out.types.with(c, id, yaml, func(v *WireType) { v.Name, v.Source = "", Source{} })
 	case "conductor":
-		changed, err = out.conductors.with(c, id, yaml, func(a, b Conductor) bool {
-			a.Source, b.Source = Source{}, Source{}
-			return a == b
-		})
+		changed, err = out.conductors.with(c, id, yaml, func(v *Conductor) { v.Source = Source{} })
 		if len(out.conductors.order) > len(c.conductors.order) {
 			out.listSizes()
 		}
 	case "wire":
-		changed, err = out.wires.with(c, id, yaml, func(a, b Wire) bool {
-			a.Name, a.Source, a.Own.Source, b.Name, b.Source, b.Own.Source = "", Source{}, Source{}, "", Source{}, Source{}
-			return a == b
-		})
+		changed, err = out.wires.with(c, id, yaml, func(v *Wire) { v.Name, v.Source, v.Own.Source = "", Source{}, Source{} })
 	case "holder":
-		changed, err = out.holders.with(c, id, yaml, func(a, b Holder) bool {
-			a.Name, a.Source, b.Name, b.Source = "", Source{}, "", Source{}
-			return a == b
-		})
+		changed, err = out.holders.with(c, id, yaml, func(v *Holder) { v.Name, v.Source = "", Source{} })
 	default:
 		err = fmt.Errorf("%q is not a group of the catalogue; write %s", group, orList(Groups))
 	}

@@ -21,7 +21,7 @@ type entry[V, R any] struct {
 }
 
 // table holds the rows of one group in the order of the files.
-type table[V any, R rowOf[V]] struct {
+type table[V comparable, R rowOf[V]] struct {
 	order []string
 	at    map[string]*entry[V, R] // an entry never changes
 }
@@ -81,8 +81,9 @@ func (t *table[V, R]) yaml(id string) (string, bool) {
 	return string(text), true
 }
 
-// with puts the row in text in the place of id. The table shares nothing that changes with the one it came from.
-func (t *table[V, R]) with(c *Catalog, id, text string, same func(a, b V) bool) (changed bool, err error) {
+// with puts the row in text in the place of id; words takes out of a value what doesn't count as a change. The table shares nothing that
+// changes with the one it came from.
+func (t *table[V, R]) with(c *Catalog, id, text string, words func(*V)) (changed bool, err error) {
 	var doc yaml.Node
 	if err := yaml.Unmarshal([]byte(text), &doc); err != nil {
 		return false, fmt.Errorf("%s is not YAML: %s", id, strings.TrimPrefix(err.Error(), "yaml: "))
@@ -101,11 +102,13 @@ func (t *table[V, R]) with(c *Catalog, id, text string, same func(a, b V) bool) 
 	if err != nil {
 		return false, fmt.Errorf("%s: %w", id, err)
 	}
-	old, known := t.at[id]
+	old, known := t.get(id)
 	t.at = maps.Clone(t.at)
 	if !known {
 		t.order = append(slices.Clone(t.order), id)
 	}
 	t.at[id] = &entry[V, R]{v, row}
-	return !known || !same(v, old.value), nil
+	words(&v)
+	words(&old)
+	return !known || v != old, nil
 }
