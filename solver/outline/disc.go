@@ -23,7 +23,7 @@ type link struct {
 const usualOrder = 64
 
 // decayed is the size under which a harmonic no longer counts at a panel.
-const decayed = 1e-9
+const decayed = 1e-7
 
 // link fills d's exchange with all panels.
 func (s *System) link(d *disc) {
@@ -127,10 +127,10 @@ func pack(buf []float64, q float64, d []complex128) []float64 {
 }
 
 // Move puts a disc elsewhere and rewrites what depends on it, in a fraction of the time of New: for dragging. It reports whether the
-// panels, which stay, are short enough there; if not, New is due. Not safe while others use the System.
+// panels, which stay, are short enough there; if not, New is due (with some Slack). Not safe while others use the System.
 func (s *System) Move(i int, c complex128) (resolved bool) {
 	d := &s.discs[i]
 	d.C = c
 	s.link(d)
-	return s.grading.resolves(&d.Disc, s.panels)
+	return s.grading.resolves(d.Disc, s.panels)
 }

@@ -34,12 +34,14 @@ func newGrading(r *Rect, fineness float64) grading {
 
 // near is the longest panel at z that follows the harmonics of d, or anything above limit.
 func (g *grading) near(d *Disc, z complex128, limit float64) float64 {
-	z -= d.C
-	r := math.Max(math.Sqrt(real(z)*real(z)+imag(z)*imag(z)), d.A)
+	x := math.Max(0, math.Abs(real(z)-real(d.C))-d.Slack)
+	y := math.Max(0, math.Abs(imag(z)-imag(d.C))-d.Slack)
+	square := math.Max(x*x+y*y, d.A*d.A)
 	m := math.Max(float64(d.M), 1)
-	if l := math.Min(reach, g.harmonic/m) * r; l >= limit {
-		return l
+	if l := math.Min(reach, g.harmonic/m); l*l*square >= limit*limit {
+		return limit
 	}
+	r := math.Sqrt(square)
 	if r > 1.0001*d.A {
 		m = math.Min(m, math.Max(1, math.Log(visible)/math.Log(d.A/r)))
 	}
@@ -121,13 +123,14 @@ func (g *grading) panels(edges []edge, discs []Disc) (all []panel, unknowns, end
 }
 
 // resolves tells whether the panels are short enough for a disc, to the tolerance that a drag can bear.
-func (g *grading) resolves(d *Disc, panels []panel) bool {
+func (g *grading) resolves(d Disc, panels []panel) bool {
+	d.Slack = 0
 	x := rules[6]
 	for i := range panels {
 		p := &panels[i]
 		pieces := 0.0
 		for j, t := range x.x {
-			pieces += x.w[j] * p.half / g.near(d, p.at(t), math.Inf(1))
+			pieces += x.w[j] * p.half / g.near(&d, p.at(t), math.Inf(1))
 		}
 		if pieces > 1.6 {
 			return false

@@ -71,7 +71,7 @@ func solveWhole(r Rect, rods []rod, fineness float64, ground bool) *whole {
 	discs := make([]Disc, len(rods))
 	first := make([]int, len(rods)+1)
 	for i, p := range rods {
-		discs[i] = Disc{p.c, p.radius, p.order}
+		discs[i] = Disc{C: p.c, A: p.radius, M: p.order}
 		first[i+1] = first[i] + 2*p.order
 	}
 	w := &whole{wall: New(r, discs, fineness), rods: rods}

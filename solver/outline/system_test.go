@@ -214,6 +214,18 @@ func TestMove(t *testing.T) {
 	}
 }
 
+// TestSlack: a disc with slack may be moved along the floor by that much.
+func TestSlack(t *testing.T) {
+	r, rods := steel()
+	for _, slack := range []float64{0, 0.003} {
+		s := New(r, []Disc{{C: rods[0].c, A: rods[0].radius, M: 24, Slack: slack}}, 1)
+		ok := s.Move(0, rods[0].c+0.003) && s.Move(0, rods[0].c-0.003+0.001i)
+		if ok != (slack > 0) {
+			t.Errorf("slack %g: resolved %t", slack, ok)
+		}
+	}
+}
+
 // TestSealed: with no way for heat to leave there is no answer, and no number pretends to be one.
 func TestSealed(t *testing.T) {
 	r := Rect{W: 0.02, H: 0.02, MediumK: 0.3, Sides: [4]Side{insulated, film(0, 20), insulated, insulated}}

@@ -1,10 +1,12 @@
 package outline
 
-// Disc is a round part as the wall sees it: centre, outer radius, highest harmonic.
+// Disc is a round part as the wall sees it: centre, outer radius, highest harmonic. Slack is how far Move may take it in each direction
+// with the panels still short enough: 0 for a part that stays, about A for one that is being dragged.
 type Disc struct {
-	C complex128
-	A float64
-	M int
+	C     complex128
+	A     float64
+	M     int
+	Slack float64
 }
 
 // Layer of the wall, from the inside outwards.
