@@ -203,10 +203,10 @@ func (t *telling) runs(id string, limit *input) {
 		by = " (" + row.by + ")"
 	}
 	bound := t.limitWord(limit, degreesC(row.limit.V))
-	if m := row.limit.V - row.temp; m < 0 {
-		t.fact(run{text: "It runs at " + temp + ", over its limit of ", tone: alarm}, bound, run{text: by + " by " + withUnit(kelvins(-m), "K") + ".", tone: alarm})
+	if row.temp > row.limit.V {
+		t.fact(run{text: "It runs at " + temp + ", over its limit of ", tone: alarm}, bound, run{text: by + " by " + withUnit(overWords(row.temp, row.limit.V), "K") + ".", tone: alarm})
 	} else {
-		t.fact(say("It runs at "+temp+"; its limit is "), bound, say(by+", margin "+withUnit(kelvins(m), "K")+"."))
+		t.fact(say("It runs at "+temp+"; its limit is "), bound, say(by+", margin "+withUnit(marginWords(row.temp, row.limit.V), "K")+"."))
 	}
 	switch governs, hottest := t.result.Governing != nil && t.result.Governing.Part == id, t.result.Hottest == id; {
 	case governs && hottest:

@@ -69,14 +69,15 @@ func (t *telling) runTogether(ids []string) {
 		return
 	}
 	row, _ := readingOf(t.result, hottest)
+	near, _ := readingOf(t.result, closest)
 	sentence := []run{say("The hottest of them, " + hottest + ", runs at " + withUnit(degrees(peak, row.limit), "°C"))}
 	switch {
 	case closest == "":
 		sentence = append(sentence, say("; none has a limit."))
-	case least < 0:
-		sentence = append(sentence, run{text: "; " + closest + " is over its limit by " + withUnit(kelvins(-least), "K") + ".", tone: alarm})
+	case near.temp > near.limit.V:
+		sentence = append(sentence, run{text: "; " + closest + " is over its limit by " + withUnit(overWords(near.temp, near.limit.V), "K") + ".", tone: alarm})
 	default:
-		sentence = append(sentence, say("; the smallest margin is "+withUnit(kelvins(least), "K")+" ("+closest+")."))
+		sentence = append(sentence, say("; the smallest margin is "+withUnit(marginWords(near.temp, near.limit.V), "K")+" ("+closest+")."))
 	}
 	t.fact(sentence...)
 }

@@ -48,8 +48,7 @@ type bench struct {
 // newBench opens a desk on a design; answers come from temps and limits, 50 °C and 90 °C where they say nothing.
 func newBench(t testing.TB, design string) *bench {
 	t.Helper()
-	test.NewTempApp(t)
-	fyne.CurrentApp().Settings().SetTheme(NewTheme(LookLight))
+
 	d, problems := section.Read([]byte(design))
 	if d == nil {
 		t.Fatalf("the test's design is refused: %v", problems)

@@ -18,25 +18,31 @@ const (
 // written formats a number that a person entered: as entered, to a thousandth at most.
 func written(v float64) string { return quantity.Trimmed(v, 3) }
 
-// degrees formats a temperature beside its limit, by the rule of the sentence: whole kelvins, but one digit more, rounded away from the
-// limit, where rounding would carry it onto or across the limit.
-func degrees(t float64, limit section.Opt[float64]) string {
+// shownDegrees rounds a temperature beside its limit, by the rule of the sentence: to whole kelvins, but a tenth away from the limit where
+// whole kelvins would carry it onto or across the limit.
+func shownDegrees(t float64, limit section.Opt[float64]) float64 {
 	near := math.Round(t)
-	if !limit.OK || t == limit.V || (near != limit.V && (t > limit.V) == (near > limit.V)) {
-		return quantity.Trimmed(near, 0)
+	switch {
+	case !limit.OK || t == limit.V || (near != limit.V && (t > limit.V) == (near > limit.V)):
+		return near
+	case t > limit.V:
+		return math.Ceil(t*10) / 10
 	}
-	if t > limit.V {
-		return quantity.Trimmed(math.Ceil(t*10)/10, 1)
-	}
-	return quantity.Trimmed(math.Floor(t*10)/10, 1)
+	return math.Floor(t*10) / 10
 }
 
-// kelvins formats a margin, by the rule of the sentence: rounded down, one digit more within a kelvin of zero.
-func kelvins(m float64) string {
-	if math.Abs(m) < 1 {
-		return quantity.Trimmed(math.Floor(m*10)/10, 1)
-	}
-	return quantity.Trimmed(math.Floor(m), 0)
+// degrees formats a temperature beside its limit.
+func degrees(t float64, limit section.Opt[float64]) string {
+	return quantity.Trimmed(shownDegrees(t, limit), 1)
+}
+
+// marginWords formats limit − temperature so that it agrees with the temperature as shown; overWords formats temperature − limit.
+func marginWords(t, limit float64) string {
+	return quantity.Trimmed(limit-shownDegrees(t, section.Some(limit)), 1)
+}
+
+func overWords(t, limit float64) string {
+	return quantity.Trimmed(shownDegrees(t, section.Some(limit))-limit, 1)
 }
 
 // withUnit joins a number and its unit so that no line ends between them.

@@ -2,6 +2,7 @@ package ui
 
 import (
 	"errors"
+	"strings"
 	"testing"
 
 	"packrise/solver/section"
@@ -34,15 +35,18 @@ func TestDegreesNeverRoundPastTheLimit(t *testing.T) {
 	}
 }
 
-func TestKelvinsRoundDown(t *testing.T) {
+func TestMarginsAgreeWithTemperatures(t *testing.T) {
 	for _, c := range []struct {
-		m    float64
-		want string
+		t, limit float64
+		want     string
 	}{
-		{3.6, "3"}, {3, "3"}, {0.96, "0.9"}, {0.04, "0"}, {0, "0"}, {-0.04, "−0.1"}, {-0.96, "−1"}, {-1.2, "−2"}, {-12, "−12"},
+		{86.4, 90, "4"}, {87, 90, "3"}, {89.4, 90, "1"}, {89.96, 90, "0.1"}, {90, 90, "0"}, {90.04, 90, "−0.1"}, {90.6, 90, "−1"}, {92.3, 90, "−2"}, {62.6, 62.7, "0.1"},
 	} {
-		if got := kelvins(c.m); got != c.want {
-			t.Errorf("kelvins(%v) = %q, want %q", c.m, got, c.want)
+		if got := marginWords(c.t, c.limit); got != c.want {
+			t.Errorf("marginWords(%v, %v) = %q, want %q", c.t, c.limit, got, c.want)
+		}
+		if got := overWords(c.t, c.limit); strings.TrimPrefix(got, "−") != strings.TrimPrefix(c.want, "−") {
+			t.Errorf("overWords(%v, %v) = %q", c.t, c.limit, got)
 		}
 	}
 }

@@ -82,7 +82,10 @@ func partOf(cat *catalog.Catalog, p catalog.Parsed) (section.Part, error) {
 	case p.Wire != "":
 		return section.Part{Kind: section.Core, Stock: p.Wire}, nil
 	case p.RodMM > 0:
-		part := section.Part{Kind: section.Rod, Diameter: section.Some(p.RodMM), Material: "polypropylene"}
+		part := section.Part{Kind: section.Rod, Diameter: section.Some(p.RodMM), Material: p.Material}
+		if p.Hose && p.BoreMM > 0 {
+			part.BoreMM = section.Some(p.BoreMM)
+		}
 		return part, nil
 	case p.Size == "":
 		return section.Part{}, errors.New("nothing here can be put in; write such as 12 thhn, M25, filler 4")

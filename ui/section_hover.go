@@ -81,9 +81,9 @@ func readingLine(q section.Reading) string {
 		s += " (assumed)"
 	}
 	if m < 0 {
-		return s + ", over by " + withUnit(strings.TrimPrefix(kelvins(m), minusSign), "K")
+		return s + ", over by " + withUnit(overWords(q.TempC, q.LimitC.V), "K")
 	}
-	return s + ", margin " + withUnit(kelvins(m), "K")
+	return s + ", margin " + withUnit(marginWords(q.TempC, q.LimitC.V), "K")
 }
 
 // readout is what is under the pointer, in the upper left corner of the canvas, where it covers no part of a section that fits.

@@ -35,9 +35,6 @@ type WireList struct {
 	active wireCell // where the keyboard is
 	anchor string   // where a range of rows begins
 	own    bool     // the selection is being changed from here
-
-	// OnDelete is called for the Delete key on a selection, nil: nothing.
-	OnDelete func()
 }
 
 // wireCell is a cell by the row's id, so that it survives sorting.

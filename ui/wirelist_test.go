@@ -53,8 +53,8 @@ func TestWireListJudgesUnrounded(t *testing.T) {
 		over                    bool
 	}{
 		{"L1", "90.1", "90", "−0.1", true},
-		{"L2", "89.9", "90", "0", false},
-		{"L10", "86", "90", "3", false},
+		{"L2", "89.9", "90", "0.1", false},
+		{"L10", "86", "90", "4", false},
 	} {
 		r := row(c.id)
 		if r.temperature() != c.temp || r.limitText() != c.limit || r.marginText() != c.margin || r.over() != c.over {

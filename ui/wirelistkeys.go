@@ -56,9 +56,7 @@ func (b *wireBody) TypedKey(key *fyne.KeyEvent) {
 	case fyne.KeyEscape:
 		l.desk.Select()
 	case fyne.KeyDelete, fyne.KeyBackspace:
-		if l.OnDelete != nil && len(l.desk.Selection()) > 0 {
-			l.OnDelete()
-		}
+		l.desk.DeleteSelection()
 	}
 }
 

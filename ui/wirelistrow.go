@@ -50,8 +50,8 @@ func (r wireRow) limitText() string {
 }
 
 func (r wireRow) marginText() string {
-	if k, ok := r.margin(); ok {
-		return kelvins(k)
+	if _, ok := r.margin(); ok {
+		return marginWords(r.temp, r.limit.V)
 	}
 	return ""
 }
