@@ -175,7 +175,7 @@ func TestGapsLeadOut(t *testing.T) {
 	target := disc{0, 0, in}
 	var others []disc
 	for i := range 3 {
-		sin, cos := math.Sincos(pi/2 + 2*pi*float64(i)/3)
+		sin, cos := math.Sincos(0.123 + 2*pi*float64(i)/3)
 		others = append(others, disc{2 * r / math.Sqrt(3) * cos, 2 * r / math.Sqrt(3) * sin, r})
 	}
 	if leads := straightLeads(target, others, 0.001); len(leads) != 0 {

@@ -99,7 +99,7 @@ func parallelRows(n int, work func(next func() (int, bool))) {
 	wg.Wait()
 }
 
-// fillGaps gives unknown nodes beside known ones the mean of those, twice, so that the colours reach a little past the edge
+// fillGaps continues the known nodes into the unknown ones beside them, twice, so that the colours reach a little past the edge
 // and interpolation needs no cases there.
 func (g *grid) fillGaps() {
 	for range 2 {
@@ -115,22 +115,40 @@ func (g *grid) fillGaps() {
 	}
 }
 
-// around returns the mean of the known neighbours, NaN if there is none.
+// around continues the field to a node in a straight line from each side where two nodes are known and returns the mean, the
+// mean of the known neighbours where none is, NaN where nothing is known.
 func (g *grid) around(i, j int) float32 {
-	var sum float32
-	n := 0
-	for y := max(0, j-1); y <= min(g.ny-1, j+1); y++ {
-		for x := max(0, i-1); x <= min(g.nx-1, i+1); x++ {
-			if t := g.v[y*g.nx+x]; t == t {
-				sum += t
-				n++
+	var line, near float32
+	var lines, nears float32
+	for dy := -1; dy <= 1; dy++ {
+		for dx := -1; dx <= 1; dx++ {
+			a := g.at(i+dx, j+dy)
+			if a != a {
+				continue
+			}
+			near += a
+			nears++
+			if b := g.at(i+2*dx, j+2*dy); b == b {
+				line += 2*a - b
+				lines++
 			}
 		}
 	}
-	if n == 0 {
+	switch {
+	case lines > 0:
+		return max(0, min(255, line/lines))
+	case nears > 0:
+		return near / nears
+	}
+	return float32(math.NaN())
+}
+
+// at returns a node, NaN beyond the grid.
+func (g *grid) at(i, j int) float32 {
+	if i < 0 || j < 0 || i >= g.nx || j >= g.ny {
 		return float32(math.NaN())
 	}
-	return sum / float32(n)
+	return g.v[j*g.nx+i]
 }
 
 // paint fills the pixels inside the outline (in pixels) from the grid, interpolating between its nodes.

@@ -1,0 +1,100 @@
+package render
+
+import (
+	"math"
+	"strings"
+	"testing"
+
+	"packrise/solver/section"
+)
+
+func rungsOf(s Scene, w, h float64, st Style) ([]Rung, string) {
+	r := NewRecorder(w, h)
+	return Ladder(r, s, ScaleOf(s), st), r.String()
+}
+
+func TestLadderRungs(t *testing.T) {
+	for name, s := range map[string]Scene{"hex7": hexScene(7), "hex200": hexScene(200), "over": overScene(), "nested": nestedScene(), "one": oneScene()} {
+		for _, size := range [][2]float64{{210, 480}, {132, 150}, {150, 900}} {
+			for _, k := range []float64{1, 2} {
+				rungs, _ := rungsOf(s, size[0]*k, size[1]*k, Style{Scale: k})
+				seen := map[string]int{}
+				for i, r := range rungs {
+					for _, id := range r.IDs {
+						seen[id]++
+					}
+					if r.Y1-r.Y0 < 12*k || r.Y0 < 0 || r.Y1 > size[1]*k+8*k {
+						t.Errorf("%s %v: rung %v", name, size, r)
+					}
+					if i > 0 && r.Y0 < rungs[i-1].Y1-1e-9 && size[1] > 200 {
+						t.Errorf("%s %v: rungs %v and %v overlap", name, size, rungs[i-1], r)
+					}
+				}
+				for _, r := range s.Readings {
+					if seen[r.ID] != 1 {
+						t.Errorf("%s %v: %s stands on %d rungs", name, size, r.ID, seen[r.ID])
+					}
+				}
+			}
+		}
+	}
+}
+
+func TestLadderFoldsEqualParts(t *testing.T) {
+	s := hexScene(9)
+	for i := range s.Readings {
+		r := &s.Readings[i]
+		if r.Kind == section.Core {
+			r.TempC = 88.2
+			if r.Governs || r.Hottest {
+				r.TempC, r.Governs, r.Hottest = 92, true, true
+			}
+		}
+	}
+	rungs, text := rungsOf(s, 210, 480, Style{})
+	if !strings.Contains(text, `"8 others"`) {
+		t.Errorf("eight equal parts beside the governing one are not folded:\n%s", text)
+	}
+	for _, r := range rungs {
+		if len(r.IDs) == 8 {
+			return
+		}
+	}
+	t.Error("no rung stands for the eight")
+}
+
+func TestLadderLimits(t *testing.T) {
+	s := overScene()
+	_, text := rungsOf(s, 210, 480, Style{})
+	for _, want := range []string{`"limit 65 · 9 parts"`, `"limit 80 · jacket"`, `"ambient"`, `"°C"`, `"outside"`, `"conduit"`} {
+		if !strings.Contains(text, want) {
+			t.Errorf("%s is missing", want)
+		}
+	}
+	one := oneScene()
+	for i := range one.Readings {
+		one.Readings[i].LimitC = section.Some(200.0)
+	}
+	if _, text := rungsOf(one, 210, 480, Style{}); !strings.Contains(text, `"limit 200 ↑"`) {
+		t.Error("the governing limit beyond the scale is not named")
+	}
+}
+
+func TestLadderStale(t *testing.T) {
+	s := overScene()
+	s.Stale = true
+	_, text := rungsOf(s, 210, 480, Style{})
+	if strings.Contains(text, `"71"`) || strings.Contains(text, hex(lightPalette.Over)) {
+		t.Error("a stale ladder still has numbers or the warning colour")
+	}
+}
+
+func TestLadderUnsolved(t *testing.T) {
+	rungs, text := rungsOf(unsolved(hexScene(7)), 210, 480, Style{})
+	if len(rungs) != 0 || !strings.Contains(text, `"ambient"`) || strings.Contains(text, `"40"`) {
+		t.Errorf("an unsolved ladder: %v\n%s", rungs, text)
+	}
+	if rungs, _ := rungsOf(Scene{AmbientC: math.NaN()}, 100, 50, Style{}); len(rungs) != 0 {
+		t.Errorf("nothing known: %v", rungs)
+	}
+}
