@@ -85,7 +85,7 @@ func rest(discs []Disc, in Box) []Disc {
 		// Weight goes with the area; the lightest are made heavier so that their contacts close to the same precision.
 		a.fy[i] = max(d.R*d.R/r2, 0.01)
 		if in.rect() {
-			a.kx[i], a.to[i].X = 0.02*a.fy[i]/in.W, in.W/2
+			a.kx[i], a.to[i].X = 2e-4*a.fy[i]/in.W, in.W/2
 		}
 	}
 	c := newCrowd(out, in, 0, r)
