@@ -1,16 +1,10 @@
 package outline
 
 import (
-	"encoding/csv"
 	"math"
 	"math/cmplx"
-	"os"
-	"path/filepath"
-	"strconv"
-	"testing"
 
 	"gonum.org/v1/gonum/mat"
-	"gopkg.in/yaml.v3"
 )
 
 // rod is a round part: a metal core in layers (PHYSICS of layered cylinders, harmonic by harmonic).
@@ -58,82 +52,92 @@ func (p *rod) resistance() float64 {
 
 // whole is a section solved densely: wall and parts.
 type whole struct {
-	wall *System
-	rods []rod
-	src  Sources
-	y    []float64
-	core []float64
+	wall  *System
+	rods  []rod
+	k     float64 // of the medium
+	first []int   // unknown of each rod's first harmonic
+	src   Sources
+	b     [][]complex128
+	y     []float64
+	core  []float64
 }
 
 // solveWhole finds d from d_n = t_n conj(b_n), b_n from the other parts (translations of multipoles: Greengard and Rokhlin,
 // Journal of Computational Physics 73, 1987, in two dimensions) and from the wall.
 func solveWhole(r Rect, rods []rod, fineness float64, ground bool) *whole {
-	discs := make([]Disc, len(rods))
-	first := make([]int, len(rods)+1)
+	w := &whole{rods: rods, k: r.MediumK, first: []int{0}}
+	var discs []Disc
 	for i, p := range rods {
-		discs[i] = Disc{C: p.c, A: p.radius, M: p.order}
-		first[i+1] = first[i] + 2*p.order
+		discs = append(discs, Disc{C: p.c, A: p.radius, M: p.order})
+		w.first = append(w.first, w.first[i]+2*p.order)
+		w.src.Q = append(w.src.Q, 0)
+		w.src.D = append(w.src.D, make([]complex128, p.order))
+		w.b = append(w.b, make([]complex128, p.order+1))
 	}
-	w := &whole{wall: New(r, discs, fineness), rods: rods}
-	n := first[len(rods)]
-	src := Sources{Q: make([]float64, len(rods)), D: make([][]complex128, len(rods))}
-	b := make([][]complex128, len(rods))
+	w.wall = New(r, discs, fineness)
+	a := w.matrix()
 	for i, p := range rods {
-		src.D[i] = make([]complex128, p.order)
-		b[i] = make([]complex128, p.order+1)
+		w.src.Q[i] = p.heat
 	}
-	residual := func(ground bool) []float64 { // d − t conj(b)
-		for i := range b {
-			clear(b[i])
-		}
-		w.direct(src, b, r.MediumK)
-		w.wall.Incoming(w.wall.Respond(src, ground), b)
-		out := make([]float64, n)
-		for i := range rods {
-			for m := 1; m <= rods[i].order; m++ {
-				z := src.D[i][m-1] - complex(rods[i].reflect(m, r.MediumK), 0)*cmplx.Conj(b[i][m])
-				out[first[i]+2*m-2], out[first[i]+2*m-1] = real(z), imag(z)
-			}
-		}
-		return out
-	}
-	a := mat.NewDense(n, n, nil)
-	for i := range rods {
-		for m := range 2 * rods[i].order {
-			v := complex(1, 0)
-			if m%2 == 1 {
-				v = 1i
-			}
-			src.D[i][m/2] = v
-			a.SetCol(first[i]+m, residual(false))
-			src.D[i][m/2] = 0
-		}
-	}
-	for i, p := range rods {
-		src.Q[i] = p.heat
-	}
-	rhs := mat.NewVecDense(n, residual(ground))
-	var x mat.VecDense
-	if n > 0 {
-		if err := x.SolveVec(a, rhs); err != nil {
+	if n := w.first[len(rods)]; n > 0 {
+		var x mat.VecDense
+		if err := x.SolveVec(a, mat.NewVecDense(n, w.residual(ground))); err != nil {
 			panic(err)
 		}
-	}
-	for i := range rods {
-		for m := range rods[i].order {
-			src.D[i][m] = -complex(x.AtVec(first[i]+2*m), x.AtVec(first[i]+2*m+1))
+		for i := range rods {
+			for m := range w.src.D[i] {
+				w.src.D[i][m] = -complex(x.AtVec(w.first[i]+2*m), x.AtVec(w.first[i]+2*m+1))
+			}
 		}
 	}
-	residual(ground)
-	w.src, w.y = src, w.wall.Respond(src, ground)
-	w.core = make([]float64, len(rods))
+	w.residual(ground)
 	for i, p := range rods {
-		w.core[i] = real(b[i][0]) - p.heat*math.Log(p.radius)/(2*math.Pi*r.MediumK) + p.heat*p.resistance()
+		own := -math.Log(p.radius)/(2*math.Pi*w.k) + p.resistance()
+		w.core = append(w.core, real(w.b[i][0])+p.heat*own)
 	}
 	return w
 }
 
-func (w *whole) direct(src Sources, b [][]complex128, km float64) {
+// matrix is the residual of each unit source.
+func (w *whole) matrix() *mat.Dense {
+	n := w.first[len(w.rods)]
+	if n == 0 {
+		return nil
+	}
+	a := mat.NewDense(n, n, nil)
+	for i := range w.rods {
+		for m := range w.src.D[i] {
+			for part, unit := range []complex128{1, 1i} {
+				w.src.D[i][m] = unit
+				a.SetCol(w.first[i]+2*m+part, w.residual(false))
+			}
+			w.src.D[i][m] = 0
+		}
+	}
+	return a
+}
+
+// residual is d − t conj(b); it leaves b and y for the present sources.
+func (w *whole) residual(ground bool) []float64 {
+	for i := range w.b {
+		clear(w.b[i])
+	}
+	w.direct()
+	w.y = w.wall.Respond(w.src, ground)
+	w.wall.Incoming(w.y, w.b)
+	out := make([]float64, w.first[len(w.rods)])
+	for i := range w.rods {
+		for m, d := range w.src.D[i] {
+			z := d - complex(w.rods[i].reflect(m+1, w.k), 0)*conj(w.b[i][m+1])
+			out[w.first[i]+2*m], out[w.first[i]+2*m+1] = real(z), imag(z)
+		}
+	}
+	return out
+}
+
+// direct adds what the parts send each other.
+func (w *whole) direct() {
+	src, b, km := w.src, w.b, w.k
 	for i := range w.rods {
 		for j := range w.rods {
 			if i == j {
@@ -191,124 +195,4 @@ func orders(r Rect, rods []rod, c float64) {
 		need(reff, gap)
 		p.order = int(math.Min(math.Ceil(m), 40))
 	}
-}
-
-type caseFile struct {
-	Surroundings struct {
-		Ambient float64 `yaml:"ambient_c"`
-		Film    float64 `yaml:"film_w_m2k"`
-	}
-	Holder struct {
-		Width  float64 `yaml:"width_mm"`
-		Height float64 `yaml:"height_mm"`
-		Layers []layerFile
-		Fill   string
-		Sides  map[string]yaml.Node
-	}
-	Parts []struct {
-		ID        string
-		Conductor struct {
-			Diameter float64 `yaml:"diameter_mm"`
-		}
-		Layers []layerFile
-		At     [2]float64 `yaml:"at_mm"`
-	}
-	Loads []struct {
-		Conductors []string
-		Heat       float64 `yaml:"heat_w_m"`
-	}
-	Materials map[string]struct {
-		K float64 `yaml:"k_w_mk"`
-	}
-}
-
-type layerFile struct {
-	Material  string
-	Thickness float64 `yaml:"thickness_mm"`
-}
-
-const casesDir = "../../testdata/fe-cases"
-
-// readCase reads one of the finite-element cases.
-func readCase(t testing.TB, name string) (Rect, []rod) {
-	t.Helper()
-	raw, err := os.ReadFile(filepath.Join(casesDir, name+".yaml"))
-	if err != nil {
-		t.Fatal(err)
-	}
-	var f caseFile
-	if err := yaml.Unmarshal(raw, &f); err != nil {
-		t.Fatal(err)
-	}
-	r := Rect{W: f.Holder.Width / 1000, H: f.Holder.Height / 1000, MediumK: f.Materials[f.Holder.Fill].K}
-	for _, l := range f.Holder.Layers {
-		r.Layers = append(r.Layers, Layer{f.Materials[l.Material].K, l.Thickness / 1000})
-	}
-	for i, side := range []string{"bottom", "right", "top", "left"} {
-		r.Sides[i] = Side{Kind: Open, Film: f.Surroundings.Film, Temp: f.Surroundings.Ambient}
-		node, ok := f.Holder.Sides[side]
-		switch {
-		case !ok:
-		case node.Value == "insulated":
-			r.Sides[i] = Side{Kind: Insulated}
-		default:
-			var held struct {
-				Fixed float64 `yaml:"fixed_c"`
-			}
-			if err := node.Decode(&held); err != nil {
-				t.Fatal(err)
-			}
-			r.Sides[i] = Side{Kind: Held, Temp: held.Fixed}
-		}
-	}
-	heat := map[string]float64{}
-	for _, l := range f.Loads {
-		for _, c := range l.Conductors {
-			heat[c] = l.Heat
-		}
-	}
-	var rods []rod
-	for _, p := range f.Parts {
-		q := rod{id: p.ID, c: complex(p.At[0]/1000, p.At[1]/1000), core: p.Conductor.Diameter / 2000, heat: heat[p.ID]}
-		q.radius = q.core
-		for _, l := range p.Layers {
-			q.k, q.t = append(q.k, f.Materials[l.Material].K), append(q.t, l.Thickness/1000)
-			q.radius += l.Thickness / 1000
-		}
-		rods = append(rods, q)
-	}
-	return r, rods
-}
-
-// expected reads a column of numbers of a case from one of the CSV files, by conductor or side.
-func expected(t testing.TB, file, name string) map[string]float64 {
-	t.Helper()
-	f, err := os.Open(filepath.Join(casesDir, file))
-	if err != nil {
-		t.Fatal(err)
-	}
-	defer f.Close()
-	rows, err := csv.NewReader(f).ReadAll()
-	if err != nil {
-		t.Fatal(err)
-	}
-	out := map[string]float64{}
-	for _, row := range rows {
-		if row[0] == name {
-			out[row[1]] = number(t, row[2])
-		}
-	}
-	if len(out) == 0 {
-		t.Fatalf("%s has no %s", file, name)
-	}
-	return out
-}
-
-func number(t testing.TB, s string) float64 {
-	t.Helper()
-	x, err := strconv.ParseFloat(s, 64)
-	if err != nil {
-		t.Fatal(err)
-	}
-	return x
 }

@@ -4,6 +4,7 @@ import (
 	"math"
 	"math/cmplx"
 	"slices"
+	"sync"
 	"testing"
 )
 
@@ -46,6 +47,9 @@ func TestOuterCondition(t *testing.T) {
 
 // TestInterface checks that temperature and heat flow are continuous where medium and layers meet.
 func TestInterface(t *testing.T) {
+	if testing.Short() {
+		t.Skip("dense solutions of many unknowns")
+	}
 	r, rods := steel()
 	r.Layers[0].K = 0.4 // gradients in good metal are too small to difference
 	w := solveWhole(r, rods, 3, true)
@@ -127,6 +131,9 @@ func TestMirror(t *testing.T) {
 
 // TestRefinement: errors against three times finer panels fall.
 func TestRefinement(t *testing.T) {
+	if testing.Short() {
+		t.Skip("dense solutions of many unknowns")
+	}
 	r, rods := steel()
 	best := solveWhole(r, rods, 3, true)
 	before := math.Inf(1)
@@ -149,6 +156,9 @@ func TestRefinement(t *testing.T) {
 // TestFoil: a metal foil on plastic is as good at fineness 1 as a wall of one layer, although its lateral conduction is carried by densities
 // a tenth of a millimetre apart.
 func TestFoil(t *testing.T) {
+	if testing.Short() {
+		t.Skip("dense solutions of many unknowns")
+	}
 	r, rods := steel()
 	for _, layers := range [][]Layer{{{200, 0.0001}, {0.2, 0.002}}, {{0.2, 0.002}, {200, 0.00005}}, {{0.2, 0.001}, {50, 0.001}, {0.2, 0.001}}} {
 		r.Layers = layers
@@ -257,6 +267,24 @@ func TestMisuse(t *testing.T) {
 			New(r, nil, 1)
 		})
 	}
+}
+
+// TestConcurrent uses one System from several goroutines (of use under the race detector).
+func TestConcurrent(t *testing.T) {
+	r, rods := steel()
+	w := solveWhole(r, rods, 0.7, true)
+	want := w.wall.At(w.y, 0.03+0.02i)
+	var wg sync.WaitGroup
+	for range 4 {
+		wg.Go(func() {
+			y := w.wall.Respond(w.src, true)
+			w.wall.Faces(y, w.src)
+			if got := w.wall.Field(y).At(0.03 + 0.02i); !(math.Abs(got-want) < 1e-5) {
+				t.Errorf("%g, want %g", got, want)
+			}
+		})
+	}
+	wg.Wait()
 }
 
 // TestNoAllocation: the loop of an iteration must not feed the collector.
