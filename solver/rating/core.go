@@ -33,7 +33,7 @@ func (r *resolver) stockWire(it *item, p *section.Part) (typ string) {
 		r.refuse(&pr)
 		return p.Type
 	}
-	c, err := r.cat.Conductor(w.Size, w.Metal, w.Class)
+	c, err := r.cat.WireConductor(w)
 	if err != nil {
 		r.refuse(&section.Problem{Rule: "unknown-size", IDs: []string{it.id}, Key: "stock", What: fmt.Sprintf("%s: %v", it.id, err), Do: "choose another stock"})
 		return p.Type

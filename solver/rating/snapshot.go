@@ -1,12 +1,14 @@
 package rating
 
 import (
+	"slices"
+
 	"packrise/solver/catalog"
 	"packrise/solver/section"
 )
 
 // Snapshot returns the document with stock_used set to the rows of cat that it uses (rows already saved with it win over the
-// catalogue's): call it before Save, so that the design opens the same when the catalogue has moved on.
+// catalogue's, and rows stand behind those that they name): call it before Save, so that the design opens the same when the catalogue has moved on.
 func Snapshot(d *section.Document, cat *catalog.Catalog) *section.Document {
 	s, _ := open(d, cat)
 	t := taker{cat: s.cat, own: s.own, seen: map[[2]string]bool{}}
@@ -16,6 +18,9 @@ func Snapshot(d *section.Document, cat *catalog.Catalog) *section.Document {
 		t.holder(&d.Builds[i].Holder)
 		t.parts(d.Builds[i].Parts)
 	}
+	slices.SortStableFunc(t.rows, func(a, b section.StockRow) int {
+		return slices.Index(catalog.Groups, a.Group) - slices.Index(catalog.Groups, b.Group)
+	})
 	return d.With(func(d *section.Document) { d.StockUsed = t.rows })
 }
 
