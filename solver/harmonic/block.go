@@ -55,7 +55,6 @@ type builder struct {
 	ai, aj []float64    // their sizes
 	p, q   []complex128 // recursion of the image's Taylor coefficients
 	image  []complex128 // [m][n]
-	heap   []float64
 }
 
 // write fills b with the coupling of discs i and j: direct unless they are the same, image if there is a circle.

@@ -174,12 +174,14 @@ func (m *Model) solve(ctx context.Context, q []float64) *Result {
 	steps, ok := g.iterate(m.x, f, tol, ended(ctx))
 	s := g.solved(q, m.x, m.level(q), nil)
 	r := m.result(s)
+	m.estimate(r, s, q)
 	r.Steps = steps
-	switch {
-	case !ok:
-		r.Status = Cancelled
-	case steps >= maxSteps:
+	if !ok || steps >= maxSteps {
 		r.Status = StoppedEarly
+		if !ok {
+			r.Status = Cancelled
+		}
+		m.doubt(r, f)
 	}
 	return r
 }
@@ -207,7 +209,6 @@ func (m *Model) blank(s Status) *Result {
 // result reads the answer off a state.
 func (m *Model) result(s *state) *Result {
 	r := m.blank(Converged)
-	r.ErrorK = 0
 	m.read(r, s)
 	m.readWall(r, s)
 	r.Unknowns = m.top.sys.Len()

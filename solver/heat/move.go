@@ -1,5 +1,7 @@
 package heat
 
+import "slices"
+
 // Move puts a part of the top level elsewhere and rewrites only its blocks: for dragging. Orders are fixed at the larger of old and new.
 func (m *Model) Move(part int, x, y float64) {
 	if part < 0 || part >= len(m.p.Parts) || m.p.Parts[part].In != -1 {
@@ -73,6 +75,11 @@ func (m *Model) moveBare() {
 // relocate rewrites what depends on the place of piece i; false if the whole region has to be written again.
 func (g *region) relocate(i int, factor float64) bool {
 	changed := []int{i}
+	for _, j := range g.clear() {
+		if j != i {
+			changed = append(changed, j)
+		}
+	}
 	all := true
 	for j := range g.pieces {
 		n := g.orders[j]
@@ -91,7 +98,7 @@ func (g *region) relocate(i int, factor float64) bool {
 		if in := g.pieces[j].inside; in != nil {
 			in.port, all = n, false
 		}
-		if j != i {
+		if !slices.Contains(changed, j) {
 			changed = append(changed, j)
 		}
 	}
@@ -106,7 +113,7 @@ func (g *region) relocate(i int, factor float64) bool {
 	if grown {
 		g.setSigns()
 	}
-	if g.rect != nil && (grown || !g.rect.move(g, i)) {
+	if g.rect != nil && (len(changed) > 1 || grown || !g.rect.move(g, i)) {
 		g.rect.write(g)
 	}
 	return true

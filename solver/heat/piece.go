@@ -9,7 +9,7 @@ import (
 // metalK is the conductivity (W/mK) above which an outermost layer counts as bare metal; plastics end near 1, steels begin at 15.
 const metalK = 5
 
-// metalGap is the gap that bare metal keeps from what it touches, m. Between two equipotential faces in point contact the field has
+// metalGap is the gap that bare metal keeps from bare metal, m. Between two equipotential faces in point contact the field has
 // no scale of its own, and harmonics converge only algebraically.
 const metalGap = 10e-6
 
@@ -19,6 +19,7 @@ type piece struct {
 	at     complex128     // in its region's coordinates
 	a      float64        // radius at which it meets the medium: as drawn less its share of the clearance
 	drawn  float64        // outer radius as drawn
+	loose  float64        // drawn less the clearance; a is smaller by a metal's gap at most
 	stack  harmonic.Stack // as drawn, from the core (or the inside of a cable) to the medium
 	series float64        // K·m/W from the core (the inside rim of a cable) to the outer rim
 	source bool           // heat can leave it by itself: metal, or a bore held at a temperature
@@ -64,13 +65,10 @@ func rings(r float64, layers []Ring) []harmonic.Ring {
 	return g
 }
 
-// loosen takes half the clearance off the radius, never more than a third of the rings' thickness, and the metal gap where the
-// skin is metal.
+// loosen takes half the clearance off the radius, never more than a third of the rings' thickness.
 func (c *piece) loosen(clearance float64) {
-	c.a = c.drawn - math.Min(clearance/2, (c.drawn-c.stack.R)/3)
-	if c.bare {
-		c.a = math.Max(c.a-metalGap/2, 0.99*c.a)
-	}
+	c.loose = c.drawn - math.Min(clearance/2, (c.drawn-c.stack.R)/3)
+	c.a = c.loose
 }
 
 // shows is the conductivity that a stack, seen from its medium of conductivity k through a port's reflection t, shows to a field.

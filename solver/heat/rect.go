@@ -66,11 +66,10 @@ func (r *rectWall) order(g *region, c *piece, f float64, m int) int {
 			continue
 		}
 		wall := &r.sides[i]
-		x := harmonic.Scale(c.a, gap, g.k, func(x float64) float64 {
+		need = max(need, contact(f, c.a, c.a, gap, g.k, between(c.skin(), face(wall)), func(x float64) float64 {
 			n := int(math.Min(math.Max(wall.R/x, 1), 1e7))
 			return between(c.conductivity(x), shows(g.k, wall.Port(n).Rho))
-		})
-		need = max(need, harmonic.Order(f, c.a, x, 0, maxOrder))
+		}))
 	}
 	return need
 }

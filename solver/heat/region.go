@@ -77,12 +77,62 @@ func (g *region) settle(i int) {
 	}
 }
 
+// clear keeps bare metal off bare metal by metalGap, at the cost of the radii. It returns the pieces whose radius changed.
+func (g *region) clear() (changed []int) {
+	for i := range g.pieces {
+		c := &g.pieces[i]
+		if !c.bare {
+			continue
+		}
+		need := 0.0
+		for j := range g.pieces {
+			if d := &g.pieces[j]; j != i && d.bare {
+				need = math.Max(need, (metalGap-(dist(c.at, d.at)-c.loose-d.loose))/2)
+			}
+		}
+		if g.metalWall() {
+			need = math.Max(need, metalGap-g.wallGap(c))
+		}
+		if a := c.loose - math.Min(need, math.Min(metalGap, 0.01*c.loose)); a != c.a {
+			c.a = a
+			changed = append(changed, i)
+		}
+	}
+	return changed
+}
+
+// metalWall tells whether the wall's inside is bare metal, or held at one temperature.
+func (g *region) metalWall() bool {
+	if g.rect == nil {
+		return face(&g.wall) > metalK
+	}
+	for i := range g.rect.sides {
+		if face(&g.rect.sides[i]) > metalK {
+			return true
+		}
+	}
+	return false
+}
+
+// wallGap is the distance of c's rim, as loosened, from the wall.
+func (g *region) wallGap(c *piece) float64 {
+	if g.rect != nil {
+		gap := math.Inf(1)
+		for _, v := range g.rect.gaps(c) {
+			gap = math.Min(gap, v+c.a-c.loose)
+		}
+		return gap
+	}
+	return g.r - math.Hypot(real(c.at), imag(c.at)) - c.loose
+}
+
 // order sets the harmonics of every piece at factor f, going down into the cables.
 func (g *region) order(f float64) {
 	g.orders = make([]int, len(g.pieces))
 	for i := range g.pieces {
 		g.settle(i)
 	}
+	g.clear()
 	for i := range g.pieces {
 		g.orders[i] = g.orderOf(i, f)
 		if c := &g.pieces[i]; c.inside != nil {
@@ -117,7 +167,7 @@ const maxOrderRect = 64
 // lowest is the fewest harmonics of any piece at factor f of the order rule, for a medium of ratio times the conductivity of its
 // skin. Where the two are alike harmonics die out by themselves.
 func lowest(f, ratio float64) int {
-	low := 6.0
+	low := 7.0
 	if ratio > 0.5 {
 		low = 5
 	}
@@ -131,15 +181,19 @@ func (g *region) orderBeside(c, d *piece, f float64, m int) int {
 	if openEnough(f*c.a, reff, gap, m) {
 		return 0
 	}
-	x := harmonic.Scale(reff, gap, g.k, func(x float64) float64 {
+	return contact(f, c.a, reff, gap, g.k, between(c.skin(), d.skin()), func(x float64) float64 {
 		return between(c.conductivity(x), d.conductivity(x))
 	})
-	return harmonic.Order(f, c.a, x, 0, maxOrder)
+}
+
+// contact is the order of a piece of radius a at a contact: see harmonic.Scale.
+func contact(f, a, reff, gap, k, skin float64, y func(x float64) float64) int {
+	return harmonic.Order(f, a, harmonic.Scale(reff, gap, k, skin, y), 0, maxOrder)
 }
 
 // openEnough tells whether the gap alone keeps the order within m.
 func openEnough(ca, reff, gap float64, m int) bool {
-	return gap > 0 && ca*ca < float64(m*m)*2*reff*gap
+	return gap > 0 && 2.2*2.2*ca*ca < float64(m*m)*2*reff*gap
 }
 
 // orderAtWall is the order that c needs beside the round wall, 0 if it is not above m.
@@ -149,11 +203,23 @@ func (g *region) orderAtWall(c *piece, f float64, m int) int {
 	if openEnough(f*c.a, reff, gap, m) {
 		return 0
 	}
-	x := harmonic.Scale(reff, gap, g.k, func(x float64) float64 {
+	return contact(f, c.a, reff, gap, g.k, between(c.skin(), face(&g.wall)), func(x float64) float64 {
 		n := int(math.Min(math.Max(g.r/x, 1), 2000))
 		return between(c.conductivity(x), shows(g.k, g.wall.Port(n).Rho))
 	})
-	return harmonic.Order(f, c.a, x, 0, maxOrder)
+}
+
+// face is the conductivity of a wall's inside.
+func face(wall *harmonic.Stack) float64 {
+	switch {
+	case len(wall.Rings) > 0:
+		return wall.Rings[0].K
+	case wall.Outer.Kind == harmonic.Held:
+		return math.Inf(1)
+	case wall.Outer.Kind == harmonic.Medium:
+		return wall.Outer.V
+	}
+	return wall.Inner.V // a film is no material: as if the medium went on
 }
 
 // between is the harmonic mean.

@@ -15,6 +15,7 @@ type state struct {
 	level  float64 // mean temperature of the wall's inside
 	total  float64 // W/m through the wall
 	rect   *rectState
+	tail   float64 // W/m·K, see region.tail
 	pieces []pieceState
 	charts charts
 }
@@ -37,6 +38,7 @@ func (g *region) solved(q, x []float64, level float64, omega []complex128) *stat
 	for _, f := range q {
 		s.total += f
 	}
+	s.tail = g.tail(x, v)
 	mean := g.means(charge, v, omega)
 	s.cloud = g.cloud(charge, v, level, omega)
 	if g.rect != nil {
@@ -172,6 +174,7 @@ func (g *region) enter(s *state, q []float64) {
 			omega[n] = complex(l.in[n], 0) * w
 		}
 		p.inside = in.solved(heats, x, p.mean+p.q*p.series, omega)
+		s.tail += p.inside.tail
 		p.a = p.inside.cloud.Outgoing(len(p.b))
 		for n, a := range p.a {
 			p.a[n] = complex(real(a), -imag(a))

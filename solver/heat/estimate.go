@@ -1,0 +1,116 @@
+package heat
+
+import "math"
+
+// The estimate rests on the variational property: cutting the harmonics raises the energy Σ q_i T_i by about what the last of them still carry,
+// so that their energy over Σ|q| is the rise of the mean of all conductors, weighted by heat. How the worst of them compares was
+// found on random sections against order factor 4 (TestEstimate has the spread).
+const (
+	tailShare  = 0.7 // harmonics above this share of the order stand for those that are left out
+	worstShare = 3.0 // the largest error of a metal over the mean rise
+	localShare = 1.0 // a body's hottest place: its last harmonics there
+)
+
+// tail is the energy of the last harmonics, W/m·K, of unknowns x with outgoing amplitudes v.
+func (g *region) tail(x, v []float64) float64 {
+	sum := 0.0
+	for i, m := range g.orders {
+		o := g.sys.Offset(i)
+		for n := int(math.Ceil(tailShare * float64(m))); n < m; n++ {
+			if g.laws[i] == nil {
+				sum += x[o+2*n]*x[o+2*n] + x[o+2*n+1]*x[o+2*n+1]
+				continue
+			}
+			t := math.Abs(g.pieces[i].stack.Port(n + 1).T)
+			sum += (v[o+2*n]*v[o+2*n] + v[o+2*n+1]*v[o+2*n+1]) / math.Max(t, 0.01)
+		}
+	}
+	return sum / g.c2()
+}
+
+// floor is what dropped entries, the iteration's tolerance and an outline's panels may add, as a share of the largest rise.
+func (a Accuracy) floor() float64 {
+	switch a {
+	case Draft:
+		return 1e-4
+	case Fine:
+		return 3e-6
+	}
+	return 3e-5
+}
+
+// estimate fills in ErrorK and PartErrorK.
+func (m *Model) estimate(r *Result, s *state, q []float64) {
+	sum := 0.0
+	for _, v := range q {
+		sum += math.Abs(v)
+	}
+	e := m.set.Accuracy.floor() * m.rise(r)
+	if sum > 0 {
+		e += worstShare * s.tail / sum
+	}
+	for i := range r.PartErrorK {
+		r.PartErrorK[i] = e
+	}
+	m.local(r, s)
+	r.ErrorK = 0
+	for _, v := range r.PartErrorK {
+		r.ErrorK = math.Max(r.ErrorK, v)
+	}
+}
+
+// local adds to parts without a temperature of their own what their last harmonics make of the hottest place.
+func (m *Model) local(r *Result, s *state) {
+	for i := range s.pieces {
+		p := &s.pieces[i]
+		switch m.p.Parts[p.part].Core {
+		case Body, Bore, Inside:
+			r.PartErrorK[p.part] += localShare * p.last()
+		case FixedBore:
+			r.PartErrorK[p.part] = 0
+		}
+		if p.inside != nil {
+			m.local(r, p.inside)
+		}
+	}
+}
+
+// last is the size of the last two harmonics where Result.Core looks for a body's or cable's hottest place.
+func (p *pieceState) last() float64 {
+	sum := 0.0
+	for n := max(0, len(p.b)-2); n < len(p.b); n++ {
+		a := p.from(n)
+		port := p.stack.Port(n + 1)
+		x := p.b[n]*complex(1+port.T, 0) + a*complex(port.Tau, 0)
+		if w := p.stack.Waves(n+1, nil); len(w) > 0 {
+			f, g := w[0].Split(p.b[n], a)
+			x = f*complex(w[0].W, 0) + g
+		}
+		sum += math.Hypot(real(x), imag(x))
+	}
+	return sum
+}
+
+// rise is the largest difference from ambient.
+func (m *Model) rise(r *Result) float64 {
+	rise := 0.0
+	for _, t := range r.Core {
+		rise = math.Max(rise, math.Abs(t-m.p.Wall.Ambient))
+	}
+	return rise
+}
+
+// doubt raises the estimate of an iteration that did not end: by the residual's share of the rise.
+func (m *Model) doubt(r *Result, f []float64) {
+	y, tmp := make([]float64, len(f)), make([]float64, len(f))
+	m.top.product(y, m.x, tmp)
+	for i := range y {
+		y[i] -= f[i]
+	}
+	share := math.Sqrt(dot(y, y) / math.Max(dot(f, f), 1e-300))
+	add := share * m.rise(r)
+	for i := range r.PartErrorK {
+		r.PartErrorK[i] += add
+	}
+	r.ErrorK += add
+}
