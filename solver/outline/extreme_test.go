@@ -55,3 +55,11 @@ func TestExtremes(t *testing.T) {
 		})
 	}
 }
+
+// TestPointOnWall: a disc of no size on the wall is nonsense, but must not hang.
+func TestPointOnWall(t *testing.T) {
+	r := Rect{W: 0.02, H: 0.02, MediumK: 0.3, Sides: [4]Side{held(0), held(0), held(0), held(0)}}
+	if s := New(r, []Disc{{C: 0.01, M: 8}}, 1); s.Len() > 1000 {
+		t.Errorf("%d unknowns", s.Len())
+	}
+}

@@ -55,7 +55,7 @@ func (g *grading) length(e *edge, discs []Disc, s float64) float64 {
 	for i := range discs {
 		l = math.Min(l, g.near(&discs[i], z, l))
 	}
-	return l
+	return math.Max(l, e.length*1e-6) // a disc of no size on the wall
 }
 
 // cuts divides e into panels of those lengths: at equal steps of ∫ ds/length, taken from both ends so that mirrored edges have mirrored cuts.

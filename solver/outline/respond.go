@@ -16,12 +16,7 @@ func (s *System) RespondTo(y []float64, src Sources, ground bool) {
 		y[s.n] -= src.Q[j] / s.rect.MediumK
 		v := pack(make([]float64, 0, 1+2*usualOrder), src.Q[j], src.D[j][:min(len(src.D[j]), d.M)])
 		for _, l := range d.links {
-			p := &s.panels[l.panel]
-			cols := 1 + 2*l.m
-			n := min(cols, len(v))
-			for c := range p.p {
-				y[p.dof+c] += dot(d.send[l.offset+c*cols:][:n], v[:n])
-			}
+			addProduct(y[s.panels[l.panel].dof:], d.send[l.offset:], 1+2*l.m, v)
 		}
 	}
 	if ground {
@@ -48,11 +43,7 @@ func (s *System) IncomingAt(i int, y []float64, b []complex128) {
 	d := &s.discs[i]
 	v := make([]float64, 1+2*d.M, 1+2*usualOrder)
 	for _, l := range d.links {
-		p := &s.panels[l.panel]
-		cols := 1 + 2*l.m
-		for k := range p.p {
-			addScaled(v[:cols], y[p.dof+k], d.receive[l.offset+k*cols:][:cols])
-		}
+		addTransposed(v, d.receive[l.offset:], 1+2*l.m, y[s.panels[l.panel].dof:])
 	}
 	b[0] += complex(v[0]+y[s.n], 0)
 	for n := 1; n <= min(d.M, len(b)-1); n++ {
