@@ -22,10 +22,11 @@ type callout struct {
 
 // wanted is a reading that deserves a label outside.
 type wanted struct {
-	id, kind string
-	head     string
-	sub      []string
-	color    color.NRGBA
+	id    string
+	wall  bool // of the holder
+	head  string
+	sub   []string
+	color color.NRGBA
 }
 
 // Sizes of callouts at device scale 1.
@@ -108,11 +109,7 @@ func (p *sectionPainter) wantCallouts() []wanted {
 }
 
 func (p *sectionPainter) wording(r section.Reading) wanted {
-	name := r.ID
-	if r.Kind == "layer" || r.Kind == "surface" {
-		name = wallName(r, p.s)
-	}
-	w := wanted{id: r.ID, kind: r.Kind, head: name + " " + wholeC(r.TempC) + " °C", color: p.pal.Ink}
+	w := wanted{id: r.ID, wall: ofHolder(r, p.s.Shapes), head: readingName(r, p.s) + " " + wholeC(r.TempC) + " °C", color: p.pal.Ink}
 	k, limited := r.MarginK()
 	switch {
 	case r.Over():
@@ -132,12 +129,15 @@ func (p *sectionPainter) wording(r section.Reading) wanted {
 func (p *sectionPainter) leadsOf(w wanted) (straight []lead, bent func() []lead) {
 	slack := leaderSlack * p.k
 	bent = func() []lead { return nil }
-	if w.kind == "layer" || w.kind == "surface" {
+	if w.wall {
 		return p.wallLeads(w), bent
 	}
-	at := -1
+	at, id := -1, w.id
+	if owner, _ := layerOf(id, p.s.Shapes); owner != nil && p.partOf(id) == nil {
+		id = owner.ID // a cable's jacket is labelled from the cable's outline
+	}
 	for i, s := range p.shapes {
-		if s.ID == w.id && !s.Unset && p.inSight(p.disc(s)) {
+		if s.ID == id && !s.Unset && p.inSight(p.disc(s)) {
 			at = i
 		}
 	}
@@ -149,6 +149,16 @@ func (p *sectionPainter) leadsOf(w wanted) (straight []lead, bent func() []lead)
 		g := newGaps(append([]disc{target}, others...), slack)
 		return append(g.straight(0), g.from(0)...)
 	})
+}
+
+// partOf returns the part of an id, nil for a layer.
+func (p *sectionPainter) partOf(id string) *section.Shape {
+	for i := range p.shapes {
+		if p.shapes[i].ID == id {
+			return &p.shapes[i]
+		}
+	}
+	return nil
 }
 
 // obstacles returns the outlines of the parts that a leader from id must not cross: its neighbours, and those of the cables
@@ -169,13 +179,9 @@ func (p *sectionPainter) obstacles(id string) []disc {
 // wallLeads start in the middle of a layer of the wall, or on the outer surface, and go straight outwards.
 func (p *sectionPainter) wallLeads(w wanted) []lead {
 	depth := 0.0 // below the outer surface
-	if p.holder != nil && w.kind == "layer" {
-		rings := p.holder.Rings
-		if p.edge.round != nil {
-			rings = wall(*p.holder)
-		}
-		if i := layerIndex(w.id); i >= 0 && i < len(rings) {
-			depth = (p.holder.OuterR() - (rings[i].R0+rings[i].R1)/2) * p.v.PxPerMM
+	if owner, i := layerOf(w.id, p.s.Shapes); owner != nil && w.id != "outside" {
+		if r, ok := layerRing(*owner, i); ok {
+			depth = (owner.OuterR() - (r.R0+r.R1)/2) * p.v.PxPerMM
 		}
 	}
 	b := p.edge.box()

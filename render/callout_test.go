@@ -247,7 +247,7 @@ func TestWallCallout(t *testing.T) {
 	for name, s := range map[string]Scene{"round": hexScene(7), "rect": wirewayScene(9)} {
 		for i := range s.Readings {
 			r := &s.Readings[i]
-			r.Governs = r.ID == "jacket"
+			r.Governs = r.Kind == "layer"
 			if r.Governs {
 				r.LimitC = section.Some(r.TempC - 3)
 			}

@@ -2,8 +2,6 @@ package render
 
 import (
 	"math"
-	"strconv"
-	"strings"
 
 	"packrise/solver/section"
 )
@@ -36,42 +34,35 @@ func (p *sectionPainter) hatching() (any bool) {
 	for _, r := range p.s.Readings {
 		if r.Over() && r.Kind == "layer" {
 			any = true
-			p.hatchLayer(layerIndex(r.ID))
+			p.hatchLayer(layerOf(r.ID, p.s.Shapes))
 		}
 	}
 	return any
 }
 
-// layerIndex returns which layer of the holder a reading "jacket", "jacket/2" … is of, from 0.
-func layerIndex(id string) int {
-	_, n, ok := strings.Cut(id, "/")
+// hatchLayer hatches one layer of the holder's wall or of a cable's jacket.
+func (p *sectionPainter) hatchLayer(owner *section.Shape, i int) {
+	if owner == nil {
+		return
+	}
+	r, ok := layerRing(*owner, i)
 	if !ok {
-		return 0
+		return
 	}
-	i, err := strconv.Atoi(n)
-	if err != nil {
-		return 0
-	}
-	return i - 1
-}
-
-// hatchLayer hatches one layer of the holder's wall.
-func (p *sectionPainter) hatchLayer(i int) {
 	k := p.v.PxPerMM
-	switch e := p.edge; {
-	case e.rect != nil && i >= 0 && i < len(p.holder.Rings):
-		r, t := p.holder.Rings[i], p.holder.OuterR()
-		out, in := e.rect.grown(-(t-r.R1)*k), e.rect.grown(-(t-r.R0)*k)
+	if owner.Width > 0 && p.edge.rect != nil {
+		t := owner.OuterR()
+		out, in := p.edge.rect.grown(-(t-r.R1)*k), p.edge.rect.grown(-(t-r.R0)*k)
 		p.hatch(out, func(x, y, dx, dy float64) []span {
 			return minus(across(out, x, y, dx, dy), across(in, x, y, dx, dy))
 		})
-	case e.round != nil && i >= 0 && i < len(wall(*p.holder)):
-		r := wall(*p.holder)[i]
-		out, in := disc{e.round.x, e.round.y, r.R1 * k}, disc{e.round.x, e.round.y, r.R0 * k}
-		p.hatch(boxAround(out.x, out.y, out.r), func(x, y, dx, dy float64) []span {
-			return minus(chord(out, x, y, dx, dy), chord(in, x, y, dx, dy))
-		})
+		return
 	}
+	d := p.disc(*owner)
+	out, in := disc{d.x, d.y, r.R1 * k}, disc{d.x, d.y, r.R0 * k}
+	p.hatch(boxAround(out.x, out.y, out.r), func(x, y, dx, dy float64) []span {
+		return minus(chord(out, x, y, dx, dy), chord(in, x, y, dx, dy))
+	})
 }
 
 // hatch strokes the lines x + y = n·gap inside b where cut leaves them.

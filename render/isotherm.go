@@ -4,6 +4,7 @@ import (
 	"image"
 	"image/color"
 	"math"
+	"slices"
 	"strconv"
 
 	"packrise/solver/section"
@@ -42,7 +43,7 @@ func (p *sectionPainter) isotherms() []isoline {
 	}
 	for i, lines := range g.contours(values) {
 		l := &out[i]
-		l.lines = lines
+		l.lines = p.outsideMetal(lines, step)
 		pen := Pen{Width: p.k, Color: p.isoColor(l.temp)}
 		if l.limit {
 			pen = Pen{Width: 1.6 * p.k, Color: overOnMap, Dash: []float64{6 * p.k, 3 * p.k}}
@@ -61,6 +62,25 @@ func (p *sectionPainter) isotherms() []isoline {
 		}
 	}
 	return out
+}
+
+// outsideMetal drops rings that only run inside one conductor: metal has one temperature, and where that is a round one, the
+// line would draw nothing but the last digits of the solution.
+func (p *sectionPainter) outsideMetal(lines [][]section.Point, step float64) [][]section.Point {
+	var metal []disc
+	for _, s := range p.shapes {
+		for _, r := range s.Rings {
+			if r.Metal && r.R0 <= 0 {
+				d := p.disc(s)
+				metal = append(metal, disc{d.x, d.y, r.R1*p.v.PxPerMM + step/2})
+			}
+		}
+	}
+	return slices.DeleteFunc(lines, func(l []section.Point) bool {
+		return slices.ContainsFunc(metal, func(d disc) bool {
+			return !slices.ContainsFunc(l, func(q section.Point) bool { return math.Hypot(q.X-d.x, q.Y-d.y) > d.r })
+		})
+	})
 }
 
 // isoColor is light on the dark part of the map and dark on the light part.

@@ -66,7 +66,7 @@ func TestLadderFoldsEqualParts(t *testing.T) {
 func TestLadderLimits(t *testing.T) {
 	s := overScene()
 	_, text := rungsOf(s, 210, 480, Style{})
-	for _, want := range []string{`"limit 65 · 9 parts"`, `"limit 80 · jacket"`, `"ambient"`, `"°C"`, `"outside"`, `"conduit"`} {
+	for _, want := range []string{`"limit 65 · 9 parts"`, `"limit 80 · conduit"`, `"ambient"`, `"°C"`, `"outside"`, `"conduit"`} {
 		if !strings.Contains(text, want) {
 			t.Errorf("%s is missing", want)
 		}
@@ -96,5 +96,28 @@ func TestLadderUnsolved(t *testing.T) {
 	}
 	if rungs, _ := rungsOf(Scene{AmbientC: math.NaN()}, 100, 50, Style{}); len(rungs) != 0 {
 		t.Errorf("nothing known: %v", rungs)
+	}
+}
+
+func TestLayerOf(t *testing.T) {
+	s := nestedScene()
+	for _, c := range []struct {
+		id    string
+		owner string
+		index int
+	}{{"jacket", "", 0}, {"jacket/2", "", 1}, {"C1/jacket", "C1", 0}, {"C2/jacket/3", "C2", 2}, {"jacket/x", "", 0}} {
+		owner, i := layerOf(c.id, s.Shapes)
+		if owner == nil || owner.ID != c.owner || i != c.index {
+			t.Errorf("%s: %+v, layer %d", c.id, owner, i)
+		}
+	}
+	if owner, _ := layerOf("jacket", nil); owner != nil {
+		t.Errorf("a layer of nothing: %+v", owner)
+	}
+	s.Readings = append(s.Readings, section.Reading{ID: "C1/jacket", Kind: "layer", TempC: 61}, section.Reading{ID: "jacket/2", Kind: "layer", TempC: 40})
+	for i, want := range map[int]string{len(s.Readings) - 2: "C1 jacket", len(s.Readings) - 1: "jacket 2"} {
+		if got := readingName(s.Readings[i], s); got != want {
+			t.Errorf("%s is called %q, want %q", s.Readings[i].ID, got, want)
+		}
 	}
 }

@@ -24,11 +24,11 @@ func ScaleOf(s Scene) Scale {
 	}
 	top := high
 	for _, r := range s.Readings {
-		reach := 0.6
+		near := max(10, 0.35*(high-low))
 		if r.Governs {
-			reach = 0.75
+			near = max(15, 0.75*(high-low))
 		}
-		if r.LimitC.OK && r.LimitC.V <= high+max(15, reach*(high-low)) {
+		if r.LimitC.OK && r.LimitC.V <= high+near {
 			top = max(top, r.LimitC.V)
 		}
 	}

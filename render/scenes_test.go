@@ -155,7 +155,7 @@ func withField(s Scene, heat float64) Scene {
 		b := f.edge.box()
 		t := f.value(b.x1-1e-9, (b.y0+b.y1)/2)
 		s.Readings = append(s.Readings,
-			section.Reading{ID: "jacket", Kind: "layer", TempC: t + 2, LimitC: section.Some(80.0)},
+			section.Reading{ID: h.Kind, Kind: "layer", TempC: t + 2, LimitC: section.Some(80.0)},
 			section.Reading{ID: "outside", Kind: "surface", TempC: t})
 	}
 	return withWords(s, tight)

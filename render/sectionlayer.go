@@ -76,14 +76,6 @@ func (p *sectionPainter) inSight(d disc) bool {
 	return boxAround(d.x, d.y, d.r+4*p.k).meets(p.frame)
 }
 
-// wall returns the rings of a round shape that enclose something: those that do not reach its centre.
-func wall(s section.Shape) []section.Ring {
-	if len(s.Rings) > 0 && s.Rings[0].R0 <= 0 {
-		return s.Rings[1:]
-	}
-	return s.Rings
-}
-
 // fills gives shape to what has no temperature: everything in an unsolved scene, unplaced parts always.
 func (p *sectionPainter) fills() {
 	if !p.s.solved() {

@@ -8,8 +8,6 @@ import (
 	"sort"
 	"strconv"
 	"strings"
-
-	"packrise/solver/section"
 )
 
 // mostGroups keeps the ladder of a large section calm.
@@ -47,44 +45,61 @@ func (l *ladder) steps() []step {
 		fixed = append(fixed, step{name: "ambient", temp: t, low: t, high: t, color: l.pal.Ink})
 	}
 	fixed = append(fixed, l.wallSteps()...)
-	named, others := l.partSteps()
-	room := int((l.h-l.top)/(rowHeight*l.k)) - len(fixed) - len(named)
+	named, over, others := l.partSteps()
+	room := min(mostGroups, int((l.h-l.top)/(rowHeight*l.k))-len(fixed)-len(named))
 	out := append(fixed, named...)
-	out = append(out, l.fold(others, max(1, min(room, mostGroups)), len(named) > 0)...)
+	if len(over) > 0 && len(others) > 0 {
+		half := max(1, room/2)
+		out = append(out, l.fold(over, half, "over")...)
+		out = append(out, l.fold(others, max(1, room-half), "parts")...)
+	} else {
+		out = append(out, l.fold(append(over, others...), max(1, room), "parts")...)
+	}
+	for i := range out { // a single group beside parts of their own is "the others"
+		if n := len(out[i].ids); n > 1 && len(named) > 0 && n == len(over)+len(others) && strings.HasSuffix(out[i].name, " parts") {
+			out[i].name = strconv.Itoa(n) + " others"
+		}
+	}
 	sort.SliceStable(out, func(i, j int) bool { return out[i].temp > out[j].temp })
 	return out
 }
 
-// partSteps splits the parts' readings into those with a label of their own and the rest.
-func (l *ladder) partSteps() (named, others []step) {
+// partSteps splits the parts' readings into those with a label of their own, those over their limit and the rest.
+func (l *ladder) partSteps() (named, over, others []step) {
 	for _, r := range l.s.Readings {
-		if r.Kind == "layer" || r.Kind == "surface" || !finite(r.TempC) {
+		if ofHolder(r, l.s.Shapes) || !finite(r.TempC) {
 			continue
 		}
+		id := r.ID
+		if owner, _ := layerOf(id, l.s.Shapes); r.Kind == "layer" && owner != nil {
+			id = owner.ID // pointing at a cable's jacket is pointing at the cable
+		}
 		s := step{
-			ids: []string{r.ID}, name: r.ID, temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs,
-			selected: slices.Contains(l.s.Selected, r.ID), pointed: r.ID == l.s.Pointed,
+			ids: []string{id}, name: readingName(r, l.s), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs,
+			selected: slices.Contains(l.s.Selected, id), pointed: id == l.s.Pointed,
 		}
 		if r.Over() {
 			s.color = l.pal.Over
 		}
 		if r.Governs || r.Hottest || s.pointed || s.selected && len(l.s.Selected) <= 3 {
 			named = append(named, s)
+		} else if r.Over() {
+			over = append(over, s)
 		} else {
 			others = append(others, s)
 		}
 	}
-	return named, others
+	return named, over, others
 }
 
 // fold joins steps of equal temperature, and ever less equal ones until they fit into the rows left.
-func (l *ladder) fold(parts []step, rows int, beside bool) []step {
+func (l *ladder) fold(parts []step, rows int, word string) []step {
 	sort.SliceStable(parts, func(i, j int) bool { return parts[i].temp > parts[j].temp })
 	var out []step
 	for tol := 1.0; ; tol *= 1.4 {
 		out = nil
 		for _, s := range parts {
-			if n := len(out); n > 0 && out[n-1].high-s.low <= tol && out[n-1].color == s.color {
+			if n := len(out); n > 0 && out[n-1].high-s.low <= tol {
 				g := &out[n-1]
 				g.ids = append(g.ids, s.ids...)
 				g.low = s.low
@@ -101,34 +116,31 @@ func (l *ladder) fold(parts []step, rows int, beside bool) []step {
 	for i := range out {
 		g := &out[i]
 		g.temp = (g.low + g.high) / 2
-		g.name = l.groupName(g.ids, beside && len(out) == 1)
+		g.name = l.groupName(*g, word)
 	}
 	return out
 }
 
-// groupName names a group by its ids when there is room, else by their number.
-func (l *ladder) groupName(ids []string, others bool) string {
-	if len(ids) == 1 {
-		return ids[0]
+// groupName names a group by what is in it when there is room, else by their number.
+func (l *ladder) groupName(g step, word string) string {
+	if len(g.ids) == 1 {
+		return g.name
 	}
-	all := strings.Join(ids, ", ")
-	if len(ids) <= 4 && l.c.MeasureText(all+" 100–100", l.font()) <= l.w-l.text-4*l.k {
+	all := strings.Join(g.ids, ", ")
+	if len(g.ids) <= 4 && l.c.MeasureText(all+" 100–100", l.font()) <= l.w-l.text-4*l.k {
 		return all
 	}
-	if others {
-		return strconv.Itoa(len(ids)) + " others"
-	}
-	return strconv.Itoa(len(ids)) + " parts"
+	return strconv.Itoa(len(g.ids)) + " " + word
 }
 
 // wallSteps are the holder's layers and its outer surface; equal ones share a label.
 func (l *ladder) wallSteps() []step {
 	var out []step
 	for _, r := range l.s.Readings {
-		if r.Kind != "layer" && r.Kind != "surface" || !finite(r.TempC) {
+		if !ofHolder(r, l.s.Shapes) || !finite(r.TempC) {
 			continue
 		}
-		s := step{ids: []string{r.ID}, name: wallName(r, l.s), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs}
+		s := step{ids: []string{r.ID}, name: readingName(r, l.s), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs}
 		if r.Over() {
 			s.color = l.pal.Over
 		}
@@ -144,34 +156,10 @@ func (l *ladder) wallSteps() []step {
 	return out
 }
 
-// wallName is what people call a layer of the holder or its outer surface.
-func wallName(r section.Reading, s Scene) string {
-	if r.Kind == "surface" {
-		return "outside"
-	}
-	name := "wall"
-	if h := holderOf(s.Shapes); h != nil {
-		switch h.Kind {
-		case section.Jacket, section.Conduit, section.Wireway:
-			name = h.Kind
-		}
-	}
-	layers := 0
-	for _, r := range s.Readings {
-		if r.Kind == "layer" {
-			layers++
-		}
-	}
-	if layers > 1 {
-		return fmt.Sprintf("%s %d", name, layerIndex(r.ID)+1)
-	}
-	return name
-}
-
 // limitSteps are the notches: one for every different limit, with what it belongs to when there are several.
 func (l *ladder) limitSteps() []step {
 	type notch struct {
-		ids           []string
+		names         []string
 		over, governs bool
 	}
 	found := map[float64]*notch{}
@@ -185,7 +173,7 @@ func (l *ladder) limitSteps() []step {
 			temps = append(temps, r.LimitC.V)
 		}
 		n := found[r.LimitC.V]
-		n.ids, n.over, n.governs = append(n.ids, r.ID), n.over || r.Over(), n.governs || r.Governs
+		n.names, n.over, n.governs = append(n.names, readingName(r, l.s)), n.over || r.Over(), n.governs || r.Governs
 	}
 	var out []step
 	for _, t := range temps {
@@ -198,10 +186,10 @@ func (l *ladder) limitSteps() []step {
 			short += " ↑"
 		}
 		name := short
-		if len(temps) > 1 && len(n.ids) == 1 {
-			name += " · " + n.ids[0]
+		if len(temps) > 1 && len(n.names) == 1 {
+			name += " · " + n.names[0]
 		} else if len(temps) > 1 {
-			name += fmt.Sprintf(" · %d parts", len(n.ids))
+			name += fmt.Sprintf(" · %d parts", len(n.names))
 		}
 		s := step{name: name, short: short, temp: t, low: t, high: t, limit: true, color: l.pal.Ink}
 		if n.over {
