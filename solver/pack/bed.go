@@ -20,6 +20,7 @@ type bed struct {
 	r     float64 // of the disc that is being placed
 	worth worth
 	spots []spot
+	seen  []int // last disc for which each was looked at, so that none is twice
 }
 
 // newBed makes a bed for discs of the mean radius that lie within scale of the origin.
@@ -37,6 +38,7 @@ func newBed(in Box, scale, mean float64) *bed {
 func (b *bed) put(d Disc) {
 	b.grid.put(d, len(b.discs))
 	b.discs = append(b.discs, d)
+	b.seen = append(b.seen, -1)
 }
 
 // best returns the free place of least cost for a disc of radius r.
@@ -132,6 +134,9 @@ func (b *bed) oneSpots() {
 
 // discSpots adds the places that touch a disc and the wall, and those that touch two discs.
 func (b *bed) discSpots() {
+	for k := range b.seen {
+		b.seen[k] = -1
+	}
 	for i, p := range b.discs {
 		a := p.R + b.r
 		switch {
@@ -142,10 +147,26 @@ func (b *bed) discSpots() {
 		case b.in.rect():
 			b.sideSpots(p, a)
 		}
-		for _, q := range b.discs[:i] {
-			dx, dy, s := q.X-p.X, q.Y-p.Y, p.R+q.R+2*b.r
-			if dx*dx+dy*dy <= s*s {
-				b.meet(p.X, p.Y, a, q.X, q.Y, q.R+b.r, 1)
+		b.pairSpots(i)
+	}
+}
+
+// pairSpots adds the places that touch disc i and one before it.
+func (b *bed) pairSpots(i int) {
+	p := b.discs[i]
+	i0, j0, i1, j1 := b.grid.span(p.X, p.Y, p.R+2*b.r)
+	for row := j0; row <= j1; row++ {
+		for col := i0; col <= i1; col++ {
+			for _, k := range b.grid.cells[row*b.grid.nx+col] {
+				if int(k) >= i || b.seen[k] == i {
+					continue
+				}
+				b.seen[k] = i
+				q := b.discs[k]
+				dx, dy, s := q.X-p.X, q.Y-p.Y, p.R+q.R+2*b.r
+				if dx*dx+dy*dy <= s*s {
+					b.meet(p.X, p.Y, p.R+b.r, q.X, q.Y, q.R+b.r, 1)
+				}
 			}
 		}
 	}

@@ -134,7 +134,7 @@ func (c *crowd) look(k *contact) {
 	need := c.size*k.need + c.gap
 	switch k.j {
 	case wallRound:
-		d := math.Hypot(p.X, p.Y)
+		d := math.Sqrt(p.X*p.X + p.Y*p.Y)
 		k.nx, k.ny = 0, 1
 		if d > 0 {
 			k.nx, k.ny = -p.X/d, -p.Y/d
@@ -151,7 +151,7 @@ func (c *crowd) look(k *contact) {
 	default:
 		q := c.discs[k.j]
 		dx, dy := p.X-q.X, p.Y-q.Y
-		d := math.Hypot(dx, dy)
+		d := math.Sqrt(dx*dx + dy*dy) // math.Hypot is several times slower and guards against nothing here
 		if d > 0 {
 			k.nx, k.ny = dx/d, dy/d
 		} else { // one upon the other: any way out, but always the same

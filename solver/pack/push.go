@@ -215,7 +215,7 @@ func (p *pusher) hop(start []Disc) ([]Disc, bool) {
 	}
 	slices.SortStableFunc(order, func(a, b int) int {
 		if p.stays[a] != p.stays[b] {
-			return -cmp.Compare(btoi(p.stays[a]), btoi(p.stays[b]))
+			return cmp.Compare(btoi(p.stays[b]), btoi(p.stays[a]))
 		}
 		return cmp.Compare(out[b].R, out[a].R)
 	})

@@ -240,3 +240,22 @@ func BenchmarkPushApart(b *testing.B) {
 		}
 	}
 }
+
+// BenchmarkPushApartJammed drags in a cable with no room to give way: most calls fail.
+func BenchmarkPushApartJammed(b *testing.B) {
+	for _, n := range []int{37, 61, 200} {
+		b.Run(fmt.Sprintf("n=%d", n), func(b *testing.B) {
+			discs, r := SmallestHolder(equals(n, 1), 1)
+			seed, failed := uint64(0), 0
+			for b.Loop() {
+				out := slices.Clone(discs)
+				held := dragged(out, Box{R: r}, 0.5, seed)
+				if _, ok := PushApart(out, Box{R: r}, held, 0); !ok {
+					failed++
+				}
+				seed++
+			}
+			b.ReportMetric(float64(failed)/float64(b.N), "failed")
+		})
+	}
+}

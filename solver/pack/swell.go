@@ -28,11 +28,12 @@ func fitting(discs []Disc, in Box, gap float64) float64 {
 
 // soften pushes overlapping discs of the given size apart pair by pair, which spreads them without making all of them fit.
 func soften(discs []Disc, in Box, size float64, sweeps int) {
-	c := newCrowd(discs, in, 0, 0)
+	r, _ := means(discs)
+	c := newCrowd(discs, in, 0, r)
 	c.size = size
 	for s := range sweeps {
 		if s%5 == 0 {
-			c.near = math.Inf(1)
+			c.contacts = c.contacts[:0] // nothing of them is worth keeping
 			c.list(0, 0)
 		}
 		for k := range c.contacts {
