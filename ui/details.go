@@ -4,7 +4,6 @@ import (
 	"slices"
 
 	"fyne.io/fyne/v2"
-	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/container"
 	"fyne.io/fyne/v2/theme"
 	"fyne.io/fyne/v2/widget"
@@ -20,13 +19,14 @@ type Details struct {
 	help   *prose // about the field that has the focus
 
 	sentences []*prose
-	rule      *canvas.Rectangle
+	rule      *fill
 	more      *prose // folds the fields
 	folded    bool
 	fields    []*field
 	known     map[string]*field // by key, to keep an entry while its part changes
 	selection []string
 	relaying  bool
+	tall      fyne.Size // of all sentences and fields
 }
 
 // NewDetails shows the desk's selection.
@@ -36,7 +36,7 @@ func NewDetails(k *Desk) *Details {
 	d.scroll = container.NewVScroll(d.column)
 	d.help = newProse(k)
 	d.help.size = smallText(d.help)
-	d.rule = canvas.NewRectangle(nil)
+	d.rule = newFill(theme.ColorNameSeparator)
 	d.more = newProse(k)
 	d.more.moved = d.relay
 	d.ExtendBaseWidget(d)
@@ -142,7 +142,6 @@ func (d *Details) refill() {
 // about tells below what the entry with the focus takes, "" when none has it.
 func (d *Details) about(text string) {
 	d.help.say(run{text: text, tone: quiet})
-	d.help.Refresh()
 }
 
 // relay stacks sentences and fields for their heights as they are now.
@@ -158,13 +157,13 @@ func (d *Details) relay() {
 	for _, f := range d.fields {
 		objects = append(objects, f)
 	}
-	d.rule.FillColor = themeColor(theme.ColorNameSeparator)
-	d.rule.SetMinSize(fyne.NewSize(1, 1))
-	if !slices.Equal(objects, d.column.Objects) {
-		d.column.Objects = objects
-	}
+	same := slices.Equal(objects, d.column.Objects)
+	d.column.Objects = objects
 	d.column.Layout.Layout(objects, fyne.NewSize(d.scroll.Size().Width, 0))
-	d.scroll.Refresh()
+	if tall := d.column.MinSize(); !same || tall != d.tall {
+		d.tall = tall
+		d.scroll.Refresh()
+	}
 }
 
 // detailsHelpHeight is the height of the pane from which on the line of help has its place.
@@ -187,7 +186,7 @@ func (l detailsLayout) MinSize([]fyne.CanvasObject) fyne.Size { return l.d.MinSi
 
 func (l detailsLayout) Layout(_ []fyne.CanvasObject, s fyne.Size) {
 	d := l.d
-	line := 2*fyne.MeasureText("Mg", d.help.textSize(), fyne.TextStyle{}).Height + 2*proseLeading
+	line := 2*textExtent("Mg", d.help.textSize(), fyne.TextStyle{}).Height + 2*proseLeading
 	if s.Height < detailsHelpHeight {
 		line = 0
 	}

@@ -58,6 +58,9 @@ func (f *field) show(in *input) {
 
 // say writes below the entry.
 func (f *field) say(understood string, err error) {
+	if understood == "" && err == nil && len(f.message.runs) == 0 {
+		return
+	}
 	before := f.heightFor(f.width)
 	switch {
 	case err != nil:

@@ -60,27 +60,44 @@ func newBench(t testing.TB, design string) *bench {
 		defer mu.Unlock()
 		return b.temps, b.limit
 	}
-	b.Desk = NewDeskWith(benchCatalog(), d, Rooms{
+	b.open(d, Rooms{
 		Solve: func(_ context.Context, d *section.Document, _ rating.Options) (*rating.Result, []section.Problem, error) {
 			temps, limits := answers()
 			return benchAnswer(d, temps, limits), nil, nil
 		},
 		Outline: benchOutline,
-		Hop:     func(f func()) { b.hops <- f },
-		Beside:  func(f func()) { f() },
-		After: func(_ time.Duration, f func()) func() {
-			b.after = append(b.after, f)
-			return func() {}
-		},
 	})
-	t.Cleanup(b.Close)
-	b.wait()
 	return b
 }
 
-// wait brings the answer under way to the window.
+// newSolvingBench opens a desk on a design with the program's own answers.
+func newSolvingBench(t testing.TB, design string) *bench {
+	t.Helper()
+	d, problems := section.Read([]byte(design))
+	if d == nil {
+		t.Fatalf("the test's design is refused: %v", problems)
+	}
+	b := &bench{t: t, hops: make(chan func(), 1000)}
+	b.open(d, Rooms{})
+	return b
+}
+
+// open opens the desk with the test's goroutine for the window's.
+func (b *bench) open(d *section.Document, r Rooms) {
+	r.Hop = func(f func()) { b.hops <- f }
+	r.Beside = func(f func()) { f() }
+	r.After = func(_ time.Duration, f func()) func() {
+		b.after = append(b.after, f)
+		return func() {}
+	}
+	b.Desk = NewDeskWith(benchCatalog(), d, r)
+	b.t.Cleanup(b.Close)
+	b.wait()
+}
+
+// wait brings what is under way to the window, the answer at last.
 func (b *bench) wait() {
-	for b.Solving() {
+	for b.Solving() || len(b.hops) > 0 {
 		(<-b.hops)()
 	}
 }

@@ -45,17 +45,23 @@ func newFieldEntry(k *Desk, in *input) *fieldEntry {
 func (e *fieldEntry) show(in *input) {
 	typing := e.in != nil && e.Text != e.in.text && e.in.key == in.key && e.in.on == in.on && e.in.text == in.text
 	e.in = in
-	e.SetPlaceHolder(in.hint)
+	hint := in.hint
 	if in.mixed {
-		e.SetPlaceHolder("several")
+		hint = "several"
+	}
+	if e.PlaceHolder != hint {
+		e.SetPlaceHolder(hint)
 	}
 	if len(in.choices) > 0 && e.ActionItem == nil {
 		e.ActionItem = newFieldDrop(e)
 	}
-	if !typing && e.Text != in.text {
+	if typing {
+		return
+	}
+	if e.Text != in.text {
 		e.SetText(in.text)
 	}
-	if !typing && e.say != nil {
+	if e.say != nil {
 		e.say("", nil)
 	}
 }

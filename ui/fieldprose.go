@@ -71,7 +71,7 @@ func newProse(k *Desk, runs ...run) *prose {
 
 // say replaces the text. An input that is being edited stays open as long as the new text has it too.
 func (p *prose) say(runs ...run) {
-	if sameRuns(p.runs, runs) {
+	if p.editing < 0 && sameRuns(p.runs, runs) {
 		p.runs = runs
 		return
 	}
@@ -96,17 +96,21 @@ func (p *prose) say(runs ...run) {
 	p.relay()
 }
 
+// sameRuns tells whether two texts look alike.
 func sameRuns(a, b []run) bool {
 	if len(a) != len(b) {
 		return false
 	}
 	for i := range a {
-		if a[i].text != b[i].text || a[i].tone != b[i].tone || a[i].in != nil || b[i].in != nil || a[i].tap != nil || b[i].tap != nil {
+		if a[i].text != b[i].text || a[i].tone != b[i].tone || a[i].linked() != b[i].linked() {
 			return false
 		}
 	}
 	return true
 }
+
+// linked tells whether something happens when the run is tapped.
+func (r run) linked() bool { return r.in != nil || r.tap != nil }
 
 // String is the text without its looks.
 func (p *prose) String() string {
@@ -214,7 +218,7 @@ func (p *prose) edit(i int) {
 func (p *prose) runAt(at fyne.Position) int {
 	for _, w := range p.pieces {
 		if w.run >= 0 && at.X >= w.at.X && at.X < w.at.X+w.size.Width && at.Y >= w.at.Y && at.Y < w.at.Y+w.size.Height {
-			if r := p.runs[w.run]; r.in != nil || r.tap != nil {
+			if p.runs[w.run].linked() {
 				return w.run
 			}
 		}

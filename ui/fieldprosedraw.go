@@ -58,7 +58,7 @@ func (p *prose) dress(t *canvas.Text, i int) bool {
 	looks, linked := quiet, false
 	switch {
 	case i >= 0:
-		looks, linked = p.runs[i].tone, p.runs[i].in != nil || p.runs[i].tap != nil
+		looks, linked = p.runs[i].tone, p.runs[i].linked()
 	case p.wrong:
 		looks = alarm
 	}

@@ -27,7 +27,7 @@ type proseLay struct {
 // layOut breaks the runs into lines of the width. Words break at spaces; a word wider than a line breaks where it must.
 func (p *prose) layOut() {
 	l := &proseLay{p: p, size: p.textSize()}
-	l.line = fyne.MeasureText("Mg", l.size, fyne.TextStyle{}).Height
+	l.line = textExtent("Mg", l.size, fyne.TextStyle{}).Height
 	l.tall = l.line
 	for i, r := range p.runs {
 		if i == p.editing && p.entry != nil {
@@ -50,7 +50,7 @@ func (p *prose) layOut() {
 // entry keeps room for the entry that stands in the place of a run.
 func (l *proseLay) entry(i int) {
 	s := l.p.entry.MinSize()
-	s.Width = min(max(proseEntryWidth, fyne.MeasureText(l.p.entry.Text, l.size, fyne.TextStyle{}).Width+44), max(l.p.width, 40))
+	s.Width = min(max(proseEntryWidth, textExtent(l.p.entry.Text, l.size, fyne.TextStyle{}).Width+44), max(l.p.width, 40))
 	if l.x+s.Width > l.p.width {
 		l.newLine()
 	}
@@ -81,7 +81,7 @@ func (l *proseLay) word(run int, word string, style fyne.TextStyle) {
 	if word == "" {
 		return
 	}
-	s := fyne.MeasureText(word, l.size, style)
+	s := textExtent(word, l.size, style)
 	if l.x+s.Width > l.p.width && l.x > 0 {
 		if word[0] == ' ' || run < 0 {
 			l.newLine()
@@ -89,28 +89,28 @@ func (l *proseLay) word(run int, word string, style fyne.TextStyle) {
 		} else {
 			l.carry()
 		}
-		s = fyne.MeasureText(word, l.size, style)
+		s = textExtent(word, l.size, style)
 	}
 	for s.Width > l.p.width-l.x && utf8.RuneCountInString(word) > 1 {
 		head := l.fitting(word, style)
-		l.put(piece{text: head, run: run, size: fyne.NewSize(fyne.MeasureText(head, l.size, style).Width, s.Height)})
+		l.put(piece{text: head, run: run, size: fyne.NewSize(textExtent(head, l.size, style).Width, s.Height)})
 		l.newLine()
 		word = word[len(head):]
-		s = fyne.MeasureText(word, l.size, style)
+		s = textExtent(word, l.size, style)
 	}
 	if last := len(l.pieces) - 1; last >= l.first && l.pieces[last].run == run && l.pieces[last].text != "" {
 		w := &l.pieces[last]
 		joined := w.text + word
-		width := fyne.MeasureText(joined, l.size, style).Width
+		width := textExtent(joined, l.size, style).Width
 		if w.at.X+width <= l.p.width {
 			w.text, w.size.Width, l.x = joined, width, w.at.X+width
 			return
 		}
 	}
 	if lead := len(word) - len(strings.TrimLeft(word, " ")); lead > 0 {
-		l.x += fyne.MeasureText(word[:lead], l.size, style).Width
+		l.x += textExtent(word[:lead], l.size, style).Width
 		word = word[lead:]
-		s = fyne.MeasureText(word, l.size, style)
+		s = textExtent(word, l.size, style)
 	}
 	if word != "" {
 		l.put(piece{text: word, run: run, size: s})
@@ -122,7 +122,7 @@ func (l *proseLay) fitting(word string, style fyne.TextStyle) string {
 	end := 0
 	for i, r := range word {
 		next := i + utf8.RuneLen(r)
-		if end > 0 && l.x+fyne.MeasureText(word[:next], l.size, style).Width > l.p.width {
+		if end > 0 && l.x+textExtent(word[:next], l.size, style).Width > l.p.width {
 			break
 		}
 		end = next
@@ -148,14 +148,14 @@ func (l *proseLay) carry() {
 	}
 	l.pieces = l.pieces[:last]
 	if head != "" {
-		l.pieces = append(l.pieces, piece{text: head, run: w.run, at: w.at, size: fyne.MeasureText(head, l.size, style)})
+		l.pieces = append(l.pieces, piece{text: head, run: w.run, at: w.at, size: textExtent(head, l.size, style)})
 	}
 	l.newLine()
 	if w.text == "" { // an entry
 		l.put(piece{run: w.run, size: w.size})
 		return
 	}
-	l.put(piece{text: tail, run: w.run, size: fyne.MeasureText(tail, l.size, style)})
+	l.put(piece{text: tail, run: w.run, size: textExtent(tail, l.size, style)})
 }
 
 func (l *proseLay) put(w piece) {
@@ -178,4 +178,28 @@ func (l *proseLay) newLine() {
 	l.x = 0
 	l.y += l.tall + proseLeading
 	l.tall = l.line
+}
+
+// extents keeps the sizes of words: to shape them anew for every answer costs more than all the rest. The window's goroutine alone uses it.
+var extents = map[extentKey]fyne.Size{}
+
+type extentKey struct {
+	text string
+	size float32
+	bold bool
+	font fyne.Resource
+}
+
+// textExtent is the size of a text in plain or bold.
+func textExtent(text string, size float32, style fyne.TextStyle) fyne.Size {
+	key := extentKey{text, size, style.Bold, fyne.CurrentApp().Settings().Theme().Font(style)}
+	if s, ok := extents[key]; ok {
+		return s
+	}
+	if len(extents) > 4000 {
+		clear(extents)
+	}
+	s := fyne.MeasureText(text, size, style)
+	extents[key] = s
+	return s
 }

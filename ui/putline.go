@@ -15,7 +15,6 @@ type PutLine struct {
 	entry *putEntry
 	hint  *putHint
 	wrong bool
-	busy  bool // a place is being looked for
 }
 
 // putEntry is the entry of the line. Escape empties it.
@@ -71,7 +70,7 @@ func (l *PutLine) say(text string, wrong bool) {
 // submit puts in what is typed.
 func (l *PutLine) submit() {
 	text := plainMinus(l.entry.Text)
-	if squeezed(text) == "" || l.busy {
+	if squeezed(text) == "" {
 		return
 	}
 	p, err := l.desk.Catalog().Parse(text)

@@ -11,9 +11,10 @@ import (
 	"packrise/solver/section"
 )
 
-func typeAndEnter(l *PutLine, text string) {
+func typeAndEnter(b *bench, l *PutLine, text string) {
 	test.Type(l.entry, text)
 	l.entry.TypedKey(&fyne.KeyEvent{Name: fyne.KeyReturn})
+	b.wait()
 }
 
 func TestPutLineAddsAndUndoTakesAway(t *testing.T) {
@@ -67,7 +68,7 @@ func TestPutLineFillsUntilThereIsNoRoom(t *testing.T) {
 	b := newBench(t, benchDesign)
 	l := NewPutLine(b.Desk)
 	b.show(l, 380, 120)
-	typeAndEnter(l, "40x 8 thhn")
+	typeAndEnter(b, l, "40x 8 thhn")
 	checkFree(t, b)
 	waiting := 0
 	for _, p := range b.Document().Parts {
@@ -84,12 +85,12 @@ func TestPutLineTakesRodsAndHolders(t *testing.T) {
 	b := newBench(t, benchDesign)
 	l := NewPutLine(b.Desk)
 	b.show(l, 380, 120)
-	typeAndEnter(l, "filler 4")
+	typeAndEnter(b, l, "filler 4")
 	p := section.Find(b.Document(), "F2")
 	if p == nil || p.Kind != section.Rod || p.Diameter.V != 4 || p.Material == "" {
 		t.Fatalf("filler 4 became %+v", p)
 	}
-	typeAndEnter(l, "emt 1-1/4")
+	typeAndEnter(b, l, "emt 1-1/4")
 	if h := b.Document().Holder; !strings.HasPrefix(h.Stock, "emt-") || h.InsideMM.OK || h.Kind != section.Conduit {
 		t.Errorf("the holder is %+v", h)
 	}
@@ -109,7 +110,7 @@ func TestPutLineSaysWhatIsWrong(t *testing.T) {
 	was := b.Document()
 	for _, text := range []string{"nonsense", "4G1.5", "-3 thhn", "12 thhn 7", "999x 12 thhn"} {
 		l.entry.SetText("")
-		typeAndEnter(l, text)
+		typeAndEnter(b, l, text)
 		if !l.hint.wrong || !strings.HasSuffix(l.hint.text, ".") || strings.Contains(l.hint.text, "\n") {
 			t.Errorf("%q: says %q", text, l.hint.text)
 		}
@@ -128,7 +129,7 @@ func TestPutLineSpellsOutUnlistedWires(t *testing.T) {
 	b := newBench(t, benchDesign)
 	l := NewPutLine(b.Desk)
 	b.show(l, 380, 120)
-	typeAndEnter(l, "2.5 h07v-k")
+	typeAndEnter(b, l, "2.5 h07v-k")
 	ids := b.Selection()
 	if len(ids) != 1 {
 		t.Fatalf("selected %v, says %q", ids, l.hint.text)
@@ -141,7 +142,11 @@ func TestPutLineSpellsOutUnlistedWires(t *testing.T) {
 
 func BenchmarkFreePlaces(b *testing.B) {
 	k := newBench(b, manyWires(200))
+	outline := func(d *section.Document) []section.Shape {
+		shapes, _ := benchOutline(d, nil)
+		return shapes
+	}
 	for b.Loop() {
-		freePlaces(k.Desk, k.Document(), section.Part{Kind: section.Core, Stock: "thhn-12"}, 10)
+		freePlaces(outline, k.Document(), section.Part{Kind: section.Core, Stock: "thhn-12"}, 10)
 	}
 }

@@ -3,11 +3,11 @@ package ui
 import "packrise/solver/section"
 
 // freePlaces finds places for n equal parts, each the free one nearest to the bottom of the holder (to the middle where there is no holder), without
-// moving what lies there. It returns fewer than n where there is no more room.
-func freePlaces(k *Desk, d *section.Document, p section.Part, n int) []section.Point {
+// moving what lies there. It returns fewer than n where there is no more room. It may run beside the window.
+func freePlaces(outline func(*section.Document) []section.Shape, d *section.Document, p section.Part, n int) []section.Point {
 	p.ID = section.FreshID(d, "new")
 	p.At = section.Opt[section.Point]{}
-	shapes, _ := k.rooms.Outline(section.Add(d, p), k.Catalog())
+	shapes := outline(section.Add(d, p))
 	r := 0.0
 	for _, s := range shapes {
 		if s.ID == p.ID {

@@ -24,24 +24,46 @@ func (l *PutLine) put(p catalog.Parsed) error {
 			stem = "H"
 		}
 	}
+	if n := len(section.UnfoldAll(l.desk.Document())) + p.Count; n > section.MaxParts {
+		return fmt.Errorf("that would make %d parts and a section has at most %d; take some out before you put more in", n, section.MaxParts)
+	}
+	l.done("")
+	l.place(part, stem, max(p.Count, 1))
+	return nil
+}
+
+// place looks for places beside the window's goroutine and puts the parts in there, as one step.
+func (l *PutLine) place(part section.Part, stem string, n int) {
+	k := l.desk
+	d, rev, rooms, cat := k.Document(), k.Revision(), k.rooms, k.Catalog()
+	outline := func(d *section.Document) []section.Shape {
+		shapes, _ := rooms.Outline(d, cat)
+		return shapes
+	}
+	rooms.Beside(func() {
+		places := freePlaces(outline, d, part, n)
+		rooms.Hop(func() {
+			if k.Revision() != rev {
+				l.place(part, stem, n) // the section has changed meanwhile
+				return
+			}
+			l.add(part, stem, places, n)
+		})
+	})
+}
+
+// add puts n parts into the document, the last of them without a place where there are too few, and selects them.
+func (l *PutLine) add(part section.Part, stem string, places []section.Point, n int) {
 	d := l.desk.Document()
-	var ids []string
-	unplaced := 0
-	places := freePlaces(l.desk, d, part, p.Count)
-	next := d
-	for i := range max(p.Count, 1) {
+	next, ids := d, []string(nil)
+	for i := range n {
 		part.ID = section.FreshID(next, stem)
 		part.At = section.Opt[section.Point]{}
 		if i < len(places) {
 			part.At = section.Some(places[i])
-		} else {
-			unplaced++
 		}
 		next = section.Add(next, part)
 		ids = append(ids, part.ID)
-	}
-	if len(section.UnfoldAll(next)) > section.MaxParts {
-		return fmt.Errorf("a section has at most %d parts; take some out before you put more in", section.MaxParts)
 	}
 	added := next.Parts[len(d.Parts):]
 	l.desk.Apply(section.Edit{Name: "put in " + idRange(ids), Object: ids[0], Do: func(d *section.Document) *section.Document {
@@ -51,8 +73,9 @@ func (l *PutLine) put(p catalog.Parsed) error {
 		return d
 	}}, false)
 	l.desk.Select(ids...)
-	l.done(putSaid(ids, unplaced))
-	return nil
+	if said := putSaid(ids, n-len(places)); said != "" {
+		l.say(said, false)
+	}
 }
 
 // putSaid tells what can't be seen: parts for which there was no room.

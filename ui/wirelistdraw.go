@@ -90,7 +90,7 @@ func (r *wireBodyRenderer) row(i, n int) {
 			continue
 		}
 		r.dress(t, row, c)
-		size := t.MinSize()
+		size := textExtent(t.Text, t.TextSize, t.TextStyle)
 		x, room := m.at[c], m.wide[c]
 		if c.number() {
 			x = m.numberEdge(c) - size.Width
@@ -106,7 +106,7 @@ func (r *wireBodyRenderer) row(i, n int) {
 
 func elidedText(t *canvas.Text, room float32) string {
 	return render.Elide(t.Text, float64(room), func(s string) float64 {
-		return float64(fyne.MeasureText(s, t.TextSize, t.TextStyle).Width)
+		return float64(textExtent(s, t.TextSize, t.TextStyle).Width)
 	})
 }
 
@@ -202,7 +202,7 @@ func (r *wireBodyRenderer) elidedUnderPointer() string {
 		return ""
 	}
 	text := b.column.text(&l.rows[b.hovered])
-	if fyne.MeasureText(text, l.layout.textSize, fyne.TextStyle{}).Width <= l.layout.wide[b.column] {
+	if textExtent(text, l.layout.textSize, fyne.TextStyle{}).Width <= l.layout.wide[b.column] {
 		return ""
 	}
 	return text

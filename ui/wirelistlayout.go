@@ -30,7 +30,7 @@ type wireLayout struct {
 func measureWires(l *WireList) wireLayout {
 	th := theme.CurrentForWidget(l)
 	m := wireLayout{textSize: th.Size(theme.SizeNameText), small: smallText(l)()}
-	m.rowHeight = fyne.MeasureText("Mg", m.textSize, fyne.TextStyle{}).Height + wireRowSpace
+	m.rowHeight = textExtent("Mg", m.textSize, fyne.TextStyle{}).Height + wireRowSpace
 	m.headHeight = m.rowHeight + 2
 	sum, n := float32(2*wireEdge), 0
 	for c := range wireColumns {
@@ -70,13 +70,13 @@ func (l *WireList) shows(c wireColumn) bool {
 
 // columnWidth is the width of the widest cell. Numbers get room for three figures in any case, so that columns stand still while numbers change.
 func (l *WireList) columnWidth(c wireColumn, m wireLayout) float32 {
-	w := fyne.MeasureText(wireHeads[c].name, m.textSize, fyne.TextStyle{Bold: true}).Width
+	w := textExtent(wireHeads[c].name, m.textSize, fyne.TextStyle{Bold: true}).Width
 	if u := wireHeads[c].unit; u != "" {
-		w += fyne.MeasureText(" "+u, m.textSize, fyne.TextStyle{}).Width
+		w += textExtent(" "+u, m.textSize, fyne.TextStyle{}).Width
 	}
 	w += wireArrow
 	if c.number() {
-		w = max(w, fyne.MeasureText("−888.8", m.textSize, fyne.TextStyle{}).Width)
+		w = max(w, textExtent("−888.8", m.textSize, fyne.TextStyle{}).Width)
 	}
 	seen := map[string]bool{}
 	for i := range l.rows {
@@ -85,7 +85,7 @@ func (l *WireList) columnWidth(c wireColumn, m wireLayout) float32 {
 			continue
 		}
 		seen[t] = true
-		w = max(w, fyne.MeasureText(t, m.textSize, fyne.TextStyle{}).Width)
+		w = max(w, textExtent(t, m.textSize, fyne.TextStyle{}).Width)
 	}
 	if !c.number() {
 		w = min(w, wireWordMost)

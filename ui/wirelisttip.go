@@ -64,7 +64,7 @@ func tipLines(text string, size, width float32) []string {
 	line := ""
 	for _, w := range strings.Fields(text) {
 		next := strings.TrimSpace(line + " " + w)
-		if line != "" && fyne.MeasureText(next, size, fyne.TextStyle{}).Width > width {
+		if line != "" && textExtent(next, size, fyne.TextStyle{}).Width > width {
 			lines = append(lines, line)
 			next = w
 		}
