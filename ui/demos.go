@@ -6,6 +6,7 @@ import (
 	"slices"
 	"strings"
 
+	"packrise/assets"
 	"packrise/solver/section"
 )
 
@@ -15,6 +16,9 @@ type demo struct {
 	title string
 	doc   *section.Document
 }
+
+// demoFiles are the designs that the program carries.
+func demoFiles() fs.FS { return assets.Designs }
 
 // demoDesigns reads the designs that the program carries, by title. They are embedded: no disk is touched.
 func demoDesigns(designs fs.FS) []demo {

@@ -30,11 +30,11 @@ func (k *Desk) Sentence() (answer, assumed string, state State) {
 		answer, assumed = r.Sentence()
 		return answer, assumed, stateOf(r)
 	}
-	if answer, more := k.refusal(); answer != "" {
-		return answer, more, Refusal
-	}
 	if len(k.Document().Parts) == 0 {
 		return "Nothing in the section yet.", "Type what goes in, such as 12 thhn or 4G1.5, and press Enter.", Unknown
+	}
+	if answer, more := k.refusal(); answer != "" {
+		return answer, more, Refusal
 	}
 	return "Solving …", "", Unknown
 }

@@ -8,6 +8,7 @@ import (
 	"testing"
 	"time"
 
+	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/test"
 
 	"packrise/solver/catalog"
@@ -128,6 +129,7 @@ func testDesk(t *testing.T, d *section.Document) (*Desk, *loop) {
 
 func testDeskWith(t *testing.T, d *section.Document, r Rooms) (*Desk, *loop) {
 	t.Helper()
+	fyne.CurrentApp().Settings().SetTheme(NewTheme(LookLight)) // other tests start apps of their own
 	l := newLoop()
 	k := NewDeskWith(testCatalog(), d, l.rooms(r))
 	t.Cleanup(k.Close)

@@ -55,7 +55,11 @@ func TestNoFreePlace(t *testing.T) {
 // TestHeldPlaceIsFreeAndNearest drops discs into random sections and compares with a fine grid of places.
 func TestHeldPlaceIsFreeAndNearest(t *testing.T) {
 	rng := rand.New(rand.NewPCG(7, 11))
-	for range 200 {
+	rounds := 200
+	if testing.Short() {
+		rounds = 30
+	}
+	for range rounds {
 		in := room{r: 10}
 		if rng.IntN(2) == 0 {
 			in = room{w: 18, h: 14}

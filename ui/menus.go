@@ -5,8 +5,6 @@ import (
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/driver/desktop"
-
-	"packrise/assets"
 )
 
 // menus is the menu bar. Every shortcut of the program sits on one of its items, since text fields swallow all others. An item without a modifier only
@@ -68,7 +66,7 @@ func (m *menus) file() *fyne.Menu {
 
 func (m *menus) demos() []*fyne.MenuItem {
 	var items []*fyne.MenuItem
-	for _, d := range demoDesigns(assets.Designs) {
+	for _, d := range demoDesigns(demoFiles()) {
 		items = append(items, fyne.NewMenuItem(d.title, func() { m.w.openDemo(d) }))
 	}
 	return items

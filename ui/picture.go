@@ -9,7 +9,6 @@ import (
 	"os"
 	"path/filepath"
 
-	"packrise/assets"
 	"packrise/render"
 	"packrise/solver/catalog"
 	"packrise/solver/rating"
@@ -21,7 +20,7 @@ var ErrRefused = errors.New("the design can't be solved as it is")
 
 // FirstDesign returns the demo that a window without a file opens on.
 func FirstDesign() (*section.Document, error) {
-	all := demoDesigns(assets.Designs)
+	all := demoDesigns(demoFiles())
 	for _, d := range all {
 		if d.file == firstDemo {
 			return d.doc, nil

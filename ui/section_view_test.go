@@ -1,0 +1,421 @@
+package ui
+
+import (
+	"math"
+	"runtime"
+	"slices"
+	"strings"
+	"testing"
+	"time"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/driver/desktop"
+	"fyne.io/fyne/v2/test"
+
+	"packrise/solver/catalog"
+	"packrise/solver/section"
+)
+
+// hand works a canvas the way a person does: button down, several moves, button up.
+type hand struct {
+	v    *SectionView
+	k    *Desk
+	l    *loop
+	mods fyne.KeyModifier
+}
+
+// testView is a canvas of 700 × 500 on a solved design in a test window.
+func testView(t *testing.T) (*hand, *SectionView) {
+	t.Helper()
+	k, l := testDesk(t, testDesign())
+	return testViewOn(t, k, l)
+}
+
+func testViewOn(t *testing.T, k *Desk, l *loop) (*hand, *SectionView) {
+	t.Helper()
+	v := NewSectionView(k)
+	w := test.NewWindow(v)
+	w.SetPadded(false)
+	w.Resize(fyne.NewSize(700, 500))
+	t.Cleanup(func() { v.Close(); w.Close() })
+	l.solved(t, k)
+	l.until(t, "the picture", func() bool { return v.pic != nil && v.pic.view == v.camera.view(v.pic.view.W, v.pic.view.H, v.density) })
+	return &hand{v: v, k: k, l: l}, v
+}
+
+// over returns where a place of the section is on the canvas.
+func (h *hand) over(p section.Point) fyne.Position { return h.v.camera.toUnits(p, h.v.Size()) }
+
+// on returns where the middle of a part is on the canvas.
+func (h *hand) on(t *testing.T, id string) fyne.Position { return h.over(at(t, h.k, id)) }
+
+func (h *hand) event(p fyne.Position, b desktop.MouseButton) *desktop.MouseEvent {
+	return &desktop.MouseEvent{PointEvent: fyne.PointEvent{Position: p, AbsolutePosition: p}, Button: b, Modifier: h.mods}
+}
+
+func (h *hand) press(p fyne.Position) { h.v.MouseDown(h.event(p, desktop.MouseButtonPrimary)) }
+
+func (h *hand) click(p fyne.Position) {
+	h.press(p)
+	h.v.MouseUp(h.event(p, desktop.MouseButtonPrimary))
+}
+
+// pull moves the pressed pointer in steps, as the driver reports it.
+func (h *hand) pull(from, to fyne.Position) {
+	const steps = 8
+	last := from
+	for i := 1; i <= steps; i++ {
+		f := float32(i) / steps
+		p := fyne.NewPos(from.X+f*(to.X-from.X), from.Y+f*(to.Y-from.Y))
+		h.v.Dragged(&fyne.DragEvent{
+			PointEvent: fyne.PointEvent{Position: p, AbsolutePosition: p},
+			Dragged:    fyne.NewDelta(p.X-last.X, p.Y-last.Y),
+		})
+		last = p
+	}
+}
+
+// drag is a whole drag with the main button.
+func (h *hand) drag(from, to fyne.Position) {
+	h.press(from)
+	h.pull(from, to)
+	h.v.DragEnd()
+	h.v.MouseUp(h.event(to, desktop.MouseButtonPrimary))
+}
+
+func (h *hand) key(n fyne.KeyName) { h.v.TypedKey(&fyne.KeyEvent{Name: n}) }
+
+func TestDragMovesThePart(t *testing.T) {
+	h, _ := testView(t)
+	from := at(t, h.k, "L1")
+	start := h.on(t, "L1").AddXY(3, -4) // not in the middle: the part must not jump
+	h.drag(start, start.AddXY(20, 40))
+	scale := h.v.camera.scale
+	near(t, "after the drag", at(t, h.k, "L1"), section.Point{X: from.X + 20/scale, Y: from.Y - 40/scale}, 1e-3)
+	if h.k.UndoName() != "move L1" || h.k.Drafting() {
+		t.Errorf("undo is called %q", h.k.UndoName())
+	}
+	if !slices.Equal(h.k.Selection(), []string{"L1"}) {
+		t.Errorf("selected %v", h.k.Selection())
+	}
+	h.l.solved(t, h.k)
+	if _, fresh := h.k.Result(); !fresh {
+		t.Error("no fresh answer after the drag")
+	}
+	h.k.Undo()
+	if h.k.UndoName() != "" || at(t, h.k, "L1") != from {
+		t.Error("one drag must be one step")
+	}
+}
+
+func TestTemperaturesFollowTheDrag(t *testing.T) {
+	h, _ := testView(t)
+	r, _ := h.k.Result()
+	before := r.Conductors[0].TempC
+	start := h.on(t, "L1")
+	h.press(start)
+	h.pull(start, h.over(section.Point{X: 0, Y: 0}))
+	h.l.until(t, "a frame of the drag", func() bool { r2, fresh := h.k.Result(); return fresh && r2 != r })
+	r2, _ := h.k.Result()
+	if !h.k.Draft() || r2.Conductors[0].TempC == before {
+		t.Errorf("draft %v, L1 %g °C before and %g °C within the drag", h.k.Draft(), before, r2.Conductors[0].TempC)
+	}
+	h.v.DragEnd()
+	h.l.solved(t, h.k)
+}
+
+func TestDraggedPartIsHeldAtContact(t *testing.T) {
+	h, _ := testView(t)
+	start := h.on(t, "L1")
+	h.press(start)
+	h.pull(start, h.on(t, "L2").AddXY(-10, 0))
+	l1, l2 := at(t, h.k, "L1"), at(t, h.k, "L2")
+	if d := math.Hypot(l1.X-l2.X, l1.Y-l2.Y); d < 4-1e-3 || d > 4+1e-2 {
+		t.Errorf("held %g mm from L2, want touching at 4 mm", d)
+	}
+	if !h.v.wanted.Visible() || !h.v.held.Visible() {
+		t.Error("an impossible place isn't shown")
+	}
+	h.pull(h.on(t, "L2"), h.over(section.Point{X: 40, Y: 0})) // out of the jacket
+	l1 = at(t, h.k, "L1")
+	if r := math.Hypot(l1.X, l1.Y); r > 8 {
+		t.Errorf("dragged through the jacket to %g mm", r)
+	}
+	h.key(fyne.KeyEscape)
+}
+
+func TestReleaseMakesRoom(t *testing.T) {
+	h, _ := testView(t)
+	start, target := h.on(t, "L1"), section.Point{X: 3.2, Y: 0}
+	h.drag(start, h.over(target))
+	h.l.until(t, "room", func() bool { return !h.k.Drafting() })
+	near(t, "L1 stays where it was dropped", at(t, h.k, "L1"), target, 0.05)
+	l2 := at(t, h.k, "L2")
+	if l2.X <= 4 || math.Hypot(l2.X-3.2, l2.Y) < 4-2e-3 {
+		t.Errorf("L2 was not pushed away: %v", l2)
+	}
+	h.k.Undo()
+	if at(t, h.k, "L1").X != -4 || at(t, h.k, "L2").X != 4 || h.k.UndoName() != "" {
+		t.Error("drag and room must be one step")
+	}
+}
+
+func TestNoRoomLeavesThePartAtContact(t *testing.T) {
+	none := func(*section.Document, *catalog.Catalog, string) (map[string]section.Point, bool) { return nil, false }
+	k, l := testDeskWith(t, testDesign(), Rooms{MakeRoom: none})
+	h, _ := testViewOn(t, k, l)
+	h.drag(h.on(t, "L1"), h.on(t, "L2"))
+	l.until(t, "the step", func() bool { return !k.Drafting() })
+	l1, l2 := at(t, k, "L1"), at(t, k, "L2")
+	if d := math.Hypot(l1.X-l2.X, l1.Y-l2.Y); d < 4-1e-3 || k.UndoName() != "move L1" {
+		t.Errorf("%g mm apart, undo %q", d, k.UndoName())
+	}
+}
+
+func TestEscapeCancelsADrag(t *testing.T) {
+	h, _ := testView(t)
+	start := h.on(t, "L1")
+	h.press(start)
+	h.pull(start, start.AddXY(30, 0))
+	h.key(fyne.KeyEscape)
+	h.pull(start.AddXY(30, 0), start.AddXY(60, 0)) // the button is still down
+	h.v.DragEnd()
+	h.v.MouseUp(h.event(start, desktop.MouseButtonPrimary))
+	if at(t, h.k, "L1").X != -4 || h.k.Dirty() || h.k.UndoName() != "" || h.k.RedoName() != "" {
+		t.Errorf("L1 at %v, undo %q, redo %q", at(t, h.k, "L1"), h.k.UndoName(), h.k.RedoName())
+	}
+	if h.v.held.Visible() {
+		t.Error("the ring of the drag is still there")
+	}
+	h.drag(start, start.AddXY(10, 0)) // and the next drag works
+	if h.k.UndoName() != "move L1" {
+		t.Error("no drag after a cancelled one")
+	}
+}
+
+func TestSeveralPartsMoveTogether(t *testing.T) {
+	h, _ := testView(t)
+	h.k.Select("L1", "L3")
+	start := h.on(t, "L1")
+	h.drag(start, start.AddXY(-10, 10))
+	scale := h.v.camera.scale
+	near(t, "L1", at(t, h.k, "L1"), section.Point{X: -4 - 10/scale, Y: -10 / scale}, 1e-3)
+	near(t, "L3", at(t, h.k, "L3"), section.Point{X: -10 / scale, Y: 5 - 10/scale}, 1e-3)
+	if h.k.UndoName() != "move 2 parts" || len(h.k.Selection()) != 2 {
+		t.Errorf("undo %q, selected %v", h.k.UndoName(), h.k.Selection())
+	}
+}
+
+func TestClicksSelect(t *testing.T) {
+	h, _ := testView(t)
+	h.click(h.on(t, "L1"))
+	if !slices.Equal(h.k.Selection(), []string{"L1"}) {
+		t.Errorf("selected %v", h.k.Selection())
+	}
+	h.mods = fyne.KeyModifierShift
+	h.click(h.on(t, "L2"))
+	if !slices.Equal(h.k.Selection(), []string{"L1", "L2"}) {
+		t.Errorf("Shift adds: %v", h.k.Selection())
+	}
+	h.click(h.on(t, "L1"))
+	if !slices.Equal(h.k.Selection(), []string{"L2"}) {
+		t.Errorf("Shift takes out: %v", h.k.Selection())
+	}
+	h.mods = 0
+	h.k.Select("L1", "L2")
+	h.click(h.on(t, "L2"))
+	if !slices.Equal(h.k.Selection(), []string{"L2"}) {
+		t.Errorf("a click on one of several: %v", h.k.Selection())
+	}
+	h.click(h.over(section.Point{X: 0, Y: 0}))
+	if len(h.k.Selection()) != 0 {
+		t.Errorf("a click beside the parts: %v", h.k.Selection())
+	}
+	if h.k.UndoName() != "" {
+		t.Error("clicks are no steps")
+	}
+}
+
+func TestDoubleClickActivates(t *testing.T) {
+	h, v := testView(t)
+	now := time.Unix(1000, 0)
+	v.keys.clock = func() time.Time { return now }
+	var opened []string
+	v.OnActivated = func(id string) { opened = append(opened, id) }
+	h.click(h.on(t, "L1"))
+	now = now.Add(2 * doubleClick)
+	h.click(h.on(t, "L1"))
+	if len(opened) != 0 {
+		t.Error("two slow clicks are no double click")
+	}
+	now = now.Add(doubleClick / 2)
+	h.click(h.on(t, "L1"))
+	h.click(h.on(t, "L2"))
+	if !slices.Equal(opened, []string{"L1"}) {
+		t.Errorf("opened %v", opened)
+	}
+}
+
+func TestNudge(t *testing.T) {
+	h, v := testView(t)
+	now := time.Unix(1000, 0)
+	v.keys.clock = func() time.Time { return now }
+	h.k.Select("L1")
+	h.key(fyne.KeyRight)
+	h.key(fyne.KeyUp)
+	v.KeyDown(&fyne.KeyEvent{Name: desktop.KeyShiftLeft})
+	h.key(fyne.KeyLeft)
+	v.KeyUp(&fyne.KeyEvent{Name: desktop.KeyShiftLeft})
+	h.key(fyne.KeyDown)
+	near(t, "after the run", at(t, h.k, "L1"), section.Point{X: -4.9, Y: 0}, 1e-9)
+	now = now.Add(2 * nudgeRun)
+	h.key(fyne.KeyRight)
+	h.k.Undo()
+	near(t, "after one undo", at(t, h.k, "L1"), section.Point{X: -4.9, Y: 0}, 1e-9)
+	h.k.Undo()
+	if at(t, h.k, "L1").X != -4 || h.k.UndoName() != "" {
+		t.Error("a run of nudges must be one step")
+	}
+}
+
+func TestNudgeStopsAtTheWall(t *testing.T) {
+	h, _ := testView(t)
+	h.k.Select("F1") // radius 1.5 at (0, −5) in a jacket of 10 mm inside radius
+	for range 60 {
+		h.key(fyne.KeyDown)
+	}
+	if p := at(t, h.k, "F1"); p.Y < -8.5 || p.Y > -8.5+nudgeStep {
+		t.Errorf("F1 stopped at %v, the wall is at −8.5", p)
+	}
+}
+
+func TestDeleteAndTab(t *testing.T) {
+	h, v := testView(t)
+	for _, want := range []string{"L1", "L2", "L3"} {
+		h.key(fyne.KeyTab)
+		if !slices.Equal(h.k.Selection(), []string{want}) {
+			t.Fatalf("Tab selected %v, want %s", h.k.Selection(), want)
+		}
+	}
+	v.KeyDown(&fyne.KeyEvent{Name: desktop.KeyShiftRight})
+	h.key(fyne.KeyTab)
+	v.KeyUp(&fyne.KeyEvent{Name: desktop.KeyShiftRight})
+	if !slices.Equal(h.k.Selection(), []string{"L2"}) {
+		t.Errorf("Shift+Tab selected %v", h.k.Selection())
+	}
+	h.key(fyne.KeyDelete)
+	if section.Find(h.k.Document(), "L2") != nil || h.k.UndoName() != "delete L2" {
+		t.Errorf("undo %q", h.k.UndoName())
+	}
+	h.l.solved(t, h.k)
+}
+
+func TestWheelZoomsAtThePointer(t *testing.T) {
+	h, v := testView(t)
+	p := h.on(t, "L3")
+	under := v.camera.toMM(p, v.Size())
+	for _, dy := range []float32{25, 25, -25, 100, -300} {
+		scale := v.camera.scale
+		v.Scrolled(&fyne.ScrollEvent{PointEvent: fyne.PointEvent{Position: p}, Scrolled: fyne.NewDelta(0, dy)})
+		near(t, "under the pointer", v.camera.toMM(p, v.Size()), under, 1e-4)
+		if (dy > 0) != (v.camera.scale > scale) {
+			t.Errorf("wheel by %g took the scale from %g to %g", dy, scale, v.camera.scale)
+		}
+	}
+	v.Fit()
+	if !v.fitted || v.camera.cx != 0 {
+		t.Errorf("Fit looks at %+v", v.camera)
+	}
+}
+
+func TestDragBesideThePartsPans(t *testing.T) {
+	h, v := testView(t)
+	p := fyne.NewPos(5, 5)
+	under := v.camera.toMM(p, v.Size())
+	h.drag(p, p.AddXY(40, 30))
+	near(t, "moved along", v.camera.toMM(p.AddXY(40, 30), v.Size()), under, 1e-3)
+	if h.k.Dirty() {
+		t.Error("panning changed the document")
+	}
+	was := v.camera
+	h.v.MouseDown(h.event(h.on(t, "L1"), desktop.MouseButtonTertiary))
+	h.pull(h.on(t, "L1"), h.on(t, "L1").AddXY(20, 0))
+	h.v.DragEnd()
+	if v.camera == was || h.k.Dirty() {
+		t.Error("the middle button must pan, over a part too")
+	}
+	v.KeyDown(&fyne.KeyEvent{Name: fyne.KeySpace})
+	was = v.camera
+	h.drag(h.on(t, "L1"), h.on(t, "L1").AddXY(20, 0))
+	if v.camera == was || h.k.Dirty() {
+		t.Error("Space must pan, over a part too")
+	}
+}
+
+func TestHoverReadsOut(t *testing.T) {
+	h, v := testView(t)
+	v.MouseMoved(h.event(h.on(t, "L1"), 0))
+	if h.k.Pointed() != "L1" {
+		t.Errorf("points at %q", h.k.Pointed())
+	}
+	if s := v.hint.text(); !strings.HasPrefix(s, "L1 ") || !strings.Contains(s, "°C, limit 70") {
+		t.Errorf("reads out %q", s)
+	}
+	v.MouseMoved(h.event(h.over(section.Point{X: 0, Y: 0}), 0))
+	if s := v.hint.text(); h.k.Pointed() != "" || !strings.HasSuffix(s, "°C here") {
+		t.Errorf("between the parts it reads out %q", s)
+	}
+	v.MouseOut()
+	if s := v.hint.text(); s != "" {
+		t.Errorf("reads out %q without a pointer", s)
+	}
+}
+
+func TestPictureIsSharpAndCached(t *testing.T) {
+	_, v := testView(t)
+	w, h := v.pixels()
+	img := v.draw(w, h)
+	if img != v.draw(w, h) {
+		t.Error("the picture is painted again for nothing")
+	}
+	if b := img.Bounds(); b.Dx() != w || b.Dy() != h {
+		t.Errorf("%v, want %d × %d", b, w, h)
+	}
+	v.camera = v.camera.panned(50, 0)
+	moved := v.draw(w, h)
+	if moved == img || moved.Bounds() != img.Bounds() {
+		t.Error("an old picture must be shown as the camera sees it")
+	}
+	if got, want := moved.At(350, 250), img.At(300, 250); got != want {
+		t.Errorf("shifted by 50: %v, want %v", got, want)
+	}
+}
+
+func TestRasterDensity(t *testing.T) {
+	if testing.Short() {
+		t.Skip("long under the race detector")
+	}
+	h, v := testView(t)
+	v.draw(1400, 1000) // a screen of twice the density asks
+	h.l.until(t, "a dense picture", func() bool { return v.pic.view.W == 1400 })
+	if v.density != 2 {
+		t.Errorf("density %g", v.density)
+	}
+}
+
+func TestViewLeavesNoGoroutines(t *testing.T) {
+	before := runtime.NumGoroutine()
+	l := newLoop()
+	k := NewDeskWith(testCatalog(), testDesign(), l.rooms(Rooms{}))
+	v := NewSectionView(k)
+	v.Resize(fyne.NewSize(300, 200))
+	v.Close()
+	k.Close()
+	for range 100 {
+		if runtime.NumGoroutine() <= before {
+			return
+		}
+		time.Sleep(10 * time.Millisecond)
+	}
+	t.Errorf("%d goroutines, %d before", runtime.NumGoroutine(), before)
+}
