@@ -144,10 +144,11 @@ func (p *sectionPainter) leadsOf(w wanted) (straight []lead, bent func() []lead)
 	if at < 0 {
 		return nil, bent
 	}
-	target, others := p.disc(p.shapes[at]), p.obstacles(p.shapes[at].ID)
-	return straightLeads(target, others, slack), sync.OnceValue(func() []lead {
-		g := newGaps(append([]disc{target}, others...), slack)
-		return append(g.straight(0), g.from(0)...)
+	g, i := p.gapsRound(p.shapes[at].ID)
+	others := append(append([]disc(nil), g.discs[:i]...), g.discs[i+1:]...)
+	return straightLeads(g.discs[i], others, slack), sync.OnceValue(func() []lead {
+		g.build()
+		return append(g.straight(i), g.from(i)...)
 	})
 }
 
@@ -161,19 +162,32 @@ func (p *sectionPainter) partOf(id string) *section.Shape {
 	return nil
 }
 
-// obstacles returns the outlines of the parts that a leader from id must not cross: its neighbours, and those of the cables
-// that it lies in, but not these cables themselves.
-func (p *sectionPainter) obstacles(id string) []disc {
-	var out []disc
-	for _, s := range p.shapes {
-		if s.ID == id || isInside(id, s.ID) || isInside(s.ID, id) {
-			continue
+// gapsRound returns the room round a part and the part's number in it: its neighbours, and those of the cables that it lies in,
+// but not these cables themselves, which a leader may cross. Parts side by side share it.
+func (p *sectionPainter) gapsRound(id string) (g *gaps, number int) {
+	parent := parentID(id)
+	room := p.rooms[parent]
+	if room == nil {
+		room = &gapRoom{number: map[string]int{}}
+		var discs []disc
+		for _, s := range p.shapes {
+			up := parentID(s.ID)
+			if s.ID == parent || isInside(parent, s.ID) || up != "" && up != parent && !isInside(parent, up) {
+				continue
+			}
+			room.number[s.ID] = len(discs)
+			discs = append(discs, p.disc(s))
 		}
-		if up := parentID(s.ID); up == "" || isInside(id, up) {
-			out = append(out, p.disc(s))
-		}
+		room.gaps = newGaps(discs, leaderSlack*p.k)
+		p.rooms[parent] = room
 	}
-	return out
+	return room.gaps, room.number[id]
+}
+
+// gapRoom is the room between the parts of one level, and their numbers in it.
+type gapRoom struct {
+	gaps   *gaps
+	number map[string]int
 }
 
 // wallLeads start in the middle of a layer of the wall, or on the outer surface, and go straight outwards.

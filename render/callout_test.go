@@ -182,6 +182,7 @@ func TestGapsLeadOut(t *testing.T) {
 		t.Fatalf("straight ways out of a closed cell: %v", leads)
 	}
 	g := newGaps(append([]disc{target}, others...), 0.01)
+	g.build()
 	leads := append(g.straight(0), g.from(0)...)
 	if len(leads) == 0 {
 		t.Fatal("no way through the points of contact")

@@ -2,6 +2,7 @@ package render
 
 import (
 	"math"
+	"sync/atomic"
 	"testing"
 )
 
@@ -127,4 +128,42 @@ func points(all []isoline) int {
 		}
 	}
 	return n
+}
+
+// countedField counts the rows that are asked of it.
+type countedField struct {
+	Field
+	rows *atomic.Int64
+}
+
+func (f countedField) Row(dst []float64, y, x0, dx float64) {
+	f.rows.Add(1)
+	f.Field.Row(dst, y, x0, dx)
+}
+
+func TestContoursAreKept(t *testing.T) {
+	s := overScene()
+	f := countedField{s.Field, new(atomic.Int64)}
+	s.Field = f
+	v := FitView(s.Shapes, 500, 400, Style{})
+	draw := func() string {
+		r := NewRecorder(500, 400)
+		SectionLayer(r, s, v, ScaleOf(s), Style{})
+		return r.String()
+	}
+	first := draw()
+	asked := f.rows.Load()
+	if second := draw(); second != first || asked == 0 || f.rows.Load() != asked {
+		t.Errorf("asked %d rows, then %d; same picture: %v", asked, f.rows.Load()-asked, second == first)
+	}
+	v = v.Pan(3, 0)
+	draw()
+	if f.rows.Load() == asked {
+		t.Error("another view shows the old lines")
+	}
+	asked = f.rows.Load()
+	s.Field = countedField{overScene().Field, f.rows}
+	if draw(); f.rows.Load() == asked {
+		t.Error("another field shows the old lines")
+	}
 }

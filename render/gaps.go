@@ -21,9 +21,16 @@ type gapNode struct {
 	next []int
 }
 
-// newGaps finds the voids and gates between the discs.
-func newGaps(discs []disc, slack float64) *gaps {
-	g := &gaps{discs: discs, slack: slack, gate: map[[2]int]int{}}
+// newGaps returns the network between discs; its voids and gates are only found by build.
+func newGaps(discs []disc, slack float64) *gaps { return &gaps{discs: discs, slack: slack} }
+
+// build finds the voids and gates, once.
+func (g *gaps) build() {
+	if g.gate != nil {
+		return
+	}
+	g.gate = map[[2]int]int{}
+	discs := g.discs
 	near := make([][]int, len(discs))
 	for i, a := range discs {
 		for j, b := range discs {
@@ -39,7 +46,6 @@ func newGaps(discs []disc, slack float64) *gaps {
 			}
 		}
 	}
-	return g
 }
 
 func (g *gaps) addVoid(i, j, k int) {

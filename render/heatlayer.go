@@ -11,10 +11,12 @@ import (
 	"packrise/solver/section"
 )
 
-// Coarse pictures sample every coarseStep pixels; whole ones every pixel, or every second one from finePixels on.
+// Steps of sampling in pixels. The field has no detail under two pixels that outlines would not cover; small pictures are cheap
+// enough to ask for every pixel.
 const (
-	coarseStep = 4
-	finePixels = 1_500_000
+	coarseStep  = 4
+	fineStep    = 2
+	smallPixels = 250_000
 )
 
 // HeatLayer paints the heat map alone (transparent outside the section) into a picture of the view's size; coarse samples every
@@ -36,12 +38,12 @@ func HeatLayer(s Scene, v View, sc Scale, coarse bool) *image.RGBA {
 	if area.Empty() {
 		return img
 	}
-	step := 1
+	step := fineStep
 	switch {
 	case coarse:
 		step = coarseStep
-	case area.Dx()*area.Dy() > finePixels:
-		step = 2
+	case area.Dx()*area.Dy() <= smallPixels:
+		step = 1
 	}
 	g := sampleGrid(s.Field, v, area, step, sc)
 	g.fillGaps()

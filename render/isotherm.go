@@ -1,6 +1,7 @@
 package render
 
 import (
+	"fmt"
 	"image"
 	"image/color"
 	"math"
@@ -22,13 +23,9 @@ func (p *sectionPainter) isotherms() []isoline {
 	if p.s.Field == nil || p.s.Stale || !(p.sc.High > p.sc.Low) {
 		return nil
 	}
-	step := 5 * p.k
+	step := 4 * p.k
 	if p.s.Draft {
-		step = 9 * p.k
-	}
-	g, ok := p.isoGrid(step)
-	if !ok {
-		return nil
+		step = 8 * p.k
 	}
 	var out []isoline
 	for _, t := range levels(p.sc.Low, p.sc.High, roundStep((p.sc.High-p.sc.Low)/11)) {
@@ -37,13 +34,9 @@ func (p *sectionPainter) isotherms() []isoline {
 	for _, t := range p.limits() {
 		out = append(out, isoline{temp: t, limit: true})
 	}
-	values := make([]float64, len(out))
-	for i := range out {
-		values[i] = out[i].temp
-	}
-	for i, lines := range g.contours(values) {
+	for i, lines := range p.contoursOf(out, step) {
 		l := &out[i]
-		l.lines = p.outsideMetal(lines, step)
+		l.lines = lines
 		pen := Pen{Width: p.k, Color: p.isoColor(l.temp)}
 		if l.limit {
 			pen = Pen{Width: 1.6 * p.k, Color: overOnMap, Dash: []float64{6 * p.k, 3 * p.k}}
@@ -62,6 +55,29 @@ func (p *sectionPainter) isotherms() []isoline {
 		}
 	}
 	return out
+}
+
+// contoursOf finds the lines of all temperatures, or takes them from the last picture of the same field and view: the window
+// draws many, for every move of the pointer.
+func (p *sectionPainter) contoursOf(list []isoline, step float64) [][][]section.Point {
+	values := make([]float64, len(list))
+	for i := range list {
+		values[i] = list[i].temp
+	}
+	key := contourKey{field: p.s.Field, view: p.v, step: step, frame: p.frame, values: fmt.Sprint(values)}
+	if lines, ok := lastContours.find(key); ok {
+		return lines
+	}
+	g, ok := p.isoGrid(step)
+	if !ok {
+		return make([][][]section.Point, len(list))
+	}
+	lines := g.contours(values)
+	for i := range lines {
+		lines[i] = p.outsideMetal(lines[i], step)
+	}
+	lastContours.keep(key, lines)
+	return lines
 }
 
 // outsideMetal drops rings that only run inside one conductor: metal has one temperature, and where that is a round one, the

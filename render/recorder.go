@@ -79,7 +79,8 @@ func (r *Recorder) add(b box, format string, args ...float64) {
 	r.reach = r.reach.with(b)
 }
 
-// longPath is the number of pieces from which a path is written as its number and its box.
+// longPath is the number of pieces from which a path is written as its number to the nearest 20 and its box to the nearest 5
+// pixels: such paths come from a numerical field, whose last digits differ between processors.
 const longPath = 14
 
 // takePath returns the path's text and forgets it.
@@ -87,7 +88,8 @@ func (r *Recorder) takePath() string {
 	t := strings.Join(r.path, ", ")
 	if len(r.path) > longPath {
 		b := r.reach
-		t = fmt.Sprintf("%d pieces within %.0f %.0f %.0f %.0f", len(r.path), b.x0, b.y0, b.x1, b.y1)
+		five := func(v float64) float64 { return 5*math.Round(v/5) + 0 }
+		t = fmt.Sprintf("some %d pieces within %g %g %g %g", (len(r.path)+10)/20*20, five(b.x0), five(b.y0), five(b.x1), five(b.y1))
 	}
 	r.path, r.reach = r.path[:0], noBox()
 	return t

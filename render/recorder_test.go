@@ -64,7 +64,7 @@ func TestRecorderWritesDown(t *testing.T) {
   fill #102030 circle 11 7 3
   text "12 Ω" 10 25 size 12 #000000 anchor 0 0
 pop
-stroke 1 #00000000 dash 4 2 15 pieces within 3 4 3 4
+stroke 1 #00000000 dash 4 2 some 20 pieces within 5 5 5 5
 `
 	if got := r.String(); got != want {
 		t.Errorf("recorded\n%s\nwant\n%s", got, want)

@@ -6,7 +6,8 @@ import (
 	"packrise/solver/section"
 )
 
-// Field is what a picture asks of a solution. Lengths in mm, temperatures in °C.
+// Field is what a picture asks of a solution. Lengths in mm, temperatures in °C. A Field does not change: another solution is
+// another Field.
 type Field interface {
 	Bounds() (x0, y0, x1, y1 float64)
 	// Row fills dst with temperatures at (x0 + i·dx, y), NaN outside. Safe for concurrent use.

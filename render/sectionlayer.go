@@ -41,12 +41,13 @@ type sectionPainter struct {
 	edge    outline
 	taken   []box // where something is written
 	called  []callout
-	outside map[string]bool // what has a label outside
+	outside map[string]bool     // what has a label outside
+	rooms   map[string]*gapRoom // by the cable that they are in, "" for the holder
 }
 
 func newSectionPainter(c Canvas, s Scene, v View, sc Scale, st Style) *sectionPainter {
 	w, h := c.Size()
-	p := &sectionPainter{c: c, s: s, v: v, sc: sc, k: st.k(), pal: st.Colors(), frame: box{0, 0, w, h}}
+	p := &sectionPainter{c: c, s: s, v: v, sc: sc, k: st.k(), pal: st.Colors(), frame: box{0, 0, w, h}, rooms: map[string]*gapRoom{}}
 	p.read = readingsByID(s.Readings)
 	p.holder = holderOf(s.Shapes)
 	p.edge = outlineOf(s.Shapes).toPx(v)
