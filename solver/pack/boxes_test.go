@@ -13,8 +13,11 @@ import (
 // where it leaves no room for the others; a random search found none either.
 func TestRandomBoxes(t *testing.T) {
 	runs, refused := uint64(120), 0
-	if os.Getenv("PACKRISE_SOAK") != "" {
+	switch {
+	case os.Getenv("PACKRISE_SOAK") != "":
 		runs = 2000
+	case testing.Short():
+		runs = 30
 	}
 	for seed := range runs {
 		rng := rand.New(rand.NewPCG(seed, 99))

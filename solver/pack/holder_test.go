@@ -47,7 +47,7 @@ func TestSmallestHolderAgainstPublished(t *testing.T) {
 	ref := bestKnown(t)
 	step := 1
 	if testing.Short() {
-		step = 6
+		step = 12
 	}
 	for n := 1; n <= 37; n += step {
 		discs, r := SmallestHolder(equals(n, 1), 1)

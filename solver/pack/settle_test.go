@@ -21,6 +21,14 @@ func mixed(n int, ratio float64, seed uint64) []Disc {
 	return out
 }
 
+// fewer is a tenth under -short.
+func fewer(n int) int {
+	if testing.Short() {
+		return n / 10
+	}
+	return n
+}
+
 func alike(n int) []Disc {
 	out := make([]Disc, n)
 	for i := range out {
@@ -108,7 +116,7 @@ func rests(discs []Disc, i int, in Box) bool {
 }
 
 func TestSettleHoldsItsPromises(t *testing.T) {
-	for _, n := range []int{1, 2, 3, 7, 20, 60, 150} {
+	for _, n := range []int{1, 2, 3, 7, 20, 60, fewer(150)} {
 		for _, ratio := range []float64{1, 3, 10, 50} {
 			discs := mixed(n, ratio, uint64(n))
 			for _, share := range []float64{0.1, 0.3, 0.45} {
@@ -180,7 +188,7 @@ func TestSettleToTheLastDigit(t *testing.T) {
 
 // TestSettleSeventyPercent: mixed discs go in up to 70 % of the area.
 func TestSettleSeventyPercent(t *testing.T) {
-	for _, n := range []int{20, 60, 200} {
+	for _, n := range []int{20, 60, fewer(200)} {
 		for _, ratio := range []float64{1.5, 5, 30} {
 			for seed := range uint64(2) {
 				discs := mixed(n, ratio, seed)
