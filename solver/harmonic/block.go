@@ -9,128 +9,100 @@ type block struct {
 	data []float64
 }
 
-// apply adds B x_j to y_i and Bᵀ x_i to y_j.
-func (b *block) apply(xi, xj, yi, yj []float64) {
-	p := 0
-	for n, c := range b.cols {
-		w := int(c)
-		r0 := b.data[p : p+w]
-		r1 := b.data[p+w:][:w]
-		p += 2 * w
-		x, y := xj[:w], yj[:w]
-		u0, u1 := xi[2*n], xi[2*n+1]
-		var a0, a1 float64
-		for k, e0 := range r0 {
-			e1 := r1[k]
-			a0 += e0 * x[k]
-			a1 += e1 * x[k]
-			y[k] += e0*u0 + e1*u1
-		}
-		yi[2*n] += a0
-		yi[2*n+1] += a1
-	}
-}
-
-// applySelf adds B x to y for a symmetric block of a disc with itself, whose upper part alone counts twice where it is cut.
-func (b *block) applySelf(x, y []float64) {
-	p := 0
-	for n, c := range b.cols {
-		w := int(c)
-		r0 := b.data[p : p+w]
-		r1 := b.data[p+w:][:w]
-		p += 2 * w
-		var a0, a1 float64
-		for k, v := range x[:w] {
-			a0 += r0[k] * v
-			a1 += r1[k] * v
-		}
-		y[2*n] += a0
-		y[2*n+1] += a1
-	}
-}
-
-// builder holds the scratch for writing blocks.
+// builder holds the scratch for writing blocks, and the store that they are cut from.
 type builder struct {
 	pi, pj []complex128 // scaled powers
 	ai, aj []float64    // their sizes
 	p, q   []complex128 // recursion of the image's Taylor coefficients
 	image  []complex128 // [m][n]
+	dw, iw []int        // widths of the rows: direct part, image
+	reals  []float64
+	widths []uint16
 }
 
-// write fills b with the coupling of discs i and j: direct unless they are the same, image if there is a circle.
+// write fills b with the coupling of discs i and j: direct unless they are the same, image if there is a circle. The image of a disc in
+// itself is halved, for a product that counts both triangles.
 func (w *builder) write(b *block, di, dj Disc, same bool, circle *Circle, cut float64) {
 	mi := len(di.S)
-	var rows, across int
-	var step complex128
+	var rows, across, irows, icols int
 	if !same {
-		d := apart(di, dj)
-		step = over(1, d)
-		rows, across = w.direct(di, dj, step, cut)
+		rows, across = w.direct(di, dj, over(1, apart(di, dj)), cut)
 	}
-	var irows, icols int
 	if circle != nil && circle.RhoInf != 0 {
-		irows, icols = w.images(di, dj, circle, cut)
+		irows, icols = w.images(di, dj, circle, cut, same)
 	}
-	b.cols = b.cols[:0]
-	b.data = b.data[:0]
-	for n := 0; n < mi && n < max(rows, irows); n++ {
-		dw := 0
+	w.dw, w.iw = w.dw[:0], w.iw[:0]
+	last, total := 0, 0
+	for n := range max(rows, irows) {
+		dw, iw := 0, 0
 		if n < rows {
 			dw = w.reach(n, across, cut)
 		}
-		iw := 0
 		if n < irows {
 			for iw = icols; iw > 0 && small(w.image[(iw-1)*mi+n], cut); iw-- {
 			}
 		}
-		if same && n < irows {
-			iw = icols // square, so that the block stays symmetric
+		w.dw, w.iw = append(w.dw, dw), append(w.iw, iw)
+		if max(dw, iw) > 0 {
+			last = n + 1
+			total += 4 * max(dw, iw)
 		}
-		w.row(b, n, mi, dw, iw)
 	}
-	for len(b.cols) > 0 && b.cols[len(b.cols)-1] == 0 {
-		b.cols = b.cols[:len(b.cols)-1]
+	w.room(b, last, total)
+	at := 0
+	for n := range last {
+		b.cols[n] = uint16(2 * max(w.dw[n], w.iw[n]))
+		w.row(b.data[at:], n, mi, w.dw[n], w.iw[n])
+		at += 2 * int(b.cols[n])
 	}
 }
 
-// row appends the two rows of harmonic n, dw harmonics wide for the direct part and iw for the image.
-func (w *builder) row(b *block, n, mi, dw, iw int) {
-	width := max(dw, iw)
-	b.cols = append(b.cols, uint16(2*width))
-	at := len(b.data)
-	b.data = grow(b.data, 4*width)
-	r0 := b.data[at : at+2*width]
-	r1 := b.data[at+2*width:][:2*width]
+// chunk is how many reals and widths are made at once.
+const chunk = 1 << 15
+
+// room gives b space for rows and reals, its own if that is enough.
+func (w *builder) room(b *block, rows, reals int) {
+	if cap(b.cols) < rows {
+		if len(w.widths) < rows {
+			w.widths = make([]uint16, max(chunk/16, rows))
+		}
+		b.cols, w.widths = w.widths[:rows:rows], w.widths[rows:]
+	}
+	if cap(b.data) < reals {
+		if len(w.reals) < reals {
+			w.reals = make([]float64, max(chunk, reals))
+		}
+		b.data, w.reals = w.reals[:reals:reals], w.reals[reals:]
+	}
+	b.cols, b.data = b.cols[:rows], b.data[:reals]
+}
+
+// row writes the two rows of harmonic n+1, dw harmonics wide for the direct part and iw for the image.
+func (w *builder) row(to []float64, n, mi, dw, iw int) {
+	width := 2 * max(dw, iw)
+	r0, r1 := to[:width], to[width:][:width]
 	if dw > 0 {
 		t := table()[n][:dw]
 		f := w.pi[n]
 		for m, g := range w.pj[:dw] {
-			e := f * g
-			p, q := t[m]*real(e), t[m]*imag(e)
-			r0[2*m], r0[2*m+1] = p, -q
-			r1[2*m], r1[2*m+1] = -q, -p
+			p, q := t[m]*(real(f)*real(g)-imag(f)*imag(g)), t[m]*(real(f)*imag(g)+imag(f)*real(g))
+			k := 2 * m
+			r0[k], r0[k+1] = p, -q
+			r1[k], r1[k+1] = -q, -p
 		}
 	}
-	for k := 2 * dw; k < 2*width; k++ {
+	for k := 2 * dw; k < width; k++ {
 		r0[k], r1[k] = 0, 0
 	}
 	for m := range iw {
 		e := w.image[m*mi+n]
 		p, q := real(e), imag(e)
-		r0[2*m] += p
-		r0[2*m+1] += q
-		r1[2*m] -= q
-		r1[2*m+1] += p
+		k := 2 * m
+		r0[k] += p
+		r0[k+1] += q
+		r1[k] -= q
+		r1[k+1] += p
 	}
-}
-
-func grow(s []float64, n int) []float64 {
-	if need := len(s) + n; need > cap(s) {
-		t := make([]float64, len(s), need+need/2)
-		copy(t, s)
-		s = t
-	}
-	return s[:len(s)+n]
 }
 
 func small(z complex128, cut float64) bool {
@@ -186,7 +158,7 @@ func size(z complex128) float64 { return math.Sqrt(real(z)*real(z) + imag(z)*ima
 
 // images writes ρ∞ √(n/m) s_n s_m p_n^(m) to w.image[m-1][n-1]: the image of harmonic m of disc j about disc i is ρ∞ conj(d_m) u^m, u =
 // a_j z/(R² − conj(c_j) z), whose Taylor coefficients in (z−c_i)/a_i follow from those of u^(m−1).
-func (w *builder) images(di, dj Disc, circle *Circle, cut float64) (rows, cols int) {
+func (w *builder) images(di, dj Disc, circle *Circle, cut float64, same bool) (rows, cols int) {
 	mi := len(di.S)
 	r2 := circle.R * circle.R
 	cj := complex(real(dj.C), -imag(dj.C))
@@ -211,9 +183,13 @@ func (w *builder) images(di, dj Disc, circle *Circle, cut float64) (rows, cols i
 		p[n] = 0
 	}
 	p[0] = 1
+	rho := circle.RhoInf
+	if same {
+		rho /= 2
+	}
 	for m := 1; m <= cols; m++ {
 		q[0] = al * p[0]
-		f := circle.RhoInf * dj.S[m-1] / roots[m-1]
+		f := rho * dj.S[m-1] / roots[m-1]
 		out := w.image[(m-1)*mi:][:rows]
 		for n := 1; n <= rows; n++ {
 			q[n] = al*p[n] + be*p[n-1] - de*q[n-1]

@@ -12,57 +12,76 @@ type Circle struct {
 }
 
 // portCut drops entries of the maps from discs to the circle's own harmonics.
-const portCut = 1e-8
+const portCut = 1e-7
 
-// portRows returns the map from disc i's scaled amplitudes to the circle's: P[n,m] = s_m √(n/m) C(n−1, m−1) (a/R)^m (c/R)^(n−m), for
-// n ≤ top. Row m-1 holds n = m, m+1, … up to where the entries stay below portCut.
-func portRows(d Disc, r float64, top int) [][]complex128 {
-	rows := make([][]complex128, len(d.S))
-	c := scale(1/r, d.C)
-	size := math.Hypot(real(c), imag(c))
-	am := 1.0
-	for m := 1; m <= len(d.S) && m <= top; m++ {
-		am *= d.A / r
-		p := complex(am*d.S[m-1], 0)
-		abs := am * d.S[m-1]
-		var row []complex128
-		for n := m; n <= top; n++ {
-			row = append(row, p)
-			f := float64(n) / float64(n-m+1) * math.Sqrt(float64(n+1)/float64(n))
-			if abs *= f * size; abs < portCut && f*size < 1 {
-				break
-			}
-			p = scale(f, p) * c
-		}
-		rows[m-1] = row
-	}
-	return rows
+// port is the map from a disc's scaled amplitudes to the circle's: P[n,m] = s_m √(n/m) C(n−1, m−1) (a/R)^m (c/R)^(n−m). Row m-1 holds n = m,
+// m+1, … up to where weighted entries stay below portCut.
+type port struct {
+	n    []int
+	data []complex128
 }
 
-// gather adds disc i's share of the circle's outgoing amplitudes: alpha += P x.
-func gather(rows [][]complex128, x []float64, alpha []complex128) {
-	rows = rows[:min(len(rows), len(alpha))]
-	for m, row := range rows {
-		v := complex(x[2*m], x[2*m+1])
-		a := alpha[m : m+len(row)]
-		for k, p := range row {
-			a[k] += p * v
+// newPort maps d to the circle's harmonics n ≤ len(weight), each of which counts by its weight.
+func newPort(d Disc, r float64, weight []float64) port {
+	p := port{n: make([]int, len(d.S))}
+	c := scale(1/r, d.C)
+	l := size(c)
+	am := 1.0
+	for m := 1; m <= len(d.S) && m <= len(weight); m++ {
+		am *= d.A / r
+		v := complex(am*d.S[m-1], 0)
+		abs := am * d.S[m-1]
+		first := len(p.data)
+		keep := first
+		for n := m; n <= len(weight); n++ {
+			p.data = append(p.data, v)
+			if abs*weight[n-1] >= portCut {
+				keep = len(p.data)
+			}
+			f := float64(n) / float64(n-m+1) * math.Sqrt(float64(n+1)/float64(n))
+			if abs *= f * l; abs < portCut && f*l < 1 {
+				break
+			}
+			v = scale(f, v) * c
 		}
+		p.data = p.data[:keep]
+		p.n[m-1] = keep - first
+	}
+	return p
+}
+
+// gather adds the disc's share of the circle's outgoing amplitudes: alpha += P x.
+func (p *port) gather(x []float64, alpha []complex128) {
+	at := 0
+	for m, n := range p.n {
+		if n == 0 {
+			continue
+		}
+		re, im := x[2*m], x[2*m+1]
+		a := alpha[m : m+n]
+		for k, e := range p.data[at : at+n] {
+			a[k] += complex(real(e)*re-imag(e)*im, real(e)*im+imag(e)*re)
+		}
+		at += n
 	}
 }
 
 // spread is gather's adjoint: y += Pᴴ omega.
-func spread(rows [][]complex128, omega []complex128, y []float64) {
-	rows = rows[:min(len(rows), len(omega))]
-	for m, row := range rows {
-		o := omega[m : m+len(row)]
+func (p *port) spread(omega []complex128, y []float64) {
+	at := 0
+	for m, n := range p.n {
+		if n == 0 {
+			continue
+		}
+		o := omega[m : m+n]
 		var re, im float64
-		for k, p := range row {
+		for k, e := range p.data[at : at+n] {
 			w := o[k]
-			re += real(p)*real(w) + imag(p)*imag(w)
-			im += real(p)*imag(w) - imag(p)*real(w)
+			re += real(e)*real(w) + imag(e)*imag(w)
+			im += real(e)*imag(w) - imag(e)*real(w)
 		}
 		y[2*m] += re
 		y[2*m+1] += im
+		at += n
 	}
 }

@@ -55,7 +55,7 @@ func TestApplyIsTheTranslation(t *testing.T) {
 		}
 		discs[i] = Disc{C: c.C[i], A: c.A[i], S: s}
 	}
-	s := NewSystem(discs, c.Circle, 0, 1e-13)
+	s := NewSystem(discs, c.Circle, nil, 1e-13)
 	x, y := make([]float64, s.n()), make([]float64, s.n())
 	for i := range discs {
 		s.Build(i)
@@ -101,7 +101,7 @@ func TestApplyIsSymmetric(t *testing.T) {
 		for i := range discs {
 			discs[i] = Disc{C: c.C[i], A: c.A[i], S: []float64{1, .9, .8, .7, .6, .5}}
 		}
-		s := NewSystem(discs, circle, 0, 1e-3)
+		s := NewSystem(discs, circle, nil, 1e-3)
 		for i := range discs {
 			s.Build(i)
 		}
@@ -214,6 +214,84 @@ func TestFilmReflection(t *testing.T) {
 		z := 0.026 * fn / 0.012
 		if want := (z - mu) / (z + mu); math.Abs(s.Port(n).Rho-want) > 1e-12 {
 			t.Errorf("n %d: ρ %.12f, want %.12f", n, s.Port(n).Rho, want)
+		}
+	}
+}
+
+// The vector kernels must do what the plain ones do, for one vector and for many, whatever the widths of the rows.
+func TestKernels(t *testing.T) {
+	r := rand.New(rand.NewPCG(7, 7))
+	for range 50 {
+		ni, nj := 1+r.IntN(9), 1+r.IntN(9)
+		b := block{}
+		for range 1 + r.IntN(ni) {
+			w := 2 * r.IntN(nj+1)
+			b.cols = append(b.cols, uint16(w))
+			for range 2 * w {
+				b.data = append(b.data, r.NormFloat64())
+			}
+		}
+		if len(b.data) == 0 {
+			continue
+		}
+		vec := func(n int) []float64 {
+			v := make([]float64, n)
+			for i := range v {
+				v[i] = r.NormFloat64()
+			}
+			return v
+		}
+		for _, k := range []int{1, many} {
+			xi, xj, yi, yj := vec(2*ni*k), vec(2*nj*k), vec(2*ni*k), vec(2*nj*k)
+			zi, zj := append([]float64(nil), yi...), append([]float64(nil), yj...)
+			if k == 1 {
+				b.apply(xi, xj, yi, yj)
+				b.applyPlain(xi, xj, zi, zj)
+			} else {
+				b.apply8(xi, xj, yi, yj)
+				b.apply8Plain(xi, xj, zi, zj)
+			}
+			for i := range yi {
+				if math.Abs(yi[i]-zi[i]) > 1e-12 {
+					t.Fatalf("%d vectors: y_i[%d] = %g, want %g", k, i, yi[i], zi[i])
+				}
+			}
+			for i := range yj {
+				if math.Abs(yj[i]-zj[i]) > 1e-12 {
+					t.Fatalf("%d vectors: y_j[%d] = %g, want %g", k, i, yj[i], zj[i])
+				}
+			}
+		}
+	}
+}
+
+// Many products at once are the products one by one.
+func TestApplyMany(t *testing.T) {
+	r := rand.New(rand.NewPCG(8, 8))
+	c := randomCloud(r, 0.4, []float64{0.3, -0.2})
+	discs := make([]Disc, len(c.C))
+	for i := range discs {
+		discs[i] = Disc{C: c.C[i], A: c.A[i], S: []float64{1, .9, .8, .7, .6, .5}[:3+i%3]}
+	}
+	s := NewSystem(discs, c.Circle, nil, 1e-4)
+	for i := range discs {
+		s.Build(i)
+	}
+	x, y := make([]float64, Many*s.Len()), make([]float64, Many*s.Len())
+	for i := range x {
+		x[i] = r.NormFloat64()
+	}
+	s.ApplyMany(y, x)
+	u, w := make([]float64, s.Len()), make([]float64, s.Len())
+	for v := range Many {
+		for i := range u {
+			u[i] = x[Many*i+v]
+		}
+		s.Apply(w, u)
+		for i := range w {
+			if math.Abs(w[i]-y[Many*i+v]) > 1e-12 {
+				t.Fatalf("vector %d, element %d: %g, want %g", v, i, y[Many*i+v], w[i])
+			}
 		}
 	}
 }

@@ -14,17 +14,11 @@ func (s *System) Mono(y, q []float64) {
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return
 	}
-	alpha := make([]complex128, s.top)
+	alpha := make([]complex128, len(s.weight))
 	for j, f := range q {
 		s.chargeOut(j, f, alpha)
 	}
-	for n := range alpha {
-		if n < len(s.circle.Sigma) {
-			alpha[n] = scale(s.circle.Sigma[n], alpha[n])
-		} else {
-			alpha[n] = 0
-		}
-	}
+	s.reflect(alpha)
 	s.Spread(y, alpha)
 }
 

@@ -18,24 +18,29 @@ type System struct {
 	off    []int // start of each disc's share of a vector; one more than discs
 	circle *Circle
 	cut    float64
-	top    int // harmonics of the circle that the discs are mapped to
+	weight []float64 // of the circle's harmonics that the discs are mapped to
 
 	blocks []block // upper triangle with diagonal, see at
-	ports  [][][]complex128
+	ports  []port
 	work   builder
 	alpha  []complex128
 }
 
-// NewSystem lays out the discs; Build writes their blocks. A nil circle stands for a medium without end. The discs are mapped to top
-// harmonics of the circle, at least as many as it has in Sigma.
-func NewSystem(discs []Disc, circle *Circle, top int, cut float64) *System {
+// NewSystem lays out the discs; Build writes their blocks. A nil circle stands for a medium without end. The discs are mapped to the
+// circle's harmonics n ≤ len(weight), weight[n-1] being how much what goes to or comes from that harmonic counts, besides what Sigma
+// reflects.
+func NewSystem(discs []Disc, circle *Circle, weight []float64, cut float64) *System {
 	s := &System{discs: discs, circle: circle, cut: cut}
 	if circle != nil {
-		s.top = max(top, len(circle.Sigma))
+		s.weight = make([]float64, max(len(weight), len(circle.Sigma)))
+		copy(s.weight, weight)
+		for n, f := range circle.Sigma {
+			s.weight[n] = math.Max(s.weight[n], math.Sqrt(math.Abs(f)))
+		}
 	}
 	s.blocks = make([]block, len(discs)*(len(discs)+1)/2)
-	s.ports = make([][][]complex128, len(discs))
-	s.alpha = make([]complex128, s.top)
+	s.ports = make([]port, len(discs))
+	s.alpha = make([]complex128, len(s.weight))
 	s.layout()
 	return s
 }
@@ -54,7 +59,7 @@ func (s *System) Len() int { return s.off[len(s.discs)] }
 func (s *System) Offset(i int) int { return s.off[i] }
 
 // Top returns the number of the circle's own harmonics that discs are mapped to.
-func (s *System) Top() int { return s.top }
+func (s *System) Top() int { return len(s.weight) }
 
 // Disc returns disc i.
 func (s *System) Disc(i int) Disc { return s.discs[i] }
@@ -64,8 +69,8 @@ func (s *System) at(i, j int) *block { return &s.blocks[j*(j+1)/2+i] }
 
 // Build writes the blocks between disc j and every disc i ≤ j, and j's map to the circle.
 func (s *System) Build(j int) {
-	if s.circle != nil && s.top > 0 {
-		s.ports[j] = portRows(s.discs[j], s.circle.R, s.top)
+	if len(s.weight) > 0 {
+		s.ports[j] = newPort(s.discs[j], s.circle.R, s.weight)
 	}
 	for i := 0; i <= j; i++ {
 		s.work.write(s.at(i, j), s.discs[i], s.discs[j], i == j, s.circle, s.cut)
@@ -96,48 +101,79 @@ func (s *System) Entries() int {
 
 // Apply sets y = S 𝒢 S x.
 func (s *System) Apply(y, x []float64) {
-	for i := range y {
-		y[i] = 0
-	}
+	clear(y)
 	for j := range s.discs {
 		xj, yj := x[s.off[j]:s.off[j+1]], y[s.off[j]:s.off[j+1]]
-		for i := 0; i < j; i++ {
+		for i := range j + 1 {
 			if b := s.at(i, j); len(b.data) > 0 {
 				b.apply(x[s.off[i]:s.off[i+1]], xj, y[s.off[i]:s.off[i+1]], yj)
 			}
-		}
-		if b := s.at(j, j); len(b.data) > 0 {
-			b.applySelf(xj, yj)
 		}
 	}
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return
 	}
 	s.Gather(s.alpha, x)
-	for n := range s.alpha {
+	s.reflect(s.alpha)
+	s.Spread(y, s.alpha)
+}
+
+// reflect turns outgoing amplitudes of the circle into what Sigma sends back.
+func (s *System) reflect(alpha []complex128) {
+	for n := range alpha {
 		f := 0.0
 		if n < len(s.circle.Sigma) {
 			f = s.circle.Sigma[n]
 		}
-		s.alpha[n] = scale(f, s.alpha[n])
+		alpha[n] = scale(f, alpha[n])
 	}
-	s.Spread(y, s.alpha)
+}
+
+// Many is the number of vectors that ApplyMany takes at once.
+const Many = many
+
+// ApplyMany is Apply for Many vectors, element k of vector v at Many·k + v.
+func (s *System) ApplyMany(y, x []float64) {
+	clear(y)
+	for j := range s.discs {
+		xj, yj := x[many*s.off[j]:many*s.off[j+1]], y[many*s.off[j]:many*s.off[j+1]]
+		for i := range j + 1 {
+			if b := s.at(i, j); len(b.data) > 0 {
+				b.apply8(x[many*s.off[i]:many*s.off[i+1]], xj, y[many*s.off[i]:many*s.off[i+1]], yj)
+			}
+		}
+	}
+	if s.circle == nil || len(s.circle.Sigma) == 0 {
+		return
+	}
+	u, w := make([]float64, s.Len()), make([]float64, s.Len())
+	alpha := make([]complex128, len(s.weight))
+	for v := range many {
+		for i := range u {
+			u[i] = x[many*i+v]
+		}
+		s.Gather(alpha, u)
+		s.reflect(alpha)
+		clear(w)
+		s.Spread(w, alpha)
+		for i, e := range w {
+			y[many*i+v] += e
+		}
+	}
 }
 
 // Gather sets alpha to the circle's outgoing scaled amplitudes √n A_n of x, n = 1 … Top.
 func (s *System) Gather(alpha []complex128, x []float64) {
-	for n := range alpha {
-		alpha[n] = 0
-	}
+	clear(alpha)
 	for i := range s.discs {
-		gather(s.ports[i], x[s.off[i]:s.off[i+1]], alpha)
+		s.ports[i].gather(x[s.off[i]:s.off[i+1]], alpha)
 	}
 }
 
 // Spread adds to y what the circle's regular field with scaled amplitudes omega_n = √n conj(B_n) brings to the discs.
 func (s *System) Spread(y []float64, omega []complex128) {
 	for i := range s.discs {
-		spread(s.ports[i], omega, y[s.off[i]:s.off[i+1]])
+		s.ports[i].spread(omega, y[s.off[i]:s.off[i+1]])
 	}
 }
 

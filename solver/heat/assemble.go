@@ -35,7 +35,7 @@ func (g *region) assemble(cut float64, stop func() bool) bool {
 	if g.rect == nil {
 		g.circle = g.newCircle()
 	}
-	g.sys = harmonic.NewSystem(discs, g.circle, g.port, cut)
+	g.sys = harmonic.NewSystem(discs, g.circle, g.weights(), cut)
 	g.setSigns()
 	if g.rect != nil {
 		g.rect.write(g)
@@ -47,6 +47,16 @@ func (g *region) assemble(cut float64, stop func() bool) bool {
 		g.sys.Build(i)
 	}
 	return true
+}
+
+// weights tells how much the jacket of a cable lets each harmonic through.
+func (g *region) weights() []float64 {
+	w := make([]float64, g.port)
+	for n := range w {
+		p := g.wall.Port(n + 1)
+		w[n] = math.Max(math.Abs(p.Tau), math.Abs(p.TauIn))
+	}
+	return w
 }
 
 // disc is piece i as the system sees it: a part's scales are the roots of its reflections, a cable's are one.

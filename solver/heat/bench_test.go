@@ -82,3 +82,29 @@ func BenchmarkField(b *testing.B) {
 		})
 	}
 }
+
+// BenchmarkDragFrame moves the topmost part by 0.2 mm a frame, up and down again, and solves.
+func BenchmarkDragFrame(b *testing.B) {
+	for _, c := range timed {
+		l := load(b, c.name)
+		top := 0
+		for i := range l.Parts {
+			if l.Parts[i].Y > l.Parts[top].Y {
+				top = i
+			}
+		}
+		m := heat.New(l.Problem, one(heat.Standard))
+		m.Solve(context.Background(), nil)
+		b.Run(fmt.Sprint(c.parts), func(b *testing.B) {
+			b.ReportAllocs()
+			steps := 0
+			n := 0
+			for ; b.Loop(); n++ {
+				up := float64(min(n%10, 10-n%10)) * 0.2 * mm
+				m.Move(top, l.Parts[top].X, l.Parts[top].Y-up)
+				steps += m.Solve(context.Background(), nil).Steps
+			}
+			b.ReportMetric(float64(steps)/float64(n), "steps/op")
+		})
+	}
+}

@@ -1,0 +1,42 @@
+package harmonic
+
+//go:noescape
+func applyAVX(cols *uint16, n int, data, xi, xj, yi, yj *float64)
+
+//go:noescape
+func apply8AVX(cols *uint16, n int, data, xi, xj, yi, yj *float64)
+
+func cpuid(leaf, sub uint32) (a, b, c, d uint32)
+
+func xgetbv() (a uint32)
+
+// wide tells whether the processor and the system have AVX2 and fused multiply-add (Intel 64 and IA-32 Architectures Software Developer's Manual,
+// volume 1, chapter 14, on detection).
+var wide = func() bool {
+	const fma, osxsave, avx, avx2, ymm = 1 << 12, 1 << 27, 1 << 28, 1 << 5, 6
+	if top, _, _, _ := cpuid(0, 0); top < 7 {
+		return false
+	}
+	_, _, c, _ := cpuid(1, 0)
+	if c&(fma|osxsave|avx) != fma|osxsave|avx || xgetbv()&ymm != ymm {
+		return false
+	}
+	_, b, _, _ := cpuid(7, 0)
+	return b&avx2 != 0
+}()
+
+func (b *block) apply(xi, xj, yi, yj []float64) {
+	if wide {
+		applyAVX(&b.cols[0], len(b.cols), &b.data[0], &xi[0], &xj[0], &yi[0], &yj[0])
+		return
+	}
+	b.applyPlain(xi, xj, yi, yj)
+}
+
+func (b *block) apply8(xi, xj, yi, yj []float64) {
+	if wide {
+		apply8AVX(&b.cols[0], len(b.cols), &b.data[0], &xi[0], &xj[0], &yi[0], &yj[0])
+		return
+	}
+	b.apply8Plain(xi, xj, yi, yj)
+}

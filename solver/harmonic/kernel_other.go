@@ -1,0 +1,7 @@
+//go:build !amd64
+
+package harmonic
+
+func (b *block) apply(xi, xj, yi, yj []float64) { b.applyPlain(xi, xj, yi, yj) }
+
+func (b *block) apply8(xi, xj, yi, yj []float64) { b.apply8Plain(xi, xj, yi, yj) }
