@@ -131,12 +131,29 @@ func (d *Details) refill() {
 		f := d.known[in.key]
 		if f == nil {
 			f = newField(d.desk, in, d.relay)
-			f.about = d.about
+			f.about = func(text string) {
+				d.about(text)
+				if text != "" {
+					d.reveal(f)
+				}
+			}
 			d.known[in.key] = f
 		}
 		f.show(in)
 		d.fields = append(d.fields, f)
 	}
+}
+
+// reveal scrolls a field into sight, for the keyboard.
+func (d *Details) reveal(f *field) {
+	top, bottom, at := f.Position().Y, f.Position().Y+f.Size().Height, d.scroll.Offset
+	switch seen := d.scroll.Size().Height; {
+	case top < at.Y:
+		at.Y = max(0, top-proseLeading)
+	case bottom > at.Y+seen:
+		at.Y = bottom - seen + proseLeading
+	}
+	d.scroll.ScrollToOffset(at)
 }
 
 // about tells below what the entry with the focus takes, "" when none has it.
@@ -177,14 +194,14 @@ func (d *Details) MinSize() fyne.Size {
 
 // CreateRenderer lays out the scroll and the line of help below it.
 func (d *Details) CreateRenderer() fyne.WidgetRenderer {
-	return widget.NewSimpleRenderer(&fyne.Container{Layout: detailsLayout{d}, Objects: []fyne.CanvasObject{d.scroll, d.help}})
+	return widget.NewSimpleRenderer(&fyne.Container{Layout: detailsLayout{d}, Objects: []fyne.CanvasObject{d.scroll, newFieldWheel(d.scroll), d.help}})
 }
 
 type detailsLayout struct{ d *Details }
 
 func (l detailsLayout) MinSize([]fyne.CanvasObject) fyne.Size { return l.d.MinSize() }
 
-func (l detailsLayout) Layout(_ []fyne.CanvasObject, s fyne.Size) {
+func (l detailsLayout) Layout(objects []fyne.CanvasObject, s fyne.Size) {
 	d := l.d
 	line := 2*textExtent("Mg", d.help.textSize(), fyne.TextStyle{}).Height + 2*proseLeading
 	if s.Height < detailsHelpHeight {
@@ -194,5 +211,6 @@ func (l detailsLayout) Layout(_ []fyne.CanvasObject, s fyne.Size) {
 	d.help.Move(fyne.NewPos(14, s.Height-line))
 	d.help.Resize(fyne.NewSize(max(s.Width-28, 1), line))
 	d.scroll.Resize(fyne.NewSize(s.Width, s.Height-line))
+	objects[1].Resize(d.scroll.Size())
 	d.relay()
 }

@@ -205,3 +205,29 @@ func BenchmarkDetails200(b *testing.B) {
 		d.changed(ChangedResult | ChangedDocument)
 	}
 }
+
+// The wheel scrolls the pane, also over an entry, and the keyboard brings its field into sight.
+func TestDetailsScroll(t *testing.T) {
+	b := newBench(t, benchDesign)
+	d := NewDetails(b.Desk)
+	c := b.show(d, 420, 320)
+	b.Select("L1")
+	f := d.known["circuit"]
+	at := fyne.CurrentApp().Driver().AbsolutePositionForObject(f.entry).AddXY(20, 10)
+	if at.Y > d.scroll.Size().Height {
+		t.Fatalf("the first fields are out of sight, at %v", at.Y)
+	}
+	test.Scroll(c, at, 0, -60)
+	if d.scroll.Offset.Y != 60 {
+		t.Errorf("the wheel scrolls the pane to %v", d.scroll.Offset.Y)
+	}
+	c.Focus(d.known["y"].entry)
+	f = d.known["y"]
+	if bottom := f.Position().Y + f.Size().Height - d.scroll.Offset.Y; bottom > d.scroll.Size().Height {
+		t.Errorf("the field with the keyboard ends at %v of %v", bottom, d.scroll.Size().Height)
+	}
+	b.Select("L2")
+	if d.scroll.Offset.Y != 0 {
+		t.Error("another part begins at the top")
+	}
+}

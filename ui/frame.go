@@ -43,8 +43,9 @@ func (f *frame) showsDetails(width float32) bool {
 // objects lists what the frame lays out, grips on top.
 func (f *frame) objects() []fyne.CanvasObject {
 	return []fyne.CanvasObject{
-		f.sentence, f.bar, f.ladder, f.section, f.status, f.details, f.list, f.caution,
-		f.ladderLine, f.detailLine, f.gripSide, f.gripList,
+		f.sentence, f.ladder, f.section, f.status, f.details, f.list, f.caution, f.ladderLine, f.detailLine,
+		f.bar, // over the panes: what the line says hangs down into them
+		f.gripSide, f.gripList,
 	}
 }
 

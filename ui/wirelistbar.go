@@ -29,7 +29,7 @@ func (l *WireList) reach() float64 {
 	if len(margins) > 0 {
 		middle := margins[len(margins)/2]
 		for _, r := range []float64{5, 10, 20, 50} {
-			if middle*1.2 <= r {
+			if middle <= r {
 				return r
 			}
 		}
@@ -60,7 +60,7 @@ func (b *wireBars) draw(w, h int) image.Image {
 	if l.aged {
 		within, over = themeColor(theme.ColorNameDisabled), themeColor(theme.ColorNameDisabled)
 	}
-	p := barPen{img: img, unit: float64(w) / wireBar}
+	p := barPen{img: img, unit: float64(w) / float64(max(1, l.layout.barWide))}
 	for i := range n {
 		k, ok := l.rows[b.first+i].margin()
 		if !ok {

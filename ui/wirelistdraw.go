@@ -52,7 +52,7 @@ func (r *wireBodyRenderer) Refresh() {
 	}
 	r.bars.first, r.bars.last = first, last
 	r.raster.Move(fyne.NewPos(l.layout.bar, float32(first)*l.layout.rowHeight))
-	r.raster.Resize(fyne.NewSize(wireBar, float32(last-first)*l.layout.rowHeight))
+	r.raster.Resize(fyne.NewSize(l.layout.barWide, float32(last-first)*l.layout.rowHeight))
 	if last > first {
 		r.raster.Refresh()
 		r.objects = append(r.objects, r.raster)

@@ -7,10 +7,11 @@ import (
 
 // Sizes within the list.
 const (
-	wireEdge     = 14  // left and right of the columns
-	wireGap      = 14  // least space between two columns
-	wireGapMost  = 30  // most
-	wireBar      = 96  // of the margin's bar
+	wireEdge     = 14 // left and right of the columns
+	wireGap      = 14 // least space between two columns
+	wireGapMost  = 44 // most
+	wireBarLeast = 48 // of the margin's bar
+	wireBarMost  = 96
 	wireBarSpace = 10  // between the margin's number and its bar
 	wireWordMost = 240 // of a column of words; more is elided, with the whole on hover
 	wireRowSpace = 8   // above and below a row's text together
@@ -21,7 +22,7 @@ type wireLayout struct {
 	rowHeight, headHeight float32
 	textSize, small       float32
 	at, wide              [wireColumns]float32
-	bar                   float32 // left edge of the margin's bar
+	bar, barWide          float32 // left edge and width of the margin's bar
 	shown                 [wireColumns]bool
 	width                 float32 // of all columns
 }
@@ -42,7 +43,10 @@ func measureWires(l *WireList) wireLayout {
 		sum += m.wide[c]
 		n++
 	}
-	gap := (l.Size().Width - sum) / float32(max(n-1, 1))
+	spare := l.Size().Width - sum - wireGap*float32(n-1)
+	m.barWide = min(max(wireBarLeast+spare, wireBarLeast), wireBarMost)
+	m.wide[wireMargin] += m.barWide - wireBarLeast
+	gap := wireGap + (spare-m.barWide+wireBarLeast)/float32(max(n-1, 1))
 	gap = min(max(gap, wireGap), wireGapMost)
 	x := float32(wireEdge)
 	for c := range wireColumns {
@@ -55,7 +59,7 @@ func measureWires(l *WireList) wireLayout {
 		}
 		x += m.wide[c] + gap
 	}
-	m.bar = m.at[wireMargin] + m.wide[wireMargin] - wireBar
+	m.bar = m.at[wireMargin] + m.wide[wireMargin] - m.barWide
 	m.width = x - gap + wireEdge
 	if room := l.Size().Width; m.width < room+1 { // no scroll bar for a rounding
 		m.width = min(m.width, room)
@@ -91,7 +95,7 @@ func (l *WireList) columnWidth(c wireColumn, m wireLayout) float32 {
 		w = min(w, wireWordMost)
 	}
 	if c == wireMargin {
-		w += wireBarSpace + wireBar
+		w += wireBarSpace + wireBarLeast
 	}
 	return w
 }
