@@ -57,7 +57,7 @@ func (l *ladder) ticks() []float64 {
 	if !(l.sc.High > l.sc.Low) || !l.s.solved() {
 		return nil
 	}
-	return levels(l.sc.Low, l.sc.High, roundStep((l.sc.High-l.sc.Low)*30*l.k/(l.bottom-l.top)))
+	return levels(l.sc.Low, l.sc.High, roundStep((l.sc.High-l.sc.Low)*38*l.k/(l.bottom-l.top)))
 }
 
 // y returns the height of a temperature, kept on the bar.

@@ -121,3 +121,18 @@ func TestLayerOf(t *testing.T) {
 		}
 	}
 }
+
+func TestJoinNames(t *testing.T) {
+	for _, c := range [][3]string{
+		{"jacket 1", "jacket 2", "jacket 1–2"},
+		{"jacket 1–2", "jacket 3", "jacket 1–3"},
+		{"jacket 1", "jacket 3", "jacket 1, jacket 3"},
+		{"jacket", "outside", "jacket, outside"},
+		{"jacket 1–3", "outside", "jacket 1–3, outside"},
+		{"conduit 1", "jacket 2", "conduit 1, jacket 2"},
+	} {
+		if got := joinNames(c[0], c[1]); got != c[2] {
+			t.Errorf("%s and %s: %q, want %q", c[0], c[1], got, c[2])
+		}
+	}
+}

@@ -14,7 +14,7 @@ import (
 const (
 	LeastWidth, LeastHeight = 320, 240
 	MostWidth, MostHeight   = 16384, 16384
-	mostPixels              = 120_000_000
+	mostPixels              = 144_000_000
 )
 
 // WritePNG draws the whole picture (sentence, ladder, section, status, notes, caution) at w × h pixels.

@@ -19,10 +19,14 @@ func (p *sectionPainter) planScaleBar() bar {
 	if !finite(b.long) || b.long < 8*p.k {
 		return bar{}
 	}
-	f := p.barFont()
-	t := textBox(b.x, b.y-7*p.k, p.c.MeasureText(b.text, f), f).with(box{b.x, b.y - 4*p.k, b.x + b.long, b.y + 4*p.k})
-	p.taken = append(p.taken, t.grown(2*p.k))
+	p.taken = append(p.taken, b.box(p).grown(2*p.k))
 	return b
+}
+
+// box returns what line and text cover.
+func (b bar) box(p *sectionPainter) box {
+	f := p.barFont()
+	return textBox(b.x, b.y-7*p.k, p.c.MeasureText(b.text, f), f).with(box{b.x, b.y - 4*p.k, b.x + b.long, b.y + 4*p.k})
 }
 
 func (p *sectionPainter) barFont() Font {
@@ -32,6 +36,11 @@ func (p *sectionPainter) barFont() Font {
 func (p *sectionPainter) drawScaleBar(b bar) {
 	if b.long == 0 {
 		return
+	}
+	if t := b.box(p); p.edge.meetsBox(t) { // on the map it stands on a label of its own
+		t = t.grown(3 * p.k)
+		rounded(p.c, t.x0, t.y0, t.x1-t.x0, t.y1-t.y0, 4*p.k)
+		p.c.Fill(alpha(p.pal.Paper, 0.85))
 	}
 	for _, pen := range []Pen{{Width: 4.5 * p.k, Color: p.pal.Paper}, {Width: 1.5 * p.k, Color: p.pal.Ink}} {
 		for _, t := range []float64{b.x, b.x + b.long} {

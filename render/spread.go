@@ -18,13 +18,7 @@ func spread(want, height []float64, lo, hi float64) []float64 {
 	}
 	top, bottom := lo+height[0]/2, hi-height[n-1]/2-offset[n-1]
 	if bottom < top {
-		f := 0.0
-		if offset[n-1] > 0 {
-			f = max(0, hi-height[n-1]/2-top) / offset[n-1]
-		}
-		for i := range out {
-			out[i] = top + f*offset[i]
-		}
+		squeeze(out, offset, top, hi-height[n-1]/2)
 		return out
 	}
 	type pool struct {
@@ -51,4 +45,15 @@ func spread(want, height []float64, lo, hi float64) []float64 {
 		}
 	}
 	return out
+}
+
+// squeeze puts the middles between top and bottom with the offsets scaled down to fit.
+func squeeze(out, offset []float64, top, bottom float64) {
+	f := 0.0
+	if all := offset[len(offset)-1]; all > 0 {
+		f = max(0, bottom-top) / all
+	}
+	for i := range out {
+		out[i] = top + f*offset[i]
+	}
 }

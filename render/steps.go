@@ -146,7 +146,7 @@ func (l *ladder) wallSteps() []step {
 		}
 		if n := len(out); n > 0 && math.Abs(out[n-1].low-s.temp) < 0.5 && out[n-1].color == s.color {
 			g := &out[n-1]
-			g.ids, g.name = append(g.ids, r.ID), g.name+", "+s.name
+			g.ids, g.name = append(g.ids, r.ID), joinNames(g.name, s.name)
 			g.low, g.high = min(g.low, s.low), max(g.high, s.high)
 			g.temp, g.bold = (g.low+g.high)/2, g.bold || s.bold
 			continue
@@ -154,6 +154,32 @@ func (l *ladder) wallSteps() []step {
 		out = append(out, s)
 	}
 	return out
+}
+
+// joinNames lists two names, numbered layers of one thing as a range: "jacket 1–3".
+func joinNames(a, b string) string {
+	base, n, ok := cutNumber(b)
+	if first, last, is := cutNumber(a); ok && is && last == n-1 {
+		root, from, ranged := strings.Cut(first, "–")
+		if !ranged && root == base {
+			return fmt.Sprintf("%s %d–%d", base, last, n)
+		}
+		if r, f, ok := cutNumber(root); ranged && from == "" && ok && r == base {
+			return fmt.Sprintf("%s %d–%d", base, f, n)
+		}
+	}
+	return a + ", " + b
+}
+
+// cutNumber splits "jacket 2" into "jacket" and 2, "jacket 1–2" into "jacket 1–" and 2.
+func cutNumber(s string) (base string, n int, ok bool) {
+	i := strings.LastIndexAny(s, " –")
+	if i < 0 {
+		return s, 0, false
+	}
+	tail := strings.TrimPrefix(s[i:], "–")
+	n, err := strconv.Atoi(strings.TrimSpace(tail))
+	return strings.TrimSuffix(s[:len(s)-len(tail)], " "), n, err == nil
 }
 
 // limitSteps are the notches: one for every different limit, with what it belongs to when there are several.
