@@ -2,10 +2,7 @@ package pack
 
 import "math"
 
-// spot is a place for a disc's centre and what it costs to lie there; the cheapest free one is taken, and tie decides between equals.
-type spot struct{ cost, tie, x, y float64 }
-
-// worth is what it costs to lie at a place, and the direction in which the cost rises.
+// worth is what it costs to lie at a place, and the direction in which the cost rises; tie decides between equal costs.
 type worth func(x, y float64) (cost, tie, upx, upy float64)
 
 // bed is what already lies in the box. It finds places for the next disc that touch two things (two discs, or a disc and the wall) and from
@@ -15,12 +12,14 @@ type bed struct {
 	discs []Disc
 	eps   float64 // overlap that counts as touching
 	grid  grid
-	near  *Disc // where cost is the distance from: nil, cost is a height
 
-	r     float64 // of the disc that is being placed
-	worth worth
-	spots []spot
-	seen  []int // last disc for which each was looked at, so that none is twice
+	worth  worth
+	near   *Disc              // where cost is the distance from; nil: cost is a height
+	queues map[float64]*queue // the places for each radius
+
+	r    float64 // of the disc that is being placed
+	q    *queue  // its places
+	seen []int   // last disc for which each was looked at, so that none is twice
 }
 
 // newBed makes a bed for discs of the mean radius that lie within scale of the origin.
@@ -34,6 +33,19 @@ func newBed(in Box, scale, mean float64) *bed {
 	return b
 }
 
+// want sets what places cost. With near, cost is the distance from it.
+func (b *bed) want(w worth, near *Disc) {
+	b.worth, b.near, b.queues = w, near, map[float64]*queue{}
+}
+
+// wantNear sets the distance from a place as the cost.
+func (b *bed) wantNear(d Disc) {
+	b.want(func(x, y float64) (cost, tie, upx, upy float64) {
+		dx, dy := x-d.X, y-d.Y
+		return math.Hypot(dx, dy), math.Atan2(dy, dx), dx, dy
+	}, &d)
+}
+
 // put lays a disc in its place.
 func (b *bed) put(d Disc) {
 	b.grid.put(d, len(b.discs))
@@ -41,18 +53,20 @@ func (b *bed) put(d Disc) {
 	b.seen = append(b.seen, -1)
 }
 
-// best returns the free place of least cost for a disc of radius r.
-func (b *bed) best(r float64, w worth) (x, y float64, ok bool) {
-	b.r, b.worth, b.spots = r, w, b.spots[:0]
-	b.wallSpots()
-	b.oneSpots()
+// best returns the free place of least cost for a disc of radius r. Places that were found taken are not looked at again.
+func (b *bed) best(r float64) (x, y float64, ok bool) {
+	b.r, b.q = r, b.queues[r]
+	if b.q == nil {
+		b.q = &queue{eps: b.eps}
+		b.queues[r] = b.q
+		b.wallSpots()
+	}
 	b.discSpots()
-	b.heapify()
-	for len(b.spots) > 0 {
-		if s := b.spots[0]; b.free(s.x, s.y, r) {
+	for len(b.q.spots) > 0 {
+		if s := b.q.spots[0]; b.free(s.x, s.y, r) {
 			return s.x, s.y, true
 		}
-		b.pop()
+		b.q.pop()
 	}
 	return 0, 0, false
 }
@@ -78,7 +92,7 @@ func (b *bed) free(x, y, r float64) bool {
 func (b *bed) add(x, y float64) {
 	if b.in.clear(x, y, b.r) >= -b.eps {
 		c, t, _, _ := b.worth(x, y)
-		b.spots = append(b.spots, spot{c, t, x, y})
+		b.q.push(spot{c, t, x, y})
 	}
 }
 
@@ -97,10 +111,10 @@ func (b *bed) rest(x, y, px, py, qx, qy float64) {
 	if pc*qc > tiny || qc*pu-pc*qu < -tiny {
 		return
 	}
-	b.spots = append(b.spots, spot{c, t, x, y})
+	b.q.push(spot{c, t, x, y})
 }
 
-// wallSpots adds the places on the wall alone: the deepest point, the corners, the middle of the floor.
+// wallSpots adds the places that touch no disc: the deepest point, the corners, the middle of the floor; the nearest.
 func (b *bed) wallSpots() {
 	in, r := b.in, b.r
 	switch {
@@ -113,32 +127,23 @@ func (b *bed) wallSpots() {
 		b.add(r, in.H-r)
 		b.add(in.W-r, in.H-r)
 	}
-}
-
-// oneSpots adds, where cost is a distance, the nearest place of all and the nearest on each disc.
-func (b *bed) oneSpots() {
-	if b.near == nil {
-		return
-	}
-	x, y, _ := b.in.clamp(b.near.X, b.near.Y, b.r)
-	b.add(x, y)
-	for _, p := range b.discs {
-		a, dx, dy := p.R+b.r, b.near.X-p.X, b.near.Y-p.Y
-		h := math.Hypot(dx, dy)
-		if h == 0 {
-			dx, h = 1, 1
-		}
-		b.add(p.X+a*dx/h, p.Y+a*dy/h)
+	if b.near != nil {
+		x, y, _ := in.clamp(b.near.X, b.near.Y, r)
+		b.add(x, y)
 	}
 }
 
-// discSpots adds the places that touch a disc and the wall, and those that touch two discs.
+// discSpots adds the places that touch a disc that is new to the queue, and one more: the wall, or a disc before it.
 func (b *bed) discSpots() {
 	for k := range b.seen {
 		b.seen[k] = -1
 	}
-	for i, p := range b.discs {
+	for ; b.q.done < len(b.discs); b.q.done++ {
+		p := b.discs[b.q.done]
 		a := p.R + b.r
+		if b.near != nil {
+			b.nearSpot(p, a)
+		}
 		switch {
 		case b.in.round():
 			if math.Hypot(p.X, p.Y)+a >= b.in.R-b.r {
@@ -147,8 +152,18 @@ func (b *bed) discSpots() {
 		case b.in.rect():
 			b.sideSpots(p, a)
 		}
-		b.pairSpots(i)
+		b.pairSpots(b.q.done)
 	}
+}
+
+// nearSpot adds the place at distance a from disc p that is nearest to where cost is measured from.
+func (b *bed) nearSpot(p Disc, a float64) {
+	dx, dy := b.near.X-p.X, b.near.Y-p.Y
+	h := math.Hypot(dx, dy)
+	if h == 0 {
+		dx, h = 1, 1
+	}
+	b.add(p.X+a*dx/h, p.Y+a*dy/h)
 }
 
 // pairSpots adds the places that touch disc i and one before it.

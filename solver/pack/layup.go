@@ -61,7 +61,7 @@ func layersOn(radii []float64, centre int) []Disc {
 		g := ringOn(rest, base)
 		n := len(g.r)
 		switch {
-		case n < len(rest) && centre == 1 && len(out) == 1:
+		case n < len(rest) && len(rest) < 2*n && centre == 1 && len(out) == 1:
 			w, out := ringWithin(rest)
 			if off := out - 2*slices.Max(rest) - base; off >= 0 && off <= looseCore*slices.Min(rest) {
 				g, n = w, len(rest)
@@ -134,7 +134,7 @@ func nested(radii []float64, order []int, centre int) ([]Disc, float64, bool) {
 		sum += r
 	}
 	b := newBed(Box{}, 2*sum, sum/float64(len(radii)))
-	b.near = &Disc{}
+	b.wantNear(Disc{})
 	var core []float64
 	for _, i := range order[:centre] {
 		core = append(core, radii[i])
@@ -145,9 +145,7 @@ func nested(radii []float64, order []int, centre int) ([]Disc, float64, bool) {
 		b.put(d)
 	}
 	for _, i := range order[centre:] {
-		x, y, ok := b.best(radii[i], func(x, y float64) (cost, tie, upx, upy float64) {
-			return math.Hypot(x, y), math.Atan2(y, x), x, y
-		})
+		x, y, ok := b.best(radii[i])
 		if !ok {
 			return nil, 0, false
 		}

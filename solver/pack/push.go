@@ -248,9 +248,6 @@ func btoi(b bool) int {
 
 // nearest is the free place nearest to where the disc is.
 func (b *bed) nearest(d Disc, gap float64) (x, y float64, ok bool) {
-	b.near = &d
-	return b.best(d.R+gap, func(x, y float64) (cost, tie, upx, upy float64) {
-		dx, dy := x-d.X, y-d.Y
-		return math.Hypot(dx, dy), math.Atan2(dy, dx), dx, dy
-	})
+	b.wantNear(d)
+	return b.best(d.R + gap)
 }

@@ -46,6 +46,9 @@ func (e *FitError) Error() string {
 
 // Settle lets the discs fall (towards −y) until they rest on each other and the wall. Same seed, same result; never an overlap. The error is
 // one sentence when they do not fit (*FitError, or ErrNoWall without a wall); the discs' places are ignored except for Fixed ones.
+//
+// In an order drawn from the seed each disc takes the lowest free place; then all sink together, without friction, until weights and contact forces are in
+// balance, so that what touches does so to the last digits. Discs too many for that are thrown in and grown until they fit.
 func Settle(discs []Disc, in Box, seed uint64) ([]Disc, error) {
 	if in.open() {
 		return nil, ErrNoWall
@@ -164,17 +167,18 @@ func drop(discs []Disc, in Box, order []int, rng *rand.Rand) ([]Disc, bool) {
 			b.put(d)
 		}
 	}
+	side := 1e-9 * float64(1-2*int(rng.Uint64()&1)) // equal heights left and right: toss
+	b.want(func(x, y float64) (cost, tie, upx, upy float64) {
+		if in.rect() {
+			x -= in.W / 2
+		}
+		return y, math.Abs(x) + side*x, 0, 1
+	}, nil)
 	for _, i := range order {
 		if out[i].Fixed {
 			continue
 		}
-		side := float64(1 - 2*int(rng.Uint64()&1)) // equal heights left and right: toss
-		x, y, ok := b.best(out[i].R, func(x, y float64) (cost, tie, upx, upy float64) {
-			if in.rect() {
-				x -= in.W / 2
-			}
-			return y, math.Abs(x) + 1e-9*side*x, 0, 1
-		})
+		x, y, ok := b.best(out[i].R)
 		if !ok {
 			return nil, false
 		}
