@@ -127,10 +127,15 @@ func (l *ladder) groupName(g step, word string) string {
 		return g.name
 	}
 	all := strings.Join(g.ids, ", ")
-	if len(g.ids) <= 4 && l.c.MeasureText(all+" 100–100", l.font()) <= l.w-l.text-4*l.k {
+	if len(g.ids) <= 4 && l.hasRoom(all+" 100–") {
 		return all
 	}
 	return strconv.Itoa(len(g.ids)) + " " + word
+}
+
+// hasRoom tells whether a name fits, with a number behind it.
+func (l *ladder) hasRoom(name string) bool {
+	return l.c.MeasureText(name+" 100", l.font()) <= l.w-l.text-4*l.k
 }
 
 // wallSteps are the holder's layers and its outer surface; equal ones share a label.
@@ -144,7 +149,7 @@ func (l *ladder) wallSteps() []step {
 		if r.Over() {
 			s.color = l.pal.Over
 		}
-		if n := len(out); n > 0 && math.Abs(out[n-1].low-s.temp) < 0.5 && out[n-1].color == s.color {
+		if n := len(out); n > 0 && math.Abs(out[n-1].low-s.temp) < 0.5 && out[n-1].color == s.color && l.hasRoom(joinNames(out[n-1].name, s.name)) {
 			g := &out[n-1]
 			g.ids, g.name = append(g.ids, r.ID), joinNames(g.name, s.name)
 			g.low, g.high = min(g.low, s.low), max(g.high, s.high)
