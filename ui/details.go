@@ -18,6 +18,9 @@ type Details struct {
 	scroll *container.Scroll
 	help   *prose // about the field that has the focus
 
+	helpBack  *fill
+	helpShown bool
+
 	sentences []*prose
 	rule      *fill
 	more      *prose // folds the fields
@@ -32,10 +35,11 @@ type Details struct {
 // NewDetails shows the desk's selection.
 func NewDetails(k *Desk) *Details {
 	d := &Details{desk: k, known: map[string]*field{}}
-	d.column = &fyne.Container{Layout: &fieldColumn{gap: 7, margin: 14}}
+	d.column = &fyne.Container{Layout: &fieldColumn{gap: 7, margin: detailsEdge}}
 	d.scroll = container.NewVScroll(d.column)
 	d.help = newProse(k)
 	d.help.size = smallText(d.help)
+	d.helpBack = newFill(ColorNameStrip)
 	d.rule = newFill(theme.ColorNameSeparator)
 	d.more = newProse(k)
 	d.more.moved = d.relay
@@ -147,7 +151,11 @@ func (d *Details) refill() {
 // reveal scrolls a field into sight, for the keyboard.
 func (d *Details) reveal(f *field) {
 	top, bottom, at := f.Position().Y, f.Position().Y+f.Size().Height, d.scroll.Offset
-	switch seen := d.scroll.Size().Height; {
+	seen := d.scroll.Size().Height
+	if d.helpShown {
+		seen -= d.helpBack.Size().Height
+	}
+	switch {
 	case top < at.Y:
 		at.Y = max(0, top-proseLeading)
 	case bottom > at.Y+seen:
@@ -156,9 +164,23 @@ func (d *Details) reveal(f *field) {
 	d.scroll.ScrollToOffset(at)
 }
 
-// about tells below what the entry with the focus takes, "" when none has it.
+// about tells over the pane's lower edge what the entry with the focus takes, "" when none has it.
 func (d *Details) about(text string) {
 	d.help.say(run{text: text, tone: quiet})
+	d.place()
+}
+
+// place lays the line of help over the lower edge, where nothing moves for it.
+func (d *Details) place() {
+	s := d.Size()
+	high := d.help.heightFor(max(1, s.Width-2*detailsEdge)) + 2*proseLeading + 2
+	d.helpShown = d.help.String() != "" && s.Height >= detailsHelpHeight
+	if !d.helpShown {
+		high = 0
+	}
+	setVisible(d.helpShown, d.help, d.helpBack)
+	put(d.helpBack, 0, s.Height-high, s.Width, high)
+	put(d.help, detailsEdge, s.Height-high+proseLeading+1, s.Width-2*detailsEdge, high)
 }
 
 // relay stacks sentences and fields for their heights as they are now.
@@ -183,8 +205,10 @@ func (d *Details) relay() {
 	}
 }
 
-// detailsHelpHeight is the height of the pane from which on the line of help has its place.
-const detailsHelpHeight = 260
+const (
+	detailsEdge       = 14  // left and right of the text
+	detailsHelpHeight = 220 // of the pane, from which on there is room for help
+)
 
 // MinSize is small: the pane scrolls.
 func (d *Details) MinSize() fyne.Size {
@@ -192,9 +216,10 @@ func (d *Details) MinSize() fyne.Size {
 	return fyne.NewSize(200, 80)
 }
 
-// CreateRenderer lays out the scroll and the line of help below it.
+// CreateRenderer lays out the scroll and the line of help over it.
 func (d *Details) CreateRenderer() fyne.WidgetRenderer {
-	return widget.NewSimpleRenderer(&fyne.Container{Layout: detailsLayout{d}, Objects: []fyne.CanvasObject{d.scroll, newFieldWheel(d.scroll), d.help}})
+	objects := []fyne.CanvasObject{d.scroll, newFieldWheel(d.scroll), d.helpBack, d.help}
+	return widget.NewSimpleRenderer(&fyne.Container{Layout: detailsLayout{d}, Objects: objects})
 }
 
 type detailsLayout struct{ d *Details }
@@ -202,15 +227,8 @@ type detailsLayout struct{ d *Details }
 func (l detailsLayout) MinSize([]fyne.CanvasObject) fyne.Size { return l.d.MinSize() }
 
 func (l detailsLayout) Layout(objects []fyne.CanvasObject, s fyne.Size) {
-	d := l.d
-	line := 2*textExtent("Mg", d.help.textSize(), fyne.TextStyle{}).Height + 2*proseLeading
-	if s.Height < detailsHelpHeight {
-		line = 0
-	}
-	d.help.Hidden = line == 0
-	d.help.Move(fyne.NewPos(14, s.Height-line))
-	d.help.Resize(fyne.NewSize(max(s.Width-28, 1), line))
-	d.scroll.Resize(fyne.NewSize(s.Width, s.Height-line))
-	objects[1].Resize(d.scroll.Size())
-	d.relay()
+	l.d.scroll.Resize(s)
+	objects[1].Resize(s) // the wheel
+	l.d.place()
+	l.d.relay()
 }

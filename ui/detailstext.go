@@ -194,6 +194,10 @@ func (t *telling) runs(id string, limit *input) {
 		return
 	}
 	temp := withUnit(degrees(row.temp, row.limit), "°C")
+	if t.unknown(id) {
+		t.fact(say("Without its own heat it runs at "+temp+"; its limit is "), t.limitWord(limit, row.limitWords()), say("."))
+		return
+	}
 	if !row.limit.OK {
 		t.fact(say("It runs at "+temp+"; no limit is known: "), t.limitWord(limit, "set one"), say("."))
 		return
@@ -217,6 +221,9 @@ func (t *telling) runs(id string, limit *input) {
 		t.fact(say("It is the hottest conductor, though " + t.governing() + " governs."))
 	}
 }
+
+// unknown tells whether the conductor's own heat is missing because nobody has said what it carries.
+func (t *telling) unknown(id string) bool { return slices.Contains(t.result.Unassigned, id) }
 
 func (t *telling) governing() string {
 	if t.result.Governing == nil {

@@ -55,7 +55,7 @@ func (t *telling) runTogether(ids []string) {
 	hottest, closest, peak, least := "", "", math.Inf(-1), math.Inf(1)
 	for _, id := range ids {
 		row, ok := readingOf(t.result, id)
-		if !ok || math.IsNaN(row.temp) {
+		if !ok || math.IsNaN(row.temp) || t.unknown(id) {
 			continue
 		}
 		if row.temp > peak {

@@ -30,3 +30,11 @@ func readingOf(r *rating.Result, id string) (reading, bool) {
 	}
 	return reading{}, false
 }
+
+// limitWords is the limit within a sentence.
+func (r reading) limitWords() string {
+	if !r.limit.OK {
+		return "unknown"
+	}
+	return degreesC(r.limit.V)
+}

@@ -108,6 +108,7 @@ func (l *WireList) follow() {
 		return
 	}
 	l.active.id, l.anchor = ids[0], ids[0]
+	l.reveal(l.row(ids[len(ids)-1]))
 	l.reveal(l.row(ids[0]))
 }
 

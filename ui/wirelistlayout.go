@@ -80,7 +80,7 @@ func (l *WireList) columnWidth(c wireColumn, m wireLayout) float32 {
 	}
 	w += wireArrow
 	if c.number() {
-		w = max(w, textExtent("−888.8", m.textSize, fyne.TextStyle{}).Width)
+		w = max(w, textExtent("≥ 888.8", m.textSize, fyne.TextStyle{}).Width)
 	}
 	seen := map[string]bool{}
 	for i := range l.rows {

@@ -28,8 +28,11 @@ type wireRow struct {
 	bad    bool // it stops the work
 }
 
-// margin returns limit − temperature; ok is false where there is none.
-func (r wireRow) margin() (k float64, ok bool) { return r.limit.V - r.temp, r.solved && r.limit.OK }
+// margin returns limit − temperature; ok is false where there is none, or where it is unknown because the conductor's own heat is.
+func (r wireRow) margin() (k float64, ok bool) {
+	k = r.limit.V - r.temp
+	return k, r.solved && r.limit.OK && !(r.unknown && k >= 0)
+}
 
 // over is judged on the unrounded value.
 func (r wireRow) over() bool { k, ok := r.margin(); return ok && k < 0 }
@@ -39,7 +42,11 @@ func (r wireRow) temperature() string {
 	if !r.solved {
 		return ""
 	}
-	return degrees(r.temp, r.limit)
+	t := degrees(r.temp, r.limit)
+	if r.unknown { // its own heat is missing
+		t = "≥ " + t
+	}
+	return t
 }
 
 func (r wireRow) limitText() string {
