@@ -16,6 +16,7 @@ type builder struct {
 	p, q   []complex128 // recursion of the image's Taylor coefficients
 	image  []complex128 // [m][n]
 	dw, iw []int        // widths of the rows: direct part, image
+	line   []complex128 // one harmonic in the circle
 	reals  []float64
 	widths []uint16
 }

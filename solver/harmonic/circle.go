@@ -12,31 +12,25 @@ type Circle struct {
 }
 
 // portCut drops entries of the maps from discs to the circle's own harmonics.
-const portCut = 1e-7
+const portCut = 1e-6
 
-// port is the map from a disc's scaled amplitudes to the circle's: P[n,m] = s_m √(n/m) C(n−1, m−1) (a/R)^m (c/R)^(n−m). Row m-1 holds n = m,
-// m+1, … up to where weighted entries stay below portCut.
-type port struct {
-	n    []int
-	data []complex128
-}
-
-// newPort maps d to the circle's harmonics n ≤ len(weight), each of which counts by its weight.
-func newPort(d Disc, r float64, weight []float64) port {
-	p := port{n: make([]int, len(d.S))}
+// port is the map from a disc's scaled amplitudes to the circle's, P[n,m] = s_m √(n/m) C(n−1, m−1) (a/R)^m (c/R)^(n−m), as a block: its rows
+// belong to m and are wide enough for all n whose weighted entries reach portCut.
+func (w *builder) port(b *block, d Disc, r float64, weight []float64) {
+	*b = block{}
 	c := scale(1/r, d.C)
 	l := size(c)
 	am := 1.0
-	for m := 1; m <= len(d.S) && m <= len(weight); m++ {
+	for m := 1; m <= min(len(d.S), len(weight)); m++ {
 		am *= d.A / r
 		v := complex(am*d.S[m-1], 0)
 		abs := am * d.S[m-1]
-		first := len(p.data)
-		keep := first
+		w.line = w.line[:0]
+		keep := 0
 		for n := m; n <= len(weight); n++ {
-			p.data = append(p.data, v)
+			w.line = append(w.line, v)
 			if abs*weight[n-1] >= portCut {
-				keep = len(p.data)
+				keep = n
 			}
 			f := float64(n) / float64(n-m+1) * math.Sqrt(float64(n+1)/float64(n))
 			if abs *= f * l; abs < portCut && f*l < 1 {
@@ -44,44 +38,73 @@ func newPort(d Disc, r float64, weight []float64) port {
 			}
 			v = scale(f, v) * c
 		}
-		p.data = p.data[:keep]
-		p.n[m-1] = keep - first
-	}
-	return p
-}
-
-// gather adds the disc's share of the circle's outgoing amplitudes: alpha += P x.
-func (p *port) gather(x []float64, alpha []complex128) {
-	at := 0
-	for m, n := range p.n {
-		if n == 0 {
-			continue
+		b.cols = append(b.cols, uint16(2*keep))
+		at := len(b.data)
+		b.data = append(b.data, make([]float64, 4*keep)...)
+		r0, r1 := b.data[at:][:2*keep], b.data[at+2*keep:][:2*keep]
+		for n := m; n <= keep; n++ { // Pᴴ
+			e := w.line[n-m]
+			k := 2 * (n - 1)
+			r0[k], r0[k+1] = real(e), imag(e)
+			r1[k], r1[k+1] = -imag(e), real(e)
 		}
-		re, im := x[2*m], x[2*m+1]
-		a := alpha[m : m+n]
-		for k, e := range p.data[at : at+n] {
-			a[k] += complex(real(e)*re-imag(e)*im, real(e)*im+imag(e)*re)
-		}
-		at += n
 	}
 }
 
-// spread is gather's adjoint: y += Pᴴ omega.
-func (p *port) spread(omega []complex128, y []float64) {
-	at := 0
-	for m, n := range p.n {
-		if n == 0 {
-			continue
+// gather sets alpha to the circle's outgoing scaled amplitudes of x, P x, for k vectors at once.
+func (s *System) gather(alpha, x []float64, k int) {
+	clear(alpha)
+	for i := range s.discs {
+		if b := &s.ports[i]; len(b.data) > 0 {
+			b.applyTo(x[k*s.off[i]:k*s.off[i+1]], s.idle, s.idle, alpha, k)
 		}
-		o := omega[m : m+n]
-		var re, im float64
-		for k, e := range p.data[at : at+n] {
-			w := o[k]
-			re += real(e)*real(w) + imag(e)*imag(w)
-			im += real(e)*imag(w) - imag(e)*real(w)
-		}
-		y[2*m] += re
-		y[2*m+1] += im
-		at += n
 	}
+}
+
+// spread adds to y what the circle's regular amplitudes omega bring, Pᴴ omega, for k vectors at once.
+func (s *System) spread(y, omega []float64, k int) {
+	for i := range s.discs {
+		if b := &s.ports[i]; len(b.data) > 0 {
+			b.applyTo(s.idle, omega, y[k*s.off[i]:k*s.off[i+1]], s.idle, k)
+		}
+	}
+}
+
+// applyTo is apply for one vector or for many.
+func (b *block) applyTo(xi, xj, yi, yj []float64, k int) {
+	if k == 1 {
+		b.apply(xi, xj, yi, yj)
+		return
+	}
+	b.apply8(xi, xj, yi, yj)
+}
+
+// reflect turns outgoing amplitudes of the circle into what Sigma sends back, for k vectors at once.
+func (s *System) reflect(alpha []float64, k int) {
+	for n := range s.weight {
+		f := 0.0
+		if n < len(s.circle.Sigma) {
+			f = s.circle.Sigma[n]
+		}
+		for v := range alpha[2*n*k : (2*n+2)*k] {
+			alpha[2*n*k+v] *= f
+		}
+	}
+}
+
+// Gather sets alpha to the circle's outgoing scaled amplitudes √n A_n of x, n = 1 … Top.
+func (s *System) Gather(alpha []complex128, x []float64) {
+	s.gather(s.alpha[:2*len(s.weight)], x, 1)
+	for n := range alpha {
+		alpha[n] = complex(s.alpha[2*n], s.alpha[2*n+1])
+	}
+}
+
+// Spread adds to y what the circle's regular field with scaled amplitudes omega_n = √n conj(B_n) brings to the discs.
+func (s *System) Spread(y []float64, omega []complex128) {
+	for n, w := range omega {
+		s.alpha[2*n], s.alpha[2*n+1] = real(w), imag(w)
+	}
+	clear(s.alpha[2*len(omega) : 2*len(s.weight)])
+	s.spread(y, s.alpha, 1)
 }

@@ -14,11 +14,13 @@ func (s *System) Mono(y, q []float64) {
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return
 	}
-	alpha := make([]complex128, len(s.weight))
+	alpha := make([]complex128, len(s.circle.Sigma))
 	for j, f := range q {
 		s.chargeOut(j, f, alpha)
 	}
-	s.reflect(alpha)
+	for n, f := range s.circle.Sigma {
+		alpha[n] = scale(f, alpha[n])
+	}
 	s.Spread(y, alpha)
 }
 
@@ -106,13 +108,13 @@ func (s *System) MonoDot(out, x []float64) {
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return
 	}
-	s.Gather(s.alpha, x)
+	s.gather(s.alpha[:2*len(s.weight)], x, 1)
 	for j := range out {
 		z := scale(1/s.circle.R, s.discs[j].C)
 		p := complex(1, 0)
 		for n, g := range s.circle.Sigma {
 			p *= z
-			out[j] += g / math.Sqrt(float64(n+1)) * (real(p)*real(s.alpha[n]) + imag(p)*imag(s.alpha[n]))
+			out[j] += g / math.Sqrt(float64(n+1)) * (real(p)*s.alpha[2*n] + imag(p)*s.alpha[2*n+1])
 		}
 	}
 }

@@ -21,9 +21,10 @@ type System struct {
 	weight []float64 // of the circle's harmonics that the discs are mapped to
 
 	blocks []block // upper triangle with diagonal, see at
-	ports  []port
+	ports  []block
 	work   builder
-	alpha  []complex128
+	alpha  []float64 // room for the circle's amplitudes, many vectors
+	idle   []float64 // noughts that stand for what a product does not need
 }
 
 // NewSystem lays out the discs; Build writes their blocks. A nil circle stands for a medium without end. The discs are mapped to the
@@ -39,8 +40,8 @@ func NewSystem(discs []Disc, circle *Circle, weight []float64, cut float64) *Sys
 		}
 	}
 	s.blocks = make([]block, len(discs)*(len(discs)+1)/2)
-	s.ports = make([]port, len(discs))
-	s.alpha = make([]complex128, len(s.weight))
+	s.ports = make([]block, len(discs))
+	s.alpha = make([]float64, 2*many*len(s.weight))
 	s.layout()
 	return s
 }
@@ -50,6 +51,7 @@ func (s *System) layout() {
 	for i, d := range s.discs {
 		s.off[i+1] = s.off[i] + 2*len(d.S)
 	}
+	s.idle = make([]float64, many*(s.off[len(s.discs)]+2*len(s.weight)))
 }
 
 // Len returns the number of real unknowns; Offset where disc i's begin; Top the harmonics of the circle that discs are mapped to.
@@ -70,7 +72,7 @@ func (s *System) at(i, j int) *block { return &s.blocks[j*(j+1)/2+i] }
 // Build writes the blocks between disc j and every disc i ≤ j, and j's map to the circle.
 func (s *System) Build(j int) {
 	if len(s.weight) > 0 {
-		s.ports[j] = newPort(s.discs[j], s.circle.R, s.weight)
+		s.work.port(&s.ports[j], s.discs[j], s.circle.R, s.weight)
 	}
 	for i := 0; i <= j; i++ {
 		s.work.write(s.at(i, j), s.discs[i], s.discs[j], i == j, s.circle, s.cut)
@@ -100,81 +102,31 @@ func (s *System) Entries() int {
 }
 
 // Apply sets y = S 𝒢 S x.
-func (s *System) Apply(y, x []float64) {
-	clear(y)
-	for j := range s.discs {
-		xj, yj := x[s.off[j]:s.off[j+1]], y[s.off[j]:s.off[j+1]]
-		for i := range j + 1 {
-			if b := s.at(i, j); len(b.data) > 0 {
-				b.apply(x[s.off[i]:s.off[i+1]], xj, y[s.off[i]:s.off[i+1]], yj)
-			}
-		}
-	}
-	if s.circle == nil || len(s.circle.Sigma) == 0 {
-		return
-	}
-	s.Gather(s.alpha, x)
-	s.reflect(s.alpha)
-	s.Spread(y, s.alpha)
-}
-
-// reflect turns outgoing amplitudes of the circle into what Sigma sends back.
-func (s *System) reflect(alpha []complex128) {
-	for n := range alpha {
-		f := 0.0
-		if n < len(s.circle.Sigma) {
-			f = s.circle.Sigma[n]
-		}
-		alpha[n] = scale(f, alpha[n])
-	}
-}
+func (s *System) Apply(y, x []float64) { s.apply(y, x, 1) }
 
 // Many is the number of vectors that ApplyMany takes at once.
 const Many = many
 
 // ApplyMany is Apply for Many vectors, element k of vector v at Many·k + v.
-func (s *System) ApplyMany(y, x []float64) {
+func (s *System) ApplyMany(y, x []float64) { s.apply(y, x, many) }
+
+func (s *System) apply(y, x []float64, k int) {
 	clear(y)
 	for j := range s.discs {
-		xj, yj := x[many*s.off[j]:many*s.off[j+1]], y[many*s.off[j]:many*s.off[j+1]]
+		xj, yj := x[k*s.off[j]:k*s.off[j+1]], y[k*s.off[j]:k*s.off[j+1]]
 		for i := range j + 1 {
 			if b := s.at(i, j); len(b.data) > 0 {
-				b.apply8(x[many*s.off[i]:many*s.off[i+1]], xj, y[many*s.off[i]:many*s.off[i+1]], yj)
+				b.applyTo(x[k*s.off[i]:k*s.off[i+1]], xj, y[k*s.off[i]:k*s.off[i+1]], yj, k)
 			}
 		}
 	}
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return
 	}
-	u, w := make([]float64, s.Len()), make([]float64, s.Len())
-	alpha := make([]complex128, len(s.weight))
-	for v := range many {
-		for i := range u {
-			u[i] = x[many*i+v]
-		}
-		s.Gather(alpha, u)
-		s.reflect(alpha)
-		clear(w)
-		s.Spread(w, alpha)
-		for i, e := range w {
-			y[many*i+v] += e
-		}
-	}
-}
-
-// Gather sets alpha to the circle's outgoing scaled amplitudes √n A_n of x, n = 1 … Top.
-func (s *System) Gather(alpha []complex128, x []float64) {
-	clear(alpha)
-	for i := range s.discs {
-		s.ports[i].gather(x[s.off[i]:s.off[i+1]], alpha)
-	}
-}
-
-// Spread adds to y what the circle's regular field with scaled amplitudes omega_n = √n conj(B_n) brings to the discs.
-func (s *System) Spread(y []float64, omega []complex128) {
-	for i := range s.discs {
-		s.ports[i].spread(omega, y[s.off[i]:s.off[i+1]])
-	}
+	alpha := s.alpha[:2*k*len(s.weight)]
+	s.gather(alpha, x, k)
+	s.reflect(alpha, k)
+	s.spread(y, alpha, k)
 }
 
 // apart returns c_i − c_j, no shorter than the two radii: overlapping discs count as touching.

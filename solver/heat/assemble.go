@@ -153,6 +153,16 @@ func (g *region) drop(y []float64) {
 	}
 }
 
+// lifts tells whether lift and drop do anything.
+func (g *region) lifts() bool {
+	for _, l := range g.laws {
+		if l != nil {
+			return true
+		}
+	}
+	return false
+}
+
 // product sets y = A x, using tmp of the same length.
 func (g *region) product(y, x, tmp []float64) {
 	copy(tmp, x)

@@ -90,8 +90,11 @@ func (w *Wall) check() {
 		shut := true
 		for _, s := range w.Sides {
 			shut = shut && s.Kind == Insulated
-			if s.Kind == Held && !good(s.Temp) {
+			if !good(s.Temp) {
 				panic(badNumber)
+			}
+			if s.Film < 0 || math.IsNaN(s.Film) {
+				panic(badFilm)
 			}
 		}
 		if shut {

@@ -82,7 +82,8 @@ const (
 // Side of a rectangle.
 type Side struct {
 	Kind SideKind
-	Temp float64
+	Temp float64 // of a Held side; of an Open one with a film of its own what that film leads to
+	Film float64 // Open: W/m²K of this side alone, towards Temp; 0: the wall's Film and Ambient
 }
 
 // Accuracy of a solution: draft, standard, fine (C = 0.7, 1, 1.5 of the order rule).

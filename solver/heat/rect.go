@@ -28,8 +28,11 @@ func newRectWall(p *Problem, fineness float64) *rectWall {
 	}
 	flat := 100 * math.Max(w.W, w.H) // a wall this round is flat to the parts
 	for i, s := range w.Sides {
-		film := w.Film
-		to := outline.Side{Kind: outline.Open, Film: film, Temp: w.Ambient}
+		film, toward := w.Film, w.Ambient
+		if s.Film != 0 {
+			film, toward = s.Film, s.Temp
+		}
+		to := outline.Side{Kind: outline.Open, Film: film, Temp: toward}
 		switch s.Kind {
 		case Insulated:
 			to, film = outline.Side{Kind: outline.Insulated}, 0

@@ -1,0 +1,39 @@
+package heat
+
+const badOutside = "heat: only film, ambient and sides can change outside"
+
+// Outside gives the wall other films and outside temperatures: Film, Ambient and Sides of w; the rest of w must be as in the Problem. What does
+// not depend on them is kept, so that a fixed point over a film costs little: a round wall's matrix stays, a rectangle's wall is written again.
+func (m *Model) Outside(w Wall) {
+	old := m.p.Wall
+	if w.Shape != old.Shape || w.R != old.R || w.W != old.W || w.H != old.H || len(w.Rings) != len(old.Rings) {
+		panic(badOutside)
+	}
+	w.Rings = old.Rings
+	w.check()
+	m.p.Wall = w
+	m.rises, m.floor = nil, nil
+	switch {
+	case m.top == nil: // a bare part reads the wall each time
+	case m.top.rect != nil:
+		factor, _, _ := m.set.Accuracy.settings()
+		m.top.rect = newRectWall(&m.p, factor)
+		if m.ready {
+			m.top.rect.write(m.top)
+		}
+	default:
+		m.top.wall.Outer = outerEnd(w.Film)
+		m.ready = m.ready && m.top.reflectAnew()
+	}
+}
+
+// reflectAnew takes over what the round wall now reflects besides the images; false if the images change as well or more harmonics come in
+// than the parts are mapped to.
+func (g *region) reflectAnew() bool {
+	c := g.newCircle()
+	if c.RhoInf != g.circle.RhoInf || len(c.Sigma) > g.sys.Top()+2 {
+		return false
+	}
+	g.circle.Sigma = c.Sigma
+	return true
+}
