@@ -22,7 +22,7 @@ func (m *Model) Outside(w Wall) {
 			m.top.rect.write(m.top)
 		}
 	default:
-		m.top.wall.Outer = outerEnd(w.Film)
+		m.top.wall.Outer = outerWall(m.top.k, m.top.wall.R, nil, w.Film).Outer
 		m.ready = m.ready && m.top.reflectAnew()
 	}
 }
