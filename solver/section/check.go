@@ -16,7 +16,18 @@ func Check(d *Document) []Problem {
 // check adds the problems of the values of d.
 func (r *report) check(d *Document) {
 	r.doc, r.checking = d, true
+	listed := len(d.Parts)
+	for _, b := range d.Builds {
+		listed += len(b.Parts)
+	}
+	if len(d.Parts) > MaxParts || listed > 8*MaxParts {
+		r.add(path("").key("parts"), "too-many-parts", fmt.Sprintf("the design lists %d parts, and at most %d are read", listed, MaxParts), "split it into several designs")
+		return
+	}
 	documentTable.check(r, *d, "")
+	if len(d.Builds) > MaxNamed {
+		return
+	}
 	checkHolderParts(r, d)
 	checkIDs(r, d.Parts, path("").key("parts"))
 	for i := range d.Builds {

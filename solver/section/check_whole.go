@@ -149,6 +149,9 @@ func checkLoads(r *report, d *Document) {
 			r.add(at.key("id"), "duplicate-id", "its id is also that of a load before it", "give one of them another id")
 		}
 		seen[l.ID] = true
+		if r.full() {
+			return
+		}
 		for j, id := range l.Conductors {
 			at := at.key("conductors").at(j)
 			switch kind, ok := kinds[id]; {

@@ -39,7 +39,7 @@ func isKind(r *report, n *yaml.Node, at path, want yaml.Kind, do string) bool {
 // pairs calls f for each pair of a mapping, and reports keys that are no words or that stand twice.
 func pairs(r *report, n *yaml.Node, at path, f func(key, value *yaml.Node)) {
 	lines := map[string]int{}
-	for i := 0; i+1 < len(n.Content); i += 2 {
+	for i := 0; i+1 < len(n.Content) && !r.full(); i += 2 {
 		key := n.Content[i]
 		if key.Kind != yaml.ScalarNode || isNull(key) {
 			r.addLine(at, key.Line, "wrong-type", "a key is not a word", "write keys as plain words")

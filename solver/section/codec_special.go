@@ -114,6 +114,10 @@ func (stockCodec) node(rows []StockRow) *yaml.Node {
 }
 
 func (stockCodec) check(r *report, rows []StockRow, at path) {
+	if len(rows) > MaxNamed {
+		r.add(at, "too-many", fmt.Sprintf("¤ has %d rows, and at most %d are read", len(rows), MaxNamed), "take it out: it is written anew on the next save")
+		return
+	}
 	seen := map[StockRow]bool{}
 	for _, row := range rows {
 		at := at.key(row.Group).key(row.ID)

@@ -81,6 +81,9 @@ func (t *table[T]) read(r *report, n *yaml.Node, at path) (v T) {
 		t.unknown(r, key, at)
 	})
 	for _, f := range t.fields {
+		if r.full() {
+			break
+		}
 		if f.must && !seen[f.key] && !r.spoilt[at.key(f.key)] {
 			r.add(at.key(f.key), "missing-key", "¤ is missing", "write it: "+t.what+" needs it")
 		}
@@ -169,6 +172,7 @@ func (p pointer[T]) check(r *report, v *T, at path) {
 type list[E any] struct {
 	elem  codec[E]
 	block bool // one line for each item
+	most  int  // 0: as many as there are
 }
 
 func (l list[E]) read(r *report, n *yaml.Node, at path) []E {
@@ -177,6 +181,9 @@ func (l list[E]) read(r *report, n *yaml.Node, at path) []E {
 	}
 	var out []E
 	for i, c := range n.Content {
+		if r.full() {
+			break
+		}
 		out = append(out, l.elem.read(r, c, at.at(i)))
 	}
 	return out
@@ -197,6 +204,10 @@ func (l list[E]) node(v []E) *yaml.Node {
 }
 
 func (l list[E]) check(r *report, v []E, at path) {
+	if l.most > 0 && len(v) > l.most {
+		r.add(at, "too-many", fmt.Sprintf("¤ has %d entries, and at most %d are read", len(v), l.most), "join some of them")
+		return
+	}
 	for i, e := range v {
 		l.elem.check(r, e, at.at(i))
 	}
@@ -236,6 +247,10 @@ func (d dict[E]) node(v []E) *yaml.Node {
 
 func (d dict[E]) check(r *report, v []E, at path) {
 	seen := map[string]bool{}
+	if len(v) > MaxNamed {
+		r.add(at, "too-many", fmt.Sprintf("¤ has %d entries, and at most %d are read", len(v), MaxNamed), "take out those that nothing uses")
+		return
+	}
 	for i := range v {
 		name := *d.name(&v[i])
 		if seen[name] {

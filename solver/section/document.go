@@ -8,6 +8,8 @@ const (
 	MaxParts   = 500      // parts after unfolding builds
 	MaxNesting = 6        // cables within cables
 	MaxBytes   = 16 << 20 // size of a file
+	MaxLayers  = 50       // around one part or in one wall
+	MaxNamed   = 2000     // builds, and materials of the document's own
 )
 
 // Opt is a value that a document may leave out. The zero Opt is "not written", which is never read as zero.

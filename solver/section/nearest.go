@@ -6,11 +6,17 @@ import (
 )
 
 // nearest returns the word of list that is spelt most like word, "" if none is near. Distance is the number of single letters to
-// add, drop, change or swap with the neighbour (optimal string alignment), letters compared without case.
+// add, drop, change or swap with the neighbour (optimal string alignment), letters compared without case; up to a third of the
+// letters may differ. A word without its unit ("inside" for "inside_mm") is near.
 func nearest(word string, list []string) string {
-	best, bestD := "", len(word)/3+2
+	word = strings.ToLower(word)
+	best, bestD := "", max(1, utf8.RuneCountInString(word)/3)+1
 	for _, w := range list {
-		if d := distance(strings.ToLower(word), strings.ToLower(w)); d < bestD && d < max(utf8.RuneCountInString(w), 2) {
+		d := distance(word, strings.ToLower(w))
+		if word != "" && strings.HasPrefix(w, word+"_") {
+			d = min(d, 1)
+		}
+		if d < bestD && d < utf8.RuneCountInString(w) {
 			best, bestD = w, d
 		}
 	}

@@ -41,10 +41,20 @@ func textFault(data []byte) *fault {
 			i += n
 		}
 		return &fault{"not-text", lineOf(data, i), "the file has bytes that are not UTF-8 text", "save it as UTF-8"}
+	case entries(data) > maxEntries:
+		return &fault{"too-large", 0, fmt.Sprintf("the file has more than %d entries, and a design of %d parts has far fewer", maxEntries, MaxParts), "open a design file"}
 	case len(bytes.TrimSpace(data)) == 0:
 		return &fault{"empty-file", 1, "the file is empty", "open a design file; its first line is `packrise: 1`"}
 	}
 	return nil
+}
+
+// maxEntries bounds what the YAML reader has to build: its tree takes a hundred times the memory of the text.
+const maxEntries = 300_000
+
+// entries is at least the number of nodes in a YAML text, give or take some.
+func entries(data []byte) int {
+	return bytes.Count(data, []byte(",")) + bytes.Count(data, []byte(":")) + bytes.Count(data, []byte("- ")) + bytes.Count(data, []byte("-\n"))
 }
 
 func lineOf(data []byte, i int) int { return 1 + bytes.Count(data[:i], []byte("\n")) }
@@ -100,23 +110,82 @@ var yamlLine = regexp.MustCompile(`^yaml: (?:line (\d+): )?(.*)$`)
 
 // yamlFault turns the YAML reader's error into a sentence for people.
 func yamlFault(data []byte, err error) *fault {
-	m := yamlLine.FindStringSubmatch(strings.SplitN(err.Error(), "\n", 2)[0])
 	f := &fault{rule: "not-yaml", what: "the file can't be read as YAML", do: "compare it with an example"}
+	m := yamlLine.FindStringSubmatch(strings.SplitN(err.Error(), "\n", 2)[0])
 	if m == nil {
 		return f
 	}
 	f.line, _ = strconv.Atoi(m[1])
-	lines := strings.Split(string(data), "\n")
-	for i := max(f.line-2, 0); i < min(f.line+1, len(lines)); i++ {
-		if indent := strings.TrimLeft(lines[i], " "); strings.HasPrefix(indent, "\t") {
-			f.line, f.what, f.do = i+1, "the line is indented with a tab", "indent with spaces"
-			return f
-		}
+	if strings.HasPrefix(m[2], "did not find") {
+		f.line++ // the YAML reader's parser counts from 0, its scanner from 1
+	}
+	if strings.HasSuffix(m[2], "indicator") || strings.HasSuffix(m[2], "key") {
+		f.line = badLine(data, f.line) // and of a block it names the beginning
+	}
+	f.line = max(f.line, 1)
+	line := strings.SplitN(string(data[offsetOf(data, f.line-1):]), "\n", 2)[0]
+	if strings.HasPrefix(strings.TrimLeft(line, " "), "\t") {
+		f.what, f.do = "the line is indented with a tab", "indent with spaces"
+		return f
 	}
 	f.what = "from here on the file is no YAML (" + clean(m[2]) + ")"
 	f.do = "look for a bracket or quote that is not closed, or a wrong indent"
-	if f.line >= len(lines)-1 {
+	if offsetOf(data, f.line) >= len(bytes.TrimRight(data, "\n")) || strings.Contains(m[2], "end of stream") {
 		f.do = "the file may be cut off: " + f.do
 	}
 	return f
+}
+
+// badLine finds the line at which a block goes wrong: the one after the longest beginning of the file that reads well, looked for
+// upwards from where reading stopped. said is taken where looking would take long.
+func badLine(data []byte, said int) int {
+	lines := &lineReader{data: data}
+	var doc yaml.Node
+	_ = yaml.NewDecoder(lines).Decode(&doc)
+	work := 4 << 20 // bytes
+	for k := lines.n - 1; k >= said; k-- {
+		end := offsetOf(data, k)
+		if work -= end + 1<<14; work < 0 {
+			break
+		}
+		if yaml.Unmarshal(data[:end], &doc) == nil {
+			return k + 1
+		}
+	}
+	return said
+}
+
+// lineReader hands out a line at a time, so that n tells how far somebody has read.
+type lineReader struct {
+	data []byte
+	n    int
+}
+
+func (r *lineReader) Read(p []byte) (int, error) {
+	if len(r.data) == 0 {
+		return 0, io.EOF
+	}
+	end := bytes.IndexByte(r.data, '\n') + 1
+	if end == 0 {
+		end = len(r.data)
+	}
+	k := copy(p, r.data[:end])
+	if k == end {
+		r.n++
+	}
+	r.data = r.data[k:]
+	return k, nil
+}
+
+// offsetOf returns where the line after the n-th begins.
+func offsetOf(data []byte, n int) int {
+	at := 0
+	for range n {
+		i := bytes.IndexByte(data[at:], '\n')
+		if i < 0 {
+			return len(data)
+		}
+		at += i + 1
+	}
+	return at
 }

@@ -64,10 +64,13 @@ func (r *report) addLine(at path, line int, rule, what, do string) {
 }
 
 func (r *report) put(at path, line int, rule, what, do string, ids []string) {
-	if len(r.found) < maxProblems {
+	if !r.full() {
 		r.found = append(r.found, finding{at, line, Problem{Rule: rule, IDs: ids, What: what, Do: do}})
 	}
 }
+
+// full tells whether more problems would not be heard: reading and checking may stop.
+func (r *report) full() bool { return len(r.found) >= maxProblems }
 
 func (r *report) spoil(at path) {
 	r.spoilt[at] = true
@@ -88,6 +91,9 @@ func (r *report) problems() []Problem {
 			p.Line = locate(r.root, f.at)
 		}
 		shown := "`" + key + "`"
+		if key == "" {
+			shown = "it"
+		}
 		p.What = strings.ReplaceAll(p.What, "¤", shown)
 		p.Do = strings.ReplaceAll(p.Do, "¤", shown)
 		if owner != "" {

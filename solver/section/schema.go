@@ -49,9 +49,9 @@ var documentTable = &table[Document]{
 		on("notes", func(d *Document) *string { return &d.Notes }, text{free: true}),
 		need(on("surroundings", func(d *Document) *Surroundings { return &d.Surroundings }, surroundingsTable)),
 		need(on("holder", func(d *Document) *Holder { return &d.Holder }, holderTable)),
-		on("parts", func(d *Document) *[]Part { return &d.Parts }, list[Part]{partTable, true}),
+		on("parts", func(d *Document) *[]Part { return &d.Parts }, list[Part]{partTable, true, 0}),
 		on("builds", func(d *Document) *[]Build { return &d.Builds }, dict[Build]{what: "a build", elem: buildTable, name: func(b *Build) *string { return &b.Name }}),
-		on("loads", func(d *Document) *[]Load { return &d.Loads }, list[Load]{loadTable, true}),
+		on("loads", func(d *Document) *[]Load { return &d.Loads }, list[Load]{loadTable, true, 0}),
 		on("materials", func(d *Document) *[]Material { return &d.Materials },
 			dict[Material]{what: "a material", elem: materialTable, name: func(m *Material) *string { return &m.Name }, rules: checkMaterialName}),
 		on("stock_used", func(d *Document) *[]StockRow { return &d.StockUsed }, stockCodec{}),
@@ -81,7 +81,7 @@ var holderTable = &table[Holder]{
 		on("height_mm", func(h *Holder) *Opt[float64] { return &h.HeightMM }, optNumber{positive}),
 		on("stock", func(h *Holder) *string { return &h.Stock }, text{}),
 		on("sides", func(h *Holder) *Sides { return &h.Sides }, optional[Sides]{sidesTable}),
-		on("layers", func(h *Holder) *[]Layer { return &h.Layers }, list[Layer]{layerTable, false}),
+		on("layers", func(h *Holder) *[]Layer { return &h.Layers }, list[Layer]{layerTable, false, MaxLayers}),
 		on("fill", func(h *Holder) *string { return &h.Fill }, text{}),
 		on("clearance_mm", func(h *Holder) *Opt[float64] { return &h.ClearanceMM }, optNumber{notNegative}),
 	},
@@ -117,7 +117,7 @@ var partTable = &table[Part]{
 		on("bore_mm", func(p *Part) *Opt[float64] { return &p.BoreMM }, optNumber{positive}),
 		on("bore", func(p *Part) *Bore { return &p.Bore }, boreCodec{}),
 		on("material", func(p *Part) *string { return &p.Material }, text{}),
-		on("layers", func(p *Part) *[]Layer { return &p.Layers }, list[Layer]{layerTable, false}),
+		on("layers", func(p *Part) *[]Layer { return &p.Layers }, list[Layer]{layerTable, false, MaxLayers}),
 		on("type", func(p *Part) *string { return &p.Type }, text{}),
 		on("role", func(p *Part) *string { return &p.Role }, oneOf{what: "role", words: roles}),
 		on("at_mm", func(p *Part) *Opt[Point] { return &p.At }, place{}),
@@ -145,7 +145,7 @@ var buildTable = &table[Build]{
 	what: "a build", block: true,
 	fields: []field[Build]{
 		need(on("holder", func(b *Build) *Holder { return &b.Holder }, inline[Holder]{holderTable})),
-		on("parts", func(b *Build) *[]Part { return &b.Parts }, list[Part]{partTable, true}),
+		on("parts", func(b *Build) *[]Part { return &b.Parts }, list[Part]{partTable, true, 0}),
 	},
 }
 
@@ -153,7 +153,7 @@ var loadTable = &table[Load]{
 	what: "a load",
 	fields: []field[Load]{
 		need(on("id", func(l *Load) *string { return &l.ID }, ident{})),
-		need(on("conductors", func(l *Load) *[]string { return &l.Conductors }, list[string]{text{}, false})),
+		need(on("conductors", func(l *Load) *[]string { return &l.Conductors }, list[string]{text{}, false, 0})),
 		currentField(),
 		on("heat_w_m", func(l *Load) *Opt[float64] { return &l.HeatWM }, optNumber{notNegative}),
 		on("frequency_hz", func(l *Load) *Opt[float64] { return &l.FrequencyHz }, optNumber{notNegative}),

@@ -1,0 +1,320 @@
+package section
+
+import (
+	"fmt"
+	"strings"
+	"testing"
+)
+
+// Three good lines: what follows them begins on line 4.
+const head = "packrise: 1\nsurroundings: {kind: fixed-wall, ambient_c: 30}\nholder: {kind: jacket, inside_mm: 10}\n"
+
+// bad is a text with all the problems that it has, in the order of the file.
+type bad struct {
+	name, text string
+	want       []wanted
+}
+
+type wanted struct {
+	line      int
+	rule      string
+	fragments string // parts of the sentence, between |
+}
+
+func core(id, more string) string {
+	return "  - {id: " + id + ", kind: core, conductor: {size: 12 AWG}" + more + "}\n"
+}
+
+func wholeFiles() []bad {
+	return []bad{
+		{"empty", "", []wanted{{1, "empty-file", "empty|packrise: 1"}}},
+		{"blank", "  \n\n", []wanted{{1, "empty-file", "empty"}}},
+		{"comments alone", "# hello\n", []wanted{{1, "empty-file", "only comments"}}},
+		{"null", "~\n", []wanted{{1, "wrong-type", "holds nothing and is no design|packrise: 1"}}},
+		{"a list", "- 1\n", []wanted{{1, "wrong-type", "holds a list and is no design"}}},
+		{"prose", "Dear reader\n", []wanted{{1, "wrong-type", "the single value Dear reader"}}},
+		{"binary", "packrise: 1\n\x00\x01", []wanted{{2, "not-text", "binary"}}},
+		{"latin 1", "packrise: 1\ntitle: caf\xe9\n", []wanted{{2, "not-text", "not UTF-8|save it as UTF-8"}}},
+		{"utf-16", "\xff\xfep\x00a\x00", []wanted{{1, "not-text", "UTF-16"}}},
+		{"other yaml", "name: x\nversion: 2\n", []wanted{{1, "missing-key", "`packrise` is missing|no design"}}},
+		{"two documents", small + "---\n" + small, []wanted{{6, "many-documents", "second YAML document"}}},
+		{"newer version", "packrise: 2\nwhatever: x\n", []wanted{{1, "newer-version", "format version 2|up to 1|newer Packrise"}}},
+		{"version 0", "packrise: 0\n", []wanted{{1, "version", "`packrise` is 0|write `packrise: 1`"}}},
+		{"version 1.5", "packrise: 1.5\n", []wanted{{1, "version", "1.5"}}},
+		{"version text", "packrise: one\n", []wanted{{1, "wrong-type", "holds one where a number belongs"}}},
+		{"version huge", "packrise: 1e300\n", []wanted{{1, "version", "1e+300"}}},
+		{"cut off in a bracket", head + "parts:\n  - {id: L1, kind: co", []wanted{{5, "not-yaml", "no YAML|may be cut off"}}},
+		{"cut off in a quote", head + "title: \"abc\nparts:\n", []wanted{{4, "not-yaml", "no YAML|may be cut off"}}},
+		{"tab", head + "parts:\n\t- {id: L1}\n", []wanted{{5, "not-yaml", "indented with a tab|spaces"}}},
+		{"wrong indent", head + "parts:\n  - id: L1\n   kind: core\nloads: []\ntitle: x\n", []wanted{{6, "not-yaml", "no YAML|wrong indent"}}},
+		{"colon in text", head + "title: a: b\nnotes: x\nparts: []\nloads: []\n", []wanted{{4, "not-yaml", "no YAML"}}},
+		{"anchor", head + "title: &t x\n", []wanted{{4, "alias", "anchor"}}},
+		{"alias bomb", head + "a: &a [x,x]\nb: &b [*a,*a]\n", []wanted{{4, "alias", "anchor (&)"}}},
+		{"merge key", head + "<<: {title: x}\n", []wanted{{4, "unknown-key", "`<<`"}}},
+		{"tag", head + "title: !!binary aGk=\n", []wanted{{4, "tag", "!!binary"}}},
+		{"nothing else", "packrise: 1\n", []wanted{{1, "missing-key", "`surroundings` is missing"}, {1, "missing-key", "`holder` is missing"}}},
+		{"5000 parts", head + "parts:\n" + strings.Repeat(core("x", ""), 5000), []wanted{{4, "too-many-parts", "5000 parts|at most 500"}}},
+		{"a part that is none", head + "parts: [3]\n", []wanted{{4, "wrong-type", "part number 1|the single value 3|a part is a mapping"}}},
+	}
+}
+
+func badKeys() []bad {
+	return []bad{
+		{"misspelt top key", head + "titel: x\n", []wanted{{4, "unknown-key", "unknown key `titel`|did you mean `title`?"}}},
+		{"unknown key", head + "colour: red\n", []wanted{{4, "unknown-key", "unknown key `colour`|take it out; the keys here are packrise, title,"}}},
+		{"misspelt required key", strings.Replace(head, "ambient_c", "ambiente_c", 1), []wanted{{2, "unknown-key", "`surroundings.ambiente_c`|did you mean `ambient_c`?"}}},
+		{
+			"misspelt key of a layer", head + "parts:\n" + core("L1", ", layers: [{material: pvc, thicknes_mm: 0.5}]"),
+			[]wanted{{5, "unknown-key", "part L1|`layers[0].thicknes_mm`|`thickness_mm`"}},
+		},
+		{"duplicate key", head + "title: a\nnotes: b\ntitle: c\n", []wanted{{6, "duplicate-key", "`title` stands twice, first on line 4"}}},
+		{"duplicate version", head + "packrise: 1\n", []wanted{{4, "duplicate-key", "first on line 1"}}},
+		{"duplicate material", head + "materials:\n  a: {k_w_mk: 1}\n  a: {k_w_mk: 2}\n", []wanted{{6, "duplicate-key", "material a|line 5"}}},
+		{"key that is a list", head + "[a, b]: x\n", []wanted{{4, "wrong-type", "a key is not a word"}}},
+		{
+			"later: altitude", strings.Replace(head, "30}", "30, altitude_m: 800}", 1),
+			[]wanted{{2, "later-key", "key `surroundings.altitude_m` belongs to surroundings and shapes that this version does not read yet; take it out"}},
+		},
+		{"later: cases", head + "cases: []\n", []wanted{{4, "later-key", "key `cases` belongs to ratings that"}}},
+		{"later: prices", head + "prices: {}\n", []wanted{{4, "later-key", "drawings and prices"}}},
+		{"later: route", head + "route: []\n", []wanted{{4, "later-key", "time, length and electricity"}}},
+		{"later: sector", head + "parts:\n  - {id: S, kind: core, conductor: {shape: sector, size: 4/0}}\n", []wanted{{5, "later-key", "part S|`conductor.shape`"}}},
+		{"later: screen", head + "parts:\n" + core("L1", ", layers: [{material: copper, thickness_mm: 0.2, screen: {}}]"), []wanted{{5, "later-key", "`layers[0].screen`"}}},
+		{"later: pinned", head + "parts:\n" + core("L1", ", pinned: true"), []wanted{{5, "later-key", "`pinned`|ratings"}}},
+		{"later: system", head + "parts:\n" + core("L1", "") + "loads:\n  - {id: a, conductors: [L1], current_a: 1, system: dc}\n", []wanted{{7, "later-key", "load a|`system`|ratings"}}},
+		{"decimal comma in braces", strings.Replace(head, "inside_mm: 10", "inside_mm: 10,5", 1), []wanted{{3, "unknown-key", "number `holder.5`|decimal point"}}},
+	}
+}
+
+func badNumbers() []bad {
+	jacket := func(v string) string { return strings.Replace(head, "inside_mm: 10", "inside_mm: "+v, 1) }
+	part := func(more string) string { return head + "parts:\n" + core("L1", more) }
+	return []bad{
+		{"text", jacket("wide"), []wanted{{3, "wrong-type", "`holder.inside_mm` holds wide where a number belongs|write a number like 1.5"}}},
+		{"quoted", jacket(`"10"`), []wanted{{3, "wrong-type", `the text "10"|without quotes`}}},
+		{"with unit", jacket("10 mm"), []wanted{{3, "wrong-type", "holds 10 mm|the number alone|the key already names the unit"}}},
+		{"comma in a block", strings.Replace(head, "{kind: jacket, inside_mm: 10}", "\n  kind: jacket\n  inside_mm: 10,5", 1), []wanted{{5, "wrong-type", "holds 10,5|write 10.5"}}},
+		{"empty", jacket(""), []wanted{{3, "wrong-type", "holds nothing where a number belongs|take the key out"}}},
+		{"a list", jacket("[1]"), []wanted{{3, "wrong-type", "holds a list where a number belongs"}}},
+		{"true", jacket("true"), []wanted{{3, "wrong-type", "holds true where"}}},
+		{"hexadecimal", jacket("0x1F"), []wanted{{3, "wrong-type", "holds 0x1F|a number like 1.5"}}},
+		{"octal", jacket("010"), []wanted{{3, "wrong-type", "holds 010|write 10"}}},
+		{"underscore", jacket("1_000"), []wanted{{3, "wrong-type", "holds 1_000"}}},
+		{"nan", jacket(".nan"), []wanted{{3, "not-finite", "is .nan, not a finite number"}}},
+		{"infinite", jacket("-.inf"), []wanted{{3, "not-finite", "-.inf"}}},
+		{"overflow", jacket("1e999"), []wanted{{3, "not-finite", "1e999, beyond any finite number"}}},
+		{"absurd", jacket("1e12"), []wanted{{3, "number-range", "is 1000000000000, which is beyond anything meant"}}},
+		{"tiny", jacket("1e-300"), []wanted{{3, "number-range", "tinier than anything meant"}}},
+		{"zero", jacket("0"), []wanted{{3, "number-range", "`holder.inside_mm` is 0, but must be above zero|write a number above zero"}}},
+		{"negative", jacket("-1.5"), []wanted{{3, "number-range", "is −1.5, but must be above zero"}}},
+		{"ambient below zero kelvin", strings.Replace(head, "ambient_c: 30", "ambient_c: -300", 1), []wanted{{2, "number-range", "is −300|below absolute zero"}}},
+		{"film of zero", "packrise: 1\nsurroundings: {kind: fixed-film, ambient_c: 30, film_w_m2k: 0}\nholder: {kind: open-bundle}\n", []wanted{{2, "number-range", "film_w_m2k` is 0, but must be above zero"}}},
+		{"negative thickness", part(", layers: [{material: pvc, thickness_mm: -0.5}]"), []wanted{{5, "number-range", "part L1: `layers[0].thickness_mm` is −0.5, but must be above zero"}}},
+		{"no thickness", part(", layers: [{material: pvc}]"), []wanted{{5, "missing-key", "part L1: `layers[0].thickness_mm` is missing|a layer needs it"}}},
+		{"no material", part(", layers: [{thickness_mm: 1}]"), []wanted{{5, "missing-key", "`layers[0].material` is missing"}}},
+		{"one coordinate", part(", at_mm: [1]"), []wanted{{5, "wrong-type", "`at_mm` holds 1 values where two numbers belong|[x, y]"}}},
+		{"three coordinates", part(", at_mm: [1,5, 2]"), []wanted{{5, "wrong-type", "holds 3 values|decimal points"}}},
+		{"coordinate of text", part(", at_mm: [1, b]"), []wanted{{5, "wrong-type", "`at_mm[1]` holds b"}}},
+		{"place of text", part(", at_mm: here"), []wanted{{5, "wrong-type", "holds the single value here where two numbers belong"}}},
+		{"limit", part(", limit_c: hot"), []wanted{{5, "wrong-type", "`limit_c` holds hot"}}},
+		{"emissivity", head + "materials: {a: {k_w_mk: 1, emissivity: 1.2}}\n", []wanted{{4, "number-range", "material a: `emissivity` is 1.2, but must lie above 0"}}},
+		{"absorptivity", head + "materials: {a: {k_w_mk: 1, absorptivity: -1}}\n", []wanted{{4, "number-range", "`absorptivity` is −1, but must lie between 0 and 1"}}},
+		{"gas", head + "materials: {a: {k_w_mk: 1, gas: perhaps}}\n", []wanted{{4, "wrong-type", "`gas` holds the single value perhaps where true or false belongs"}}},
+		{"no conductivity", head + "materials: {a: {emissivity: 0.9}}\n", []wanted{{4, "missing-key", "material a: `k_w_mk` is missing"}}},
+		{"air given values", head + "materials: {air: {k_w_mk: 1}}\n", []wanted{{4, "reserved-name", "material air|always real air|another name"}}},
+	}
+}
+
+func badKinds() []bad {
+	holder := func(h string) string {
+		return strings.Replace(head, "{kind: jacket, inside_mm: 10}", h, 1)
+	}
+	return []bad{
+		{"still air", strings.Replace(head, "fixed-wall", "still-air", 1), []wanted{{2, "not-built", "surroundings kind `still-air` is not built yet in this version; use fixed-film with film_w_m2k"}}},
+		{"buried", strings.Replace(head, "fixed-wall", "buried", 1), []wanted{{2, "not-built", "`buried` is not built yet|use fixed-wall"}}},
+		{"misspelt surroundings", strings.Replace(head, "fixed-wall", "fixed-wal", 1), []wanted{{2, "unknown-word", "surroundings kind fixed-wal is unknown|did you mean `fixed-wall`? write one of fixed-film, fixed-wall"}}},
+		{"no kind", strings.Replace(head, "kind: fixed-wall, ", "", 1), []wanted{{2, "missing-key", "`surroundings.kind` is missing"}}},
+		{"no ambient", strings.Replace(head, ", ambient_c: 30", "", 1), []wanted{{2, "missing-key", "`surroundings.ambient_c` is missing"}}},
+		{"no film", strings.Replace(head, "fixed-wall", "fixed-film", 1), []wanted{{2, "missing-key", "`surroundings.film_w_m2k` is missing|needs a coefficient in W/m²K"}}},
+		{"film on a wall", strings.Replace(head, "30}", "30, film_w_m2k: 3}", 1), []wanted{{2, "key-of-kind", "does not belong to kind fixed-wall"}}},
+		{"apart", holder("{kind: apart}"), []wanted{{3, "not-built", "holder kind `apart` is not built yet"}}},
+		{"tray", holder("{kind: tray}"), []wanted{{3, "unknown-word", "holder kind tray is unknown|`wireway`"}}},
+		{"no inside", holder("{kind: conduit}"), []wanted{{3, "missing-key", "`holder.inside_mm` is missing|or stock"}}},
+		{"no height", holder("{kind: wireway, width_mm: 10}"), []wanted{{3, "missing-key", "`holder.height_mm` is missing"}}},
+		{"flat jacket", holder("{kind: jacket, width_mm: 10, height_mm: 4}"), []wanted{{3, "later-key", "flat jacket|not read yet|inside_mm"}}},
+		{"round wireway", holder("{kind: wireway, width_mm: 10, height_mm: 4, inside_mm: 3}"), []wanted{{3, "key-of-kind", "`holder.inside_mm` does not belong to kind wireway"}}},
+		{"conduit with sides", holder("{kind: conduit, inside_mm: 10, sides: {left: insulated}}"), []wanted{{3, "key-of-kind", "`holder.sides`|no rectangle"}}},
+		{"bundle with layers", holder("{kind: open-bundle, layers: [{material: a, thickness_mm: 1}]}"), []wanted{{3, "key-of-kind", "`holder.layers`|no wall"}}},
+		{"stock and size", holder("{kind: conduit, stock: emt-1, inside_mm: 20}"), []wanted{{3, "one-of", "the holder has both stock and a size"}}},
+		{"side", holder("{kind: wireway, width_mm: 9, height_mm: 9, sides: {left: closed}}"), []wanted{{3, "unknown-word", "side closed is unknown|`insulated`"}}},
+		{"side without temperature", holder("{kind: wireway, width_mm: 9, height_mm: 9, sides: {left: {}}}"), []wanted{{3, "missing-key", "`holder.sides.left.fixed_c` is missing"}}},
+		{"unknown side", holder("{kind: wireway, width_mm: 9, height_mm: 9, sides: {up: open}}"), []wanted{{3, "unknown-key", "`holder.sides.up`"}}},
+		{"two bare parts", holder("{kind: none}") + "parts:\n" + core("L1", "") + core("L2", ""), []wanted{{3, "one-bare-part", "there are 2|open-bundle"}}},
+		{"fill of nothing", holder("{kind: none, fill: air}"), []wanted{{3, "key-of-kind", "`holder.fill`|encloses nothing"}}},
+	}
+}
+
+func badParts() []bad {
+	part := func(p string) string { return head + "parts:\n  - {" + p + "}\n" }
+	return []bad{
+		{"no id", part("kind: core, stock: x"), []wanted{{5, "missing-key", "part number 1: `id` is missing"}}},
+		{"empty id", part(`id: "", kind: core, stock: x`), []wanted{{5, "empty", "part number 1: `id` is empty"}}},
+		{"slash", part("id: C1/L1, kind: core, stock: x"), []wanted{{5, "bad-id", "the id C1/L1 holds a /|without /"}}},
+		{"space", part(`id: "L1 ", kind: core, stock: x`), []wanted{{5, "bad-name", "begins or ends with a space"}}},
+		{"line break in an id", part(`id: "L\n1", kind: core, stock: x`), []wanted{{5, "bad-name", "part L·1|line break"}}},
+		{"no kind", part("id: L1, stock: x"), []wanted{{5, "missing-key", "part L1: `kind` is missing"}}},
+		{"unknown kind", part("id: L1, kind: cores"), []wanted{{5, "unknown-word", "part kind cores is unknown|`core`"}}},
+		{"duplicate id", head + "parts:\n" + core("L1", "") + core("L2", "") + core("L1", ""), []wanted{{7, "duplicate-id", "part L1: its id is also that of the part on line 5"}}},
+		{"no conductor", part("id: L1, kind: core"), []wanted{{5, "missing-key", "`conductor` is missing|or stock"}}},
+		{"stock and conductor", part("id: L1, kind: core, stock: x, conductor: {size: 4/0}, type: thhn"), []wanted{{5, "one-of", "stock, which brings conductor, layers and type, and also conductor and type|either stock"}}},
+		{"no size", part("id: L1, kind: core, conductor: {metal: copper}"), []wanted{{5, "one-of", "`conductor` has none of size, area_mm2 and diameter_mm"}}},
+		{"two sizes", part("id: L1, kind: core, conductor: {size: 4/0, area_mm2: 3}"), []wanted{{5, "one-of", "`conductor` has size and area_mm2|keep one"}}},
+		{"bare size", part("id: L1, kind: core, conductor: {size: 2.5}"), []wanted{{5, "bad-size", `"2.5" can be gauge or mm²|"2.5 mm2"`}}},
+		{"odd size", part("id: L1, kind: core, conductor: {size: thick}"), []wanted{{5, "bad-size", "not a conductor size|12 AWG"}}},
+		{"metal", part("id: L1, kind: core, conductor: {size: 4/0, metal: aluminum}"), []wanted{{5, "unknown-word", "metal aluminum is unknown|`aluminium`"}}},
+		{"class", part("id: L1, kind: core, conductor: {size: 4/0, class: 5}"), []wanted{{5, "unknown-word", "class 5 is unknown|`flexible`"}}},
+		{"role", part("id: L1, kind: core, stock: x, role: ground"), []wanted{{5, "unknown-word", "role ground|`earth`"}}},
+		{"rod that carries", part("id: F, kind: rod, diameter_mm: 4, material: pe, conductor: {size: 4/0}"), []wanted{{5, "key-of-kind", "part F: `conductor` belongs to a core, and this is a rod"}}},
+		{"rod without", part("id: F, kind: rod"), []wanted{{5, "missing-key", "`diameter_mm` is missing"}, {5, "missing-key", "`material` is missing"}}},
+		{"bore too wide", part("id: F, kind: rod, diameter_mm: 4, material: pe, bore_mm: 4"), []wanted{{5, "number-range", "`bore_mm` is 4, not less than the rod's diameter of 4"}}},
+		{"bore of no size", part("id: F, kind: rod, diameter_mm: 4, material: pe, bore: air"), []wanted{{5, "missing-key", "`bore_mm` is missing"}}},
+		{"turned core", part("id: L1, kind: core, stock: x, turn_deg: 3"), []wanted{{5, "key-of-kind", "`turn_deg` turns a cable"}}},
+		{"cable without build", part("id: C1, kind: cable"), []wanted{{5, "missing-key", "`build` is missing"}}},
+		{"cable of unknown build", part("id: C1, kind: cable, build: pari") + "builds:\n  pair: {holder: {kind: open-bundle}}\n", []wanted{{5, "unknown-build", "there is no build pari|did you mean pair?"}}},
+		{"cable with layers", part("id: C1, kind: cable, build: b, layers: [{material: a, thickness_mm: 1}]") + "builds: {b: {holder: {kind: open-bundle}}}\n", []wanted{{5, "key-of-kind", "`layers` belongs to a core or rod"}}},
+		{"build without holder", head + "builds:\n  b: {parts: []}\n", []wanted{{5, "missing-key", "build b: `holder` is missing"}}},
+		{"square build", head + "builds:\n  b: {holder: {kind: wireway, width_mm: 3, height_mm: 3}}\n", []wanted{{5, "key-of-kind", "build b: its holder is of kind wireway|round"}}},
+		{"part of a build", part("id: C1, kind: cable, build: b") + "builds:\n  b:\n    holder: {kind: open-bundle}\n    parts:\n      - {id: a, kind: core}\n", []wanted{{10, "missing-key", "part a of build b: `conductor` is missing"}}},
+		{"build in itself", head + "builds:\n  b:\n    holder: {kind: open-bundle}\n    parts: [{id: c, kind: cable, build: b}]\n", []wanted{{5, "endless-build", "build b: it contains itself (b → b)"}}},
+		{
+			"builds in each other", head + "builds:\n  a: {holder: {kind: open-bundle}, parts: [{id: c, kind: cable, build: b}]}\n  b: {holder: {kind: open-bundle}, parts: [{id: c, kind: cable, build: a}]}\n",
+			[]wanted{{5, "endless-build", "build a: it contains itself (a → b → a)"}},
+		},
+		{"nested too deep", head + "parts: [{id: c, kind: cable, build: b6}]\nbuilds:\n" + nest(6), []wanted{{4, "too-deep", "cables are nested 7 deep, and at most 6"}}},
+		{"bomb of builds", head + "parts: [{id: c, kind: cable, build: b5}]\nbuilds:\n" + bomb(5, 100), []wanted{{4, "too-many-parts", "over a million parts|at most 500"}}},
+	}
+}
+
+// nest makes builds b0 to bn, each holding a cable of the one before.
+func nest(n int) string {
+	s := "  b0: {holder: {kind: open-bundle}}\n"
+	for i := 1; i <= n; i++ {
+		s += fmt.Sprintf("  b%d: {holder: {kind: open-bundle}, parts: [{id: c, kind: cable, build: b%d}]}\n", i, i-1)
+	}
+	return s
+}
+
+// bomb makes builds b0 to bn, each holding so many cables of the one before.
+func bomb(n, each int) string {
+	s := "  b0: {holder: {kind: open-bundle}}\n"
+	for i := 1; i <= n; i++ {
+		s += fmt.Sprintf("  b%d:\n    holder: {kind: open-bundle}\n    parts:\n", i)
+		for j := range each {
+			s += fmt.Sprintf("      - {id: c%d, kind: cable, build: b%d}\n", j, i-1)
+		}
+	}
+	return s
+}
+
+func badLoads() []bad {
+	base := head + "parts:\n" + core("L1", "") + core("L2", "") +
+		"  - {id: F, kind: rod, diameter_mm: 3, material: pe}\n  - {id: C1, kind: cable, build: b}\n" +
+		"builds: {b: {holder: {kind: open-bundle}, parts: [{id: L9, kind: core, stock: x}]}}\nloads:\n"
+	load := func(lines ...string) string { return base + "  - {" + strings.Join(lines, "}\n  - {") + "}\n" }
+	return []bad{
+		{"unknown conductor", load("id: a, conductors: [L1, L3], current_a: 3"), []wanted{{11, "unknown-conductor", "load a: there is no conductor L3|did you mean L1?"}}},
+		{"far from any", load("id: a, conductors: [welding], current_a: 3"), []wanted{{11, "unknown-conductor", "no conductor welding|add a part"}}},
+		{"nested by its own name", load("id: a, conductors: [L9], current_a: 3"), []wanted{{11, "unknown-conductor", "did you mean C1/L9?"}}},
+		{"unknown nested", load("id: a, conductors: [C1/L8], current_a: 3"), []wanted{{11, "unknown-conductor", "did you mean C1/L9?"}}},
+		{"rod", load("id: a, conductors: [F], current_a: 3"), []wanted{{11, "not-a-conductor", "F is a rod and no conductor|take it out of the load"}}},
+		{"cable", load("id: a, conductors: [C1], current_a: 3"), []wanted{{11, "not-a-conductor", "C1 is a cable and no conductor|such as C1/L9"}}},
+		{"twice in one", load("id: a, conductors: [L1, L1], current_a: 3"), []wanted{{11, "loaded-twice", "conductor L1 is already in load a"}}},
+		{"in two", load("id: a, conductors: [L1], current_a: 3", "id: b, conductors: [L1], heat_w_m: 3"), []wanted{{12, "loaded-twice", "load b: conductor L1 is already in load a"}}},
+		{"same id", load("id: a, conductors: [L1], current_a: 3", "id: a, conductors: [L2], heat_w_m: 3"), []wanted{{12, "duplicate-id", "load a: its id is also"}}},
+		{"nothing", load("id: a, conductors: [L1]"), []wanted{{11, "one-of", "neither current_a nor heat_w_m|current_a: unknown"}}},
+		{"both", load("id: a, conductors: [L1], current_a: unknown, heat_w_m: 0"), []wanted{{11, "one-of", "both current_a and heat_w_m"}}},
+		{"negative", load("id: a, conductors: [L1], current_a: -3"), []wanted{{11, "number-range", "load a: `current_a` is −3, but must not be negative"}}},
+		{"negative heat", load("id: a, conductors: [L1], heat_w_m: -3"), []wanted{{11, "number-range", "`heat_w_m` is −3"}}},
+		{"misspelt unknown", load("id: a, conductors: [L1], current_a: unknwon"), []wanted{{11, "wrong-type", "holds unknwon|the word unknown"}}},
+		{"with unit", load("id: a, conductors: [L1], current_a: 16 A"), []wanted{{11, "wrong-type", "holds 16 A|the number alone"}}},
+		{"no conductors", load("id: a, current_a: 3"), []wanted{{11, "missing-key", "`conductors` is missing"}}},
+		{"empty conductors", load("id: a, conductors: [], current_a: 3"), []wanted{{11, "missing-key", "`conductors` is missing or empty"}}},
+		{"conductors of one word", load("id: a, conductors: L1, current_a: 3"), []wanted{{11, "wrong-type", "holds the single value L1|a list"}}},
+		{"frequency of heat", load("id: a, conductors: [L1], heat_w_m: 3, frequency_hz: 50"), []wanted{{11, "key-of-kind", "`frequency_hz` belongs to a current"}}},
+		{"frequency", load("id: a, conductors: [L1], current_a: 3, frequency_hz: -50"), []wanted{{11, "number-range", "`frequency_hz` is −50"}}},
+		{"no id", load("conductors: [L1], current_a: 3"), []wanted{{11, "missing-key", "load number 1: `id` is missing"}}},
+		{"stock row", head + "stock_used: {material: {pvc: 3}}\n", []wanted{{4, "wrong-type", "`stock_used.material.pvc`|written anew on the next save"}}},
+		{"stock row twice", head + "stock_used: {material: {pvc: {k: 1, k: 2}}}\n", []wanted{{4, "duplicate-key", "stands twice"}}},
+	}
+}
+
+func TestBadInput(t *testing.T) {
+	for _, group := range [][]bad{wholeFiles(), badKeys(), badNumbers(), badKinds(), badParts(), badLoads()} {
+		for _, c := range group {
+			t.Run(c.name, func(t *testing.T) { checkBad(t, c) })
+		}
+	}
+}
+
+func checkBad(t *testing.T, c bad) {
+	d, problems := Read([]byte(c.text))
+	if d != nil {
+		t.Error("a document comes back")
+	}
+	if len(problems) != len(c.want) {
+		t.Fatalf("%d problems: %v; want %d", len(problems), problems, len(c.want))
+	}
+	for i, w := range c.want {
+		p := problems[i]
+		if p.Line != w.line || p.Rule != w.rule {
+			t.Errorf("line %d, rule %s; want %d, %s: %s", p.Line, p.Rule, w.line, w.rule, p.Sentence())
+		}
+		for _, f := range strings.Split(w.fragments, "|") {
+			if !strings.Contains(p.Sentence(), f) {
+				t.Errorf("%q lacks %q", p.Sentence(), f)
+			}
+		}
+		if p.Do == "" || strings.HasSuffix(p.Sentence(), ".") || strings.ContainsAny(p.Sentence(), "\n¤") {
+			t.Errorf("no proper sentence: %q", p.Sentence())
+		}
+	}
+}
+
+// All problems of a file come at once, in its order.
+func TestAllProblemsAtOnce(t *testing.T) {
+	text := "packrise: 1\ntitel: x\nsurroundings: {kind: still-air, ambient_c: warm}\nholder: {kind: conduit}\nparts:\n" +
+		"  - {id: L1, kind: core, conductor: {size: 3}, layers: [{material: pvc, thickness_mm: 0}]}\n  - {id: L1, kind: rod}\nloads:\n  - {id: a, conductors: [L5]}\n"
+	_, problems := Read([]byte(text))
+	var got []string
+	for _, p := range problems {
+		got = append(got, fmt.Sprintf("%d %s %v %s", p.Line, p.Rule, p.IDs, p.Key))
+	}
+	want := []string{
+		"2 unknown-key [] titel", "3 wrong-type [] surroundings.ambient_c", "3 not-built [] surroundings.kind", "4 missing-key [] holder.inside_mm",
+		"6 bad-size [L1] conductor.size", "6 number-range [L1] layers[0].thickness_mm", "7 missing-key [L1] diameter_mm", "7 missing-key [L1] material", "7 duplicate-id [L1] id",
+		"9 one-of [a] ", "9 unknown-conductor [L5] conductors[0]",
+	}
+	if strings.Join(got, "\n") != strings.Join(want, "\n") {
+		t.Errorf("got\n%s\nwant\n%s", strings.Join(got, "\n"), strings.Join(want, "\n"))
+	}
+	if s := problems[0].At("a.yaml"); s != "a.yaml:2: unknown key `titel`; did you mean `title`?" {
+		t.Error(s)
+	}
+}
+
+// Parts of a build are named by where they stand in the section.
+func TestProblemOfABuildNamesItsPlaces(t *testing.T) {
+	_, problems := Read([]byte(head + "parts:\n  - {id: C1, kind: cable, build: b}\n  - {id: C2, kind: cable, build: b}\n" +
+		"builds:\n  b: {holder: {kind: open-bundle}, parts: [{id: a, kind: core, conductor: {size: 4/0}, limit_c: -999}]}\n"))
+	if len(problems) != 1 || strings.Join(problems[0].IDs, " ") != "C1/a C2/a" || problems[0].Key != "limit_c" {
+		t.Errorf("%+v", problems)
+	}
+}
+
+// A file full of complaints does not fill the memory.
+func TestProblemsAreBounded(t *testing.T) {
+	_, problems := Read([]byte(head + strings.Repeat("materials_: x\n", 1) + "loads:\n" + strings.Repeat("  - {bad: 1}\n", 5000)))
+	if len(problems) != maxProblems {
+		t.Errorf("%d problems; want %d", len(problems), maxProblems)
+	}
+}
