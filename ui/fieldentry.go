@@ -16,8 +16,8 @@ type fieldEntry struct {
 	say    func(understood string, err error) // beside the entry, while typing
 	after  func(how fieldEnd)                 // editing has ended; nil: the entry stays
 	about  func(text string)                  // what the entry takes, while it has the focus
+	steps  bool                               // the arrows go to the neighbours
 	ending bool
-	menu   *widget.PopUpMenu
 }
 
 // fieldEnd is how editing ended.
@@ -106,15 +106,13 @@ func (e *fieldEntry) finish(how fieldEnd) {
 	}
 }
 
-// FocusLost commits, except to the entry's own menu.
+// FocusLost commits.
 func (e *fieldEntry) FocusLost() {
 	e.Entry.FocusLost()
 	if e.about != nil {
 		e.about("")
 	}
-	if e.menu == nil {
-		e.finish(fieldLeft)
-	}
+	e.finish(fieldLeft)
 }
 
 // FocusGained selects the whole text, so that typing replaces it.
@@ -131,45 +129,28 @@ func (e *fieldEntry) TypedKey(key *fyne.KeyEvent) {
 	switch key.Name {
 	case fyne.KeyEscape:
 		e.finish(fieldCancelled)
-	case fyne.KeyUp:
-		e.finish(fieldUp)
-	case fyne.KeyDown:
-		if len(e.in.choices) > 0 && e.after == nil {
+	case fyne.KeyUp, fyne.KeyDown:
+		switch {
+		case e.steps && key.Name == fyne.KeyUp:
+			e.finish(fieldUp)
+		case e.steps:
+			e.finish(fieldDown)
+		case len(e.in.choices) > 0:
 			e.drop()
-			return
+		default:
+			e.Entry.TypedKey(key)
 		}
-		e.finish(fieldDown)
 	default:
 		e.Entry.TypedKey(key)
 	}
 }
 
-// drop opens the list of what the catalogue has.
+// drop opens the list of what the catalogue has; what is chosen is entered.
 func (e *fieldEntry) drop() {
-	c := fyne.CurrentApp().Driver().CanvasForObject(e)
-	if c == nil {
-		return
-	}
-	items := make([]*fyne.MenuItem, len(e.in.choices))
-	for i, choice := range e.in.choices {
-		items[i] = fyne.NewMenuItem(choice, func() {
-			e.menu = nil
-			e.SetText(choice)
-			e.finish(fieldEntered)
-		})
-		items[i].Checked = choice == e.in.text
-	}
-	e.menu = widget.NewPopUpMenu(fyne.NewMenu("", items...), c)
-	dismissed := e.menu.OnDismiss
-	e.menu.OnDismiss = func() {
-		if dismissed != nil {
-			dismissed()
-		}
-		e.menu = nil
-	}
-	at := fyne.CurrentApp().Driver().AbsolutePositionForObject(e).AddXY(0, e.Size().Height)
-	e.menu.ShowAtPosition(at)
-	e.menu.Resize(fyne.NewSize(max(e.Size().Width, e.menu.MinSize().Width), e.menu.MinSize().Height))
+	openFieldMenu(e, e.in.choices, e.in.text, func(choice string) {
+		e.SetText(choice)
+		e.finish(fieldEntered)
+	})
 }
 
 // fieldDrop is the small arrow that opens an entry's list. Unlike a button it takes no focus from the entry.

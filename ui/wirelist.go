@@ -74,11 +74,16 @@ func (l *WireList) changed(c Changed) {
 func (l *WireList) reload() {
 	_, fresh := l.desk.Result()
 	l.aged = !fresh && l.desk.Stale()
+	was := l.row(l.active.id)
+	first, last := l.inSight()
 	l.rows = wireRows(l.desk)
 	if l.sorted {
 		sortWires(l.rows, l.by, l.down)
 	}
 	l.relayout()
+	if now := l.row(l.active.id); now != was && was >= first && was < last {
+		l.reveal(now) // the row one works on stays in sight when others pass it
+	}
 }
 
 // SortBy sorts by a column as a click on its header does: up, down, then the document's order again.

@@ -200,7 +200,7 @@ func (b *wireBody) edit(cell wireCell) {
 	}
 	b.stop()
 	e := newFieldEntry(b.list.desk, in)
-	e.ActionItem = nil // a cell has no room for it
+	e.ActionItem, e.steps = nil, true // a cell has no room for the arrow
 	e.say = func(understood string, err error) {
 		b.message, b.wrong = understood, err != nil
 		if err != nil {
