@@ -3,7 +3,7 @@ package harmonic
 import "math"
 
 // sourceCut ends the running powers of far monopoles.
-const sourceCut = 1e-9
+const sourceCut = 1e-8
 
 // Mono adds to y what monopoles of strength q_j/(2πk) in the discs bring to every disc, scaled like the system's unknowns; they
 // are given as q, one a disc.
@@ -136,7 +136,7 @@ func against(x, s []float64, z complex128) float64 {
 // Log returns the mean temperature that a unit monopole in disc j brings to the rim of disc i (or, i = j, its own rim), in units of
 // 1/(2πk), wall included but for the wall's own series resistance.
 func (s *System) Log(i, j int) float64 {
-	g := s.near(i, j)
+	g := s.logs[max(i, j)*(max(i, j)+1)/2+min(i, j)]
 	if s.circle == nil {
 		return g
 	}
@@ -149,7 +149,7 @@ func (s *System) Log(i, j int) float64 {
 	return g
 }
 
-// near is Log but for what Sigma reflects.
+// near is Log but for what Sigma reflects; symmetric.
 func (s *System) near(i, j int) float64 {
 	r := s.discs[i].A
 	if i != j {
@@ -168,13 +168,15 @@ func (s *System) near(i, j int) float64 {
 
 // Logs sets out_i = Σ_j Log(i, j) q_j.
 func (s *System) Logs(out, q []float64) {
-	for i := range out {
-		out[i] = 0
-		for j, f := range q {
-			if f != 0 {
-				out[i] += f * s.near(i, j)
-			}
+	clear(out)
+	for j := range out {
+		row := s.logs[j*(j+1)/2:][:j]
+		sum := s.logs[j*(j+1)/2+j] * q[j]
+		for i, l := range row {
+			out[i] += l * q[j]
+			sum += l * q[i]
 		}
+		out[j] += sum
 	}
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return

@@ -20,7 +20,8 @@ type System struct {
 	cut    float64
 	weight []float64 // of the circle's harmonics that the discs are mapped to
 
-	blocks []block // upper triangle with diagonal, see at
+	blocks []block   // upper triangle with diagonal, see at
+	logs   []float64 // the same of logarithms between monopoles, see near
 	ports  []block
 	work   builder
 	alpha  []float64 // room for the circle's amplitudes, many vectors
@@ -40,6 +41,7 @@ func NewSystem(discs []Disc, circle *Circle, weight []float64, cut float64) *Sys
 		}
 	}
 	s.blocks = make([]block, len(discs)*(len(discs)+1)/2)
+	s.logs = make([]float64, len(s.blocks))
 	s.ports = make([]block, len(discs))
 	s.alpha = make([]float64, 2*many*len(s.weight))
 	s.layout()
@@ -74,9 +76,15 @@ func (s *System) Build(j int) {
 	if len(s.weight) > 0 {
 		s.work.port(&s.ports[j], s.discs[j], s.circle.R, s.weight)
 	}
-	for i := 0; i <= j; i++ {
-		s.work.write(s.at(i, j), s.discs[i], s.discs[j], i == j, s.circle, s.cut)
+	for i := range j + 1 {
+		s.couple(i, j)
 	}
+}
+
+// couple writes the block of discs i ≤ j.
+func (s *System) couple(i, j int) {
+	s.work.write(s.at(i, j), s.discs[i], s.discs[j], i == j, s.circle, s.cut)
+	s.logs[j*(j+1)/2+i] = s.near(i, j)
 }
 
 // Put replaces disc i and rewrites its blocks. If its order changed the layout of vectors changes too.
@@ -88,7 +96,7 @@ func (s *System) Put(i int, d Disc) {
 	}
 	s.Build(i)
 	for j := i + 1; j < len(s.discs); j++ {
-		s.work.write(s.at(i, j), s.discs[i], s.discs[j], false, s.circle, s.cut)
+		s.couple(i, j)
 	}
 }
 
@@ -132,7 +140,7 @@ func (s *System) apply(y, x []float64, k int) {
 // apart returns c_i − c_j, no shorter than the two radii: overlapping discs count as touching.
 func apart(a, b Disc) complex128 {
 	d := a.C - b.C
-	l := math.Hypot(real(d), imag(d))
+	l := size(d)
 	switch sum := a.A + b.A; {
 	case l == 0:
 		return complex(sum, 0)

@@ -93,8 +93,8 @@ func (p *pieceState) faces() []float64 {
 
 // from is conj(A_n) of what comes from a cable's inside.
 func (p *pieceState) from(n int) complex128 {
-	if n < len(p.a) {
-		return p.a[n]
+	if n < len(p.sent) {
+		return p.sent[n]
 	}
 	return 0
 }
@@ -144,12 +144,14 @@ func (s *state) wallFaces(w *Wall) (hot []float64, mean, released float64) {
 	return hot, mean, s.leaves(w, mean)
 }
 
-// insideFace is the hottest temperature of the wall's inside at the places nearest to the pieces.
+// insideFace is the hottest temperature of the wall's inside at the places nearest to the pieces that lie close to it; elsewhere the
+// harmonics of the wall are enough.
 func (s *state) insideFace() float64 {
 	hot := math.Inf(-1)
 	for i := range s.pieces {
-		if l := cmplx.Abs(s.pieces[i].at); l > 0 {
-			hot = math.Max(hot, s.cloud.At(s.pieces[i].at*complex(s.r/l, 0)))
+		p := &s.pieces[i]
+		if l := math.Hypot(real(p.at), imag(p.at)); l > 0 && s.r-l < 1.5*p.a {
+			hot = math.Max(hot, s.cloud.At(p.at*complex(s.r/l, 0)))
 		}
 	}
 	return hot

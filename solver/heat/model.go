@@ -30,9 +30,17 @@ func (a Accuracy) settings() (factor, cut, tol float64) {
 	case Draft:
 		return 0.7, 3e-5, 1e-4
 	case Fine:
-		return 1.5, 1e-7, 1e-8
+		return 1.5, 1e-7, 1e-7
 	}
-	return 1, 1e-5, 1e-6
+	return 1, 1e-5, 1e-5
+}
+
+// rough is the residual of columns whose products have an error quadratic in it.
+func (a Accuracy) rough() float64 {
+	if a == Fine {
+		return 1e-4
+	}
+	return 1e-3
 }
 
 // New checks the geometry (misuse panics: negative radii, a part before its cable, non-finite numbers; overlaps over 1 µm are

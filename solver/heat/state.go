@@ -26,7 +26,7 @@ type pieceState struct {
 	mean   float64      // of its outer rim
 	q      float64      // W/m out of it
 	b      []complex128 // what comes in, n = 1 …
-	a      []complex128 // conj(A_n) of what a cable's inside sends out
+	sent   []complex128 // conj(A_n) of what a cable's inside sends out
 	inside *state
 }
 
@@ -175,9 +175,9 @@ func (g *region) enter(s *state, q []float64) {
 		}
 		p.inside = in.solved(heats, x, p.mean+p.q*p.series, omega)
 		s.tail += p.inside.tail
-		p.a = p.inside.cloud.Outgoing(len(p.b))
-		for n, a := range p.a {
-			p.a[n] = complex(real(a), -imag(a))
+		p.sent = p.inside.cloud.Outgoing(len(p.b))
+		for n, a := range p.sent {
+			p.sent[n] = complex(real(a), -imag(a))
 		}
 	}
 }
