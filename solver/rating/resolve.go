@@ -53,8 +53,12 @@ func (r *resolver) surroundings() {
 	switch s.Kind {
 	case section.FixedWall:
 		r.scene.filmW = math.Inf(1)
-	default:
+	case section.FixedFilm:
 		r.scene.filmW = s.FilmWM2K.V
+	default:
+		r.refuse(&section.Problem{
+			Rule: "not-built", Key: "surroundings.kind", What: "surroundings of kind " + s.Kind + " are not reckoned yet", Do: "use fixed-film with film_w_m2k",
+		})
 	}
 }
 

@@ -72,8 +72,8 @@ func badKeys() []bad {
 		{"duplicate material", head + "materials:\n  a: {k_w_mk: 1}\n  a: {k_w_mk: 2}\n", []wanted{{6, "duplicate-key", "material a|line 5"}}},
 		{"key that is a list", head + "[a, b]: x\n", []wanted{{4, "wrong-type", "a key is not a word"}}},
 		{
-			"later: altitude", strings.Replace(head, "30}", "30, altitude_m: 800}", 1),
-			[]wanted{{2, "later-key", "key `surroundings.altitude_m` belongs to surroundings and shapes that this version does not read yet; take it out"}},
+			"later: against", strings.Replace(head, "30}", "30, against: {share: 0.25}}", 1),
+			[]wanted{{2, "later-key", "key `surroundings.against` belongs to surroundings and shapes that this version does not read yet; take it out"}},
 		},
 		{"later: cases", head + "cases: []\n", []wanted{{4, "later-key", "key `cases` belongs to ratings that"}}},
 		{"later: prices", head + "prices: {}\n", []wanted{{4, "later-key", "drawings and prices"}}},
@@ -130,9 +130,7 @@ func badKinds() []bad {
 		return strings.Replace(head, "{kind: jacket, inside_mm: 10}", h, 1)
 	}
 	return []bad{
-		{"still air", strings.Replace(head, "fixed-wall", "still-air", 1), []wanted{{2, "not-built", "surroundings kind `still-air` is not built yet in this version; use fixed-film with film_w_m2k"}}},
-		{"buried", strings.Replace(head, "fixed-wall", "buried", 1), []wanted{{2, "not-built", "`buried` is not built yet|use fixed-wall"}}},
-		{"misspelt surroundings", strings.Replace(head, "fixed-wall", "fixed-wal", 1), []wanted{{2, "unknown-word", "surroundings kind fixed-wal is unknown|did you mean `fixed-wall`? write one of fixed-film, fixed-wall"}}},
+		{"misspelt surroundings", strings.Replace(head, "fixed-wall", "fixed-wal", 1), []wanted{{2, "unknown-word", "surroundings kind fixed-wal is unknown|did you mean `fixed-wall`? write one of still-air, moving-air, fixed-film, fixed-wall"}}},
 		{"no kind", strings.Replace(head, "kind: fixed-wall, ", "", 1), []wanted{{2, "missing-key", "`surroundings.kind` is missing"}}},
 		{"no ambient", strings.Replace(head, ", ambient_c: 30", "", 1), []wanted{{2, "missing-key", "`surroundings.ambient_c` is missing"}}},
 		{"no film", strings.Replace(head, "fixed-wall", "fixed-film", 1), []wanted{{2, "missing-key", "`surroundings.film_w_m2k` is missing|needs a coefficient in W/m²K"}}},
@@ -248,8 +246,48 @@ func badLoads() []bad {
 	}
 }
 
+// badSurroundings: each key belongs to its kinds, and each kind asks for what it needs.
+func badSurroundings() []bad {
+	in := func(text string) string {
+		return strings.Replace(head, "{kind: fixed-wall, ambient_c: 30}", "{ambient_c: 30, "+text+"}", 1)
+	}
+	one := func(name, text, rule, fragments string) bad {
+		return bad{name, in(text), []wanted{{2, rule, fragments}}}
+	}
+	return []bad{
+		one("moving air without speed", "kind: moving-air", "missing-key", "`surroundings.air_speed_m_s` is missing|kind moving-air needs the speed of the air in m/s"),
+		one("speed in still air", "kind: still-air, air_speed_m_s: 2", "key-of-kind", "does not belong to kind still-air, where the air moves by its own warmth only|write kind: moving-air"),
+		one("storm", "kind: moving-air, air_speed_m_s: 300", "number-range", "is 300, but must lie between 0 and 100 m/s"),
+		one("wind backwards", "kind: moving-air, air_speed_m_s: -1", "number-range", "is −1, but must lie between 0 and 100 m/s"),
+		one("slanting", "kind: moving-air, air_speed_m_s: 1, air_direction: slanting", "unknown-word", "air direction slanting is unknown|across, along"),
+		one("beyond the atmosphere", "kind: still-air, altitude_m: 31000", "number-range", "`surroundings.altitude_m` is 31000, but the model of the atmosphere goes from −1000 to 30000 m|kind: vacuum"),
+		one("altitude underground", "kind: buried, depth_m: 1, soil_w_mk: 1, altitude_m: 100", "key-of-kind", "`surroundings.altitude_m` does not belong to kind buried|still-air, moving-air, insulation"),
+		one("sun on a buried run", "kind: buried, depth_m: 1, soil_w_mk: 1, sun_w_m2: 900", "key-of-kind", "the sun does not reach a run in the ground"),
+		one("sun in water", "kind: water, sun_w_m2: 900", "key-of-kind", "the sun on a run in water is not reckoned"),
+		one("too much sun", "kind: still-air, sun_w_m2: 9000", "number-range", "is 9000, but must lie between 0 and 2000 W/m²"),
+		{"buried without depth and soil", in("kind: buried"), []wanted{{2, "missing-key", "depth_m` is missing|the depth of the axis in m"}, {2, "missing-key", "soil_w_mk` is missing|0.4 for dry"}}},
+		one("depth in air", "kind: still-air, depth_m: 1", "key-of-kind", "`surroundings.depth_m` does not belong to kind still-air|it belongs to kind buried"),
+		one("depth of zero", "kind: buried, soil_w_mk: 1, depth_m: 0", "number-range", "must lie between 0.001 and 100 m"),
+		one("insulation without wrap", "kind: insulation", "missing-key", "`surroundings.wrap` is missing|{material: …, thickness_mm: …}"),
+		one("wrap without thickness", "kind: insulation, wrap: {material: mineral-wool}", "missing-key", "`surroundings.wrap.thickness_mm` is missing"),
+		one("wrap in still air", "kind: still-air, wrap: {material: mineral-wool, thickness_mm: 20}", "key-of-kind", "it belongs to kind insulation"),
+		one("vertical without height", "kind: still-air, run: vertical", "missing-key", "`surroundings.height_m` is missing|a vertical run needs its height"),
+		one("height of a level run", "kind: still-air, height_m: 3", "key-of-kind", "belongs to a vertical run"),
+		one("vertical vacuum", "kind: vacuum, run: vertical", "key-of-kind", "`surroundings.run` does not belong to kind vacuum"),
+		one("wet vacuum", "kind: vacuum, wet: true", "key-of-kind", "where nothing stays wet"),
+		one("film in still air", "kind: still-air, film_w_m2k: 9", "key-of-kind", "it belongs to kind fixed-film"),
+		one("radiant in water", "kind: water, radiant_c: 20", "key-of-kind", "water lets no heat radiation through"),
+		one("radiant below zero kelvin", "kind: still-air, radiant_c: -300", "number-range", "below absolute zero"),
+		one("wet as a word", "kind: still-air, wet: damp", "wrong-type", "where true or false belongs"),
+		{
+			"touch limit of a build", head + "builds:\n  b: {holder: {kind: jacket, inside_mm: 5, touch_limit_c: 60}}\n",
+			[]wanted{{5, "key-of-kind", "build b|`holder.touch_limit_c` belongs to the section's own holder"}},
+		},
+	}
+}
+
 func TestBadInput(t *testing.T) {
-	for _, group := range [][]bad{wholeFiles(), badKeys(), badNumbers(), badKinds(), badParts(), badLoads()} {
+	for _, group := range [][]bad{wholeFiles(), badKeys(), badNumbers(), badKinds(), badSurroundings(), badParts(), badLoads()} {
 		for _, c := range group {
 			t.Run(c.name, func(t *testing.T) { checkBad(t, c) })
 		}
@@ -290,7 +328,7 @@ func TestAllProblemsAtOnce(t *testing.T) {
 		got = append(got, fmt.Sprintf("%d %s %v %s", p.Line, p.Rule, p.IDs, p.Key))
 	}
 	want := []string{
-		"2 unknown-key [] titel", "3 wrong-type [] surroundings.ambient_c", "3 not-built [] surroundings.kind", "4 missing-key [] holder.inside_mm",
+		"2 unknown-key [] titel", "3 wrong-type [] surroundings.ambient_c", "4 missing-key [] holder.inside_mm",
 		"6 bad-size [L1] conductor.size", "6 number-range [L1] layers[0].thickness_mm", "7 missing-key [L1] diameter_mm", "7 missing-key [L1] material", "7 duplicate-id [L1] id",
 		"9 one-of [a] ", "9 unknown-conductor [L5] conductors[0]",
 	}

@@ -38,15 +38,6 @@ func (r *report) check(d *Document) {
 	}
 }
 
-func checkSurroundings(r *report, s *Surroundings, at path) {
-	switch {
-	case s.Kind == FixedFilm && !s.FilmWM2K.OK:
-		r.add(at.key("film_w_m2k"), "missing-key", "¤ is missing", "write it: kind fixed-film needs a coefficient in W/m²K")
-	case s.Kind == FixedWall && s.FilmWM2K.OK:
-		r.add(at.key("film_w_m2k"), "key-of-kind", "¤ does not belong to kind fixed-wall, which holds the outer surface at ambient_c", "take it out, or write kind: fixed-film")
-	}
-}
-
 // checkHolder keeps the keys of a holder to those of its kind.
 func checkHolder(r *report, h *Holder, at path) {
 	round, rectangle := h.Kind == Jacket || h.Kind == Conduit, h.Kind == Wireway
@@ -72,6 +63,9 @@ func checkHolder(r *report, h *Holder, at path) {
 	reject(open && len(h.Layers) > 0, "layers", ", which has no wall", "take it out")
 	reject(h.Kind == NoHolder && h.Fill != "", "fill", ", which encloses nothing", "take it out")
 	reject(h.Kind == NoHolder && h.ClearanceMM.OK, "clearance_mm", ", which encloses nothing", "take it out")
+	if h.TouchLimitC.OK && len(at.steps()) > 1 {
+		r.add(at.key("touch_limit_c"), "key-of-kind", "¤ belongs to the section's own holder, whose outside can be touched", "take it out, or give a layer's material a limit")
+	}
 	if h.Stock != "" && !open {
 		both := h.InsideMM.OK || h.WidthMM.OK || h.HeightMM.OK || len(h.Layers) > 0
 		if both {

@@ -47,25 +47,6 @@ type Document struct {
 	origin *origin // the file as read: order of keys, style and comments, for the next save; nil for a new design
 }
 
-// Kinds of surroundings.
-const (
-	StillAir   = "still-air"
-	MovingAir  = "moving-air"
-	FixedFilm  = "fixed-film"
-	FixedWall  = "fixed-wall"
-	Buried     = "buried"
-	Water      = "water"
-	Vacuum     = "vacuum"
-	Insulation = "insulation"
-)
-
-// Surroundings are what the section gives its heat to.
-type Surroundings struct {
-	Kind     string
-	AmbientC Opt[float64]
-	FilmWM2K Opt[float64] // fixed-film: one constant coefficient, radiation included
-}
-
 // Kinds of holder.
 const (
 	Jacket     = "jacket"
@@ -86,6 +67,7 @@ type Holder struct {
 	Layers            []Layer // from the inside outwards
 	Fill              string  // "" means air
 	ClearanceMM       Opt[float64]
+	TouchLimitC       Opt[float64] // limit of the outside surface; of the section's own holder only
 }
 
 // Sides of a rectangle: how each side's whole outer face meets the surroundings.

@@ -2,6 +2,7 @@ package section
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"pgregory.net/rapid"
@@ -171,12 +172,53 @@ func (m maker) loads(d *Document) (out []Load) {
 	return out
 }
 
+// surroundings draws a kind with the keys that it takes.
+func (m maker) surroundings() Surroundings {
+	s := Surroundings{Kind: m.word([]string{StillAir, MovingAir, FixedFilm, FixedWall, Buried, Water, Vacuum, Insulation}), AmbientC: Some(m.num(-40, 90))}
+	for i := range kindKeys {
+		k := &kindKeys[i]
+		if slices.Contains(k.must, s.Kind) || slices.Contains(k.kinds, s.Kind) && m.coin(k.key) {
+			m.put(&s, k.key)
+		}
+	}
+	if s.Run == Vertical {
+		s.HeightM = Some(m.num(0.1, 30))
+	} else {
+		s.HeightM = Opt[float64]{}
+	}
+	return s
+}
+
+func (m maker) put(s *Surroundings, key string) {
+	switch key {
+	case "film_w_m2k":
+		s.FilmWM2K = Some(m.num(0.1, 1000))
+	case "air_speed_m_s":
+		s.AirSpeedMS = Some(m.num(0, 40))
+	case "air_direction":
+		s.AirDirection = m.word([]string{Across, Along})
+	case "altitude_m":
+		s.AltitudeM = Some(m.num(-450, 14000))
+	case "radiant_c":
+		s.RadiantC = Some(m.num(-40, 90))
+	case "run":
+		s.Run = m.word([]string{Horizontal, Vertical})
+	case "sun_w_m2":
+		s.SunWM2 = Some(m.num(0, 900))
+	case "depth_m":
+		s.DepthM = Some(m.num(0.1, 20))
+	case "soil_w_mk":
+		s.SoilWMK = Some(m.num(0.1, 2))
+	case "wrap":
+		s.Wrap = &Layer{m.name(), m.num(1, 100)}
+	case "wet":
+		s.Wet = true
+	}
+}
+
 // document draws a whole valid document without origin.
 func (m maker) document() *Document {
-	d := &Document{Title: m.text(), Notes: m.text(), Surroundings: Surroundings{Kind: FixedWall, AmbientC: Some(m.num(-40, 90))}}
-	if m.coin("film") {
-		d.Surroundings.Kind, d.Surroundings.FilmWM2K = FixedFilm, Some(m.num(0.1, 1000))
-	}
+	d := &Document{Title: m.text(), Notes: m.text(), Surroundings: m.surroundings()}
 	var names []string
 	taken := map[string]bool{}
 	for range rapid.IntRange(0, 3).Draw(m.t, "builds") {
@@ -185,6 +227,7 @@ func (m maker) document() *Document {
 		names = append(names, name)
 	}
 	d.Holder = m.holder(Jacket, Conduit, Wireway, OpenBundle, NoHolder)
+	d.Holder.TouchLimitC = m.opt(30, 90)
 	n := 6
 	if d.Holder.Kind == NoHolder {
 		n = 1

@@ -16,14 +16,7 @@ type word struct {
 
 var (
 	surroundingsKinds = []word{
-		{name: FixedFilm},
-		{name: FixedWall},
-		{StillAir, "use fixed-film with film_w_m2k, one constant coefficient with radiation included"},
-		{MovingAir, "use fixed-film with film_w_m2k, one constant coefficient with radiation included"},
-		{Buried, "use fixed-wall, which holds the outer surface at ambient_c"},
-		{Water, "use fixed-wall, which holds the outer surface at ambient_c"},
-		{Vacuum, "use fixed-film with film_w_m2k, one constant coefficient for radiation alone"},
-		{Insulation, "use fixed-film with film_w_m2k, one constant coefficient for the wrap and what lies beyond"},
+		{name: StillAir}, {name: MovingAir}, {name: FixedFilm}, {name: FixedWall}, {name: Buried}, {name: Water}, {name: Vacuum}, {name: Insulation},
 	}
 	holderKinds = []word{
 		{name: Jacket},

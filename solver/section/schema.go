@@ -3,7 +3,7 @@ package section
 import "gopkg.in/yaml.v3"
 
 // The tables below are the format: every key that is read, in the order in which it is written. A key that comes to the format
-// is one line here, one field in document.go, and its line in the list of later keys taken out.
+// is one line here (of surroundings in their own file), one field of its type, and its line in the list of later keys taken out.
 
 // Blocks of the format that a later version reads.
 const (
@@ -60,18 +60,6 @@ var documentTable = &table[Document]{
 		later(laterDrawings, "buildup", "prices", "sheet"), later(laterTime, "terminals", "route")),
 }
 
-var surroundingsTable = &table[Surroundings]{
-	what: "surroundings", block: true,
-	fields: []field[Surroundings]{
-		need(on("kind", func(s *Surroundings) *string { return &s.Kind }, oneOf{what: "surroundings kind", words: surroundingsKinds})),
-		need(on("ambient_c", func(s *Surroundings) *Opt[float64] { return &s.AmbientC }, optNumber{temperature})),
-		on("film_w_m2k", func(s *Surroundings) *Opt[float64] { return &s.FilmWM2K }, optNumber{positive}),
-	},
-	later: later(laterSurroundings, "air_speed_m_s", "air_direction", "altitude_m", "radiant_c", "run", "height_m", "sun_w_m2", "depth_m", "soil_w_mk", "wrap",
-		"against", "wet"),
-	rules: checkSurroundings,
-}
-
 var holderTable = &table[Holder]{
 	what: "a holder", block: true,
 	fields: []field[Holder]{
@@ -84,8 +72,9 @@ var holderTable = &table[Holder]{
 		on("layers", func(h *Holder) *[]Layer { return &h.Layers }, list[Layer]{layerTable, false, MaxLayers}),
 		on("fill", func(h *Holder) *string { return &h.Fill }, text{}),
 		on("clearance_mm", func(h *Holder) *Opt[float64] { return &h.ClearanceMM }, optNumber{notNegative}),
+		on("touch_limit_c", func(h *Holder) *Opt[float64] { return &h.TouchLimitC }, optNumber{temperature}),
 	},
-	later: merge(later(laterSurroundings, "string_emissivity", "touch_limit_c"), later(laterRatings, "length_m")),
+	later: merge(later(laterSurroundings, "string_emissivity"), later(laterRatings, "length_m")),
 	rules: checkHolder,
 }
 
