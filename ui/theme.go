@@ -80,6 +80,17 @@ var sizes = map[fyne.ThemeSizeName]float32{
 	theme.SizeNameSelectionRadius: 3,
 }
 
+// ink is an opaque colour. The toolkit's menus take the low byte of 95 % of its 16-bit alpha for shortcuts, which of 0xffff is nearly nothing; of this alpha
+// it is 0xff.
+type ink struct{ r, g, b uint8 }
+
+// RGBA is for the toolkit.
+func (c ink) RGBA() (r, g, b, a uint32) {
+	return uint32(c.r) * 0x101, uint32(c.g) * 0x101, uint32(c.b) * 0x101, 0xffc9
+}
+
+func opaque(hex uint32) ink { return ink{uint8(hex >> 16), uint8(hex >> 8), uint8(hex)} }
+
 func rgb(hex uint32) color.NRGBA {
 	return color.NRGBA{R: uint8(hex >> 16), G: uint8(hex >> 8), B: uint8(hex), A: 255}
 }
@@ -92,7 +103,7 @@ func rgba(hex uint32, alpha uint8) color.NRGBA {
 
 var lightPalette = map[fyne.ThemeColorName]color.Color{
 	theme.ColorNameBackground:          rgb(0xfdfcf8),
-	theme.ColorNameForeground:          rgb(0x1c1d21),
+	theme.ColorNameForeground:          opaque(0x1c1d21),
 	theme.ColorNamePrimary:             rgb(0x1d6a75),
 	theme.ColorNameForegroundOnPrimary: rgb(0xffffff),
 	theme.ColorNameHyperlink:           rgb(0x1d6a75),
@@ -124,7 +135,7 @@ var lightPalette = map[fyne.ThemeColorName]color.Color{
 
 var darkPalette = map[fyne.ThemeColorName]color.Color{
 	theme.ColorNameBackground:          rgb(0x1b1c1e),
-	theme.ColorNameForeground:          rgb(0xe9e7e1),
+	theme.ColorNameForeground:          opaque(0xe9e7e1),
 	theme.ColorNamePrimary:             rgb(0x66bac4),
 	theme.ColorNameForegroundOnPrimary: rgb(0x10191b),
 	theme.ColorNameHyperlink:           rgb(0x66bac4),

@@ -93,3 +93,16 @@ func TestLookOverridesSystem(t *testing.T) {
 		}
 	}
 }
+
+// TestShortcutsInMenusShow repeats what the toolkit does with the colour of text for shortcuts (widget/menu_item.go of v2.7.1).
+func TestShortcutsInMenusShow(t *testing.T) {
+	for _, look := range []Look{LookLight, LookDark} {
+		_, _, _, a := NewTheme(look).Color(theme.ColorNameForeground, theme.VariantLight).RGBA()
+		if low := uint8(uint32(float32(a) * 0.95)); low < 230 {
+			t.Errorf("%s: shortcuts are painted with alpha %d of 255", look, low)
+		}
+		if a>>8 != 0xff {
+			t.Errorf("%s: text is painted with alpha %d of 255", look, a>>8)
+		}
+	}
+}
