@@ -66,7 +66,7 @@ func (c *Cloud) disc(j int, z complex128) float64 {
 	if q := c.Q[j]; q != 0 {
 		t = -q * c.log(size(v))
 	}
-	return t + horner(c.D[j], over(c.A[j], v))
+	return t + Sum(c.D[j], over(c.A[j], v))
 }
 
 // log is the logarithm of a distance, relative to the circle if there is one.
@@ -108,16 +108,36 @@ func (c *Cloud) regular(z complex128) float64 {
 	if r := size(w); r < 1 {
 		top = min(top, 1+int(-20/math.Log(r+1e-300))) // e⁻²⁰ is nothing beside the first terms
 	}
-	return horner(c.B[:top], w)
+	return Sum(c.B[:top], w)
 }
 
-// horner returns Re Σ d[m-1] x^m.
-func horner(d []complex128, x complex128) float64 {
-	var s complex128
-	for m := len(d) - 1; m >= 0; m-- {
-		s = (s + d[m]) * x
+// Sum returns Re Σ x[n-1] z^n, n = 1 … len(x).
+func Sum(x []complex128, z complex128) float64 {
+	zr, zi := real(z), imag(z)
+	n := len(x)
+	if n < 4 {
+		var re, im float64
+		for n--; n >= 0; n-- {
+			re, im = re+real(x[n]), im+imag(x[n])
+			re, im = re*zr-im*zi, re*zi+im*zr
+		}
+		return re
 	}
-	return real(s)
+	// Two chains in powers of z², so that one does not wait for the other.
+	wr, wi := zr*zr-zi*zi, 2*zr*zi
+	var ar, ai, br, bi float64
+	if n&1 == 1 {
+		n--
+		ar, ai = real(x[n]), imag(x[n])
+	}
+	for n -= 2; n >= 0; n -= 2 {
+		p, q := x[n], x[n+1]
+		ar, ai = ar*wr-ai*wi+real(p), ar*wi+ai*wr+imag(p)
+		br, bi = br*wr-bi*wi+real(q), br*wi+bi*wr+imag(q)
+	}
+	// a z + b z²
+	ar, ai = ar+br*zr-bi*zi, ai+br*zi+bi*zr
+	return ar*zr - ai*zi
 }
 
 // About adds to b[n], n = 0 … len(b)-1, the coefficients of the field about a disc of radius a at at: Re Σ b_n ((z−at)/a)^n. The

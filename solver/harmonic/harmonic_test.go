@@ -35,7 +35,7 @@ func TestAboutReproducesTheField(t *testing.T) {
 			w := cmplx.Rect(0.6+0.4*r.Float64(), 2*math.Pi*r.Float64())
 			z := c.C[i] + w*complex(c.A[i], 0)
 			want := c.At(z) - c.disc(i, z)
-			got := real(b[0]) + horner(b[1:], w)
+			got := real(b[0]) + Sum(b[1:], w)
 			if math.Abs(got-want) > 1e-9 {
 				t.Errorf("disc %d at %v: series %.12f, field %.12f", i, w, got, want)
 			}

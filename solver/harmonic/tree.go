@@ -174,7 +174,7 @@ func (t *Tree) At(z complex128) (temp float64, disc int) {
 		}
 	}
 	w := scale(1/(math.Sqrt2*c.half), z-c.mid)
-	temp = real(c.b[0]) + horner(c.b[1:], w)
+	temp = real(c.b[0]) + Sum(c.b[1:], w)
 	for _, j := range c.near {
 		temp += t.cloud.disc(int(j), z)
 	}

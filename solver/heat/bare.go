@@ -87,12 +87,12 @@ type bareField struct {
 
 func (f *bareField) At(x, y float64) float64 {
 	z := complex(x, y) - f.p.at
-	r := math.Hypot(real(z), imag(z))
+	r2 := square(z)
 	switch {
-	case r > f.p.drawn*(1+1e-12):
+	case math.Sqrt(r2) > f.p.drawn*(1+1e-12):
 		return math.NaN()
-	case r > f.l.r0:
-		return f.l.at(z, r)
+	case r2 > f.l.r0*f.l.r0:
+		return f.l.at(z, r2)
 	}
 	return f.l.innerT
 }

@@ -34,7 +34,7 @@ type charts struct {
 // layers are the waves in the rings of a piece or a round wall: per ring f (r/R1)^n and g (R0/r)^n, and its mean temperature at R1.
 type layers struct {
 	rings  []harmonic.Ring
-	f, g   [][]complex128
+	f, g   []series
 	mean   []float64
 	q      float64
 	inner  []complex128 // a body or bore: regular wave within the innermost radius, referred to it
@@ -79,26 +79,35 @@ func (p *pieceState) layers() layers {
 		w = p.stack.Waves(n+1, w[:0])
 		l.fill(n, w, b, a)
 		if len(w) > 0 {
-			l.inner[n] = l.f[0][n]*complex(w[0].W, 0) + l.g[0][n]
+			l.inner[n] = l.f[0].x[n]*complex(w[0].W, 0) + l.g[0].x[n]
 		} else {
 			port := p.stack.Port(n + 1)
 			l.inner[n] = b*complex(1+port.T, 0) + a*complex(port.Tau, 0)
 		}
 	}
+	l.trim()
 	return l
 }
 
 func newLayers(rings []harmonic.Ring, q float64, orders int) layers {
-	l := layers{rings: rings, q: q, mean: make([]float64, len(rings)), f: make([][]complex128, len(rings)), g: make([][]complex128, len(rings))}
+	l := layers{rings: rings, q: q, mean: make([]float64, len(rings)), f: make([]series, len(rings)), g: make([]series, len(rings))}
 	for i := range rings {
-		l.f[i], l.g[i] = make([]complex128, orders), make([]complex128, orders)
+		l.f[i].x, l.g[i].x = make([]complex128, orders), make([]complex128, orders)
 	}
 	return l
 }
 
 func (l *layers) fill(n int, w []harmonic.Waves, b, a complex128) {
 	for i := range w {
-		l.f[i][n], l.g[i][n] = w[i].Split(b, a)
+		l.f[i].x[n], l.g[i].x[n] = w[i].Split(b, a)
+	}
+}
+
+// trim finds out how far the series of each ring need summing.
+func (l *layers) trim() {
+	for i := range l.rings {
+		l.f[i].trim()
+		l.g[i].trim()
 	}
 }
 
@@ -116,6 +125,7 @@ func (s *state) wallLayers() layers {
 		w = s.wall.Waves(n+1, w[:0])
 		l.fill(n, w, 0, complex(real(v), -imag(v)))
 	}
+	l.trim()
 	return l
 }
 
@@ -123,11 +133,11 @@ func (s *state) wallLayers() layers {
 func (s *state) at(z complex128) float64 {
 	c := s.chart()
 	if s.rect == nil {
-		if r := math.Hypot(real(z), imag(z)); r > s.wall.R {
-			if r > s.wall.Outside()*(1+1e-12) {
+		if r2 := square(z); r2 > s.wall.R*s.wall.R {
+			if o := s.wall.Outside() * (1 + 1e-12); r2 > o*o {
 				return math.NaN()
 			}
-			return c.wall.at(z, r)
+			return c.wall.at(z, r2)
 		}
 	}
 	t, i := c.tree.At(z)
@@ -140,47 +150,40 @@ func (s *state) at(z complex128) float64 {
 	return t
 }
 
+func square(z complex128) float64 { return real(z)*real(z) + imag(z)*imag(z) }
+
 // inPiece is the temperature at z from the centre of piece i.
 func (s *state) inPiece(i int, z complex128) float64 {
 	p, l := &s.pieces[i], &s.charts.layers[i]
-	r := math.Hypot(real(z), imag(z))
+	r2 := square(z)
 	switch {
-	case r > l.r0:
-		return l.at(z, r)
+	case r2 > l.r0*l.r0:
+		return l.at(z, r2)
 	case p.inside != nil:
 		return p.inside.at(z)
 	case p.source:
 		return p.mean + p.q*p.series
 	}
-	return l.innerT + wave(l.inner, z*complex(1/l.r0, 0))
+	return l.innerT + harmonic.Sum(l.inner, z*complex(1/l.r0, 0))
 }
 
-// at is the temperature in the rings, or on the outermost rim where there is none.
-func (l *layers) at(z complex128, r float64) float64 {
+// at is the temperature in the rings at z, r2 = |z|², or on the outermost rim where there is none.
+func (l *layers) at(z complex128, r2 float64) float64 {
 	last := len(l.rings) - 1
 	if last < 0 {
-		return l.innerT + wave(l.inner, z*complex(1/r, 0))
+		return l.innerT + harmonic.Sum(l.inner, z*complex(1/math.Sqrt(r2), 0))
 	}
 	i := 0
-	for i < last && r > l.rings[i].R1 {
+	for i < last && r2 > l.rings[i].R1*l.rings[i].R1 {
 		i++
 	}
 	g := &l.rings[i]
-	if r > g.R1 {
-		z *= complex(g.R1/r, 0)
-		r = g.R1
+	if out := g.R1 * g.R1; r2 > out {
+		z *= complex(g.R1/math.Sqrt(r2), 0)
+		r2 = out
 	}
-	t := l.mean[i] + l.q*math.Log(g.R1/r)/(2*math.Pi*g.K)
-	t += wave(l.f[i], z*complex(1/g.R1, 0))
+	t := l.mean[i] + l.q*math.Log(g.R1*g.R1/r2)/(4*math.Pi*g.K)
+	t += l.f[i].at(z*complex(1/g.R1, 0), r2/(g.R1*g.R1))
 	// g (R0/r)^n e^{inθ} is a power of R0/conj(z).
-	return t + wave(l.g[i], z*complex(g.R0/(r*r), 0))
-}
-
-// wave returns Re Σ x[n-1] z^n.
-func wave(x []complex128, z complex128) float64 {
-	var s complex128
-	for n := len(x) - 1; n >= 0; n-- {
-		s = (s + x[n]) * z
-	}
-	return real(s)
+	return t + l.g[i].at(z*complex(g.R0/r2, 0), g.R0*g.R0/r2)
 }
