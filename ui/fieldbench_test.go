@@ -84,6 +84,9 @@ func newSolvingBench(t testing.TB, design string) *bench {
 
 // open opens the desk with the test's goroutine for the window's.
 func (b *bench) open(d *section.Document, r Rooms) {
+	if fyne.CurrentApp().Settings().Theme() != fyne.Theme(NewTheme(LookLight)) { // another test had its own
+		fyne.CurrentApp().Settings().SetTheme(NewTheme(LookLight))
+	}
 	r.Hop = func(f func()) { b.hops <- f }
 	r.Beside = func(f func()) { f() }
 	r.After = func(_ time.Duration, f func()) func() {

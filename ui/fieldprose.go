@@ -81,6 +81,9 @@ func (p *prose) say(runs ...run) {
 		was = p.runs[p.editing].in
 	}
 	p.runs, p.hovered = runs, -1
+	if !open {
+		p.message, p.wrong = "", false
+	}
 	if open {
 		p.editing = -1
 		for i, r := range runs {
@@ -191,7 +194,7 @@ func (p *prose) Tapped(e *fyne.PointEvent) {
 
 // edit puts an entry in the place of the run.
 func (p *prose) edit(i int) {
-	p.editing, p.message = i, ""
+	p.editing, p.message, p.wrong = i, "", false
 	e := newFieldEntry(p.desk, p.runs[i].in)
 	e.say = func(understood string, err error) {
 		p.message, p.wrong = understood, err != nil
@@ -201,8 +204,11 @@ func (p *prose) edit(i int) {
 		p.relay()
 	}
 	e.about = p.about
-	e.after = func(fieldEnd) {
-		p.editing, p.entry, p.message = -1, nil, ""
+	e.after = func(how fieldEnd) {
+		p.editing, p.entry = -1, nil
+		if how != fieldLeft || !p.wrong { // why it was not taken stays until something else is said
+			p.message, p.wrong = "", false
+		}
 		if c := fyne.CurrentApp().Driver().CanvasForObject(p); c != nil && c.Focused() == fyne.Focusable(e) {
 			c.Unfocus()
 		}

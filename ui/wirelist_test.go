@@ -262,3 +262,51 @@ func BenchmarkWireList200(b *testing.B) {
 		l.changed(ChangedResult)
 	}
 }
+
+// Nonsense left behind is not taken, and the list says why until something else is done.
+func TestWireListSaysWhyNothingWasTaken(t *testing.T) {
+	b := newBench(t, benchDesign)
+	l := NewWireList(b.Desk)
+	c := b.show(l, 1000, 300)
+	clickCell(l, "L10", wireLimit, 0)
+	was := b.Document()
+	c.Focused().TypedRune('x')
+	c.Unfocus()
+	if b.Document() != was || l.body.entry != nil || !l.body.wrong || l.body.message == "" {
+		t.Errorf("left behind: entry %v, says %q", l.body.entry != nil, l.body.message)
+	}
+	clickCell(l, "L1", wireID, 0)
+	if l.body.message != "" {
+		t.Errorf("still says %q", l.body.message)
+	}
+}
+
+// A conductor whose current nobody has said has no margin, and its temperature is a lower bound.
+func TestWireListDoesNotReadUnknownAsZero(t *testing.T) {
+	b := newBench(t, benchDesign)
+	l := NewWireList(b.Desk)
+	b.answer(map[string]float64{"N1": 60}, nil)
+	r := l.rows[l.row("N1")]
+	if r.temperature() != "≥ 60" || r.marginText() != "" {
+		t.Errorf("N1 reads %q, margin %q", r.temperature(), r.marginText())
+	}
+	b.answer(map[string]float64{"N1": 95}, nil)
+	if r = l.rows[l.row("N1")]; !r.over() || r.marginText() != "−5" {
+		t.Errorf("N1 is over even without its own heat, and reads %q", r.marginText())
+	}
+}
+
+// The row one works on stays in sight when a new answer sorts others past it.
+func TestWireListKeepsTheActiveRowInSight(t *testing.T) {
+	b := newBench(t, manyWires(60))
+	l := NewWireList(b.Desk)
+	b.show(l, 1000, 230)
+	l.SortBy(wireTemp)
+	l.SortBy(wireTemp)
+	clickCell(l, l.rows[1].id, wireCurrent, 0)
+	id := l.active.id
+	b.answer(map[string]float64{id: 20}, nil)
+	if first, last := l.inSight(); l.row(id) != len(l.rows)-1 || l.row(id) < first || l.row(id) >= last {
+		t.Errorf("%s is row %d, rows %d to %d are in sight", id, l.row(id), first, last)
+	}
+}

@@ -69,6 +69,7 @@ func (b *wireBody) Tapped(e *fyne.PointEvent) {
 	held := b.held | keysHeld()
 	b.held = 0
 	i := b.rowAt(e.Position)
+	b.stop()
 	b.takeFocus()
 	if i < 0 {
 		b.list.desk.Select()
@@ -220,17 +221,22 @@ func (b *wireBody) edit(cell wireCell) {
 
 // stop takes the entry out of its cell.
 func (b *wireBody) stop() {
-	b.entry, b.frame, b.message = nil, nil, ""
+	b.entry, b.frame, b.message, b.wrong = nil, nil, "", false
 	b.Refresh()
 }
 
 // edited ends editing and goes on to the neighbour where an arrow asked for it.
 func (b *wireBody) edited(how fieldEnd) {
 	cell := b.cell
-	b.stop()
 	if how == fieldLeft {
+		b.entry, b.frame = nil, nil
+		if !b.wrong { // why it was not taken stays until the next press or key
+			b.message = ""
+		}
+		b.Refresh()
 		return
 	}
+	b.stop()
 	b.takeFocus()
 	if step := map[fieldEnd]int{fieldUp: -1, fieldDown: 1}[how]; step != 0 {
 		l := b.list

@@ -164,28 +164,27 @@ func (l *WireList) cellBox(i int, c wireColumn) (fyne.Position, fyne.Size) {
 	return fyne.NewPos(left, float32(i)*m.rowHeight+1), fyne.NewSize(right-left, m.rowHeight-2)
 }
 
-// overlay draws the entry being edited, and the tip: how its text is understood, or the whole of an elided cell under the pointer.
+// overlay draws the entry being edited, and the tip: how its text is understood, why one was not taken, or the whole of an elided cell under
+// the pointer.
 func (r *wireBodyRenderer) overlay() {
 	b, l := r.body, r.body.list
+	i, c, text, wrong := b.hovered, b.column, r.elidedUnderPointer(), false
+	if b.entry != nil || b.message != "" {
+		i, c, text, wrong = l.row(b.cell.id), b.cell.col, b.message, b.wrong
+	}
+	if i < 0 {
+		return
+	}
+	at, size := l.cellBox(i, max(0, c))
 	if b.entry != nil {
-		i := l.row(b.cell.id)
-		if i < 0 {
-			return
-		}
-		at, size := l.cellBox(i, b.cell.col)
 		size.Width = max(size.Width, 90)
 		at.X = min(at.X, max(0, max(l.layout.width, l.scroll.Size().Width)-size.Width))
 		b.frame.Move(at)
 		b.frame.Resize(size)
 		r.objects = append(r.objects, b.frame)
-		if b.message != "" {
-			r.objects = append(r.objects, r.tip.show(b.message, b.wrong, at, size, l.window())...)
-		}
-		return
 	}
-	if text := r.elidedUnderPointer(); text != "" {
-		at, size := l.cellBox(b.hovered, b.column)
-		r.objects = append(r.objects, r.tip.show(text, false, at, size, l.window())...)
+	if text != "" {
+		r.objects = append(r.objects, r.tip.show(text, wrong, at, size, l.window())...)
 	}
 }
 

@@ -32,6 +32,7 @@ func (b *wireBody) editActive() bool {
 
 // TypedKey moves the active cell and edits it.
 func (b *wireBody) TypedKey(key *fyne.KeyEvent) {
+	b.stop()
 	l := b.list
 	page := max(1, int(l.scroll.Size().Height/max(1, l.layout.rowHeight))-1)
 	switch key.Name {
