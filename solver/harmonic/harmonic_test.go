@@ -56,9 +56,9 @@ func TestApplyIsTheTranslation(t *testing.T) {
 		discs[i] = Disc{C: c.C[i], A: c.A[i], S: s}
 	}
 	s := NewSystem(discs, c.Circle, nil, 1e-13)
+	s.Build(1, never)
 	x, y := make([]float64, s.n()), make([]float64, s.n())
 	for i := range discs {
-		s.Build(i)
 		for m, d := range c.D[i] {
 			v := d * complex(roots[m]/discs[i].S[m], 0)
 			x[s.off[i]+2*m], x[s.off[i]+2*m+1] = real(v), imag(v)
@@ -90,6 +90,8 @@ func TestApplyIsTheTranslation(t *testing.T) {
 	}
 }
 
+func never() bool { return false }
+
 func (s *System) n() int { return s.Len() }
 
 // The product is symmetric, with and without a wall, whatever was cut.
@@ -102,9 +104,7 @@ func TestApplyIsSymmetric(t *testing.T) {
 			discs[i] = Disc{C: c.C[i], A: c.A[i], S: []float64{1, .9, .8, .7, .6, .5}}
 		}
 		s := NewSystem(discs, circle, nil, 1e-3)
-		for i := range discs {
-			s.Build(i)
-		}
+		s.Build(1, never)
 		u, v := make([]float64, s.n()), make([]float64, s.n())
 		for i := range u {
 			u[i], v[i] = r.NormFloat64(), r.NormFloat64()
@@ -274,9 +274,7 @@ func TestApplyMany(t *testing.T) {
 		discs[i] = Disc{C: c.C[i], A: c.A[i], S: []float64{1, .9, .8, .7, .6, .5}[:3+i%3]}
 	}
 	s := NewSystem(discs, c.Circle, nil, 1e-4)
-	for i := range discs {
-		s.Build(i)
-	}
+	s.Build(1, never)
 	x, y := make([]float64, Many*s.Len()), make([]float64, Many*s.Len())
 	for i := range x {
 		x[i] = r.NormFloat64()
@@ -293,5 +291,59 @@ func TestApplyMany(t *testing.T) {
 				t.Fatalf("vector %d, element %d: %g, want %g", v, i, y[Many*i+v], w[i])
 			}
 		}
+	}
+}
+
+func TestDot(t *testing.T) {
+	r := rand.New(rand.NewPCG(9, 9))
+	for n := range 70 {
+		a, b := make([]float64, n), make([]float64, n+3)
+		for i := range a {
+			a[i] = r.NormFloat64()
+		}
+		for i := range b {
+			b[i] = r.NormFloat64()
+		}
+		if got, want := Dot(a, b), dotPlain(a, b); math.Abs(got-want) > 1e-13*float64(n) {
+			t.Errorf("%d: %g, want %g", n, got, want)
+		}
+	}
+}
+
+// Many goroutines write and multiply like one.
+func TestSharedProduct(t *testing.T) {
+	r := rand.New(rand.NewPCG(10, 10))
+	var discs []Disc
+	for len(discs) < 160 {
+		c := complex(2*r.Float64()-1, 2*r.Float64()-1)
+		if a := 0.03 + 0.02*r.Float64(); size(c)+a < 1 {
+			s := make([]float64, 12)
+			for n := range s {
+				s[n] = 0.9
+			}
+			discs = append(discs, Disc{C: c, A: a, S: s}) // overlaps count as contacts
+		}
+	}
+	circle := &Circle{R: 1, RhoInf: -0.7, Sigma: []float64{0.2, 0.1}}
+	one, two := NewSystem(discs, circle, nil, 1e-5), NewSystem(discs, circle, nil, 1e-5)
+	one.Build(1, never)
+	two.Build(3, never)
+	if one.parts != nil || len(two.parts) != 4 {
+		t.Fatalf("parts %v and %v of %d entries", one.parts, two.parts, two.Entries())
+	}
+	x := make([]float64, one.Len())
+	for i := range x {
+		x[i] = r.NormFloat64()
+	}
+	y, z := make([]float64, one.Len()), make([]float64, one.Len())
+	one.Apply(y, x)
+	two.Apply(z, x)
+	for i := range y {
+		if math.Abs(y[i]-z[i]) > 1e-12 {
+			t.Fatalf("element %d: %g, want %g", i, z[i], y[i])
+		}
+	}
+	if two.Build(2, func() bool { return true }) {
+		t.Error("a build that was stopped says that it came to the end")
 	}
 }

@@ -51,3 +51,12 @@ func (b *block) apply8Plain(xi, xj, yi, yj []float64) {
 		}
 	}
 }
+
+func dotPlain(a, b []float64) float64 {
+	s := 0.0
+	b = b[:len(a)]
+	for i, v := range a {
+		s += v * b[i]
+	}
+	return s
+}

@@ -6,6 +6,9 @@ func applyAVX(cols *uint16, n int, data, xi, xj, yi, yj *float64)
 //go:noescape
 func apply8AVX(cols *uint16, n int, data, xi, xj, yi, yj *float64)
 
+//go:noescape
+func dotAVX(a, b *float64, n int) float64
+
 func cpuid(leaf, sub uint32) (a, b, c, d uint32)
 
 func xgetbv() (a uint32)
@@ -39,4 +42,13 @@ func (b *block) apply8(xi, xj, yi, yj []float64) {
 		return
 	}
 	b.apply8Plain(xi, xj, yi, yj)
+}
+
+// Dot returns Σ a[i] b[i] over a; b is at least as long.
+func Dot(a, b []float64) float64 {
+	if wide && len(a) >= 8 {
+		b = b[:len(a)]
+		return dotAVX(&a[0], &b[0], len(a))
+	}
+	return dotPlain(a, b)
 }

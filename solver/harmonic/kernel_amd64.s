@@ -138,6 +138,64 @@ done8:
 	VZEROUPPER
 	RET
 
+// func dotAVX(a, b *float64, n int) float64
+TEXT ·dotAVX(SB), NOSPLIT, $0-32
+	MOVQ a+0(FP), SI
+	MOVQ b+8(FP), DI
+	MOVQ n+16(FP), CX
+	VXORPD Y0, Y0, Y0
+	VXORPD Y1, Y1, Y1
+	VXORPD Y2, Y2, Y2
+	VXORPD Y3, Y3, Y3
+
+dot16:
+	CMPQ CX, $16
+	JLT  dot4
+	VMOVUPD (SI), Y4
+	VMOVUPD 32(SI), Y5
+	VMOVUPD 64(SI), Y6
+	VMOVUPD 96(SI), Y7
+	VFMADD231PD (DI), Y4, Y0
+	VFMADD231PD 32(DI), Y5, Y1
+	VFMADD231PD 64(DI), Y6, Y2
+	VFMADD231PD 96(DI), Y7, Y3
+	ADDQ $128, SI
+	ADDQ $128, DI
+	SUBQ $16, CX
+	JMP  dot16
+
+dot4:
+	CMPQ CX, $4
+	JLT  dot1
+	VMOVUPD (SI), Y4
+	VFMADD231PD (DI), Y4, Y0
+	ADDQ $32, SI
+	ADDQ $32, DI
+	SUBQ $4, CX
+	JMP  dot4
+
+dot1:
+	CMPQ CX, $0
+	JLE  dotsum
+	VMOVSD (SI), X4
+	VMOVSD (DI), X5
+	VFMADD231PD Y5, Y4, Y1
+	ADDQ $8, SI
+	ADDQ $8, DI
+	DECQ CX
+	JMP  dot1
+
+dotsum:
+	VADDPD Y1, Y0, Y0
+	VADDPD Y3, Y2, Y2
+	VADDPD Y2, Y0, Y0
+	VEXTRACTF128 $1, Y0, X1
+	VADDPD X1, X0, X0
+	VHADDPD X0, X0, X0
+	VZEROUPPER
+	MOVSD X0, ret+24(FP)
+	RET
+
 // func cpuid(leaf, sub uint32) (a, b, c, d uint32)
 TEXT ·cpuid(SB), NOSPLIT, $0-24
 	MOVL leaf+0(FP), AX

@@ -1,6 +1,10 @@
 package harmonic
 
-import "math"
+import (
+	"math"
+	"sync"
+	"sync/atomic"
+)
 
 // Disc is a round part as the system sees it: centre, outer radius, and one scale per harmonic n = 1 … len(S). The system's unknowns of
 // a disc are δ_n/S[n-1].
@@ -26,6 +30,9 @@ type System struct {
 	work   builder
 	alpha  []float64 // room for the circle's amplitudes, many vectors
 	idle   []float64 // noughts that stand for what a product does not need
+
+	parts []int       // discs whose columns different goroutines multiply with: from parts[p] to parts[p+1]
+	sums  [][]float64 // what all but the first of them bring
 }
 
 // NewSystem lays out the discs; Build writes their blocks. A nil circle stands for a medium without end. The discs are mapped to the
@@ -71,19 +78,46 @@ func (s *System) Disc(i int) Disc { return s.discs[i] }
 // at returns the block of discs i ≤ j.
 func (s *System) at(i, j int) *block { return &s.blocks[j*(j+1)/2+i] }
 
-// Build writes the blocks between disc j and every disc i ≤ j, and j's map to the circle.
-func (s *System) Build(j int) {
+// Build writes all blocks, on up to threads goroutines. It asks stop now and then and reports whether it came to the end.
+func (s *System) Build(threads int, stop func() bool) bool {
+	n := len(s.discs)
+	if n < 24 {
+		threads = 1
+	}
+	var next atomic.Int64
+	var stopped atomic.Bool
+	work := func(w *builder) {
+		for k := int(next.Add(1)) - 1; k < n; k = int(next.Add(1)) - 1 {
+			if stopped.Load() || stop() {
+				stopped.Store(true)
+				return
+			}
+			s.column(w, n-1-k) // the longest first
+		}
+	}
+	var all sync.WaitGroup
+	for range threads - 1 {
+		all.Go(func() { work(new(builder)) })
+	}
+	work(&s.work)
+	all.Wait()
+	s.share(threads)
+	return !stopped.Load()
+}
+
+// column writes the blocks between disc j and every disc i ≤ j, and j's map to the circle.
+func (s *System) column(w *builder, j int) {
 	if len(s.weight) > 0 {
-		s.work.port(&s.ports[j], s.discs[j], s.circle.R, s.weight)
+		w.port(&s.ports[j], s.discs[j], s.circle.R, s.weight)
 	}
 	for i := range j + 1 {
-		s.couple(i, j)
+		s.couple(w, i, j)
 	}
 }
 
 // couple writes the block of discs i ≤ j.
-func (s *System) couple(i, j int) {
-	s.work.write(s.at(i, j), s.discs[i], s.discs[j], i == j, s.circle, s.cut)
+func (s *System) couple(w *builder, i, j int) {
+	w.write(s.at(i, j), s.discs[i], s.discs[j], i == j, s.circle, s.cut)
 	s.logs[j*(j+1)/2+i] = s.near(i, j)
 }
 
@@ -94,9 +128,9 @@ func (s *System) Put(i int, d Disc) {
 	if relay {
 		s.layout()
 	}
-	s.Build(i)
+	s.column(&s.work, i)
 	for j := i + 1; j < len(s.discs); j++ {
-		s.couple(i, j)
+		s.couple(&s.work, i, j)
 	}
 }
 
@@ -107,6 +141,15 @@ func (s *System) Entries() int {
 		n += len(s.blocks[i].data)
 	}
 	return n
+}
+
+// Fork returns a system with the same blocks and work space of its own, so that both can multiply at the same time. Neither may be
+// written to meanwhile.
+func (s *System) Fork() *System {
+	f := *s
+	f.alpha, f.idle = make([]float64, len(s.alpha)), make([]float64, len(s.idle))
+	f.work, f.parts = builder{}, nil
+	return &f
 }
 
 // Apply sets y = S 𝒢 S x.
@@ -120,13 +163,10 @@ func (s *System) ApplyMany(y, x []float64) { s.apply(y, x, many) }
 
 func (s *System) apply(y, x []float64, k int) {
 	clear(y)
-	for j := range s.discs {
-		xj, yj := x[k*s.off[j]:k*s.off[j+1]], y[k*s.off[j]:k*s.off[j+1]]
-		for i := range j + 1 {
-			if b := s.at(i, j); len(b.data) > 0 {
-				b.applyTo(x[k*s.off[i]:k*s.off[i+1]], xj, y[k*s.off[i]:k*s.off[i+1]], yj, k)
-			}
-		}
+	if k == 1 && len(s.parts) > 0 {
+		s.together(y, x)
+	} else {
+		s.columns(y, x, 0, len(s.discs), k)
 	}
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return
@@ -135,6 +175,62 @@ func (s *System) apply(y, x []float64, k int) {
 	s.gather(alpha, x, k)
 	s.reflect(alpha, k)
 	s.spread(y, alpha, k)
+}
+
+// columns multiplies with the blocks of discs from ≤ j < to.
+func (s *System) columns(y, x []float64, from, to, k int) {
+	for j := from; j < to; j++ {
+		xj, yj := x[k*s.off[j]:k*s.off[j+1]], y[k*s.off[j]:k*s.off[j+1]]
+		for i := range j + 1 {
+			if b := s.at(i, j); len(b.data) > 0 {
+				b.applyTo(x[k*s.off[i]:k*s.off[i+1]], xj, y[k*s.off[i]:k*s.off[i+1]], yj, k)
+			}
+		}
+	}
+}
+
+// worthSharing is the number of stored reals from which a product is spread over goroutines: below it they cost more than they save.
+const worthSharing = 4e5
+
+// share divides the discs into parts with about as many stored reals each.
+func (s *System) share(threads int) {
+	s.parts = nil
+	total := s.Entries()
+	if threads < 2 || float64(total) < worthSharing {
+		return
+	}
+	s.parts = []int{0}
+	sum := 0
+	for j := range s.discs {
+		for i := range j + 1 {
+			sum += len(s.at(i, j).data)
+		}
+		if sum*threads >= total*len(s.parts) {
+			s.parts = append(s.parts, j+1)
+		}
+	}
+	s.sums = make([][]float64, len(s.parts)-2)
+}
+
+// together is columns for all discs, the parts at the same time.
+func (s *System) together(y, x []float64) {
+	var all sync.WaitGroup
+	for p := range s.sums {
+		all.Go(func() {
+			if len(s.sums[p]) != len(y) {
+				s.sums[p] = make([]float64, len(y))
+			}
+			clear(s.sums[p])
+			s.columns(s.sums[p], x, s.parts[p+1], s.parts[p+2], 1)
+		})
+	}
+	s.columns(y, x, s.parts[0], s.parts[1], 1)
+	all.Wait()
+	for _, sum := range s.sums {
+		for i, v := range sum {
+			y[i] += v
+		}
+	}
 }
 
 // apart returns c_i − c_j, no shorter than the two radii: overlapping discs count as touching.

@@ -13,7 +13,7 @@ const deafT = 1e-12
 const maxSigma = 600
 
 // assemble writes the region's system, cables first. stop is asked between pieces of work; it reports whether all was done.
-func (g *region) assemble(cut float64, stop func() bool) bool {
+func (g *region) assemble(cut float64, threads int, stop func() bool) bool {
 	g.sources = nil
 	g.laws = make([]*law, len(g.pieces))
 	g.definite = true
@@ -21,11 +21,11 @@ func (g *region) assemble(cut float64, stop func() bool) bool {
 	for i := range g.pieces {
 		c := &g.pieces[i]
 		if c.inside != nil {
-			if !c.inside.assemble(cut, stop) {
+			if !c.inside.assemble(cut, threads, stop) {
 				return false
 			}
 			var ok bool
-			if g.laws[i], ok = c.inside.eliminate(c, stop); !ok {
+			if g.laws[i], ok = c.inside.eliminate(c, threads, stop); !ok {
 				return false
 			}
 		}
@@ -40,13 +40,7 @@ func (g *region) assemble(cut float64, stop func() bool) bool {
 	if g.rect != nil {
 		g.rect.write(g)
 	}
-	for i := range discs {
-		if stop() {
-			return false
-		}
-		g.sys.Build(i)
-	}
-	return true
+	return g.sys.Build(threads, stop)
 }
 
 // weights tells how much the jacket of a cable lets each harmonic through.

@@ -43,6 +43,15 @@ func (b *batch) product(y, x []float64) {
 	}
 }
 
+// column is vector v of x.
+func (b *batch) column(x []float64, v int) []float64 {
+	c := make([]float64, len(b.one))
+	for i := range c {
+		c[i] = x[many*i+v]
+	}
+	return c
+}
+
 // each applies f to every vector.
 func (b *batch) each(x []float64, f func([]float64)) {
 	for v := range many {

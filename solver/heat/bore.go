@@ -99,7 +99,7 @@ func (m *Model) coefficients(ctx context.Context) ([][]float64, bool) {
 	for s := range f {
 		f[s] = g.sourceColumn(s)
 	}
-	_, z, ok := g.columns(f, m.set.Accuracy.rough(), ended(ctx))
+	_, z, ok := g.columns(f, m.set.Accuracy.rough(), m.set.threads(), ended(ctx))
 	if !ok {
 		return nil, false
 	}

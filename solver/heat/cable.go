@@ -26,7 +26,7 @@ type law struct {
 }
 
 // eliminate solves the inside of cable c for every source and for every harmonic that the jacket lets in.
-func (g *region) eliminate(c *piece, stop func() bool) (*law, bool) {
+func (g *region) eliminate(c *piece, threads int, stop func() bool) (*law, bool) {
 	m := g.port
 	l := &law{n: 2 * m, tau: make([]float64, m), in: make([]float64, m), buf: make([]float64, 2*m)}
 	ports := make([]harmonic.Port, m)
@@ -48,7 +48,7 @@ func (g *region) eliminate(c *piece, stop func() bool) (*law, bool) {
 		f = append(f, g.driveColumn(omega))
 		omega[k/2] = 0
 	}
-	x, z, ok := g.columns(f, 1e-6, stop)
+	x, z, ok := g.columns(f, 1e-6, threads, stop)
 	if !ok {
 		return nil, false
 	}

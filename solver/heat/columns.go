@@ -1,55 +1,83 @@
 package heat
 
-import "packrise/solver/harmonic"
+import (
+	"sync"
+	"sync/atomic"
+
+	"packrise/solver/harmonic"
+)
 
 // many right-hand sides are iterated on together: element k of vector v stands at many·k + v.
 const many = harmonic.Many
 
 // columns solves A x = f for every right-hand side and returns the solutions and z = fᵀ A⁻¹ f, symmetric and with an error quadratic in
-// the residuals: fᵀ x + xᵀ (f − A x).
-func (g *region) columns(f [][]float64, tol float64, stop func() bool) (x, z [][]float64, ok bool) {
-	n := g.sys.Len()
+// the residuals: fᵀ x + xᵀ (f − A x). Up to threads batches go on at the same time.
+func (g *region) columns(f [][]float64, tol float64, threads int, stop func() bool) (x, z [][]float64, ok bool) {
 	x, res := make([][]float64, len(f)), make([][]float64, len(f))
-	b := newBatch(g)
-	for first := 0; first < len(f); first += many {
-		some := f[first:min(first+many, len(f))]
-		if !b.solve(some, tol, stop) {
-			return nil, nil, false
-		}
-		for v := range some {
-			x[first+v], res[first+v] = make([]float64, n), make([]float64, n)
-			for i := range n {
-				x[first+v][i], res[first+v][i] = b.x[many*i+v], b.r[many*i+v]
+	batches := (len(f) + many - 1) / many
+	var next atomic.Int64
+	var failed atomic.Bool
+	work := func(g *region) {
+		b := newBatch(g)
+		for k := int(next.Add(1)) - 1; k < batches; k = int(next.Add(1)) - 1 {
+			first := k * many
+			some := f[first:min(first+many, len(f))]
+			if failed.Load() || !b.solve(some, tol, stop) {
+				failed.Store(true)
+				return
+			}
+			for v := range some {
+				x[first+v], res[first+v] = b.column(b.x, v), b.column(b.r, v)
 			}
 		}
 	}
-	return x, products(f, x, res), true
+	var all sync.WaitGroup
+	for range min(threads, batches) - 1 {
+		mine := g.fork()
+		all.Go(func() { work(mine) })
+	}
+	work(g)
+	all.Wait()
+	if failed.Load() {
+		return nil, nil, false
+	}
+	return x, products(f, x, res, threads), true
+}
+
+// fork is a region that can be multiplied with beside g.
+func (g *region) fork() *region {
+	f := *g
+	f.sys = g.sys.Fork()
+	f.laws = make([]*law, len(g.laws))
+	for i, l := range g.laws {
+		if l != nil {
+			mine := *l
+			mine.buf = make([]float64, len(l.buf))
+			f.laws[i] = &mine
+		}
+	}
+	return &f
 }
 
 // products returns fᵢᵀ x_j + x_iᵀ res_j, which is symmetric.
-func products(f, x, res [][]float64) [][]float64 {
+func products(f, x, res [][]float64, threads int) [][]float64 {
 	z := make([][]float64, len(f))
 	for i := range f {
 		z[i] = make([]float64, len(f))
 	}
-	for i := range f {
-		for j := i; j < len(f); j++ {
-			v := dot2(f[i], x[j], x[i], res[j])
-			z[i][j], z[j][i] = v, v
-		}
+	var all sync.WaitGroup
+	for t := range threads {
+		all.Go(func() {
+			for i := t; i < len(f); i += threads {
+				for j := i; j < len(f); j++ {
+					v := harmonic.Dot(f[i], x[j]) + harmonic.Dot(x[i], res[j])
+					z[i][j], z[j][i] = v, v
+				}
+			}
+		})
 	}
+	all.Wait()
 	return z
-}
-
-// dot2 is aᵀb + cᵀd.
-func dot2(a, b, c, d []float64) float64 {
-	var s, t float64
-	b, c, d = b[:len(a)], c[:len(a)], d[:len(a)]
-	for i, v := range a {
-		s += v * b[i]
-		t += c[i] * d[i]
-	}
-	return s + t
 }
 
 // iterate improves x until A x = f to tol, relative to f.

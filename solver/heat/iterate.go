@@ -1,6 +1,10 @@
 package heat
 
-import "math"
+import (
+	"math"
+
+	"packrise/solver/harmonic"
+)
 
 // maxSteps ends an iteration that does not converge.
 const maxSteps = 400
@@ -102,14 +106,7 @@ func minres(a operator, x, f []float64, tol float64, stop func() bool) (steps in
 	return steps, true
 }
 
-func dot(a, b []float64) float64 {
-	s := 0.0
-	b = b[:len(a)]
-	for i, v := range a {
-		s += v * b[i]
-	}
-	return s
-}
+func dot(a, b []float64) float64 { return harmonic.Dot(a, b) }
 
 func scale(a []float64, f float64) {
 	for i := range a {

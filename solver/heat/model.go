@@ -3,6 +3,7 @@ package heat
 import (
 	"context"
 	"math"
+	"runtime"
 
 	"packrise/solver/harmonic"
 )
@@ -33,6 +34,14 @@ func (a Accuracy) settings() (factor, cut, tol float64) {
 		return 1.5, 1e-7, 1e-7
 	}
 	return 1, 1e-5, 1e-5
+}
+
+// threads is how many goroutines may work.
+func (s Settings) threads() int {
+	if s.Threads > 0 {
+		return s.Threads
+	}
+	return runtime.GOMAXPROCS(0)
 }
 
 // rough is the residual of columns whose products have an error quadratic in it.
@@ -95,7 +104,7 @@ func (m *Model) prepare(ctx context.Context) bool {
 		return true
 	}
 	_, cut, _ := m.set.Accuracy.settings()
-	if !m.top.assemble(cut, ended(ctx)) {
+	if !m.top.assemble(cut, m.set.threads(), ended(ctx)) {
 		return false
 	}
 	m.ready = true
