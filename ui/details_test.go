@@ -57,6 +57,23 @@ func TestDetailsTellOfRodsCablesAndTheWhole(t *testing.T) {
 	mustTell(t, d, "F1 · rod ⌀ 4 mm · polypropylene", "It runs at 50 °C; no limit is known: set one.")
 }
 
+func TestDetailsAskForAPlace(t *testing.T) {
+	b := newBench(t, strings.Replace(benchDesign, ", at_mm: [0, 2]}", "}", 1))
+	d := NewDetails(b.Desk)
+	b.show(d, 420, 600)
+	b.Select("N1")
+	mustTell(t, d, "It is not placed yet: drag it in, settle all parts, or give its place: x …, y ….")
+	if err := enter(b, inputOf(b, "x", "N1"), "1"); err != nil {
+		t.Fatal(err)
+	}
+	b.wait()
+	mustTell(t, d, "It lies at x 1 mm, y 0 mm.")
+	if err := enter(b, inputOf(b, "x", "N1"), ""); err != nil {
+		t.Fatal(err)
+	}
+	mustTell(t, d, "It is not placed yet")
+}
+
 func TestDetailsEditInTheSentence(t *testing.T) {
 	b := newBench(t, benchDesign)
 	d := NewDetails(b.Desk)

@@ -251,6 +251,7 @@ func counted(n int, what string) string {
 func (t *telling) place(p section.Part, in []*input) {
 	x, y := word(inputNamed(in, "x")), word(inputNamed(in, "y"))
 	if !p.At.OK {
+		x.text, y.text = "…", "…"
 		t.add(run{text: "It is not placed yet", tone: strong}, say(": drag it in, settle all parts, or give its place: x "), x, say(", y "), y, say("."))
 		return
 	}
@@ -260,7 +261,7 @@ func (t *telling) place(p section.Part, in []*input) {
 // wrong tells the problems that concern a part, or all of them for "".
 func (t *telling) wrong(id string) {
 	for _, p := range t.k.Problems() {
-		if id != "" && !slices.Contains(p.IDs, id) {
+		if id != "" && (!slices.Contains(p.IDs, id) || p.Rule == "unplaced") { // its place is told of already
 			continue
 		}
 		looks := alarm

@@ -98,7 +98,7 @@ func partInput(k *Desk, ids []string, in input, text func(section.Part) string,
 			return d
 		}, nil
 	}
-	if in.shown == "" {
+	if in.shown == "" && in.text != "" {
 		in.shown = withUnit(in.text, in.unit)
 	}
 	return &in

@@ -29,7 +29,7 @@ func wholeInputs(k *Desk) []*input {
 func wholeInput(in input, read func(text string) (meant string, f func(*section.Document), err error)) *input {
 	in.on = "section"
 	in.step = strings.ToLower(in.label)
-	if in.shown == "" {
+	if in.shown == "" && in.text != "" {
 		in.shown = withUnit(in.text, in.unit)
 	}
 	in.read = func(text string) (string, func(*section.Document) *section.Document, error) {
