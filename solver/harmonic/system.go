@@ -143,6 +143,9 @@ func (s *System) Entries() int {
 	return n
 }
 
+// Reflect replaces the circle by one that differs in Sigma alone, no longer than Top.
+func (s *System) Reflect(c *Circle) { s.circle = c }
+
 // Fork returns a system with the same blocks and work space of its own, so that both can multiply at the same time. Neither may be
 // written to meanwhile.
 func (s *System) Fork() *System {

@@ -41,7 +41,8 @@ func (g *region) columns(f [][]float64, tol float64, threads int, stop func() bo
 	if failed.Load() {
 		return nil, nil, false
 	}
-	return x, products(f, x, res, threads), true
+	z, ok = products(f, x, res, threads, stop)
+	return x, z, ok
 }
 
 // fork is a region that can be multiplied with beside g.
@@ -60,15 +61,15 @@ func (g *region) fork() *region {
 }
 
 // products returns fᵢᵀ x_j + x_iᵀ res_j, which is symmetric.
-func products(f, x, res [][]float64, threads int) [][]float64 {
-	z := make([][]float64, len(f))
+func products(f, x, res [][]float64, threads int, stop func() bool) (z [][]float64, ok bool) {
+	z = make([][]float64, len(f))
 	for i := range f {
 		z[i] = make([]float64, len(f))
 	}
 	var all sync.WaitGroup
 	for t := range threads {
 		all.Go(func() {
-			for i := t; i < len(f); i += threads {
+			for i := t; i < len(f) && !stop(); i += threads {
 				for j := i; j < len(f); j++ {
 					v := harmonic.Dot(f[i], x[j]) + harmonic.Dot(x[i], res[j])
 					z[i][j], z[j][i] = v, v
@@ -77,7 +78,7 @@ func products(f, x, res [][]float64, threads int) [][]float64 {
 		})
 	}
 	all.Wait()
-	return z
+	return z, !stop()
 }
 
 // iterate improves x until A x = f to tol, relative to f.

@@ -27,13 +27,15 @@ func (m *Model) Outside(w Wall) {
 	}
 }
 
-// reflectAnew takes over what the round wall now reflects besides the images; false if the images change as well or more harmonics come in
-// than the parts are mapped to.
+// reflectAnew takes over what the round wall now reflects besides the images; false if the images change as well or many more harmonics come
+// in than the parts are mapped to. Results that are out keep the old circle.
 func (g *region) reflectAnew() bool {
 	c := g.newCircle()
 	if c.RhoInf != g.circle.RhoInf || len(c.Sigma) > g.sys.Top()+2 {
 		return false
 	}
-	g.circle.Sigma = c.Sigma
+	c.Sigma = c.Sigma[:min(len(c.Sigma), g.sys.Top())] // what is cut is as small as what newCircle leaves out
+	g.circle = c
+	g.sys.Reflect(c)
 	return true
 }
