@@ -21,6 +21,8 @@ type SectionView struct {
 
 	// OnActivated is called for a double click on a part.
 	OnActivated func(id string)
+	// OnPainted is called when another picture has come.
+	OnPainted func()
 	// OnKey is called for keys that the canvas has no use for.
 	OnKey func(*fyne.KeyEvent)
 
@@ -164,6 +166,9 @@ func (v *SectionView) repaint() {
 func (v *SectionView) show(p *picture) {
 	v.pic, v.stretched = p, nil
 	v.raster.Refresh()
+	if v.OnPainted != nil {
+		v.OnPainted()
+	}
 }
 
 // draw is the raster's generator: it only hands out pictures that are there.

@@ -3,49 +3,66 @@ package ui
 import (
 	"fmt"
 	"io"
+	"strings"
 
 	"fyne.io/fyne/v2"
 )
 
 // tracer prints one line for each thing that a script may wait for, so that the real window can be tested without guessing at times.
 type tracer struct {
-	w   *Window
-	out io.Writer
+	w      *Window
+	out    io.Writer
+	placed string
 }
 
-func newTracer(w *Window, out io.Writer) *tracer { return &tracer{w: w, out: out} }
+func newTracer(w *Window, out io.Writer) *tracer {
+	t := &tracer{w: w, out: out}
+	if out != nil {
+		w.view.OnPainted = t.places
+	}
+	return t
+}
 
-// changed prints what changed: the title, the revision that was solved, and where each part is on the screen of the window.
+// changed prints the title and the steps to undo and redo, the selection, and the answer to the document as it is.
 func (t *tracer) changed(c Changed) {
 	if t.out == nil {
 		return
 	}
 	k := t.w.desk
 	if c&(ChangedDocument|ChangedFile) != 0 {
-		fmt.Fprintf(t.out, "title %s\n", t.w.title())
-		fmt.Fprintf(t.out, "document rev %d, undo %q, redo %q\n", k.Revision(), k.UndoName(), k.RedoName())
+		t.line("title %s", t.w.title())
+		t.line("document rev %d, undo %q, redo %q", k.Revision(), k.UndoName(), k.RedoName())
 	}
 	if c&ChangedSelection != 0 {
-		fmt.Fprintf(t.out, "selected %q\n", k.Selection())
+		t.line("selected %q", k.Selection())
 	}
-	if c&ChangedResult == 0 || k.Solving() || k.Draft() {
-		return
+	if c&ChangedResult != 0 && !k.Solving() && !k.Draft() {
+		answer, _, _ := k.Sentence()
+		t.line("solved rev %d: %s", k.Revision(), answer)
 	}
-	t.places()
-	answer, _, _ := k.Sentence()
-	fmt.Fprintf(t.out, "solved rev %d: %s\n", k.Revision(), answer)
 }
 
-// places prints the middle of each part in device pixels of the window.
+func (t *tracer) line(format string, args ...any) { fmt.Fprintf(t.out, format+"\n", args...) }
+
+// places prints where each part is, in device pixels of the window, if any has another place.
 func (t *tracer) places() {
 	v := t.w.view
+	if v.camera.scale == 0 {
+		return
+	}
 	origin := fyne.CurrentApp().Driver().AbsolutePositionForObject(v)
 	scale := t.w.win.Canvas().Scale()
-	for _, s := range t.w.desk.shownShapes() {
-		if s.ID == "" || v.camera.scale == 0 {
-			continue
+	var s strings.Builder
+	for _, sh := range t.w.desk.shownShapes() {
+		if sh.ID != "" {
+			p := v.camera.toUnits(sh.At, v.Size())
+			fmt.Fprintf(&s, "part %s at %.0f,%.0f px\n", sh.ID, (origin.X+p.X)*scale, (origin.Y+p.Y)*scale)
 		}
-		p := v.camera.toUnits(s.At, v.Size())
-		fmt.Fprintf(t.out, "part %s at %.0f,%.0f px, radius %.0f px\n", s.ID, (origin.X+p.X)*scale, (origin.Y+p.Y)*scale, s.OuterR()*v.camera.scale*float64(scale))
 	}
+	if s.String() == t.placed {
+		return
+	}
+	t.placed = s.String()
+	fmt.Fprint(t.out, t.placed)
+	t.line("placed %d parts", strings.Count(t.placed, "\n"))
 }

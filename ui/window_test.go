@@ -466,6 +466,7 @@ func TestTraceTellsScripts(t *testing.T) {
 	t.Cleanup(w.Close)
 	w.win.Resize(usualSize)
 	l.solved(t, w.desk)
+	l.until(t, "the places", func() bool { return strings.Contains(out.String(), "placed 4 parts") })
 	for _, want := range []string{"title Three and a filler – Packrise\n", "part L1 at ", "solved rev 1: "} {
 		if !strings.Contains(out.String(), want) {
 			t.Errorf("%q lacks %q", out.String(), want)
