@@ -158,6 +158,7 @@ func checkLoads(r *report, d *Document) {
 			case id == "":
 			case !ok:
 				r.add(at, "unknown-conductor", "there is no conductor "+show(id), conductorAdvice(id, ids), id)
+			case kind != Core && kind != Cable && kind != Rod: // reported already
 			case kind != Core:
 				r.add(at, "not-a-conductor", fmt.Sprintf("%s is a %s and no conductor", show(id), kind), loadAdvice(id, kind, ids), id)
 			case taken[id] != "":

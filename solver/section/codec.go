@@ -2,6 +2,7 @@ package section
 
 import (
 	"bytes"
+	"errors"
 	"fmt"
 
 	"gopkg.in/yaml.v3"
@@ -15,9 +16,18 @@ func Read(data []byte) (*Document, []Problem) { return current.read(data) }
 // Write returns the document as YAML. Keys, order, style and comments of the file that it was read from are kept: what did not
 // change is the same to the byte. It fails for a document that Read would refuse, naming the first problem.
 func Write(d *Document) ([]byte, error) {
+	data, err := toText(d)
+	if err != nil {
+		return nil, fmt.Errorf("section: not written: %w", err)
+	}
+	return data, nil
+}
+
+// toText is Write with an error that has no context yet.
+func toText(d *Document) ([]byte, error) {
 	for _, p := range Check(d) {
 		if p.Severity == Refused {
-			return nil, fmt.Errorf("section: not written: %s", p.Sentence())
+			return nil, errors.New(p.Sentence())
 		}
 	}
 	return current.write(d)

@@ -79,7 +79,7 @@ func reason(err error) error {
 // Save writes the document to path atomically (write aside, flush, rename), so that path holds the old or the new file, whole,
 // whatever happens. An existing file keeps its mode; a link is followed.
 func Save(path string, d *Document) error {
-	data, err := Write(d)
+	data, err := toText(d)
 	if err == nil {
 		err = writeFile(path, data, func(f *os.File) io.Writer { return f })
 	}

@@ -14,6 +14,9 @@ func (o *origin) patch(tree *yaml.Node, lossy bool) []byte {
 	if o == nil {
 		return nil
 	}
+	if same(o.root, tree) {
+		return o.text
+	}
 	p := &patcher{newSource(string(o.text)), lossy}
 	if o.root.Style&yaml.FlowStyle != 0 {
 		from, to, text, ok := p.inline(o.root, tree)

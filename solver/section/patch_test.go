@@ -27,11 +27,7 @@ func diff(a, b *Document) string {
 }
 
 // patched writes d, and fails the test if that was not done by patching the file that it came from.
-func patched(t interface {
-	Fatal(...any)
-	Fatalf(string, ...any)
-}, d *Document,
-) string {
+func patched(t fataler, d *Document) string {
 	text := d.origin.patch(current.tree(d), false)
 	if text == nil {
 		t.Fatal("the origin can't be patched")

@@ -90,7 +90,7 @@ func (r *report) problems() []Problem {
 		if p.Line = f.line; p.Line == 0 {
 			p.Line = locate(r.root, f.at)
 		}
-		shown := "`" + key + "`"
+		shown := "`" + show(key) + "`"
 		if key == "" {
 			shown = "it"
 		}
@@ -118,9 +118,9 @@ func (r *report) owner(at path) (name string, ids []string, key string) {
 			break
 		}
 		id, _ := r.partID(b.Parts, st[3].i)
-		return fmt.Sprintf("part %s of build %s", id, b.Name), r.placed(b, st[3].i), showSteps(st[4:])
+		return fmt.Sprintf("part %s of build %s", id, show(b.Name)), r.placed(b, st[3].i), showSteps(st[4:])
 	case len(st) >= 2 && st[0].key == "builds":
-		return "build " + st[1].key, []string{st[1].key}, showSteps(st[2:])
+		return "build " + show(st[1].key), []string{st[1].key}, showSteps(st[2:])
 	case len(st) >= 2 && st[0].key == "loads" && st[1].i >= 0:
 		if i := st[1].i; i < len(r.doc.Loads) && r.doc.Loads[i].ID != "" {
 			return "load " + show(r.doc.Loads[i].ID), []string{r.doc.Loads[i].ID}, showSteps(st[2:])

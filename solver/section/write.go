@@ -1,6 +1,7 @@
 package section
 
 import (
+	"errors"
 	"fmt"
 	"reflect"
 	"strings"
@@ -68,7 +69,7 @@ func (f format) write(d *Document) ([]byte, error) {
 			return text, nil
 		}
 	}
-	return nil, fmt.Errorf("section: not written: %s", why)
+	return nil, errors.New(why)
 }
 
 // tree returns d as fresh nodes.
