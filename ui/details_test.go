@@ -248,3 +248,13 @@ func TestDetailsScroll(t *testing.T) {
 		t.Error("another part begins at the top")
 	}
 }
+
+func BenchmarkDetailsOfAll200(b *testing.B) {
+	k := newBench(b, manyWires(200))
+	d := NewDetails(k.Desk)
+	k.show(d, 420, 600)
+	k.SelectAll()
+	for b.Loop() {
+		d.changed(ChangedResult | ChangedDocument)
+	}
+}

@@ -6,6 +6,7 @@ import (
 	"testing"
 
 	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/test"
 
@@ -308,5 +309,36 @@ func TestWireListKeepsTheActiveRowInSight(t *testing.T) {
 	b.answer(map[string]float64{id: 20}, nil)
 	if first, last := l.inSight(); l.row(id) != len(l.rows)-1 || l.row(id) < first || l.row(id) >= last {
 		t.Errorf("%s is row %d, rows %d to %d are in sight", id, l.row(id), first, last)
+	}
+}
+
+// Whatever the width, no cell and no header runs into its neighbour, and nothing is set smaller than 12.
+func TestWireListNeverOverlaps(t *testing.T) {
+	b := newBench(t, strings.ReplaceAll(benchDesign, "motor-1", "a circuit with a name that is longer than anybody would like"))
+	l := NewWireList(b.Desk)
+	b.answer(map[string]float64{"L1": 190.04, "L2": 89.96, "L10": 186.4}, nil)
+	for _, width := range []float32{240, 500, 760, 1024, 1400, 2000} {
+		b.show(l, width, 300)
+		l.SortBy(wireMargin)
+		for _, w := range []fyne.Widget{l.head, l.body} {
+			lines := map[int][]*canvas.Text{}
+			for _, o := range test.WidgetRenderer(w).Objects() {
+				if text, ok := o.(*canvas.Text); ok && text.Visible() && text.Text != "" {
+					lines[int(text.Position().Y+text.MinSize().Height/2+0.5)/8] = append(lines[int(text.Position().Y+text.MinSize().Height/2+0.5)/8], text)
+					if text.TextSize < 12 {
+						t.Errorf("%q is set in %v", text.Text, text.TextSize)
+					}
+				}
+			}
+			for _, line := range lines {
+				slices.SortFunc(line, func(a, b *canvas.Text) int { return int(a.Position().X - b.Position().X) })
+				for i, text := range line {
+					end := text.Position().X + text.MinSize().Width
+					if i+1 < len(line) && end > line[i+1].Position().X || end > max(width, l.layout.width)+0.5 || text.Position().X < 0 {
+						t.Errorf("width %v: %q runs from %v to %v", width, text.Text, text.Position().X, end)
+					}
+				}
+			}
+		}
 	}
 }
