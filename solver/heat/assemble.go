@@ -32,13 +32,13 @@ func (g *region) assemble(cut float64, threads int, stop func() bool) bool {
 		discs[i] = g.disc(i)
 		g.addSources(i)
 	}
-	if g.rect == nil {
+	if g.border == nil {
 		g.circle = g.newCircle()
 	}
 	g.sys = harmonic.NewSystem(discs, g.circle, g.weights(), cut)
 	g.setSigns()
-	if g.rect != nil {
-		g.rect.write(g)
+	if g.border != nil {
+		g.border.write(g)
 	}
 	return g.sys.Build(threads, stop)
 }
@@ -162,8 +162,8 @@ func (g *region) product(y, x, tmp []float64) {
 	copy(tmp, x)
 	g.lift(tmp)
 	g.sys.Apply(y, tmp)
-	if g.rect != nil {
-		g.rect.bring(g, nil, tmp, false, y, nil)
+	if g.border != nil {
+		g.border.bring(g, nil, tmp, false, y, nil)
 	}
 	g.drop(y)
 	for i, s := range g.sign {

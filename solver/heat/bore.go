@@ -68,7 +68,7 @@ func (m *Model) unit(ctx context.Context, s int, x []float64) (_, t []float64, o
 	if len(x) != g.sys.Len() {
 		x = make([]float64, g.sys.Len())
 	}
-	if s < 0 && g.rect == nil {
+	if s < 0 && g.border == nil {
 		for k := range q {
 			q[k] = m.p.Wall.Ambient
 		}
@@ -81,7 +81,7 @@ func (m *Model) unit(ctx context.Context, s int, x []float64) (_, t []float64, o
 		return x, nil, false
 	}
 	t = g.temperatures(q, x, s < 0)
-	if g.rect == nil {
+	if g.border == nil {
 		for k := range t {
 			t[k] += m.outsideR()
 		}
@@ -92,7 +92,7 @@ func (m *Model) unit(ctx context.Context, s int, x []float64) (_, t []float64, o
 // coefficients returns the rises of all sources for 1 W/m in each, held bores being left to float.
 func (m *Model) coefficients(ctx context.Context) ([][]float64, bool) {
 	g := m.top
-	if g.rect != nil {
+	if g.border != nil {
 		return m.coefficientsRect(ctx)
 	}
 	f := make([][]float64, len(g.sources))

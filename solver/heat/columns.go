@@ -85,7 +85,7 @@ func products(f, x, res [][]float64, threads int, stop func() bool) (z [][]float
 func (g *region) iterate(x, f []float64, tol float64, stop func() bool) (steps int, ok bool) {
 	tmp := make([]float64, len(x))
 	a := func(y, x []float64) { g.product(y, x, tmp) }
-	if g.rect != nil {
+	if g.border != nil {
 		return gmres(a, x, f, tol, stop)
 	}
 	if g.definite {

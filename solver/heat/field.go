@@ -5,7 +5,6 @@ import (
 	"sync"
 
 	"packrise/solver/harmonic"
-	"packrise/solver/outline"
 )
 
 // field is the temperature of a solved section. Its look-up tables are made by the first point that is asked for.
@@ -26,9 +25,9 @@ func (f *field) Row(dst []float64, y, x0, dx float64) {
 type charts struct {
 	once   sync.Once
 	tree   *harmonic.Tree
-	layers []layers       // per piece
-	wall   layers         // round
-	rect   *outline.Field // rectangle
+	layers []layers // per piece
+	wall   layers   // round
+	border pointField
 }
 
 // layers are the waves in the rings of a piece or a round wall: per ring f (r/R1)^n and g (R0/r)^n, and its mean temperature at R1.
@@ -52,9 +51,8 @@ func (s *state) chart() *charts {
 			drawn[i] = p.drawn
 			c.layers[i] = p.layers()
 		}
-		if s.rect != nil {
-			mid, half := s.rect.frame()
-			c.tree, c.rect = harmonic.NewTree(&s.cloud, drawn, mid, half), s.rect.sys.Field(s.rect.y)
+		if s.border != nil {
+			c.tree, c.border = harmonic.NewTree(&s.cloud, drawn, s.border.mid, s.border.half), s.border.field()
 			return
 		}
 		c.wall = s.wallLayers()
@@ -132,7 +130,7 @@ func (s *state) wallLayers() layers {
 // at returns the temperature at z of the region, NaN beyond its outer surface.
 func (s *state) at(z complex128) float64 {
 	c := s.chart()
-	if s.rect == nil {
+	if s.border == nil {
 		if r2 := square(z); r2 > s.wall.R*s.wall.R {
 			if o := s.wall.Outside() * (1 + 1e-12); r2 > o*o {
 				return math.NaN()
@@ -144,8 +142,8 @@ func (s *state) at(z complex128) float64 {
 	if i >= 0 {
 		return s.inPiece(i, z-s.pieces[i].at)
 	}
-	if s.rect != nil {
-		t += c.rect.At(z)
+	if s.border != nil {
+		t += c.border.At(z)
 	}
 	return t
 }

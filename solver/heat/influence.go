@@ -24,8 +24,8 @@ func (g *region) loadColumn(q []float64, ground bool) []float64 {
 			break
 		}
 	}
-	if g.rect != nil {
-		g.rect.bring(g, charge, v, ground, y, nil)
+	if g.border != nil {
+		g.border.bring(g, charge, v, ground, y, nil)
 	}
 	for i := range charge {
 		charge[i] *= g.c2()
@@ -44,8 +44,8 @@ func (g *region) temperatures(q, x []float64, ground bool) []float64 {
 	charge, v := g.outgoing(q, x)
 	mean := g.means(charge, v, nil)
 	y := make([]float64, len(x))
-	if g.rect != nil {
-		g.rect.bring(g, charge, v, ground, y, mean)
+	if g.border != nil {
+		g.border.bring(g, charge, v, ground, y, mean)
 	}
 	nested := false
 	for k := range q {

@@ -78,7 +78,7 @@ func (m *Model) layout() {
 	case Rect:
 		m.top = newRegion(p, -1, p.MediumK)
 		m.top.loosen(p.Clearance)
-		m.top.rect = newRectWall(p, factor)
+		m.top.border = newRectWall(p, factor)
 		for i := range m.top.pieces {
 			m.top.pieces[i].at += complex(p.Clearance/2, p.Clearance/2)
 		}
@@ -120,9 +120,9 @@ func (m *Model) prepare(ctx context.Context) bool {
 
 func ended(ctx context.Context) func() bool { return func() bool { return ctx.Err() != nil } }
 
-// level is the mean temperature of a round wall's inside for heats q; 0 of a rectangle, whose wall counts absolutely.
+// level is the mean temperature of a round wall's inside for heats q; 0 within a border, which counts absolutely.
 func (m *Model) level(q []float64) float64 {
-	if m.top.rect != nil {
+	if m.top.border != nil {
 		return 0
 	}
 	total := 0.0
@@ -235,11 +235,8 @@ func (m *Model) result(s *state) *Result {
 
 // readWall fills in the wall. A bare cable's jacket is its wall.
 func (m *Model) readWall(r *Result, s *state) {
-	if s.rect != nil {
-		r.WallMax, r.WallMean, r.SideOut = s.rect.hot, s.rect.mean, s.rect.sides
-		for _, q := range s.rect.sides {
-			r.Released += q
-		}
+	if s.border != nil {
+		r.WallMax, r.WallMean, r.SideOut, r.Released = s.border.hot, s.border.mean, s.border.sides, s.border.released
 		return
 	}
 	r.WallMax, r.WallMean, r.Released = s.wallFaces(&m.p.Wall)

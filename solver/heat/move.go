@@ -60,7 +60,7 @@ func (m *Model) shift() complex128 {
 	if i := m.bareCable(); i >= 0 {
 		return -complex(m.p.Parts[i].X, m.p.Parts[i].Y)
 	}
-	if m.top.rect == nil {
+	if m.p.Wall.Shape != Rect {
 		return 0
 	}
 	return complex(m.p.Clearance/2, m.p.Clearance/2)
@@ -88,8 +88,8 @@ func (g *region) relocate(i int, factor float64) bool {
 		} else {
 			n = max(n, g.orderBeside(&g.pieces[j], &g.pieces[i], factor, n))
 		}
-		if g.rect != nil {
-			n = min(n, maxOrderRect)
+		if g.border != nil {
+			n = min(n, maxOrderBorder)
 		}
 		if n == g.orders[j] {
 			continue
@@ -113,8 +113,8 @@ func (g *region) relocate(i int, factor float64) bool {
 	if grown {
 		g.setSigns()
 	}
-	if g.rect != nil && (len(changed) > 1 || grown || !g.rect.move(g, i)) {
-		g.rect.write(g)
+	if g.border != nil && (len(changed) > 1 || grown || !g.border.move(g, i)) {
+		g.border.write(g)
 	}
 	return true
 }

@@ -15,11 +15,11 @@ func (m *Model) Outside(w Wall) {
 	m.rises, m.floor = nil, nil
 	switch {
 	case m.top == nil: // a bare part reads the wall each time
-	case m.top.rect != nil:
+	case m.top.border != nil:
 		factor, _, _ := m.set.Accuracy.settings()
-		m.top.rect = newRectWall(&m.p, factor)
+		m.top.border = newRectWall(&m.p, factor)
 		if m.ready {
-			m.top.rect.write(m.top)
+			m.top.border.write(m.top)
 		}
 	default:
 		m.top.wall.Outer = outerWall(m.top.k, m.top.wall.R, nil, w.Film).Outer

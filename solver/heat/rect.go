@@ -13,10 +13,7 @@ type rectWall struct {
 	fineness float64
 	sides    [4]harmonic.Stack // each side as a flat stack, for the order rule
 	sys      *outline.System
-	discs    []outline.Disc
-	src      outline.Sources
-	b        [][]complex128
-	y        []float64
+	exchange
 }
 
 // newRectWall prepares the wall of p; the clearance widens the inside by half on each side.
@@ -43,6 +40,25 @@ func newRectWall(p *Problem, fineness float64) *rectWall {
 		r.sides[i] = outerWall(p.MediumK, flat, w.Rings, film)
 	}
 	return r
+}
+
+// metal tells whether the inside of any side is bare metal, or held at one temperature.
+func (r *rectWall) metal() bool {
+	for i := range r.sides {
+		if face(&r.sides[i]) > metalK {
+			return true
+		}
+	}
+	return false
+}
+
+// gap is the least of gaps.
+func (r *rectWall) gap(c *piece) float64 {
+	gap := math.Inf(1)
+	for _, v := range r.gaps(c) {
+		gap = math.Min(gap, v)
+	}
+	return gap
 }
 
 // gaps returns the distances of c's rim from the four sides: bottom, right, top, left.
@@ -79,17 +95,9 @@ func (r *rectWall) order(g *region, c *piece, f float64, m int) int {
 
 // write discretises the wall for the region's pieces.
 func (r *rectWall) write(g *region) {
-	n := len(g.pieces)
-	r.discs = make([]outline.Disc, n)
-	r.b = make([][]complex128, n)
-	r.src = outline.Sources{Q: make([]float64, n), D: make([][]complex128, n)}
-	for i := range g.pieces {
-		r.discs[i] = outline.Disc{C: g.pieces[i].at, A: g.pieces[i].a, M: g.orders[i]}
-		r.b[i] = make([]complex128, g.orders[i]+1)
-		r.src.D[i] = make([]complex128, g.orders[i])
-	}
+	r.collect(g)
 	r.sys = outline.New(r.rect, r.discs, r.fineness)
-	r.y = make([]float64, r.sys.Len())
+	r.begin(r.sys)
 }
 
 // move puts piece i elsewhere; false if the wall has to be discretised anew.
@@ -98,74 +106,19 @@ func (r *rectWall) move(g *region, i int) bool {
 	return r.sys.Move(i, r.discs[i].C)
 }
 
-// bring adds what the wall sends back to scaled outgoing amplitudes v and heats charge (W/m, nil for none): the scaled incoming amplitudes
-// to y, the mean temperatures to mean unless it is nil. ground adds the drive of sides and ambient.
-func (r *rectWall) bring(g *region, charge, v []float64, ground bool, y, mean []float64) {
-	for i := range r.discs {
-		r.src.Q[i] = 0
-		if charge != nil {
-			r.src.Q[i] = charge[i]
-		}
-		s, o := g.sys.Disc(i).S, g.sys.Offset(i)
-		for n, f := range s {
-			f *= rootsOf(n + 1)
-			r.src.D[i][n] = complex(f*v[o+2*n], f*v[o+2*n+1])
-		}
-		clear(r.b[i])
-	}
-	r.sys.RespondTo(r.y, r.src, ground)
-	r.sys.Incoming(r.y, r.b)
-	for i := range r.discs {
-		s, o := g.sys.Disc(i).S, g.sys.Offset(i)
-		for n, f := range s {
-			f /= rootsOf(n + 1)
-			b := r.b[i][n+1]
-			y[o+2*n] += f * real(b)
-			y[o+2*n+1] -= f * imag(b)
-		}
-		if mean != nil {
-			mean[i] += real(r.b[i][0])
-		}
-	}
-}
-
-// rectState is a rectangular wall after solving.
-type rectState struct {
-	rect  outline.Rect
-	sys   *outline.System
-	y     []float64
-	b     [][]complex128 // what it sends back to each piece
-	hot   []float64
-	mean  float64
-	sides [4]float64
-}
-
 // solved finds the wall's answer to the whole solution, ground included, and adds the means that it sends back.
-func (r *rectWall) solved(g *region, charge, v, mean []float64) *rectState {
-	r.bring(g, charge, v, true, make([]float64, len(v)), mean)
-	s := &rectState{rect: r.rect, sys: r.sys, y: append([]float64(nil), r.y...)}
-	for _, b := range r.b {
-		s.b = append(s.b, append([]complex128(nil), b...))
+func (r *rectWall) solved(g *region, charge, v, mean []float64) *bound {
+	s := r.answer(g, charge, v, mean)
+	y, sys := s.y, r.sys
+	s.hot, s.mean, s.sides = sys.Faces(y, r.src)
+	for _, q := range s.sides {
+		s.released += q
 	}
-	s.hot, s.mean, s.sides = r.sys.Faces(r.y, r.src)
-	return s
-}
-
-// frame is the square that covers everything.
-func (s *rectState) frame() (mid complex128, half float64) {
 	t := 0.0
-	for _, l := range s.rect.Layers {
+	for _, l := range r.rect.Layers {
 		t += l.Thickness
 	}
-	return complex(s.rect.W/2, s.rect.H/2), math.Max(s.rect.W, s.rect.H)/2 + t
+	s.mid, s.half = complex(r.rect.W/2, r.rect.H/2), math.Max(r.rect.W, r.rect.H)/2+t
+	s.field = func() pointField { return sys.Field(y) }
+	return s
 }
-
-// inverseRoots[n-1] = 1/√n.
-var inverseRoots = func() (r [maxOrder]float64) {
-	for i := range r {
-		r[i] = 1 / math.Sqrt(float64(i+1))
-	}
-	return r
-}()
-
-func rootsOf(n int) float64 { return inverseRoots[n-1] }

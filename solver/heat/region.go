@@ -9,8 +9,8 @@ import (
 // region is one medium with the pieces that lie in it and what it ends at: the holder's wall, or a cable's jacket.
 type region struct {
 	k      float64
-	r      float64        // inside radius, clearance added; 0 of a rectangle
-	rect   *rectWall      // nil of a round region
+	r      float64        // inside radius, clearance added; 0 if there is a border
+	border border         // nil of a round region
 	wall   harmonic.Stack // round: as drawn, from the medium outwards
 	pieces []piece
 	orders []int
@@ -65,8 +65,8 @@ func (g *region) loosen(clearance float64) {
 // settle keeps the pieces inside the round wall: what sticks out counts as touching.
 func (g *region) settle(i int) {
 	c := &g.pieces[i]
-	if g.rect != nil {
-		g.rect.settle(c)
+	if g.border != nil {
+		g.border.settle(c)
 		return
 	}
 	if c.a > g.r {
@@ -103,25 +103,16 @@ func (g *region) clear() (changed []int) {
 
 // metalWall tells whether the wall's inside is bare metal, or held at one temperature.
 func (g *region) metalWall() bool {
-	if g.rect == nil {
+	if g.border == nil {
 		return face(&g.wall) > metalK
 	}
-	for i := range g.rect.sides {
-		if face(&g.rect.sides[i]) > metalK {
-			return true
-		}
-	}
-	return false
+	return g.border.metal()
 }
 
 // wallGap is the distance of c's rim, as loosened, from the wall.
 func (g *region) wallGap(c *piece) float64 {
-	if g.rect != nil {
-		gap := math.Inf(1)
-		for _, v := range g.rect.gaps(c) {
-			gap = math.Min(gap, v+c.a-c.loose)
-		}
-		return gap
+	if g.border != nil {
+		return g.border.gap(c) + c.a - c.loose
 	}
 	return g.r - math.Hypot(real(c.at), imag(c.at)) - c.loose
 }
@@ -152,17 +143,14 @@ func (g *region) orderOf(i int, f float64) int {
 			m = max(m, g.orderBeside(c, &g.pieces[j], f, m))
 		}
 	}
-	if g.rect != nil {
-		return min(max(m, g.rect.order(g, c, f, m)), maxOrderRect)
+	if g.border != nil {
+		return min(max(m, g.border.order(g, c, f, m)), maxOrderBorder)
 	}
 	return max(m, g.orderAtWall(c, f, m))
 }
 
 // maxOrder bounds the harmonics of a piece: a large one that touches small ones needs a/x of them.
 const maxOrder = harmonic.MaxOrder
-
-// maxOrderRect is maxOrder within a rectangle, whose outline keeps no more.
-const maxOrderRect = 64
 
 // lowest is the fewest harmonics of any piece at factor f of the order rule, for a medium of ratio times the conductivity of its
 // skin. Where the two are alike harmonics die out by themselves.

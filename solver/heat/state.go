@@ -14,7 +14,7 @@ type state struct {
 	cloud  harmonic.Cloud
 	level  float64 // mean temperature of the wall's inside
 	total  float64 // W/m through the wall
-	rect   *rectState
+	border *bound
 	tail   float64 // W/m·K, see region.tail
 	pieces []pieceState
 	charts charts
@@ -41,8 +41,8 @@ func (g *region) solved(q, x []float64, level float64, omega []complex128) *stat
 	s.tail = g.tail(x, v)
 	mean := g.means(charge, v, omega)
 	s.cloud = g.cloud(charge, v, level, omega)
-	if g.rect != nil {
-		s.rect = g.rect.solved(g, charge, v, mean)
+	if g.border != nil {
+		s.border = g.border.solved(g, charge, v, mean)
 	}
 	s.pieces = make([]pieceState, len(g.pieces))
 	for i := range s.pieces {
@@ -139,8 +139,8 @@ func (g *region) incoming(s *state, i int) []complex128 {
 	}
 	b = make([]complex128, 1+max(len(b), 12))
 	c.About(p.at, p.a, i, b)
-	if s.rect != nil {
-		for n, w := range s.rect.b[i] {
+	if s.border != nil {
+		for n, w := range s.border.b[i] {
 			b[n] += w
 		}
 	}
