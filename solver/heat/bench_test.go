@@ -11,7 +11,7 @@ import (
 var timed = []struct {
 	parts int
 	name  string
-}{{7, "c04_hex7_touch_wall_air"}, {37, "t37_settled_air"}, {91, "t91_settled_air"}, {200, "t200_settled_air"}}
+}{{7, "c04_hex7_touch_wall_air"}, {37, "t37_settled_air"}, {91, "t91_settled_air"}, {200, "t200_settled_air"}, {24, "r03_wireway24_steel"}}
 
 func one(acc heat.Accuracy) heat.Settings { return heat.Settings{Accuracy: acc, Threads: 1} }
 
