@@ -16,8 +16,9 @@ type painter struct {
 	runner *latest.Runner[sheet, *picture]
 
 	// touched on the runner's goroutine only
-	heatOf heatKey
-	heat   *image.RGBA
+	heatOf     heatKey
+	heat       *image.RGBA
+	heatCoarse bool
 }
 
 // sheet is one picture to make.
@@ -27,7 +28,7 @@ type sheet struct {
 	view      render.View
 	style     render.Style
 	paper     color.Color
-	coarse    bool // within a drag: the heat map is sampled coarsely
+	coarse    bool // quick: the heat map is sampled coarsely unless the whole one is there
 	isotherms bool
 }
 
@@ -40,10 +41,9 @@ type picture struct {
 
 // heatKey tells heat maps apart. A field is a result's and a result never changes.
 type heatKey struct {
-	field  render.Field
-	scale  render.Scale
-	view   render.View
-	coarse bool
+	field render.Field
+	scale render.Scale
+	view  render.View
 }
 
 // newPainter starts a painter; show gets each picture on the window's goroutine.
@@ -63,29 +63,31 @@ func (p *painter) close() { p.runner.Close() }
 func (p *painter) paint(_ context.Context, s sheet) *picture {
 	img := image.NewRGBA(image.Rect(0, 0, s.view.W, s.view.H))
 	draw.Draw(img, img.Rect, image.NewUniform(s.paper), image.Point{}, draw.Src)
-	if heat := p.heatLayer(s); heat != nil {
+	heat, coarse := p.heatLayer(s)
+	if heat != nil {
 		draw.Draw(img, img.Rect, heat, image.Point{}, draw.Over)
 	}
 	if !s.isotherms {
 		s.scene.Field = nil
 	}
 	render.SectionLayer(render.NewRaster(img), s.scene, s.view, s.scale, s.style)
-	return &picture{img: img, view: s.view, coarse: s.coarse}
+	return &picture{img: img, view: s.view, coarse: coarse}
 }
 
-// heatLayer returns the heat map, nil where nothing is solved.
-func (p *painter) heatLayer(s sheet) *image.RGBA {
+// heatLayer returns the heat map, nil where nothing is solved, and whether it is a coarse one.
+func (p *painter) heatLayer(s sheet) (heat *image.RGBA, coarse bool) {
 	if s.scene.Field == nil {
 		if len(s.scene.Readings) == 0 {
-			return nil
+			return nil, false
 		}
-		return render.HeatLayer(s.scene, s.view, s.scale, s.coarse)
+		return render.HeatLayer(s.scene, s.view, s.scale, false), false
 	}
-	key := heatKey{s.scene.Field, s.scale, s.view, s.coarse}
-	if p.heat == nil || key != p.heatOf {
-		p.heat, p.heatOf = render.HeatLayer(s.scene, s.view, s.scale, s.coarse), key
+	key := heatKey{s.scene.Field, s.scale, s.view}
+	if p.heat != nil && key == p.heatOf && (s.coarse || !p.heatCoarse) {
+		return p.heat, p.heatCoarse
 	}
-	return p.heat
+	p.heat, p.heatOf, p.heatCoarse = render.HeatLayer(s.scene, s.view, s.scale, s.coarse), key, s.coarse
+	return p.heat, p.heatCoarse
 }
 
 // seenFrom returns the picture as another view sees it, stretched by whole pixels, until a sharp one is there.

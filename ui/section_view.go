@@ -141,31 +141,41 @@ func (v *SectionView) style() render.Style {
 	return render.Style{Dark: themeDark(), Scale: v.density}
 }
 
-// repaint asks for a new picture and shows the old one as the camera sees it until then.
+// repaint asks for a new picture, a quick one first, and shows the old one as the camera sees it until then.
 func (v *SectionView) repaint() {
-	w, h := v.pixels()
-	if w < 2 || h < 2 {
-		return
-	}
-	scene := v.desk.Scene()
-	view := v.look(scene.Shapes)
-	if view.PxPerMM <= 0 {
-		return
-	}
-	v.painter.ask(sheet{
-		scene: scene, scale: v.desk.Scale(), view: view, style: v.style(), paper: themeColor(theme.ColorNameBackground),
-		coarse: v.desk.Draft() && v.drag.mode == dragParts, isotherms: v.isotherms,
-	})
-	v.placeLines()
-	if v.pic == nil || v.pic.view != view {
-		v.raster.Refresh()
+	if view, ok := v.ask(true); ok {
+		v.placeLines()
+		if v.pic == nil || v.pic.view != view {
+			v.raster.Refresh()
+		}
 	}
 }
 
-// show takes a finished picture.
+// ask wants the picture of the scene as it is; ok is false while there is no room for one.
+func (v *SectionView) ask(coarse bool) (view render.View, ok bool) {
+	w, h := v.pixels()
+	if w < 2 || h < 2 {
+		return view, false
+	}
+	scene := v.desk.Scene()
+	view = v.look(scene.Shapes)
+	if view.PxPerMM <= 0 {
+		return view, false
+	}
+	v.painter.ask(sheet{
+		scene: scene, scale: render.ScaleOf(scene), view: view, style: v.style(), paper: themeColor(theme.ColorNameBackground),
+		coarse: coarse, isotherms: v.isotherms,
+	})
+	return view, true
+}
+
+// show takes a finished picture. Outside a drag the whole heat map follows a quick one.
 func (v *SectionView) show(p *picture) {
 	v.pic, v.stretched = p, nil
 	v.raster.Refresh()
+	if p.coarse && v.drag.mode != dragParts {
+		v.ask(false)
+	}
 	if v.OnPainted != nil {
 		v.OnPainted()
 	}

@@ -39,7 +39,9 @@ func testViewOn(t *testing.T, k *Desk, l *loop) (*hand, *SectionView) {
 	w.Resize(fyne.NewSize(700, 500))
 	t.Cleanup(func() { v.Close(); w.Close() })
 	l.solved(t, k)
-	l.until(t, "the picture", func() bool { return v.pic != nil && v.pic.view == v.camera.view(v.pic.view.W, v.pic.view.H, v.density) })
+	l.until(t, "the picture", func() bool {
+		return v.pic != nil && !v.pic.coarse && v.pic.view == v.camera.view(v.pic.view.W, v.pic.view.H, v.density)
+	})
 	return &hand{v: v, k: k, l: l}, v
 }
 
