@@ -16,6 +16,7 @@ type border interface {
 	move(g *region, i int) bool                      // follows piece i; false if the wall has to be written again
 	bring(g *region, charge, v []float64, ground bool, y, mean []float64)
 	solved(g *region, charge, v, mean []float64) *bound
+	fork() border // for products beside it
 }
 
 // maxOrderBorder bounds the harmonics of a piece within a border, which keeps no more.
@@ -110,6 +111,17 @@ func (e *exchange) answer(g *region, charge, v, mean []float64) *bound {
 		s.b = append(s.b, append([]complex128(nil), b...))
 	}
 	return s
+}
+
+// fork is an exchange with the same border and room of its own.
+func (e *exchange) fork() exchange {
+	f := exchange{discs: e.discs, y: make([]float64, len(e.y)), with: e.with}
+	f.src.Q = make([]float64, len(e.src.Q))
+	for i := range e.b {
+		f.b = append(f.b, make([]complex128, len(e.b[i])))
+		f.src.D = append(f.src.D, make([]complex128, len(e.src.D[i])))
+	}
+	return f
 }
 
 // inverseRoots[n-1] = 1/√n.

@@ -49,6 +49,9 @@ func (g *region) columns(f [][]float64, tol float64, threads int, stop func() bo
 func (g *region) fork() *region {
 	f := *g
 	f.sys = g.sys.Fork()
+	if g.border != nil {
+		f.border = g.border.fork()
+	}
 	f.laws = make([]*law, len(g.laws))
 	for i, l := range g.laws {
 		if l != nil {

@@ -1,162 +1,132 @@
 package heat
 
-// sourceParts returns, for unit heat in source s, the monopoles in units of 1/(2πk) and the amplitudes that its cable sends out by itself.
-func (g *region) sourceParts(s int) (q, u []float64) {
-	q = make([]float64, len(g.pieces))
-	q[g.sources[s].piece] = g.c2()
-	return q, g.sources[s].u
-}
+import (
+	"context"
+	"sync"
+	"sync/atomic"
 
-// sourceColumn is the right-hand side −Lᵀ(φ + 𝒢 u) for 1 W/m in source s.
-func (g *region) sourceColumn(s int) []float64 {
-	q := make([]float64, len(g.sources))
-	q[s] = 1
-	return g.loadColumn(q, false)
-}
+	"packrise/solver/harmonic"
+)
 
-// loadColumn is the right-hand side for heats q by source; ground adds the drive of a rectangle's sides and ambient.
-func (g *region) loadColumn(q []float64, ground bool) []float64 {
-	y, none := make([]float64, g.sys.Len()), make([]float64, g.sys.Len())
-	charge, v := g.outgoing(q, none)
-	for k := range q {
-		if g.sources[k].u != nil {
-			g.sys.Apply(y, v)
-			break
-		}
-	}
+// coefficients returns the rises of all sources for 1 W/m in each, held bores being left to float.
+func (m *Model) coefficients(ctx context.Context) ([][]float64, bool) {
+	g := m.top
 	if g.border != nil {
-		g.border.bring(g, charge, v, ground, y, nil)
+		return m.coefficientsBorder(ctx)
 	}
-	for i := range charge {
-		charge[i] *= g.c2()
+	f := make([][]float64, len(g.sources))
+	for s := range f {
+		f[s] = g.sourceColumn(s)
 	}
-	g.sys.Mono(y, charge)
-	g.drop(y)
-	for i := range y {
-		y[i] = -y[i]
+	_, z, ok := g.columns(f, m.set.Accuracy.rough(), m.set.threads(), ended(ctx))
+	if !ok {
+		return nil, false
 	}
-	return y
-}
-
-// temperatures returns those of all sources for heats q and unknowns x, relative to the round wall's mean; of a rectangle, absolute if
-// ground is set.
-func (g *region) temperatures(q, x []float64, ground bool) []float64 {
-	charge, v := g.outgoing(q, x)
-	mean := g.means(charge, v, nil)
-	y := make([]float64, len(x))
-	if g.border != nil {
-		g.border.bring(g, charge, v, ground, y, mean)
-	}
-	nested := false
-	for k := range q {
-		nested = nested || g.sources[k].u != nil
-	}
-	if nested {
-		w := make([]float64, len(x))
-		g.sys.Apply(w, v)
-		axpy(y, 1, w)
-		for i := range charge {
-			charge[i] *= g.c2()
-		}
-		g.sys.Mono(y, charge)
-	}
-	t := make([]float64, len(q))
-	for k := range q {
-		src := &g.sources[k]
-		t[k] = mean[src.piece] + dot(src.u, y[g.sys.Offset(src.piece):])/g.c2()
-		for r, f := range q {
-			if f != 0 {
-				t[k] += f * g.ownTerm(src, &g.sources[r])
-			}
+	k := g.ownMatrix(z)
+	r := m.outsideR()
+	for i := range k {
+		for j := range k[i] {
+			k[i][j] += r
 		}
 	}
-	return t
+	return k, true
 }
 
-// sourceOut is what a unit source sends to the wall by itself, √n A_n.
-func (g *region) sourceOut(s int) []complex128 {
-	alpha := make([]complex128, g.sys.Top())
-	q, u := g.sourceParts(s)
-	if u != nil {
-		x := make([]float64, g.sys.Len())
-		copy(x[g.sys.Offset(g.sources[s].piece):], u)
-		g.sys.Gather(alpha, x)
-	}
-	mono := make([]complex128, len(alpha))
-	g.sys.ChargeOut(mono, q)
-	for n := range alpha {
-		alpha[n] += mono[n]
-	}
-	return alpha
-}
-
-// ownMatrix returns the rises of the sources over the wall's mean inside temperature, K per W/m, of z = Fᵀ A⁻¹ F.
-func (g *region) ownMatrix(z [][]float64) [][]float64 {
+// coefficientsBorder is coefficients within a border, column by column. Rises are corrected by the residuals as in columns, the adjoint solutions
+// being the solutions but for the small asymmetry of the discretised border, which is averaged away: reciprocity is exact.
+func (m *Model) coefficientsBorder(ctx context.Context) ([][]float64, bool) {
+	g := m.top
 	n := len(g.sources)
-	r := make([][]float64, n)
-	for s := range r {
-		r[s] = make([]float64, n)
+	x, res, k := make([][]float64, n), make([][]float64, n), make([][]float64, n)
+	var next atomic.Int64
+	var failed atomic.Bool
+	work := func(g *region) {
+		for s := int(next.Add(1)) - 1; s < n && !failed.Load(); s = int(next.Add(1)) - 1 {
+			q := make([]float64, n)
+			q[s] = 1
+			f := g.loadColumn(q, false)
+			x[s], res[s] = make([]float64, len(f)), make([]float64, len(f))
+			if _, ok := g.iterate(x[s], f, m.set.Accuracy.rough(), ended(ctx)); !ok {
+				failed.Store(true)
+				return
+			}
+			g.product(res[s], x[s], make([]float64, len(f)))
+			for i, v := range f {
+				res[s][i] = v - res[s][i]
+			}
+			k[s] = g.temperatures(q, x[s], false)
+		}
 	}
-	c2 := g.c2()
-	cross := g.crossTerms()
-	for s := range n {
-		for t := s; t < n; t++ {
-			a, b := &g.sources[s], &g.sources[t]
-			v := c2*g.sys.Log(a.piece, b.piece) + g.ownTerm(a, b) + cross[s][t] - z[s][t]/c2
-			r[s][t], r[t][s] = v, v
+	var all sync.WaitGroup
+	for range min(m.set.threads(), n) - 1 {
+		mine := g.fork()
+		all.Go(func() { work(mine) })
+	}
+	work(g)
+	all.Wait()
+	if failed.Load() {
+		return nil, false
+	}
+	for i := range k {
+		for j := range i + 1 {
+			v := (k[i][j] + k[j][i] - (harmonic.Dot(x[i], res[j])+harmonic.Dot(x[j], res[i]))/g.c2()) / 2
+			k[i][j], k[j][i] = v, v
+		}
+	}
+	return k, true
+}
+
+// Influence returns K[i][j] in K per W/m: the rise of part i's Core temperature for 1 W/m made in part j; rows and columns of parts that
+// aren't Metal are nil.
+func (m *Model) Influence(ctx context.Context) ([][]float64, Status) {
+	out := make([][]float64, len(m.p.Parts))
+	if m.top == nil {
+		m.bare.influence(out)
+		return out, Converged
+	}
+	if !m.prepare(ctx) {
+		return out, Cancelled
+	}
+	k, ok := m.coefficients(ctx)
+	if !ok {
+		return out, Cancelled
+	}
+	k = m.reduce(k)
+	for i, s := range m.top.sources {
+		if m.p.Parts[s.part].Core != Metal {
+			continue
+		}
+		row := make([]float64, len(m.p.Parts))
+		for j, t := range m.top.sources {
+			row[t.part] = k[i][j]
+		}
+		out[s.part] = row
+	}
+	return out, Converged
+}
+
+// reduce takes out the held bores: K_mm − K_mh K_hh⁻¹ K_hm.
+func (m *Model) reduce(k [][]float64) [][]float64 {
+	n := len(k)
+	r := make([][]float64, n)
+	for i := range r {
+		r[i] = append([]float64(nil), k[i]...)
+	}
+	for _, h := range m.held { // one step of elimination per bore
+		p := append([]float64(nil), r[h]...)
+		for i := range r {
+			f := r[i][h] / p[h]
+			for j := range r[i] {
+				r[i][j] -= f * p[j]
+			}
 		}
 	}
 	return r
 }
 
-// ownTerm is the resistance between two sources that lies inside their common piece.
-func (g *region) ownTerm(a, b *source) float64 {
-	switch {
-	case a.piece != b.piece:
-		return 0
-	case a.own < 0:
-		return g.pieces[a.piece].series
-	}
-	return g.laws[a.piece].own[a.own][b.own]
-}
-
-// crossTerms are ⟨φ̂_s, u_t⟩ + ⟨u_s, φ̂_t⟩ + ⟨u_s, 𝒢 u_t⟩/c2: what cables' own amplitudes add before anything reflects.
-func (g *region) crossTerms() [][]float64 {
-	n := len(g.sources)
-	x := make([][]float64, n)
-	all := make([]float64, n*n)
-	for s := range x {
-		x[s] = all[s*n : (s+1)*n]
-	}
-	for t := range n {
-		if g.sources[t].u == nil {
-			continue
-		}
-		g.addCross(x, t)
-	}
-	for s := range n {
-		for t := s + 1; t < n; t++ {
-			v := x[s][t] + x[t][s]
-			x[s][t], x[t][s] = v, v
-		}
-		x[s][s] *= 2
-	}
-	return x
-}
-
-// addCross adds, for every s, ⟨φ̂_s, u_t⟩ + ½⟨u_s, 𝒢 u_t⟩/c2.
-func (g *region) addCross(x [][]float64, t int) {
-	v, w := make([]float64, g.sys.Len()), make([]float64, g.sys.Len())
-	o := g.sys.Offset(g.sources[t].piece)
-	copy(v[o:], g.sources[t].u)
-	mean := make([]float64, len(g.pieces))
-	g.sys.MonoDot(mean, v)
-	g.sys.Apply(w, v)
-	for s := range g.sources {
-		b := &g.sources[s]
-		x[s][t] += mean[b.piece]
-		for k, e := range b.u {
-			x[s][t] += e * w[g.sys.Offset(b.piece)+k] / (2 * g.c2())
-		}
-	}
+// Ground returns the Core temperatures (K above the common zero) with all heats zero: Ambient, unless sides or bores are held at other
+// temperatures.
+func (m *Model) Ground(ctx context.Context) ([]float64, Status) {
+	r := m.Solve(ctx, make([]float64, len(m.p.Parts)))
+	return r.Core, r.Status
 }

@@ -122,3 +122,9 @@ func (r *rectWall) solved(g *region, charge, v, mean []float64) *bound {
 	s.field = func() pointField { return sys.Field(y) }
 	return s
 }
+
+func (r *rectWall) fork() border {
+	f := *r
+	f.exchange = r.exchange.fork()
+	return &f
+}
