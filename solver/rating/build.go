@@ -38,8 +38,8 @@ func (a spaces) k(i int, m medium) float64 {
 	return m.k
 }
 
-// build writes the heat problem of a scene at given temperatures of its air. Temperatures are °C throughout.
-func (s *scene) build(air spaces) heat.Problem {
+// build writes the heat problem of a scene at given temperatures of its air and, where they are free, given films. Temperatures are °C throughout.
+func (s *scene) build(air spaces, f *films) heat.Problem {
 	h := &s.holder
 	p := heat.Problem{
 		Parts:     make([]heat.Part, len(s.parts)),
@@ -54,6 +54,9 @@ func (s *scene) build(air spaces) heat.Problem {
 		p.Wall.Sides = [4]heat.Side{heat.Bottom: side(sides.Bottom), heat.Right: side(sides.Right), heat.Top: side(sides.Top), heat.Left: side(sides.Left)}
 	case section.NoHolder:
 		p.Wall.Shape = heat.BarePart
+	}
+	if s.out.free {
+		s.out.wall(&p.Wall, f)
 	}
 	for i := range s.parts {
 		p.Parts[i] = s.heatPart(i, air)

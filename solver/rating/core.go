@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"strings"
 
+	"packrise/solver/catalog"
 	"packrise/solver/section"
 )
 
@@ -86,9 +87,12 @@ func (r *resolver) coreLimit(it *item, p *section.Part, typ string) {
 	if p.LimitC.OK {
 		it.limit = limit{c: p.LimitC, by: "given"}
 		if typ != "" {
-			if _, ok := r.cat.WireType(typ); !ok {
+			t, ok := r.cat.WireType(typ)
+			if !ok {
 				pr := unknown("type", typ, it.id, "type", r.cat.Nearest("type", typ, 3))
 				r.refuse(&pr)
+			} else if t.NeverWet && r.scene.doc.Surroundings.Wet {
+				r.neverWet(it.id, t)
 			}
 		}
 		return
@@ -100,10 +104,29 @@ func (r *resolver) coreLimit(it *item, p *section.Part, typ string) {
 			r.refuse(&pr)
 			return
 		}
-		it.limit = limit{c: section.Some(t.DryC), by: t.Name + ", dry"}
+		it.limit = r.typeLimit(it.id, t)
 		return
 	}
 	it.limit = lowest(it.layers)
+}
+
+// typeLimit is a wire type's limit, dry or wet. Types that must never be wet are refused there.
+func (r *resolver) typeLimit(id string, t catalog.WireType) limit {
+	switch {
+	case !r.scene.doc.Surroundings.Wet:
+		return limit{c: section.Some(t.DryC), by: t.Name + ", dry"}
+	case t.NeverWet:
+		r.neverWet(id, t)
+		return limit{}
+	}
+	return limit{c: section.Some(t.WetC), by: t.Name + ", wet"}
+}
+
+func (r *resolver) neverWet(id string, t catalog.WireType) {
+	r.refuse(&section.Problem{
+		Rule: "never-wet", IDs: []string{id}, Key: "type", What: fmt.Sprintf("%s is of type %s, which must never be wet, and the surroundings are wet", id, t.Name),
+		Do: "choose a type with a wet limit, or write wet: false",
+	})
 }
 
 // lowest is the lowest limit of any layer, assumed.

@@ -12,7 +12,7 @@ const (
 	other = -2
 )
 
-// difference compares two heat problems but for the heats: same, other, or the index of the only top-level part that moved.
+// difference compares two heat problems but for the heats and what is outside: same, other, or the index of the only top-level part that moved.
 func difference(a, b *heat.Problem) int {
 	if a.MediumK != b.MediumK || a.Clearance != b.Clearance || len(a.Parts) != len(b.Parts) || !sameWall(a.Wall, b.Wall) {
 		return other
@@ -34,9 +34,14 @@ func difference(a, b *heat.Problem) int {
 	return moved
 }
 
+// sameWall compares all that stays while films change.
 func sameWall(a, b heat.Wall) bool {
-	return a.Shape == b.Shape && a.R == b.R && a.W == b.W && a.H == b.H && a.Film == b.Film && a.Ambient == b.Ambient &&
-		a.Sides == b.Sides && slices.Equal(a.Rings, b.Rings)
+	return a.Shape == b.Shape && a.R == b.R && a.W == b.W && a.H == b.H && slices.Equal(a.Rings, b.Rings)
+}
+
+// sameOutside compares what heat.Model.Outside changes.
+func sameOutside(a, b *heat.Wall) bool {
+	return a.Film == b.Film && a.Ambient == b.Ambient && a.Sides == b.Sides
 }
 
 // samePart compares all but place and heat.

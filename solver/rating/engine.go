@@ -19,6 +19,8 @@ type Engine struct {
 	grade   heat.Accuracy
 	temps   []float64 // °C per part, of the last answer
 	air     spaces
+	out     outside    // of the last answer, with the heat flows of its faces
+	flux    [4]float64 // W/m²
 }
 
 // NewEngine returns an engine that looks things up in cat.
@@ -54,44 +56,11 @@ type answered struct {
 	settles float64 // runaway: largest factor on all currents that settles
 	at      int     // runaway: part that runs away
 	air     spaces
-}
-
-// Rounds of the loop over the temperature of enclosed air: its conductivity follows at 0.25 %/K, so each round gains a factor of
-// about ten.
-const (
-	airRounds    = 6
-	airTolerance = 5e-4
-)
-
-// answer runs the outer loop: conductivity of enclosed air, around the fixed point of the resistances.
-func (e *Engine) answer(ctx context.Context, s *scene, o Options) answered {
-	air := e.startAir(s)
-	temps := e.startTemps(s)
-	var a answered
-	for round := 1; ; round++ {
-		e.prepare(s.build(air), o.Accuracy)
-		a = settle(ctx, e.model, s, temps, o.Accuracy)
-		a.air = air
-		if a.status != heat.Converged {
-			e.forget()
-			return a
-		}
-		temps = a.temps
-		if o.Accuracy == heat.Draft || len(air) == 0 || round == airRounds {
-			break
-		}
-		next := air.copy()
-		if next.update(s, a.heat) < airTolerance {
-			break
-		}
-		air = next
-	}
-	e.temps, e.air = temps, air
-	return a
+	films   films
 }
 
 // forget drops what a failed solution may have left in a warm start.
-func (e *Engine) forget() { e.model, e.temps, e.air = nil, nil, nil }
+func (e *Engine) forget() { e.model, e.temps, e.air, e.out = nil, nil, nil, outside{} }
 
 func (e *Engine) startAir(s *scene) spaces {
 	out := s.airSpaces(s.doc.Surroundings.AmbientC.V + 20)
@@ -109,11 +78,15 @@ func (e *Engine) startAir(s *scene) spaces {
 }
 
 func (e *Engine) startTemps(s *scene) []float64 {
-	out := make([]float64, len(s.parts))
-	if len(e.temps) == len(out) {
-		copy(out, e.temps)
-		return out
+	if len(e.temps) == len(s.parts) {
+		return append([]float64(nil), e.temps...)
 	}
+	return e.coldTemps(s)
+}
+
+// coldTemps start an iteration that knows nothing.
+func (e *Engine) coldTemps(s *scene) []float64 {
+	out := make([]float64, len(s.parts))
 	for i := range out {
 		out[i] = s.doc.Surroundings.AmbientC.V + 20
 	}
@@ -128,14 +101,16 @@ func (a spaces) copy() spaces {
 	return out
 }
 
-// prepare makes the model fit the problem: kept when it is the same, moved when one part of the top level moved, else new.
+// prepare makes the model fit the problem: kept when it is the same, moved when one part of the top level moved, given other films, else new.
 func (e *Engine) prepare(p heat.Problem, grade heat.Accuracy) {
 	if e.model != nil && e.grade == grade {
-		switch moved := difference(&e.problem, &p); {
-		case moved == same:
-			return
-		case moved >= 0:
-			e.model.Move(moved, p.Parts[moved].X, p.Parts[moved].Y)
+		if moved := difference(&e.problem, &p); moved != other {
+			if moved >= 0 {
+				e.model.Move(moved, p.Parts[moved].X, p.Parts[moved].Y)
+			}
+			if !sameOutside(&e.problem.Wall, &p.Wall) {
+				e.model.Outside(p.Wall)
+			}
 			e.problem = p
 			return
 		}

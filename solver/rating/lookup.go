@@ -44,7 +44,7 @@ func open(d *section.Document, cat *catalog.Catalog) (shelf, []section.Problem) 
 // material finds a material by name; the problem names the nearest ones.
 func (s shelf) material(name, id, key string) (material, *section.Problem) {
 	if m, ok := s.own[name]; ok {
-		return material{name: m.Name, k: m.KWMK, gas: m.Gas, metal: !m.Gas && m.KWMK > 5, limitC: m.LimitC, source: m.Source}, nil
+		return ownMaterial(m), nil
 	}
 	m, ok := s.cat.Material(name)
 	if !ok {
@@ -52,11 +52,32 @@ func (s shelf) material(name, id, key string) (material, *section.Problem) {
 		p.Do += "; or describe it under `materials`"
 		return material{}, &p
 	}
-	out := material{name: m.Name, k: m.K.V, gas: m.Gas, metal: m.Family == "metal" || m.K.V > 5, source: m.Source.Text}
+	out := material{
+		name: m.Name, k: m.K.V, gas: m.Gas, metal: m.Family == "metal" || m.K.V > 5, source: m.Source.Text,
+		emissivity: m.Emissivity.V, absorptivity: m.Absorptivity,
+	}
 	if m.LimitC.Low > 0 {
 		out.limitC = section.Some(m.LimitC.Low)
 	}
 	return out, nil
+}
+
+// Defaults of a material that says nothing else: plastics and paint, bright metal.
+const (
+	usualEmissivity  = 0.9
+	brightEmissivity = 0.08
+	usualAbsorbed    = 0.9
+)
+
+func ownMaterial(m section.Material) material {
+	out := material{name: m.Name, k: m.KWMK, gas: m.Gas, metal: !m.Gas && m.KWMK > 5, limitC: m.LimitC, source: m.Source}
+	usual := usualEmissivity
+	if out.metal {
+		usual = brightEmissivity
+	}
+	out.emissivity, out.assumed = m.Emissivity.Or(usual), !m.Emissivity.OK
+	out.absorptivity = m.Absorptivity.Or(usualAbsorbed)
+	return out
 }
 
 // unknown returns the problem of a name that the catalogue lacks.

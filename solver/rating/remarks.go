@@ -31,6 +31,7 @@ func (s *scene) remarks(r *Result, a answered, o Options) []string {
 	if o.AssumeIdle {
 		out = append(out, "conductors of unknown or unassigned current are assumed idle")
 	}
+	out = append(out, s.weatherNotes(a)...)
 	out = append(out, s.limitNotes()...)
 	if s.anyAlternating() {
 		out = append(out, "skin effect by IEC 60287-1-1; proximity of conductors is left out")

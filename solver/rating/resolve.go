@@ -33,10 +33,11 @@ func resolve(d *section.Document, cat *catalog.Catalog) (scene, []section.Proble
 	for i := range d.Builds {
 		r.builds[d.Builds[i].Name] = &d.Builds[i]
 	}
-	r.surroundings()
 	r.scene.holder = r.enclosure(&d.Holder, "", "holder.")
 	r.parts(d.Parts, nest{in: -1})
+	r.wrap()
 	r.places()
+	r.outside()
 	return r.scene, d.Locate(r.problems)
 }
 
@@ -46,20 +47,6 @@ func (r *resolver) refuse(p *section.Problem) bool {
 	}
 	r.problems = append(r.problems, *p)
 	return true
-}
-
-func (r *resolver) surroundings() {
-	s := r.scene.doc.Surroundings
-	switch s.Kind {
-	case section.FixedWall:
-		r.scene.filmW = math.Inf(1)
-	case section.FixedFilm:
-		r.scene.filmW = s.FilmWM2K.V
-	default:
-		r.refuse(&section.Problem{
-			Rule: "not-built", Key: "surroundings.kind", What: "surroundings of kind " + s.Kind + " are not reckoned yet", Do: "use fixed-film with film_w_m2k",
-		})
-	}
 }
 
 // layers looks up a list of layers; key ends in ".".
@@ -104,7 +91,7 @@ func (r *resolver) stockHolder(e *enclosure, h *section.Holder, id, key string) 
 			Do:   "write kind: " + row.Kind + ", or choose another stock",
 		})
 	}
-	e.radius, e.w, e.h = row.InsideM/2, row.WidthM, row.HeightM
+	e.radius, e.w, e.h, e.skin = row.InsideM/2, row.WidthM, row.HeightM, row.Emissivity
 	e.round = row.InsideM > 0
 	if row.WallM > 0 {
 		m, p := r.material(row.Wall, id, key+"stock")

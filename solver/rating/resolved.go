@@ -13,7 +13,8 @@ type scene struct {
 	parts  []item
 	origin section.Point // mm: the document's point that is the origin of the heat problem
 	notes  []string
-	filmW  float64 // W/m²K, +Inf for a fixed wall
+	filmW  float64 // W/m²K where the film is fixed, +Inf for a fixed wall
+	out    outside
 }
 
 // enclosure is a holder, or the jacket of a cable.
@@ -25,6 +26,7 @@ type enclosure struct {
 	layers []layer
 	fill   medium
 	gap    float64 // m, mean clearance of the parts
+	skin   float64 // emissivity of the outside by the catalogue's row, 0: by the material
 }
 
 // layer is one ring of a known material.
@@ -50,6 +52,9 @@ type material struct {
 	metal  bool
 	limitC section.Opt[float64]
 	source string
+
+	emissivity, absorptivity float64
+	assumed                  bool // the emissivity is a default of the program
 }
 
 // item is one part of the flattened section.

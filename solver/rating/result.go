@@ -49,7 +49,7 @@ type Result struct {
 	Conductors []Conductor // the document's order, nested ones as C1/L1
 	Others     []Other
 	SurfaceC   float64              // mean of the outside
-	FilmWM2K   section.Opt[float64] // not OK for a fixed wall
+	FilmWM2K   section.Opt[float64] // at the present temperature, mean of the open sides; not OK for a fixed wall
 	Generated  float64              // W/m
 	Released   float64              // W/m
 	Absorbed   float64              // W/m
@@ -78,9 +78,7 @@ func (s *scene) result(a answered, o Options) *Result {
 		Title: s.doc.Title, AmbientC: s.doc.Surroundings.AmbientC.V, Status: a.status, Shapes: s.shapes(),
 		origin: s.origin, bounds: s.bounds(), surroundings: s.surroundingsText(),
 	}
-	if !math.IsInf(s.filmW, 0) {
-		r.FilmWM2K = section.Some(s.filmW)
-	}
+	r.FilmWM2K = s.filmShown(a)
 	for i := range s.parts {
 		if p := &s.parts[i]; p.metal && !p.loadKnown() && !o.AssumeIdle {
 			r.Unassigned = append(r.Unassigned, p.id)
@@ -158,7 +156,29 @@ func (s *scene) readOthers(r *Result, a answered) {
 		}
 	}
 	r.addLayers(s.holder.kind, s.holder.layers, h.WallMax, limit{})
-	r.Others = append(r.Others, Other{ID: "outside", Kind: "surface", TempC: h.WallMax[len(h.WallMax)-1]})
+	if s.doc.Surroundings.Wrap != nil && s.holder.kind != section.NoHolder {
+		r.Others[len(r.Others)-1].ID = wrapID
+	}
+	if s.holder.kind == section.NoHolder && s.doc.Surroundings.Wrap != nil {
+		s.addBareWrap(r, h)
+	}
+	t := s.touch()
+	r.Others = append(r.Others, Other{ID: "outside", Kind: "surface", TempC: h.WallMax[len(h.WallMax)-1], LimitC: t.c, LimitBy: t.by})
+}
+
+// wrapID is what thermal insulation around a section is called.
+const wrapID = "wrap"
+
+// addBareWrap adds the wrap of a bare part, which is its last layer.
+func (s *scene) addBareWrap(r *Result, h *heat.Result) {
+	for i := range s.parts {
+		if p := &s.parts[i]; p.in < 0 {
+			n := len(p.layers)
+			lim := lowest(p.layers[n-1:])
+			f := h.Surfaces[i]
+			r.Others = append(r.Others, Other{ID: wrapID, Kind: "layer", TempC: max(f[n-1], f[n]), LimitC: lim.c, LimitAssumed: lim.assumed, LimitBy: lim.by})
+		}
+	}
 }
 
 // addLayers adds the layers of a wall or jacket: "jacket", "jacket/2" …, each judged at its hotter face, which is the inner one unless

@@ -23,15 +23,10 @@ type affine struct {
 // factor s at which the largest eigenvalue of s² K diag(α I²R20) reaches 1 (PHYSICS: it is the gain of the loop resistance → heat
 // → temperature) or a metal reaches hottestC, whichever is lower.
 func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) answered {
-	k, status := m.Influence(ctx)
+	a, ground, status := writeOut(ctx, m, s)
 	if status != heat.Converged {
 		return answered{status: status}
 	}
-	ground, status := m.Ground(ctx)
-	if status != heat.Converged {
-		return answered{status: status}
-	}
-	a := newAffine(s, k, ground)
 	factor, at := a.largest()
 	if factor < 1 {
 		return answered{status: heat.ThermalRunaway, settles: factor, at: at}
@@ -51,6 +46,19 @@ func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) 
 		}
 	}
 	return answered{heat: r, temps: r.Core}
+}
+
+// writeOut finds the influence matrix and the temperatures without heat.
+func writeOut(ctx context.Context, m *heat.Model, s *scene) (a affine, ground []float64, status heat.Status) {
+	k, status := m.Influence(ctx)
+	if status != heat.Converged {
+		return a, nil, status
+	}
+	ground, status = m.Ground(ctx)
+	if status != heat.Converged {
+		return a, nil, status
+	}
+	return newAffine(s, k, ground), ground, status
 }
 
 func newAffine(s *scene, k [][]float64, ground []float64) affine {

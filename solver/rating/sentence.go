@@ -6,7 +6,6 @@ import (
 	"strings"
 
 	"packrise/solver/heat"
-	"packrise/solver/section"
 )
 
 // Caution is the standing caution of every window, picture and report.
@@ -124,11 +123,4 @@ func (r *Result) Balance() string {
 		out += fmt.Sprintf(", taken up by bores %s W/m", digits(r.Absorbed, 2))
 	}
 	return out + fmt.Sprintf(" · ±%s K numerical · %s ms", digits(math.Max(0.01, math.Ceil(r.ErrorK*100)/100), 2), digits(math.Ceil(r.Seconds*1e3), 0))
-}
-
-func (s *scene) surroundingsText() string {
-	if s.doc.Surroundings.Kind == section.FixedWall {
-		return "outside held at the ambient"
-	}
-	return fmt.Sprintf("fixed film of %s W/m²K", digits(s.filmW, 2))
 }

@@ -45,16 +45,27 @@ func settle(ctx context.Context, m *heat.Model, s *scene, start []float64, grade
 				worst, hot = max(worst, math.Abs(f[i])), max(hot, g[i])
 			}
 		}
-		if worst <= tolerance(grade) && hot <= hottestC {
+		if worst <= tolerance(grade) && hot <= hottestC && !cooling(q) {
 			return answered{heat: r, temps: g}
 		}
-		if hot > 3*hottestC || math.IsNaN(worst) {
+		if hot > 3*hottestC || math.IsNaN(worst) || cooling(q) {
 			break
 		}
 		x = mix(g, lastG, f, lastF)
 		lastG, lastF = g, f
 	}
 	return runaway(ctx, m, s, grade)
+}
+
+// cooling tells whether a conductor takes heat up: beyond the gain at which a steady state ends, the equations still have a solution, one of
+// negative resistances.
+func cooling(q []float64) bool {
+	for _, v := range q {
+		if v < 0 {
+			return true
+		}
+	}
+	return false
 }
 
 // solveAt solves with the heats that belong to the temperatures x.

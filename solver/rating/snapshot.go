@@ -14,6 +14,9 @@ func Snapshot(d *section.Document, cat *catalog.Catalog) *section.Document {
 	t := taker{cat: s.cat, own: s.own, seen: map[[2]string]bool{}}
 	t.holder(&d.Holder)
 	t.parts(d.Parts)
+	if w := d.Surroundings.Wrap; w != nil {
+		t.material(w.Material)
+	}
 	for i := range d.Builds {
 		t.holder(&d.Builds[i].Holder)
 		t.parts(d.Builds[i].Parts)
