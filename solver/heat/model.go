@@ -82,6 +82,9 @@ func (m *Model) layout() {
 		for i := range m.top.pieces {
 			m.top.pieces[i].at += complex(p.Clearance/2, p.Clearance/2)
 		}
+	case Hull:
+		m.top = newRegion(p, -1, p.MediumK)
+		m.top.border = newHullWall(p, factor)
 	}
 	if m.top != nil {
 		m.top.order(factor)

@@ -47,6 +47,7 @@ const (
 	Round    Shape = iota // inside radius R, centre at the origin
 	Rect                  // inside W × H, lower left corner at the origin, square outer corners
 	BarePart              // no wall: exactly one part of the top level, the film acts on its own outside
+	Hull                  // no wall: an open bundle, the film acts on the taut string round the parts and on the parts where they are exposed
 )
 
 // Wall is the holder's wall and what is outside it.
@@ -59,6 +60,8 @@ type Wall struct {
 	// Ambient temperature outside, for open sides and round walls.
 	Ambient float64
 	Sides   [4]Side // of a rectangle: Bottom, Right, Top, Left
+	// Taut winds the string round discs, counterclockwise, with an arc of 2π for one disc; it is needed for a Hull.
+	Taut func(x, y, r []float64) []Arc
 }
 
 // Indices of Wall.Sides.
