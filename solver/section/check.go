@@ -73,6 +73,12 @@ func checkHolder(r *report, h *Holder, at path) {
 		}
 		return
 	}
+	checkHolderSize(r, h, at, flat)
+}
+
+// checkHolderSize reports what a holder without stock lacks of its size.
+func checkHolderSize(r *report, h *Holder, at path, flat bool) {
+	round, rectangle := h.Kind == Jacket || h.Kind == Conduit, h.Kind == Wireway
 	if round && !h.InsideMM.OK && !flat {
 		r.add(at.key("inside_mm"), "missing-key", "¤ is missing", "write it, or stock: kind "+h.Kind+" needs its inside diameter")
 	}

@@ -157,6 +157,9 @@ func oneLine(n *yaml.Node) *yaml.Node {
 			}
 			return c
 		}
+		if isNull(n) {
+			c.Value = "null"
+		}
 	}
 	for _, k := range n.Content {
 		c.Content = append(c.Content, oneLine(k))

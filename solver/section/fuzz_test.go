@@ -55,7 +55,7 @@ func readAny(t fataler, data []byte) bool {
 	}
 	text := stable(t, d)
 	if !strings.Contains(string(data), "\ufeff") && text != string(data) {
-		t.Fatalf("unchanged it is written as\n%s", text)
+		t.Fatalf("unchanged it is written as\n%s\nwhich differs by\n%q", text, changedLines(string(data), text))
 	}
 	for _, p := range UnfoldAll(d) {
 		d = SetLimit(Move(d, p.ID, Point{1.5, -2}), p.ID, Some(70.0))
@@ -109,7 +109,7 @@ func TestReadMutated(t *testing.T) {
 			read++
 		}
 	})
-	if read*10 < all {
+	if all >= 50 && read*10 < all {
 		t.Errorf("only %d of %d spoilt files are designs: the test tells little", read, all)
 	}
 }

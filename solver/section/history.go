@@ -13,6 +13,9 @@ type History struct {
 	at    int    // docs[at] is the current one
 	saved *Document
 	open  bool // the last thing done was an edit that the next one may merge with
+
+	compared [2]*Document // what Dirty compared last
+	differ   bool
 }
 
 // NewHistory starts at d, counted as saved.
@@ -107,4 +110,9 @@ func (h *History) RedoName() string {
 func (h *History) MarkSaved() { h.saved = h.Now() }
 
 // Dirty tells whether the current document differs from the saved one.
-func (h *History) Dirty() bool { return !Equal(h.Now(), h.saved) }
+func (h *History) Dirty() bool {
+	if now := [2]*Document{h.Now(), h.saved}; h.compared != now {
+		h.compared, h.differ = now, !Equal(now[0], now[1])
+	}
+	return h.differ
+}

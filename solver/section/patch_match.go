@@ -50,6 +50,8 @@ func same(old, fresh *yaml.Node) bool {
 func sameScalar(old, fresh *yaml.Node) bool {
 	a, b := old.ShortTag(), fresh.ShortTag()
 	switch {
+	case b == "!!null":
+		return a == b
 	case b == "!!str":
 		return a != "!!null" && old.Value == fresh.Value
 	case b == "!!int" || b == "!!float":
