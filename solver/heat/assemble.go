@@ -58,7 +58,7 @@ func (g *region) disc(i int) harmonic.Disc {
 	c := &g.pieces[i]
 	d := harmonic.Disc{C: c.at, A: c.a, S: make([]float64, g.orders[i])}
 	for n := range d.S {
-		if g.laws[i] != nil {
+		if l := g.laws[i]; l != nil && 2*n < l.n {
 			d.S[n] = 1
 			continue
 		}
@@ -74,13 +74,13 @@ func (g *region) setSigns() {
 	g.sign = make([]float64, g.sys.Len())
 	g.definite = true
 	for i := range g.pieces {
-		o := g.sys.Offset(i)
+		o, first := g.sys.Offset(i), 0
 		if l := g.laws[i]; l != nil {
 			copy(g.sign[o:], l.sign)
 			g.definite = g.definite && l.definite
-			continue
+			first = l.n / 2
 		}
-		for n := range g.orders[i] {
+		for n := first; n < g.orders[i]; n++ {
 			s := 1.0
 			if t := g.pieces[i].stack.Port(n + 1).T; t > 0 {
 				s = -1
@@ -134,7 +134,7 @@ func (g *region) newCircle() *harmonic.Circle {
 func (g *region) lift(x []float64) {
 	for i, l := range g.laws {
 		if l != nil {
-			l.lift(x[g.sys.Offset(i):g.sys.Offset(i+1)])
+			l.lift(x[g.sys.Offset(i):][:l.n])
 		}
 	}
 }
@@ -142,7 +142,7 @@ func (g *region) lift(x []float64) {
 func (g *region) drop(y []float64) {
 	for i, l := range g.laws {
 		if l != nil {
-			l.drop(y[g.sys.Offset(i):g.sys.Offset(i+1)])
+			l.drop(y[g.sys.Offset(i):][:l.n])
 		}
 	}
 }

@@ -108,3 +108,31 @@ func BenchmarkDragFrame(b *testing.B) {
 		})
 	}
 }
+
+// BenchmarkNested solves seven cables of seven cores each, and the same again with other heats.
+func BenchmarkNested(b *testing.B) {
+	p := heat.Problem{MediumK: 0.026, Wall: heat.Wall{R: 30 * mm, Rings: []heat.Ring{{K: 0.2, Thickness: 2 * mm}}, Film: 10}}
+	for _, c := range append([]complex128{0}, ringOf(6, 19*mm)...) {
+		p.Parts = append(p.Parts, heat.Part{In: -1, X: real(c), Y: imag(c), Core: heat.Inside, Radius: 8 * mm, K: 0.026, Rings: []heat.Ring{{K: 0.2, Thickness: 1.5 * mm}}})
+		in := len(p.Parts) - 1
+		for _, d := range append([]complex128{0}, ringOf(6, 5*mm)...) {
+			w := wire(3*mm, 1*mm, 0.2, 1)
+			w.In, w.X, w.Y = in, real(d), imag(d)
+			p.Parts = append(p.Parts, w)
+		}
+	}
+	b.Run("new", func(b *testing.B) {
+		b.ReportAllocs()
+		for b.Loop() {
+			heat.New(p, one(heat.Standard)).Solve(context.Background(), nil)
+		}
+	})
+	m := heat.New(p, one(heat.Standard))
+	b.Run("drag", func(b *testing.B) {
+		b.ReportAllocs()
+		for n := 0; b.Loop(); n++ {
+			m.Move(0, float64(n%5)*0.02*mm, 0)
+			m.Solve(context.Background(), nil)
+		}
+	})
+}

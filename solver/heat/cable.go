@@ -8,10 +8,14 @@ import (
 	"packrise/solver/harmonic"
 )
 
+// deafTau is the transmission below which a jacket's harmonics do not reach the inside: those are like any part's.
+const deafTau = 1e-5
+
 // law is what a cable, its inside eliminated, does to the region that it lies in: outgoing scaled amplitudes δ = T β + Σ q_s u_s for what
-// comes in, β, and the heats q_s (W/m) of the sources in it. T is symmetric and kept as L diag(sign) Lᵀ.
+// comes in, β, and the heats q_s (W/m) of the sources in it, for the harmonics that the jacket lets through. T is symmetric and kept as
+// −L diag(sign) Lᵀ.
 type law struct {
-	n        int
+	n        int // reals: twice the harmonics
 	t        *mat.SymDense
 	l        *mat.Dense
 	sign     []float64 // +1 where T is negative: the cable conducts better than the medium
@@ -27,7 +31,7 @@ type law struct {
 
 // eliminate solves the inside of cable c for every source and for every harmonic that the jacket lets in.
 func (g *region) eliminate(c *piece, threads int, stop func() bool) (*law, bool) {
-	m := g.port
+	m := g.heard()
 	l := &law{n: 2 * m, tau: make([]float64, m), in: make([]float64, m), buf: make([]float64, 2*m)}
 	ports := make([]harmonic.Port, m)
 	for n := range m {
@@ -55,6 +59,16 @@ func (g *region) eliminate(c *piece, threads int, stop func() bool) (*law, bool)
 	l.response, l.drive = x[:ns], x[ns:]
 	l.build(g, c, ports, z)
 	return l, true
+}
+
+// heard is how many harmonics of what comes to a cable from outside reach its inside.
+func (g *region) heard() int {
+	for m := g.port; m > 0; m-- {
+		if p := g.wall.Port(m); math.Max(math.Abs(p.Tau), math.Abs(p.TauIn)) > deafTau {
+			return m
+		}
+	}
+	return 0
 }
 
 // driveColumn is the right-hand side that the wall's regular field omega makes.
@@ -104,11 +118,23 @@ func (l *law) build(g *region, c *piece, ports []harmonic.Port, z [][]float64) {
 	}
 }
 
-// factor splits T into L diag(−sign) Lᵀ by its eigenvalues.
+// factor splits T: by Cholesky where −T is positive, which is quick, else by its eigenvalues.
 func (l *law) factor() {
 	l.sign = make([]float64, l.n)
 	l.definite = true
 	if l.n == 0 {
+		return
+	}
+	var minus mat.SymDense
+	minus.ScaleSym(-1, l.t)
+	var chol mat.Cholesky
+	if chol.Factorize(&minus) {
+		var lower mat.TriDense
+		chol.LTo(&lower)
+		l.l = mat.DenseCopyOf(&lower)
+		for i := range l.sign {
+			l.sign[i] = 1
+		}
 		return
 	}
 	var eig mat.EigenSym

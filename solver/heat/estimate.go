@@ -17,7 +17,7 @@ func (g *region) tail(x, v []float64) float64 {
 	for i, m := range g.orders {
 		o := g.sys.Offset(i)
 		for n := int(math.Ceil(tailShare * float64(m))); n < m; n++ {
-			if g.laws[i] == nil {
+			if l := g.laws[i]; l == nil || 2*n >= l.n {
 				sum += x[o+2*n]*x[o+2*n] + x[o+2*n+1]*x[o+2*n+1]
 				continue
 			}
