@@ -109,15 +109,15 @@ func (p *sectionPainter) wantCallouts() []wanted {
 }
 
 func (p *sectionPainter) wording(r section.Reading) wanted {
-	w := wanted{id: r.ID, wall: ofHolder(r, p.s.Shapes), head: readingName(r, p.s) + " " + wholeC(r.TempC) + " °C", color: p.pal.Ink}
-	k, limited := r.MarginK()
+	w := wanted{id: r.ID, wall: ofHolder(r, p.s.Shapes), head: readingName(r, p.s) + " " + besideLimit(r) + " °C", color: p.pal.Ink}
+	_, limited := r.MarginK()
 	switch {
 	case r.Over():
-		w.color, w.sub = p.pal.Over, []string{marginText(k)}
+		w.color, w.sub = p.pal.Over, []string{marginText(r)}
 	case r.Governs && limited:
-		w.sub = []string{"governs, " + marginText(k)}
+		w.sub = []string{"governs, " + marginText(r)}
 	case r.Hottest && limited:
-		w.sub = []string{"hottest, " + marginText(k)}
+		w.sub = []string{"hottest, " + marginText(r)}
 	case r.Hottest:
 		w.sub = []string{"hottest"}
 	}

@@ -219,11 +219,11 @@ func TestTouchThree(t *testing.T) {
 
 func TestCalloutWords(t *testing.T) {
 	for _, c := range []struct {
-		k    float64
+		t    float64
 		want string
-	}{{-2.01, "over by 3 K"}, {-2, "over by 2 K"}, {-0.04, "over by less than 1 K"}, {0, "margin under 1 K"}, {0.99, "margin under 1 K"}, {3.999, "margin 3 K"}, {12, "margin 12 K"}} {
-		if got := marginText(c.k); got != c.want {
-			t.Errorf("margin %g: %q, want %q", c.k, got, c.want)
+	}{{92.01, "over by 2 K"}, {90.04, "over by 0.1 K"}, {90, "margin 0 K"}, {89.96, "margin 0.1 K"}, {86.4, "margin 4 K"}, {78, "margin 12 K"}} {
+		if got := marginText(section.Reading{TempC: c.t, LimitC: section.Some(90.0)}); got != c.want {
+			t.Errorf("%g °C: %q, want %q", c.t, got, c.want)
 		}
 	}
 	s := overScene()
@@ -250,6 +250,7 @@ func TestWallCallout(t *testing.T) {
 			r := &s.Readings[i]
 			r.Governs = r.Kind == "layer"
 			if r.Governs {
+				r.TempC = math.Round(r.TempC)
 				r.LimitC = section.Some(r.TempC - 3)
 			}
 		}

@@ -46,7 +46,7 @@ func (p *sectionPainter) insideTemp(s section.Shape, d disc) (string, bool) {
 	if !ok || p.s.Stale || s.Unset || p.outside[s.ID] || 2*d.r < tempRoom*p.k || !finite(r.TempC) {
 		return "", false
 	}
-	return wholeC(r.TempC) + " °C", true
+	return besideLimit(r) + " °C", true
 }
 
 // inkOn gives the font the colours for writing inside a part.

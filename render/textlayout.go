@@ -5,6 +5,9 @@ import (
 	"strconv"
 	"strings"
 	"unicode/utf8"
+
+	"packrise/solver/quantity"
+	"packrise/solver/section"
 )
 
 // Elide shortens a line to a width, ending it in "…"; measure returns the width of a text. Nothing is left of it when not even
@@ -96,15 +99,16 @@ func wholeC(t float64) string {
 	return strconv.Itoa(int(r))
 }
 
-// marginText says how far below or over its limit something is, rounded so that it never sounds better than it is.
-func marginText(k float64) string {
-	switch {
-	case k < -1:
-		return "over by " + strconv.Itoa(int(math.Ceil(-k))) + " K"
-	case k < 0:
-		return "over by less than 1 K"
-	case k < 1:
-		return "margin under 1 K"
+// besideLimit writes a reading's temperature so that it does not stand on the wrong side of its limit.
+func besideLimit(r section.Reading) string {
+	return quantity.Trimmed(quantity.BesideLimit(r.TempC, r.LimitC.Or(math.NaN())), 1)
+}
+
+// marginText says how far below or over its limit something is, so that it agrees with the temperature as written. The reading has a limit.
+func marginText(r section.Reading) string {
+	k := r.LimitC.V - quantity.BesideLimit(r.TempC, r.LimitC.V)
+	if r.Over() {
+		return "over by " + quantity.Trimmed(-k, 1) + " K"
 	}
-	return "margin " + strconv.Itoa(int(math.Floor(k))) + " K"
+	return "margin " + quantity.Trimmed(k, 1) + " K"
 }

@@ -18,17 +18,9 @@ const (
 // written formats a number that a person entered: as entered, to a thousandth at most.
 func written(v float64) string { return quantity.Trimmed(v, 3) }
 
-// shownDegrees rounds a temperature beside its limit, by the rule of the sentence: to whole kelvins, but a tenth away from the limit where
-// whole kelvins would carry it onto or across the limit.
+// shownDegrees rounds a temperature beside its limit.
 func shownDegrees(t float64, limit section.Opt[float64]) float64 {
-	near := math.Round(t)
-	switch {
-	case !limit.OK || t == limit.V || (near != limit.V && (t > limit.V) == (near > limit.V)):
-		return near
-	case t > limit.V:
-		return math.Ceil(t*10) / 10
-	}
-	return math.Floor(t*10) / 10
+	return quantity.BesideLimit(t, limit.Or(math.NaN()))
 }
 
 // degrees formats a temperature beside its limit.

@@ -4,34 +4,22 @@ import (
 	"math"
 	"strconv"
 	"strings"
+
+	"packrise/solver/quantity"
 )
 
 // minus is the real minus sign of everything that people read.
-const minus = "−"
+const minus = quantity.Minus
 
 // digits formats v with up to n decimals, without trailing zeros.
-func digits(v float64, n int) string {
-	s := strconv.FormatFloat(v, 'f', n, 64)
-	if strings.Contains(s, ".") {
-		s = strings.TrimRight(strings.TrimRight(s, "0"), ".")
-	}
-	if s == "-0" {
-		s = "0"
-	}
-	return strings.Replace(s, "-", minus, 1)
-}
+func digits(v float64, n int) string { return quantity.Trimmed(v, n) }
 
-// shown rounds a temperature beside its limit: to the nearest whole kelvin, but a tenth away from the limit where whole kelvins
-// would carry it onto or across the limit.
+// shown rounds a temperature beside its limit.
 func shown(t, limit float64, hasLimit bool) float64 {
-	near := math.Round(t)
-	switch {
-	case !hasLimit || t == limit || (near != limit && (t > limit) == (near > limit)):
-		return near
-	case t > limit:
-		return math.Ceil(t*10) / 10
+	if !hasLimit {
+		limit = math.NaN()
 	}
-	return math.Floor(t*10) / 10
+	return quantity.BesideLimit(t, limit)
 }
 
 // degrees formats a temperature beside its limit.
