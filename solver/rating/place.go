@@ -17,6 +17,7 @@ const (
 // places finds the frame of the heat problem, pushes slight overlaps apart and reports larger ones, in the holder and in every cable.
 func (r *resolver) places() {
 	if !r.placed() {
+		r.overlapsOfPlaced()
 		return
 	}
 	if len(r.scene.parts) == 0 {
@@ -43,6 +44,20 @@ func (r *resolver) placed() bool {
 		}
 	}
 	return true
+}
+
+// overlapsOfPlaced reports overlaps among the parts of the top level that have a place while others have none, so that all problems come
+// at once. Bundles and bare parts have no wall, so their frame does not matter.
+func (r *resolver) overlapsOfPlaced() {
+	var of []int
+	for _, i := range r.scene.children(-1) {
+		if p := &r.scene.parts[i]; !p.unset && p.outer() > 0 {
+			of = append(of, i)
+		}
+	}
+	if len(of) > 0 {
+		r.overlaps(-1, of, r.scene.discs(of), r.scene.box(-1))
+	}
 }
 
 // unsound tells whether any part or the holder has no size, because a problem was found before.

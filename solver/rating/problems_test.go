@@ -84,6 +84,25 @@ parts:
 	}
 }
 
+// TestProblemsAtOnce: an unplaced part does not hide that two others overlap.
+func TestProblemsAtOnce(t *testing.T) {
+	d := parse(t, head+`holder: {kind: conduit, inside_mm: 20}
+parts:
+  - {id: L1, kind: core, stock: thhn-12, at_mm: [0, 0]}
+  - {id: L2, kind: core, stock: thhn-12, at_mm: [2, 0]}
+  - {id: L3, kind: core, stock: thhn-12}
+  - {id: L4, kind: core, stock: thhn-12, at_mm: [0, 9]}
+`)
+	_, problems := rating.Outline(d, catalog.Load())
+	got := map[string]bool{}
+	for _, p := range problems {
+		got[p.Rule] = true
+	}
+	if len(problems) != 3 || !got["overlap"] || !got["unplaced"] || !got["outside-holder"] {
+		t.Errorf("%v", problems)
+	}
+}
+
 // TestSlightOverlap: up to 20 µm is pushed apart for solving with a note, and the document is left as it was.
 func TestSlightOverlap(t *testing.T) {
 	d := parse(t, head+`holder: {kind: conduit, inside_mm: 20, fill: pvc}
