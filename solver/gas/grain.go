@@ -1,0 +1,76 @@
+package gas
+
+import "math"
+
+// Grain decides how long patches may be: a disc of radius r gets PerTurn, an outline so many in all, and nowhere is a patch longer than about half the
+// radius of a smaller disc beside it.
+type Grain struct {
+	PerTurn float64 // on a disc
+	Around  float64 // on an outline
+	Discs   []Disc  // Cuts are not needed
+}
+
+// finest is the shortest patch as a share of the usual one.
+const finest = 1.0 / 16
+
+// Longest patch at z, m, where usual would do; skip is the disc that z lies on, −1 for the outline.
+func (g *Grain) Longest(z complex128, usual float64, skip int) float64 {
+	l := usual
+	for j := range g.Discs {
+		d := &g.Discs[j]
+		if j == skip || d.R/2 >= l {
+			continue
+		}
+		if v := d.C - z; math.Abs(real(v)) < d.R+2*l && math.Abs(imag(v)) < d.R+2*l {
+			l = math.Min(l, (d.R+math.Max(0, size(v)-d.R))/2)
+		}
+	}
+	return math.Max(l, finest*usual)
+}
+
+// Cuts divides disc i.
+func (g *Grain) Cuts(i int) []float64 {
+	d := &g.Discs[i]
+	n := int(math.Ceil(g.PerTurn))
+	usual := 2 * math.Pi * d.R / float64(n)
+	cuts := make([]float64, 1, n+1)
+	for k := range n {
+		a, b := 2*math.Pi*float64(k)/float64(n), 2*math.Pi*float64(k+1)/float64(n)
+		cuts = g.bisect(cuts, a, b, usual, i, d.C, d.R)
+	}
+	return cuts
+}
+
+// Ring divides the circle of radius r about the origin.
+func (g *Grain) Ring(r float64) Outline {
+	n := int(math.Ceil(g.Around))
+	usual := 2 * math.Pi * r / float64(n)
+	cuts := make([]float64, 1, n+1)
+	for k := range n {
+		a, b := 2*math.Pi*float64(k)/float64(n), 2*math.Pi*float64(k+1)/float64(n)
+		cuts = g.bisect(cuts, a, b, usual, -1, 0, r)
+	}
+	o := Outline{R: r, Segments: make([]Segment, len(cuts)-1)}
+	last := complex(r, 0)
+	for k := range o.Segments {
+		s, c := math.Sincos(cuts[k+1])
+		next := complex(r*c, r*s)
+		if k == len(o.Segments)-1 {
+			next = complex(r, 0)
+		}
+		o.Segments[k] = Segment{last, next}
+		last = next
+	}
+	return o
+}
+
+// bisect appends the ends of the patches between a and b.
+func (g *Grain) bisect(cuts []float64, a, b, usual float64, i int, c complex128, r float64) []float64 {
+	m := (a + b) / 2
+	s, o := math.Sincos(m)
+	if l := r * (b - a); l > 1.01*g.Longest(c+complex(r*o, r*s), usual, i) {
+		cuts = g.bisect(cuts, a, m, usual, i, c, r)
+		return g.bisect(cuts, m, b, usual, i, c, r)
+	}
+	return append(cuts, b)
+}
