@@ -25,12 +25,16 @@ func (c *Cloud) Remainder() {
 	}
 }
 
+// faint ends series of amplitudes, K.
+const faint = 1e-10
+
 // Outgoing returns the coefficients A_n, n = 1 … top, of the discs' field beyond them: Re Σ A_n (R/z)^n.
 func (c *Cloud) Outgoing(top int) []complex128 {
 	a := make([]complex128, top)
 	r := c.Circle.R
 	for j, d := range c.D {
 		z := scale(1/r, c.C[j])
+		l := size(z)
 		p := complex(c.Q[j], 0)
 		for n := range a {
 			p *= z
@@ -43,7 +47,10 @@ func (c *Cloud) Outgoing(top int) []complex128 {
 			p := scale(f, d[m-1])
 			for n := m; n <= top; n++ {
 				a[n-1] += p
-				p = scale(float64(n)/float64(n-m+1), p) * z
+				g := float64(n) / float64(n-m+1)
+				if p = scale(g, p) * z; g*l < 1 && small(p, faint) {
+					break
+				}
 			}
 		}
 	}

@@ -109,15 +109,20 @@ func (t *Tree) inherit(d, parent *cell) {
 	}
 }
 
-// imageFar tells whether the image of disc j is far from a cell: a disc about R²/conj(c), as large as the mirrored rim nearest the wall.
+// imageFar tells whether the image of disc j is far from a cell. It fills the mirrored disc, or, if the disc holds the origin, all beyond
+// the mirrored circle.
 func (t *Tree) imageFar(j int, at complex128, rho float64) bool {
-	c, r := t.cloud.C[j], t.cloud.Circle.R
-	l := size(c)
-	if l < 1e-9*r {
-		return r*r/t.cloud.A[j] > r+apartBy*rho
+	c, a, r := t.cloud.C[j], t.cloud.A[j], t.cloud.Circle.R
+	d := real(c)*real(c) + imag(c)*imag(c) - a*a
+	if d == 0 {
+		d = 1e-12 * a * a
 	}
-	pole := scale(r*r/(l*l), c)
-	return size(at-pole) > r*r/l-r*r/(l+t.cloud.A[j])+apartBy*rho
+	f := r * r / d
+	l := size(at - scale(f, c))
+	if d > 0 {
+		return l > f*a+apartBy*rho
+	}
+	return l < -f*a-apartBy*rho
 }
 
 // finish adds to a leaf what is kept out of the sources.

@@ -109,9 +109,19 @@ func (l *layers) trim() {
 	}
 }
 
+// maxWallSeries bounds the harmonics of a round wall in pictures.
+const maxWallSeries = 800
+
 // wallLayers works out the waves in the rings of a round wall. Near a part that touches, many of them count.
 func (s *state) wallLayers() layers {
-	a := s.cloud.Outgoing(max(len(s.cloud.Circle.Sigma), 64))
+	top := 64.0
+	for i := range s.pieces {
+		p := &s.pieces[i]
+		if s.r-math.Hypot(real(p.at), imag(p.at)) < 2*p.a {
+			top = math.Max(top, 2*float64(len(s.cloud.D[i]))*s.r/p.a)
+		}
+	}
+	a := s.cloud.Outgoing(max(len(s.cloud.Circle.Sigma), int(math.Min(top, maxWallSeries))))
 	l := newLayers(s.wall.Rings, s.total, len(a))
 	mean := s.level
 	for i, g := range l.rings {
