@@ -1,7 +1,6 @@
 package heat_test
 
 import (
-	"context"
 	"math"
 	"testing"
 
@@ -16,27 +15,39 @@ var referenceCases = []string{
 	"c09_rect7_floor_air", "c11_rect6_spaced_filler", "c13_sides_steel8", "c14b_sides_bare4",
 }
 
+// within is the largest error allowed of any conductor, K: draft, standard, fine. The temperatures of c01–c12 were computed with copper of 385 W/mK and
+// lie up to 0.0065 K above those of conductors of one temperature, which is what a heat.Metal is; with 385 W/mK put in, fine is within 0.0006 K on c04–c07.
+var within = map[heat.Accuracy]float64{heat.Draft: 0.1, heat.Standard: 0.02, heat.Fine: 0.007}
+
 func TestReferenceCases(t *testing.T) {
 	want := expected(t, "expected.csv", "temperature_c")
+	sides := expected(t, "expected_sides.csv", "released_w_m")
 	for _, name := range referenceCases {
 		l := load(t, name)
 		for _, acc := range []heat.Accuracy{heat.Draft, heat.Standard, heat.Fine} {
-			r := heat.New(l.Problem, heat.Settings{Accuracy: acc}).Solve(context.Background(), nil)
+			r := solve(t, l.Problem, acc)
 			worst, rise := 0.0, 0.0
 			for i, id := range l.ids {
 				w, ok := want[name][id]
 				if !ok {
 					continue
 				}
-				e := r.Core[i] - w
-				if math.Abs(e) > math.Abs(worst) {
+				if e := r.Core[i] - w; math.Abs(e) > math.Abs(worst) {
 					worst = e
 				}
 				rise = math.Max(rise, w-l.Wall.Ambient)
 			}
-			t.Logf("%-28s %d: error %8.4f K of %5.1f K, estimate %.4f, %4d unknowns, %3d steps, %v", name, acc, worst, rise, r.ErrorK, r.Unknowns, r.Steps, r.Status)
-			if math.Abs(worst) > 0.005*rise {
+			t.Logf("%-28s %-8s error %8.4f K of %5.1f K, estimated %.4f, %4d unknowns, %2d steps", name, [...]string{"standard", "draft", "fine"}[acc], worst, rise, r.ErrorK, r.Unknowns, r.Steps)
+			if math.Abs(worst) > within[acc] || math.Abs(worst) > 0.005*rise {
 				t.Errorf("%s: error %.4f K", name, worst)
+			}
+			if acc == heat.Draft {
+				continue
+			}
+			for k, side := range []string{"bottom", "right", "top", "left"} {
+				if w, ok := sides[name][side]; ok && math.Abs(r.SideOut[k]-w) > 0.005*math.Abs(w)+0.001 {
+					t.Errorf("%s: %s side %.4f W/m, want %.4f", name, side, r.SideOut[k], w)
+				}
 			}
 		}
 	}

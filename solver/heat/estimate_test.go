@@ -22,7 +22,7 @@ func TestEstimate(t *testing.T) {
 		{parts: 5, air: true, rect: true},
 		{parts: 6, rect: true},
 	}
-	each := soak(8)
+	each := soak(8, 200)
 	if testing.Short() {
 		each = 2
 	}

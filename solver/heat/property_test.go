@@ -24,7 +24,7 @@ var wishes = []wish{
 }
 
 func forRandom(t *testing.T, each int, f func(t *testing.T, r *rand.Rand, p heat.Problem)) {
-	n := soak(each)
+	n := soak(each, 1000)
 	if testing.Short() {
 		n = max(1, n/5)
 	}

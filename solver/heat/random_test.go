@@ -8,12 +8,12 @@ import (
 	"packrise/solver/heat"
 )
 
-// soak multiplies the number of random sections under PACKRISE_SOAK=1.
-func soak(n int) int {
+// soak is the number of random sections of a kind: few, or many under PACKRISE_SOAK=1.
+func soak(few, many int) int {
 	if os.Getenv("PACKRISE_SOAK") != "" {
-		return 20 * n
+		return many
 	}
-	return n
+	return few
 }
 
 // kinds of random section.
