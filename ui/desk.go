@@ -33,10 +33,10 @@ type Desk struct {
 	answer answered
 }
 
-// trial is the document within a drag and the edit that made it.
+// trial is the document within a drag, the edit that made it, and the document with which the drag began.
 type trial struct {
-	doc  *section.Document
-	edit section.Edit
+	doc, base *section.Document
+	edit      section.Edit
 }
 
 // Changed says what changed, for listeners. Several may come at once.
@@ -119,7 +119,7 @@ func (k *Desk) Apply(e section.Edit, draft bool) {
 		if next == k.Document() {
 			return
 		}
-		k.trial = &trial{doc: next, edit: e}
+		k.trial = &trial{doc: next, base: k.history.Now(), edit: e}
 		k.changed(ChangedDocument, ask{draft: true})
 		return
 	}

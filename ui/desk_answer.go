@@ -14,6 +14,7 @@ const staleAfter = 200 * time.Millisecond
 type ask struct {
 	draft     bool // within a drag: coarse, and the running draft finishes first
 	interrupt bool
+	frame     func(*section.Document) *section.Document // of a drag: makes the document to answer for, beside the window
 }
 
 // answered is the latest answer and its age.
@@ -47,7 +48,11 @@ func (k *Desk) solve(a ask) {
 	if k.answer.stop == nil && !k.answer.stale {
 		k.waitForStale()
 	}
-	k.runner.Ask(request{doc: k.Document(), rev: k.rev, number: k.answer.asked, draft: a.draft}, a.interrupt)
+	q := request{doc: k.Document(), rev: k.rev, number: k.answer.asked, draft: a.draft, frame: a.frame}
+	if a.frame != nil {
+		q.doc = k.trial.base
+	}
+	k.runner.Ask(q, a.interrupt)
 }
 
 // refine asks for the standard answer where only a draft is there or under way.
@@ -91,7 +96,12 @@ func (k *Desk) arrive(q request, a answer) {
 	if q.rev != k.rev {
 		k.waitForStale()
 	}
-	k.tell(ChangedResult)
+	c := ChangedResult
+	if q.frame != nil && k.trial != nil && a.doc != nil {
+		k.trial.doc, k.outlined = a.doc, false
+		c |= ChangedDocument
+	}
+	k.tell(c)
 }
 
 // Result returns the answer; fresh is false when it belongs to an older document or none exists (nil). Within a drag the last frame of that drag

@@ -34,23 +34,7 @@ func placing(name string, at map[string]section.Point) section.Edit {
 
 // MakeRoom pushes the other parts off the one held, beside the window; done is told whether there is room.
 func (k *Desk) MakeRoom(held string, done func(ok bool)) {
-	k.makeRoom(k.Document(), held, section.Edit{Name: "make room for " + held}, nil, done)
-}
-
-// MakeRoomAt puts a part where it overlaps others and pushes those away, as one step with the drag that is under way. Where there is no room, the part
-// stays where otherwise has it.
-func (k *Desk) MakeRoomAt(id string, to section.Point, otherwise section.Edit) {
-	d := section.Move(k.Document(), id, to)
-	first := func(d *section.Document) *section.Document { return section.Move(d, id, to) }
-	k.makeRoom(d, id, section.Edit{Name: otherwise.Name, Object: otherwise.Object, Gesture: otherwise.Gesture}, first, func(ok bool) {
-		if !ok {
-			k.Apply(otherwise, false)
-		}
-	})
-}
-
-func (k *Desk) makeRoom(d *section.Document, held string, e section.Edit, first func(*section.Document) *section.Document, done func(ok bool)) {
-	rev := k.rev
+	d, rev := k.Document(), k.rev
 	k.rooms.Beside(func() {
 		at, ok := k.rooms.MakeRoom(d, k.cat, held)
 		k.rooms.Hop(func() {
@@ -58,13 +42,7 @@ func (k *Desk) makeRoom(d *section.Document, held string, e section.Edit, first 
 				return
 			}
 			if ok {
-				e.Do = func(d *section.Document) *section.Document {
-					if first != nil {
-						d = first(d)
-					}
-					return section.PlaceAll(d, at)
-				}
-				k.Apply(e, false)
+				k.Apply(placing("make room for "+held, at), false)
 			}
 			done(ok)
 		})

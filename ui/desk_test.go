@@ -219,6 +219,59 @@ func TestDragShowsFramesThatFinish(t *testing.T) {
 	}
 }
 
+func TestFramesBringTheirDocument(t *testing.T) {
+	k, l, f := slowDesk(t)
+	<-f.started
+	answerOne(t, k, l, f)
+	g, h := k.NewGesture(), listenTo(k)
+	k.Drag(moveTo("L1", -5, 0, g))
+	if at(t, k, "L1").X != -4 || !k.Drafting() || !k.Dirty() || h.told()&ChangedDocument != 0 {
+		t.Error("the document must wait for the frame")
+	}
+	<-f.started
+	k.Drag(moveTo("L1", -5.5, 0, g))
+	k.Drag(moveTo("L1", -6, 0, g))
+	answerOne(t, k, l, f)
+	r, fresh := k.Result()
+	if !fresh || at(t, k, "L1").X != -5 || r.Shapes[1].At.X != -5 || h.told()&ChangedDocument == 0 {
+		t.Errorf("fresh %v, L1 at %v, shown at %v", fresh, at(t, k, "L1"), r.Shapes[1].At)
+	}
+	<-f.started // the newest; the one in between was dropped
+	k.Drop(moveTo("L1", -6, 0, g))
+	l.until(t, "the drop", func() bool { return !k.Drafting() })
+	<-f.started
+	answerOne(t, k, l, f)
+	if at(t, k, "L1").X != -6 || k.UndoName() != "move L1" || k.Draft() {
+		t.Errorf("L1 at %v, undo %q, draft %v", at(t, k, "L1"), k.UndoName(), k.Draft())
+	}
+	k.Undo()
+	if at(t, k, "L1").X != -4 || k.UndoName() != "" {
+		t.Error("a drag must be one step")
+	}
+}
+
+func TestDragCancelledBeforeItsFrame(t *testing.T) {
+	k, l, f := slowDesk(t)
+	<-f.started
+	answerOne(t, k, l, f)
+	k.Drag(moveTo("L1", -5, 0, k.NewGesture()))
+	<-f.started
+	k.CancelDraft()
+	<-f.started
+	l.run()
+	if at(t, k, "L1").X != -4 || k.Dirty() {
+		t.Error("a frame came after the drag was cancelled")
+	}
+	answerOne(t, k, l, f)
+	k.Drag(moveTo("L1", -5, 0, k.NewGesture()))
+	k.Drop(moveTo("L1", -5, 0, k.gesture))
+	k.Apply(moveTo("L2", 5, 0, 0), false) // before the drop has come
+	l.pass(time.Second)
+	if at(t, k, "L2").X != 5 || k.UndoName() != "move L2" {
+		t.Errorf("undo %q", k.UndoName())
+	}
+}
+
 func TestReleaseWithoutAMoveStillSolvesInFull(t *testing.T) {
 	k, l, f := slowDesk(t)
 	<-f.started

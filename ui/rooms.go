@@ -67,10 +67,12 @@ type request struct {
 	rev    uint64
 	number uint64 // counts requests: the same document may be asked about twice
 	draft  bool
+	frame  func(*section.Document) *section.Document // nil: doc itself is answered for
 }
 
 // answer is what came back.
 type answer struct {
+	doc      *section.Document // that was answered for
 	result   *rating.Result
 	problems []section.Problem
 	err      error
@@ -82,6 +84,10 @@ func (r Rooms) work(ctx context.Context, q request) answer {
 	if q.draft {
 		o.Accuracy = heat.Draft
 	}
-	res, problems, err := r.Solve(ctx, q.doc, o)
-	return answer{result: res, problems: problems, err: err}
+	d := q.doc
+	if q.frame != nil {
+		d = q.frame(d)
+	}
+	res, problems, err := r.Solve(ctx, d, o)
+	return answer{doc: d, result: res, problems: problems, err: err}
 }

@@ -41,8 +41,8 @@ type dragState struct {
 	others []disc          // that stay
 	room   room
 	grab   section.Point // from the pointer to the centre of the first part when the button went down
-	shift0 section.Point // shift reached so far
 	want   section.Point // shift that the pointer wants
+	held   section.Point // shift of several parts as far as they may
 }
 
 const doubleClick = 350 * time.Millisecond
@@ -172,24 +172,46 @@ func topsOf(ids []string) []string {
 	return tops
 }
 
-// follow moves the parts towards the pointer, as far as they may.
+// follow moves the parts towards the pointer.
 func (v *SectionView) follow(p fyne.Position) {
 	d := &v.drag
 	mm, first := v.camera.toMM(p, v.Size()), d.parts[0]
-	d.want = section.Point{X: mm.X + d.grab.X - first.At.X, Y: mm.Y + d.grab.Y - first.At.Y}
-	held := d.shift0
-	if len(d.parts) == 1 {
-		if at, ok := nearestFree(d.wantedDisc(), d.others, d.room); ok {
-			held = section.Point{X: at.X - first.At.X, Y: at.Y - first.At.Y}
-		}
-	} else {
-		held = heldShift(discsOf(d.parts), d.others, d.room, d.shift0, d.want)
+	want := section.Point{X: mm.X + d.grab.X - first.At.X, Y: mm.Y + d.grab.Y - first.At.Y}
+	if want == d.want {
+		return
 	}
-	if held != d.shift0 {
-		d.shift0 = held
-		v.desk.Apply(d.edit(), true)
+	d.want = want
+	if len(d.parts) > 1 {
+		d.held = heldShift(discsOf(d.parts), d.others, d.room, d.held, want)
 	}
+	v.desk.Drag(d.edit(v.desk))
 	v.placeLines()
+}
+
+// edit moves the parts to where the pointer wants them, as far as they may. One part pushes the others away where there is room for that, and is else
+// held at the nearest free place.
+func (d *dragState) edit(k *Desk) section.Edit {
+	e := moveBy(d.parts, d.held, d.gesture)
+	if len(d.parts) > 1 {
+		return e
+	}
+	id, want, others, in := d.parts[0].ID, d.wantedDisc(), d.others, d.room
+	cat, makeRoom := k.cat, k.rooms.MakeRoom
+	want.at = tidied(in.inside(want.at, want.r))
+	e.Do = func(base *section.Document) *section.Document {
+		if free(want, others, in) {
+			return section.Move(base, id, want.at)
+		}
+		d := section.Move(base, id, want.at)
+		if at, ok := makeRoom(d, cat, id); ok {
+			return section.PlaceAll(d, at)
+		}
+		if at, ok := nearestFree(want, others, in); ok {
+			return section.Move(base, id, tidied(at))
+		}
+		return base
+	}
+	return e
 }
 
 func discsOf(shapes []section.Shape) []disc {
@@ -206,14 +228,11 @@ func (d *dragState) wantedDisc() disc {
 	return disc{section.Point{X: s.At.X + d.want.X, Y: s.At.Y + d.want.Y}, s.OuterR()}
 }
 
-// edit moves the parts by the shift reached so far.
-func (d *dragState) edit() section.Edit { return moveBy(d.parts, d.shift0, d.gesture) }
-
 // moveBy is the edit that moves parts from where they stood.
 func moveBy(parts []section.Shape, by section.Point, gesture int) section.Edit {
 	at := map[string]section.Point{}
 	for _, s := range parts {
-		at[s.ID] = section.Point{X: tidy(s.At.X + by.X), Y: tidy(s.At.Y + by.Y)}
+		at[s.ID] = tidied(section.Point{X: s.At.X + by.X, Y: s.At.Y + by.Y})
 	}
 	return section.Edit{
 		Name: "move " + someParts(parts), Object: objectOf(parts), Gesture: gesture,
@@ -223,6 +242,8 @@ func moveBy(parts []section.Shape, by section.Point, gesture int) section.Edit {
 
 // tidy rounds millimetres to a tenth of a micrometre.
 func tidy(mm float64) float64 { return math.Round(mm*1e4) / 1e4 }
+
+func tidied(p section.Point) section.Point { return section.Point{X: tidy(p.X), Y: tidy(p.Y)} }
 
 func objectOf(parts []section.Shape) string {
 	ids := make([]string, len(parts))
@@ -243,7 +264,7 @@ func someParts(parts []section.Shape) string {
 // DragEnd ends a drag. The button's release may have come before it or never comes, when the pointer has left the canvas.
 func (v *SectionView) DragEnd() { v.release() }
 
-// release leaves the parts where they are held, or makes room where the pointer wants the part.
+// release leaves the parts where they are.
 func (v *SectionView) release() {
 	d := v.drag
 	v.drag = dragState{}
@@ -251,19 +272,7 @@ func (v *SectionView) release() {
 		return
 	}
 	v.placeLines()
-	at, wish := d.wantedDisc(), false
-	if len(d.parts) == 1 {
-		at.at = d.room.inside(at.at, at.r)
-		held := section.Point{X: d.parts[0].At.X + d.shift0.X, Y: d.parts[0].At.Y + d.shift0.Y}
-		wish = math.Hypot(at.at.X-held.X, at.at.Y-held.Y) > 0.05*at.r
-	}
-	if wish {
-		v.desk.MakeRoomAt(d.parts[0].ID, section.Point{X: tidy(at.at.X), Y: tidy(at.at.Y)}, d.edit())
-		return
-	}
-	if v.desk.Drafting() || d.shift0 != (section.Point{}) {
-		v.desk.Apply(d.edit(), false)
-	}
+	v.desk.Drop(d.edit(v.desk))
 	v.repaint()
 }
 
@@ -278,28 +287,28 @@ func (v *SectionView) cancelDrag() bool {
 	return true
 }
 
-// placeLines puts the lines that follow the pointer over the picture.
+// placeLines puts the ring that follows the pointer over the picture: it is where the part is wanted, in the colour of what is over where it can't be.
 func (v *SectionView) placeLines() {
 	d := &v.drag
 	if d.mode != dragParts {
-		v.held.Hide()
 		v.wanted.Hide()
 		return
 	}
 	w := d.wantedDisc()
-	held := disc{section.Point{X: d.parts[0].At.X + d.shift0.X, Y: d.parts[0].At.Y + d.shift0.Y}, w.r}
-	v.held.StrokeColor = themeColor(theme.ColorNamePrimary)
-	v.wanted.StrokeColor = themeColor(theme.ColorNameError)
-	place(v.held, held, v.camera, v.Size())
-	place(v.wanted, w, v.camera, v.Size())
-	v.held.Show()
-	if math.Hypot(held.at.X-w.at.X, held.at.Y-w.at.Y) > 0.05*w.r {
-		v.wanted.Show()
-	} else {
-		v.wanted.Hide()
+	v.wanted.StrokeColor = themeColor(theme.ColorNamePrimary)
+	if !v.desk.Solving() && d.off(v.desk.shownShapes()) {
+		v.wanted.StrokeColor = themeColor(theme.ColorNameError)
 	}
-	v.held.Refresh()
+	place(v.wanted, w, v.camera, v.Size())
+	v.wanted.Show()
 	v.wanted.Refresh()
+}
+
+// off tells whether the first part is shown elsewhere than where it is wanted.
+func (d *dragState) off(shown []section.Shape) bool {
+	w := d.wantedDisc()
+	i := slices.IndexFunc(shown, func(s section.Shape) bool { return s.ID == d.parts[0].ID })
+	return i >= 0 && math.Hypot(shown[i].At.X-w.at.X, shown[i].At.Y-w.at.Y) > 0.05*w.r
 }
 
 func place(c interface {

@@ -38,8 +38,7 @@ type SectionView struct {
 	stretchedV render.View
 
 	raster *canvas.Raster
-	held   *canvas.Circle // the dragged part where it is held
-	wanted *canvas.Circle // where the pointer wants it
+	wanted *canvas.Circle // where the pointer wants the part that it drags
 	hint   *readout
 
 	drag    dragState
@@ -64,10 +63,8 @@ var (
 func NewSectionView(k *Desk) *SectionView {
 	v := &SectionView{desk: k, fitted: true, isotherms: true, density: 1}
 	v.raster = canvas.NewRaster(v.draw)
-	v.held = canvas.NewCircle(color.Transparent)
 	v.wanted = canvas.NewCircle(color.Transparent)
-	v.held.StrokeWidth, v.wanted.StrokeWidth = 2, 1
-	v.held.Hide()
+	v.wanted.StrokeWidth = 1.5
 	v.wanted.Hide()
 	v.hint = newReadout()
 	v.painter = newPainter(k.rooms.Hop, v.show)
@@ -228,7 +225,7 @@ func (r *sectionRenderer) Layout(s fyne.Size) {
 
 func (r *sectionRenderer) Objects() []fyne.CanvasObject {
 	v := r.v
-	return append([]fyne.CanvasObject{v.raster, v.wanted, v.held}, v.hint.objects()...)
+	return append([]fyne.CanvasObject{v.raster, v.wanted}, v.hint.objects()...)
 }
 
 func (r *sectionRenderer) Refresh() {

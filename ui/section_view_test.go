@@ -11,6 +11,7 @@ import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/test"
+	"fyne.io/fyne/v2/theme"
 
 	"packrise/solver/catalog"
 	"packrise/solver/section"
@@ -78,11 +79,13 @@ func (h *hand) pull(from, to fyne.Position) {
 }
 
 // drag is a whole drag with the main button.
-func (h *hand) drag(from, to fyne.Position) {
+func (h *hand) drag(t *testing.T, from, to fyne.Position) {
+	t.Helper()
 	h.press(from)
 	h.pull(from, to)
 	h.v.DragEnd()
 	h.v.MouseUp(h.event(to, desktop.MouseButtonPrimary))
+	h.l.until(t, "the drop", func() bool { return !h.k.Drafting() })
 }
 
 func (h *hand) key(n fyne.KeyName) { h.v.TypedKey(&fyne.KeyEvent{Name: n}) }
@@ -91,7 +94,7 @@ func TestDragMovesThePart(t *testing.T) {
 	h, _ := testView(t)
 	from := at(t, h.k, "L1")
 	start := h.on(t, "L1").AddXY(3, -4) // not in the middle: the part must not jump
-	h.drag(start, start.AddXY(20, 40))
+	h.drag(t, start, start.AddXY(20, 40))
 	scale := h.v.camera.scale
 	near(t, "after the drag", at(t, h.k, "L1"), section.Point{X: from.X + 20/scale, Y: from.Y - 40/scale}, 1e-3)
 	if h.k.UndoName() != "move L1" || h.k.Drafting() {
@@ -122,40 +125,75 @@ func TestTemperaturesFollowTheDrag(t *testing.T) {
 	if !h.k.Draft() || r2.Conductors[0].TempC == before {
 		t.Errorf("draft %v, L1 %g °C before and %g °C within the drag", h.k.Draft(), before, r2.Conductors[0].TempC)
 	}
+	if shown := h.k.Scene().Shapes[1].At; shown != at(t, h.k, "L1") {
+		t.Errorf("the picture has L1 at %v, the document at %v", shown, at(t, h.k, "L1"))
+	}
 	h.v.DragEnd()
 	h.l.solved(t, h.k)
 }
 
+// noRoom is a desk where nothing can be pushed away.
+func noRoom(t *testing.T) *hand {
+	t.Helper()
+	none := func(*section.Document, *catalog.Catalog, string) (map[string]section.Point, bool) { return nil, false }
+	k, l := testDeskWith(t, testDesign(), Rooms{MakeRoom: none})
+	h, _ := testViewOn(t, k, l)
+	return h
+}
+
+func apartBy(t *testing.T, k *Desk, a, b string) float64 {
+	t.Helper()
+	p, q := at(t, k, a), at(t, k, b)
+	return math.Hypot(p.X-q.X, p.Y-q.Y)
+}
+
 func TestDraggedPartIsHeldAtContact(t *testing.T) {
-	h, _ := testView(t)
+	h := noRoom(t)
 	start := h.on(t, "L1")
 	h.press(start)
 	h.pull(start, h.on(t, "L2").AddXY(-10, 0))
-	l1, l2 := at(t, h.k, "L1"), at(t, h.k, "L2")
-	if d := math.Hypot(l1.X-l2.X, l1.Y-l2.Y); d < 4-1e-3 || d > 4+1e-2 {
+	h.l.until(t, "the last frame", func() bool { return !h.k.Solving() })
+	if d := apartBy(t, h.k, "L1", "L2"); d < 4-1e-3 || d > 4+1e-2 {
 		t.Errorf("held %g mm from L2, want touching at 4 mm", d)
 	}
-	if !h.v.wanted.Visible() || !h.v.held.Visible() {
-		t.Error("an impossible place isn't shown")
+	h.v.placeLines()
+	if !h.v.wanted.Visible() || h.v.wanted.StrokeColor != themeColor(theme.ColorNameError) {
+		t.Error("an impossible place isn't shown as one")
 	}
 	h.pull(h.on(t, "L2"), h.over(section.Point{X: 40, Y: 0})) // out of the jacket
-	l1 = at(t, h.k, "L1")
-	if r := math.Hypot(l1.X, l1.Y); r > 8 {
-		t.Errorf("dragged through the jacket to %g mm", r)
+	h.l.until(t, "the last frame", func() bool { return !h.k.Solving() })
+	if p := at(t, h.k, "L1"); math.Hypot(p.X, p.Y) > 8 {
+		t.Errorf("dragged through the jacket to %v", p)
 	}
 	h.key(fyne.KeyEscape)
+	if h.v.wanted.Visible() {
+		t.Error("the ring stays after Escape")
+	}
 }
 
-func TestReleaseMakesRoom(t *testing.T) {
+func TestDragPushesOthersAway(t *testing.T) {
 	h, _ := testView(t)
 	start, target := h.on(t, "L1"), section.Point{X: 3.2, Y: 0}
-	h.drag(start, h.over(target))
-	h.l.until(t, "room", func() bool { return !h.k.Drafting() })
-	near(t, "L1 stays where it was dropped", at(t, h.k, "L1"), target, 0.05)
-	l2 := at(t, h.k, "L2")
-	if l2.X <= 4 || math.Hypot(l2.X-3.2, l2.Y) < 4-2e-3 {
+	h.press(start)
+	h.pull(start, h.over(target))
+	h.l.until(t, "the last frame", func() bool { return !h.k.Solving() })
+	near(t, "L1 within the drag", at(t, h.k, "L1"), target, 0.05)
+	if l2 := at(t, h.k, "L2"); l2.X <= 4 || apartBy(t, h.k, "L1", "L2") < 4-2e-3 {
 		t.Errorf("L2 was not pushed away: %v", l2)
 	}
+	h.pull(h.over(target), start.AddXY(-2, 0)) // back again: nothing stays pushed
+	h.l.until(t, "the last frame", func() bool { return !h.k.Solving() })
+	if l2 := at(t, h.k, "L2"); l2 != (section.Point{X: 4}) {
+		t.Errorf("L2 stays pushed at %v", l2)
+	}
+	h.pull(start, h.over(target))
+	h.v.DragEnd()
+	h.l.until(t, "the drop", func() bool { return !h.k.Drafting() })
+	near(t, "L1 stays where it was dropped", at(t, h.k, "L1"), target, 0.05)
+	if l2 := at(t, h.k, "L2"); l2.X <= 4 {
+		t.Errorf("after the drop L2 is at %v", l2)
+	}
+	h.l.solved(t, h.k)
 	h.k.Undo()
 	if at(t, h.k, "L1").X != -4 || at(t, h.k, "L2").X != 4 || h.k.UndoName() != "" {
 		t.Error("drag and room must be one step")
@@ -163,14 +201,10 @@ func TestReleaseMakesRoom(t *testing.T) {
 }
 
 func TestNoRoomLeavesThePartAtContact(t *testing.T) {
-	none := func(*section.Document, *catalog.Catalog, string) (map[string]section.Point, bool) { return nil, false }
-	k, l := testDeskWith(t, testDesign(), Rooms{MakeRoom: none})
-	h, _ := testViewOn(t, k, l)
-	h.drag(h.on(t, "L1"), h.on(t, "L2"))
-	l.until(t, "the step", func() bool { return !k.Drafting() })
-	l1, l2 := at(t, k, "L1"), at(t, k, "L2")
-	if d := math.Hypot(l1.X-l2.X, l1.Y-l2.Y); d < 4-1e-3 || k.UndoName() != "move L1" {
-		t.Errorf("%g mm apart, undo %q", d, k.UndoName())
+	h := noRoom(t)
+	h.drag(t, h.on(t, "L1"), h.on(t, "L2"))
+	if d := apartBy(t, h.k, "L1", "L2"); d < 4-1e-3 || h.k.UndoName() != "move L1" {
+		t.Errorf("%g mm apart, undo %q", d, h.k.UndoName())
 	}
 }
 
@@ -186,10 +220,10 @@ func TestEscapeCancelsADrag(t *testing.T) {
 	if at(t, h.k, "L1").X != -4 || h.k.Dirty() || h.k.UndoName() != "" || h.k.RedoName() != "" {
 		t.Errorf("L1 at %v, undo %q, redo %q", at(t, h.k, "L1"), h.k.UndoName(), h.k.RedoName())
 	}
-	if h.v.held.Visible() {
+	if h.v.wanted.Visible() {
 		t.Error("the ring of the drag is still there")
 	}
-	h.drag(start, start.AddXY(10, 0)) // and the next drag works
+	h.drag(t, start, start.AddXY(10, 0)) // and the next drag works
 	if h.k.UndoName() != "move L1" {
 		t.Error("no drag after a cancelled one")
 	}
@@ -199,7 +233,7 @@ func TestSeveralPartsMoveTogether(t *testing.T) {
 	h, _ := testView(t)
 	h.k.Select("L1", "L3")
 	start := h.on(t, "L1")
-	h.drag(start, start.AddXY(-10, 10))
+	h.drag(t, start, start.AddXY(-10, 10))
 	scale := h.v.camera.scale
 	near(t, "L1", at(t, h.k, "L1"), section.Point{X: -4 - 10/scale, Y: -10 / scale}, 1e-3)
 	near(t, "L3", at(t, h.k, "L3"), section.Point{X: -10 / scale, Y: 5 - 10/scale}, 1e-3)
@@ -334,7 +368,7 @@ func TestDragBesideThePartsPans(t *testing.T) {
 	h, v := testView(t)
 	p := fyne.NewPos(5, 5)
 	under := v.camera.toMM(p, v.Size())
-	h.drag(p, p.AddXY(40, 30))
+	h.drag(t, p, p.AddXY(40, 30))
 	near(t, "moved along", v.camera.toMM(p.AddXY(40, 30), v.Size()), under, 1e-3)
 	if h.k.Dirty() {
 		t.Error("panning changed the document")
@@ -348,7 +382,7 @@ func TestDragBesideThePartsPans(t *testing.T) {
 	}
 	v.KeyDown(&fyne.KeyEvent{Name: fyne.KeySpace})
 	was = v.camera
-	h.drag(h.on(t, "L1"), h.on(t, "L1").AddXY(20, 0))
+	h.drag(t, h.on(t, "L1"), h.on(t, "L1").AddXY(20, 0))
 	if v.camera == was || h.k.Dirty() {
 		t.Error("Space must pan, over a part too")
 	}
