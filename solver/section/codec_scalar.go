@@ -147,7 +147,9 @@ func (c text) node(v string) *yaml.Node {
 }
 
 func (c text) check(r *report, v string, at path) {
-	if !utf8.ValidString(v) {
+	if len(v) > MaxBytes/2 {
+		r.add(at, "too-large", fmt.Sprintf("¤ is a text of over %d MB, and a whole file has at most %d", MaxBytes>>21, MaxBytes>>20), "shorten it")
+	} else if !utf8.ValidString(v) {
 		r.add(at, "not-text", "¤ holds bytes that are no text", "write it anew")
 	} else if !c.free && v != "" {
 		checkName(r, v, at, "¤")

@@ -75,7 +75,19 @@ func TestWriteFallsBack(t *testing.T) {
 		t.Errorf("an empty document is written: %v", err)
 	}
 	huge := d.With(func(d *Document) { d.Notes = strings.Repeat("x", MaxBytes) })
-	if _, err := Write(huge); err == nil || !strings.Contains(err.Error(), "16 MB") {
+	if _, err := Write(huge); err == nil || !strings.Contains(err.Error(), "`notes` is a text of over 8 MB, and a whole file has at most 16") {
+		t.Errorf("a huge text is written: %v", err)
+	}
+	huge = d.With(func(d *Document) {
+		for range 3 {
+			d.Materials = append(d.Materials, Material{Name: FreshID(d, "m"), KWMK: 1, Source: strings.Repeat("x", MaxBytes/2)})
+			d.Materials[len(d.Materials)-1].Name += strings.Repeat("+", len(d.Materials))
+		}
+	})
+	if testing.Short() {
+		return
+	}
+	if _, err := Write(huge); err == nil || !strings.Contains(err.Error(), "it would be larger than 16 MB") {
 		t.Errorf("a huge document is written: %v", err)
 	}
 }

@@ -57,14 +57,15 @@ func (f format) write(d *Document) ([]byte, error) {
 		if text == nil {
 			continue
 		}
+		if len(text) > MaxBytes {
+			return nil, fmt.Errorf("it would be larger than %d MB", MaxBytes>>20)
+		}
 		again, problems := f.read(text)
 		switch {
 		case len(problems) > 0:
 			why = problems[0].Sentence()
 		case !Equal(normal(d), normal(again)):
 			why = "it would read back differently"
-		case len(text) > MaxBytes:
-			why = fmt.Sprintf("it would be larger than %d MB", MaxBytes>>20)
 		default:
 			return text, nil
 		}
