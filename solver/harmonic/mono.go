@@ -168,16 +168,7 @@ func (s *System) near(i, j int) float64 {
 
 // Logs sets out_i = Σ_j Log(i, j) q_j.
 func (s *System) Logs(out, q []float64) {
-	clear(out)
-	for j := range out {
-		row := s.logs[j*(j+1)/2:][:j]
-		sum := s.logs[j*(j+1)/2+j] * q[j]
-		for i, l := range row {
-			out[i] += l * q[j]
-			sum += l * q[i]
-		}
-		out[j] += sum
-	}
+	s.nearLogs(out, q)
 	if s.circle == nil || len(s.circle.Sigma) == 0 {
 		return
 	}
