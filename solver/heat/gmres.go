@@ -20,8 +20,7 @@ func gmres(a operator, x, f []float64, tol float64, stop func() bool) (steps int
 
 // gmresCycle improves x over one basis; done tells that the residual is below end.
 func gmresCycle(a operator, x, f []float64, end float64, stop func() bool) (steps int, done, ok bool) {
-	n := len(f)
-	r := make([]float64, n)
+	r := make([]float64, len(f))
 	a(r, x)
 	for i := range r {
 		r[i] = f[i] - r[i]
@@ -31,58 +30,70 @@ func gmresCycle(a operator, x, f []float64, end float64, stop func() bool) (step
 		return 0, true, true
 	}
 	scale(r, 1/beta)
-	basis := [][]float64{r}
-	var h [][]float64 // columns of the triangle
-	var cs, sn []float64
-	g := []float64{beta}
+	k := krylov{basis: [][]float64{r}, g: []float64{beta}}
 	ok = true
-	for len(h) < maxBasis && math.Abs(g[len(g)-1]) > end {
-		if stop() {
-			ok = false
+	for more := true; more && len(k.h) < maxBasis && k.residual() > end; {
+		if ok = !stop(); !ok {
 			break
 		}
-		w := make([]float64, n)
-		a(w, basis[len(h)])
-		col := make([]float64, len(h)+2)
-		for i, v := range basis {
-			col[i] = dot(v, w)
-			axpy(w, -col[i], v)
-		}
-		norm := math.Sqrt(dot(w, w))
-		k := len(h)
-		for i := range k {
-			col[i], col[i+1] = cs[i]*col[i]+sn[i]*col[i+1], cs[i]*col[i+1]-sn[i]*col[i]
-		}
-		rho := math.Hypot(col[k], norm)
-		if rho == 0 {
-			break
-		}
-		c, s := col[k]/rho, norm/rho
-		col[k] = rho
-		cs, sn, h = append(cs, c), append(sn, s), append(h, col)
-		last := g[k]
-		g[k] = c * last
-		g = append(g, -s*last)
-		if norm == 0 {
-			break
-		}
-		scale(w, 1/norm)
-		basis = append(basis, w)
+		w := make([]float64, len(f))
+		a(w, k.basis[len(k.h)])
+		more = k.add(w)
 	}
-	back(h, g, basis, x)
-	return len(h), ok && math.Abs(g[len(g)-1]) <= end, ok
+	k.improve(x)
+	return len(k.h), ok && k.residual() <= end, ok
 }
 
-// back solves the triangle and adds the combination of the basis to x.
-func back(h [][]float64, g []float64, basis [][]float64, x []float64) {
-	k := len(h)
-	y := make([]float64, k)
-	for i := k - 1; i >= 0; i-- {
-		s := g[i]
-		for j := i + 1; j < k; j++ {
-			s -= h[j][i] * y[j]
+// krylov is a basis with the triangle of its products, kept by rotations.
+type krylov struct {
+	basis  [][]float64
+	h      [][]float64 // columns
+	cs, sn []float64
+	g      []float64 // rotated right-hand side; the last is the residual
+}
+
+func (k *krylov) residual() float64 { return math.Abs(k.g[len(k.g)-1]) }
+
+// add takes in w, the product of the last direction; false if nothing new is in it.
+func (k *krylov) add(w []float64) bool {
+	n := len(k.h)
+	col := make([]float64, n+2)
+	for i, v := range k.basis {
+		col[i] = dot(v, w)
+		axpy(w, -col[i], v)
+	}
+	norm := math.Sqrt(dot(w, w))
+	for i := range n {
+		col[i], col[i+1] = k.cs[i]*col[i]+k.sn[i]*col[i+1], k.cs[i]*col[i+1]-k.sn[i]*col[i]
+	}
+	rho := math.Hypot(col[n], norm)
+	if rho == 0 {
+		return false
+	}
+	c, s := col[n]/rho, norm/rho
+	col[n] = rho
+	k.cs, k.sn, k.h = append(k.cs, c), append(k.sn, s), append(k.h, col)
+	last := k.g[n]
+	k.g[n] = c * last
+	k.g = append(k.g, -s*last)
+	if norm == 0 {
+		return false
+	}
+	scale(w, 1/norm)
+	k.basis = append(k.basis, w)
+	return true
+}
+
+// improve solves the triangle and adds the combination of the basis to x.
+func (k *krylov) improve(x []float64) {
+	n := len(k.h)
+	y := make([]float64, n)
+	for i := n - 1; i >= 0; i-- {
+		s := k.g[i]
+		for j := i + 1; j < n; j++ {
+			s -= k.h[j][i] * y[j]
 		}
-		y[i] = s / h[i][i]
-		axpy(x, y[i], basis[i])
+		y[i] = s / k.h[i][i]
+		axpy(x, y[i], k.basis[i])
 	}
 }

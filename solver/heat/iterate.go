@@ -51,59 +51,67 @@ func conjugate(a operator, x, f []float64, tol float64, stop func() bool) (steps
 
 // minres solves A x = f for a symmetric A of either sign by minimal residuals (Paige and Saunders 1975).
 func minres(a operator, x, f []float64, tol float64, stop func() bool) (steps int, ok bool) {
-	n := len(f)
-	w := make([]float64, 6*n)
-	cut := func() []float64 { s := w[:n:n]; w = w[n:]; return s }
-	v0, v, t, d0, d1, d2 := cut(), cut(), cut(), cut(), cut(), cut()
-	a(t, x)
-	for i := range v {
-		v[i] = f[i] - t[i]
+	l := lanczos{x: x}
+	for _, v := range []*[]float64{&l.v0, &l.v, &l.t, &l.d0, &l.d1, &l.d2} {
+		*v = make([]float64, len(f))
 	}
-	beta := math.Sqrt(dot(v, v))
+	a(l.t, x)
+	for i := range l.v {
+		l.v[i] = f[i] - l.t[i]
+	}
+	l.phi, l.cs = math.Sqrt(dot(l.v, l.v)), -1
 	end := tol * math.Sqrt(dot(f, f))
-	if beta <= end {
+	if l.phi <= end {
 		return 0, true
 	}
-	scale(v, 1/beta)
-	phi := beta
-	var cs, sn, delta, eps float64 = -1, 0, 0, 0
-	beta = 0
+	scale(l.v, 1/l.phi)
 	for steps = 1; steps <= maxSteps; steps++ {
 		if stop() {
 			return steps, false
 		}
-		a(t, v)
-		alpha := dot(v, t)
-		for i := range t {
-			t[i] -= alpha*v[i] + beta*v0[i]
+		a(l.t, l.v)
+		if l.step() || math.Abs(l.phi) <= end {
+			break
 		}
-		next := math.Sqrt(dot(t, t))
-		d := cs*delta + sn*alpha
-		g := sn*delta - cs*alpha
-		eps2 := sn * next
-		delta = -cs * next
-		rho := math.Hypot(g, next)
-		if rho == 0 {
-			return steps, true
-		}
-		cs, sn = g/rho, next/rho
-		tau := cs * phi
-		phi *= sn
-		for i := range x {
-			m := (v[i] - eps*d0[i] - d*d1[i]) / rho
-			d2[i] = m
-			x[i] += tau * m
-		}
-		d0, d1, d2 = d1, d2, d0
-		eps = eps2
-		if math.Abs(phi) <= end || next == 0 {
-			return steps, true
-		}
-		beta = next
-		v0, v, t = v, t, v0
-		scale(v, 1/next)
 	}
-	return steps, true
+	return min(steps, maxSteps), true
+}
+
+// lanczos is the state of minres: three bases, three directions, the last rotation.
+type lanczos struct {
+	x, v0, v, t, d0, d1, d2       []float64
+	beta, delta, eps, cs, sn, phi float64
+}
+
+// step takes in t = A v and improves x; true if nothing is left.
+func (l *lanczos) step() bool {
+	alpha := dot(l.v, l.t)
+	for i := range l.t {
+		l.t[i] -= alpha*l.v[i] + l.beta*l.v0[i]
+	}
+	next := math.Sqrt(dot(l.t, l.t))
+	d, g, eps := l.cs*l.delta+l.sn*alpha, l.sn*l.delta-l.cs*alpha, l.eps
+	l.eps, l.delta = l.sn*next, -l.cs*next
+	rho := math.Hypot(g, next)
+	if rho == 0 {
+		return true
+	}
+	l.cs, l.sn = g/rho, next/rho
+	tau := l.cs * l.phi
+	l.phi *= l.sn
+	for i := range l.x {
+		m := (l.v[i] - eps*l.d0[i] - d*l.d1[i]) / rho
+		l.d2[i] = m
+		l.x[i] += tau * m
+	}
+	l.d0, l.d1, l.d2 = l.d1, l.d2, l.d0
+	if next == 0 {
+		return true
+	}
+	l.beta = next
+	l.v0, l.v, l.t = l.v, l.t, l.v0
+	scale(l.v, 1/next)
+	return false
 }
 
 func dot(a, b []float64) float64 { return harmonic.Dot(a, b) }

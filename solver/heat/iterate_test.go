@@ -31,7 +31,7 @@ func TestIterations(t *testing.T) {
 		for i := range f {
 			f[i] = r.NormFloat64()
 		}
-		solvers := map[string]func(operator, []float64, []float64, float64, func() bool) (int, bool){"minres": minres}
+		solvers := map[string]func(operator, []float64, []float64, float64, func() bool) (int, bool){"minres": minres, "gmres": gmres}
 		if !mixed {
 			solvers["conjugate"] = conjugate
 		}

@@ -80,7 +80,27 @@ func (g *region) relocate(i int, factor float64) bool {
 			changed = append(changed, j)
 		}
 	}
-	all := true
+	changed, ok := g.reorder(i, factor, changed)
+	if !ok {
+		return false
+	}
+	grown := false
+	for _, j := range changed {
+		grown = grown || g.orders[j] != len(g.sys.Disc(j).S)
+		g.sys.Put(j, g.disc(j))
+	}
+	if grown {
+		g.setSigns()
+	}
+	if g.border != nil && (len(changed) > 1 || grown || !g.border.move(g, i)) {
+		g.border.write(g)
+	}
+	return true
+}
+
+// reorder raises orders for the new place of piece i and appends the pieces that need more; false if one of them is a cable.
+func (g *region) reorder(i int, factor float64, changed []int) ([]int, bool) {
+	ok := true
 	for j := range g.pieces {
 		n := g.orders[j]
 		if j == i {
@@ -96,27 +116,13 @@ func (g *region) relocate(i int, factor float64) bool {
 		}
 		g.orders[j] = n
 		if in := g.pieces[j].inside; in != nil {
-			in.port, all = n, false
+			in.port, ok = n, false
 		}
 		if !slices.Contains(changed, j) {
 			changed = append(changed, j)
 		}
 	}
-	if !all {
-		return false
-	}
-	grown := false
-	for _, j := range changed {
-		grown = grown || g.orders[j] != len(g.sys.Disc(j).S)
-		g.sys.Put(j, g.disc(j))
-	}
-	if grown {
-		g.setSigns()
-	}
-	if g.border != nil && (len(changed) > 1 || grown || !g.border.move(g, i)) {
-		g.border.write(g)
-	}
-	return true
+	return changed, ok
 }
 
 // stretch carries a vector over from old offsets to fresh ones: harmonics that are new start at nought.
