@@ -1,0 +1,104 @@
+package outline
+
+import "math"
+
+// Hull is the outer boundary of an open bundle: the taut string round its parts. Where the string lies on a part the part's own
+// surface is the outside; where it runs straight from part to part it is an opaque line of no thickness.
+type Hull struct {
+	MediumK float64 // of what fills the pockets
+	Arcs    []Arc   // counterclockwise
+}
+
+// Arc is where the string lies on disc Disc, from angle From to angle To (radians, To ≥ From, equal where it only touches), and the straight
+// string from there to the next arc's disc.
+type Arc struct {
+	Disc     int
+	From, To float64
+	Bare     Outside // of the arc
+	String   Outside
+}
+
+// Outside is what a piece of the hull gives its heat to: Film (W/m²K; +Inf holds it at Temp) to Temp, and Absorbed (W/m²), what it takes up of the
+// sun.
+type Outside struct{ Film, Temp, Absorbed float64 }
+
+// Mirror is what a part sends back of the harmonics beyond those that are solved for: conj(d_n) = t_n b_n with t_n = T[n-1], and Beyond for
+// n > len(T), the reflection of its outermost layer alone.
+type Mirror struct {
+	T      []float64
+	Beyond float64
+}
+
+// t returns t_n.
+func (m *Mirror) t(n int) float64 {
+	if n <= len(m.T) {
+		return m.T[n-1]
+	}
+	return m.Beyond
+}
+
+// tiny arcs and strings, in radians and as a share of the hull's size, carry nothing.
+const (
+	tinyArc    = 1e-6
+	tinyString = 1e-9
+)
+
+// check panics on what no caller may pass.
+func (h *Hull) check(discs []Disc) {
+	ok := h.MediumK > 0 && !math.IsInf(h.MediumK, 1) && len(h.Arcs) > 0
+	for _, a := range h.Arcs {
+		ok = ok && a.Disc >= 0 && a.Disc < len(discs) && a.To >= a.From && a.Bare.Film >= 0 && a.String.Film >= 0
+	}
+	if !ok {
+		panic("outline: hull without arcs, an arc of no disc, conductivity not positive, or negative film")
+	}
+}
+
+// piece is an arc or a string of the hull.
+type piece struct {
+	disc       int // of an arc, −1 of a string
+	ends       [2]int
+	c          complex128
+	a          float64
+	from, turn float64 // of an arc: first angle and whole angle
+	start, dir complex128
+	length     float64
+	out        Outside
+}
+
+// at returns the point at s from the beginning.
+func (p *piece) at(s float64) complex128 {
+	if p.disc < 0 {
+		return p.start + scale(s, p.dir)
+	}
+	return p.c + polar(p.a, p.from+s/p.a)
+}
+
+// polar is r e^{iθ}.
+func polar(r, theta float64) complex128 {
+	s, c := math.Sincos(theta)
+	return complex(r*c, r*s)
+}
+
+// pieces returns the arcs and strings that carry anything.
+func (h *Hull) pieces(discs []Disc) []piece {
+	size := 0.0
+	for _, a := range h.Arcs {
+		size = math.Max(size, discs[a.Disc].A)
+	}
+	var all []piece
+	for i, a := range h.Arcs {
+		d := discs[a.Disc]
+		if turn := a.To - a.From; turn > tinyArc {
+			all = append(all, piece{disc: a.Disc, ends: [2]int{a.Disc, a.Disc}, c: d.C, a: d.A, from: a.From, turn: turn, length: d.A * turn, out: a.Bare})
+		}
+		b := h.Arcs[(i+1)%len(h.Arcs)]
+		e := discs[b.Disc]
+		start, end := d.C+polar(d.A, a.To), e.C+polar(e.A, b.From)
+		l := math.Hypot(real(end-start), imag(end-start))
+		if len(h.Arcs) > 1 && l > tinyString*size {
+			all = append(all, piece{disc: -1, ends: [2]int{a.Disc, b.Disc}, start: start, dir: scale(1/l, end-start), length: l, out: a.String})
+		}
+	}
+	return all
+}

@@ -1,0 +1,132 @@
+package outline
+
+import (
+	"math"
+	"sync"
+)
+
+// HullCell is a short piece of the hull over which the conditions hold in the mean. Cell i belongs to row i of the system.
+type HullCell struct {
+	From, To complex128 // counterclockwise
+	Length   float64
+	Disc     int // of an arc, −1 of a string
+	Piece    int // arcs and strings counted round the hull
+}
+
+// Cells lists the cells of the hull, counterclockwise.
+func (s *HullSystem) Cells() []HullCell {
+	out := make([]HullCell, 0, s.n)
+	for i := range s.panels {
+		b := &s.panels[i]
+		at := cellsOf[b.p].at
+		for l := range b.p {
+			out = append(out, HullCell{From: b.at(at[l]), To: b.at(at[l+1]), Length: b.cell(l), Disc: b.disc, Piece: b.piece})
+		}
+	}
+	return out
+}
+
+// cell is the length of cell l.
+func (b *bow) cell(l int) float64 {
+	at := cellsOf[b.p].at
+	return b.half * (at[l+1] - at[l])
+}
+
+// Temperatures returns the mean of each cell, for the whole solution.
+func (s *HullSystem) Temperatures(y []float64, src Sources) []float64 {
+	t := make([]float64, s.n)
+	for i := range t {
+		t[i] = y[s.n] + dot(s.temp[i*s.n:][:s.n], y)
+	}
+	cold, tmp := make([]float64, s.n), make([]float64, s.n)
+	for j := range s.discs {
+		d := &s.discs[j]
+		d.out(cold, d.warm, pack(make([]float64, 0, 1+2*usualOrder), src.Q[j], src.D[j]), tmp)
+	}
+	for i, v := range cold {
+		t[i] -= v
+	}
+	return t
+}
+
+// Faces returns, for the temperatures of the cells, the hottest of the outside, its mean, and the heat that it gives off (W/m).
+func (s *HullSystem) Faces(t []float64) (hottest, mean, out float64) {
+	hottest = math.Inf(-1)
+	length := 0.0
+	for i := range s.panels {
+		b := &s.panels[i]
+		p := &s.pieces[b.piece]
+		film := s.film(p) * s.hull.MediumK / 2
+		for l := range b.p {
+			v, ds := t[b.dof+l], b.cell(l)
+			length += ds
+			mean += v * ds
+			out += (film*(v-p.out.Temp) - p.out.Absorbed) * ds
+		}
+		hottest = math.Max(hottest, b.hottest(t[b.dof:][:b.p]))
+	}
+	return hottest, mean / length, out
+}
+
+// hottest is the highest value, at the ends and middles of cells, of the polynomial with those means over the cells.
+func (b *bow) hottest(mean []float64) float64 {
+	hot := math.Inf(-1)
+	for _, row := range peaks()[b.p] {
+		hot = math.Max(hot, dot(row, mean))
+	}
+	return hot
+}
+
+// peaks()[p] gives the polynomial of p modes at the ends and middles of its cells from the means over them.
+var peaks = sync.OnceValue(func() (all [maxModes + 1][][]float64) {
+	for p := 1; p <= maxModes; p++ {
+		c := &cellsOf[p]
+		inverse := inverted(c.mean)
+		for l := range 2*p + 1 {
+			x := c.at[l/2]
+			if l%2 == 1 {
+				x = (x + c.at[l/2+1]) / 2
+			}
+			row := make([]float64, p)
+			for k := range p {
+				v, _ := legendre(k, x)
+				addScaled(row, v, inverse[k])
+			}
+			all[p] = append(all[p], row)
+		}
+	}
+	return all
+})
+
+// inverted is the inverse of a small matrix, by Gauss and Jordan with pivots.
+func inverted(a [][]float64) [][]float64 {
+	n := len(a)
+	m := make([][]float64, n)
+	for i := range m {
+		m[i] = make([]float64, 2*n)
+		copy(m[i], a[i])
+		m[i][n+i] = 1
+	}
+	for k := range n {
+		best := k
+		for i := k; i < n; i++ {
+			if math.Abs(m[i][k]) > math.Abs(m[best][k]) {
+				best = i
+			}
+		}
+		m[k], m[best] = m[best], m[k]
+		f := 1 / m[k][k]
+		for j := range m[k] {
+			m[k][j] *= f
+		}
+		for i := range n {
+			if i != k {
+				addScaled(m[i], -m[i][k], m[k])
+			}
+		}
+	}
+	for i := range m {
+		m[i] = m[i][n:]
+	}
+	return m
+}

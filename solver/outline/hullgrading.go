@@ -1,0 +1,83 @@
+package outline
+
+import "math"
+
+// Lengths of panels, as shares of the radius of the part that a piece begins or ends at: measured against panels of a quarter, on
+// bundles of 2 to 37 parts (1 to 4 mK of 40 K).
+const (
+	bareShare   = 2.0
+	stringShare = 2.0
+	fromTangent = 2.0 // growth of lengths on a string away from the part that it leaves
+	kinShare    = 0.3 // a part whose gap to a string is below this share of its radius is solved with it to all orders
+)
+
+// hullGrading decides how long a panel of the hull may be.
+type hullGrading struct {
+	grading
+	fineness float64
+	discs    []Disc
+}
+
+func newHullGrading(discs []Disc, fineness float64) hullGrading {
+	return hullGrading{grading: grading{harmonic: perHarmonic / fineness}, fineness: fineness, discs: discs}
+}
+
+// length is the longest panel at s along p.
+func (g *hullGrading) length(p *piece, s float64) float64 {
+	var l float64
+	if p.disc >= 0 {
+		l = bareShare * p.a / g.fineness
+	} else {
+		a, b := g.discs[p.ends[0]].A, g.discs[p.ends[1]].A
+		l = math.Min(stringShare*a+fromTangent*s, stringShare*b+fromTangent*(p.length-s)) / g.fineness
+	}
+	z := p.at(s)
+	for i := range g.discs {
+		if d := &g.discs[i]; i != p.ends[0] && i != p.ends[1] {
+			l = math.Min(l, g.near(d, z, l))
+		}
+	}
+	return math.Max(l, p.length*1e-6)
+}
+
+// cuts divides p into panels of those lengths, as a straight side is.
+func (g *hullGrading) cuts(p *piece) []float64 {
+	middle := p.length / 2
+	left, leftSum := march(middle, func(s float64) float64 { return g.length(p, s) })
+	right, rightSum := march(middle, func(s float64) float64 { return g.length(p, p.length-s) })
+	return divide(p.length, left, leftSum, right, rightSum)
+}
+
+// divide puts cuts at equal steps of ∫ ds/length, tabulated from both ends.
+func divide(length float64, left, leftSum, right, rightSum []float64) []float64 {
+	a, b := leftSum[len(left)-1], rightSum[len(right)-1]
+	n := max(1, int(math.Ceil(a+b-0.05)))
+	cuts := make([]float64, n+1)
+	for i := range cuts {
+		if want := (a + b) * float64(i) / float64(n); want <= a {
+			cuts[i] = lookUp(left, leftSum, want)
+		} else {
+			cuts[i] = length - lookUp(right, rightSum, (a+b)*float64(n-i)/float64(n))
+		}
+	}
+	cuts[0], cuts[n] = 0, length
+	return cuts
+}
+
+// panels cuts every piece and numbers the unknowns.
+func (g *hullGrading) panels(pieces []piece) (all []bow, unknowns int) {
+	for i := range pieces {
+		q := &pieces[i]
+		cuts := g.cuts(q)
+		for j := 1; j < len(cuts); j++ {
+			b := newBow(q, i, cuts[j-1], cuts[j], g.modes(q, cuts[j]-cuts[j-1]))
+			b.dof = unknowns
+			all = append(all, b)
+			unknowns += b.p
+		}
+	}
+	return all, unknowns
+}
+
+// modes is the number that a panel of that length needs.
+func (g *hullGrading) modes(*piece, float64) int { return modes }

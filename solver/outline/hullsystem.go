@@ -1,0 +1,107 @@
+package outline
+
+import (
+	"math"
+
+	"gonum.org/v1/gonum/blas/blas64"
+	"gonum.org/v1/gonum/floats"
+	"gonum.org/v1/gonum/lapack/lapack64"
+)
+
+// HullSystem is a Hull with its parts, discretised and factorised: unknowns y are the densities on its arcs and strings and the constant T_c, as of
+// a System. Safe for concurrent use after NewHull, except for Move and Outside.
+type HullSystem struct {
+	hull    Hull
+	grading hullGrading
+	pieces  []piece
+	panels  []bow
+	n       int // densities; the unknown n is T_c
+	// Means over cells for each density, n columns: of the heat flow's ∂T/∂n + σ/2 on the inner side, and of T.
+	flux, temp []float64
+	lu         blas64.General
+	pivots     []int
+	discs      []hullDisc
+}
+
+// NewHull discretises the hull and factorises; fineness 1 is standard, 0.7 draft, 1.5 fine. mirrors has one entry per disc. Every disc must lie inside
+// the hull. A hull without arcs, arcs of no disc, negative films and a conductivity that is not positive panic.
+func NewHull(h Hull, discs []Disc, mirrors []Mirror, fineness float64) *HullSystem {
+	h.check(discs)
+	h.Arcs = append([]Arc(nil), h.Arcs...)
+	s := &HullSystem{hull: h, grading: newHullGrading(append([]Disc(nil), discs...), fineness), pieces: h.pieces(discs)}
+	s.panels, s.n = s.grading.panels(s.pieces)
+	s.discs = make([]hullDisc, len(discs))
+	each(len(discs), func(i int) {
+		s.discs[i] = hullDisc{Disc: discs[i], mirror: mirrors[i]}
+		s.link(i)
+	})
+	s.couple()
+	s.factorise()
+	return s
+}
+
+// Len returns the number of unknowns.
+func (s *HullSystem) Len() int { return s.n + 1 }
+
+// films returns h·2/k of each piece; a piece that is held has a film under which nothing can be measured.
+func (s *HullSystem) film(p *piece) float64 {
+	h := p.out.Film
+	if most := 1e9 * s.hull.MediumK / s.size(); h > most {
+		h = most
+	}
+	return 2 * h / s.hull.MediumK
+}
+
+// size is the length of the hull.
+func (s *HullSystem) size() (l float64) {
+	for i := range s.pieces {
+		l += s.pieces[i].length
+	}
+	return l
+}
+
+// scaleOf scales the condition of a piece so that a large film tends to T = outside.
+func (s *HullSystem) scaleOf(p *piece) float64 { return 1 / (1 + s.film(p)*p.length) }
+
+// factorise puts the conditions together and takes them apart.
+func (s *HullSystem) factorise() {
+	n := s.n + 1
+	s.lu = blas64.General{Rows: n, Cols: n, Stride: n, Data: make([]float64, n*n)}
+	open := false
+	for i := range s.panels {
+		b := &s.panels[i]
+		p := &s.pieces[b.piece]
+		c, film := s.scaleOf(p), s.film(p)
+		open = open || film > 0
+		for l := range b.p {
+			to := s.lu.Data[(b.dof+l)*n:][:n]
+			flux, temp := s.flux[(b.dof+l)*s.n:][:s.n], s.temp[(b.dof+l)*s.n:][:s.n]
+			for k := range flux {
+				to[k] = c * (2*flux[k] + film*temp[k])
+			}
+			to[s.n] = c * film
+		}
+		s.lu.Data[s.n*n+b.dof] = 2 * b.half // no net source
+	}
+	s.pivots = make([]int, n)
+	if ok := lapack64.Getrf(s.lu, s.pivots); !ok || !open {
+		s.lu.Data[n*n-1] = math.NaN()
+	}
+}
+
+// solve overwrites the right-hand side y with the unknowns.
+func (s *HullSystem) solve(y []float64) { substitute(s.lu, s.pivots, y) }
+
+func substitute(lu blas64.General, pivots []int, y []float64) {
+	for i, p := range pivots {
+		y[i], y[p] = y[p], y[i]
+	}
+	n := len(y)
+	for i := range y {
+		y[i] -= floats.Dot(lu.Data[i*n:][:i], y[:i])
+	}
+	for i := n - 1; i >= 0; i-- {
+		row := lu.Data[i*n:][:n]
+		y[i] = (y[i] - floats.Dot(row[i+1:], y[i+1:])) / row[i]
+	}
+}
