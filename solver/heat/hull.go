@@ -48,10 +48,8 @@ func (h *hullWall) gap(*piece) float64 { return math.Inf(1) }
 
 func (h *hullWall) metal() bool { return false }
 
-// order is the fewest harmonics in a bundle at factor f, whatever the medium.
-func (h *hullWall) order(_ *region, _ *piece, f float64, _ int) int {
-	return int(math.Ceil(12 * math.Sqrt(f)))
-}
+// order asks for nothing: what a piece sends straight back to the hull beside it is reckoned to all orders.
+func (h *hullWall) order(*region, *piece, float64, int) int { return 0 }
 
 // maxMirror bounds the harmonics that a part on the hull sends straight back.
 const maxMirror = 400

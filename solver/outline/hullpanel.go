@@ -10,8 +10,8 @@ type bow struct {
 	disc  int // of an arc, −1 of a string
 	c     complex128
 	a     float64
-	theta float64 // angle of the middle
-	turn  float64 // half the angle
+	theta float64      // angle of the middle
+	turn  float64      // half the angle
 	far   []complex128 // of an arc: see farAway
 }
 
