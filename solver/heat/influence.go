@@ -84,14 +84,10 @@ func (m *Model) Influence(ctx context.Context) ([][]float64, Status) {
 		m.bare.influence(out)
 		return out, Converged
 	}
-	if !m.prepare(ctx) {
-		return out, Cancelled
-	}
-	k, ok := m.coefficients(ctx)
+	k, ok := m.matrix(ctx)
 	if !ok {
 		return out, Cancelled
 	}
-	k = m.reduce(k)
 	for i, s := range m.top.sources {
 		if m.p.Parts[s.part].Core != Metal {
 			continue
@@ -103,6 +99,21 @@ func (m *Model) Influence(ctx context.Context) ([][]float64, Status) {
 		out[s.part] = row
 	}
 	return out, Converged
+}
+
+// matrix returns the rises of all sources for 1 W/m in each, held bores taking part; it is kept until something moves.
+func (m *Model) matrix(ctx context.Context) ([][]float64, bool) {
+	if m.kept != nil {
+		return m.kept, true
+	}
+	if !m.prepare(ctx) {
+		return nil, false
+	}
+	k, ok := m.coefficients(ctx)
+	if ok {
+		m.kept = m.reduce(k)
+	}
+	return m.kept, ok
 }
 
 // reduce takes out the held bores: K_mm − K_mh K_hh⁻¹ K_hm.
@@ -127,6 +138,9 @@ func (m *Model) reduce(k [][]float64) [][]float64 {
 // Ground returns the Core temperatures (K above the common zero) with all heats zero: Ambient, unless sides or bores are held at other
 // temperatures.
 func (m *Model) Ground(ctx context.Context) ([]float64, Status) {
+	load := m.x
+	m.x = m.ground
 	r := m.Solve(ctx, make([]float64, len(m.p.Parts)))
+	m.x, m.ground = load, m.x
 	return r.Core, r.Status
 }

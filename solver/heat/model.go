@@ -22,7 +22,12 @@ type Model struct {
 	rises   [][]float64 // of all sources for 1 W/m in each of them
 	floor   []float64   // temperatures of all sources without any heat, held bores floating
 	floorX  []float64
+	ground  []float64   // last solution without heat
+	kept    [][]float64 // rises of all sources for 1 W/m in each
 }
+
+// forget drops what depends on places, films and outside temperatures, but for the solutions, from which the next ones start.
+func (m *Model) forget() { m.rises, m.floor, m.kept = nil, nil, nil }
 
 // factor is C of the order rule, cut the size below which entries of the matrix are dropped, tol the relative residual at which the
 // iteration ends.
@@ -111,7 +116,7 @@ func (m *Model) prepare(ctx context.Context) bool {
 		return false
 	}
 	m.ready = true
-	m.rises, m.floor = nil, nil
+	m.forget()
 	m.held = m.held[:0]
 	for k, s := range m.top.sources {
 		if m.p.Parts[s.part].Core == FixedBore {
@@ -273,7 +278,7 @@ func (m *Model) read(r *Result, s *state) {
 		case Metal:
 			r.Generated += p.q
 		case FixedBore:
-			r.Absorbed[p.part] = -p.q
+			r.Absorbed[p.part], r.Core[p.part] = -p.q, m.p.Parts[p.part].Fixed
 		case Inside:
 			m.read(r, p.inside)
 		}

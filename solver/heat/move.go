@@ -23,7 +23,7 @@ func (m *Model) Move(part int, x, y float64) {
 	g.pieces[i].at = complex(x, y) + m.shift()
 	g.settle(i)
 	factor, _, _ := m.set.Accuracy.settings()
-	m.rises, m.floor = nil, nil
+	m.forget()
 	if !m.ready {
 		g.order(factor)
 		return
@@ -46,6 +46,9 @@ func (m *Model) carry(old []int) {
 	}
 	if m.floorX != nil {
 		m.floorX = stretch(m.floorX, old, fresh)
+	}
+	if m.ground != nil {
+		m.ground = stretch(m.ground, old, fresh)
 	}
 	for i, c := range m.columns {
 		if c != nil {

@@ -12,7 +12,7 @@ func (m *Model) Outside(w Wall) {
 	w.Rings = old.Rings
 	w.check()
 	m.p.Wall = w
-	m.rises, m.floor = nil, nil
+	m.forget()
 	switch {
 	case m.top == nil: // a bare part reads the wall each time
 	case m.top.border != nil:
