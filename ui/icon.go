@@ -1,6 +1,10 @@
 package ui
 
-import "fyne.io/fyne/v2"
+import (
+	"fyne.io/fyne/v2"
 
-// Icon returns the program's icon, nil if the program carries none.
-func Icon() fyne.Resource { return nil }
+	"packrise/assets"
+)
+
+// Icon returns the program's icon.
+func Icon() fyne.Resource { return fyne.NewStaticResource("icon.png", assets.Icon) }

@@ -55,10 +55,10 @@ func run(args []string, out, errs io.Writer) int {
 		return status
 	}
 	cat := catalog.Load()
-	if os.Getenv("DISPLAY") == "" && os.Getenv("WAYLAND_DISPLAY") == "" {
+	if why := whyNoDisplay(os.Getenv); why != "" {
+		fmt.Fprintf(out, "packrise: there is no display (%s), so the picture goes into a file\n", why)
 		return withoutDisplay(cat, d, path, out, errs)
 	}
-	quietLocale()
 	w := ui.NewWindow(newApp(), ui.Options{
 		Catalog: cat, Document: d, Path: path, Warnings: warnings, Version: version(), Trace: trace(),
 	})
@@ -96,7 +96,6 @@ func begin(path string, errs io.Writer) (*section.Document, []section.Problem, i
 
 // withoutDisplay solves the design by the same engine and writes its picture.
 func withoutDisplay(cat *catalog.Catalog, d *section.Document, path string, out, errs io.Writer) int {
-	fmt.Fprintln(out, "packrise: there is no display (DISPLAY is not set), so the picture goes into a file")
 	name := "packrise-demo.png"
 	if path != "" {
 		name = strings.TrimSuffix(filepath.Base(path), filepath.Ext(path)) + ".png"
@@ -128,24 +127,10 @@ func trace() io.Writer {
 	return os.Stderr
 }
 
-// quietLocale gives the toolkit a locale that it can read where there is none worth the name.
-func quietLocale() {
-	for _, v := range []string{"LC_ALL", "LANG"} {
-		if s := os.Getenv(v); s == "C" || s == "POSIX" || strings.HasPrefix(s, "C.") {
-			os.Setenv(v, "en_US.UTF-8")
-		}
-	}
-	if os.Getenv("LC_ALL") == "" && os.Getenv("LANG") == "" {
-		os.Setenv("LANG", "en_US.UTF-8")
-	}
-}
-
 func newApp() fyne.App {
 	app.SetMetadata(fyne.AppMetadata{ID: "app.packrise", Name: "Packrise", Version: version(), Icon: ui.Icon()})
 	a := app.NewWithID("app.packrise")
-	if icon := ui.Icon(); icon != nil {
-		a.SetIcon(icon)
-	}
+	a.SetIcon(ui.Icon())
 	return a
 }
 
