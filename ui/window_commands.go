@@ -27,9 +27,32 @@ func (w *Window) shortcuts() {
 	}
 }
 
+// typing returns the text field that has the keyboard and a text of its own that is not entered yet: undo and redo are its own then.
+func (w *Window) typing() interface {
+	Undo()
+	Redo()
+} {
+	switch f := w.win.Canvas().Focused().(type) {
+	case *fieldEntry:
+		if f.Text != f.in.text {
+			return f
+		}
+	case *putEntry:
+		if f.Text != "" {
+			return f
+		}
+	case interface {
+		Undo()
+		Redo()
+	}:
+		return f
+	}
+	return nil
+}
+
 // undo takes back what was typed into the field that has the keyboard, else the last step.
 func (w *Window) undo() {
-	if f, ok := w.win.Canvas().Focused().(interface{ Undo() }); ok {
+	if f := w.typing(); f != nil {
 		f.Undo()
 		return
 	}
@@ -37,7 +60,7 @@ func (w *Window) undo() {
 }
 
 func (w *Window) redo() {
-	if f, ok := w.win.Canvas().Focused().(interface{ Redo() }); ok {
+	if f := w.typing(); f != nil {
 		f.Redo()
 		return
 	}
