@@ -15,6 +15,7 @@ import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/app"
 
+	_ "packrise/cmd/packrise/internal/locale" // before the toolkit
 	"packrise/solver/catalog"
 	"packrise/solver/section"
 	"packrise/ui"
