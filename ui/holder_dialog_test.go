@@ -1,0 +1,57 @@
+package ui
+
+import (
+	"testing"
+
+	"fyne.io/fyne/v2/test"
+
+	"packrise/solver/section"
+)
+
+func TestHolderDialogEdits(t *testing.T) {
+	w, l := testWindow(t, testDesign(), usualSize)
+	enter := func(key, text string) {
+		t.Helper()
+		for _, o := range test.LaidOutObjects(w.win.Canvas().Overlays().Top()) {
+			if f, ok := o.(*fieldEntry); ok && f.in.key == key {
+				f.SetText(text)
+				f.OnSubmitted(text)
+				return
+			}
+		}
+		t.Fatalf("no field %q", key)
+	}
+	w.showHolder()
+	enter("inside", "1 in")
+	if got := w.desk.Document().Holder.InsideMM; got != section.Some(25.4) {
+		t.Errorf("inside %v", got)
+	}
+	enter("kind", "wireway")
+	h := w.desk.Document().Holder
+	if h.Kind != section.Wireway || h.WidthMM != section.Some(25.4) || at(t, w.desk, "L1").X != -4+12.7 {
+		t.Errorf("%+v, L1 at %v", h, at(t, w.desk, "L1"))
+	}
+	enter("kind", "nonsense")
+	if w.desk.Document().Holder.Kind != section.Wireway {
+		t.Error("nonsense changed the holder")
+	}
+	enter("kind", "jacket")
+	l.solved(t, w.desk)
+	w.hide()
+	w.desk.Undo()
+	w.desk.Undo()
+	w.desk.Undo()
+	if w.desk.Dirty() {
+		t.Error("three undos must bring the design back")
+	}
+	w.showSurroundings()
+	enter("ambient", "104F")
+	if got := w.desk.Document().Surroundings.AmbientC.V; got < 39.99 || got > 40.01 {
+		t.Errorf("ambient %g °C", got)
+	}
+	enter("surroundings", "surface held")
+	if s := w.desk.Document().Surroundings; s.Kind != section.FixedWall || s.FilmWM2K.OK {
+		t.Errorf("%+v", s)
+	}
+	l.solved(t, w.desk)
+}
