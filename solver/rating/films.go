@@ -72,8 +72,8 @@ func (o *outside) miss(f *films, q [4]float64) (worst float64) {
 	return worst
 }
 
-// coefficient is the mean film of the open faces, W/m²K.
-func (o *outside) coefficient(f *films) float64 {
+// coefficient is the mean film of the open faces, W/m²K; ok is false if there is none.
+func (o *outside) coefficient(f *films) (h float64, ok bool) {
 	sum, around := 0.0, 0.0
 	for i := range o.n {
 		if o.open[i] {
@@ -81,7 +81,7 @@ func (o *outside) coefficient(f *films) float64 {
 			around += o.wide[i]
 		}
 	}
-	return sum / around
+	return sum / around, around > 0
 }
 
 // wall puts the films on a heat problem's wall.

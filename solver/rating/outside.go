@@ -175,7 +175,7 @@ func (r *resolver) outermost(p *item) material {
 	if m, pr := r.material(name, p.id, ""); pr == nil {
 		return m
 	}
-	return material{name: name, emissivity: usualEmissivity, absorptivity: usualAbsorbed, assumed: true}
+	return material{name: "a surface without layers", emissivity: usualEmissivity, absorptivity: usualAbsorbed, assumed: true}
 }
 
 // wrap lays thermal insulation around the section: one more layer of the wall, or of the bare part.

@@ -113,6 +113,9 @@ func (s *scene) weatherNotes(a answered) []string {
 			add(&out, a.films[i].at.Notes)
 		}
 	}
+	if len(by) == 0 {
+		return nil
+	}
 	if s.doc.Surroundings.Kind != section.Vacuum && s.radiates() {
 		by = append(by, "radiation")
 	}
@@ -158,7 +161,7 @@ func (s *scene) touch() limit {
 func (s *scene) filmShown(a answered) (h section.Opt[float64]) {
 	switch {
 	case s.out.free && a.heat != nil && a.status != heat.ThermalRunaway:
-		h = section.Some(s.out.coefficient(&a.films))
+		h.V, h.OK = s.out.coefficient(&a.films)
 	case !s.out.free && !math.IsInf(s.filmW, 0):
 		h = section.Some(s.filmW)
 	}
