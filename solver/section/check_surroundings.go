@@ -9,30 +9,56 @@ import (
 type kindKey struct {
 	key     string
 	written func(*Surroundings) bool
+	drop    func(*Surroundings)
 	kinds   []string // that take it
 	must    []string // that need it
 	example string   // for what is missing
 }
 
+// amount is a kindKey that holds a number.
+func amount(key string, at func(*Surroundings) *Opt[float64], kinds, must []string, example string) kindKey {
+	return kindKey{
+		key, func(s *Surroundings) bool { return at(s).OK },
+		func(s *Surroundings) { *at(s) = Opt[float64]{} }, kinds, must, example,
+	}
+}
+
+// choice is a kindKey that holds a word.
+func choice(key string, at func(*Surroundings) *string, kinds []string) kindKey {
+	return kindKey{key, func(s *Surroundings) bool { return *at(s) != "" }, func(s *Surroundings) { *at(s) = "" }, kinds, nil, ""}
+}
+
 var (
 	inAir   = []string{StillAir, MovingAir, Insulation}
 	inFluid = []string{StillAir, MovingAir, Insulation, Water}
+	inFlow  = []string{MovingAir, Water}
 	inLight = []string{StillAir, MovingAir, Insulation, Vacuum}
+	film    = []string{FixedFilm}
+	ground  = []string{Buried}
+	wrapped = []string{Insulation}
 )
 
 var kindKeys = []kindKey{
-	{"film_w_m2k", func(s *Surroundings) bool { return s.FilmWM2K.OK }, []string{FixedFilm}, []string{FixedFilm}, "a coefficient in W/m²K"},
-	{"air_speed_m_s", func(s *Surroundings) bool { return s.AirSpeedMS.OK }, []string{MovingAir, Water}, []string{MovingAir}, "the speed of the air in m/s"},
-	{"air_direction", func(s *Surroundings) bool { return s.AirDirection != "" }, []string{MovingAir, Water}, nil, ""},
-	{"altitude_m", func(s *Surroundings) bool { return s.AltitudeM.OK }, inAir, nil, ""},
-	{"radiant_c", func(s *Surroundings) bool { return s.RadiantC.OK }, inLight, nil, ""},
-	{"run", func(s *Surroundings) bool { return s.Run != "" }, inFluid, nil, ""},
-	{"height_m", func(s *Surroundings) bool { return s.HeightM.OK }, inFluid, nil, ""},
-	{"sun_w_m2", func(s *Surroundings) bool { return s.SunWM2.OK }, inLight, nil, ""},
-	{"depth_m", func(s *Surroundings) bool { return s.DepthM.OK }, []string{Buried}, []string{Buried}, "the depth of the axis in m, often 0.7"},
-	{"soil_w_mk", func(s *Surroundings) bool { return s.SoilWMK.OK }, []string{Buried}, []string{Buried}, "the soil's conductivity in W/mK, 0.4 for dry and 1 for moist soil"},
-	{"wrap", func(s *Surroundings) bool { return s.Wrap != nil }, []string{Insulation}, []string{Insulation}, "{material: …, thickness_mm: …}"},
-	{"wet", func(s *Surroundings) bool { return s.Wet }, []string{StillAir, MovingAir, FixedFilm, FixedWall, Buried, Water, Insulation}, nil, ""},
+	amount("film_w_m2k", func(s *Surroundings) *Opt[float64] { return &s.FilmWM2K }, film, film, "a coefficient in W/m²K"),
+	amount("air_speed_m_s", func(s *Surroundings) *Opt[float64] { return &s.AirSpeedMS }, inFlow, []string{MovingAir}, "the speed of the air in m/s"),
+	choice("air_direction", func(s *Surroundings) *string { return &s.AirDirection }, inFlow),
+	amount("altitude_m", func(s *Surroundings) *Opt[float64] { return &s.AltitudeM }, inAir, nil, ""),
+	amount("radiant_c", func(s *Surroundings) *Opt[float64] { return &s.RadiantC }, inLight, nil, ""),
+	choice("run", func(s *Surroundings) *string { return &s.Run }, inFluid),
+	amount("height_m", func(s *Surroundings) *Opt[float64] { return &s.HeightM }, inFluid, nil, ""),
+	amount("sun_w_m2", func(s *Surroundings) *Opt[float64] { return &s.SunWM2 }, inLight, nil, ""),
+	amount("depth_m", func(s *Surroundings) *Opt[float64] { return &s.DepthM }, ground, ground, "the depth of the axis in m, often 0.7"),
+	amount("soil_w_mk", func(s *Surroundings) *Opt[float64] { return &s.SoilWMK }, ground, ground, "the soil's conductivity in W/mK, 0.4 for dry and 1 for moist soil"),
+	{
+		"wrap", func(s *Surroundings) bool { return s.Wrap != nil },
+		func(s *Surroundings) { s.Wrap = nil }, wrapped, wrapped, "{material: …, thickness_mm: …}",
+	},
+	{
+		"wet", func(s *Surroundings) bool { return s.Wet },
+		func(s *Surroundings) { s.Wet = false },
+		[]string{StillAir, MovingAir, FixedFilm, FixedWall, Buried, Water, Insulation},
+		nil, "",
+	},
 }
 
 // notThere says why a key makes no sense in a kind, where that is not plain.
