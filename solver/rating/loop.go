@@ -43,7 +43,7 @@ type around struct {
 func (e *Engine) answer(ctx context.Context, s *scene, o Options) answered {
 	l := loop{e: e, s: s, grade: o.Accuracy, temps: e.startTemps(s), around: around{air: e.startAir(s)}}
 	s.out.air.Cautious = o.Cautious
-	warm := s.out.free && e.out == s.out && len(e.temps) == len(s.parts)
+	warm := s.out.free && e.out.like(&s.out) && len(e.temps) == len(s.parts)
 	l.keep = warm && o.Accuracy == heat.Draft
 	if warm {
 		l.flux = e.flux
