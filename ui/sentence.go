@@ -12,6 +12,8 @@ type SentenceView struct {
 
 	// OnProblems is called by the words that lead to the list of problems.
 	OnProblems func()
+	// OnAssumed is called by the words that lead to what is assumed about the surroundings.
+	OnAssumed func()
 
 	desk    *Desk
 	edge    *fill
@@ -40,16 +42,21 @@ func (v *SentenceView) write() {
 	before := v.heightFor(v.width)
 	v.answer.say(run{text: answer, tone: strong})
 	runs := []run{{text: assumed, tone: quiet}}
-	if n := len(v.desk.Problems()); n > 0 {
-		gap := "  "
-		if assumed == "" {
-			gap = ""
+	link := func(text string, f *func()) {
+		if runs[len(runs)-1].text != "" {
+			runs = append(runs, run{text: "  ", tone: quiet})
 		}
-		runs = append(runs, run{text: gap, tone: quiet}, run{text: problemCount(n), tap: func() {
-			if v.OnProblems != nil {
-				v.OnProblems()
+		runs = append(runs, run{text: text, tap: func() {
+			if *f != nil {
+				(*f)()
 			}
 		}})
+	}
+	if assumed != "" && state != Refusal && len(v.desk.Document().Parts) > 0 {
+		link("Change", &v.OnAssumed)
+	}
+	if n := len(v.desk.Problems()); n > 0 && len(v.desk.Document().Parts) > 0 {
+		link(problemCount(n), &v.OnProblems)
 	}
 	v.assumed.say(runs...)
 	v.paint(state)

@@ -92,7 +92,7 @@ func (w *Window) build() {
 	w.status = newQuietLine()
 	c := w.cmds
 	sentence := NewSentenceView(k, w.relayout)
-	sentence.OnProblems = func() { w.showProblems() }
+	sentence.OnProblems, sentence.OnAssumed = w.showProblems, w.showSurroundings
 	f := &frame{
 		sentence: sentence,
 		bar:      newBar(w.putLine, []fyne.CanvasObject{c.settle, c.layUp, c.undo, c.fit, c.out, c.in}, []fyne.CanvasObject{c.details}),
@@ -198,6 +198,10 @@ func (w *Window) Close() {
 
 // quit closes the window, after the question about unsaved work.
 func (w *Window) quit() {
+	if w.saving {
+		w.savedBy = append(w.savedBy, w.quit)
+		return
+	}
 	w.guard("closing", func() {
 		size := w.win.Canvas().Size()
 		w.app.Preferences().SetFloat(prefWidth, float64(size.Width))
