@@ -90,7 +90,12 @@ func (p *panel) expand(c complex128, a float64, m int, out []float64) {
 	var f potential
 	f.at(w, p.p, real(w) < 0, false)
 	unit := p.unit()
-	powers := make([]float64, 2*m, 2*usualOrder)
+	var room [2 * usualOrder]float64
+	powers := room[:]
+	if m > usualOrder {
+		powers = make([]float64, 2*m)
+	}
+	powers = powers[:2*m]
 	g := &rules[points(w, p.p, m)]
 	for i, t := range g.x {
 		x := scale(a, inverse(p.at(t)-c))

@@ -51,7 +51,7 @@ func (b *bow) expandArc(c complex128, a float64, m int, out []float64) {
 		out[k*cols] = unit * real(s.value(k))
 	}
 	out[0] += unit * b.log()
-	powers := make([]float64, 2*m, 2*usualOrder)
+	powers := make([]float64, 2*m)
 	g := &rules[points(b.frame(c), b.p, m)]
 	for i, t := range g.x {
 		x := scale(a, inverse(b.at(t)-c))
@@ -64,6 +64,57 @@ func (b *bow) expandArc(c complex128, a float64, m int, out []float64) {
 			addScaled(out[k*cols+1:][:2*m], g.p[i][k], powers)
 		}
 	}
+}
+
+// expandString is expand for a string, of very many harmonics too: beyond those that a Gauss rule follows, integration by parts leads from x^(n−1) to
+// x^n, x = a/(y−c), with P_k' = Σ (2j+1) P_j, j = k−1, k−3 ….
+func (b *bow) expandString(c complex128, a float64, m int, out []float64) {
+	gauss := int(10 * a / b.half)
+	if m <= gauss {
+		b.expand(c, a, m, out)
+		return
+	}
+	few := make([]float64, b.p*(1+2*gauss))
+	b.expand(c, a, gauss, few)
+	unit := -b.unit()
+	var prev, next [maxModes]complex128 // ∫ P_k x^n dt
+	for k := range b.p {
+		row := few[k*(1+2*gauss):][:1+2*gauss]
+		copy(out[k*(1+2*m):], row)
+		prev[k] = scale(float64(gauss)/unit, complex(row[2*gauss-1], row[2*gauss]))
+	}
+	x0, x1 := scale(a, inverse(b.at(-1)-c)), scale(a, inverse(b.at(1)-c))
+	u0, u1 := power(x0, gauss), power(x1, gauss)
+	step := scale(a/b.half, conj(b.dir))
+	for n := gauss + 1; n <= m; n++ {
+		f := scale(-1/float64(n-1), step)
+		for k := range b.p {
+			ends := u1 - u0
+			if k%2 == 1 {
+				ends = u1 + u0
+			}
+			for j := k - 1; j >= 0; j -= 2 {
+				ends -= scale(float64(2*j+1), prev[j])
+			}
+			next[k] = f * ends
+			row := out[k*(1+2*m):]
+			row[2*n-1], row[2*n] = unit/float64(n)*real(next[k]), unit/float64(n)*imag(next[k])
+		}
+		prev = next
+		u0, u1 = u0*x0, u1*x1
+	}
+}
+
+// power is x^n.
+func power(x complex128, n int) complex128 {
+	p := complex(1, 0)
+	for ; n > 0; n >>= 1 {
+		if n&1 == 1 {
+			p *= x
+		}
+		x *= x
+	}
+	return p
 }
 
 // sphericalBessel fills j with j_0(x) … j_{len−1}(x), x > 0: upwards where that is stable, else downwards (Miller's algorithm).

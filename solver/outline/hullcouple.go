@@ -48,6 +48,8 @@ func (s *HullSystem) block(x []float64, from, to *bow, l int) []float64 {
 type views struct {
 	end    [maxModes + 1]sight
 	middle [maxModes]sight
+	touch  [maxModes]bool // the panel ends where the cell does, and its potential there has a corner
+	fine   [maxModes][maxModes]float64
 }
 
 // along looks at the ends of to's cells, or where mirror puts them.
@@ -72,11 +74,47 @@ func (v *views) middles(from, to *bow, mirror func(complex128) complex128) {
 			z = mirror(z)
 		}
 		from.look(z, &v.middle[l], real(v.end[l].w), false)
+		v.touch[l] = atEnd(v.end[l].w) || atEnd(v.end[l+1].w)
+		if v.touch[l] {
+			v.grade(from, to, l, atEnd(v.end[l].w), mirror)
+		}
 	}
 }
 
-// mean returns the mean of mode k's potential over cell l by Simpson's rule.
+// atEnd tells whether w is where a panel ends.
+func atEnd(w complex128) bool {
+	return math.Abs(math.Abs(real(w))-1) < 1e-6 && math.Abs(imag(w)) < 1e-6
+}
+
+// grade fills fine with the means over cell l, by a Gauss rule with its points drawn to the end that touches: there the potential
+// goes like x ln x.
+func (v *views) grade(from, to *bow, l int, first bool, mirror func(complex128) complex128) {
+	a, b := cellsOf[to.p].at[l], cellsOf[to.p].at[l+1]
+	if !first {
+		a, b = b, a
+	}
+	near := real(v.end[l].w)
+	v.fine[l] = [maxModes]float64{}
+	g := &rules[6]
+	var s sight
+	for i, x := range g.x {
+		u := (1 + x) / 2
+		z := to.at(a + (b-a)*u*u)
+		if mirror != nil {
+			z = mirror(z)
+		}
+		from.look(z, &s, near, false)
+		for k := range from.p {
+			v.fine[l][k] += g.w[i] * u * real(s.value(k))
+		}
+	}
+}
+
+// mean returns the mean of mode k's potential over cell l, by Simpson's rule where that will do.
 func (v *views) mean(l, k int) float64 {
+	if v.touch[l] {
+		return v.fine[l][k]
+	}
 	return (real(v.end[l].value(k)) + 4*real(v.middle[l].value(k)) + real(v.end[l+1].value(k))) / 6
 }
 

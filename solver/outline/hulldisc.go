@@ -114,7 +114,7 @@ func (x *exchange) fill(d *Disc, b *bow, k float64, m int) {
 	switch {
 	case b.disc < 0:
 		d.toString(b, k, m, x)
-		b.expand(d.C, d.A, m, x.receive)
+		b.expandString(d.C, d.A, m, x.receive)
 	case b.c == d.C:
 		d.toArc(b, k, m, x)
 		b.ownHarmonics(m, x.receive)

@@ -49,7 +49,8 @@ func (s *HullSystem) Temperatures(y []float64, src Sources) []float64 {
 	return t
 }
 
-// Faces returns, for the temperatures of the cells, the hottest of the outside, its mean, and the heat that it gives off (W/m).
+// Faces returns, for the temperatures of the cells, the hottest of the strings (−Inf without any), the mean of the outside, and the heat that
+// it gives off (W/m).
 func (s *HullSystem) Faces(t []float64) (hottest, mean, out float64) {
 	hottest = math.Inf(-1)
 	length := 0.0
@@ -63,7 +64,9 @@ func (s *HullSystem) Faces(t []float64) (hottest, mean, out float64) {
 			mean += v * ds
 			out += (film*(v-p.out.Temp) - p.out.Absorbed) * ds
 		}
-		hottest = math.Max(hottest, b.hottest(t[b.dof:][:b.p]))
+		if b.disc < 0 {
+			hottest = math.Max(hottest, b.hottest(t[b.dof:][:b.p]))
+		}
 	}
 	return hottest, mean / length, out
 }

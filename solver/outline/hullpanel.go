@@ -61,7 +61,11 @@ func (b *bow) look(z complex128, s *sight, near float64, second bool) {
 	period := 2 * math.Pi / b.turn
 	re := (math.Atan2(imag(v), real(v)) - b.theta) / b.turn
 	re -= period * math.Round((re-near)/period)
-	s.w = complex(re, -math.Max(0.5*math.Log(r2)/b.turn, 1e-300)) // not −0, which is lost in a sum
+	im := -0.5 * math.Log(r2) / b.turn
+	if math.Abs(im) < 1e-9 {
+		im = -1e-300 // on the rim, seen from outside; not −0, which is lost in a sum
+	}
+	s.w = complex(re, im)
 	if r2 > farOff*farOff && !second {
 		b.farAway(s, scale(b.a, inverse(v)))
 		return

@@ -2,24 +2,23 @@ package outline
 
 import "math"
 
-// kin returns the panels that disc i is solved with to all orders: its own arcs, the strings that leave it, and strings that pass close by.
-func (s *HullSystem) kin(i int) (all []int) {
-	d := &s.discs[i].Disc
+// kin returns the panels that disc i, at d, is solved with to all orders: its own arcs, the strings that leave it, and strings that pass close by.
+func (s *HullSystem) kin(i int, d Disc) (all []int) {
 	for j := range s.panels {
 		b := &s.panels[j]
 		p := &s.pieces[b.piece]
 		switch {
 		case p.ends[0] == i || p.ends[1] == i:
 			all = append(all, j)
-		case p.disc < 0 && s.pieceGap(p, d) < kinShare*d.A:
+		case p.disc < 0 && p.gap(&d) < kinShare*d.A:
 			all = append(all, j)
 		}
 	}
 	return all
 }
 
-// pieceGap is the distance of a string from the rim of d.
-func (s *HullSystem) pieceGap(p *piece, d *Disc) float64 {
+// gap is the distance of a string from the rim of d.
+func (p *piece) gap(d *Disc) float64 {
 	w := (d.C - p.start) * conj(p.dir)
 	along := math.Max(0, math.Max(-real(w), real(w)-p.length))
 	return math.Hypot(along, imag(w)) - d.A
@@ -30,7 +29,7 @@ func (s *HullSystem) pieceGap(p *piece, d *Disc) float64 {
 // Hydrodynamics); what it reflects otherwise is summed.
 func (s *HullSystem) reflect(i int) {
 	d := &s.discs[i]
-	kin := s.kin(i)
+	kin := s.kin(i, d.Disc)
 	if len(kin) == 0 {
 		return
 	}
