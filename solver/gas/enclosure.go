@@ -1,6 +1,9 @@
 package gas
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // Disc is a round surface with centre C and radius R. Its patches lie between Cuts, angles (rad) that rise by at most 2π in all; what they
 // leave out hides what is behind it and is no surface.
@@ -157,3 +160,9 @@ var nodes = [...][][2]float64{
 
 func scale(f float64, z complex128) complex128 { return complex(f*real(z), f*imag(z)) }
 func size(z complex128) float64                { return math.Sqrt(real(z)*real(z) + imag(z)*imag(z)) }
+
+// Same tells whether disc i lies where d does and has the same patches.
+func (e *Enclosure) Same(i int, d *Disc) bool {
+	o := &e.discs[i]
+	return o.C == d.C && o.R == d.R && slices.Equal(o.Cuts, d.Cuts)
+}

@@ -19,7 +19,7 @@ func around(n int) []float64 {
 
 // ring returns a round outline of radius r with n patches.
 func ring(r float64, n int) gas.Outline {
-	return (&gas.Grain{Around: float64(n)}).Ring(r)
+	return gas.Ring(r, (&gas.Grain{Turn: float64(n)}).Around(r))
 }
 
 // box returns a rectangle from the origin with n patches a side.

@@ -2,11 +2,11 @@ package gas
 
 import "math"
 
-// Grain decides how long patches may be: a disc of radius r gets PerTurn, an outline so many in all, and nowhere is a patch longer than about half the
+// Grain decides how long patches may be: a disc of radius r gets PerTurn, an outline Turn in all, and nowhere is a patch longer than about half the
 // radius of a smaller disc beside it.
 type Grain struct {
 	PerTurn float64 // on a disc
-	Around  float64 // on an outline
+	Turn    float64 // on an outline
 	Discs   []Disc  // Cuts are not needed
 }
 
@@ -41,22 +41,28 @@ func (g *Grain) Cuts(i int) []float64 {
 	return cuts
 }
 
-// Ring divides the circle of radius r about the origin.
-func (g *Grain) Ring(r float64) Outline {
-	n := int(math.Ceil(g.Around))
+// Around divides a circle of radius r about the origin that encloses the discs.
+func (g *Grain) Around(r float64) []float64 {
+	n := int(math.Ceil(g.Turn))
 	usual := 2 * math.Pi * r / float64(n)
 	cuts := make([]float64, 1, n+1)
 	for k := range n {
 		a, b := 2*math.Pi*float64(k)/float64(n), 2*math.Pi*float64(k+1)/float64(n)
 		cuts = g.bisect(cuts, a, b, usual, -1, 0, r)
 	}
+	return cuts
+}
+
+// Ring is the outline of radius r about the origin with patches between cuts, which begin at 0 and end at 2π.
+func Ring(r float64, cuts []float64) Outline {
 	o := Outline{R: r, Segments: make([]Segment, len(cuts)-1)}
-	last := complex(r, 0)
+	first := complex(r, 0)
+	last := first
 	for k := range o.Segments {
 		s, c := math.Sincos(cuts[k+1])
 		next := complex(r*c, r*s)
 		if k == len(o.Segments)-1 {
-			next = complex(r, 0)
+			next = first
 		}
 		o.Segments[k] = Segment{last, next}
 		last = next

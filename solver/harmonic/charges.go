@@ -1,9 +1,10 @@
 package harmonic
 
 // Charges are the couplings of the discs' monopoles with everything, kept for many products: what Mono, MonoDot, Logs and the circle's maps
-// work out anew each time. Put keeps them up to date; not safe for concurrent use.
+// work out anew each time. Follow keeps them up to date; not safe for concurrent use.
 type Charges struct {
 	s    *System
+	was  []Disc         // as they were when the couplings were worked out
 	pair [][]float64    // of discs i, j at i·n + j: what a unit monopole in j brings to i
 	wall [][]complex128 // (c/R)^n/√n of each disc
 }
@@ -11,7 +12,7 @@ type Charges struct {
 // Charges works the couplings out.
 func (s *System) Charges() *Charges {
 	n := len(s.discs)
-	c := &Charges{s: s, pair: make([][]float64, n*n), wall: make([][]complex128, n)}
+	c := &Charges{s: s, was: append([]Disc(nil), s.discs...), pair: make([][]float64, n*n), wall: make([][]complex128, n)}
 	for i := range n {
 		c.outward(i)
 		for j := range n {
@@ -21,12 +22,18 @@ func (s *System) Charges() *Charges {
 	return c
 }
 
-// Put follows System.Put for disc i.
-func (c *Charges) Put(i int) {
-	c.outward(i)
-	for j := range c.s.discs {
-		c.write(i, j)
-		c.write(j, i)
+// Follow works out anew what has changed since: discs that System.Put replaced.
+func (c *Charges) Follow() {
+	for i, d := range c.s.discs {
+		if o := c.was[i]; o.C == d.C && o.A == d.A && len(o.S) == len(d.S) {
+			continue
+		}
+		c.was[i] = d
+		c.outward(i)
+		for j := range c.s.discs {
+			c.write(i, j)
+			c.write(j, i)
+		}
 	}
 }
 

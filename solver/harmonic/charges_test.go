@@ -27,7 +27,7 @@ func TestFlow(t *testing.T) {
 				d := s.Disc(1)
 				d.C *= 1.01
 				s.Put(1, d)
-				c.Put(1)
+				c.Follow()
 			}
 			checkFlow(t, r, s, c)
 		}

@@ -25,7 +25,9 @@ func (g *region) assemble(cut float64, threads int, stop func() bool) bool {
 				return false
 			}
 			var ok bool
-			if g.laws[i], ok = c.inside.eliminate(c, threads, stop); !ok {
+			if c.inside.opens() {
+				g.laws[i] = c.inside.openLaw()
+			} else if g.laws[i], ok = c.inside.eliminate(c, threads, stop); !ok {
 				return false
 			}
 		}
@@ -50,6 +52,14 @@ func (g *region) weights() []float64 {
 		p := g.wall.Port(n + 1)
 		w[n] = math.Max(math.Abs(p.Tau), math.Abs(p.TauIn))
 	}
+	if g.radiates() && g.border == nil {
+		for n := range maxRing {
+			if n == len(w) {
+				w = append(w, 0)
+			}
+			w[n] = math.Max(w[n], wallShare)
+		}
+	}
 	return w
 }
 
@@ -64,6 +74,9 @@ func (g *region) disc(i int) harmonic.Disc {
 		}
 		if t := c.stack.Port(n + 1).T; math.Abs(t) > deafT {
 			d.S[n] = math.Sqrt(math.Abs(t))
+		}
+		if g.radiates() {
+			d.S[n] = math.Max(d.S[n], leastScale)
 		}
 	}
 	return d

@@ -75,6 +75,13 @@ func (e *exchange) begin(with responder) {
 // bring adds what the border sends back to scaled outgoing amplitudes v and heats charge (W/m, nil for none): the scaled incoming amplitudes
 // to y, the mean temperatures to mean unless it is nil. ground adds the drive of sides and ambient.
 func (e *exchange) bring(g *region, charge, v []float64, ground bool, y, mean []float64) {
+	e.fill(g, charge, v)
+	e.with.RespondTo(e.y, e.src, ground)
+	e.fetch(g, y, mean)
+}
+
+// fill puts scaled outgoing amplitudes v and heats charge (W/m, nil for none) in the border's terms.
+func (e *exchange) fill(g *region, charge, v []float64) {
 	for i := range e.discs {
 		e.src.Q[i] = 0
 		if charge != nil {
@@ -85,9 +92,14 @@ func (e *exchange) bring(g *region, charge, v []float64, ground bool, y, mean []
 			f *= rootsOf(n + 1)
 			e.src.D[i][n] = complex(f*v[o+2*n], f*v[o+2*n+1])
 		}
-		clear(e.b[i])
 	}
-	e.with.RespondTo(e.y, e.src, ground)
+}
+
+// fetch adds what the border sends back: the scaled incoming amplitudes to y, the mean temperatures to mean unless it is nil.
+func (e *exchange) fetch(g *region, y, mean []float64) {
+	for _, b := range e.b {
+		clear(b)
+	}
 	e.with.Incoming(e.y, e.b)
 	for i := range e.discs {
 		s, o := g.sys.Disc(i).S, g.sys.Offset(i)

@@ -20,6 +20,7 @@ type law struct {
 	l        *mat.Dense
 	sign     []float64 // +1 where T is negative: the cable conducts better than the medium
 	definite bool
+	open     bool // not eliminated
 	u        [][]float64
 	own      [][]float64 // rise of source s over the cable's mean rim for 1 W/m in source r, at β = 0
 	buf      []float64

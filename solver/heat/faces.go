@@ -116,7 +116,7 @@ func (s *state) wallFaces(w *Wall) (hot []float64, mean, released float64) {
 	rings := s.wall.Rings
 	hot = make([]float64, len(rings)+1)
 	mean = s.level
-	a := s.cloud.Outgoing(max(len(s.cloud.Circle.Sigma), 12))
+	a := s.outgoing(max(len(s.cloud.Circle.Sigma), 12))
 	waves := make([][]complex128, len(hot))
 	for i := range waves {
 		waves[i] = make([]complex128, len(a))
@@ -171,5 +171,5 @@ func (s *state) carried() float64 {
 	for _, q := range s.cloud.Q {
 		sum += q
 	}
-	return 2 * math.Pi * s.k * sum
+	return 2*math.Pi*s.k*sum + s.taken
 }

@@ -121,7 +121,7 @@ func (s *state) wallLayers() layers {
 			top = math.Max(top, 2*float64(len(s.cloud.D[i]))*s.r/p.a)
 		}
 	}
-	a := s.cloud.Outgoing(max(len(s.cloud.Circle.Sigma), int(math.Min(top, maxWallSeries))))
+	a := s.outgoing(max(len(s.cloud.Circle.Sigma), int(math.Min(top, maxWallSeries))))
 	l := newLayers(s.wall.Rings, s.total, len(a))
 	mean := s.level
 	for i, g := range l.rings {

@@ -62,7 +62,9 @@ type (
 			HeatWM     float64  `yaml:"heat_w_m"`
 		} `yaml:"loads"`
 		Materials map[string]struct {
-			K float64 `yaml:"k_w_mk"`
+			K          float64  `yaml:"k_w_mk"`
+			Emissivity *float64 `yaml:"emissivity"`
+			Gas        bool     `yaml:"gas"`
 		} `yaml:"materials"`
 	}
 )
@@ -99,6 +101,12 @@ func load(t testing.TB, name string) loaded {
 			l.Wall.Sides[k] = side(d.Holder.Sides[name])
 		}
 	}
+	if d.Materials[d.Holder.Fill].Gas {
+		l.Filling, l.ZeroK = heat.Gas, 273.15
+	}
+	if len(d.Holder.Layers) > 0 {
+		l.Wall.Emissivity = d.emissivity(d.Holder.Layers[0].Material)
+	}
 	d.place(&l, d.Parts, -1, "", 0)
 	heats := map[string]float64{}
 	for _, load := range d.Loads {
@@ -118,6 +126,13 @@ func (d *sectionDoc) rings(layers []layerDoc) []heat.Ring {
 		r = append(r, heat.Ring{K: d.Materials[l.Material].K, Thickness: l.ThicknessMM * mm})
 	}
 	return r
+}
+
+func (d *sectionDoc) emissivity(material string) float64 {
+	if e := d.Materials[material].Emissivity; e != nil {
+		return *e
+	}
+	return 0.9
 }
 
 func side(n yaml.Node) heat.Side {
@@ -148,7 +163,17 @@ func (d *sectionDoc) place(l *loaded, parts []partDoc, in int, prefix string, tu
 			}
 		case "cable":
 			b := d.Builds[p.Build]
+			if d.Materials[b.Holder.Fill].Gas {
+				q.Filling, l.ZeroK = heat.Gas, 273.15
+			}
+			q.InsideEmissivity = d.emissivity(b.Holder.Layers[0].Material)
+			p.Layers = b.Holder.Layers
 			q.Core, q.Radius, q.K, q.Rings = heat.Inside, b.Holder.InsideMM/2*mm, d.Materials[b.Holder.Fill].K, d.rings(b.Holder.Layers)
+		}
+		if n := len(p.Layers); n > 0 {
+			q.Emissivity = d.emissivity(p.Layers[n-1].Material)
+		} else {
+			q.Emissivity = d.emissivity(p.Material)
 		}
 		l.Parts, l.ids = append(l.Parts, q), append(l.ids, prefix+p.ID)
 		if p.Kind == "cable" {

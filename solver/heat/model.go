@@ -24,6 +24,9 @@ type Model struct {
 	floorX  []float64
 	ground  []float64   // last solution without heat
 	kept    [][]float64 // rises of all sources for 1 W/m in each
+
+	glow   *coupled // of sections with surfaces that radiate
+	before *coupled // the one before, of which a new one may keep something
 }
 
 // forget drops what depends on places, films and outside temperatures, but for the solutions, from which the next ones start.
@@ -117,6 +120,7 @@ func (m *Model) prepare(ctx context.Context) bool {
 	}
 	m.ready = true
 	m.forget()
+	m.dim()
 	m.held = m.held[:0]
 	for k, s := range m.top.sources {
 		if m.p.Parts[s.part].Core == FixedBore {
@@ -188,6 +192,9 @@ func (m *Model) heats(heats []float64) []float64 {
 // solve does the work for heats q by source.
 func (m *Model) solve(ctx context.Context, q []float64) *Result {
 	g := m.top
+	if g.opens() {
+		return m.solveCoupled(ctx, q)
+	}
 	_, _, tol := m.set.Accuracy.settings()
 	if len(m.x) != g.sys.Len() {
 		m.x = make([]float64, g.sys.Len())

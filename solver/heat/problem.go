@@ -6,6 +6,9 @@ type Problem struct {
 	Parts     []Part
 	Wall      Wall
 	MediumK   float64 // between the parts of the top level
+	Filling   Filling // what the medium does besides; surfaces that radiate need emissivities
+	ZeroK     float64 // absolute temperature of the common zero: 273.15 for °C, 0 for K. Radiation needs it
+	Pressure  float64 // Pa, of air that moves; 0: the atmosphere's
 	Clearance float64 // mean clearance of loose parts from each other and the wall, 0 in a solid; see PHYSICS section 6 item 5
 }
 
@@ -31,6 +34,10 @@ type Part struct {
 	Fixed  float64 // temperature of a FixedBore
 	Rings  []Ring  // from Radius outwards
 	Heat   float64 // W/m, made in the core (Metal only; 0 elsewhere)
+
+	Emissivity       float64 // of the outer surface, where it faces a gas
+	Filling          Filling // of the medium in a cable
+	InsideEmissivity float64 // of a cable's inside
 }
 
 // Ring is a layer of a part or a wall.
@@ -58,8 +65,9 @@ type Wall struct {
 	Rings []Ring  // from the inside outwards; none: the boundary acts on the inside outline itself
 	Film  float64 // W/m²K on the outside; +Inf: the outside is held at Ambient
 	// Ambient temperature outside, for open sides and round walls.
-	Ambient float64
-	Sides   [4]Side // of a rectangle: Bottom, Right, Top, Left
+	Ambient    float64
+	Emissivity float64 // of the inside, where it faces a gas
+	Sides      [4]Side // of a rectangle: Bottom, Right, Top, Left
 	// Taut winds the string round discs, counterclockwise, with an arc of 2π for one disc; it is needed for a Hull.
 	Taut func(x, y, r []float64) []Arc
 }

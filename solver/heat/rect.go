@@ -109,6 +109,12 @@ func (r *rectWall) move(g *region, i int) bool {
 // solved finds the wall's answer to the whole solution, ground included, and adds the means that it sends back.
 func (r *rectWall) solved(g *region, charge, v, mean []float64) *bound {
 	s := r.answer(g, charge, v, mean)
+	r.tell(s)
+	return s
+}
+
+// tell fills in what the wall's unknowns say of it.
+func (r *rectWall) tell(s *bound) {
 	y, sys := s.y, r.sys
 	s.hot, s.mean, s.sides = sys.Faces(y, r.src)
 	for _, q := range s.sides {
@@ -120,7 +126,6 @@ func (r *rectWall) solved(g *region, charge, v, mean []float64) *bound {
 	}
 	s.mid, s.half = complex(r.rect.W/2, r.rect.H/2), math.Max(r.rect.W, r.rect.H)/2+t
 	s.field = func() pointField { return sys.Field(y) }
-	return s
 }
 
 func (r *rectWall) fork() border {

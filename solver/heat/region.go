@@ -8,12 +8,14 @@ import (
 
 // region is one medium with the pieces that lie in it and what it ends at: the holder's wall, or a cable's jacket.
 type region struct {
-	k      float64
-	r      float64        // inside radius, clearance added; 0 if there is a border
-	border border         // nil of a round region
-	wall   harmonic.Stack // round: as drawn, from the medium outwards
-	pieces []piece
-	orders []int
+	part    int // the cable whose inside it is, −1 for the holder
+	filling Filling
+	k       float64
+	r       float64        // inside radius, clearance added; 0 if there is a border
+	border  border         // nil of a round region
+	wall    harmonic.Stack // round: as drawn, from the medium outwards
+	pieces  []piece
+	orders  []int
 
 	sys      *harmonic.System
 	circle   *harmonic.Circle
@@ -37,7 +39,10 @@ func (g *region) c2() float64 { return 1 / (2 * math.Pi * g.k) }
 
 // newRegion collects the pieces of holder or cable in (−1 for the holder).
 func newRegion(p *Problem, in int, k float64) *region {
-	g := &region{k: k}
+	g := &region{part: in, filling: p.Filling, k: k}
+	if in >= 0 {
+		g.filling = p.Parts[in].Filling
+	}
 	for i := range p.Parts {
 		if p.Parts[i].In == in {
 			g.pieces = append(g.pieces, newPiece(p, i, k))

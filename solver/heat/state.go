@@ -12,8 +12,10 @@ type state struct {
 	r      float64
 	wall   harmonic.Stack
 	cloud  harmonic.Cloud
-	level  float64 // mean temperature of the wall's inside
-	total  float64 // W/m through the wall
+	level  float64      // mean temperature of the wall's inside
+	total  float64      // W/m through the wall
+	taken  float64      // W/m of it that the wall takes up by radiation
+	shone  []complex128 // what that adds to A_n of a round wall
 	border *bound
 	tail   float64 // W/m·K, see region.tail
 	pieces []pieceState
@@ -152,7 +154,7 @@ func (g *region) enter(s *state, q []float64) {
 	for i := range s.pieces {
 		p := &s.pieces[i]
 		l := g.laws[i]
-		if l == nil {
+		if l == nil || l.open {
 			continue
 		}
 		in := g.pieces[i].inside
@@ -175,11 +177,20 @@ func (g *region) enter(s *state, q []float64) {
 		}
 		p.inside = in.solved(heats, x, p.mean+p.q*p.series, omega)
 		s.tail += p.inside.tail
-		p.sent = p.inside.cloud.Outgoing(len(p.b))
+		p.sent = p.inside.outgoing(len(p.b))
 		for n, a := range p.sent {
 			p.sent[n] = complex(real(a), -imag(a))
 		}
 	}
+}
+
+// outgoing returns what a round wall answers to, A_n, n = 1 … top: what comes from inside and what its face takes up.
+func (s *state) outgoing(top int) []complex128 {
+	a := s.cloud.Outgoing(top)
+	for n, v := range s.shone[:min(top, len(s.shone))] {
+		a[n] += v
+	}
+	return a
 }
 
 func axpy(y []float64, f float64, x []float64) {

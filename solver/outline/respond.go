@@ -10,6 +10,12 @@ func (s *System) Respond(src Sources, ground bool) (y []float64) {
 
 // RespondTo is Respond into y, of length Len. It doesn't allocate.
 func (s *System) RespondTo(y []float64, src Sources, ground bool) {
+	s.load(y, src, ground)
+	s.solve(y)
+}
+
+// load is the right-hand side of RespondTo.
+func (s *System) load(y []float64, src Sources, ground bool) {
 	clear(y)
 	for j := range s.discs {
 		d := &s.discs[j]
@@ -28,7 +34,6 @@ func (s *System) RespondTo(y []float64, src Sources, ground bool) {
 			}
 		}
 	}
-	s.solve(y)
 }
 
 // Incoming adds to b[i][n] (n = 0 … M_i) the coefficients of the wall's field about disc i: Re Σ b_n ((z−c)/a)^n. b_0 includes T_c.

@@ -1,0 +1,248 @@
+package heat
+
+import (
+	"math"
+
+	"packrise/solver/gas"
+	"packrise/solver/harmonic"
+)
+
+// Filling tells what a medium does besides conducting.
+type Filling int
+
+// Fillings.
+const (
+	Solid Filling = iota // nothing
+	Gas                  // surfaces radiate through it
+	Air                  // and it moves where there is room
+)
+
+// standardPressure, Pa, where none is given.
+const standardPressure = 101325
+
+// grain is how finely surfaces are divided: patches per turn of a part and of a wall, and points from which each of them looks.
+func (a Accuracy) grain() (part, wall float64, points int) {
+	switch a {
+	case Draft:
+		return 16, 48, 2
+	case Fine:
+		return 36, 108, 4
+	}
+	return 24, 72, 3
+}
+
+// Harmonics of emissions that are told apart, at most.
+const (
+	maxRim  = 64
+	maxRing = 48
+)
+
+// radiant are the surfaces of one region that radiate to each other through its gas.
+type radiant struct {
+	ex    *gas.Exchange
+	rims  []rim // of the pieces
+	wall  rim   // of a round wall
+	sides *sides
+	at    []complex128 // where the pieces were when they last looked about
+	out   gas.Outline
+	zero  float64 // absolute temperature of the common zero
+	stirs bool
+	press float64   // Pa
+	net   []float64 // room for emissions
+	base  []float64 // K: patch temperatures that emissions are taken about
+	still []float64 // W/m: emissions there
+	warm  []float64 // room for temperatures
+	nusselt
+}
+
+// nusselt is what convection multiplied conduction by, 1 for none, and whether the formula held.
+type nusselt struct {
+	nu      float64
+	inRange bool
+}
+
+// rim is a circle whose patches emit, in harmonics.
+type rim struct {
+	from, n   int       // patches
+	harmonics int       // that they are told apart in
+	rows      []float64 // per patch Re and Im of the mean of e^{inθ}/√n over it
+}
+
+// newRim prepares the patches between cuts, of which the first is from. Piecewise constant emissions are told apart by as many harmonics as half
+// the patches of that size would make a turn.
+func newRim(from int, cuts []float64, most int) rim {
+	narrow := 2 * math.Pi
+	for k := 1; k < len(cuts); k++ {
+		narrow = math.Min(narrow, cuts[k]-cuts[k-1])
+	}
+	r := rim{from: from, n: len(cuts) - 1}
+	r.harmonics = min(max(int(math.Round(math.Pi/narrow))-1, 1), most)
+	r.rows = make([]float64, 2*r.n*r.harmonics)
+	for k := range r.n {
+		row := r.row(k)
+		mid, half := (cuts[k]+cuts[k+1])/2, (cuts[k+1]-cuts[k])/2
+		for n := 1; n <= r.harmonics; n++ {
+			x := float64(n)
+			f := math.Sin(x*half) / (x * half) / math.Sqrt(x)
+			s, c := math.Sincos(x * mid)
+			row[2*n-2], row[2*n-1] = f*c, f*s
+		}
+	}
+	return r
+}
+
+func (r *rim) row(k int) []float64 { return r.rows[2*k*r.harmonics:][:2*r.harmonics] }
+
+// emit sets e to the scaled harmonics Σ E w/√n of the emissions of the patches and returns their sum.
+func (r *rim) emit(e, emission []float64) (sum float64) {
+	clear(e)
+	for k := range r.n {
+		v := emission[r.from+k]
+		sum += v
+		axpy(e, v, r.row(k))
+	}
+	return sum
+}
+
+// feel sets the temperatures of the patches from the scaled harmonics tau = √n conj(T_n) of the rim and its mean.
+func (r *rim) feel(t, tau []float64, mean float64) {
+	for k := range r.n {
+		t[r.from+k] = mean + harmonic.Dot(r.row(k), tau)
+	}
+}
+
+// newRadiant divides the surfaces of region g and lets them look at each other. What old knows is kept if it is still so.
+func (m *Model) newRadiant(g *region, old *radiant) *radiant {
+	part, turn, points := m.set.Accuracy.grain()
+	grain := gas.Grain{PerTurn: part, Turn: turn}
+	for i := range g.pieces {
+		c := &g.pieces[i]
+		grain.Discs = append(grain.Discs, gas.Disc{C: c.at, R: c.drawn})
+	}
+	r := &radiant{zero: m.p.ZeroK, press: m.p.Pressure, nusselt: nusselt{1, true}}
+	if r.press == 0 {
+		r.press = standardPressure
+	}
+	discs := make([]gas.Disc, len(grain.Discs))
+	copy(discs, grain.Discs)
+	n := 0
+	for i := range discs {
+		discs[i].Cuts = grain.Cuts(i)
+		r.rims = append(r.rims, newRim(n, discs[i].Cuts, maxRim))
+		r.at = append(r.at, discs[i].C)
+		n += r.rims[i].n
+	}
+	if g.border == nil {
+		cuts := grain.Around(g.wall.R)
+		r.out = gas.Ring(g.wall.R, cuts)
+		r.wall = newRim(n, cuts, maxRing)
+	} else {
+		r.sides = newSides(g.border.(*rectWall), &grain)
+		r.out = r.sides.outline()
+	}
+	if old != nil && old.same(discs, &r.out) {
+		r.ex = gas.NewExchange(old.ex.Enclosure, m.emissivities(g, r))
+	} else {
+		r.ex = gas.NewExchange(gas.NewEnclosure(discs, r.out, points), m.emissivities(g, r))
+	}
+	for _, v := range []*[]float64{&r.net, &r.base, &r.still, &r.warm} {
+		*v = make([]float64, r.ex.Len())
+	}
+	return r
+}
+
+// same tells whether an old enclosure is that of the discs and the outline.
+func (r *radiant) same(discs []gas.Disc, out *gas.Outline) bool {
+	if len(discs) != len(r.at) || len(out.Segments) != len(r.out.Segments) || out.R != r.out.R {
+		return false
+	}
+	for k, s := range out.Segments {
+		if s != r.out.Segments[k] {
+			return false
+		}
+	}
+	for i := range discs {
+		if !r.ex.Same(i, &discs[i]) {
+			return false
+		}
+	}
+	return true
+}
+
+// emissivities lists those of the patches of region g.
+func (m *Model) emissivities(g *region, r *radiant) []float64 {
+	var e []float64
+	for i := range g.pieces {
+		for range r.rims[i].n {
+			e = append(e, m.p.Parts[g.pieces[i].part].Emissivity)
+		}
+	}
+	wall := m.p.Wall.Emissivity
+	if g.part >= 0 {
+		wall = m.p.Parts[g.part].InsideEmissivity
+	}
+	for range r.out.Segments {
+		e = append(e, wall)
+	}
+	return e
+}
+
+// look lets the pieces that have moved look about anew.
+func (r *radiant) look(g *region) {
+	for i := range g.pieces {
+		if at := g.pieces[i].at; at != r.at[i] {
+			r.ex.Move(i, at)
+			r.at[i] = at
+		}
+	}
+}
+
+// strays is how far any piece has moved since it looked about.
+func (r *radiant) strays(g *region) float64 {
+	far := 0.0
+	for i := range g.pieces {
+		far = math.Max(far, dist(g.pieces[i].at, r.at[i]))
+	}
+	return far
+}
+
+// stir finds the convection at patch temperatures t, K.
+func (r *radiant) stir(t []float64) {
+	if r.stirs {
+		r.nu, r.inRange = r.ex.Stir(t, r.press)
+	}
+}
+
+// radiates tells whether surfaces radiate to each other through the region's medium.
+func (g *region) radiates() bool {
+	if _, rect := g.border.(*rectWall); g.border != nil && !rect {
+		return false
+	}
+	return g.filling != Solid
+}
+
+// opens tells whether the region or anything in it radiates.
+func (g *region) opens() bool {
+	if g.radiates() {
+		return true
+	}
+	for i := range g.pieces {
+		if in := g.pieces[i].inside; in != nil && in.opens() {
+			return true
+		}
+	}
+	return false
+}
+
+// openLaw stands for a cable whose inside radiates: it is not eliminated.
+func (g *region) openLaw() *law {
+	l := &law{n: 2 * g.heard(), open: true, definite: true, u: make([][]float64, len(g.sources))}
+	l.sign = make([]float64, l.n)
+	return l
+}
+
+// leastScale is the least scale of a piece's harmonics among radiating surfaces, whose emissions go out and come in beside what is reflected.
+const leastScale = 0.1
+
+// wallShare is how much a round wall's harmonics count for the temperatures of its patches.
+const wallShare = 0.02

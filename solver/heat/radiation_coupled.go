@@ -1,0 +1,155 @@
+package heat
+
+import (
+	"math"
+)
+
+// coupled is conduction and radiation together: one system for all regions that radiate and those that they lie in. Unknowns z are first the
+// amplitudes of all knots, then the heats of bores that are held at a temperature, then the emissions of patches: so that conduction
+// alone, the emissions being what they are, is the front part.
+type coupled struct {
+	m    *Model
+	top  *knot
+	z    []float64
+	held int // where the heats of held bores begin
+	emit int // where the emissions begin
+	grip []float64
+
+	q     []float64 // by source, held bores included
+	warm  bool      // z is the solution of something alike
+	fresh bool      // the patches see each other as the pieces lie
+	heat  float64   // W/m at which the emissions were found
+}
+
+// newCoupled prepares the model's system, which is written; old may be that of an older model or section.
+func (m *Model) newCoupled(old *coupled) *coupled {
+	c := &coupled{m: m}
+	var before *knot
+	if old != nil {
+		before = old.top
+	}
+	c.top = m.newKnot(m.top, before)
+	c.arrange()
+	c.fresh = true
+	if old != nil && len(old.z) == len(c.z) && old.emit == c.emit {
+		copy(c.z, old.z)
+		c.warm, c.heat = old.warm, old.heat
+	}
+	return c
+}
+
+// arrange numbers the unknowns.
+func (c *coupled) arrange() {
+	c.held = c.top.number(0)
+	c.emit = c.held + len(c.m.held)
+	c.z = make([]float64, c.top.numberPatches(c.emit))
+	c.q = make([]float64, len(c.m.top.sources))
+	g := c.m.top
+	c.grip = c.grip[:0]
+	for _, s := range c.m.held { // about the rise of a bore for its own heat
+		p := &g.pieces[g.sources[s].piece]
+		r := p.series + g.c2()
+		if g.border == nil {
+			r += c.m.outsideR()
+		}
+		c.grip = append(c.grip, r)
+	}
+}
+
+// follow takes over what has moved and which orders have grown; x is the new start of the amplitudes of the top level, of the new orders.
+func (c *coupled) follow(x []float64) {
+	c.top.charges.Follow()
+	old, n := c.z, c.top.g.sys.Len()
+	was := len(c.top.flow.X)
+	if n != was {
+		c.top.fit()
+		c.arrange()
+		copy(c.z, x)
+		copy(c.z[n:], old[was:])
+	}
+	c.fresh = false
+}
+
+// pass sends and receives once. ground tells whether sides, ambient and given heats count, or only what the unknowns change.
+func (c *coupled) pass(z, heats []float64, ground bool) {
+	clear(c.q)
+	if ground {
+		copy(c.q, heats)
+	}
+	for i, s := range c.m.held {
+		c.q[s] = z[c.held+i] / c.grip[i]
+	}
+	level := 0.0
+	if c.m.top.border == nil {
+		for _, v := range c.q {
+			level += v
+		}
+		level *= c.m.outsideR()
+		if ground {
+			level += c.m.p.Wall.Ambient
+		}
+	}
+	c.top.send(z, c.q)
+	c.top.receive(level, nil, ground)
+}
+
+// miss sets r to how far z is from the solution for given heats, after pass.
+func (c *coupled) miss(r, z []float64, ground bool, net func(k *knot, out []float64)) {
+	c.top.miss(r, z, net)
+	for i, s := range c.m.held {
+		t := c.top.core(s, c.q)
+		if ground {
+			t -= c.m.p.Parts[c.m.top.sources[s].part].Fixed
+		}
+		r[c.held+i] = t
+	}
+}
+
+// net is the emission that the patches' temperatures ask for.
+func (k *knot) netOf(out []float64) {
+	t := k.rad.warm
+	for p, v := range k.t {
+		t[p] = v + k.rad.zero
+	}
+	k.rad.ex.Net(out, t)
+}
+
+// about is netOf, to first order about the temperatures k.rad.base (K).
+func (k *knot) about(out []float64) {
+	d := k.rad.warm
+	for p, v := range k.t {
+		d[p] = v + k.rad.zero - k.rad.base[p]
+	}
+	k.rad.ex.Change(out, k.rad.base, d)
+	for p, v := range k.rad.still {
+		out[p] += v
+	}
+}
+
+// change is how netOf changes with temperatures k.t about the base.
+func (k *knot) change(out []float64) { k.rad.ex.Change(out, k.rad.base, k.t) }
+
+// rebase takes the patches' present temperatures for the base, and lets the air move by them.
+func (k *knot) rebase() {
+	if k.rad == nil {
+		return
+	}
+	for p, v := range k.t {
+		k.rad.base[p] = math.Max(v+k.rad.zero, 1)
+	}
+	k.rad.stir(k.rad.base)
+	k.rad.ex.Net(k.rad.still, k.rad.base)
+}
+
+// guess takes one temperature for the base of all patches.
+func (k *knot) guess(t float64) {
+	if k.rad == nil {
+		return
+	}
+	for p := range k.rad.base {
+		k.rad.base[p] = t + k.rad.zero
+	}
+	clear(k.rad.still)
+}
+
+func norm(x []float64) float64 { return math.Sqrt(dot(x, x)) }
