@@ -92,7 +92,7 @@ func checkSurroundings(r *report, s *Surroundings, at path) {
 		case written && !slices.Contains(k.kinds, s.Kind):
 			do, ok := instead[s.Kind+" "+k.key]
 			if !ok {
-				do = "take it out; it belongs to kind " + strings.Join(k.kinds, ", ")
+				do = "take it out (it belongs to kind " + strings.Join(k.kinds, ", ") + ")"
 			}
 			r.add(at.key(k.key), "key-of-kind", "¤ does not belong to kind "+s.Kind+notThere[s.Kind+" "+k.key], do)
 		case !written && slices.Contains(k.must, s.Kind):
