@@ -13,36 +13,8 @@ import (
 // surroundingsText tells the surroundings in words, without the ambient: "still air, outside emissivity 0.25".
 func (s *scene) surroundingsText() string {
 	d := s.doc.Surroundings
-	var w []string
+	w := []string{s.kindText()}
 	say := func(format string, args ...any) { w = append(w, fmt.Sprintf(format, args...)) }
-	flow := func() string {
-		if s.along() {
-			return "along the run"
-		}
-		return "across the run"
-	}
-	switch d.Kind {
-	case section.FixedWall:
-		say("outside held at the ambient")
-	case section.FixedFilm:
-		say("fixed film of %s W/m²K", digits(s.filmW, 2))
-	case section.StillAir:
-		say("still air")
-	case section.MovingAir:
-		say("air moving at %s m/s %s", digits(d.AirSpeedMS.V, 2), flow())
-	case section.Insulation:
-		say("wrapped in %s mm of %s in still air", digits(d.Wrap.ThicknessMM, 1), s.wrapName())
-	case section.Buried:
-		say("buried %s m deep in soil of %s W/mK", digits(d.DepthM.V, 2), digits(d.SoilWMK.V, 2))
-	case section.Water:
-		if d.AirSpeedMS.V > 0 {
-			say("water moving at %s m/s %s", digits(d.AirSpeedMS.V, 2), flow())
-		} else {
-			say("still water")
-		}
-	case section.Vacuum:
-		say("vacuum")
-	}
 	if s.out.free && s.radiates() {
 		say("outside emissivity %s", digits(s.out.coat.emissivity, 2))
 	}
@@ -62,6 +34,40 @@ func (s *scene) surroundingsText() string {
 		say("wet")
 	}
 	return strings.Join(w, ", ")
+}
+
+// kindText tells the kind with what makes it up.
+func (s *scene) kindText() string {
+	d := s.doc.Surroundings
+	flow := fmt.Sprintf("moving at %s m/s %s the run", digits(d.AirSpeedMS.V, 2), s.flow())
+	switch d.Kind {
+	case section.FixedWall:
+		return "outside held at the ambient"
+	case section.FixedFilm:
+		return fmt.Sprintf("fixed film of %s W/m²K", digits(s.filmW, 2))
+	case section.MovingAir:
+		return "air " + flow
+	case section.Insulation:
+		return fmt.Sprintf("wrapped in %s mm of %s in still air", digits(d.Wrap.ThicknessMM, 1), s.wrapName())
+	case section.Buried:
+		return fmt.Sprintf("buried %s m deep in soil of %s W/mK", digits(d.DepthM.V, 2), digits(d.SoilWMK.V, 2))
+	case section.Water:
+		if d.AirSpeedMS.V > 0 {
+			return "water " + flow
+		}
+		return "still water"
+	case section.Vacuum:
+		return "vacuum"
+	}
+	return "still air"
+}
+
+// flow is the word for how air or water moves.
+func (s *scene) flow() string {
+	if s.along() {
+		return section.Along
+	}
+	return section.Across
 }
 
 // radiates tells whether heat radiation leaves the outside.
@@ -134,11 +140,7 @@ func (s *scene) assumedOutside() (out []string) {
 		out = append(out, fmt.Sprintf("%s of the sun's heat is absorbed (%s), over the width seen from above", digits(c.absorptivity, 2), c.of))
 	}
 	if (d.Kind == section.MovingAir || d.Kind == section.Water) && d.AirDirection == "" && d.AirSpeedMS.V > 0 {
-		which := "across"
-		if s.along() {
-			which = "along"
-		}
-		out = append(out, "the flow is assumed to go "+which+" the run")
+		out = append(out, "the flow is assumed to go "+s.flow()+" the run")
 	}
 	if d.Kind == section.Vacuum && s.holder.kind != section.NoHolder && s.holder.fill.gas {
 		out = append(out, "the gas between the parts is reckoned as shut in at its pressure; where it escapes into the vacuum the parts are hotter")
