@@ -17,7 +17,10 @@ type builder struct {
 	image  []complex128 // [m][n]
 	dw, iw []int        // widths of the rows: direct part, image
 	line   []complex128 // one harmonic in the circle
+	cols   []uint16     // a map to the circle before its size is known
+	flat   []float64
 	reals  []float64
+	chunk  int
 	widths []uint16
 }
 
@@ -58,20 +61,24 @@ func (w *builder) write(b *block, di, dj Disc, same bool, circle *Circle, cut fl
 	}
 }
 
-// chunk is how many reals and widths are made at once.
-const chunk = 1 << 15
+// Reals and widths are made many at once, first few and then more.
+const (
+	firstChunk = 1 << 11
+	lastChunk  = 1 << 15
+)
 
 // room gives b space for rows and reals, its own if that is enough.
 func (w *builder) room(b *block, rows, reals int) {
 	if cap(b.cols) < rows {
 		if len(w.widths) < rows {
-			w.widths = make([]uint16, max(chunk/16, rows))
+			w.widths = make([]uint16, max(lastChunk/16, rows))
 		}
 		b.cols, w.widths = w.widths[:rows:rows], w.widths[rows:]
 	}
 	if cap(b.data) < reals {
 		if len(w.reals) < reals {
-			w.reals = make([]float64, max(chunk, reals))
+			w.chunk = min(max(firstChunk, 2*w.chunk), lastChunk)
+			w.reals = make([]float64, max(w.chunk, reals))
 		}
 		b.data, w.reals = w.reals[:reals:reals], w.reals[reals:]
 	}

@@ -1,6 +1,9 @@
 package harmonic
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // Circle is a round wall about the origin: inside radius R, reflection B_n = (RhoInf + Sigma[n-1]) conj(A_n), where A_n are the outgoing
 // and B_n the regular coefficients about the origin, both referred to R. RhoInf acts by images in closed form; Sigma, for
@@ -17,10 +20,10 @@ const portCut = 1e-6
 // port is the map from a disc's scaled amplitudes to the circle's, P[n,m] = s_m √(n/m) C(n−1, m−1) (a/R)^m (c/R)^(n−m), as a block: its rows
 // belong to m and are wide enough for all n whose weighted entries reach portCut.
 func (w *builder) port(b *block, d Disc, r float64, weight []float64) {
-	*b = block{}
 	c := scale(1/r, d.C)
 	l := size(c)
 	am := 1.0
+	w.cols, w.flat = w.cols[:0], w.flat[:0]
 	for m := 1; m <= min(len(d.S), len(weight)); m++ {
 		am *= d.A / r
 		v := complex(am*d.S[m-1], 0)
@@ -38,16 +41,27 @@ func (w *builder) port(b *block, d Disc, r float64, weight []float64) {
 			}
 			v = scale(f, v) * c
 		}
-		b.cols = append(b.cols, uint16(2*keep))
-		at := len(b.data)
-		b.data = append(b.data, make([]float64, 4*keep)...)
-		r0, r1 := b.data[at:][:2*keep], b.data[at+2*keep:][:2*keep]
-		for n := m; n <= keep; n++ { // Pᴴ
-			e := w.line[n-m]
-			k := 2 * (n - 1)
-			r0[k], r0[k+1] = real(e), imag(e)
-			r1[k], r1[k+1] = -imag(e), real(e)
-		}
+		w.cols = append(w.cols, uint16(2*keep))
+		w.adjoint(m, keep)
+	}
+	w.room(b, len(w.cols), len(w.flat))
+	copy(b.cols, w.cols)
+	copy(b.data, w.flat)
+}
+
+// adjoint appends the rows of Pᴴ that belong to m: w.line for n = m … keep behind noughts.
+func (w *builder) adjoint(m, keep int) {
+	at := len(w.flat)
+	w.flat = slices.Grow(w.flat, 4*keep)[:at+4*keep]
+	r0, r1 := w.flat[at:][:2*keep], w.flat[at+2*keep:][:2*keep]
+	for k := range min(2*(m-1), 2*keep) {
+		r0[k], r1[k] = 0, 0
+	}
+	for n := m; n <= keep; n++ {
+		e := w.line[n-m]
+		k := 2 * (n - 1)
+		r0[k], r0[k+1] = real(e), imag(e)
+		r1[k], r1[k+1] = -imag(e), real(e)
 	}
 }
 

@@ -14,7 +14,7 @@ type series struct {
 
 const (
 	bands   = 8
-	nothing = 2e-5 // K
+	nothing = 1e-4 // K
 )
 
 // trim sets top.
