@@ -108,7 +108,7 @@ shot 3-dropped
 step "edit the current"
 mark
 keys Return
-sleep 0.3
+wait_for '^focus .*fieldEntry'
 xdotool type --delay 40 '28'
 shot 4-typing
 keys Return

@@ -14,7 +14,8 @@ type Desk struct {
 	rooms   Rooms
 	runner  *latest.Runner[request, answer]
 	listen  []func(Changed)
-	closed  bool
+	closed  bool // tells nothing any more
+	ended   bool // nothing runs any more
 	gesture int
 
 	history *section.History
@@ -65,12 +66,18 @@ func NewDeskWith(cat *catalog.Catalog, d *section.Document, r Rooms) *Desk {
 
 // Close ends the solving and waits for it. The desk tells nothing any more.
 func (k *Desk) Close() {
-	if k.closed {
+	if k.ended {
 		return
 	}
+	k.mute()
+	k.ended = true
+	k.runner.Close()
+}
+
+// mute makes the desk drop what still comes from beside the window, which is closing.
+func (k *Desk) mute() {
 	k.closed = true
 	k.answer.stopWaiting()
-	k.runner.Close()
 }
 
 // Listen calls f after every change, on the window's goroutine.

@@ -168,6 +168,9 @@ func (v *SectionView) ask(coarse bool) (view render.View, ok bool) {
 
 // show takes a finished picture. Outside a drag the whole heat map follows a quick one.
 func (v *SectionView) show(p *picture) {
+	if v.desk.closed {
+		return
+	}
 	v.pic, v.stretched = p, nil
 	v.raster.Refresh()
 	if p.coarse && v.drag.mode != dragParts {

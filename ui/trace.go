@@ -42,7 +42,11 @@ func (t *tracer) changed(c Changed) {
 	}
 }
 
-func (t *tracer) line(format string, args ...any) { fmt.Fprintf(t.out, format+"\n", args...) }
+func (t *tracer) line(format string, args ...any) {
+	if t.out != nil {
+		fmt.Fprintf(t.out, format+"\n", args...)
+	}
+}
 
 // places prints where each part is, in device pixels of the window, if any has another place.
 func (t *tracer) places() {

@@ -178,6 +178,7 @@ func (w *Window) focusDetails() {
 	if f, ok := w.frame.details.(interface{ FocusFirst() }); ok {
 		f.FocusFirst()
 	}
+	w.trace.line("focus %T", w.win.Canvas().Focused())
 }
 
 // Show puts the window on the screen.
@@ -207,6 +208,7 @@ func (w *Window) quit() {
 		w.app.Preferences().SetFloat(prefWidth, float64(size.Width))
 		w.app.Preferences().SetFloat(prefHeight, float64(size.Height))
 		w.win.SetCloseIntercept(nil)
+		w.desk.mute()
 		w.win.Close()
 	})
 }

@@ -1,8 +1,10 @@
 package ui
 
 import (
+	"runtime"
 	"strings"
 	"testing"
+	"time"
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/container"
@@ -95,4 +97,24 @@ func TestNewDesignIsSound(t *testing.T) {
 	if s, _, _ := w.desk.Sentence(); s != "Nothing in the section yet." {
 		t.Errorf("it says %q", s)
 	}
+}
+
+func TestWindowLeavesNoGoroutines(t *testing.T) {
+	app := test.NewTempApp(t)
+	before := runtime.NumGoroutine()
+	l := newLoop()
+	w := NewWindow(app, Options{Catalog: testCatalog(), Document: testDesign(), Rooms: l.rooms(Rooms{})})
+	w.win.Resize(usualSize)
+	l.solved(t, w.desk)
+	w.quit()
+	w.Close()
+	l.pass(time.Hour) // what still comes falls on deaf ears
+	for range 200 {
+		if runtime.NumGoroutine() <= before {
+			return
+		}
+		time.Sleep(10 * time.Millisecond)
+	}
+	stacks := make([]byte, 1<<16)
+	t.Errorf("%d goroutines, %d before:\n%s", runtime.NumGoroutine(), before, stacks[:runtime.Stack(stacks, true)])
 }

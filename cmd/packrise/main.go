@@ -129,7 +129,10 @@ func trace() io.Writer {
 }
 
 func newApp() fyne.App {
-	app.SetMetadata(fyne.AppMetadata{ID: "app.packrise", Name: "Packrise", Version: version(), Icon: ui.Icon()})
+	app.SetMetadata(fyne.AppMetadata{
+		ID: "app.packrise", Name: "Packrise", Version: version(), Icon: ui.Icon(),
+		Migrations: map[string]bool{"fyneDo": true}, // widgets are touched through fyne.Do only: the toolkit need not check
+	})
 	a := app.NewWithID("app.packrise")
 	a.SetIcon(ui.Icon())
 	return a
