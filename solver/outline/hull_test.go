@@ -303,6 +303,51 @@ func compare(t *testing.T, what string, a, b *HullSystem, src Sources, tol float
 	}
 }
 
+// Heat into the inner side of strings: it raises their own temperatures and leaves through the hull, none of it lost.
+func TestHullPatches(t *testing.T) {
+	r := rand.New(rand.NewPCG(13, 14))
+	discs := four()
+	for i := range discs {
+		discs[i].M = 16 // what is sent back beyond the orders reaches only the hull beside a part
+	}
+	src := randomSources(r, discs)
+	s := NewHull(heap(discs, still), discs, mirrorsOf(discs, -0.7), 1)
+	for _, longest := range []float64{0, 1e-3, 1} {
+		p := s.Patches(func(complex128) float64 { return longest })
+		length := 0.0
+		for k, l := range p.Length {
+			length += l
+			within(t, "length", cmplx.Abs(p.B[k]-p.A[k]), l, 1e-12)
+		}
+		strings := 0.0
+		for i := range s.pieces {
+			if s.pieces[i].disc < 0 {
+				strings += s.pieces[i].length
+			}
+		}
+		within(t, "all lengths", length, strings, 1e-12)
+		w, cold, warm := make([]float64, len(p.A)), make([]float64, len(p.A)), make([]float64, len(p.A))
+		for k := range w {
+			w[k] = 0.2 * r.Float64()
+		}
+		y := make([]float64, s.Len())
+		p.RespondTo(y, src, true, nil)
+		p.Means(cold, y, src)
+		_, _, before := s.Faces(s.Temperatures(y, src))
+		p.RespondTo(y, src, true, w)
+		p.Means(warm, y, src)
+		_, _, after := s.Faces(s.Temperatures(y, src))
+		sum := 0.0
+		for k := range w {
+			sum += w[k]
+			if warm[k] <= cold[k] {
+				t.Errorf("patch %d is no warmer for its heat", k)
+			}
+		}
+		within(t, "heat", after-before, sum, 1e-6)
+	}
+}
+
 // A film without end holds the hull at its temperature, and that is its limit.
 func TestHullHeld(t *testing.T) {
 	discs := four()

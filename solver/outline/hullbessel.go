@@ -69,7 +69,7 @@ func (b *bow) expandArc(c complex128, a float64, m int, out []float64) {
 // expandString is expand for a string, of very many harmonics too: beyond those that a Gauss rule follows, integration by parts leads from x^(n−1) to
 // x^n, x = a/(y−c), with P_k' = Σ (2j+1) P_j, j = k−1, k−3 ….
 func (b *bow) expandString(c complex128, a float64, m int, out []float64) {
-	gauss := int(10 * a / b.half)
+	gauss := max(4, int(10*a/b.half))
 	if m <= gauss {
 		b.expand(c, a, m, out)
 		return

@@ -8,9 +8,6 @@ import (
 	"gonum.org/v1/gonum/floats"
 )
 
-// faint is the size under which a harmonic no longer counts at a panel of the hull.
-const faint = 1e-6
-
 // hullDisc is a part with what it exchanges with the hull. Densities (and cells) stand in an order of its own, those that most harmonics
 // reach first, so that each harmonic has to do with the first so many of them.
 type hullDisc struct {
@@ -33,7 +30,7 @@ func (s *HullSystem) link(i int) {
 		near[j], reach[j] = j, d.M
 		if b.disc != i {
 			if r := b.distance(d.C); r > 1.0001*d.A {
-				reach[j] = min(d.M, 1+int(math.Log(faint)/math.Log(d.A/r)))
+				reach[j] = min(d.M, 1+int(math.Log(decayed)/math.Log(d.A/r)))
 			}
 		}
 		for c := range 1 + 2*reach[j] {

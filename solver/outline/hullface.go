@@ -2,7 +2,7 @@ package outline
 
 import (
 	"math"
-	"sync"
+	"slices"
 )
 
 // HullCell is a short piece of the hull over which the conditions hold in the mean. Cell i belongs to row i of the system.
@@ -49,7 +49,7 @@ func (s *HullSystem) Temperatures(y []float64, src Sources) []float64 {
 	return t
 }
 
-// Faces returns, for the temperatures of the cells, the hottest of the strings (−Inf without any), the mean of the outside, and the heat that
+// Faces returns, for the temperatures of the cells, the hottest cell of the strings (−Inf without any), the mean of the outside, and the heat that
 // it gives off (W/m).
 func (s *HullSystem) Faces(t []float64) (hottest, mean, out float64) {
 	hottest = math.Inf(-1)
@@ -65,71 +65,8 @@ func (s *HullSystem) Faces(t []float64) (hottest, mean, out float64) {
 			out += (film*(v-p.out.Temp) - p.out.Absorbed) * ds
 		}
 		if b.disc < 0 {
-			hottest = math.Max(hottest, b.hottest(t[b.dof:][:b.p]))
+			hottest = math.Max(hottest, slices.Max(t[b.dof:][:b.p]))
 		}
 	}
 	return hottest, mean / length, out
-}
-
-// hottest is the highest value, at the ends and middles of cells, of the polynomial with those means over the cells.
-func (b *bow) hottest(mean []float64) float64 {
-	hot := math.Inf(-1)
-	for _, row := range peaks()[b.p] {
-		hot = math.Max(hot, dot(row, mean))
-	}
-	return hot
-}
-
-// peaks()[p] gives the polynomial of p modes at the ends and middles of its cells from the means over them.
-var peaks = sync.OnceValue(func() (all [maxModes + 1][][]float64) {
-	for p := 1; p <= maxModes; p++ {
-		c := &cellsOf[p]
-		inverse := inverted(c.mean)
-		for l := range 2*p + 1 {
-			x := c.at[l/2]
-			if l%2 == 1 {
-				x = (x + c.at[l/2+1]) / 2
-			}
-			row := make([]float64, p)
-			for k := range p {
-				v, _ := legendre(k, x)
-				addScaled(row, v, inverse[k])
-			}
-			all[p] = append(all[p], row)
-		}
-	}
-	return all
-})
-
-// inverted is the inverse of a small matrix, by Gauss and Jordan with pivots.
-func inverted(a [][]float64) [][]float64 {
-	n := len(a)
-	m := make([][]float64, n)
-	for i := range m {
-		m[i] = make([]float64, 2*n)
-		copy(m[i], a[i])
-		m[i][n+i] = 1
-	}
-	for k := range n {
-		best := k
-		for i := k; i < n; i++ {
-			if math.Abs(m[i][k]) > math.Abs(m[best][k]) {
-				best = i
-			}
-		}
-		m[k], m[best] = m[best], m[k]
-		f := 1 / m[k][k]
-		for j := range m[k] {
-			m[k][j] *= f
-		}
-		for i := range n {
-			if i != k {
-				addScaled(m[i], -m[i][k], m[k])
-			}
-		}
-	}
-	for i := range m {
-		m[i] = m[i][n:]
-	}
-	return m
 }

@@ -9,6 +9,12 @@ func (s *HullSystem) Respond(src Sources, ground bool) (y []float64) {
 
 // RespondTo is Respond into y, of length Len.
 func (s *HullSystem) RespondTo(y []float64, src Sources, ground bool) {
+	s.load(y, src, ground)
+	s.solve(y)
+}
+
+// load is the right-hand side of RespondTo.
+func (s *HullSystem) load(y []float64, src Sources, ground bool) {
 	clear(y)
 	tmp := make([]float64, s.n)
 	for j := range s.discs {
@@ -26,7 +32,6 @@ func (s *HullSystem) RespondTo(y []float64, src Sources, ground bool) {
 			}
 		}
 	}
-	s.solve(y)
 }
 
 // Incoming adds to b[i][n] (n = 0 … M_i) the coefficients of the hull's field about disc i, as of a System.

@@ -1,0 +1,80 @@
+package outline
+
+// HullPatches are pieces of the strings that take up heat on their inner side besides what the medium brings them, such as radiation, and whose
+// mean temperatures are wanted. They stand counterclockwise; where a patch does not begin at the end of the one before, parts lie between.
+type HullPatches struct {
+	A, B   []complex128 // their ends
+	Length []float64    // m
+
+	s     *HullSystem
+	first []int     // cell of each patch, and of one more
+	row   []int     // of each cell
+	share []float64 // of each cell in the length of its patch
+	gain  []float64 // what 1 W/m² into a cell adds to its row
+}
+
+// Patches divides the strings along their cells, longest telling how long a patch at z may be.
+func (s *HullSystem) Patches(longest func(z complex128) float64) *HullPatches {
+	p := &HullPatches{s: s}
+	piece := -1
+	for i := range s.panels {
+		b := &s.panels[i]
+		if b.disc >= 0 {
+			continue
+		}
+		at := cellsOf[b.p].at
+		for l := range b.p {
+			from, to := b.at(at[l]), b.at(at[l+1])
+			if k := len(p.A) - 1; b.piece != piece || dist(p.A[k], to) > longest(scale(0.5, p.A[k]+to)) {
+				if b.piece == piece {
+					from = p.B[k] // neighbours meet exactly
+				}
+				p.A, p.B, p.Length = append(p.A, from), append(p.B, to), append(p.Length, 0)
+				p.first = append(p.first, len(p.row))
+				piece = b.piece
+			}
+			k := len(p.A) - 1
+			p.B[k] = to
+			p.Length[k] += b.cell(l)
+			p.row, p.share = append(p.row, b.dof+l), append(p.share, b.cell(l))
+			p.gain = append(p.gain, 2/s.hull.MediumK*s.scaleOf(&s.pieces[b.piece]))
+		}
+	}
+	p.first = append(p.first, len(p.row))
+	for k, length := range p.Length {
+		for c := p.first[k]; c < p.first[k+1]; c++ {
+			p.share[c] /= length
+		}
+	}
+	return p
+}
+
+// RespondTo is HullSystem.RespondTo with w (W/m) going into each patch besides.
+func (p *HullPatches) RespondTo(y []float64, src Sources, ground bool, w []float64) {
+	p.s.load(y, src, ground)
+	for k, v := range w {
+		v /= p.Length[k]
+		for c := p.first[k]; c < p.first[k+1]; c++ {
+			y[p.row[c]] += v * p.gain[c]
+		}
+	}
+	p.s.solve(y)
+}
+
+// Means sets t to the mean temperatures of the patches, for the whole solution.
+func (p *HullPatches) Means(t, y []float64, src Sources) {
+	cells := p.s.Temperatures(y, src)
+	for k := range t {
+		t[k] = 0
+		for c := p.first[k]; c < p.first[k+1]; c++ {
+			t[k] += p.share[c] * cells[p.row[c]]
+		}
+	}
+}
+
+// Moved returns the patches of a system in which only discs inside have moved.
+func (p *HullPatches) Moved(s *HullSystem) *HullPatches {
+	q := *p
+	q.s = s
+	return &q
+}
