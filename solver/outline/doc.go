@@ -12,4 +12,7 @@
 // conductor comes out of the same densities. At fineness 1 the wall adds a few mK to rises of 20–50 K, 0.7 up to 0.04 K at a steel
 // wall, 1.5 under 1 mK. Apart from that the answer is as good as the parts' orders: a part that touches a metal wall needs as many
 // harmonics as one that touches its own mirror image, that is, about twice what a plastic wall asks for.
+//
+// Shaped solves sections of any convex contours in the same way: metals, insulations, jackets and walls of arcs and straight pieces, each face a
+// density on bends. Halving bends where a density is not resolved brings the reference sections within 1 mK.
 package outline

@@ -83,7 +83,7 @@ func (f *potential) legendreQ(w, q0 complex128, n int) {
 }
 
 // Coefficients of the recurrence (k+1) Q_{k+1} = (2k+1) w Q_k − k Q_{k−1}, solved for either end.
-var up, over, down, under [maxModes + 10]float64
+var up, over, down, under [maxTerms + 8]float64
 
 func init() {
 	for k := 1; k < len(up); k++ {

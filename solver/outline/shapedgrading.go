@@ -1,0 +1,109 @@
+package outline
+
+import (
+	"math"
+)
+
+// How contours are cut: first by their own form, then halved where the densities are not resolved.
+const (
+	maxRounds   = 7
+	maxUnknowns = 3500
+	looseness   = 1e-3 // of a bend's last modes, as a share of the heat, at fineness 1
+)
+
+// begin cuts every contour.
+func (s *Shaped) begin(fineness float64) {
+	for i := range s.contours {
+		l := s.contours[i].Loop
+		longest := l.Perimeter() / 8
+		for j := range l {
+			st := &l[j]
+			n := max(1, int(math.Ceil(st.span()/(2*maxBend)-1e-9)), int(math.Ceil(st.Length()/longest-1e-9)))
+			if st.R == 0 {
+				n = max(2, n)
+			}
+			for k := range n {
+				s.bends = append(s.bends, newBend(st, i, j, float64(k)/float64(n), float64(k+1)/float64(n)))
+			}
+		}
+	}
+}
+
+// refine halves the bends whose last modes are not small for some heat; false if there are none.
+func (s *Shaped) refine(fineness float64) bool {
+	tail := make([]float64, len(s.bends))
+	for _, y := range s.samples() {
+		whole := 0.0
+		for i := range s.bends {
+			b := &s.bends[i]
+			whole += math.Abs(y[b.dof]) * b.half
+		}
+		if !(whole > 0) {
+			continue
+		}
+		for i := range s.bends {
+			b := &s.bends[i]
+			d := y[b.dof:][:modes]
+			t := (math.Abs(d[modes-1]) + math.Abs(d[modes-2])/4) * b.half / whole
+			tail[i] = math.Max(tail[i], t)
+		}
+	}
+	limit := looseness / math.Pow(fineness, 4)
+	var out []bend
+	s.loose = 0
+	for i := range s.bends {
+		b := &s.bends[i]
+		s.loose = math.Max(s.loose, tail[i])
+		if tail[i] < limit {
+			out = append(out, *b)
+			continue
+		}
+		st, mid := &s.contours[b.contour].Loop[b.stroke], (b.lo+b.hi)/2
+		out = append(out, newBend(st, b.contour, b.stroke, b.lo, mid), newBend(st, b.contour, b.stroke, mid, b.hi))
+	}
+	if len(out) == len(s.bends) {
+		return false
+	}
+	s.bends = out
+	return true
+}
+
+// samples are the solutions for 1 W/m in each metal and for the drive of the surroundings.
+func (s *Shaped) samples() [][]float64 {
+	var all [][]float64
+	heats := make([]float64, len(s.contours))
+	for i := range s.contours {
+		if s.contours[i].metal() {
+			heats[i] = 1
+			all = append(all, s.Respond(heats, false))
+			heats[i] = 0
+		}
+	}
+	if s.driven() {
+		all = append(all, s.Respond(heats, true))
+	}
+	return all
+}
+
+// driven tells whether heat flows without any metal's heat.
+func (s *Shaped) driven() bool {
+	first := math.NaN()
+	differs := func(t float64) bool {
+		if math.IsNaN(first) {
+			first = t
+		}
+		return t != first
+	}
+	for i := range s.contours {
+		c := &s.contours[i]
+		if c.Held && differs(c.Fixed) {
+			return true
+		}
+		for _, d := range c.Sides {
+			if d.Kind != Insulated && differs(d.Temp) {
+				return true
+			}
+		}
+	}
+	return false
+}
