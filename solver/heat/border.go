@@ -33,6 +33,8 @@ type bound struct {
 	mid      complex128 // of a square that covers everything
 	half     float64
 	field    func() pointField
+	arcs     []Arc                 // of a hull
+	high     func() [][]complex128 // of a hull: what comes to the pieces beyond their orders
 }
 
 // pointField is a border's own field, NaN outside.

@@ -6,6 +6,7 @@ const (
 	badNumber   = "heat: a length, conductivity or temperature of the problem is not a usable number"
 	badOrder    = "heat: a part lies in something that is no cable before it"
 	badBare     = "heat: a bare part needs exactly one part of the top level"
+	badHull     = "heat: a hull needs a part of the top level and a way to wind the string"
 	badHeats    = "heat: one heat per part is needed"
 	badMove     = "heat: only a part of the top level can be moved"
 	badFilm     = "heat: the film must be positive or +Inf"
@@ -48,6 +49,9 @@ func (p *Problem) check() {
 	}
 	if p.Wall.Shape == BarePart && tops != 1 {
 		panic(badBare)
+	}
+	if p.Wall.Shape == Hull && (tops == 0 || p.Wall.Taut == nil) {
+		panic(badHull)
 	}
 	p.Wall.check()
 }

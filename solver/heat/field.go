@@ -46,13 +46,14 @@ func (s *state) chart() *charts {
 		c := &s.charts
 		drawn := make([]float64, len(s.pieces))
 		c.layers = make([]layers, len(s.pieces))
-		for i := range s.pieces {
-			p := &s.pieces[i]
+		cloud, pieces := s.near()
+		for i := range pieces {
+			p := &pieces[i]
 			drawn[i] = p.drawn
 			c.layers[i] = p.layers()
 		}
 		if s.border != nil {
-			c.tree, c.border = harmonic.NewTree(&s.cloud, drawn, s.border.mid, s.border.half), s.border.field()
+			c.tree, c.border = harmonic.NewTree(cloud, drawn, s.border.mid, s.border.half), s.border.field()
 			return
 		}
 		c.wall = s.wallLayers()

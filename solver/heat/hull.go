@@ -3,6 +3,7 @@ package heat
 import (
 	"math"
 
+	"packrise/solver/harmonic"
 	"packrise/solver/outline"
 )
 
@@ -48,8 +49,17 @@ func (h *hullWall) gap(*piece) float64 { return math.Inf(1) }
 
 func (h *hullWall) metal() bool { return false }
 
-// order asks for nothing: what a piece sends straight back to the hull beside it is reckoned to all orders.
-func (h *hullWall) order(*region, *piece, float64, int) int { return 0 }
+// order is the fewest harmonics in a bundle, whatever the medium: what a piece sends back of higher ones is reckoned to all orders, but only to
+// the hull beside it.
+func (h *hullWall) order(_ *region, _ *piece, f float64, _ int) int {
+	switch {
+	case f < 1:
+		return 10
+	case f > 1:
+		return 14
+	}
+	return 12
+}
 
 // maxMirror bounds the harmonics that a part on the hull sends straight back.
 const maxMirror = 400
@@ -70,30 +80,70 @@ func (g *region) mirror(i int) outline.Mirror {
 	return m
 }
 
+// shape is the hull round the pieces.
+func (h *hullWall) shape() outline.Hull {
+	s := outline.Hull{MediumK: h.k}
+	for _, a := range h.arcs {
+		s.Arcs = append(s.Arcs, outline.Arc{Disc: a.Disc, From: a.From, To: a.To, Bare: h.out, String: h.out})
+	}
+	return s
+}
+
 // write winds the string and discretises the hull.
 func (h *hullWall) write(g *region) {
 	h.collect(g)
 	h.wrap(g)
-	shape := outline.Hull{MediumK: h.k}
-	for _, a := range h.arcs {
-		shape.Arcs = append(shape.Arcs, outline.Arc{Disc: a.Disc, From: a.From, To: a.To, Bare: h.out, String: h.out})
-	}
 	mirrors := make([]outline.Mirror, len(g.pieces))
 	for i := range mirrors {
 		mirrors[i] = g.mirror(i)
 	}
-	h.sys = outline.NewHull(shape, h.discs, mirrors, h.fineness)
+	h.sys = outline.NewHull(h.shape(), h.discs, mirrors, h.fineness)
 	h.begin(h.sys)
 }
 
-// move is always false: the string is wound anew.
-func (h *hullWall) move(*region, int) bool { return false }
+// move follows a piece inside the bundle; where the string has to be wound anew it is false. Results that are out keep their hull.
+func (h *hullWall) move(g *region, i int) bool {
+	h.wrap(g)
+	if !h.sys.Fits(h.shape().Arcs) {
+		return false
+	}
+	sys := h.sys.Moved(i, g.pieces[i].at)
+	if sys == nil {
+		return false
+	}
+	h.sys, h.with = sys, sys
+	h.discs = append([]outline.Disc(nil), h.discs...)
+	h.discs[i].C = g.pieces[i].at
+	return true
+}
+
+// outside takes other films and temperatures.
+func (h *hullWall) outside(w *Wall) {
+	h.out = outline.Outside{Film: w.Film, Temp: w.Ambient}
+	if h.sys != nil {
+		h.sys = h.sys.Outside(h.shape().Arcs)
+		h.with = h.sys
+	}
+}
+
+// highest is the harmonic up to which the field near the hull is drawn.
+const highest = 64
 
 // solved finds the hull's answer to the whole solution, ground included, and adds the means that it sends back.
 func (h *hullWall) solved(g *region, charge, v, mean []float64) *bound {
 	s := h.answer(g, charge, v, mean)
-	hot, average, out := h.sys.Faces(h.sys.Temperatures(s.y, h.src))
-	s.hot, s.mean, s.released = []float64{hot}, average, out
+	y, sys := s.y, h.sys
+	hot, average, out := sys.Faces(sys.Temperatures(y, h.src))
+	s.hot, s.mean, s.released, s.arcs = []float64{hot}, average, out, h.arcs
+	lo, hi := complex(math.Inf(1), math.Inf(1)), complex(math.Inf(-1), math.Inf(-1))
+	for i := range g.pieces {
+		c := &g.pieces[i]
+		lo = complex(math.Min(real(lo), real(c.at)-c.drawn), math.Min(imag(lo), imag(c.at)-c.drawn))
+		hi = complex(math.Max(real(hi), real(c.at)+c.drawn), math.Max(imag(hi), imag(c.at)+c.drawn))
+	}
+	s.mid, s.half = (lo+hi)/2, math.Max(real(hi-lo), imag(hi-lo))/2
+	s.field = func() pointField { return sys.Field(y) }
+	s.high = func() [][]complex128 { return sys.High(y, highest) }
 	return s
 }
 
@@ -101,4 +151,47 @@ func (h *hullWall) fork() border {
 	f := *h
 	f.exchange = h.exchange.fork()
 	return &f
+}
+
+// exposed raises the hottest temperature of the outside to that of the pieces where they are exposed.
+func (s *state) exposed(hot float64) float64 {
+	for _, a := range s.border.arcs {
+		p := &s.pieces[a.Disc]
+		x := make([]complex128, len(p.b))
+		for n, b := range p.b {
+			port := p.stack.Port(n + 1)
+			x[n] = b*complex(1+port.T, 0) + p.from(n)*complex(port.Tau, 0)
+		}
+		steps := max(4, int((a.To-a.From)/(2*math.Pi)*rimPoints))
+		for i := range steps + 1 {
+			sin, cos := math.Sincos(a.From + (a.To-a.From)*float64(i)/float64(steps))
+			hot = math.Max(hot, p.mean+harmonic.Sum(x, complex(cos, sin)))
+		}
+	}
+	return hot
+}
+
+// near adds to the cloud and the pieces beside a hull what they send straight back to it, of harmonics that are not solved for.
+func (s *state) near() (*harmonic.Cloud, []pieceState) {
+	if s.border == nil || s.border.high == nil {
+		return &s.cloud, s.pieces
+	}
+	c := s.cloud
+	c.D = append([][]complex128(nil), c.D...)
+	pieces := make([]pieceState, len(s.pieces))
+	for i, high := range s.border.high() {
+		p := &s.pieces[i]
+		pieces[i] = pieceState{piece: p.piece, mean: p.mean, q: p.q, b: p.b, sent: p.sent, inside: p.inside}
+		m := len(c.D[i])
+		if len(high) == 0 || m < len(p.b) {
+			continue
+		}
+		c.D[i] = append([]complex128(nil), c.D[i]...)
+		pieces[i].b = append(append([]complex128(nil), p.b...), high...)
+		for n, b := range high {
+			t := complex(p.stack.Port(m+n+1).T, 0)
+			c.D[i] = append(c.D[i], t*complex(real(b), -imag(b)))
+		}
+	}
+	return &c, pieces
 }

@@ -164,13 +164,18 @@ func (m *Model) Solve(ctx context.Context, heats []float64) *Result {
 	if !m.prepare(ctx) {
 		return m.blank(Cancelled)
 	}
+	return m.solve(ctx, m.metals(heats))
+}
+
+// metals lists heats by source, 0 for bores.
+func (m *Model) metals(heats []float64) []float64 {
 	q := make([]float64, len(m.top.sources))
 	for k, s := range m.top.sources {
 		if m.p.Parts[s.part].Core == Metal {
 			q[k] = heats[s.part]
 		}
 	}
-	return m.solve(ctx, q)
+	return q
 }
 
 func (m *Model) heats(heats []float64) []float64 {
@@ -252,6 +257,9 @@ func (m *Model) result(s *state) *Result {
 func (m *Model) readWall(r *Result, s *state) {
 	if s.border != nil {
 		r.WallMax, r.WallMean, r.SideOut, r.Released = s.border.hot, s.border.mean, s.border.sides, s.border.released
+		if s.border.arcs != nil {
+			r.WallMax[0] = s.exposed(r.WallMax[0])
+		}
 		return
 	}
 	r.WallMax, r.WallMean, r.Released = s.wallFaces(&m.p.Wall)

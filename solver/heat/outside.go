@@ -9,21 +9,26 @@ func (m *Model) Outside(w Wall) {
 	if w.Shape != old.Shape || w.R != old.R || w.W != old.W || w.H != old.H || len(w.Rings) != len(old.Rings) {
 		panic(badOutside)
 	}
-	w.Rings = old.Rings
+	w.Rings, w.Taut = old.Rings, old.Taut
 	w.check()
 	m.p.Wall = w
 	m.forget()
 	switch {
 	case m.top == nil: // a bare part reads the wall each time
+	case w.Shape == Hull:
+		m.top.border.(*hullWall).outside(&m.p.Wall)
 	case m.top.border != nil:
 		factor, _, _ := m.set.Accuracy.settings()
 		m.top.border = newRectWall(&m.p, factor)
 		if m.ready {
 			m.top.border.write(m.top)
 		}
+		m.dim()
 	default:
 		m.top.wall.Outer = outerWall(m.top.k, m.top.wall.R, nil, w.Film).Outer
-		m.ready = m.ready && m.top.reflectAnew()
+		if m.ready = m.ready && m.top.reflectAnew(); m.ready && m.glow != nil {
+			m.glow.top.fit()
+		}
 	}
 }
 
