@@ -53,6 +53,7 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 		r.PartErrorK[i] = e
 	}
 	m.local(r, s)
+	r.MetalGap = s.metalGap()
 	r.ErrorK = 0
 	for _, v := range r.PartErrorK {
 		r.ErrorK = math.Max(r.ErrorK, v)

@@ -76,6 +76,16 @@ func TestHardSections(t *testing.T) {
 		if e := r.Released - r.Generated; math.Abs(e) > 1e-6*r.Generated {
 			t.Errorf("%s: balance off by %g", name, e)
 		}
+		switch name {
+		case "bare beside bare", "bare on steel", "foil beside foil", "no layers, bare, fixed wall":
+			if r.MetalGap != 10e-6 {
+				t.Errorf("%s: held %g m apart", name, r.MetalGap)
+			}
+		default:
+			if r.MetalGap != 0 {
+				t.Errorf("%s: held %g m apart", name, r.MetalGap)
+			}
+		}
 		if !(rise > 0 && rise < 200) {
 			t.Errorf("%s: rise %g K", name, rise)
 		}

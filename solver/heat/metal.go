@@ -41,3 +41,14 @@ func (g *region) wallGap(c *piece) float64 {
 	}
 	return g.r - math.Hypot(real(c.at), imag(c.at)) - c.loose
 }
+
+// metalGap is metalGap if any radius was reduced for it, in the region or in a cable, else 0.
+func (s *state) metalGap() float64 {
+	for i := range s.pieces {
+		p := &s.pieces[i]
+		if p.bare && p.piece.a < p.loose || p.inside != nil && p.inside.metalGap() > 0 {
+			return metalGap
+		}
+	}
+	return 0
+}

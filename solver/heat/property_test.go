@@ -110,7 +110,7 @@ func TestInfluenceIsSymmetric(t *testing.T) {
 	})
 }
 
-// One load is the influence matrix times the heats.
+// One load is the influence matrix times the heats, but for what averaging the asymmetry of a rectangle's panels changes.
 func TestInfluenceGivesTheLoad(t *testing.T) {
 	forRandom(t, 6, func(t *testing.T, r *rand.Rand, p heat.Problem) {
 		m := heat.New(p, heat.Settings{})
@@ -124,7 +124,7 @@ func TestInfluenceGivesTheLoad(t *testing.T) {
 			for j, f := range row {
 				sum += f * p.Parts[j].Heat
 			}
-			if math.Abs(sum-rise) > 2e-5*rise {
+			if math.Abs(sum-rise) > 1e-4*rise {
 				t.Errorf("part %d: %.7f K by influence, %.7f K by one load", i, sum, rise)
 			}
 		}

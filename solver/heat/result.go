@@ -15,8 +15,10 @@ type Result struct {
 	Status     Status
 	Unknowns   int     // real unknowns
 	Steps      int     // of the iteration
+	Frozen     bool    // radiation as it was before a part moved the last millimetre; only of a Draft
 	ErrorK     float64 // estimate of the largest error of any Core temperature
 	PartErrorK []float64
+	MetalGap   float64 // m: how far bare metal was held from bare metal that it touches; 0 where none does
 	Field      Field
 }
 
