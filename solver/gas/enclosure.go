@@ -161,8 +161,18 @@ var nodes = [...][][2]float64{
 func scale(f float64, z complex128) complex128 { return complex(f*real(z), f*imag(z)) }
 func size(z complex128) float64                { return math.Sqrt(real(z)*real(z) + imag(z)*imag(z)) }
 
-// Same tells whether disc i lies where d does and has the same patches.
-func (e *Enclosure) Same(i int, d *Disc) bool {
-	o := &e.discs[i]
-	return o.C == d.C && o.R == d.R && slices.Equal(o.Cuts, d.Cuts)
+// Centre is that of disc i.
+func (e *Enclosure) Centre(i int) complex128 { return e.discs[i].C }
+
+// Alike tells whether the enclosure is that of the discs, wherever they are, and the outline, looked at from as many points.
+func (e *Enclosure) Alike(discs []Disc, out Outline, points int) bool {
+	if len(discs) != len(e.discs) || out.R != e.out.R || points != e.points || !slices.Equal(out.Segments, e.out.Segments) {
+		return false
+	}
+	for i := range discs {
+		if o := &e.discs[i]; o.R != discs[i].R || !slices.Equal(o.Cuts, discs[i].Cuts) {
+			return false
+		}
+	}
+	return true
 }

@@ -77,7 +77,7 @@ func (m *Model) coefficientsBorder(ctx context.Context) ([][]float64, bool) {
 }
 
 // Influence returns K[i][j] in K per W/m: the rise of part i's Core temperature for 1 W/m made in part j; rows and columns of parts that
-// aren't Metal are nil.
+// aren't Metal are nil. Where surfaces radiate it is the tangent at the last solution, or at the Problem's own heats if there is none.
 func (m *Model) Influence(ctx context.Context) ([][]float64, Status) {
 	out := make([][]float64, len(m.p.Parts))
 	if m.top == nil {
@@ -108,6 +108,11 @@ func (m *Model) matrix(ctx context.Context) ([][]float64, bool) {
 	}
 	if !m.prepare(ctx) {
 		return nil, false
+	}
+	if m.top.opens() {
+		k, ok := m.tangent(ctx)
+		m.kept = k
+		return k, ok
 	}
 	k, ok := m.coefficients(ctx)
 	if ok {

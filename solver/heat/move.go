@@ -33,6 +33,7 @@ func (m *Model) Move(part int, x, y float64) {
 		m.ready = false // a cable needs more harmonics: its inside is solved anew
 	}
 	m.carry(old)
+	m.glowOn(i, old)
 }
 
 // carry takes what is known over to new offsets, for a warm start.

@@ -39,18 +39,27 @@ const (
 
 // radiant are the surfaces of one region that radiate to each other through its gas.
 type radiant struct {
-	ex    *gas.Exchange
-	rims  []rim // of the pieces
-	wall  rim   // of a round wall
-	sides *sides
-	at    []complex128 // where the pieces were when they last looked about
-	out   gas.Outline
-	zero  float64 // absolute temperature of the common zero
-	stirs bool
-	press float64   // Pa
-	net   []float64 // room for emissions
+	discs  []gas.Disc
+	out    gas.Outline
+	points int
+	eps    []float64 // emissivity of each patch
+	area   []float64 // m² per metre of run
+	first  []int     // patch of each piece, of the wall, and their number
+	rims   []rim     // of the pieces
+	wall   rim       // of a round wall
+	sides  *sides    // of a rectangle
+	ends   []float64 // m along a rectangle's wall
+	zero   float64   // absolute temperature of the common zero
+	stirs  bool
+	press  float64 // Pa
+
+	ex    *gas.Exchange // nil until the surfaces have looked about
+	spare *gas.Exchange // one that may be that of the same places
+	at    []complex128  // where the pieces were when they looked about, nil before
+
 	base  []float64 // K: patch temperatures that emissions are taken about
 	still []float64 // W/m: emissions there
+	net   []float64 // room for emissions
 	warm  []float64 // room for temperatures
 	nusselt
 }
@@ -64,6 +73,7 @@ type nusselt struct {
 // rim is a circle whose patches emit, in harmonics.
 type rim struct {
 	from, n   int       // patches
+	cuts      []float64 // angles of their ends
 	harmonics int       // that they are told apart in
 	rows      []float64 // per patch Re and Im of the mean of e^{inθ}/√n over it
 }
@@ -75,7 +85,7 @@ func newRim(from int, cuts []float64, most int) rim {
 	for k := 1; k < len(cuts); k++ {
 		narrow = math.Min(narrow, cuts[k]-cuts[k-1])
 	}
-	r := rim{from: from, n: len(cuts) - 1}
+	r := rim{from: from, n: len(cuts) - 1, cuts: cuts}
 	r.harmonics = min(max(int(math.Round(math.Pi/narrow))-1, 1), most)
 	r.rows = make([]float64, 2*r.n*r.harmonics)
 	for k := range r.n {
@@ -111,7 +121,7 @@ func (r *rim) feel(t, tau []float64, mean float64) {
 	}
 }
 
-// newRadiant divides the surfaces of region g and lets them look at each other. What old knows is kept if it is still so.
+// newRadiant divides the surfaces of region g. What an old one, of the same or another region, saw is kept if it is still so.
 func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 	part, turn, points := m.set.Accuracy.grain()
 	grain := gas.Grain{PerTurn: part, Turn: turn}
@@ -119,54 +129,50 @@ func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 		c := &g.pieces[i]
 		grain.Discs = append(grain.Discs, gas.Disc{C: c.at, R: c.drawn})
 	}
-	r := &radiant{zero: m.p.ZeroK, press: m.p.Pressure, nusselt: nusselt{1, true}}
+	r := &radiant{zero: m.p.ZeroK, press: m.p.Pressure, points: points, stirs: g.filling == Air, nusselt: nusselt{1, true}}
 	if r.press == 0 {
 		r.press = standardPressure
 	}
-	discs := make([]gas.Disc, len(grain.Discs))
-	copy(discs, grain.Discs)
-	n := 0
-	for i := range discs {
-		discs[i].Cuts = grain.Cuts(i)
-		r.rims = append(r.rims, newRim(n, discs[i].Cuts, maxRim))
-		r.at = append(r.at, discs[i].C)
-		n += r.rims[i].n
+	r.discs = append(r.discs, grain.Discs...)
+	for i := range r.discs {
+		d := &r.discs[i]
+		d.Cuts = grain.Cuts(i)
+		r.rims = append(r.rims, newRim(r.add(d.R, d.Cuts), d.Cuts, maxRim))
 	}
 	if g.border == nil {
 		cuts := grain.Around(g.wall.R)
 		r.out = gas.Ring(g.wall.R, cuts)
-		r.wall = newRim(n, cuts, maxRing)
+		r.wall = newRim(r.add(g.wall.R, cuts), cuts, maxRing)
 	} else {
 		r.sides = newSides(g.border.(*rectWall), &grain)
 		r.out = r.sides.outline()
+		r.ends = []float64{0}
+		for k, l := range r.sides.patch.Length {
+			r.ends = append(r.ends, r.ends[k]+l)
+		}
+		r.add(1, r.ends)
 	}
-	if old != nil && old.same(discs, &r.out) {
-		r.ex = gas.NewExchange(old.ex.Enclosure, m.emissivities(g, r))
-	} else {
-		r.ex = gas.NewExchange(gas.NewEnclosure(discs, r.out, points), m.emissivities(g, r))
+	r.first = append(r.first, len(r.area))
+	for _, v := range []*[]float64{&r.base, &r.still, &r.net, &r.warm} {
+		*v = make([]float64, len(r.area))
 	}
-	for _, v := range []*[]float64{&r.net, &r.base, &r.still, &r.warm} {
-		*v = make([]float64, r.ex.Len())
+	r.eps = m.emissivities(g, r)
+	if old != nil {
+		if r.spare = old.ex; r.spare == nil {
+			r.spare = old.spare
+		}
 	}
 	return r
 }
 
-// same tells whether an old enclosure is that of the discs and the outline.
-func (r *radiant) same(discs []gas.Disc, out *gas.Outline) bool {
-	if len(discs) != len(r.at) || len(out.Segments) != len(r.out.Segments) || out.R != r.out.R {
-		return false
+// add counts the patches between cuts on a circle of radius r, and returns the first of them.
+func (r *radiant) add(radius float64, cuts []float64) (first int) {
+	first = len(r.area)
+	r.first = append(r.first, first)
+	for k := 1; k < len(cuts); k++ {
+		r.area = append(r.area, radius*(cuts[k]-cuts[k-1]))
 	}
-	for k, s := range out.Segments {
-		if s != r.out.Segments[k] {
-			return false
-		}
-	}
-	for i := range discs {
-		if !r.ex.Same(i, &discs[i]) {
-			return false
-		}
-	}
-	return true
+	return first
 }
 
 // emissivities lists those of the patches of region g.
@@ -187,18 +193,35 @@ func (m *Model) emissivities(g *region, r *radiant) []float64 {
 	return e
 }
 
-// look lets the pieces that have moved look about anew.
+// look lets the pieces look about, all of them or those that have moved.
 func (r *radiant) look(g *region) {
-	for i := range g.pieces {
-		if at := g.pieces[i].at; at != r.at[i] {
-			r.ex.Move(i, at)
-			r.at[i] = at
+	if r.ex == nil {
+		if r.spare != nil && r.spare.Alike(r.discs, r.out, r.points) {
+			r.ex = gas.NewExchange(r.spare.Enclosure, r.eps)
+		} else {
+			for i := range g.pieces {
+				r.discs[i].C = g.pieces[i].at
+			}
+			r.ex = gas.NewExchange(gas.NewEnclosure(r.discs, r.out, r.points), r.eps)
 		}
+		r.spare = nil
+	}
+	for i := range g.pieces {
+		if at := g.pieces[i].at; at != r.ex.Centre(i) {
+			r.ex.Move(i, at)
+		}
+	}
+	r.at = r.at[:0]
+	for i := range g.pieces {
+		r.at = append(r.at, g.pieces[i].at)
 	}
 }
 
-// strays is how far any piece has moved since it looked about.
+// strays is how far any piece has moved since it looked about; +Inf if it has not.
 func (r *radiant) strays(g *region) float64 {
+	if len(r.at) != len(g.pieces) {
+		return math.Inf(1)
+	}
 	far := 0.0
 	for i := range g.pieces {
 		far = math.Max(far, dist(g.pieces[i].at, r.at[i]))

@@ -5,8 +5,7 @@ import (
 )
 
 // coupled is conduction and radiation together: one system for all regions that radiate and those that they lie in. Unknowns z are first the
-// amplitudes of all knots, then the heats of bores that are held at a temperature, then the emissions of patches: so that conduction
-// alone, the emissions being what they are, is the front part.
+// amplitudes of all knots, then the heats of bores that are held at a temperature, then the emissions of patches.
 type coupled struct {
 	m    *Model
 	top  *knot
@@ -16,9 +15,9 @@ type coupled struct {
 	grip []float64
 
 	q     []float64 // by source, held bores included
+	heats []float64 // by source, of the last solution
+	cores []float64 // by source, of the last solution
 	warm  bool      // z is the solution of something alike
-	fresh bool      // the patches see each other as the pieces lie
-	heat  float64   // W/m at which the emissions were found
 }
 
 // newCoupled prepares the model's system, which is written; old may be that of an older model or section.
@@ -30,10 +29,13 @@ func (m *Model) newCoupled(old *coupled) *coupled {
 	}
 	c.top = m.newKnot(m.top, before)
 	c.arrange()
-	c.fresh = true
-	if old != nil && len(old.z) == len(c.z) && old.emit == c.emit {
-		copy(c.z, old.z)
-		c.warm, c.heat = old.warm, old.heat
+	if old != nil && c.top.inherit(old.top, c.z, old.z) {
+		c.warm = old.warm
+		if len(c.grip) == len(old.grip) {
+			for i, r := range c.grip {
+				c.z[c.held+i] = old.z[old.held+i] / old.grip[i] * r
+			}
+		}
 	}
 	return c
 }
@@ -56,26 +58,22 @@ func (c *coupled) arrange() {
 	}
 }
 
-// follow takes over what has moved and which orders have grown; x is the new start of the amplitudes of the top level, of the new orders.
-func (c *coupled) follow(x []float64) {
+// follow takes over what has moved and which orders have grown: the unknowns of the top level began at old and begin at fresh.
+func (c *coupled) follow(old, fresh []int) {
 	c.top.charges.Follow()
-	old, n := c.z, c.top.g.sys.Len()
-	was := len(c.top.flow.X)
-	if n != was {
+	if n := len(fresh) - 1; fresh[n] != old[n] {
+		was, z := c.z, stretch(c.z[:old[n]], old, fresh)
 		c.top.fit()
 		c.arrange()
-		copy(c.z, x)
-		copy(c.z[n:], old[was:])
+		copy(c.z, z)
+		copy(c.z[fresh[n]:], was[old[n]:])
 	}
-	c.fresh = false
 }
 
-// pass sends and receives once. ground tells whether sides, ambient and given heats count, or only what the unknowns change.
+// pass sends and receives once, for given heats by source (nil for none). ground tells whether sides and ambient count, or only changes.
 func (c *coupled) pass(z, heats []float64, ground bool) {
 	clear(c.q)
-	if ground {
-		copy(c.q, heats)
-	}
+	copy(c.q, heats)
 	for i, s := range c.m.held {
 		c.q[s] = z[c.held+i] / c.grip[i]
 	}

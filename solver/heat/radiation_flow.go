@@ -59,7 +59,7 @@ func (k *knot) shine(z []float64) {
 		}
 	}
 	if k.rad.sides != nil {
-		from, _ := k.rad.ex.Patches(len(k.bonds))
+		from := k.rad.first[len(k.bonds)]
 		for p := range k.rad.sides.taken {
 			k.rad.sides.taken[p] = -k.emission[from+p]
 		}
@@ -136,7 +136,7 @@ func (k *knot) feel() {
 		k.rad.rims[i].feel(k.t, tau, k.level+f.Mean[i])
 	}
 	if k.rad.sides != nil {
-		from, to := k.rad.ex.Patches(len(k.bonds))
+		from, to := k.rad.first[len(k.bonds)], len(k.rad.area)
 		k.rad.sides.means(k.t[from:to])
 		return
 	}

@@ -52,8 +52,7 @@ func (m *Model) newKnot(g *region, old *knot) *knot {
 			before = old.rad
 		}
 		k.rad = m.newRadiant(g, before)
-		k.rad.stirs = g.filling == Air
-		k.emission, k.t = make([]float64, k.rad.ex.Len()), make([]float64, k.rad.ex.Len())
+		k.emission, k.t = make([]float64, len(k.rad.area)), make([]float64, len(k.rad.area))
 		k.absorbed = make([]float64, 2*k.rad.wall.harmonics)
 	}
 	k.bonds = make([]bond, len(g.pieces))
@@ -117,18 +116,98 @@ func (k *knot) units() {
 	if k.rad == nil {
 		return
 	}
-	ex := k.rad.ex
-	k.unit = make([]float64, ex.Len())
-	for i := range len(k.bonds) + 1 {
-		from, to := ex.Patches(i)
+	r := k.rad
+	k.unit = make([]float64, len(r.area))
+	for i := range len(r.first) - 1 {
 		whole := 0.0
-		for p := from; p < to; p++ {
-			whole += ex.Area(p)
+		for p := r.first[i]; p < r.first[i+1]; p++ {
+			whole += r.area[p]
 		}
-		for p := from; p < to; p++ {
-			k.unit[p] = math.Sqrt(ex.Area(p)/whole) / k.g.c2()
+		for p := r.first[i]; p < r.first[i+1]; p++ {
+			k.unit[p] = math.Sqrt(r.area[p]/whole) / k.g.c2()
 		}
 	}
+}
+
+// inherit takes over amplitudes and emissions from a knot of the same pieces, whose unknowns are old; false if it is none.
+func (k *knot) inherit(o *knot, z, old []float64) bool {
+	if len(o.bonds) != len(k.bonds) || (o.rad == nil) != (k.rad == nil) {
+		return false
+	}
+	for i := range k.bonds {
+		b, a := &k.bonds[i], &o.bonds[i]
+		if b.first != a.first || (b.inside == nil) != (a.inside == nil) {
+			return false
+		}
+		x, y := z[k.x0+k.g.sys.Offset(i):][:len(b.c)], old[o.x0+o.offset(i):][:len(a.c)]
+		copy(x, y)
+		if b.inside != nil && !b.inside.inherit(a.inside, z, old) {
+			return false
+		}
+	}
+	if k.rad == nil {
+		return true
+	}
+	for i := range len(k.bonds) + 1 {
+		from := k.rad.first[i]
+		was := o.rad.emissions(i, o, old)
+		for p, v := range spread(o.rad.cuts(i), was, k.rad.cuts(i)) {
+			z[k.e0+from+p] = v / k.unit[from+p]
+		}
+	}
+	return true
+}
+
+// offset is where the unknowns of piece i began when the knot was last fitted.
+func (k *knot) offset(i int) int {
+	n := 0
+	for j := range i {
+		n += len(k.bonds[j].c)
+	}
+	return n
+}
+
+// cuts are the ends of the patches of piece i, or of the wall.
+func (r *radiant) cuts(i int) []float64 {
+	switch {
+	case i < len(r.discs):
+		return r.discs[i].Cuts
+	case r.sides != nil:
+		return r.ends
+	}
+	return r.wall.cuts
+}
+
+// emissions are those (W/m) of piece i at unknowns z of knot k.
+func (r *radiant) emissions(i int, k *knot, z []float64) []float64 {
+	e := make([]float64, r.first[i+1]-r.first[i])
+	for p := range e {
+		e[p] = k.unit[r.first[i]+p] * z[k.e0+r.first[i]+p]
+	}
+	return e
+}
+
+// spread shares what lies evenly between each two of the old cuts out between new ones of the same range.
+func spread(old, what, cuts []float64) []float64 {
+	out := make([]float64, len(cuts)-1)
+	end := old[len(old)-1] / cuts[len(cuts)-1] // lengths may differ by rounding
+	j := 0
+	for k := range out {
+		a, b := cuts[k]*end, cuts[k+1]*end
+		for j > 0 && old[j] > a {
+			j--
+		}
+		for ; j < len(what); j++ {
+			lo, hi := math.Max(a, old[j]), math.Min(b, old[j+1])
+			if hi > lo {
+				out[k] += what[j] * (hi - lo) / (old[j+1] - old[j])
+			}
+			if old[j+1] >= b {
+				break
+			}
+		}
+	}
+	return out
 }
 
 // number gives the unknowns their places: all amplitudes first.

@@ -8,18 +8,18 @@ import (
 // sides are the patches of a rectangle's inside.
 type sides struct {
 	wall  *rectWall
+	sys   *outline.System // that the patches belong to
 	patch *outline.Patches
 	taken []float64 // W/m that each patch takes up
-	t     []float64
 }
 
 // newSides divides the inside of a wall that is written.
 func newSides(w *rectWall, grain *gas.Grain) *sides {
 	usual := 2 * (w.rect.W + w.rect.H) / grain.Turn
-	s := &sides{wall: w}
+	s := &sides{wall: w, sys: w.sys}
 	s.patch = w.sys.Patches(func(z complex128) float64 { return grain.Longest(z, usual, -1) })
 	n := len(s.patch.Length)
-	s.taken, s.t = make([]float64, n), make([]float64, n)
+	s.taken = make([]float64, n)
 	return s
 }
 
@@ -55,4 +55,13 @@ func (s *sides) bound() *bound {
 		b.released += v
 	}
 	return b
+}
+
+// follow takes over that piece i has moved; false if the wall has been written again since.
+func (s *sides) follow(i int) bool {
+	if s.sys != s.wall.sys {
+		return false
+	}
+	s.patch.Follow(i)
+	return true
 }

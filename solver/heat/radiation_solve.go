@@ -3,6 +3,7 @@ package heat
 import (
 	"context"
 	"math"
+	"slices"
 )
 
 // Newton's method: at most so many rounds; in each the linear system is solved until the residual has come down by rough, or is well within
@@ -10,42 +11,52 @@ import (
 const (
 	newtonRounds = 16
 	newtonRough  = 0.02
-	guessRise    = 15 // K over the wall: where surfaces begin
+	guessRise    = 15   // K over the wall: where surfaces begin
+	leastDrive   = 0.01 // K: what a section without heat is driven by, so that rounding is no residual
 )
 
-// solve finds the unknowns for given heats of the metals, by source; frozen leaves the emissions as they are.
-func (c *coupled) solve(ctx context.Context, heats []float64, frozen bool, tol float64) (steps int, status Status) {
-	n := len(c.z)
-	if frozen {
-		n = c.emit
+// solve finds the unknowns for given heats of the metals, by source. What does not lead anywhere from the last solution is tried from none.
+func (c *coupled) solve(ctx context.Context, heats []float64, tol float64) (steps int, status Status) {
+	warm := c.warm
+	steps, status = c.newton(ctx, heats, tol)
+	if status == StoppedEarly && warm {
+		clear(c.z)
+		c.warm = false
+		more := 0
+		more, status = c.newton(ctx, heats, tol)
+		steps += more
 	}
-	r, full := make([]float64, len(c.z)), make([]float64, len(c.z))
-	c.pass(full, heats, true)
-	c.miss(r, full, true, nil)
-	want := tol * (norm(r[:c.held]) + c.m.top.c2()*norm(heats))
-	first := !frozen && !c.warm
+	c.finish(heats, status)
+	return steps, status
+}
+
+// newton is solve from where the unknowns are.
+func (c *coupled) newton(ctx context.Context, heats []float64, tol float64) (steps int, status Status) {
+	r, none := make([]float64, len(c.z)), make([]float64, len(c.z))
+	c.pass(none, heats, true)
+	c.miss(r, none, true, nil)
+	want := tol * (norm(r[:c.held]) + c.m.top.c2()*norm(heats) + leastDrive)
+	first := !c.warm
 	if first {
-		c.top.each(func(k *knot) { k.guess(c.guess(heats)) })
+		t := c.guess(heats)
+		c.top.each(func(k *knot) { k.guess(t) })
 	}
 	for range newtonRounds {
 		c.pass(c.z, heats, true)
 		net := (*knot).about
-		switch {
-		case frozen:
-			net = nil
-		case !first:
+		if !first {
 			c.top.each((*knot).rebase)
 			net = func(k *knot, out []float64) { copy(out, k.rad.still) }
 		}
 		c.miss(r, c.z, true, net)
-		size := norm(r[:n])
+		size := norm(r)
 		if math.IsNaN(size) || math.IsInf(size, 0) {
 			return steps, StoppedEarly
 		}
 		if size <= want && !first {
-			return steps, c.finish(heats, frozen)
+			return steps, Converged
 		}
-		more, ok := c.improve(ctx, r[:n], frozen, math.Max(newtonRough, 0.3*want/size))
+		more, ok := c.improve(ctx, r, math.Max(newtonRough, 0.3*want/size))
 		steps += more
 		if !ok {
 			return steps, Cancelled
@@ -67,42 +78,22 @@ func (c *coupled) guess(heats []float64) float64 {
 }
 
 // improve takes one Newton step from the residual r, which it spoils.
-func (c *coupled) improve(ctx context.Context, r []float64, frozen bool, eta float64) (steps int, ok bool) {
-	n := len(r)
-	v, w := make([]float64, len(c.z)), make([]float64, len(c.z))
-	a := func(y, x []float64) {
-		copy(v, x)
-		c.pass(v, nil, false)
-		if frozen {
-			c.miss(w, v, false, nil)
-		} else {
-			c.miss(w, v, false, (*knot).change)
-		}
-		copy(y, w[:n])
-	}
+func (c *coupled) improve(ctx context.Context, r []float64, eta float64) (steps int, ok bool) {
 	for i := range r {
 		r[i] = -r[i]
 	}
-	d := make([]float64, n)
-	steps, ok = gmres(a, d, r, eta, ended(ctx))
-	for i, x := range d {
-		c.z[i] += x
-	}
+	d := make([]float64, len(r))
+	steps, ok = gmres(c.linear((*knot).change), d, r, eta, ended(ctx))
+	axpy(c.z, 1, d)
 	return steps, ok
 }
 
 // finish makes the emissions add up to nothing, exactly, and passes a last time.
-func (c *coupled) finish(heats []float64, frozen bool) Status {
-	if !frozen {
+func (c *coupled) finish(heats []float64, status Status) {
+	if c.warm = status == Converged; c.warm {
 		c.top.each(func(k *knot) { k.level0(c.z) })
-		c.pass(c.z, heats, true)
-		c.warm = true
-		c.heat = 0
-		for _, q := range c.q {
-			c.heat += math.Abs(q)
-		}
 	}
-	return Converged
+	c.pass(c.z, heats, true)
 }
 
 // level0 takes the sum of the emissions off them.
@@ -113,11 +104,35 @@ func (k *knot) level0(z []float64) {
 	sum, area := 0.0, 0.0
 	for p, u := range k.unit {
 		sum += u * z[k.e0+p]
-		area += k.rad.ex.Area(p)
+		area += k.rad.area[p]
 	}
 	for p, u := range k.unit {
-		z[k.e0+p] -= sum / area * k.rad.ex.Area(p) / u
+		z[k.e0+p] -= sum / area * k.rad.area[p] / u
 	}
+}
+
+// Dragging: in a draft surfaces see each other as they did until a part has moved this far.
+const (
+	frozenPath  = 1e-3 // m
+	frozenError = 5.0  // of the rise, per metre of path
+)
+
+// freezes tells whether the surfaces need not look about for a draft of something that has moved, and how far it has.
+func (c *coupled) freezes() (frozen bool, far float64) {
+	far = c.far()
+	frozen = c.m.set.Accuracy == Draft && c.warm && far > 0 && far < frozenPath
+	c.top.each(func(k *knot) { frozen = frozen && (k.rad == nil || k.rad.ex != nil) })
+	return frozen, far
+}
+
+// far is how far any piece has moved since the surfaces looked about.
+func (c *coupled) far() (far float64) {
+	c.top.each(func(k *knot) {
+		if k.rad != nil {
+			far = math.Max(far, k.rad.strays(k.g))
+		}
+	})
+	return far
 }
 
 // solveCoupled is solve for sections with surfaces that radiate.
@@ -127,26 +142,78 @@ func (m *Model) solveCoupled(ctx context.Context, q []float64) *Result {
 		m.glow, m.before = m.newCoupled(m.before), nil
 	}
 	c := m.glow
-	if !c.fresh {
-		c.top.each(func(k *knot) {
-			if k.rad != nil {
-				k.rad.look(k.g)
-			}
-		})
-		c.fresh = true
+	frozen, far := c.freezes()
+	if !frozen && !c.look(ctx) {
+		return m.blank(Cancelled)
 	}
-	steps, status := c.solve(ctx, q, false, tol)
+	steps, status := c.solve(ctx, q, tol)
+	m.kept = nil
+	c.heats = append(c.heats[:0], q...)
+	c.cores = c.cores[:0]
+	for i := range c.q {
+		c.cores = append(c.cores, c.top.core(i, c.q))
+	}
 	s := c.top.state(c.z, c.q)
 	r := m.result(s)
 	m.estimate(r, s, c.q)
-	r.Steps, r.Status = steps, status
+	r.Steps, r.Status, r.Frozen = steps, status, frozen
 	r.Unknowns = len(c.z)
+	if frozen {
+		m.widen(r, frozenError*far*m.rise(r))
+	}
 	return r
+}
+
+// look lets all surfaces look about; false if ctx ended first.
+func (c *coupled) look(ctx context.Context) bool {
+	c.top.each(func(k *knot) {
+		if k.rad != nil && ctx.Err() == nil {
+			k.rad.look(k.g)
+		}
+	})
+	return ctx.Err() == nil
+}
+
+// widen adds to all estimates.
+func (m *Model) widen(r *Result, add float64) {
+	for i := range r.PartErrorK {
+		r.PartErrorK[i] += add
+	}
+	r.ErrorK += add
 }
 
 // dim sets the coupled problem aside, of which a new one may keep something.
 func (m *Model) dim() {
 	if m.glow != nil {
 		m.before, m.glow = m.glow, nil
+	}
+}
+
+// glowOn follows a move of piece i of the top level; the unknowns began at old.
+func (m *Model) glowOn(i int, old []int) {
+	c := m.glow
+	if c == nil || !m.ready {
+		return
+	}
+	if r := c.top.rad; r != nil && r.sides != nil {
+		if !r.sides.follow(i) {
+			m.dim() // the wall was divided anew
+			return
+		}
+	}
+	c.follow(old, m.top.offsets())
+}
+
+// Resume lets a model that has not solved yet start from what old, of a like section, knows: its solution, and what surfaces see of each other. The
+// old model must not be used any more.
+func (m *Model) Resume(old *Model) {
+	if m.top == nil || old == nil || old.top == nil || m.ready {
+		return
+	}
+	if m.before = old.glow; m.before == nil {
+		m.before = old.before
+	}
+	if a, b := m.top.offsets(), old.top.offsets(); slices.Equal(a, b) {
+		m.x = old.x
 	}
 }
