@@ -117,9 +117,6 @@ func (k *Desk) Scene() render.Scene {
 	return s
 }
 
-// Scale returns the colours' scale of the scene.
-func (k *Desk) Scale() render.Scale { return render.ScaleOf(k.Scene()) }
-
 // shownShapes returns the shapes of the scene.
 func (k *Desk) shownShapes() []section.Shape {
 	if r, fresh := k.Result(); r != nil && (fresh || !k.Stale()) {

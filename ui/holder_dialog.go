@@ -22,15 +22,6 @@ func (w *Window) showHolder() {
 	})
 }
 
-// showSurroundings edits what the section gives its heat to.
-func (w *Window) showSurroundings() {
-	w.showInputs("Surroundings", func(k *Desk) []*input {
-		return append([]*input{surroundingsKindInput(k)}, slices.DeleteFunc(wholeInputs(k), func(in *input) bool {
-			return !slices.Contains([]string{"ambient", "film"}, in.key)
-		})...)
-	})
-}
-
 // showInputs is a dialog of fields that follow the document.
 func (w *Window) showInputs(title string, inputs func(*Desk) []*input) {
 	s := &inputSheet{desk: w.desk, inputs: inputs, known: map[string]*field{}}
@@ -139,22 +130,5 @@ func withHolderKind(cat *catalog.Catalog, d *section.Document, kind string) *sec
 			}
 		}
 		d.Parts = parts
-	})
-}
-
-// surroundingsKindInput is the kind of the surroundings.
-func surroundingsKindInput(k *Desk) *input {
-	kinds := []choice{{section.FixedFilm, "fixed film"}, {section.FixedWall, "surface held"}}
-	in := input{key: "surroundings", label: "Kind", step: "kind of surroundings", about: "one film coefficient all round, or the outer surface held at a temperature"}
-	return choiceInput(in, k.Document().Surroundings.Kind, kinds, func(d *section.Document, kind string) *section.Document {
-		return d.With(func(d *section.Document) {
-			d.Surroundings.Kind = kind
-			if kind == section.FixedFilm && !d.Surroundings.FilmWM2K.OK {
-				d.Surroundings.FilmWM2K = section.Some(9.0)
-			}
-			if kind != section.FixedFilm {
-				d.Surroundings.FilmWM2K = section.Opt[float64]{}
-			}
-		})
 	})
 }

@@ -39,16 +39,16 @@ func (w *Window) guard(before string, then func()) {
 	)
 }
 
-// newDesign starts with an empty conduit that people can change.
+// newDesign starts with an empty jacket that people can change.
 func (w *Window) newDesign() {
 	w.guard("starting a new one", func() { w.desk.Load(emptyDesign(), "", nil) })
 }
 
-// emptyDesign is an empty jacket in still surroundings, everything in it written out.
+// emptyDesign is an empty jacket in still air, everything in it written out.
 func emptyDesign() *section.Document {
 	return &section.Document{
 		Title:        "New section",
-		Surroundings: section.Surroundings{Kind: section.FixedFilm, AmbientC: section.Some(30.0), FilmWM2K: section.Some(9.0)},
+		Surroundings: section.Surroundings{Kind: section.StillAir, AmbientC: section.Some(30.0)},
 		Holder: section.Holder{
 			Kind: section.Jacket, InsideMM: section.Some(20.0),
 			Layers: []section.Layer{{Material: "pvc", ThicknessMM: 1.5}},
