@@ -239,6 +239,7 @@ func (m *Model) blank(s Status) *Result {
 		r.WallMax[k] = math.NaN()
 	}
 	r.WallMean, r.ErrorK = math.NaN(), math.NaN()
+	r.Nusselt = 1
 	r.Field = nowhere{}
 	return r
 }

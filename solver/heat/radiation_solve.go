@@ -158,6 +158,9 @@ func (m *Model) solveCoupled(ctx context.Context, q []float64) *Result {
 	m.estimate(r, s, c.q)
 	r.Steps, r.Status, r.Frozen = steps, status, frozen
 	r.Unknowns = len(c.z)
+	if rad := c.top.rad; rad != nil {
+		r.Nusselt, r.Beyond = rad.nu, !rad.inRange
+	}
 	if frozen {
 		m.widen(r, frozenError*far*m.rise(r))
 	}

@@ -5,10 +5,13 @@ import "context"
 // tangentTolerance is the residual of a column of the influence matrix of a section that radiates.
 const tangentTolerance = 1e-5
 
+// Radiates tells whether surfaces radiate to each other in the section.
+func (m *Model) Radiates() bool { return m.top != nil && m.top.opens() }
+
 // Tangent returns K and ground such that the Core temperatures of Metal parts are ground + K q near the last solution; rows and columns of parts
 // that aren't Metal are nil. Where nothing radiates they are so everywhere: Influence and Ground.
 func (m *Model) Tangent(ctx context.Context) (k [][]float64, ground []float64, status Status) {
-	if m.top == nil || !m.top.opens() {
+	if !m.Radiates() {
 		if k, status = m.Influence(ctx); status != Converged {
 			return k, nil, status
 		}

@@ -16,6 +16,8 @@ type Result struct {
 	Unknowns   int     // real unknowns
 	Steps      int     // of the iteration
 	Frozen     bool    // radiation as it was before a part moved the last millimetre; only of a Draft
+	Nusselt    float64 // how many times more heat crosses the holder's air, where it is free, than by conduction; 1 where it does not move
+	Beyond     bool    // the formula for that is beyond its range
 	ErrorK     float64 // estimate of the largest error of any Core temperature
 	PartErrorK []float64
 	MetalGap   float64 // m: how far bare metal was held from bare metal that it touches; 0 where none does

@@ -61,6 +61,7 @@ func (s *scene) build(air spaces, f *films) heat.Problem {
 	for i := range s.parts {
 		p.Parts[i] = s.heatPart(i, air)
 	}
+	s.shine(&p)
 	return p
 }
 

@@ -14,7 +14,7 @@ const (
 
 // difference compares two heat problems but for the heats and what is outside: same, other, or the index of the only top-level part that moved.
 func difference(a, b *heat.Problem) int {
-	if a.MediumK != b.MediumK || a.Clearance != b.Clearance || len(a.Parts) != len(b.Parts) || !sameWall(a.Wall, b.Wall) {
+	if a.MediumK != b.MediumK || a.Filling != b.Filling || a.ZeroK != b.ZeroK || a.Pressure != b.Pressure || a.Clearance != b.Clearance || len(a.Parts) != len(b.Parts) || !sameWall(a.Wall, b.Wall) {
 		return other
 	}
 	moved := same
@@ -36,7 +36,7 @@ func difference(a, b *heat.Problem) int {
 
 // sameWall compares all that stays while films change.
 func sameWall(a, b heat.Wall) bool {
-	return a.Shape == b.Shape && a.R == b.R && a.W == b.W && a.H == b.H && slices.Equal(a.Rings, b.Rings)
+	return a.Shape == b.Shape && a.R == b.R && a.W == b.W && a.H == b.H && a.Emissivity == b.Emissivity && slices.Equal(a.Rings, b.Rings)
 }
 
 // sameOutside compares what heat.Model.Outside changes.
@@ -46,5 +46,6 @@ func sameOutside(a, b *heat.Wall) bool {
 
 // samePart compares all but place and heat.
 func samePart(a, b heat.Part) bool {
-	return a.In == b.In && a.Core == b.Core && a.Radius == b.Radius && a.K == b.K && a.Fixed == b.Fixed && slices.Equal(a.Rings, b.Rings)
+	return a.In == b.In && a.Core == b.Core && a.Radius == b.Radius && a.K == b.K && a.Fixed == b.Fixed && a.Filling == b.Filling &&
+		a.Emissivity == b.Emissivity && a.InsideEmissivity == b.InsideEmissivity && slices.Equal(a.Rings, b.Rings)
 }

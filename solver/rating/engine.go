@@ -116,5 +116,7 @@ func (e *Engine) prepare(p heat.Problem, grade heat.Accuracy) {
 			return
 		}
 	}
-	e.model, e.problem, e.grade = heat.New(p, heat.Settings{Accuracy: grade}), p, grade
+	m := heat.New(p, heat.Settings{Accuracy: grade})
+	m.Resume(e.model)
+	e.model, e.problem, e.grade = m, p, grade
 }

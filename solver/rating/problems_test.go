@@ -1,6 +1,7 @@
 package rating_test
 
 import (
+	"slices"
 	"strings"
 	"testing"
 
@@ -146,20 +147,28 @@ loads:
 	}
 }
 
-// TestLeftOut: air between the parts is said to be reckoned too hot, in the sentence and the notes.
-func TestLeftOut(t *testing.T) {
+// TestRadiationIsTold: what surfaces do through the gas between them is said in the notes, with their emissivities; a solid has none.
+func TestRadiationIsTold(t *testing.T) {
 	d := parse(t, head+`holder: {kind: conduit, inside_mm: 20}
 parts: [{id: L1, kind: core, stock: thhn-12, at_mm: [0, 0]}]
 loads: [{id: a, conductors: [L1], current_a: 5}]
 `)
+	const told = "surfaces radiate through the gas between them, emissivity 0.9"
 	r := solve(t, d, rating.Options{})
 	_, assumed := r.Sentence()
-	if !strings.Contains(assumed, rating.LeftOut) || !strings.Contains(strings.Join(r.Notes, "; "), rating.LeftOut) {
+	if strings.Contains(assumed, "too hot") || !slices.Contains(r.Notes, told) {
 		t.Errorf("%s / %q", assumed, r.Notes)
 	}
 	solid := solve(t, d.With(func(d *section.Document) { d.Holder.Fill = "pvc" }), rating.Options{})
-	if _, assumed := solid.Sentence(); strings.Contains(assumed, "left out") {
-		t.Errorf("a solid leaves nothing out: %s", assumed)
+	if strings.Contains(strings.Join(solid.Notes, "; "), "radiate") {
+		t.Errorf("a solid lets nothing radiate: %q", solid.Notes)
+	}
+	wide := solve(t, parse(t, head+`holder: {kind: wireway, width_mm: 100, height_mm: 100}
+parts: [{id: L1, kind: core, stock: thhn-12, at_mm: [50, 20]}]
+loads: [{id: a, conductors: [L1], current_a: 30}]
+`), rating.Options{})
+	if !strings.Contains(strings.Join(wide.Notes, "; "), "Raithby and Hollands") {
+		t.Errorf("the air of a wide wireway does not move: %q", wide.Notes)
 	}
 }
 

@@ -5,14 +5,13 @@ import (
 	"math"
 
 	"packrise/solver/heat"
-	"packrise/solver/section"
 )
 
 // remarks lists what is assumed or left out, one sentence each.
 func (s *scene) remarks(r *Result, a answered, o Options) []string {
 	out := append([]string(nil), s.notes...)
-	if s.gasBetweenParts() {
-		out = append(out, LeftOut)
+	if n := s.radiationNote(a); n != "" {
+		out = append(out, n)
 	}
 	if n := s.airNote(a); n != "" {
 		out = append(out, n)
@@ -46,19 +45,6 @@ func (s *scene) remarks(r *Result, a answered, o Options) []string {
 		out = append(out, "the calculation stopped before it settled; take the temperatures as a first estimate")
 	}
 	return out
-}
-
-// gasBetweenParts tells whether several surfaces face each other through a gas, in the holder or a cable.
-func (s *scene) gasBetweenParts() bool {
-	if s.holder.fill.gas && s.holder.kind != section.NoHolder {
-		return true
-	}
-	for i := range s.parts {
-		if p := &s.parts[i]; p.inside != nil && p.inside.fill.gas {
-			return true
-		}
-	}
-	return false
 }
 
 func (s *scene) airNote(a answered) string {

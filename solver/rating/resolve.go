@@ -134,6 +134,7 @@ func (r *resolver) parts(list []section.Part, n nest) {
 			r.cable(&it, p, n)
 			continue
 		}
+		it.skin = r.outermost(&it).emissivity
 		r.scene.parts = append(r.scene.parts, it)
 	}
 }
@@ -158,6 +159,7 @@ func (r *resolver) cable(it *item, p *section.Part, n nest) {
 	if p.LimitC.OK {
 		it.limit = limit{c: p.LimitC, by: "given"}
 	}
+	it.skin = r.outermost(it).emissivity
 	r.scene.parts = append(r.scene.parts, *it)
 	if n.depth+1 > section.MaxNesting {
 		return

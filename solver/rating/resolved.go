@@ -75,6 +75,7 @@ type item struct {
 	body   float64 // W/mK of a rod's material
 	bore   *hollow
 	inside *enclosure
+	skin   float64 // emissivity of its outermost surface
 	limit  limit
 	load   *section.Load
 	label  string

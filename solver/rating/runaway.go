@@ -21,16 +21,42 @@ type affine struct {
 
 // runaway decides what a fixed point that does not settle means. With K the influence matrix a steady state exists up to the
 // factor s at which the largest eigenvalue of s² K diag(α I²R20) reaches 1 (PHYSICS: it is the gain of the loop resistance → heat
-// → temperature) or a metal reaches hottestC, whichever is lower.
-func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) answered {
-	a, ground, status := writeOut(ctx, m, s)
-	if status != heat.Converged {
-		return answered{status: status}
+// → temperature) or a metal reaches hottestC, whichever is lower. Where surfaces radiate K is a tangent, which is taken anew at the factor
+// that the last one gave.
+func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) (a answered) {
+	last := math.Inf(1)
+	for range tangents {
+		w, ground, status := writeOut(ctx, m, s)
+		if status != heat.Converged {
+			return answered{status: status}
+		}
+		factor, at := w.largest()
+		if factor >= 1 {
+			a = w.steady(ctx, m, s, ground, grade)
+		} else {
+			a = answered{status: heat.ThermalRunaway, settles: factor, at: at}
+		}
+		if !m.Radiates() || a.status == heat.Converged || a.status == heat.Cancelled {
+			return a
+		}
+		if factor < 1 {
+			if math.Abs(factor-last) < 1e-3 {
+				return a
+			}
+			if r := m.Solve(ctx, w.heats(s, factor)); r.Status == heat.Cancelled {
+				return answered{status: r.Status}
+			}
+		}
+		last = factor
 	}
-	factor, at := a.largest()
-	if factor < 1 {
-		return answered{status: heat.ThermalRunaway, settles: factor, at: at}
-	}
+	return a
+}
+
+// tangents is how often the tangent is taken anew, at most.
+const tangents = 12
+
+// steady solves at the temperatures that the matrix gives, and compares.
+func (a *affine) steady(ctx context.Context, m *heat.Model, s *scene, ground []float64, grade heat.Accuracy) answered {
 	temps := make([]float64, len(s.parts))
 	copy(temps, ground)
 	for j, t := range a.temperatures(1) {
@@ -48,13 +74,9 @@ func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) 
 	return answered{heat: r, temps: r.Core}
 }
 
-// writeOut finds the influence matrix and the temperatures without heat.
+// writeOut finds the influence matrix and the temperatures without heat, or, where surfaces radiate, those of the tangent.
 func writeOut(ctx context.Context, m *heat.Model, s *scene) (a affine, ground []float64, status heat.Status) {
-	k, status := m.Influence(ctx)
-	if status != heat.Converged {
-		return a, nil, status
-	}
-	ground, status = m.Ground(ctx)
+	k, ground, status := m.Tangent(ctx)
 	if status != heat.Converged {
 		return a, nil, status
 	}

@@ -1,0 +1,89 @@
+package rating
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"packrise/solver/fluid"
+	"packrise/solver/heat"
+	"packrise/solver/section"
+)
+
+// shine tells the heat problem which media are gases and how surfaces radiate through them.
+func (s *scene) shine(p *heat.Problem) {
+	p.ZeroK = zeroC
+	p.Pressure, _ = fluid.StandardPressure(s.doc.Surroundings.AltitudeM.V)
+	p.Filling = s.holder.fill.filling()
+	p.Wall.Emissivity = s.holder.insideEmissivity()
+	for i := range s.parts {
+		it, q := &s.parts[i], &p.Parts[i]
+		q.Emissivity = it.skin
+		if it.inside != nil {
+			q.Filling = it.inside.fill.filling()
+			q.InsideEmissivity = it.inside.insideEmissivity()
+		}
+	}
+}
+
+// filling tells what a medium does besides conducting.
+func (m *medium) filling() heat.Filling {
+	switch {
+	case m.air:
+		return heat.Air
+	case m.gas:
+		return heat.Gas
+	}
+	return heat.Solid
+}
+
+// insideEmissivity is that of the face that looks at the parts.
+func (e *enclosure) insideEmissivity() float64 {
+	switch {
+	case e.skin > 0:
+		return e.skin
+	case len(e.layers) > 0:
+		return e.layers[0].material.emissivity
+	}
+	return usualEmissivity
+}
+
+// radiationNote says how surfaces radiate to each other, and how the air between them moves.
+func (s *scene) radiationNote(a answered) string {
+	var skins []float64
+	add := func(e float64) {
+		if e = math.Round(e*100) / 100; !slices.Contains(skins, e) {
+			skins = append(skins, e)
+		}
+	}
+	for i := -1; i < len(s.parts); i++ {
+		e := &s.holder
+		if i >= 0 {
+			e = s.parts[i].inside
+		}
+		if e == nil || !e.fill.gas || e.kind == section.NoHolder {
+			continue
+		}
+		add(e.insideEmissivity())
+		for _, j := range s.children(i) {
+			add(s.parts[j].skin)
+		}
+	}
+	if len(skins) == 0 {
+		return ""
+	}
+	slices.Sort(skins)
+	words := make([]string, len(skins))
+	for i, e := range skins {
+		words[i] = digits(e, 2)
+	}
+	note := "surfaces radiate through the gas between them, emissivity " + strings.Join(words, ", ")
+	if h := a.heat; h != nil && h.Nusselt > 1.005 {
+		note += fmt.Sprintf("; in the free space the air carries %s times what it conducts (Raithby and Hollands 1975, ±25 %%)", digits(h.Nusselt, 2))
+		if h.Beyond {
+			note += ", beyond that formula's range"
+		}
+	}
+	return note
+}
