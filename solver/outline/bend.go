@@ -31,10 +31,11 @@ type bend struct {
 	fit             [][modes]complex128 // of f for each mode
 	dof             int
 	firstCell       int
+	known           int // dof of a bend that has not changed since the equations were last written, −1 of others
 }
 
 func newBend(s *Stroke, contour, stroke int, lo, hi float64) bend {
-	b := bend{contour: contour, stroke: stroke, lo: lo, hi: hi, half: s.Length() * (hi - lo) / 2, a: s.At(lo), b: s.At(hi), c: s.Centre, r: s.R}
+	b := bend{contour: contour, stroke: stroke, lo: lo, hi: hi, half: s.Length() * (hi - lo) / 2, known: -1, a: s.At(lo), b: s.At(hi), c: s.Centre, r: s.R}
 	b.mid, b.chord = scale(0.5, b.a+b.b), scale(0.5, b.b-b.a)
 	b.inv = inverse(b.chord)
 	b.terms = modes
@@ -137,14 +138,6 @@ func (b *bend) at(t float64) complex128 {
 		return b.mid + scale(t, b.chord)
 	}
 	return b.c + (b.a-b.c)*cmplx.Rect(1, b.alpha*(t+1))
-}
-
-// dir is the unit tangent at t; the outward normal is −i dir.
-func (b *bend) dir(t float64) complex128 {
-	if b.alpha == 0 {
-		return scale(1/cmplx.Abs(b.chord), b.chord)
-	}
-	return scale(1/b.r, 1i*(b.at(t)-b.c))
 }
 
 // sweep is the angle under which z sees the piece t0 … t1.

@@ -25,6 +25,8 @@ func closeTo(t *testing.T, what string, got, want, tol float64) {
 	}
 }
 
+func never() bool { return false }
+
 func heatOf(n, i int, q float64) []float64 {
 	h := make([]float64, n)
 	h[i] = q
@@ -34,7 +36,7 @@ func heatOf(n, i int, q float64) []float64 {
 // Concentric: Σ ln(r'/r)/(2πk) + 1/(2πrh).
 func TestShapedConcentric(t *testing.T) {
 	c := append(wire(0.002, 0.003, 0.2, 0.03, 0), ring(0.008, 0.03, 9, 30))
-	s := NewShaped(c, 1)
+	s := NewShaped(c, 1, never)
 	y := s.Respond(heatOf(3, 0, 5), true)
 	want := 30 + 5/(2*math.Pi)*(math.Log(1.5)/0.2+math.Log(8.0/3)/0.03+1/(0.008*9))
 	closeTo(t, "metal", s.Metal(y, 0), want, 1e-4)
@@ -56,7 +58,7 @@ func TestShapedEccentric(t *testing.T) {
 			{Loop: Circle(a).Placed(0.3, complex(0, e)), In: math.Inf(1), Out: 0.03},
 			ring(b, 0.03, math.Inf(1), 0),
 		}
-		s := NewShaped(c, 1)
+		s := NewShaped(c, 1, never)
 		y := s.Respond(heatOf(2, 0, 1), true)
 		want := math.Acosh((a*a+b*b-e*e)/(2*a*b)) / (2 * math.Pi * 0.03)
 		closeTo(t, "resistance", s.Metal(y, 0), want, 3e-4*want)
@@ -71,7 +73,7 @@ func TestShapedField(t *testing.T) {
 	for i := range c {
 		c[i].Loop = c[i].Loop.Placed(0.2, z)
 	}
-	s := NewShaped(c, 1)
+	s := NewShaped(c, 1, never)
 	f := s.Field(s.Respond(heatOf(3, 0, 5), true))
 	at := func(r float64) float64 {
 		r2 := math.Max(r, 0.003)
@@ -89,4 +91,29 @@ func TestShapedField(t *testing.T) {
 	if v := f.At(z + 0.0081); !math.IsNaN(v) {
 		t.Errorf("outside: %g, want NaN", v)
 	}
+}
+
+// A section under another film answers as one that is made anew with it, with each side of its own.
+func TestShapedOutside(t *testing.T) {
+	section := func(sides []Side) []Contour {
+		c := wire(0.002, 0.003, 0.2, 0.03, 0.008+0.0031i)
+		return append(c, Contour{Loop: Box(0.02, 0.01, 0), In: 0.03, Out: 0.2}, Contour{Loop: Box(0.02, 0.01, 0.001), In: 0.2, Sides: sides})
+	}
+	a := []Side{{Film: 9, Temp: 20}}
+	b := []Side{{Film: 4, Temp: 20}, {Kind: Held, Temp: 60}, {Film: 7, Temp: 10}, {Kind: Insulated}}
+	s := NewShaped(section(a), 1.5, never).Outside(b)
+	fresh := NewShaped(section(b), 1.5, never)
+	heats := heatOf(4, 0, 3)
+	y, z := s.Respond(heats, true), fresh.Respond(heats, true)
+	closeTo(t, "metal", s.Metal(y, 0), fresh.Metal(z, 0), 5e-3)
+	_, mean, out := s.Faces(y)
+	_, want, fine := fresh.Faces(z)
+	closeTo(t, "mean", mean, want, 5e-3)
+	sum := 0.0
+	for i := range out {
+		closeTo(t, "side", out[i], fine[i], 5e-3)
+		sum += out[i]
+	}
+	closeTo(t, "released", sum, 3, 1e-4)
+	closeTo(t, "insulated", out[3], 0, 1e-4)
 }

@@ -1,10 +1,6 @@
 package outline
 
-import (
-	"math"
-
-	"gonum.org/v1/gonum/floats"
-)
+import "math"
 
 // Respond solves for 'heats' of the contours (W/m, read for metals); ground adds the drive of held bores and of the surroundings.
 func (s *Shaped) Respond(heats []float64, ground bool) []float64 {
@@ -22,23 +18,13 @@ func (s *Shaped) Respond(heats []float64, ground bool) []float64 {
 			}
 		}
 	}
-	for i, p := range s.pivots {
-		y[i], y[p] = y[p], y[i]
-	}
-	n := len(y)
-	for i := range y {
-		y[i] -= floats.Dot(s.m.Data[i*n:][:i], y[:i])
-	}
-	for i := n - 1; i >= 0; i-- {
-		row := s.m.Data[i*n:][:n]
-		y[i] = (y[i] - floats.Dot(row[i+1:], y[i+1:])) / row[i]
-	}
+	s.solve(y)
 	return y
 }
 
 // Metal is the temperature of a metal.
 func (s *Shaped) Metal(y []float64, contour int) float64 {
-	return floats.Dot(s.centre[contour], y[:s.n]) + y[s.n]
+	return dot(s.centre[contour], y) + y[s.n]
 }
 
 // Leaves is the heat that leaves a metal or a held bore, W/m.
@@ -58,16 +44,25 @@ func (s *Shaped) Faces(y []float64) (hottest []float64, mean float64, out []floa
 	for i := range hottest {
 		hottest[i] = math.Inf(-1)
 	}
+	c := s.outside()
+	out = make([]float64, len(c.Loop))
+	perimeter := c.Loop.Perimeter()
+	at := cellsOf[modes].at
 	for i := range s.bends {
 		b := &s.bends[i]
 		for l := range modes + 1 {
-			t := floats.Dot(s.temps[(b.firstCell+l)*s.n:][:s.n], y[:s.n]) + y[s.n]
+			t := dot(s.temps[(b.firstCell+l)*s.n:][:s.n], y) + y[s.n]
 			hottest[b.contour] = math.Max(hottest[b.contour], t)
 		}
-	}
-	mean = floats.Dot(s.mean[len(s.mean)-1], y[:s.n]) + y[s.n]
-	for _, o := range s.out {
-		out = append(out, floats.Dot(o, y[:s.n]))
+		if b.dof < s.inner {
+			continue
+		}
+		for l := range modes {
+			length := b.half * (at[l+1] - at[l])
+			mean += length / perimeter * (dot(s.outT[(b.dof+l-s.inner)*s.n:][:s.n], y) + y[s.n])
+			flux := dot(s.eq[(b.dof+l)*s.n:][:s.n], y) + dot(cellsOf[modes].mean[l], y[b.dof:])/2
+			out[b.stroke] -= c.In * flux * length
+		}
 	}
 	return hottest, mean, out
 }

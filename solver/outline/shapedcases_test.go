@@ -129,7 +129,7 @@ func TestShapedReferenceCases(t *testing.T) {
 		}
 		contours, heats, metals := d.contours()
 		for _, fineness := range []float64{0.7, 1, 1.5} {
-			s := NewShaped(contours, fineness)
+			s := NewShaped(contours, fineness, never)
 			y := s.Respond(heats, true)
 			worst := 0.0
 			for i, m := range metals {

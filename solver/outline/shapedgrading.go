@@ -8,11 +8,12 @@ import (
 const (
 	maxRounds   = 7
 	maxUnknowns = 3500
-	looseness   = 1e-3 // of a bend's last modes, as a share of the heat, at fineness 1
+	looseness   = 2e-3 // of a bend's last modes, as a share of the heat, at fineness 1
+	perHalving  = 30   // what halving a bend takes off its last modes
 )
 
 // begin cuts every contour.
-func (s *Shaped) begin(fineness float64) {
+func (s *Shaped) begin() {
 	for i := range s.contours {
 		l := s.contours[i].Loop
 		longest := l.Perimeter() / 8
@@ -48,18 +49,26 @@ func (s *Shaped) refine(fineness float64) bool {
 			tail[i] = math.Max(tail[i], t)
 		}
 	}
-	limit := looseness / math.Pow(fineness, 4)
+	limit := looseness / math.Pow(fineness, 3)
 	var out []bend
 	s.loose = 0
 	for i := range s.bends {
-		b := &s.bends[i]
+		b := s.bends[i]
 		s.loose = math.Max(s.loose, tail[i])
 		if tail[i] < limit {
-			out = append(out, *b)
+			b.known = b.dof
+			out = append(out, b)
 			continue
 		}
-		st, mid := &s.contours[b.contour].Loop[b.stroke], (b.lo+b.hi)/2
-		out = append(out, newBend(st, b.contour, b.stroke, b.lo, mid), newBend(st, b.contour, b.stroke, mid, b.hi))
+		pieces := 2
+		if tail[i] > perHalving*limit {
+			pieces = 4
+		}
+		st := &s.contours[b.contour].Loop[b.stroke]
+		for k := range pieces {
+			at := func(k int) float64 { return b.lo + (b.hi-b.lo)*float64(k)/float64(pieces) }
+			out = append(out, newBend(st, b.contour, b.stroke, at(k), at(k+1)))
+		}
 	}
 	if len(out) == len(s.bends) {
 		return false
