@@ -87,6 +87,10 @@ func (w *Wall) check() {
 		if !positive(w.R) {
 			panic(badNumber)
 		}
+	case FlatWall:
+		if !positive(w.W, w.H) {
+			panic(badNumber)
+		}
 	case Rect:
 		if !positive(w.W, w.H) {
 			panic(badNumber)

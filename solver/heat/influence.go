@@ -80,6 +80,9 @@ func (m *Model) coefficientsBorder(ctx context.Context) ([][]float64, bool) {
 // aren't Metal are nil. Where surfaces radiate it is the tangent at the last solution, or at the Problem's own heats if there is none.
 func (m *Model) Influence(ctx context.Context) ([][]float64, Status) {
 	out := make([][]float64, len(m.p.Parts))
+	if m.form != nil {
+		return out, m.form.influence(ctx, out)
+	}
 	if m.top == nil {
 		m.bare.influence(out)
 		return out, Converged

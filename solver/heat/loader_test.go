@@ -34,6 +34,12 @@ type (
 		Kind      string `yaml:"kind"`
 		Conductor struct {
 			DiameterMM float64 `yaml:"diameter_mm"`
+			Shape      string  `yaml:"shape"`
+			WidthMM    float64 `yaml:"width_mm"`
+			HeightMM   float64 `yaml:"height_mm"`
+			CornerMM   float64 `yaml:"corner_mm"`
+			AngleDeg   float64 `yaml:"angle_deg"`
+			RadiusMM   float64 `yaml:"radius_mm"`
 		} `yaml:"conductor"`
 		Layers     []layerDoc `yaml:"layers"`
 		At         [2]float64 `yaml:"at_mm"`
@@ -97,6 +103,9 @@ func load(t testing.TB, name string) loaded {
 	}
 	if d.Holder.WidthMM > 0 {
 		l.Wall.Shape, l.Wall.W, l.Wall.H = heat.Rect, d.Holder.WidthMM*mm, d.Holder.HeightMM*mm
+		if d.Holder.Kind == "jacket" {
+			l.Wall.Shape = heat.FlatWall
+		}
 		for k, name := range []string{"bottom", "right", "top", "left"} {
 			l.Wall.Sides[k] = side(d.Holder.Sides[name])
 		}
@@ -153,7 +162,15 @@ func (d *sectionDoc) place(l *loaded, parts []partDoc, in int, prefix string, tu
 		q := heat.Part{In: in, X: (p.At[0]*c - p.At[1]*s) * mm, Y: (p.At[0]*s + p.At[1]*c) * mm, Rings: d.rings(p.Layers)}
 		switch p.Kind {
 		case "core":
-			q.Core, q.Radius = heat.Metal, p.Conductor.DiameterMM/2*mm
+			c := &p.Conductor
+			q.Core, q.Radius = heat.Metal, c.DiameterMM/2*mm
+			q.Form = heat.Form{W: c.WidthMM * mm, H: c.HeightMM * mm, R: c.RadiusMM * mm, Corner: c.CornerMM * mm, Angle: c.AngleDeg * math.Pi / 180, Turn: (turn + p.TurnDeg) * math.Pi / 180}
+			switch c.Shape {
+			case "bar":
+				q.Form.Kind, q.Radius = heat.Bar, c.WidthMM/2*mm
+			case "sector":
+				q.Form.Kind, q.Radius = heat.Sector, c.RadiusMM*mm
+			}
 		case "rod":
 			q.Core, q.Radius, q.K = heat.Body, p.DiameterMM/2*mm, d.Materials[p.Material].K
 			if p.BoreMM > 0 {

@@ -14,6 +14,7 @@ type Model struct {
 	set  Settings
 	top  *region // nil: one bare part without an inside
 	bare *bare
+	form *shaped // of sections in which not everything is round: nothing else is used
 
 	ready   bool
 	x       []float64   // last solution
@@ -74,6 +75,10 @@ func New(p Problem, s Settings) *Model {
 func (m *Model) layout() {
 	p := &m.p
 	w := &p.Wall
+	if !p.round() {
+		m.form = newShaped(m)
+		return
+	}
 	factor, _, _ := m.set.Accuracy.settings()
 	switch w.Shape {
 	case BarePart:
@@ -158,6 +163,9 @@ func (m *Model) outsideR() float64 {
 // the last solution. Status is Cancelled when ctx ends first, and the Result then holds the best so far.
 func (m *Model) Solve(ctx context.Context, heats []float64) *Result {
 	heats = m.heats(heats)
+	if m.form != nil {
+		return m.form.solve(ctx, heats)
+	}
 	if m.top == nil {
 		return m.bare.solve(heats)
 	}

@@ -11,6 +11,10 @@ func (m *Model) Move(part int, x, y float64) {
 		panic(badNumber)
 	}
 	m.p.Parts[part].X, m.p.Parts[part].Y = x, y
+	if m.form != nil {
+		m.form.move()
+		return
+	}
 	if m.p.Wall.Shape == BarePart {
 		m.moveBare()
 		return

@@ -14,6 +14,8 @@ func (m *Model) Outside(w Wall) {
 	m.p.Wall = w
 	m.forget()
 	switch {
+	case m.form != nil:
+		m.form.outside()
 	case m.top == nil: // a bare part reads the wall each time
 	case w.Shape == Hull:
 		m.top.border.(*hullWall).outside(&m.p.Wall)

@@ -1,6 +1,6 @@
 package heat
 
-// Problem is steady conduction in the plane across a run: round parts in a medium within a wall. Lengths in metres,
+// Problem is steady conduction in the plane across a run: parts in a medium within a wall. Lengths in metres,
 // temperatures in kelvin above any common zero (a caller may pass °C), heats in W/m, conductivities in W/mK.
 type Problem struct {
 	Parts     []Part
@@ -24,7 +24,7 @@ const (
 	Inside                // a cable: other parts in a medium of conductivity K
 )
 
-// Part is a round thing.
+// Part is a thing within the wall: round, unless its Form says otherwise.
 type Part struct {
 	In     int     // index of the cable (Core Inside) that this part lies in, −1 for the holder; a cable stands before its parts
 	X, Y   float64 // centre: in the holder's coordinates for In = −1, else relative to the cable's centre (turn already applied)
@@ -34,6 +34,7 @@ type Part struct {
 	Fixed  float64 // temperature of a FixedBore
 	Rings  []Ring  // from Radius outwards
 	Heat   float64 // W/m, made in the core (Metal only; 0 elsewhere)
+	Form   Form    // of a core or a cable's inside that is not round; Radius is then any that is positive
 
 	Emissivity       float64 // of the outer surface, where it faces a gas
 	Filling          Filling // of the medium in a cable
@@ -55,6 +56,7 @@ const (
 	Rect                  // inside W × H, lower left corner at the origin, square outer corners
 	BarePart              // no wall: exactly one part of the top level, the film acts on its own outside
 	Hull                  // no wall: an open bundle, the film acts on the taut string round the parts and on the parts where they are exposed
+	FlatWall              // inside W × H with half-circle ends on the short sides, centre at the origin
 )
 
 // Wall is the holder's wall and what is outside it.

@@ -1,0 +1,190 @@
+package heat
+
+import (
+	"context"
+	"math"
+
+	"packrise/solver/outline"
+)
+
+// shaped solves sections in which not everything is round: every face is a contour of densities.
+type shaped struct {
+	m    *Model
+	plan *plan
+	sys  *outline.Shaped // nil until it is needed
+	k    [][]float64     // influence, by part
+}
+
+// newShaped prepares a section; it is discretised by the first call that needs it.
+func newShaped(m *Model) *shaped {
+	for i := range m.p.Parts {
+		m.p.Parts[i].Form.check()
+	}
+	if m.p.Wall.Shape == Hull {
+		panic(badShapedHull)
+	}
+	return &shaped{m: m}
+}
+
+const badShapedHull = "heat: an open bundle takes round parts only"
+
+// prepare discretises; false if ctx ended first.
+func (s *shaped) prepare(ctx context.Context) bool {
+	if s.sys != nil {
+		return true
+	}
+	factor, _, _ := s.m.set.Accuracy.settings()
+	s.plan, s.k = newPlan(&s.m.p), nil
+	s.sys = outline.NewShaped(s.plan.contours, factor, ended(ctx))
+	return s.sys != nil
+}
+
+// move puts a part elsewhere.
+func (s *shaped) move() { s.sys, s.k = nil, nil }
+
+// outside takes other films and temperatures.
+func (s *shaped) outside() {
+	s.k = nil
+	if s.sys == nil {
+		return
+	}
+	l := newPlan(&s.m.p)
+	s.plan = l
+	s.sys = s.sys.Outside(l.contours[len(l.contours)-1].Sides)
+}
+
+// solve finds the temperatures for heats by part.
+func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
+	if !s.prepare(ctx) {
+		return s.m.blank(Cancelled)
+	}
+	r := s.m.blank(Converged)
+	y := s.sys.Respond(s.load(heats), true)
+	hot, mean, out := s.sys.Faces(y)
+	parts := s.m.p.Parts
+	for i := range parts {
+		q, c := &parts[i], s.plan.first[i]
+		copy(r.Surfaces[i], hot[c:])
+		r.Core[i] = hot[c]
+		switch q.Core {
+		case Metal:
+			r.Core[i] = s.sys.Metal(y, c)
+			r.Surfaces[i][0] = r.Core[i]
+			r.Generated += heats[i]
+		case FixedBore:
+			r.Core[i], r.Absorbed[i] = q.Fixed, -s.sys.Leaves(y, c)
+		}
+	}
+	s.walls(r, hot, mean, out)
+	r.Unknowns = s.sys.Len()
+	s.estimate(r)
+	r.Field = shapedField{s.sys.Field(y)}
+	return r
+}
+
+// walls fills in what the result says of the wall.
+func (s *shaped) walls(r *Result, hot []float64, mean float64, out []float64) {
+	w := &s.m.p.Wall
+	last := len(hot) - 1
+	if w.Shape == BarePart {
+		r.WallMax = []float64{hot[last]}
+		for i := range s.m.p.Parts {
+			q := &s.m.p.Parts[i]
+			if q.In >= 0 {
+				continue
+			}
+			r.Surfaces[i][len(q.Rings)] = hot[last]
+			if len(q.Rings) == 0 && q.Core != Metal {
+				r.Core[i] = hot[last]
+			}
+		}
+	} else {
+		copy(r.WallMax, hot[s.plan.wall:])
+	}
+	r.WallMean = mean
+	for i, q := range out {
+		r.Released += q
+		if w.Shape == Rect {
+			r.SideOut[boxOrder[i]] = q
+		}
+	}
+}
+
+// load puts heats by part in the order of the contours.
+func (s *shaped) load(heats []float64) []float64 {
+	h := make([]float64, len(s.plan.contours))
+	for i, q := range heats {
+		if s.m.p.Parts[i].Core == Metal {
+			h[s.plan.first[i]] = q
+		}
+	}
+	return h
+}
+
+// What unresolved densities do to a metal's temperature is of second order in them: found on the reference sections at all accuracies.
+const (
+	looseShare  = 5.0
+	shapedFloor = 1e-5 // of the rise
+)
+
+// estimate fills in ErrorK and PartErrorK.
+func (s *shaped) estimate(r *Result) {
+	l := s.sys.Loose()
+	rise := s.m.rise(r)
+	r.ErrorK = rise * (looseShare*l*l + shapedFloor)
+	for i := range r.PartErrorK {
+		r.PartErrorK[i] = r.ErrorK
+		switch s.m.p.Parts[i].Core {
+		case Body, Bore, Inside: // a hottest place is of first order
+			r.PartErrorK[i] += rise * l
+		case FixedBore:
+			r.PartErrorK[i] = 0
+		}
+		r.ErrorK = math.Max(r.ErrorK, r.PartErrorK[i])
+	}
+}
+
+// influence fills in the rises for 1 W/m in each metal.
+func (s *shaped) influence(ctx context.Context, out [][]float64) Status {
+	if !s.prepare(ctx) {
+		return Cancelled
+	}
+	parts := s.m.p.Parts
+	for j := range parts {
+		if parts[j].Core != Metal {
+			continue
+		}
+		heats := make([]float64, len(parts))
+		heats[j] = 1
+		y := s.sys.Respond(s.load(heats), false)
+		for i := range parts {
+			if parts[i].Core != Metal {
+				continue
+			}
+			if out[i] == nil {
+				out[i] = make([]float64, len(parts))
+			}
+			out[i][j] = s.sys.Metal(y, s.plan.first[i])
+		}
+	}
+	for i := range out { // reciprocal but for what the densities lack
+		for j := range i {
+			if out[i] != nil && out[j] != nil {
+				v := (out[i][j] + out[j][i]) / 2
+				out[i][j], out[j][i] = v, v
+			}
+		}
+	}
+	return Converged
+}
+
+// shapedField is the field of a section that is not round.
+type shapedField struct{ f *outline.ShapedField }
+
+func (f shapedField) At(x, y float64) float64 { return f.f.At(complex(x, y)) }
+
+func (f shapedField) Row(dst []float64, y, x0, dx float64) {
+	for i := range dst {
+		dst[i] = f.f.At(complex(x0+float64(i)*dx, y))
+	}
+}
