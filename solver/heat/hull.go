@@ -89,7 +89,7 @@ func (h *hullWall) shape() outline.Hull {
 	return s
 }
 
-// write winds the string and discretises the hull.
+// write winds the string and discretises the hull; what of an older one still holds is kept.
 func (h *hullWall) write(g *region) {
 	h.collect(g)
 	h.wrap(g)
@@ -97,23 +97,17 @@ func (h *hullWall) write(g *region) {
 	for i := range mirrors {
 		mirrors[i] = g.mirror(i)
 	}
-	h.sys = outline.NewHull(h.shape(), h.discs, mirrors, h.fineness)
+	if h.sys != nil {
+		h.sys = h.sys.Renew(h.shape(), h.discs, mirrors)
+	} else {
+		h.sys = outline.NewHull(h.shape(), h.discs, mirrors, h.fineness)
+	}
 	h.begin(h.sys)
 }
 
-// move follows a piece inside the bundle; where the string has to be wound anew it is false. Results that are out keep their hull.
-func (h *hullWall) move(g *region, i int) bool {
-	h.wrap(g)
-	if !h.sys.Fits(h.shape().Arcs) {
-		return false
-	}
-	sys := h.sys.Moved(i, g.pieces[i].at)
-	if sys == nil {
-		return false
-	}
-	h.sys, h.with = sys, sys
-	h.discs = append([]outline.Disc(nil), h.discs...)
-	h.discs[i].C = g.pieces[i].at
+// move winds the string anew and keeps what does not hang on piece i. Results that are out keep their hull.
+func (h *hullWall) move(g *region, _ int) bool {
+	h.write(g)
 	return true
 }
 

@@ -80,25 +80,43 @@ func polar(r, theta float64) complex128 {
 	return complex(r*c, r*s)
 }
 
-// pieces returns the arcs and strings that carry anything.
+// pieces returns the arcs and strings that carry anything. Their ends follow from the discs that a string joins, not from the arcs given, so that they
+// are the same to the last bit while the discs are.
 func (h *Hull) pieces(discs []Disc) []piece {
 	size := 0.0
 	for _, a := range h.Arcs {
 		size = math.Max(size, discs[a.Disc].A)
 	}
+	n := len(h.Arcs)
+	leaves := make([]float64, n) // angle at which the string leaves
+	for i, a := range h.Arcs {
+		leaves[i] = tangent(discs[a.Disc], discs[h.Arcs[(i+1)%n].Disc], a.To)
+	}
 	var all []piece
 	for i, a := range h.Arcs {
-		d := discs[a.Disc]
-		if turn := a.To - a.From; turn > tinyArc {
-			all = append(all, piece{disc: a.Disc, ends: [2]int{a.Disc, a.Disc}, c: d.C, a: d.A, from: a.From, turn: turn, length: d.A * turn, out: a.Bare})
+		d, next := discs[a.Disc], h.Arcs[(i+1)%n].Disc
+		from := leaves[(i+n-1)%n]
+		turn := leaves[i] - from
+		turn += 2 * math.Pi * math.Round((a.To-a.From-turn)/(2*math.Pi))
+		if turn > tinyArc {
+			all = append(all, piece{disc: a.Disc, ends: [2]int{a.Disc, a.Disc}, c: d.C, a: d.A, from: from, turn: turn, length: d.A * turn, out: a.Bare})
 		}
-		b := h.Arcs[(i+1)%len(h.Arcs)]
-		e := discs[b.Disc]
-		start, end := d.C+polar(d.A, a.To), e.C+polar(e.A, b.From)
+		e := discs[next]
+		start, end := d.C+polar(d.A, leaves[i]), e.C+polar(e.A, leaves[i])
 		l := math.Hypot(real(end-start), imag(end-start))
-		if len(h.Arcs) > 1 && l > tinyString*size {
-			all = append(all, piece{disc: -1, ends: [2]int{a.Disc, b.Disc}, start: start, dir: scale(1/l, end-start), length: l, out: a.String})
+		if n > 1 && l > tinyString*size {
+			all = append(all, piece{disc: -1, ends: [2]int{a.Disc, next}, start: start, dir: scale(1/l, end-start), length: l, out: a.String})
 		}
 	}
 	return all
+}
+
+// tangent is the angle at which a string round d and then e, counterclockwise, leaves d; angle, if there is none.
+func tangent(d, e Disc, angle float64) float64 {
+	v := e.C - d.C
+	l := math.Hypot(real(v), imag(v))
+	if l <= math.Abs(d.A-e.A) {
+		return angle
+	}
+	return math.Atan2(imag(v), real(v)) - math.Acos((d.A-e.A)/l)
 }

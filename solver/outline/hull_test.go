@@ -123,10 +123,6 @@ func within(t *testing.T, what string, got, want, tol float64) {
 func TestHullCouplingByQuadrature(t *testing.T) {
 	discs := four()
 	s := NewHull(heap(discs, still), discs, mirrorsOf(discs, 0), 1)
-	s.flux, s.temp = make([]float64, s.n*s.n), make([]float64, s.n*s.n)
-	for i := range s.panels {
-		s.coupleRows(i)
-	}
 	for i := range s.panels {
 		for j := range s.panels {
 			to, from := &s.panels[i], &s.panels[j]
@@ -137,8 +133,8 @@ func TestHullCouplingByQuadrature(t *testing.T) {
 			for l := range to.p {
 				for k := range from.p {
 					flux, temp := byQuadrature(from, to, at[l], at[l+1], k)
-					within(t, "flux", s.block(s.flux, from, to, l)[k], flux, 1e-5)
-					within(t, "temp", s.block(s.temp, from, to, l)[k], temp, 1e-5*from.half)
+					within(t, "flux", s.block(s.direct.flux, from, to, l)[k], flux, 1e-5)
+					within(t, "temp", s.block(s.direct.temp, from, to, l)[k], temp, 1e-5*from.half)
 				}
 			}
 		}
@@ -276,19 +272,25 @@ func TestHullChanges(t *testing.T) {
 		h.Arcs[i].Bare, h.Arcs[i].String = Outside{Film: 3, Temp: 25, Absorbed: 100}, Outside{Film: float64(4 + i), Temp: 22}
 	}
 	compare(t, "outside", s.Outside(h.Arcs), NewHull(h, discs, m, 1), src, 1e-9)
-	to := discs[3].C + 0.1e-3
-	moved := append([]Disc(nil), discs...)
-	moved[3].C = to
-	got := s.Outside(h.Arcs).Moved(3, to)
-	if got == nil {
-		t.Fatal("a part inside needs a new hull")
-	}
-	compare(t, "moved", got, NewHull(h, moved, m, 1), src, 1e-3)
-	if s.Moved(1, discs[1].C+1e-4) != nil {
-		t.Error("a part on the hull moves without a new hull")
-	}
-	if !s.Fits(h.Arcs) || s.Fits(heap(four()[:3], still).Arcs[:2]) {
-		t.Error("hulls mistaken for each other")
+	s = s.Outside(h.Arcs)
+	for _, c := range []struct {
+		what string
+		disc int
+		by   complex128
+		keep bool // the factors
+		tol  float64
+	}{{"inside, with the panels as they were", 3, 0.1e-3, true, 5e-4}, {"on the hull", 1, 0.05e-3 + 0.1e-3i, false, 1e-9}, {"nowhere", 0, 0, true, 1e-9}} {
+		moved := append([]Disc(nil), discs...)
+		moved[c.disc].C += c.by
+		g := heap(moved, still)
+		for i := range g.Arcs {
+			g.Arcs[i].Bare, g.Arcs[i].String = h.Arcs[i].Bare, h.Arcs[i].String
+		}
+		renewed := s.Renew(g, moved, m)
+		compare(t, c.what, renewed, NewHull(g, moved, m, 1), src, c.tol)
+		if kept := &renewed.lu.Data[0] == &s.lu.Data[0]; kept != c.keep {
+			t.Errorf("%s: factors kept %v", c.what, kept)
+		}
 	}
 }
 

@@ -1,11 +1,15 @@
 package outline
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
-// couple fills flux and temp: what every density makes in every cell, and what the parts send straight back of it beyond their orders.
-func (s *HullSystem) couple() {
-	s.flux, s.temp = make([]float64, s.n*s.n), make([]float64, s.n*s.n)
-	each(len(s.panels), func(i int) { s.coupleRows(i) })
+// couple fills direct and means: what every density makes in every cell, and what the parts send straight back of it beyond their orders.
+func (s *HullSystem) couple(k *known) {
+	s.direct = newMeans(s.n)
+	each(len(s.panels), func(i int) { s.coupleRows(i, k) })
+	s.means = means{slices.Clone(s.direct.flux), slices.Clone(s.direct.temp)}
 	for i := range s.discs {
 		s.reflect(i)
 	}
@@ -19,12 +23,16 @@ func (s *HullSystem) couple() {
 	}
 }
 
-// coupleRows fills the rows of panel i.
-func (s *HullSystem) coupleRows(i int) {
+// coupleRows fills the rows of panel i in direct.
+func (s *HullSystem) coupleRows(i int, known *known) {
 	to := &s.panels[i]
 	var v views
 	for j := range s.panels {
 		from := &s.panels[j]
+		if known.panel[i] >= 0 && known.panel[j] >= 0 {
+			known.copy(s, i, j)
+			continue
+		}
 		switch {
 		case from.disc >= 0 && from.disc == to.disc:
 			s.sameCircle(from, to)
@@ -36,6 +44,16 @@ func (s *HullSystem) coupleRows(i int) {
 			v.middles(from, to, nil)
 			s.across(from, to, &v)
 		}
+	}
+}
+
+// copy takes over what panel j makes on panel i.
+func (k *known) copy(s *HullSystem, i, j int) {
+	o := k.old
+	to, from, oldTo, oldFrom := &s.panels[i], &s.panels[j], &o.panels[k.panel[i]], &o.panels[k.panel[j]]
+	for l := range to.p {
+		copy(s.block(s.direct.flux, from, to, l), o.block(o.direct.flux, oldFrom, oldTo, l))
+		copy(s.block(s.direct.temp, from, to, l), o.block(o.direct.temp, oldFrom, oldTo, l))
 	}
 }
 
@@ -123,7 +141,7 @@ func (s *HullSystem) straight(from, to *bow, v *views) {
 	unit, log := from.unit(), from.log()
 	at := cellsOf[to.p].at
 	for l := range to.p {
-		flux, temp := s.block(s.flux, from, to, l), s.block(s.temp, from, to, l)
+		flux, temp := s.block(s.direct.flux, from, to, l), s.block(s.direct.temp, from, to, l)
 		e0, e1 := &v.end[l], &v.end[l+1]
 		step := inverse(e1.w - e0.w)
 		c := unit / (to.half * (at[l+1] - at[l]))
@@ -142,7 +160,7 @@ func (s *HullSystem) across(from, to *bow, v *views) {
 	unit, log := from.unit(), from.log()
 	at := cellsOf[to.p].at
 	for l := range to.p {
-		flux, temp := s.block(s.flux, from, to, l), s.block(s.temp, from, to, l)
+		flux, temp := s.block(s.direct.flux, from, to, l), s.block(s.direct.temp, from, to, l)
 		c := unit / (to.half * (at[l+1] - at[l]))
 		for k := range flux {
 			flux[k] = c * (imag(v.end[l+1].value(k)) - imag(v.end[l].value(k)))
@@ -159,7 +177,7 @@ func (s *HullSystem) sameCircle(from, to *bow) {
 	var e0, e1, m sight
 	from.look(to.at(at[0]), &e0, 0, true)
 	for l := range to.p {
-		flux, temp := s.block(s.flux, from, to, l), s.block(s.temp, from, to, l)
+		flux, temp := s.block(s.direct.flux, from, to, l), s.block(s.direct.temp, from, to, l)
 		near := real(e0.w)
 		from.look(to.at(at[l+1]), &e1, near, true)
 		from.look(to.at((at[l]+at[l+1])/2), &m, near, false)

@@ -14,47 +14,74 @@ type hullDisc struct {
 	Disc
 	mirror Mirror
 	order  []int // density or cell, as the system counts them
+	first  []int // per panel, where it begins in this order
+	reach  []int // per panel, the harmonics that count
 	// For q or b_0, Re d_1 or Re b_1, Im … in turn: what a unit of it sends to the conditions, and (minus) to the means of T; and what the densities send
 	// to it.
 	send, warm, receive [][]float64
 }
 
 // link fills the exchange of disc i with all panels.
-func (s *HullSystem) link(i int) {
+func (s *HullSystem) link(i int, k *known) {
 	d := &s.discs[i]
-	reach := make([]int, len(s.panels)) // harmonics that count
+	if k.disc[i] && k.all {
+		s.discs[i] = k.old.discs[i]
+		return
+	}
+	d.reach, d.first = make([]int, len(s.panels)), make([]int, len(s.panels))
 	near := make([]int, len(s.panels))
 	size := make([]int, 1+2*d.M)
 	for j := range s.panels {
 		b := &s.panels[j]
-		near[j], reach[j] = j, d.M
+		near[j], d.reach[j] = j, d.M
 		if b.disc != i {
 			if r := b.distance(d.C); r > 1.0001*d.A {
-				reach[j] = min(d.M, 1+int(math.Log(decayed)/math.Log(d.A/r)))
+				d.reach[j] = min(d.M, 1+int(math.Log(decayed)/math.Log(d.A/r)))
 			}
 		}
-		for c := range 1 + 2*reach[j] {
+		for c := range 1 + 2*d.reach[j] {
 			size[c] += b.p
 		}
 	}
-	slices.SortStableFunc(near, func(a, b int) int { return cmp.Compare(reach[b], reach[a]) })
+	slices.SortStableFunc(near, func(a, b int) int { return cmp.Compare(d.reach[b], d.reach[a]) })
 	d.send, d.warm, d.receive = columns(size), columns(size), columns(size)
 	d.order = make([]int, 0, s.n)
 	var x exchange
 	for _, j := range near {
 		b := &s.panels[j]
-		x.fill(&d.Disc, b, s.hull.MediumK, reach[j])
-		p := &s.pieces[b.piece]
-		scale, film := s.scaleOf(p), s.film(p)
-		first, cols := len(d.order), 1+2*reach[j]
+		d.first[j] = len(d.order)
 		for l := range b.p {
 			d.order = append(d.order, b.dof+l)
-			for c := range cols {
-				flux, temp := x.flux[l*cols+c], x.temp[l*cols+c]
-				d.send[c][first+l] = scale * (2*flux + film*temp)
-				d.warm[c][first+l] = temp
-				d.receive[c][first+l] = x.receive[l*cols+c]
-			}
+		}
+		if k.disc[i] && k.panel[j] >= 0 {
+			d.copy(&k.old.discs[i], j, k.panel[j], b.p)
+			continue
+		}
+		x.fill(&d.Disc, b, s.hull.MediumK, d.reach[j])
+		d.put(&x, j, b.p, s.scaleOf(&s.pieces[b.piece]), s.film(&s.pieces[b.piece]))
+	}
+}
+
+// copy takes over what an older d exchanged with panel old, which is now j.
+func (d *hullDisc) copy(o *hullDisc, j, old, p int) {
+	to, from := d.first[j], o.first[old]
+	for c := range 1 + 2*d.reach[j] {
+		copy(d.send[c][to:to+p], o.send[c][from:])
+		copy(d.warm[c][to:to+p], o.warm[c][from:])
+		copy(d.receive[c][to:to+p], o.receive[c][from:])
+	}
+}
+
+// put stores the exchange with panel j.
+func (d *hullDisc) put(x *exchange, j, p int, scale, film float64) {
+	cols := 1 + 2*d.reach[j]
+	for l := range p {
+		at := d.first[j] + l
+		for c := range cols {
+			flux, temp := x.flux[l*cols+c], x.temp[l*cols+c]
+			d.send[c][at] = scale * (2*flux + film*temp)
+			d.warm[c][at] = temp
+			d.receive[c][at] = x.receive[l*cols+c]
 		}
 	}
 }

@@ -30,7 +30,7 @@ func (s *HullSystem) High(y []float64, top int) [][]complex128 {
 	var x exchange
 	for i := range s.discs {
 		d := &s.discs[i]
-		kin := s.kin(i, d.Disc)
+		kin := s.kin(i)
 		if len(kin) == 0 || top <= d.M {
 			continue
 		}

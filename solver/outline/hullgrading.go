@@ -64,14 +64,25 @@ func divide(length float64, left, leftSum, right, rightSum []float64) []float64 
 	return cuts
 }
 
-// panels cuts every piece and numbers the unknowns.
-func (g *hullGrading) panels(pieces []piece) (all []bow, unknowns int) {
+// panels cuts every piece and numbers the unknowns. A piece that old has too keeps its panels if they will still do.
+func (g *hullGrading) panels(pieces []piece, old *HullSystem) (all []bow, unknowns int) {
+	before := make(map[piece][]bow, len(old.pieces))
+	for i := range old.panels {
+		b := &old.panels[i]
+		before[old.pieces[b.piece]] = append(before[old.pieces[b.piece]], *b)
+	}
 	for i := range pieces {
 		q := &pieces[i]
-		cuts := g.cuts(q)
-		for j := 1; j < len(cuts); j++ {
-			b := newBow(q, i, cuts[j-1], cuts[j], g.modes(q, cuts[j]-cuts[j-1]))
-			b.dof = unknowns
+		some := before[*q]
+		if len(some) == 0 || !g.resolve(q, some) {
+			some = some[:0:0]
+			cuts := g.cuts(q)
+			for j := 1; j < len(cuts); j++ {
+				some = append(some, newBow(q, i, cuts[j-1], cuts[j], modes))
+			}
+		}
+		for _, b := range some {
+			b.piece, b.dof = i, unknowns
 			all = append(all, b)
 			unknowns += b.p
 		}
@@ -79,5 +90,15 @@ func (g *hullGrading) panels(pieces []piece) (all []bow, unknowns int) {
 	return all, unknowns
 }
 
-// modes is the number that a panel of that length needs.
-func (g *hullGrading) modes(*piece, float64) int { return modes }
+// resolve tells whether panels of a piece are short enough for all discs, to the tolerance that a drag can bear.
+func (g *hullGrading) resolve(p *piece, panels []bow) bool {
+	for i := range panels {
+		b := &panels[i]
+		for _, t := range [3]float64{-0.7, 0, 0.7} {
+			if g.length(p, b.along+t*b.half) < 1.2*b.half {
+				return false
+			}
+		}
+	}
+	return true
+}

@@ -71,10 +71,3 @@ func (p *HullPatches) Means(t, y []float64, src Sources) {
 		}
 	}
 }
-
-// Moved returns the patches of a system in which only discs inside have moved.
-func (p *HullPatches) Moved(s *HullSystem) *HullPatches {
-	q := *p
-	q.s = s
-	return &q
-}

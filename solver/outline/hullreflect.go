@@ -2,15 +2,16 @@ package outline
 
 import "math"
 
-// kin returns the panels that disc i, at d, is solved with to all orders: its own arcs, the strings that leave it, and strings that pass close by.
-func (s *HullSystem) kin(i int, d Disc) (all []int) {
+// kin returns the panels that disc i is solved with to all orders: its own arcs, the strings that leave it, and strings that pass close by.
+func (s *HullSystem) kin(i int) (all []int) {
+	d := &s.discs[i].Disc
 	for j := range s.panels {
 		b := &s.panels[j]
 		p := &s.pieces[b.piece]
 		switch {
 		case p.ends[0] == i || p.ends[1] == i:
 			all = append(all, j)
-		case p.disc < 0 && p.gap(&d) < kinShare*d.A:
+		case p.disc < 0 && p.gap(d) < kinShare*d.A:
 			all = append(all, j)
 		}
 	}
@@ -29,7 +30,7 @@ func (p *piece) gap(d *Disc) float64 {
 // Hydrodynamics); what it reflects otherwise is summed.
 func (s *HullSystem) reflect(i int) {
 	d := &s.discs[i]
-	kin := s.kin(i, d.Disc)
+	kin := s.kin(i)
 	if len(kin) == 0 {
 		return
 	}

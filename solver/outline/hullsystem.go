@@ -9,33 +9,52 @@ import (
 )
 
 // HullSystem is a Hull with its parts, discretised and factorised: unknowns y are the densities on its arcs and strings and the constant T_c, as of
-// a System. Safe for concurrent use after NewHull, except for Move and Outside.
+// a System. It is not changed once made, and safe for concurrent use.
 type HullSystem struct {
 	hull    Hull
 	grading hullGrading
 	pieces  []piece
 	panels  []bow
 	n       int // densities; the unknown n is T_c
-	// Means over cells for each density, n columns: of the heat flow's ∂T/∂n + σ/2 on the inner side, and of T.
-	flux, temp []float64
-	lu         blas64.General
-	pivots     []int
-	discs      []hullDisc
+	discs   []hullDisc
+	direct  means // of the densities themselves
+	means         // with what parts send straight back
+	lu      blas64.General
+	pivots  []int
 }
+
+// means are, for each cell and density (n columns), those of the inner side's ∂T/∂n and of T.
+type means struct{ flux, temp []float64 }
+
+func newMeans(n int) means { return means{make([]float64, n*n), make([]float64, n*n)} }
 
 // NewHull discretises the hull and factorises; fineness 1 is standard, 0.7 draft, 1.5 fine. mirrors has one entry per disc. Every disc must lie inside
 // the hull. A hull without arcs, arcs of no disc, negative films and a conductivity that is not positive panic.
 func NewHull(h Hull, discs []Disc, mirrors []Mirror, fineness float64) *HullSystem {
+	return newHull(h, discs, mirrors, fineness, &HullSystem{})
+}
+
+// Renew is NewHull for discs that moved, were refined, or lie in a hull that has changed, at the fineness of s. What is as it was in s is taken over: for
+// dragging.
+func (s *HullSystem) Renew(h Hull, discs []Disc, mirrors []Mirror) *HullSystem {
+	return newHull(h, discs, mirrors, s.grading.fineness, s)
+}
+
+func newHull(h Hull, discs []Disc, mirrors []Mirror, fineness float64, old *HullSystem) *HullSystem {
 	h.check(discs)
 	h.Arcs = append([]Arc(nil), h.Arcs...)
 	s := &HullSystem{hull: h, grading: newHullGrading(append([]Disc(nil), discs...), fineness), pieces: h.pieces(discs)}
-	s.panels, s.n = s.grading.panels(s.pieces)
+	s.panels, s.n = s.grading.panels(s.pieces, old)
 	s.discs = make([]hullDisc, len(discs))
-	each(len(discs), func(i int) {
+	for i := range discs {
 		s.discs[i] = hullDisc{Disc: discs[i], mirror: mirrors[i]}
-		s.link(i)
-	})
-	s.couple()
+	}
+	k := s.known(old)
+	each(len(discs), func(i int) { s.link(i, k) })
+	if s.takeOver(k) {
+		return s
+	}
+	s.couple(k)
 	s.factorise()
 	return s
 }
@@ -43,7 +62,7 @@ func NewHull(h Hull, discs []Disc, mirrors []Mirror, fineness float64) *HullSyst
 // Len returns the number of unknowns.
 func (s *HullSystem) Len() int { return s.n + 1 }
 
-// films returns h·2/k of each piece; a piece that is held has a film under which nothing can be measured.
+// film returns 2h/k of a piece; what is held has a film through which nothing can be measured.
 func (s *HullSystem) film(p *piece) float64 {
 	h := p.out.Film
 	if most := 1e9 * s.hull.MediumK / s.size(); h > most {
