@@ -124,7 +124,11 @@ func TestInfluenceGivesTheLoad(t *testing.T) {
 			for j, f := range row {
 				sum += f * p.Parts[j].Heat
 			}
-			if math.Abs(sum-rise) > 1e-4*rise {
+			within := 2e-5
+			if p.Wall.Shape == heat.Rect { // a foil for a wall is the worst
+				within = 1e-3
+			}
+			if math.Abs(sum-rise) > within*rise {
 				t.Errorf("part %d: %.7f K by influence, %.7f K by one load", i, sum, rise)
 			}
 		}
