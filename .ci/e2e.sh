@@ -48,6 +48,10 @@ wait_for() { until_ 60 "$1" said "$1"; }
 place() { sed -n "s/^part $1 at \([0-9]*\),\([0-9]*\) px$/\1 \2/p" "$trace" | tail -n 1; }
 keys() { xdotool key --clearmodifiers "$@"; }
 
+# --- what the other checks leave out, since it needs the toolkit's OpenGL package, which is compiled for this one anyway
+step "test cmd/packrise"
+go test ./cmd/packrise/... >"$out/cmd-test.txt" 2>&1 || { cat "$out/cmd-test.txt" >&2; fail "go test ./cmd/packrise/..."; }
+
 # --- a display of its own
 for tool in Xvfb openbox xdotool import; do
   command -v $tool >/dev/null || { echo "e2e: $tool is missing: run .ci/setup look" >&2; exit 1; }
