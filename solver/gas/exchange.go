@@ -1,6 +1,9 @@
 package gas
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // Sigma is the Stefan–Boltzmann constant, W/m²K⁴ (CODATA 2018, exact digits 5.670374419…e-8).
 const Sigma = 5.670374419e-8
@@ -10,6 +13,7 @@ type Exchange struct {
 	*Enclosure
 	emissivity []float64
 	root       []float64 // √((1−ε)/A)
+	rho        []float64 // (1−ε)/(ε A), nil if something is bright
 
 	node  []float64 // W/mK from each patch to the air node, nil without one
 	total float64
@@ -25,8 +29,25 @@ func NewExchange(e *Enclosure, emissivity []float64) *Exchange {
 	for i, v := range emissivity {
 		x.root[i] = math.Sqrt((1 - v) / e.Area(i))
 	}
+	if len(emissivity) > 0 && slices.Min(emissivity) >= bright {
+		x.rho = make([]float64, n)
+		for i, v := range emissivity {
+			x.rho[i] = (1 - v) / (v * e.Area(i))
+		}
+	}
 	return x
 }
+
+// Fork is the exchange with work space of its own, so that both can be used at the same time; neither may be changed meanwhile.
+func (x *Exchange) Fork() *Exchange {
+	f := *x
+	n := x.Len()
+	f.y, f.b, f.p, f.q, f.r = make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n)
+	return &f
+}
+
+// bright is the emissivity below which radiosities are better found by themselves than along with the emissions.
+const bright = 0.5
 
 // Net sets out to the net emission (W/m) of patches at temperatures t (K). Their sum is nought.
 func (x *Exchange) Net(out, t []float64) {
@@ -40,12 +61,54 @@ func (x *Exchange) Net(out, t []float64) {
 
 // Change sets out to the change of the net emission for small changes dt (K) of temperatures t.
 func (x *Exchange) Change(out, t, dt []float64) {
+	x.slope(t, dt)
+	x.radiate(out)
+	x.convect(out, dt)
+}
+
+// slope puts the change of the black emissive powers into y.
+func (x *Exchange) slope(t, dt []float64) {
 	for i, v := range t {
 		v = math.Max(v, 0)
 		x.y[i] = 4 * Sigma * v * v * v * dt[i]
 	}
-	x.radiate(out)
+}
+
+// NetOf is Net for an iteration that seeks the emissions e (W/m) as well: where surfaces are dark enough it takes their radiosities from e, so
+// that out is the net emission only if it equals e.
+func (x *Exchange) NetOf(out, t, e []float64) {
+	if x.rho == nil {
+		x.Net(out, t)
+		return
+	}
+	for i, v := range t {
+		v = math.Max(v, 0)
+		x.y[i] = Sigma * v * v * v * v
+	}
+	x.leave(out, e)
+	x.convect(out, t)
+}
+
+// ChangeOf is to NetOf what Change is to Net, for small changes dt and de.
+func (x *Exchange) ChangeOf(out, t, dt, de []float64) {
+	if x.rho == nil {
+		x.Change(out, t, dt)
+		return
+	}
+	x.slope(t, dt)
+	x.leave(out, de)
 	x.convect(out, dt)
+}
+
+// leave sets out to (A − G) J with the radiosities J = y − (1−ε)/(ε A) e.
+func (x *Exchange) leave(out, e []float64) {
+	for i, v := range x.y {
+		x.b[i] = v - x.rho[i]*e[i]
+	}
+	x.Product(out, x.b)
+	for i := range out {
+		out[i] = x.Area(i)*x.b[i] - out[i]
+	}
 }
 
 const radiosityTolerance = 1e-11

@@ -154,3 +154,33 @@ func TestStir(t *testing.T) {
 		t.Errorf("a gap of 5 mm convects: Nu %g", nu)
 	}
 }
+
+// Seeking emissions along with temperatures ends at the same ones: NetOf returns the net emission when it is given it, and ChangeOf its change.
+func TestNetOf(t *testing.T) {
+	r := rand.New(rand.NewPCG(6, 2))
+	e := gas.NewEnclosure(scatter(r, 9, false), ring(10, 40), 2)
+	temp, dt := make([]float64, e.Len()), make([]float64, e.Len())
+	for k := range temp {
+		temp[k], dt[k] = 300+80*r.Float64(), r.Float64()-0.5
+	}
+	for _, least := range []float64{0.05, 0.6} {
+		eps := make([]float64, e.Len())
+		for k := range eps {
+			eps[k] = least + (1-least)*r.Float64()
+		}
+		x := gas.NewExchange(e, eps)
+		net, again := make([]float64, e.Len()), make([]float64, e.Len())
+		for what, f := range map[string][2]func(){
+			"net":    {func() { x.Net(net, temp) }, func() { x.NetOf(again, temp, net) }},
+			"change": {func() { x.Change(net, temp, dt) }, func() { x.ChangeOf(again, temp, dt, net) }},
+		} {
+			f[0]()
+			f[1]()
+			for k := range net {
+				if math.Abs(net[k]-again[k]) > 1e-8 {
+					t.Fatalf("ε from %g, %s: %g, want %g", least, what, again[k], net[k])
+				}
+			}
+		}
+	}
+}

@@ -22,6 +22,13 @@ func (s *System) Charges() *Charges {
 	return c
 }
 
+// Fork is the same couplings for a fork of the system; neither may be written to meanwhile.
+func (c *Charges) Fork(s *System) *Charges {
+	f := *c
+	f.s = s
+	return &f
+}
+
 // Follow works out anew what has changed since: discs that System.Put replaced.
 func (c *Charges) Follow() {
 	for i, d := range c.s.discs {

@@ -103,29 +103,20 @@ func (c *coupled) miss(r, z []float64, ground bool, net func(k *knot, out []floa
 	}
 }
 
-// net is the emission that the patches' temperatures ask for.
-func (k *knot) netOf(out []float64) {
-	t := k.rad.warm
-	for p, v := range k.t {
-		t[p] = v + k.rad.zero
-	}
-	k.rad.ex.Net(out, t)
-}
-
-// about is netOf, to first order about the temperatures k.rad.base (K).
+// about is the emission that the patches' temperatures ask for, to first order about the temperatures k.rad.base (K).
 func (k *knot) about(out []float64) {
 	d := k.rad.warm
 	for p, v := range k.t {
 		d[p] = v + k.rad.zero - k.rad.base[p]
 	}
-	k.rad.ex.Change(out, k.rad.base, d)
+	k.rad.ex.ChangeOf(out, k.rad.base, d, k.emission)
 	for p, v := range k.rad.still {
 		out[p] += v
 	}
 }
 
-// change is how netOf changes with temperatures k.t about the base.
-func (k *knot) change(out []float64) { k.rad.ex.Change(out, k.rad.base, k.t) }
+// change is how that changes with temperatures and emissions about the base.
+func (k *knot) change(out []float64) { k.rad.ex.ChangeOf(out, k.rad.base, k.t, k.emission) }
 
 // rebase takes the patches' present temperatures for the base, and lets the air move by them.
 func (k *knot) rebase() {
@@ -136,7 +127,7 @@ func (k *knot) rebase() {
 		k.rad.base[p] = math.Max(v+k.rad.zero, 1)
 	}
 	k.rad.stir(k.rad.base)
-	k.rad.ex.Net(k.rad.still, k.rad.base)
+	k.rad.ex.NetOf(k.rad.still, k.rad.base, k.emission)
 }
 
 // guess takes one temperature for the base of all patches.

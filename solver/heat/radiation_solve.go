@@ -156,7 +156,7 @@ func (m *Model) solveCoupled(ctx context.Context, q []float64) *Result {
 	s := c.top.state(c.z, c.q)
 	r := m.result(s)
 	m.estimate(r, s, c.q)
-	r.Steps, r.Status, r.Frozen = steps, status, frozen
+	r.Steps, r.Status, r.Radiates, r.Frozen = steps, status, true, frozen
 	r.Unknowns = len(c.z)
 	if rad := c.top.rad; rad != nil {
 		r.Nusselt, r.Beyond = rad.nu, !rad.inRange

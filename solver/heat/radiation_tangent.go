@@ -1,9 +1,13 @@
 package heat
 
-import "context"
+import (
+	"context"
+	"sync"
+	"sync/atomic"
+)
 
 // tangentTolerance is the residual of a column of the influence matrix of a section that radiates.
-const tangentTolerance = 1e-5
+const tangentTolerance = 1e-4
 
 // Radiates tells whether surfaces radiate to each other in the section.
 func (m *Model) Radiates() bool { return m.top != nil && m.top.opens() }
@@ -62,21 +66,79 @@ func (m *Model) tangent(ctx context.Context) ([][]float64, bool) {
 	for s := range k {
 		k[s] = make([]float64, n)
 	}
-	for s := range n {
-		if held[s] {
-			continue
-		}
-		rise, ok := c.column(ctx, s)
-		if !ok {
-			return nil, false
-		}
-		for i, t := range rise {
-			if !held[i] {
-				k[i][s] = t
+	var next atomic.Int64
+	var failed atomic.Bool
+	work := func(c *coupled) {
+		for s := int(next.Add(1)) - 1; s < n && !failed.Load(); s = int(next.Add(1)) - 1 {
+			if held[s] {
+				continue
+			}
+			rise, ok := c.column(ctx, s)
+			if !ok {
+				failed.Store(true)
+				return
+			}
+			for i, t := range rise {
+				if !held[i] {
+					k[i][s] = t
+				}
 			}
 		}
 	}
-	return k, true
+	var all sync.WaitGroup
+	for range min(m.set.threads(), n) - 1 {
+		mine := c.fork()
+		all.Go(func() { work(mine) })
+	}
+	work(c.fork())
+	all.Wait()
+	return k, !failed.Load()
+}
+
+// fork is the same system with work space of its own.
+func (c *coupled) fork() *coupled {
+	f := *c
+	f.top = c.top.fork()
+	f.q = make([]float64, len(c.q))
+	return &f
+}
+
+// fork is the knot with work space of its own.
+func (k *knot) fork() *knot {
+	f := *k
+	f.g = k.g.fork()
+	f.charges = k.charges.Fork(f.g.sys)
+	f.charge, f.heat = make([]float64, len(k.charge)), make([]float64, len(k.heat))
+	f.emission, f.t = make([]float64, len(k.emission)), make([]float64, len(k.t))
+	f.absorbed = make([]float64, len(k.absorbed))
+	f.reflect = nil
+	if k.rad != nil {
+		f.rad = k.rad.fork(f.g)
+	}
+	f.bonds = append([]bond(nil), k.bonds...)
+	for i := range f.bonds {
+		b := &f.bonds[i]
+		b.t = nil
+		if b.inside != nil {
+			b.inside = b.inside.fork()
+		}
+	}
+	f.fit()
+	return &f
+}
+
+// fork is the same surfaces with room of their own.
+func (r *radiant) fork(g *region) *radiant {
+	f := *r
+	f.ex = r.ex.Fork()
+	f.net, f.warm = make([]float64, len(r.net)), make([]float64, len(r.warm))
+	if r.sides != nil {
+		s := *r.sides
+		s.wall = g.border.(*rectWall)
+		s.taken = make([]float64, len(r.sides.taken))
+		f.sides = &s
+	}
+	return &f
 }
 
 // column is the rise of all sources for 1 W/m more in source s.

@@ -15,6 +15,7 @@ type Result struct {
 	Status     Status
 	Unknowns   int     // real unknowns
 	Steps      int     // of the iteration
+	Radiates   bool    // surfaces radiate to each other
 	Frozen     bool    // radiation as it was before a part moved the last millimetre; only of a Draft
 	Nusselt    float64 // how many times more heat crosses the holder's air, where it is free, than by conduction; 1 where it does not move
 	Beyond     bool    // the formula for that is beyond its range

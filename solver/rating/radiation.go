@@ -70,8 +70,11 @@ func (s *scene) radiationNote(a answered) string {
 			add(s.parts[j].skin)
 		}
 	}
-	if len(skins) == 0 {
+	if len(skins) == 0 || a.heat == nil {
 		return ""
+	}
+	if !a.heat.Radiates {
+		return LeftOut
 	}
 	slices.Sort(skins)
 	words := make([]string, len(skins))
@@ -79,7 +82,7 @@ func (s *scene) radiationNote(a answered) string {
 		words[i] = digits(e, 2)
 	}
 	note := "surfaces radiate through the gas between them, emissivity " + strings.Join(words, ", ")
-	if h := a.heat; h != nil && h.Nusselt > 1.005 {
+	if h := a.heat; h.Nusselt > 1.005 {
 		note += fmt.Sprintf("; in the free space the air carries %s times what it conducts (Raithby and Hollands 1975, ±25 %%)", digits(h.Nusselt, 2))
 		if h.Beyond {
 			note += ", beyond that formula's range"
