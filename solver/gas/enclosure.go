@@ -8,10 +8,14 @@ import (
 // Disc is a round surface with centre C and radius R. Its patches lie between Cuts, angles (rad) that rise by at most 2π in all; what they
 // leave out hides what is behind it and is no surface.
 type Disc struct {
-	C    complex128
-	R    float64
-	Cuts []float64
+	C     complex128
+	R     float64
+	Cuts  []float64
+	Blank []bool // patches between cuts that are no surface and see nothing either; nil: none
 }
+
+// blank tells whether patch k is none.
+func (d *Disc) blank(k int) bool { return k < len(d.Blank) && d.Blank[k] }
 
 // Segment is a patch of an outline.
 type Segment struct{ A, B complex128 }
@@ -170,7 +174,7 @@ func (e *Enclosure) Alike(discs []Disc, out Outline, points int) bool {
 		return false
 	}
 	for i := range discs {
-		if o := &e.discs[i]; o.R != discs[i].R || !slices.Equal(o.Cuts, discs[i].Cuts) {
+		if o := &e.discs[i]; o.R != discs[i].R || !slices.Equal(o.Cuts, discs[i].Cuts) || !slices.Equal(o.Blank, discs[i].Blank) {
 			return false
 		}
 	}

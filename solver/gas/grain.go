@@ -1,6 +1,10 @@
 package gas
 
-import "math"
+import (
+	"cmp"
+	"math"
+	"slices"
+)
 
 // Grain decides how long patches may be: a disc of radius r gets PerTurn, an outline Turn in all, and nowhere is a patch longer than about half the
 // radius of a smaller disc beside it.
@@ -39,6 +43,40 @@ func (g *Grain) Cuts(i int) []float64 {
 		cuts = g.bisect(cuts, a, b, usual, i, d.C, d.R)
 	}
 	return cuts
+}
+
+// Between divides disc i where arcs of it, counterclockwise from one angle to another, are no surface: blank tells which patches these are.
+func (g *Grain) Between(i int, arcs [][2]float64) (cuts []float64, blank []bool) {
+	d := &g.Discs[i]
+	if len(arcs) == 0 {
+		return g.Cuts(i), nil
+	}
+	arcs = slices.Clone(arcs)
+	slices.SortFunc(arcs, func(a, b [2]float64) int { return cmp.Compare(a[0], b[0]) })
+	end := arcs[0][0] + 2*math.Pi
+	cuts = append(cuts, arcs[0][0])
+	for k, a := range arcs {
+		if a[1]-a[0] > 0 {
+			cuts, blank = append(cuts, math.Min(a[1], end)), append(blank, true)
+		}
+		to := end
+		if k+1 < len(arcs) {
+			to = arcs[k+1][0]
+		}
+		turn := to - cuts[len(cuts)-1]
+		if turn <= 0 {
+			continue
+		}
+		n := math.Ceil(turn/(2*math.Pi)*g.PerTurn - 1e-9)
+		from := cuts[len(cuts)-1]
+		for j := range int(n) {
+			cuts = g.bisect(cuts, from+turn*float64(j)/n, from+turn*float64(j+1)/n, 2*math.Pi*d.R/g.PerTurn, i, d.C, d.R)
+		}
+		for len(blank) < len(cuts)-1 {
+			blank = append(blank, false)
+		}
+	}
+	return cuts, blank
 }
 
 // Around divides a circle of radius r about the origin that encloses the discs.

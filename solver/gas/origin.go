@@ -24,7 +24,7 @@ func (e *Enclosure) lookFrom(i int) {
 	for k := 1; k < len(d.Cuts); k++ {
 		a, b := d.Cuts[k-1], d.Cuts[k]
 		e.eye.open(e)
-		for a < b {
+		for a < b && !d.blank(k-1) {
 			var m float64
 			m, stops = upTo(stops, a, b)
 			e.fromArc(d, a, m, (m-a)/(b-d.Cuts[k-1]))

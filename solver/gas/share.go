@@ -30,7 +30,7 @@ func (y *eye) onDisc(e *Enclosure, a arc, weight float64) {
 		if se >= a.s1 {
 			l = r1
 		}
-		if k < n { // else no surface
+		if k < n && !d.blank(k) { // else no surface
 			y.add(e.first[i]+k, s, se, r, l, weight)
 		}
 		if se >= a.s1 {

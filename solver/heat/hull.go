@@ -3,6 +3,7 @@ package heat
 import (
 	"math"
 
+	"packrise/solver/gas"
 	"packrise/solver/harmonic"
 	"packrise/solver/outline"
 )
@@ -126,20 +127,47 @@ const highest = 64
 // solved finds the hull's answer to the whole solution, ground included, and adds the means that it sends back.
 func (h *hullWall) solved(g *region, charge, v, mean []float64) *bound {
 	s := h.answer(g, charge, v, mean)
+	h.tell(s)
+	return s
+}
+
+// tell fills in what the hull's unknowns say of it.
+func (h *hullWall) tell(s *bound) {
 	y, sys := s.y, h.sys
 	hot, average, out := sys.Faces(sys.Temperatures(y, h.src))
 	s.hot, s.mean, s.released, s.arcs = []float64{hot}, average, out, h.arcs
 	lo, hi := complex(math.Inf(1), math.Inf(1)), complex(math.Inf(-1), math.Inf(-1))
-	for i := range g.pieces {
-		c := &g.pieces[i]
-		lo = complex(math.Min(real(lo), real(c.at)-c.drawn), math.Min(imag(lo), imag(c.at)-c.drawn))
-		hi = complex(math.Max(real(hi), real(c.at)+c.drawn), math.Max(imag(hi), imag(c.at)+c.drawn))
+	for _, d := range h.discs {
+		lo = complex(math.Min(real(lo), real(d.C)-d.A), math.Min(imag(lo), imag(d.C)-d.A))
+		hi = complex(math.Max(real(hi), real(d.C)+d.A), math.Max(imag(hi), imag(d.C)+d.A))
 	}
-	s.mid, s.half = (lo+hi)/2, math.Max(real(hi-lo), imag(hi-lo))/2
+	s.mid, s.half = (lo+hi)/2, 0.505*math.Max(real(hi-lo), imag(hi-lo)) // pieces are drawn a little larger
 	s.field = func() pointField { return sys.Field(y) }
 	s.high = func() [][]complex128 { return sys.High(y, highest) }
-	return s
 }
+
+// divide divides the strings of a hull that is written.
+func (h *hullWall) divide(grain *gas.Grain) *sides {
+	_, hull := h.sys.Size()
+	usual := hull / grain.Turn
+	p := h.sys.Patches(func(z complex128) float64 { return grain.Longest(z, usual, -1) })
+	return &sides{wall: h, with: &h.exchange, a: p.A, b: p.B, length: p.Length, patch: p, taken: make([]float64, len(p.Length))}
+}
+
+// exposed lists the arcs of piece i that face the outside.
+func (h *hullWall) exposed(i int) (arcs [][2]float64) {
+	for _, a := range h.arcs {
+		if a.Disc == i {
+			arcs = append(arcs, [2]float64{a.From, a.To})
+		}
+	}
+	return arcs
+}
+
+// direct adds nothing: tell sees all that leaves through the film.
+func (h *hullWall) direct(*bound, *sides) {}
+
+func (h *hullWall) follow(s *sides, _ int) bool { return s.patch.(*outline.HullPatches).Follow(h.sys) }
 
 func (h *hullWall) fork() border {
 	f := *h

@@ -47,8 +47,8 @@ type radiant struct {
 	first  []int     // patch of each piece, of the wall, and their number
 	rims   []rim     // of the pieces
 	wall   rim       // of a round wall
-	sides  *sides    // of a rectangle
-	ends   []float64 // m along a rectangle's wall
+	sides  *sides    // of a border
+	ends   []float64 // m along a border's patches
 	zero   float64   // absolute temperature of the common zero
 	stirs  bool
 	press  float64 // Pa
@@ -80,10 +80,12 @@ type rim struct {
 
 // newRim prepares the patches between cuts, of which the first is from. Piecewise constant emissions are told apart by as many harmonics as half
 // the patches of that size would make a turn.
-func newRim(from int, cuts []float64, most int) rim {
+func newRim(from int, cuts []float64, blank []bool, most int) rim {
 	narrow := 2 * math.Pi
 	for k := 1; k < len(cuts); k++ {
-		narrow = math.Min(narrow, cuts[k]-cuts[k-1])
+		if blank == nil || !blank[k-1] {
+			narrow = math.Min(narrow, cuts[k]-cuts[k-1])
+		}
 	}
 	r := rim{from: from, n: len(cuts) - 1, cuts: cuts}
 	r.harmonics = min(max(int(math.Round(math.Pi/narrow))-1, 1), most)
@@ -136,18 +138,22 @@ func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 	r.discs = append(r.discs, grain.Discs...)
 	for i := range r.discs {
 		d := &r.discs[i]
-		d.Cuts = grain.Cuts(i)
-		r.rims = append(r.rims, newRim(r.add(d.R, d.Cuts), d.Cuts, maxRim))
+		if w, ok := g.border.(patched); ok {
+			d.Cuts, d.Blank = grain.Between(i, w.exposed(i))
+		} else {
+			d.Cuts = grain.Cuts(i)
+		}
+		r.rims = append(r.rims, newRim(r.add(d.R, d.Cuts), d.Cuts, d.Blank, maxRim))
 	}
 	if g.border == nil {
 		cuts := grain.Around(g.wall.R)
 		r.out = gas.Ring(g.wall.R, cuts)
-		r.wall = newRim(r.add(g.wall.R, cuts), cuts, maxRing)
+		r.wall = newRim(r.add(g.wall.R, cuts), cuts, nil, maxRing)
 	} else {
-		r.sides = newSides(g.border.(*rectWall), &grain)
+		r.sides = g.border.(patched).divide(&grain)
 		r.out = r.sides.outline()
 		r.ends = []float64{0}
-		for k, l := range r.sides.patch.Length {
+		for k, l := range r.sides.length {
 			r.ends = append(r.ends, r.ends[k]+l)
 		}
 		r.add(1, r.ends)
@@ -238,7 +244,7 @@ func (r *radiant) stir(t []float64) {
 
 // radiates tells whether surfaces radiate to each other through the region's medium.
 func (g *region) radiates() bool {
-	if _, rect := g.border.(*rectWall); g.border != nil && !rect {
+	if _, ok := g.border.(patched); g.border != nil && !ok {
 		return false
 	}
 	return g.filling != Solid

@@ -199,7 +199,7 @@ func (m *Model) glowOn(i int, old []int) {
 		return
 	}
 	if r := c.top.rad; r != nil && r.sides != nil {
-		if !r.sides.follow(i) {
+		if !r.sides.wall.follow(r.sides, i) {
 			m.dim() // the wall was divided anew
 			return
 		}

@@ -1,5 +1,7 @@
 package outline
 
+import "slices"
+
 // HullPatches are pieces of the strings that take up heat on their inner side besides what the medium brings them, such as radiation, and whose
 // mean temperatures are wanted. They stand counterclockwise; where a patch does not begin at the end of the one before, parts lie between.
 type HullPatches struct {
@@ -37,7 +39,7 @@ func (s *HullSystem) Patches(longest func(z complex128) float64) *HullPatches {
 			p.B[k] = to
 			p.Length[k] += b.cell(l)
 			p.row, p.share = append(p.row, b.dof+l), append(p.share, b.cell(l))
-			p.gain = append(p.gain, 2/s.hull.MediumK*s.scaleOf(&s.pieces[b.piece]))
+			p.gain = append(p.gain, s.gain(b.dof+l))
 		}
 	}
 	p.first = append(p.first, len(p.row))
@@ -47,6 +49,37 @@ func (s *HullSystem) Patches(longest func(z complex128) float64) *HullPatches {
 		}
 	}
 	return p
+}
+
+// Follow leads the patches over to a system whose strings are divided like those of the one before; false if they are not.
+func (p *HullPatches) Follow(s *HullSystem) bool {
+	if s == p.s {
+		return true
+	}
+	if s.n != p.s.n || !slices.EqualFunc(s.panels, p.s.panels, func(a, b bow) bool {
+		return a.disc == b.disc && a.mid == b.mid && a.half == b.half && a.dir == b.dir
+	}) {
+		return false
+	}
+	p.s = s
+	for c, row := range p.row {
+		p.gain[c] = s.gain(row)
+	}
+	return true
+}
+
+// gain is what 1 W/m² on the inner side adds to row i.
+func (s *HullSystem) gain(i int) float64 {
+	k, _ := slices.BinarySearchFunc(s.panels, i, func(b bow, i int) int {
+		switch {
+		case b.dof+b.p <= i:
+			return -1
+		case b.dof > i:
+			return 1
+		}
+		return 0
+	})
+	return 2 / s.hull.MediumK * s.scaleOf(&s.pieces[s.panels[k].piece])
 }
 
 // RespondTo is HullSystem.RespondTo with w (W/m) going into each patch besides.

@@ -72,11 +72,21 @@ func (s *HullSystem) film(p *piece) float64 {
 }
 
 // size is the length of the hull.
-func (s *HullSystem) size() (l float64) {
-	for i := range s.pieces {
-		l += s.pieces[i].length
-	}
+func (s *HullSystem) size() float64 {
+	_, l := s.Size()
 	return l
+}
+
+// Size returns the length of all strings and of the whole hull, m.
+func (s *HullSystem) Size() (strings, hull float64) {
+	for i := range s.pieces {
+		p := &s.pieces[i]
+		hull += p.length
+		if p.disc < 0 {
+			strings += p.length
+		}
+	}
+	return strings, hull
 }
 
 // scaleOf scales the condition of a piece so that a large film tends to T = outside.

@@ -107,6 +107,9 @@ func (p *Patches) measure() {
 	})
 }
 
+// Of tells whether the patches are those of s.
+func (p *Patches) Of(s *System) bool { return p.s == s }
+
 // Follow works out anew what disc i brings to the patches, after Move.
 func (p *Patches) Follow(i int) {
 	d := &p.s.discs[i].Disc
