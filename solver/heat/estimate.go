@@ -1,6 +1,9 @@
 package heat
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // The estimate rests on the variational property: cutting the harmonics raises the energy Σ q_i T_i by about what the last of them still carry,
 // so that their energy over Σ|q| is the rise of the mean of all conductors, weighted by heat. How the worst of them compares was
@@ -46,6 +49,9 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 		sum += math.Abs(v)
 	}
 	e := m.set.Accuracy.floor() * m.rise(r)
+	if m.top.border != nil && m.metalLayer() {
+		e *= 10 // panels on a foil
+	}
 	if sum > 0 {
 		e += worstShare * s.tail / sum
 	}
@@ -58,6 +64,11 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 	for _, v := range r.PartErrorK {
 		r.ErrorK = math.Max(r.ErrorK, v)
 	}
+}
+
+// metalLayer tells whether any layer of the wall is metal.
+func (m *Model) metalLayer() bool {
+	return slices.ContainsFunc(m.p.Wall.Rings, func(r Ring) bool { return r.K > metalK })
 }
 
 // local adds to parts without a temperature of their own what their last harmonics make of the hottest place.
