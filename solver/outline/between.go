@@ -18,6 +18,19 @@ func (l Loop) support(n complex128) float64 {
 	return far
 }
 
+// Reach is the radius of the smallest circle about the origin that holds the loop.
+func (l Loop) Reach() float64 {
+	far := 0.0
+	for i := range l {
+		s := &l[i]
+		far = math.Max(far, cmplx.Abs(s.From))
+		if c := cmplx.Abs(s.Centre); s.R > 0 && (c == 0 || onRight(s.From, s.To, s.Centre+scale(s.R/c, s.Centre))) {
+			far = math.Max(far, c+s.R)
+		}
+	}
+	return far
+}
+
 // Gap is the distance between two loops; negative: by how much one has to be moved for them to touch.
 func (l Loop) Gap(m Loop) float64 {
 	return -least(func(phi float64) float64 {

@@ -24,4 +24,6 @@ func TestGap(t *testing.T) {
 	} {
 		closeTo(t, name, c.got, c.want, 1e-9)
 	}
+	closeTo(t, "reach of a bar", bar.Reach(), math.Hypot(9.5, 2)+1.5, 1e-12)
+	closeTo(t, "reach of a circle", Circle(3).Placed(0, 4i).Reach(), 7, 1e-12)
 }
