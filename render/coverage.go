@@ -6,6 +6,8 @@ import "math"
 func (o outline) coverRow(dst []uint8, x0, y int) {
 	clear(dst)
 	switch {
+	case o.poly != nil:
+		coverLoop(dst, x0, y, o.poly)
 	case o.rect != nil:
 		coverRect(dst, x0, y, *o.rect)
 	case o.round != nil:

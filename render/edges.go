@@ -19,18 +19,18 @@ func (p *sectionPainter) outlines() {
 		last := d.r
 		for i := len(s.Rings) - 1; i >= 0; i-- {
 			if r := s.Rings[i].R0 * p.v.PxPerMM; r > 1.5*p.k && last-r > 1.5*p.k {
-				p.c.Circle(d.x, d.y, r)
+				p.hole(s, d, i)
 				p.c.Stroke(inner)
 				last = r
 			}
 		}
-		p.c.Circle(d.x, d.y, d.r)
+		p.rim(s, d, -1)
 		p.c.Stroke(Pen{Width: 3.4 * p.k * fine, Color: p.halo(s)})
 		pen := Pen{Width: 1.4 * p.k * fine, Color: p.line(s)}
 		if s.Unset {
 			pen = Pen{Width: 1.3 * p.k * fine, Color: p.pal.Quiet, Dash: []float64{4 * p.k, 3 * p.k}}
 		}
-		p.c.Circle(d.x, d.y, d.r)
+		p.rim(s, d, -1)
 		p.c.Stroke(pen)
 	}
 }
@@ -73,13 +73,13 @@ func (p *sectionPainter) holderOutline() {
 		for i := len(p.holder.Rings) - 1; i >= 0; i-- {
 			r := p.holder.Rings[i].R0 * p.v.PxPerMM
 			if r > 0 && last-r > 1.5*p.k {
-				p.c.Circle(e.round.x, e.round.y, r)
+				p.hole(*p.holder, *e.round, i)
 				p.c.Stroke(inner)
 				last = r
 			}
 		}
 		for _, pen := range []Pen{halo, pen} {
-			p.c.Circle(e.round.x, e.round.y, e.round.r)
+			p.outlinePath()
 			p.c.Stroke(pen)
 		}
 	}

@@ -27,6 +27,14 @@ func (p *sectionPainter) hatching() (any bool) {
 		} else if len(s.Rings) > 0 {
 			hole = s.Rings[0].R0 * p.v.PxPerMM
 		}
+		if len(s.Loops) > 0 {
+			first := 0
+			if s.Kind == section.Cable {
+				first = len(s.Rings) - len(wall(s))
+			}
+			p.hatchLoops(s, first, len(s.Rings)-1)
+			continue
+		}
 		p.hatch(boxAround(d.x, d.y, d.r), func(x, y, dx, dy float64) []span {
 			return minus(chord(d, x, y, dx, dy), chord(disc{d.x, d.y, hole}, x, y, dx, dy))
 		})
@@ -49,6 +57,11 @@ func (p *sectionPainter) hatchLayer(owner *section.Shape, i int) {
 	if !ok {
 		return
 	}
+	if len(owner.Loops) > 0 {
+		n := len(owner.Rings) - len(wall(*owner)) + i
+		p.hatchLoops(*owner, n, n)
+		return
+	}
 	k := p.v.PxPerMM
 	if owner.Width > 0 && p.edge.rect != nil {
 		t := owner.OuterR()
@@ -62,6 +75,19 @@ func (p *sectionPainter) hatchLayer(owner *section.Shape, i int) {
 	out, in := disc{d.x, d.y, r.R1 * k}, disc{d.x, d.y, r.R0 * k}
 	p.hatch(boxAround(out.x, out.y, out.r), func(x, y, dx, dy float64) []span {
 		return minus(chord(out, x, y, dx, dy), chord(in, x, y, dx, dy))
+	})
+}
+
+// hatchLoops hatches rings first to last of a shape that is not round.
+func (p *sectionPainter) hatchLoops(s section.Shape, first, last int) {
+	d := p.disc(s)
+	out := p.pixels(s.Loops[last])
+	var in []section.Point
+	if first > 0 {
+		in = p.pixels(s.Loops[first-1])
+	}
+	p.hatch(boxAround(d.x, d.y, d.r), func(x, y, dx, dy float64) []span {
+		return minus(chordOf(out, x, y, dx, dy), chordOf(in, x, y, dx, dy))
 	})
 }
 

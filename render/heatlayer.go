@@ -235,7 +235,11 @@ func fillReadings(img *image.RGBA, s Scene, v View, sc Scale) {
 			continue
 		}
 		x, y := v.ToPx(sh.At)
-		c.Circle(x, y, sh.OuterR()*v.PxPerMM)
+		if n := len(sh.Loops); n > 0 {
+			(&sectionPainter{c: c, v: v}).loopPath(sh.Loops[n-1])
+		} else {
+			c.Circle(x, y, sh.OuterR()*v.PxPerMM)
+		}
 		c.Fill(sc.Color(r.TempC))
 	}
 }

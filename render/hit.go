@@ -15,6 +15,9 @@ func Hit(shapes []section.Shape, p section.Point) string {
 			continue
 		}
 		t := math.Hypot(p.X-s.At.X, p.Y-s.At.Y) / s.OuterR()
+		if len(s.Loops) > 0 && !insideLoop(s.Loops[len(s.Loops)-1], p) {
+			continue
+		}
 		if t > 1 || s.Depth == depth && t >= nearest {
 			continue
 		}

@@ -231,6 +231,13 @@ func (p *sectionPainter) isFree(b box) bool {
 // insideEdge tells whether a box lies wholly within the outer surface.
 func (p *sectionPainter) insideEdge(b box) bool {
 	switch e := p.edge; {
+	case e.poly != nil:
+		for _, q := range []section.Point{{X: b.x0, Y: b.y0}, {X: b.x1, Y: b.y0}, {X: b.x0, Y: b.y1}, {X: b.x1, Y: b.y1}} {
+			if !insideLoop(e.poly, q) {
+				return false
+			}
+		}
+		return true
 	case e.rect != nil:
 		return b.within(*e.rect)
 	case e.round != nil:

@@ -13,6 +13,7 @@ type disc struct{ x, y, r float64 }
 // parts themselves.
 type outline struct {
 	round *disc
+	poly  []section.Point // what is really the surface where round is only the circle round it; convex
 	rect  *box
 	parts []disc
 }
@@ -30,6 +31,9 @@ func holderOf(shapes []section.Shape) *section.Shape {
 // outlineOf makes out the outer surface. An open bundle without a size of its own is the smallest circle round its parts.
 func outlineOf(shapes []section.Shape) outline {
 	h := holderOf(shapes)
+	if o, ok := loopOutline(h, shapes); ok {
+		return o
+	}
 	if h != nil && h.Width > 0 && h.Height > 0 {
 		b := shapeBox(*h)
 		return outline{rect: &b}
@@ -77,6 +81,10 @@ func (o outline) toPx(v View) outline {
 	if o.round != nil {
 		d := one(*o.round)
 		p.round = &d
+	}
+	for _, q := range o.poly {
+		x, y := v.ToPx(q)
+		p.poly = append(p.poly, section.Point{X: x, Y: y})
 	}
 	if o.rect != nil {
 		x0, y0 := v.ToPx(section.Point{X: o.rect.x0, Y: o.rect.y1})

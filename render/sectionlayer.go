@@ -87,15 +87,15 @@ func (p *sectionPainter) fills() {
 		if p.s.solved() && !s.Unset || !p.inSight(d) {
 			continue
 		}
-		p.c.Circle(d.x, d.y, d.r)
+		p.rim(s, d, -1)
 		p.c.Fill(p.pal.Insulation)
-		for _, r := range s.Rings {
+		for i, r := range s.Rings {
 			if r.Metal {
-				p.ring(d, r, p.pal.Metal)
+				p.ring(s, d, i, p.pal.Metal)
 			}
 		}
 		if w := wall(s); s.Kind == section.Cable && len(w) > 0 {
-			p.c.Circle(d.x, d.y, w[0].R0*p.v.PxPerMM)
+			p.hole(s, d, len(s.Rings)-len(w))
 			p.c.Fill(p.pal.Fill)
 		} else if len(s.Rings) > 0 && s.Rings[0].R0 > 0 { // a hose's bore
 			p.c.Circle(d.x, d.y, s.Rings[0].R0*p.v.PxPerMM)
@@ -114,20 +114,22 @@ func (p *sectionPainter) fillHolder() {
 		rectangle(p.c, in.x0, in.y0, in.x1-in.x0, in.y1-in.y0)
 		p.c.Fill(p.pal.Fill)
 	case e.round != nil:
-		p.c.Circle(e.round.x, e.round.y, e.round.r)
+		p.outlinePath()
 		p.c.Fill(p.pal.Fill)
-		for _, r := range wall(*p.holder) {
-			p.ring(*e.round, r, p.pal.Wall)
+		if p.holder.Kind == section.NoHolder {
+			return
+		}
+		n := len(p.holder.Rings)
+		for i := n - len(wall(*p.holder)); i < n; i++ {
+			p.ring(*p.holder, *e.round, i, p.pal.Wall)
 		}
 	}
 }
 
-// ring fills one ring of a shape whose outline is d.
-func (p *sectionPainter) ring(d disc, r section.Ring, col color.NRGBA) {
-	p.c.Circle(d.x, d.y, r.R1*p.v.PxPerMM)
-	if r.R0 > 0 {
-		p.c.Circle(d.x, d.y, r.R0*p.v.PxPerMM)
-	}
+// ring fills ring i of a shape whose circle is d.
+func (p *sectionPainter) ring(s section.Shape, d disc, i int, col color.NRGBA) {
+	p.rim(s, d, i)
+	p.hole(s, d, i)
 	p.c.Fill(col)
 }
 
@@ -143,6 +145,8 @@ func (p *sectionPainter) veil() {
 // outlinePath adds the outer surface to the path.
 func (p *sectionPainter) outlinePath() {
 	switch e := p.edge; {
+	case e.poly != nil:
+		pixelPath(p.c, e.poly)
 	case e.rect != nil:
 		rectangle(p.c, e.rect.x0, e.rect.y0, e.rect.x1-e.rect.x0, e.rect.y1-e.rect.y0)
 	case e.round != nil:
