@@ -86,7 +86,11 @@ func (m *Model) tangent(ctx context.Context) ([][]float64, bool) {
 		}
 	}
 	var all sync.WaitGroup
-	for range min(m.set.threads(), n) - 1 {
+	threads := min(m.set.threads(), n)
+	if c.top.rad != nil && c.top.rad.sides != nil {
+		threads = 1 // the patches of a border have one work space
+	}
+	for range threads - 1 {
 		mine := c.fork()
 		all.Go(func() { work(mine) })
 	}
@@ -113,7 +117,7 @@ func (k *knot) fork() *knot {
 	f.absorbed = make([]float64, len(k.absorbed))
 	f.reflect = nil
 	if k.rad != nil {
-		f.rad = k.rad.fork(f.g)
+		f.rad = k.rad.fork()
 	}
 	f.bonds = append([]bond(nil), k.bonds...)
 	for i := range f.bonds {
@@ -127,17 +131,11 @@ func (k *knot) fork() *knot {
 	return &f
 }
 
-// fork is the same surfaces with room of their own.
-func (r *radiant) fork(g *region) *radiant {
+// fork is the same surfaces with room of their own, but for the patches of a border.
+func (r *radiant) fork() *radiant {
 	f := *r
 	f.ex = r.ex.Fork()
 	f.net, f.warm = make([]float64, len(r.net)), make([]float64, len(r.warm))
-	if r.sides != nil {
-		s := *r.sides
-		s.wall = g.border.(*rectWall)
-		s.taken = make([]float64, len(r.sides.taken))
-		f.sides = &s
-	}
 	return &f
 }
 
