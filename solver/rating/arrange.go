@@ -18,6 +18,9 @@ func sized(d *section.Document, cat *catalog.Catalog) (*scene, []int, error) {
 	if len(top) == 0 {
 		return nil, nil, fmt.Errorf("there is nothing to place")
 	}
+	if s.formed(-1, top) {
+		return nil, nil, fmt.Errorf("parts that are not round, and parts in a flat jacket, are placed by hand: write at_mm")
+	}
 	for _, i := range top {
 		if !(s.parts[i].outer() > 0) {
 			for _, p := range problems {

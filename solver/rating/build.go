@@ -55,6 +55,9 @@ func (s *scene) build(air spaces, f *films) heat.Problem {
 	case section.NoHolder:
 		p.Wall.Shape = heat.BarePart
 	}
+	if h.flat {
+		p.Wall.Shape = heat.FlatWall
+	}
 	if s.out.free {
 		s.out.wall(&p.Wall, f)
 	}
@@ -85,7 +88,7 @@ func heatRings(layers []layer) []heat.Ring {
 
 func (s *scene) heatPart(i int, air spaces) heat.Part {
 	p := &s.parts[i]
-	out := heat.Part{In: p.in, X: p.x, Y: p.y, Radius: p.radius, Rings: heatRings(p.layers)}
+	out := heat.Part{In: p.in, X: p.x, Y: p.y, Radius: p.radius, Form: p.form, Rings: heatRings(p.layers)}
 	switch {
 	case p.metal:
 		out.Core = heat.Metal
@@ -120,16 +123,18 @@ func (s *scene) airTemperature(i int, r *heat.Result) float64 {
 		return r.Surfaces[i][0]
 	}
 	wall := r.WallMax[0]
-	around := 2 * math.Pi * s.holder.radius
-	if s.holder.kind == section.Wireway {
+	around := 0.0
+	switch {
+	case i >= 0:
+		wall, around = r.Surfaces[i][0], s.parts[i].loop(0).Perimeter()
+	case s.holder.kind == section.Wireway:
 		around = 2 * (s.holder.w + s.holder.h)
-	}
-	if i >= 0 {
-		wall, around = r.Surfaces[i][0], 2*math.Pi*s.parts[i].radius
+	default:
+		around = s.holder.loop(0).Perimeter()
 	}
 	sum, weight := wall*around, around
 	for _, j := range s.children(i) {
-		c := 2 * math.Pi * s.parts[j].outer()
+		c := s.parts[j].outside().Perimeter()
 		sum += c * r.Surfaces[j][len(r.Surfaces[j])-1]
 		weight += c
 	}

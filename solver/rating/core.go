@@ -5,6 +5,7 @@ import (
 	"strings"
 
 	"packrise/solver/catalog"
+	"packrise/solver/heat"
 	"packrise/solver/section"
 )
 
@@ -21,6 +22,9 @@ func (r *resolver) core(it *item, p *section.Part) {
 		it.alpha = m.Alpha20
 	}
 	it.radius = it.wire.DiameterM / 2
+	if c := p.Conductor; c != nil && !c.Round() {
+		r.shape(it, c)
+	}
 	it.layers = append(it.layers, r.layers(p.Layers, it.id, "")...)
 	r.coreLimit(it, p, typ)
 	it.label = r.coreLabel(it, typ)
@@ -72,6 +76,10 @@ func (r *resolver) ownWire(it *item, p *section.Part) {
 	}
 	var err error
 	switch {
+	case !c.Round() && c.Size == "" && !c.AreaMM2.OK:
+		f := formOf(c)
+		area, _ := f.Loop(0, 0).Area()
+		it.wire, err = r.cat.ConductorOf(area, 0, metal, class)
 	case c.Size != "":
 		it.wire, err = r.cat.Conductor(c.Size, metal, class)
 	default:
@@ -155,6 +163,10 @@ func (r *resolver) coreLabel(it *item, typ string) string {
 		b.WriteString(" " + it.layers[0].material.name)
 	} else {
 		b.WriteString(" bare")
+	}
+	if it.form.Kind != heat.Disc {
+		fmt.Fprintf(&b, ", %s", it.extent())
+		return b.String()
 	}
 	fmt.Fprintf(&b, ", ⌀ %s mm", digits(2*it.outer()/mm, 2))
 	return b.String()

@@ -15,6 +15,10 @@ func (s *scene) bounds() [4]float64 {
 	if s.holder.kind == section.Wireway {
 		return [4]float64{-t, -t, s.holder.w/mm + t, s.holder.h/mm + t}
 	}
+	if s.holder.flat {
+		x, y := s.holder.w/mm/2+t, s.holder.h/mm/2+t
+		return [4]float64{-x, -y, x, y}
+	}
 	r := s.holder.radius/mm + t
 	if s.holder.kind == section.NoHolder && len(s.parts) > 0 {
 		r = s.parts[0].outer() / mm

@@ -47,10 +47,10 @@ func (r *resolver) outside() {
 	o.free, o.air, o.coat = true, r.weather(), r.coat()
 	h := &s.holder
 	if h.kind != section.Wireway {
-		d := 2 * s.outerRadius()
-		o.n, o.open[0], o.wide[0] = 1, true, math.Pi*d
+		o.n, o.open[0], o.wide[0] = 1, true, s.around()
+		d := o.wide[0] / math.Pi // a cylinder of the same circumference stands for what is not round
 		o.faces[0] = film.Face{Shape: film.Round, DiameterM: d, Emissivity: o.coat.emissivity, Absorptivity: o.coat.absorptivity}
-		r.deepEnough(d / 2)
+		r.deepEnough(s.outerRadius())
 		return
 	}
 	t := thickness(h.layers)
@@ -146,7 +146,7 @@ func (r *resolver) partsCoat() coat {
 	for _, i := range r.scene.children(-1) {
 		p := &r.scene.parts[i]
 		m := r.outermost(p)
-		w := p.outer()
+		w := p.outside().Perimeter()
 		sum.emissivity += w * m.emissivity
 		sum.absorptivity += w * m.absorptivity
 		sum.assumed = sum.assumed || m.assumed

@@ -119,6 +119,12 @@ func (r *resolver) frame() {
 	top := s.children(-1)
 	switch s.holder.kind {
 	case section.OpenBundle:
+		if s.formed(-1, top) {
+			r.refuse(&section.Problem{
+				Rule: "bundle-round", Key: "holder.kind", What: "an open bundle takes round parts only, and there are bars, sectors or flat cables in it",
+				Do: "use a jacket, conduit or wireway, or kind none for one bare bar or cable",
+			})
+		}
 		x, y, rad := pack.Enclose(s.discs(top))
 		s.origin = section.Point{X: x, Y: y}
 		s.holder.radius = rad * mm
@@ -146,6 +152,9 @@ func (r *resolver) room(in int) {
 	box := s.box(in)
 	discs := s.discs(of)
 	bad := r.overlaps(in, of, discs, box)
+	if s.formed(in, of) {
+		return // slight overlaps of what is not round are evened out by the solver
+	}
 	_, _, depth := pack.Overlap(discs, box)
 	if bad || depth <= touching {
 		return
@@ -176,6 +185,9 @@ func (s *scene) shift(i int, dx, dy float64) {
 
 // overlaps reports every overlap deeper than nudge. It tells whether there was one.
 func (r *resolver) overlaps(in int, of []int, discs []pack.Disc, box pack.Box) bool {
+	if r.scene.formed(in, of) {
+		return r.overlapsOfLoops(in, of)
+	}
 	found := false
 	for i := range discs {
 		for j := range i {
@@ -227,7 +239,7 @@ func (r *resolver) clearance() {
 	case section.Conduit, section.Wireway:
 		small := math.Inf(1)
 		for _, i := range r.scene.children(-1) {
-			small = min(small, 2*r.scene.parts[i].outer())
+			small = min(small, r.scene.parts[i].least())
 		}
 		h.gap = min(0.2*mm, 0.06*small)
 	case section.OpenBundle:

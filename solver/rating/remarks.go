@@ -10,6 +10,9 @@ import (
 // remarks lists what is assumed or left out, one sentence each.
 func (s *scene) remarks(r *Result, a answered, o Options) []string {
 	out := append([]string(nil), s.notes...)
+	if n := s.formNote(); n != "" {
+		out = append(out, n)
+	}
 	if n := s.radiationNote(a); n != "" {
 		out = append(out, n)
 	}

@@ -64,6 +64,9 @@ func (r *resolver) layers(list []section.Layer, id, key string) []layer {
 func (r *resolver) enclosure(h *section.Holder, id, key string) enclosure {
 	e := enclosure{kind: h.Kind, round: h.Kind != section.Wireway, radius: h.InsideMM.V * mm / 2, w: h.WidthMM.V * mm, h: h.HeightMM.V * mm}
 	e.layers = r.layers(h.Layers, id, key)
+	if h.Flat() {
+		e.flat, e.radius = true, max(e.w, e.h)/2
+	}
 	if h.Stock != "" {
 		r.stockHolder(&e, h, id, key)
 	}
@@ -128,6 +131,7 @@ func (r *resolver) parts(list []section.Part, n nest) {
 		switch p.Kind {
 		case section.Core:
 			r.core(&it, p)
+			it.form.Turn = n.turn + p.TurnDeg.V*math.Pi/180
 		case section.Rod:
 			r.rod(&it, p)
 		case section.Cable:
@@ -156,6 +160,10 @@ func (r *resolver) cable(it *item, p *section.Part, n nest) {
 	it.inside = &e
 	it.radius, it.layers = e.radius, e.layers
 	it.label = fmt.Sprintf("%s, ⌀ %s mm", b.Name, digits(2*it.outer()/mm, 2))
+	if e.flat {
+		it.form = e.form(n.turn + p.TurnDeg.V*math.Pi/180)
+		it.label = fmt.Sprintf("%s, %s", b.Name, it.extent())
+	}
 	if p.LimitC.OK {
 		it.limit = limit{c: p.LimitC, by: "given"}
 	}

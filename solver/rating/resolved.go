@@ -2,6 +2,7 @@ package rating
 
 import (
 	"packrise/solver/catalog"
+	"packrise/solver/heat"
 	"packrise/solver/section"
 )
 
@@ -21,7 +22,8 @@ type scene struct {
 type enclosure struct {
 	kind   string
 	round  bool
-	radius float64 // m, inside
+	radius float64 // m, inside; of the circle round a flat one
+	flat   bool    // w × h with half-circle ends
 	w, h   float64 // m, inside
 	layers []layer
 	fill   medium
@@ -67,7 +69,8 @@ type item struct {
 	x, y   float64 // m, as heat.Part wants them
 	abs    section.Point
 	unset  bool
-	radius float64 // m, of metal, body, bore or inside
+	radius float64 // m, of metal, body, bore or inside; of the circle round one that is not round
+	form   heat.Form
 	layers []layer // from radius outwards
 	metal  bool
 	wire   catalog.Conductor

@@ -4,6 +4,7 @@ import (
 	"math"
 
 	"packrise/solver/catalog"
+	"packrise/solver/heat"
 	"packrise/solver/section"
 )
 
@@ -26,6 +27,9 @@ func (s *scene) shapes() []section.Shape {
 			sh.Rings = append(sh.Rings, section.Ring{Material: s.coreMaterial(p), Metal: p.metal, R1: p.radius / mm})
 		}
 		sh.Rings = append(sh.Rings, rings(p.layers, p.radius/mm)...)
+		if p.form.Kind != heat.Disc && p.radius > 0 {
+			sh.Loops = loops(p.loop, p.layers, p.abs)
+		}
 		out = append(out, sh)
 	}
 	return out
@@ -64,6 +68,9 @@ func (s *scene) holderShape() section.Shape {
 	default:
 		sh.At = s.origin
 		sh.Rings = append([]section.Ring{{Material: h.fill.id, R1: h.radius / mm}}, rings(h.layers, h.radius/mm)...)
+		if h.flat {
+			sh.Loops = loops(h.loop, h.layers, s.origin)
+		}
 	}
 	return sh
 }

@@ -34,7 +34,7 @@ func badParts() []bad {
 		{"cable of unknown build", part("id: C1, kind: cable, build: pari") + "builds:\n  pair: {holder: {kind: open-bundle}}\n", []wanted{{5, "unknown-build", "there is no build pari|did you mean pair?"}}},
 		{"cable with layers", part("id: C1, kind: cable, build: b, layers: [{material: a, thickness_mm: 1}]") + "builds: {b: {holder: {kind: open-bundle}}}\n", []wanted{{5, "key-of-kind", "`layers` belongs to a core or rod"}}},
 		{"build without holder", head + "builds:\n  b: {parts: []}\n", []wanted{{5, "missing-key", "build b: `holder` is missing"}}},
-		{"square build", head + "builds:\n  b: {holder: {kind: wireway, width_mm: 3, height_mm: 3}}\n", []wanted{{5, "key-of-kind", "build b: its holder is of kind wireway|round"}}},
+		{"square build", head + "builds:\n  b: {holder: {kind: wireway, width_mm: 3, height_mm: 3}}\n", []wanted{{5, "key-of-kind", "build b: its holder is of kind wireway|jacket"}}},
 		{"part of a build", part("id: C1, kind: cable, build: b") + "builds:\n  b:\n    holder: {kind: open-bundle}\n    parts:\n      - {id: a, kind: core}\n", []wanted{{10, "missing-key", "part a of build b: `conductor` is missing"}}},
 		{"build in itself", head + "builds:\n  b:\n    holder: {kind: open-bundle}\n    parts: [{id: c, kind: cable, build: b}]\n", []wanted{{5, "endless-build", "build b: it contains itself (b → b)"}}},
 		{

@@ -50,11 +50,7 @@ func checkHolder(r *report, h *Holder, at path) {
 			r.add(at.key(key), "key-of-kind", "¤ does not belong to kind "+h.Kind+why, do)
 		}
 	}
-	flat := h.Kind == Jacket && h.WidthMM.OK && h.HeightMM.OK && !h.InsideMM.OK
-	if flat {
-		r.add(at.key("width_mm"), "later-key", "a flat jacket with width_mm and height_mm belongs to "+laterSurroundings+" that this version does not read yet",
-			"write inside_mm of a round jacket")
-	}
+	flat := h.Kind == Jacket && (h.WidthMM.OK || h.HeightMM.OK) && !h.InsideMM.OK
 	reject(!round && h.InsideMM.OK, "inside_mm", "", "take it out"+sizeAdvice(h))
 	reject(!rectangle && !flat && h.WidthMM.OK, "width_mm", "", "take it out"+sizeAdvice(h))
 	reject(!rectangle && !flat && h.HeightMM.OK, "height_mm", "", "take it out"+sizeAdvice(h))
@@ -82,11 +78,15 @@ func checkHolderSize(r *report, h *Holder, at path, flat bool) {
 	if round && !h.InsideMM.OK && !flat {
 		r.add(at.key("inside_mm"), "missing-key", "¤ is missing", "write it, or stock: kind "+h.Kind+" needs its inside diameter")
 	}
-	if rectangle && !h.WidthMM.OK {
-		r.add(at.key("width_mm"), "missing-key", "¤ is missing", "write it, or stock: kind wireway needs its inside width")
+	needs := ", or stock: kind wireway"
+	if flat {
+		needs = ", or inside_mm of a round one: a flat jacket"
 	}
-	if rectangle && !h.HeightMM.OK {
-		r.add(at.key("height_mm"), "missing-key", "¤ is missing", "write it, or stock: kind wireway needs its inside height")
+	if (rectangle || flat) && !h.WidthMM.OK {
+		r.add(at.key("width_mm"), "missing-key", "¤ is missing", "write it"+needs+" needs its inside width")
+	}
+	if (rectangle || flat) && !h.HeightMM.OK {
+		r.add(at.key("height_mm"), "missing-key", "¤ is missing", "write it"+needs+" needs its inside height")
 	}
 }
 
@@ -94,7 +94,9 @@ func sizeAdvice(h *Holder) string {
 	switch h.Kind {
 	case Wireway:
 		return ", and write width_mm and height_mm"
-	case Jacket, Conduit:
+	case Jacket:
+		return ", and write inside_mm, or width_mm and height_mm of a flat one without inside_mm"
+	case Conduit:
 		return ", and write inside_mm"
 	}
 	return ""
@@ -117,7 +119,7 @@ func checkHolderParts(r *report, d *Document) {
 		at := path("").key("builds").key(d.Builds[i].Name).key("holder").key("kind")
 		switch d.Builds[i].Holder.Kind {
 		case Wireway, NoHolder:
-			r.add(at, "key-of-kind", "its holder is of kind "+d.Builds[i].Holder.Kind+", but a cable is round", "write kind: jacket with inside_mm")
+			r.add(at, "key-of-kind", "its holder is of kind "+d.Builds[i].Holder.Kind+", but a cable has a jacket", "write kind: jacket with inside_mm, or with width_mm and height_mm of a flat one")
 		}
 	}
 }
@@ -145,8 +147,8 @@ func checkPart(r *report, p *Part, at path) {
 	if cable && len(p.Layers) > 0 {
 		r.add(at.key("layers"), "key-of-kind", "¤ belongs to a core or rod, and this is a cable", "write its layers in the holder of its build")
 	}
-	if !cable && p.TurnDeg.OK {
-		r.add(at.key("turn_deg"), "key-of-kind", "¤ turns a cable, and this "+p.Kind+" is round", "take it out")
+	if turns := cable || core && p.Conductor != nil && !p.Conductor.Round(); !turns && p.TurnDeg.OK {
+		r.add(at.key("turn_deg"), "key-of-kind", "¤ turns a cable or a part that is not round, and this "+p.Kind+" is round", "take it out")
 	}
 	switch {
 	case core:
@@ -207,24 +209,6 @@ func checkRod(r *report, p *Part, at path) {
 	}
 	if p.Bore != (Bore{}) && !p.BoreMM.OK {
 		r.add(at.key("bore_mm"), "missing-key", "¤ is missing", "write the bore's diameter, or take bore out")
-	}
-}
-
-func checkConductor(r *report, c *Conductor, at path) {
-	var given []string
-	for _, g := range []struct {
-		key string
-		ok  bool
-	}{{"size", c.Size != ""}, {"area_mm2", c.AreaMM2.OK}, {"diameter_mm", c.DiameterMM.OK}} {
-		if g.ok {
-			given = append(given, g.key)
-		}
-	}
-	switch {
-	case len(given) == 0:
-		r.addWhole(at, "one-of", "¤ has none of size, area_mm2 and diameter_mm", "write one of them")
-	case len(given) > 1:
-		r.addWhole(at, "one-of", "¤ has "+strings.Join(given, " and "), "keep one of them")
 	}
 }
 

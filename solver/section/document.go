@@ -61,7 +61,7 @@ const (
 type Holder struct {
 	Kind              string
 	InsideMM          Opt[float64] // round
-	WidthMM, HeightMM Opt[float64] // rectangle
+	WidthMM, HeightMM Opt[float64] // rectangle; of a jacket: flat, with half-circle ends on the short sides
 	Stock             string       // a catalogue entry instead of size and layers
 	Sides             Sides
 	Layers            []Layer // from the inside outwards
@@ -118,7 +118,7 @@ type Part struct {
 	Type      string     // wire type
 	Role      string
 	Build     string       // cable
-	TurnDeg   Opt[float64] // cable
+	TurnDeg   Opt[float64] // cable, and a core whose conductor is not round
 	Diameter  Opt[float64] // rod, mm, over the material, under Layers
 	BoreMM    Opt[float64] // rod: a hose's bore
 	Bore      Bore         // what the bore holds
@@ -133,6 +133,14 @@ type Bore struct {
 	FixedC   Opt[float64]
 }
 
+// Flat tells that a holder is a jacket with half-circle ends.
+func (h *Holder) Flat() bool {
+	return h.Kind == Jacket && h.WidthMM.OK && h.HeightMM.OK && !h.InsideMM.OK
+}
+
+// Round tells that a conductor is.
+func (c *Conductor) Round() bool { return c.Shape == "" || c.Shape == RoundShape }
+
 // Metals and classes of a conductor.
 const (
 	Copper       = "copper"
@@ -143,8 +151,22 @@ const (
 	Flexible     = "flexible" // class 5
 )
 
-// Conductor is the metal of a core. Exactly one of Size, AreaMM2, DiameterMM is written.
+// Shapes of a conductor ("" means round).
+const (
+	RoundShape  = "round"
+	BarShape    = "bar"    // a rectangle with rounded corners
+	SectorShape = "sector" // of a disc, eroded and then dilated by the corner radius
+)
+
+// Conductor is the metal of a core. Of a round one exactly one of Size, AreaMM2, DiameterMM is written; a bar has WidthMM and HeightMM, a sector AngleDeg
+// and RadiusMM, both may have CornerMM and, for the metal in the outline, Size or AreaMM2.
 type Conductor struct {
+	Shape      string
+	WidthMM    Opt[float64]
+	HeightMM   Opt[float64]
+	AngleDeg   Opt[float64]
+	RadiusMM   Opt[float64]
+	CornerMM   Opt[float64]
 	Size       string
 	AreaMM2    Opt[float64]
 	DiameterMM Opt[float64]

@@ -26,8 +26,10 @@ var (
 		{name: NoHolder},
 		{Apart, "use a holder, or kind: none with one bare part"},
 	}
-	partKinds = []word{{name: Core}, {name: Cable}, {name: Rod}}
-	roles     = []word{{name: RoleLine}, {name: RoleNeutral}, {name: RoleEarth}, {name: RoleControl}, {name: RoleSpare}}
+	partKinds       = []word{{name: Core}, {name: Cable}, {name: Rod}}
+	roles           = []word{{name: RoleLine}, {name: RoleNeutral}, {name: RoleEarth}, {name: RoleControl}, {name: RoleSpare}}
+	conductorShapes = []word{{name: RoundShape}, {name: BarShape}, {name: SectorShape}}
+
 	metals    = []word{{name: Copper}, {name: TinnedCopper}, {name: Aluminium}}
 	classes   = []word{{name: Solid}, {name: Stranded}, {name: Flexible}}
 	sideKinds = []word{{name: SideOpen}, {name: SideInsulated}}

@@ -120,13 +120,18 @@ var partTable = &table[Part]{
 var conductorTable = &table[Conductor]{
 	what: "a conductor",
 	fields: []field[Conductor]{
+		on("shape", func(c *Conductor) *string { return &c.Shape }, oneOf{what: "conductor shape", words: conductorShapes}),
+		on("width_mm", func(c *Conductor) *Opt[float64] { return &c.WidthMM }, optNumber{positive}),
+		on("height_mm", func(c *Conductor) *Opt[float64] { return &c.HeightMM }, optNumber{positive}),
+		on("angle_deg", func(c *Conductor) *Opt[float64] { return &c.AngleDeg }, optNumber{positive}),
+		on("radius_mm", func(c *Conductor) *Opt[float64] { return &c.RadiusMM }, optNumber{positive}),
+		on("corner_mm", func(c *Conductor) *Opt[float64] { return &c.CornerMM }, optNumber{notNegative}),
 		on("size", func(c *Conductor) *string { return &c.Size }, sizeCodec{}),
 		on("area_mm2", func(c *Conductor) *Opt[float64] { return &c.AreaMM2 }, optNumber{positive}),
 		on("diameter_mm", func(c *Conductor) *Opt[float64] { return &c.DiameterMM }, optNumber{positive}),
 		on("metal", func(c *Conductor) *string { return &c.Metal }, oneOf{what: "metal", words: metals}),
 		on("class", func(c *Conductor) *string { return &c.Class }, oneOf{what: "class", words: classes}),
 	},
-	later: later(laterSurroundings, "shape", "width_mm", "height_mm", "corner_mm", "angle_deg", "radius_mm"),
 	rules: checkConductor,
 }
 
