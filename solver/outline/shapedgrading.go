@@ -9,6 +9,7 @@ const (
 	maxRounds   = 7
 	maxUnknowns = 3500
 	looseness   = 2e-3 // of a bend's last modes, as a share of the heat, at fineness 1
+	enough      = 3    // times that is left alone, rather than begin another round
 	perHalving  = 30   // what halving a bend takes off its last modes
 )
 
@@ -24,7 +25,7 @@ func (s *Shaped) begin() {
 				n = max(2, n)
 			}
 			for k := range n {
-				s.bends = append(s.bends, newBend(st, i, j, float64(k)/float64(n), float64(k+1)/float64(n)))
+				s.cut(st, i, j, float64(k)/float64(n), float64(k+1)/float64(n))
 			}
 		}
 	}
@@ -70,7 +71,7 @@ func (s *Shaped) refine(fineness float64) bool {
 			out = append(out, newBend(st, b.contour, b.stroke, at(k), at(k+1)))
 		}
 	}
-	if len(out) == len(s.bends) {
+	if s.loose < enough*limit {
 		return false
 	}
 	s.bends = out
