@@ -1,0 +1,34 @@
+package heat_test
+
+import (
+	"context"
+	"testing"
+
+	"packrise/solver/heat"
+)
+
+// besideBar is a busbar lying in a wireway with n wires in a row above it.
+func besideBar(n int) heat.Problem {
+	p := heat.Problem{MediumK: 0.027, Wall: heat.Wall{Shape: heat.Rect, W: 100 * mm, H: 50 * mm, Rings: []heat.Ring{{K: 0.2, Thickness: 2 * mm}}, Film: 9, Ambient: 30}}
+	b := bar(60, 6, 0.5, 1, 0.2, 20)
+	b.X, b.Y = 50*mm, 4*mm
+	p.Parts = append(p.Parts, b)
+	for i := range n {
+		w := wire(1.5*mm, 0.8*mm, 0.2, 1.5)
+		w.In, w.X, w.Y = -1, (22+float64(i%12)*5)*mm, (8+2.3+float64(i/12)*5)*mm
+		p.Parts = append(p.Parts, w)
+	}
+	return p
+}
+
+func BenchmarkShaped(b *testing.B) {
+	for name, p := range map[string]heat.Problem{"sectors": load(b, "s01_sector4").Problem, "bar2": load(b, "s03_bar_two_wires").Problem, "bar12": besideBar(12), "bar24": besideBar(24)} {
+		b.Run(name, func(b *testing.B) {
+			b.ReportAllocs()
+			for b.Loop() {
+				r := heat.New(p, heat.Settings{}).Solve(context.Background(), nil)
+				b.ReportMetric(float64(r.Unknowns), "unknowns")
+			}
+		})
+	}
+}
