@@ -176,7 +176,7 @@ func (p *sectionPainter) gapsRound(id string) (g *gaps, number int) {
 				continue
 			}
 			room.number[s.ID] = len(discs)
-			discs = append(discs, p.disc(s))
+			discs = append(discs, p.core(s))
 		}
 		room.gaps = newGaps(discs, leaderSlack*p.k)
 		p.rooms[parent] = room
