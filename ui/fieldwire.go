@@ -8,6 +8,7 @@ import (
 
 	"packrise/solver/catalog"
 	"packrise/solver/quantity"
+	"packrise/solver/rating"
 	"packrise/solver/section"
 )
 
@@ -23,7 +24,18 @@ func conductorOf(cat *catalog.Catalog, c *section.Conductor) (catalog.Conductor,
 	case c.AreaMM2.OK:
 		return cat.ConductorOf(c.AreaMM2.V*1e-6, 0, metal, class)
 	}
-	return cat.ConductorOf(0, c.DiameterMM.V*1e-3, metal, class)
+	return cat.ConductorOf(rating.MetalArea(c), c.DiameterMM.V*1e-3, metal, class)
+}
+
+// outlineText returns the outline of a conductor that is not round: "bar 20 × 5 mm", "sector 90° R 6.5 mm".
+func outlineText(c *section.Conductor) string {
+	switch c.Shape {
+	case section.BarShape:
+		return "bar " + written(c.WidthMM.V) + " × " + withUnit(written(c.HeightMM.V), "mm")
+	case section.SectorShape:
+		return "sector " + written(c.AngleDeg.V) + "° R " + withUnit(written(c.RadiusMM.V), "mm")
+	}
+	return ""
 }
 
 func orWord(s, otherwise string) string {
@@ -141,14 +153,20 @@ func sizeText(cat *catalog.Catalog, p section.Part) string {
 		return c.Size
 	case c.AreaMM2.OK:
 		return written(c.AreaMM2.V) + " mm²"
+	case !c.Round():
+		return outlineText(c)
 	}
 	return "⌀ " + written(c.DiameterMM.V) + " mm"
 }
 
 // readConductor understands a size typed for a core. A bare number is in the system that the core has.
 func readConductor(cat *catalog.Catalog, text string, now section.Conductor) (section.Conductor, string, error) {
-	c := section.Conductor{Metal: now.Metal, Class: now.Class}
+	c := now // its outline stays
+	c.Size, c.AreaMM2, c.DiameterMM = "", section.Opt[float64]{}, section.Opt[float64]{}
 	text = strings.TrimSpace(text)
+	if !c.Round() && text == outlineText(&c) {
+		return c, "the metal fills its outline", nil
+	}
 	if rest, ok := cutAny(text, "⌀", "Ø", "ø", "diameter"); ok {
 		d, err := quantity.ParseLength(strings.TrimSpace(rest), quantity.Millimetre)
 		if err != nil {
@@ -156,6 +174,9 @@ func readConductor(cat *catalog.Catalog, text string, now section.Conductor) (se
 		}
 		if d <= 0 {
 			return c, "", errors.New("a conductor is thicker than nothing; write its diameter, such as ⌀ 3.2 mm")
+		}
+		if !c.Round() {
+			return c, "", errors.New("this conductor is not round; write the size or area of its metal, such as 95 mm²")
 		}
 		c.DiameterMM = section.Some(d)
 		return c, "metal of ⌀ " + written(d) + " mm", nil
@@ -176,6 +197,9 @@ func readConductor(cat *catalog.Catalog, text string, now section.Conductor) (se
 		return c, size.Pretty() + " of metal: not a standard size, taken by its area", nil
 	}
 	c.Size = row.Size
+	if !c.Round() {
+		return c, size.Pretty() + " of metal in its outline", nil
+	}
 	return c, fmt.Sprintf("%s, ⌀ %s mm over the metal", size.Pretty(), quantity.Trimmed(row.DiameterM*1e3, 2)), nil
 }
 

@@ -178,7 +178,7 @@ func (f *wireFacts) load(row *wireRow, p *section.Part) {
 func (f *wireFacts) size(k *Desk, p section.Part) wireSize {
 	key := p.Stock + "|" + p.Type + "|" + p.Kind + "|" + p.Build + "|" + p.Material + "|" + optText(p.Diameter)
 	if c := p.Conductor; c != nil {
-		key += "|" + c.Size + "|" + optText(c.AreaMM2) + "|" + optText(c.DiameterMM) + "|" + c.Metal + "|" + c.Class
+		key += "|" + c.Size + "|" + optText(c.AreaMM2) + "|" + optText(c.DiameterMM) + "|" + outlineText(c) + "|" + optText(c.CornerMM) + "|" + c.Metal + "|" + c.Class
 	} else if p.Kind == section.Core && p.Stock == "" {
 		return wireSize{area: math.NaN()}
 	}

@@ -16,6 +16,19 @@ func formOf(c *section.Conductor) heat.Form {
 	return f
 }
 
+// MetalArea is the area (m²) of the outline of a conductor that is not round, 0 of a round one or if it lacks a size: what stands for the metal's area where
+// neither size nor area_mm2 is given.
+func MetalArea(c *section.Conductor) float64 {
+	bar := c.Shape == section.BarShape && c.WidthMM.OK && c.HeightMM.OK
+	sector := c.Shape == section.SectorShape && c.AngleDeg.OK && c.RadiusMM.OK
+	if !bar && !sector {
+		return 0
+	}
+	f := formOf(c)
+	area, _ := f.Loop(0, 0).Area()
+	return area
+}
+
 // form is the outline of a flat enclosure.
 func (e *enclosure) form(turn float64) heat.Form {
 	return heat.Form{Kind: heat.Flat, W: e.w, H: e.h, Turn: turn}
@@ -121,6 +134,10 @@ func (s *scene) room(in int) outline.Loop {
 // around is the circumference of a section that is no wireway.
 func (s *scene) around() float64 {
 	h := &s.holder
+	if s.hulled() {
+		perimeter, _ := s.hull()
+		return perimeter
+	}
 	if h.kind == section.NoHolder {
 		for i := range s.parts {
 			if s.parts[i].in < 0 {
