@@ -55,6 +55,9 @@ func (s *scene) build(air spaces, f *films) heat.Problem {
 	case section.NoHolder:
 		p.Wall.Shape = heat.BarePart
 	}
+	if s.hulled() {
+		p.Wall.Shape, p.Wall.Taut, p.Clearance = heat.Hull, taut, 0 // the parts have been moved apart
+	}
 	if h.flat {
 		p.Wall.Shape = heat.FlatWall
 	}
@@ -129,6 +132,9 @@ func (s *scene) airTemperature(i int, r *heat.Result) float64 {
 		wall, around = r.Surfaces[i][0], s.parts[i].loop(0).Perimeter()
 	case s.holder.kind == section.Wireway:
 		around = 2 * (s.holder.w + s.holder.h)
+	case s.hulled():
+		wall = r.WallMean
+		_, around = s.hull()
 	default:
 		around = s.holder.loop(0).Perimeter()
 	}

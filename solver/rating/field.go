@@ -19,11 +19,23 @@ func (s *scene) bounds() [4]float64 {
 		x, y := s.holder.w/mm/2+t, s.holder.h/mm/2+t
 		return [4]float64{-x, -y, x, y}
 	}
+	if s.hulled() {
+		return boxOf(s.hullLoop())
+	}
 	r := s.holder.radius/mm + t
 	if s.holder.kind == section.NoHolder && len(s.parts) > 0 {
 		r = s.parts[0].outer() / mm
 	}
 	return [4]float64{s.origin.X - r, s.origin.Y - r, s.origin.X + r, s.origin.Y + r}
+}
+
+// boxOf is the upright box round points.
+func boxOf(points []section.Point) [4]float64 {
+	b := [4]float64{math.Inf(1), math.Inf(1), math.Inf(-1), math.Inf(-1)}
+	for _, p := range points {
+		b = [4]float64{min(b[0], p.X), min(b[1], p.Y), max(b[2], p.X), max(b[3], p.Y)}
+	}
+	return b
 }
 
 // Bounds returns the box (mm) around the outer surface: part of render's Field.

@@ -34,6 +34,7 @@ func (r *resolver) places() {
 		}
 	}
 	r.clearance()
+	r.loosen()
 }
 
 // placed tells whether every part has a place.
@@ -128,7 +129,9 @@ func (r *resolver) frame() {
 		x, y, rad := pack.Enclose(s.discs(top))
 		s.origin = section.Point{X: x, Y: y}
 		s.holder.radius = rad * mm
-		s.notes = append(s.notes, fmt.Sprintf("the open bundle is reckoned as its enclosing circle of ⌀ %s mm with the air in it at rest: too hot", digits(2*rad, 2)))
+		if !s.hulled() {
+			s.notes = append(s.notes, fmt.Sprintf("the wrap is taken as round, about the bundle's enclosing circle of ⌀ %s mm", digits(2*rad, 2)))
+		}
 	case section.NoHolder:
 		if len(top) != 1 {
 			r.refuse(&section.Problem{

@@ -64,6 +64,7 @@ func (r *resolver) layers(list []section.Layer, id, key string) []layer {
 func (r *resolver) enclosure(h *section.Holder, id, key string) enclosure {
 	e := enclosure{kind: h.Kind, round: h.Kind != section.Wireway, radius: h.InsideMM.V * mm / 2, w: h.WidthMM.V * mm, h: h.HeightMM.V * mm}
 	e.layers = r.layers(h.Layers, id, key)
+	e.strings = h.StringEmissivity.Or(usualEmissivity)
 	if h.Flat() {
 		e.flat, e.radius = true, max(e.w, e.h)/2
 	}

@@ -20,15 +20,16 @@ type scene struct {
 
 // enclosure is a holder, or the jacket of a cable.
 type enclosure struct {
-	kind   string
-	round  bool
-	radius float64 // m, inside; of the circle round a flat one
-	flat   bool    // w × h with half-circle ends
-	w, h   float64 // m, inside
-	layers []layer
-	fill   medium
-	gap    float64 // m, mean clearance of the parts
-	skin   float64 // emissivity of the outside by the catalogue's row, 0: by the material
+	kind    string
+	round   bool
+	radius  float64 // m, inside; of the circle round a flat one
+	flat    bool    // w × h with half-circle ends
+	w, h    float64 // m, inside
+	strings float64 // emissivity of a bundle's strings, on the inside
+	layers  []layer
+	fill    medium
+	gap     float64 // m, mean clearance of the parts
+	skin    float64 // emissivity of the outside by the catalogue's row, 0: by the material
 }
 
 // layer is one ring of a known material.

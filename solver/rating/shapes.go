@@ -59,11 +59,13 @@ func rings(layers []layer, r float64) []section.Ring {
 func (s *scene) holderShape() section.Shape {
 	h := &s.holder
 	sh := section.Shape{Kind: h.kind}
-	switch h.kind {
-	case section.Wireway:
+	switch {
+	case s.hulled():
+		s.bundleShape(&sh)
+	case h.kind == section.Wireway:
 		sh.Width, sh.Height = h.w/mm, h.h/mm
 		sh.Rings = rings(h.layers, 0)
-	case section.NoHolder, section.Apart:
+	case h.kind == section.NoHolder, h.kind == section.Apart:
 		sh.At = s.origin
 	default:
 		sh.At = s.origin

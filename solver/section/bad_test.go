@@ -151,6 +151,8 @@ func badKinds() []bad {
 		{"flat conduit", holder("{kind: conduit, width_mm: 10, height_mm: 4, inside_mm: 2}"), []wanted{{3, "key-of-kind", "`holder.width_mm`"}, {3, "key-of-kind", "`holder.height_mm`"}}},
 		{"round wireway", holder("{kind: wireway, width_mm: 10, height_mm: 4, inside_mm: 3}"), []wanted{{3, "key-of-kind", "`holder.inside_mm` does not belong to kind wireway"}}},
 		{"conduit with sides", holder("{kind: conduit, inside_mm: 10, sides: {left: insulated}}"), []wanted{{3, "key-of-kind", "`holder.sides`|no rectangle"}}},
+		{"strings of a conduit", holder("{kind: conduit, inside_mm: 10, string_emissivity: 0.5}"), []wanted{{3, "key-of-kind", "`holder.string_emissivity`|no strings"}}},
+		{"bright strings", holder("{kind: open-bundle, string_emissivity: 1.5}"), []wanted{{3, "number-range", "`holder.string_emissivity` is 1.5|above 0 and not above 1"}}},
 		{"bundle with layers", holder("{kind: open-bundle, layers: [{material: a, thickness_mm: 1}]}"), []wanted{{3, "key-of-kind", "`holder.layers`|no wall"}}},
 		{"stock and size", holder("{kind: conduit, stock: emt-1, inside_mm: 20}"), []wanted{{3, "one-of", "the holder has both stock and a size"}}},
 		{"side", holder("{kind: wireway, width_mm: 9, height_mm: 9, sides: {left: closed}}"), []wanted{{3, "unknown-word", "side closed is unknown|`insulated`"}}},

@@ -57,6 +57,7 @@ func checkHolder(r *report, h *Holder, at path) {
 	reject(!rectangle && h.Sides != Sides{}, "sides", ", which is no rectangle", "take it out")
 	reject(open && h.Stock != "", "stock", ", which has no wall", "take it out")
 	reject(open && len(h.Layers) > 0, "layers", ", which has no wall", "take it out")
+	reject(h.Kind != OpenBundle && h.StringEmissivity.OK, "string_emissivity", ", which has no strings", "take it out")
 	reject(h.Kind == NoHolder && h.Fill != "", "fill", ", which encloses nothing", "take it out")
 	reject(h.Kind == NoHolder && h.ClearanceMM.OK, "clearance_mm", ", which encloses nothing", "take it out")
 	if h.TouchLimitC.OK && len(at.steps()) > 1 {

@@ -67,6 +67,7 @@ type Holder struct {
 	Layers            []Layer // from the inside outwards
 	Fill              string  // "" means air
 	ClearanceMM       Opt[float64]
+	StringEmissivity  Opt[float64] // open bundle: of the inner face of the strings or ties
 	TouchLimitC       Opt[float64] // limit of the outside surface; of the section's own holder only
 }
 

@@ -72,9 +72,10 @@ var holderTable = &table[Holder]{
 		on("layers", func(h *Holder) *[]Layer { return &h.Layers }, list[Layer]{layerTable, false, MaxLayers}),
 		on("fill", func(h *Holder) *string { return &h.Fill }, text{}),
 		on("clearance_mm", func(h *Holder) *Opt[float64] { return &h.ClearanceMM }, optNumber{notNegative}),
+		on("string_emissivity", func(h *Holder) *Opt[float64] { return &h.StringEmissivity }, optNumber{emissive}),
 		on("touch_limit_c", func(h *Holder) *Opt[float64] { return &h.TouchLimitC }, optNumber{temperature}),
 	},
-	later: merge(later(laterSurroundings, "string_emissivity"), later(laterRatings, "length_m")),
+	later: later(laterRatings, "length_m"),
 	rules: checkHolder,
 }
 
