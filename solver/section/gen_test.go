@@ -73,7 +73,18 @@ func (m maker) word(words []string) string { return rapid.SampledFrom(words).Dra
 
 func (m maker) conductor() *Conductor {
 	c := &Conductor{Metal: m.word([]string{"", Copper, TinnedCopper, Aluminium}), Class: m.word([]string{"", Solid, Stranded, Flexible})}
-	switch rapid.IntRange(0, 2).Draw(m.t, "given") {
+	most := 2
+	switch m.word([]string{"", RoundShape, BarShape, SectorShape}) {
+	case RoundShape:
+		c.Shape = RoundShape
+	case BarShape:
+		c.Shape, c.WidthMM, c.HeightMM, c.CornerMM = BarShape, Some(m.num(2, 50)), Some(m.num(2, 20)), m.opt(0, 0.5)
+		most = 1
+	case SectorShape:
+		c.Shape, c.AngleDeg, c.RadiusMM, c.CornerMM = SectorShape, Some(m.num(60, 120)), Some(m.num(3, 20)), m.opt(0, 0.5)
+		most = 1
+	}
+	switch rapid.IntRange(0, most).Draw(m.t, "given") {
 	case 0:
 		c.Size = m.word([]string{"12 AWG", "#12", "1/0", "250 MCM", "2,5 mm²", "2.5 mm2"})
 	case 1:
@@ -105,6 +116,9 @@ func (m maker) part(id string, builds []string) Part {
 		if m.coin("type") {
 			p.Type = m.name()
 		}
+		if !p.Conductor.Round() {
+			p.TurnDeg = m.opt(-360, 360)
+		}
 		p.Role = m.word([]string{"", RoleLine, RoleNeutral, RoleEarth, RoleControl, RoleSpare})
 	}
 	return p
@@ -128,6 +142,7 @@ func (m maker) holder(kinds ...string) Holder {
 		h.Fill = m.name()
 	}
 	if h.Kind == OpenBundle {
+		h.StringEmissivity = m.opt(0.05, 0.9)
 		return h
 	}
 	if h.Kind == Wireway && m.coin("sides") {

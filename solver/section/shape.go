@@ -1,5 +1,7 @@
 package section
 
+import "math"
+
 // Shape is the resolved outline of one thing in the section, in millimetres and in the plane of the whole section (nested
 // parts included, turned and moved). It is the plain value by which rating tells render and ui what is there.
 type Shape struct {
@@ -28,6 +30,25 @@ func (s Shape) OuterR() float64 {
 		return 0
 	}
 	return s.Rings[len(s.Rings)-1].R1
+}
+
+// InnerR returns the radius in mm of the largest disc about At within a part's outline: OuterR of a round one.
+func (s Shape) InnerR() float64 {
+	r := s.OuterR()
+	if len(s.Loops) == 0 {
+		return r
+	}
+	l := s.Loops[len(s.Loops)-1]
+	for i, a := range l {
+		b := l[(i+1)%len(l)]
+		dx, dy := b.X-a.X, b.Y-a.Y
+		t := 0.0
+		if q := dx*dx + dy*dy; q > 0 {
+			t = min(1, max(0, ((s.At.X-a.X)*dx+(s.At.Y-a.Y)*dy)/q))
+		}
+		r = min(r, math.Hypot(a.X+t*dx-s.At.X, a.Y+t*dy-s.At.Y))
+	}
+	return r
 }
 
 // Reading is what is known of one shape or layer after solving.
