@@ -131,7 +131,7 @@ func (t *telling) metal(id string) float64 {
 // over is the outside diameter at the end of a title.
 func (t *telling) over(id string) []run {
 	for _, s := range t.shapes {
-		if s.ID == id && s.OuterR() > 0 {
+		if s.ID == id && s.OuterR() > 0 && len(s.Loops) == 0 {
 			return []run{faint(" · ⌀" + noBreak + withUnit(quantity.Trimmed(2*s.OuterR(), 2), "mm"))}
 		}
 	}

@@ -143,7 +143,7 @@ func (v *SectionView) beginDrag() {
 		case slices.Contains(moving, s.ID):
 			d.parts = append(d.parts, s)
 		case !s.Unset:
-			d.others = append(d.others, disc{s.At, s.OuterR()})
+			d.others = append(d.others, disc{s.At, s.InnerR()})
 		}
 	}
 	first := slices.IndexFunc(d.parts, func(s section.Shape) bool { return s.ID == moving[0] })
@@ -216,15 +216,17 @@ func (d *dragState) edit(k *Desk) section.Edit {
 func discsOf(shapes []section.Shape) []disc {
 	out := make([]disc, len(shapes))
 	for i, s := range shapes {
-		out[i] = disc{s.At, s.OuterR()}
+		out[i] = disc{s.At, s.InnerR()}
 	}
 	return out
 }
 
+// A part that is not round counts as the disc within it, so that it can be put anywhere; what then overlaps is marked and said.
+
 // wantedDisc is the first part where the pointer wants it.
 func (d *dragState) wantedDisc() disc {
 	s := d.parts[0]
-	return disc{section.Point{X: s.At.X + d.want.X, Y: s.At.Y + d.want.Y}, s.OuterR()}
+	return disc{section.Point{X: s.At.X + d.want.X, Y: s.At.Y + d.want.Y}, s.InnerR()}
 }
 
 // moveBy is the edit that moves parts from where they stood.

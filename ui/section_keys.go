@@ -171,7 +171,7 @@ func (v *SectionView) nudge(dx, dy float64) {
 	in, by := roomOf(shapes), section.Point{X: dx * step, Y: dy * step}
 	if len(parts) == 1 {
 		p := parts[0]
-		at, ok := nearestFree(disc{section.Point{X: p.At.X + by.X, Y: p.At.Y + by.Y}, p.OuterR()}, others, in)
+		at, ok := nearestFree(disc{section.Point{X: p.At.X + by.X, Y: p.At.Y + by.Y}, p.InnerR()}, others, in)
 		if !ok {
 			return
 		}
@@ -203,7 +203,7 @@ func apart(shapes []section.Shape, moving []string) (parts []section.Shape, othe
 		case slices.Contains(moving, s.ID):
 			parts = append(parts, s)
 		case !s.Unset:
-			others = append(others, disc{s.At, s.OuterR()})
+			others = append(others, disc{s.At, s.InnerR()})
 		}
 	}
 	return parts, others
