@@ -76,13 +76,7 @@ func (p *sectionPainter) hole(s section.Shape, d disc, i int) {
 // core is the disc of a part in pixels, of one that is not round the largest about its place within it, so that leaders end on it.
 func (p *sectionPainter) core(s section.Shape) disc {
 	d := p.disc(s)
-	if len(s.Loops) == 0 {
-		return d
-	}
-	points := s.Loops[len(s.Loops)-1]
-	for i, a := range points {
-		d.r = min(d.r, p.v.PxPerMM*segmentDistance(s.At, a, points[(i+1)%len(points)]))
-	}
+	d.r = s.InnerR() * p.v.PxPerMM
 	return d
 }
 
