@@ -32,3 +32,15 @@ func BenchmarkShaped(b *testing.B) {
 		})
 	}
 }
+
+// A picture of 512 × 512 points: tables first, then every point.
+func BenchmarkShapedField(b *testing.B) {
+	m := heat.New(load(b, "s03_bar_two_wires").Problem, heat.Settings{})
+	row := make([]float64, 512)
+	for b.Loop() {
+		f := m.Solve(context.Background(), nil).Field
+		for i := range row {
+			f.Row(row, (float64(i)-256)/256*22*mm, -22*mm, 44*mm/512)
+		}
+	}
+}
