@@ -50,7 +50,8 @@ func (p *sectionPainter) halo(s section.Shape) color.NRGBA {
 	return alpha(p.pal.Paper, 0.8)
 }
 
-// holderOutline draws the outer surface and the wall's layers; an open bundle, which has no wall, gets a dashed circle.
+// holderOutline draws the outer surface and the wall's layers; an open bundle, which has no wall, gets a dashed line: the string
+// round it, or a circle where that is not known.
 func (p *sectionPainter) holderOutline() {
 	if p.holder == nil {
 		return

@@ -61,6 +61,8 @@ func (o outline) box() box {
 	switch {
 	case o.rect != nil:
 		return *o.rect
+	case o.poly != nil:
+		return loopBox(o.poly)
 	case o.round != nil:
 		return boxAround(o.round.x, o.round.y, o.round.r)
 	}
@@ -102,6 +104,12 @@ func (o outline) leave(x, y, dx, dy float64) float64 {
 	switch {
 	case o.rect != nil:
 		return max(0, leaveBox(*o.rect, x, y, dx, dy))
+	case o.poly != nil:
+		far := 0.0
+		for _, s := range chordOf(o.poly, x, y, dx, dy) {
+			far = max(far, s.b)
+		}
+		return far
 	case o.round != nil:
 		return max(0, leaveDisc(*o.round, x, y, dx, dy))
 	}
@@ -145,6 +153,8 @@ func (o outline) meetsBox(b box) bool {
 	switch {
 	case o.rect != nil:
 		return o.rect.meets(b)
+	case o.poly != nil:
+		return loopMeetsBox(o.poly, b)
 	case o.round != nil:
 		return discMeetsBox(*o.round, b)
 	}

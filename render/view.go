@@ -123,6 +123,9 @@ func shapeBox(s section.Shape) box {
 		t := s.OuterR()
 		return box{s.At.X, s.At.Y, s.At.X + s.Width, s.At.Y + s.Height}.grown(t)
 	}
+	if n := len(s.Loops); n > 0 {
+		return loopBox(s.Loops[n-1])
+	}
 	if r := s.OuterR(); r > 0 {
 		return boxAround(s.At.X, s.At.Y, r)
 	}
