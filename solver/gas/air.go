@@ -55,9 +55,9 @@ func (e *Enclosure) Free() Space {
 	return Space{math.Sqrt(s), outer}
 }
 
-// Stir sets the air node for patches at temperatures t (K) at the pressure p (Pa). The heat that convection adds to conduction goes through
-// h = 2(Nu−1)k/L between each free surface and the node, L being the width of the annulus, so that two surfaces in series
-// exchange (Nu−1)k/L. It returns Nu, 1 for none.
+// Stir sets the air node for patches at temperatures t (K) at the pressure p (Pa). The heat that convection adds to conduction goes between each free
+// surface and the node, through a coefficient such that both surfaces of the annulus in series exchange (Nu−1) times what it conducts:
+// h = 2(Nu−1)k (1/Di + 1/Do)/ln(Do/Di), which is 2(Nu−1)k/L in a narrow one. It returns Nu, 1 for none.
 func (x *Exchange) Stir(t []float64, p float64) (nu float64, inRange bool) {
 	sp := x.Free()
 	x.SetNode(nil)
@@ -83,7 +83,7 @@ func (x *Exchange) Stir(t []float64, p float64) (nu float64, inRange bool) {
 	warm, cold := sum[0]/area[0], sum[1]/area[1]
 	air := fluid.Air((warm+cold)/2, p)
 	nu, inRange = Annulus(sp.Inner, sp.Outer, air, math.Abs(warm-cold))
-	h := 2 * (nu - 1) * air.Conductivity / ((sp.Outer - sp.Inner) / 2)
+	h := 2 * (nu - 1) * air.Conductivity * (1/sp.Inner + 1/sp.Outer) / math.Log(sp.Outer/sp.Inner)
 	for k := range free {
 		free[k] *= h
 	}

@@ -75,7 +75,7 @@ func (x *Exchange) slope(t, dt []float64) {
 }
 
 // NetOf is Net for an iteration that seeks the emissions e (W/m) as well: where surfaces are dark enough it takes their radiosities from e, so
-// that out is the net emission only if it equals e.
+// that out is the net emission only if it equals e. Heat to the air is part of both.
 func (x *Exchange) NetOf(out, t, e []float64) {
 	if x.rho == nil {
 		x.Net(out, t)
@@ -85,8 +85,7 @@ func (x *Exchange) NetOf(out, t, e []float64) {
 		v = math.Max(v, 0)
 		x.y[i] = Sigma * v * v * v * v
 	}
-	x.leave(out, e)
-	x.convect(out, t)
+	x.leave(out, t, e)
 }
 
 // ChangeOf is to NetOf what Change is to Net, for small changes dt and de.
@@ -96,18 +95,19 @@ func (x *Exchange) ChangeOf(out, t, dt, de []float64) {
 		return
 	}
 	x.slope(t, dt)
-	x.leave(out, de)
-	x.convect(out, dt)
+	x.leave(out, dt, de)
 }
 
-// leave sets out to (A − G) J with the radiosities J = y − (1−ε)/(ε A) e.
-func (x *Exchange) leave(out, e []float64) {
+// leave sets out to (A − G) J with the radiosities J = y − (1−ε)/(ε A) e, and to what goes to the air at temperatures t, which is no radiation.
+func (x *Exchange) leave(out, t, e []float64) {
+	clear(x.p)
+	x.convect(x.p, t)
 	for i, v := range x.y {
-		x.b[i] = v - x.rho[i]*e[i]
+		x.b[i] = v - x.rho[i]*(e[i]-x.p[i])
 	}
 	x.Product(out, x.b)
 	for i := range out {
-		out[i] = x.Area(i)*x.b[i] - out[i]
+		out[i] = x.Area(i)*x.b[i] - out[i] + x.p[i]
 	}
 }
 

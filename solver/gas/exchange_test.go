@@ -122,7 +122,7 @@ func TestAnnulus(t *testing.T) {
 	}
 }
 
-// One wire in the middle of a pipe: what convection adds is what the annulus formula says, within what the flat node leaves out of the curvature.
+// One wire in the middle of a pipe: what convection adds is what the annulus formula says.
 func TestStir(t *testing.T) {
 	const r1, r2, t1, t2 = 0.02, 0.05, 350.0, 310.0
 	e := gas.NewEnclosure([]gas.Disc{{R: r1, Cuts: around(24)}}, ring(r2, 72), 3)
@@ -139,7 +139,7 @@ func TestStir(t *testing.T) {
 		}
 	}
 	want := 2 * math.Pi * fluid.AirConductivity(330) * (nu - 1) / math.Log(r2/r1) * (t1 - t2)
-	if !ok || nu < 2 || math.Abs(q/want-1) > 0.15 {
+	if !ok || nu < 2 || math.Abs(q/want-1) > 0.01 {
 		t.Errorf("Nu %.3f: %.4f W/m, want %.4f", nu, q, want)
 	}
 	if math.Abs(sum) > 1e-12*q {
@@ -169,6 +169,11 @@ func TestNetOf(t *testing.T) {
 			eps[k] = least + (1-least)*r.Float64()
 		}
 		x := gas.NewExchange(e, eps)
+		node := make([]float64, e.Len())
+		for k := range node {
+			node[k] = r.Float64()
+		}
+		x.SetNode(node)
 		net, again := make([]float64, e.Len()), make([]float64, e.Len())
 		for what, f := range map[string][2]func(){
 			"net":    {func() { x.Net(net, temp) }, func() { x.NetOf(again, temp, net) }},

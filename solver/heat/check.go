@@ -10,6 +10,7 @@ const (
 	badHeats    = "heat: one heat per part is needed"
 	badMove     = "heat: only a part of the top level can be moved"
 	badFilm     = "heat: the film must be positive or +Inf"
+	badShine    = "heat: an emissivity must lie from 0 to 1, absolute zero and pressure must not be negative"
 	badNoEscape = "heat: no side lets heat out"
 )
 
@@ -53,6 +54,7 @@ func (p *Problem) check() {
 	if p.Wall.Shape == Hull && (tops == 0 || p.Wall.Taut == nil) {
 		panic(badHull)
 	}
+	p.checkShine()
 	p.Wall.check()
 }
 

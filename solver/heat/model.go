@@ -66,6 +66,7 @@ func (a Accuracy) rough() float64 {
 func New(p Problem, s Settings) *Model {
 	p.check()
 	p.Parts = append([]Part(nil), p.Parts...)
+	p.thicken()
 	m := &Model{p: p, set: s}
 	m.layout()
 	return m

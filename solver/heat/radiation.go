@@ -17,6 +17,22 @@ const (
 	Air                  // and it moves where there is room
 )
 
+// ThinnestK is the least conductivity (W/mK) of a gas. Where surfaces touch in a vacuum their contact conducts, nobody knows how well; thinner gases count as
+// this one, which carries a twentieth of what radiation does over 1 mm.
+const ThinnestK = 3e-4
+
+// thicken raises gases to ThinnestK.
+func (p *Problem) thicken() {
+	if p.Filling != Solid {
+		p.MediumK = math.Max(p.MediumK, ThinnestK)
+	}
+	for i := range p.Parts {
+		if q := &p.Parts[i]; q.Core == Inside && q.Filling != Solid {
+			q.K = math.Max(q.K, ThinnestK)
+		}
+	}
+}
+
 // standardPressure, Pa, where none is given.
 const standardPressure = 101325
 
@@ -239,6 +255,20 @@ func (r *radiant) strays(g *region) float64 {
 func (r *radiant) stir(t []float64) {
 	if r.stirs {
 		r.nu, r.inRange = r.ex.Stir(t, r.press)
+	}
+}
+
+// checkShine panics on misuse of what radiation needs.
+func (p *Problem) checkShine() {
+	ok := good(p.ZeroK, p.Pressure) && p.ZeroK >= 0 && p.Pressure >= 0
+	share := func(e float64) { ok = ok && e >= 0 && e <= 1 }
+	share(p.Wall.Emissivity)
+	for i := range p.Parts {
+		share(p.Parts[i].Emissivity)
+		share(p.Parts[i].InsideEmissivity)
+	}
+	if !ok {
+		panic(badShine)
 	}
 }
 

@@ -1,7 +1,5 @@
 package heat
 
-import "math"
-
 // send works out what everything in the knot sends out at unknowns z and heats q (W/m, by source), the insides of cables first.
 func (k *knot) send(z, q []float64) {
 	g := k.g
@@ -225,15 +223,4 @@ func (k *knot) core(s int, q []float64) float64 {
 		}
 	}
 	return t
-}
-
-// hottestPatch is the highest temperature of any patch; NaN if one is not a number.
-func (k *knot) hottestPatch() float64 {
-	hot := math.Inf(-1)
-	for _, t := range k.t {
-		if !(t <= hot) {
-			hot = t
-		}
-	}
-	return hot
 }

@@ -11,7 +11,9 @@ import (
 const (
 	newtonRounds = 16
 	newtonRough  = 0.02
+	newtonNear   = 10.0 // K: radiation is too bent for steps that end farther off
 	guessRise    = 15   // K over the wall: where surfaces begin
+	mostDrive    = 400  // K: residuals are small beside this, however badly the medium conducts
 	leastDrive   = 0.01 // K: what a section without heat is driven by, so that rounding is no residual
 )
 
@@ -35,7 +37,7 @@ func (c *coupled) newton(ctx context.Context, heats []float64, tol float64) (ste
 	r, none := make([]float64, len(c.z)), make([]float64, len(c.z))
 	c.pass(none, heats, true)
 	c.miss(r, none, true, nil)
-	want := tol * (norm(r[:c.held]) + c.m.top.c2()*norm(heats) + leastDrive)
+	want := tol * (math.Min(norm(r[:c.held])+c.m.top.c2()*norm(heats), mostDrive) + leastDrive)
 	first := !c.warm
 	if first {
 		t := c.guess(heats)
@@ -56,7 +58,7 @@ func (c *coupled) newton(ctx context.Context, heats []float64, tol float64) (ste
 		if size <= want && !first {
 			return steps, Converged
 		}
-		more, ok := c.improve(ctx, r, math.Max(newtonRough, 0.3*want/size))
+		more, ok := c.improve(ctx, r, math.Max(math.Min(newtonRough, newtonNear/size), 0.3*want/size))
 		steps += more
 		if !ok {
 			return steps, Cancelled
@@ -98,7 +100,7 @@ func (c *coupled) finish(heats []float64, status Status) {
 
 // grainError over the square of the patches per turn is what patches of one temperature and radiosity each may do, as a share of the largest
 // rise: more than nineteen of twenty random sections.
-const grainError = 0.5
+const grainError = 0.35
 
 // level0 takes the sum of the emissions off them.
 func (k *knot) level0(z []float64) {

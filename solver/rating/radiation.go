@@ -82,6 +82,9 @@ func (s *scene) radiationNote(a answered) string {
 		words[i] = digits(e, 2)
 	}
 	note := "surfaces radiate through the gas between them, emissivity " + strings.Join(words, ", ")
+	if s.thin() {
+		note += fmt.Sprintf("; a gas that conducts less than %s W/mK is reckoned with that, contacts in a vacuum being unknown", digits(heat.ThinnestK, 4))
+	}
 	if h := a.heat; h.Nusselt > 1.005 {
 		note += fmt.Sprintf("; in the free space the air carries %s times what it conducts (Raithby and Hollands 1975, ±25 %%)", digits(h.Nusselt, 2))
 		if h.Beyond {
@@ -89,4 +92,18 @@ func (s *scene) radiationNote(a answered) string {
 		}
 	}
 	return note
+}
+
+// thin tells whether a gas conducts less than the least that is reckoned.
+func (s *scene) thin() bool {
+	m := &s.holder.fill
+	if m.gas && !m.air && m.k < heat.ThinnestK {
+		return true
+	}
+	for i := range s.parts {
+		if in := s.parts[i].inside; in != nil && in.fill.gas && !in.fill.air && in.fill.k < heat.ThinnestK {
+			return true
+		}
+	}
+	return false
 }
