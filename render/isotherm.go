@@ -20,7 +20,7 @@ type isoline struct {
 
 // isotherms draws lines of equal temperature at round values and, dashed, at the limits, and returns them for labelling.
 func (p *sectionPainter) isotherms() []isoline {
-	if p.s.Field == nil || p.s.Stale || !(p.sc.High > p.sc.Low) {
+	if p.s.Field == nil || p.s.Stale || p.s.Plain || !(p.sc.High > p.sc.Low) {
 		return nil
 	}
 	step := 4 * p.k

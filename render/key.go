@@ -1,8 +1,8 @@
 package render
 
-// key says what hatching and dashed lines mean, when there are any: at the bottom beside the scale in mm, else in another corner
+// key says what hatching, dashed lines and heat-flow lines mean, when there are any: at the bottom beside the scale in mm, else in another corner
 // that is free.
-func (p *sectionPainter) key(after bar, hatched bool, lines []isoline) {
+func (p *sectionPainter) key(after bar, hatched bool, lines []isoline, heat *flow) {
 	var entries []keyEntry
 	if hatched {
 		entries = append(entries, keyEntry{"over its limit", p.hatchSwatch})
@@ -12,6 +12,9 @@ func (p *sectionPainter) key(after bar, hatched bool, lines []isoline) {
 			entries = append(entries, keyEntry{"at a limit", p.limitSwatch})
 			break
 		}
+	}
+	if heat != nil && len(heat.lines) > 0 {
+		entries = append(entries, keyEntry{heat.keyText(), p.flowSwatch})
 	}
 	wide := 0.0
 	for i, e := range entries {

@@ -31,6 +31,8 @@ type Scene struct {
 	Pointed  string   // lit up
 	Stale    bool     // the readings belong to an older section: greyed
 	Draft    bool     // within a drag: lines of equal temperature are drawn more coarsely
+	Plain    bool     // without lines of equal temperature
+	Flow     bool     // with heat-flow lines, unless Stale or Draft
 	Bad      []string // ids that overlap or lie outside: marked
 }
 

@@ -1,0 +1,75 @@
+package render
+
+import (
+	"math"
+	"reflect"
+	"sync"
+)
+
+// flow is the heat-flow lines of a field: each carries the same heat from the metal that makes it to the outer surface.
+type flow struct {
+	each  float64 // W/m
+	lines []flowLine
+}
+
+// Lines in a picture: about so many for each heated conductor, within a least and a most in all.
+const (
+	flowPerPart = 16
+	flowLeast   = 32
+	flowMost    = 110
+)
+
+// flowOf finds the lines of a scene. A metal sends out a line for each round amount of its own heat and one for each that
+// reaches it from hotter ones, so that as many leave the section as there is heat.
+func flowOf(s Scene) *flow {
+	metals := metalsOf(s)
+	total, heated := 0.0, 0
+	for _, m := range metals {
+		if m.heat > 0 {
+			total, heated = total+m.heat, heated+1
+		}
+	}
+	f := &flow{}
+	if !(total > 1e-6) || !finite(total) {
+		return f
+	}
+	g, ok := newFlowGrid(s.Field, metals)
+	if !ok {
+		return f
+	}
+	f.each = roundStep(total / float64(min(flowMost, max(flowLeast, flowPerPart*heated))))
+	arrived := make([]int, len(metals))
+	for i, m := range metals {
+		at, out := m.seeds(s.Field, int(math.Round(m.heat/f.each))+arrived[i], g.h)
+		for k := range at {
+			l := g.follow(metals, i, at[k], out[k])
+			if l.to >= 0 {
+				arrived[l.to]++
+			}
+			l.points = thinned(l.points, 0.03*g.h)
+			f.lines = append(f.lines, l)
+		}
+	}
+	return f
+}
+
+// flowCache keeps the lines of the last field. They do not depend on the view and are never written to.
+type flowCache struct {
+	mu    sync.Mutex
+	field Field
+	flow  *flow
+}
+
+var lastFlow flowCache
+
+func (c *flowCache) of(s Scene) *flow {
+	if !reflect.ValueOf(s.Field).Comparable() {
+		return flowOf(s)
+	}
+	c.mu.Lock()
+	defer c.mu.Unlock()
+	if c.flow == nil || c.field != s.Field {
+		c.flow, c.field = flowOf(s), s.Field
+	}
+	return c.flow
+}
