@@ -16,6 +16,7 @@ type drawCommand struct {
 	Width    int    `default:"1400" help:"Width in pixels."`
 	Height   int    `default:"1000" help:"Height in pixels."`
 	Dark     bool   `help:"Dark background."`
+	Flow     bool   `help:"Draw heat-flow lines."`
 }
 
 // Sizes of a picture that are worth drawing.
@@ -36,7 +37,9 @@ func (c *drawCommand) Run(a *app) error {
 	if r == nil {
 		return nil
 	}
-	if err := writePicture(c.Output, sceneOf(r), c.Width, c.Height, render.Style{Dark: c.Dark, Scale: 1}); err != nil {
+	s := sceneOf(r)
+	s.Flow = c.Flow
+	if err := writePicture(c.Output, s, c.Width, c.Height, render.Style{Dark: c.Dark, Scale: 1}); err != nil {
 		return fmt.Errorf("write %s: %w", c.Output, err)
 	}
 	answer, _ := r.Sentence()
