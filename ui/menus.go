@@ -14,7 +14,7 @@ type menus struct {
 	main *fyne.MainMenu
 
 	recent, undo, redo, holder, makeRoom, erase, duplicate *fyne.MenuItem
-	isotherms, details                                     *fyne.MenuItem
+	isotherms, flow, details                               *fyne.MenuItem
 	looks                                                  map[Look]*fyne.MenuItem
 	shown                                                  string // what follow showed last
 }
@@ -108,6 +108,7 @@ func (m *menus) section() *fyne.Menu {
 func (m *menus) view() *fyne.Menu {
 	w := m.w
 	m.isotherms = item("Isotherms", ctrl(fyne.KeyI), w.toggleIsotherms)
+	m.flow = item("Heat-flow lines", ctrl(fyne.KeyF), w.toggleFlow)
 	m.details = item("Details", ctrl(fyne.KeyT), w.toggleDetails)
 	look := fyne.NewMenuItem("Look", nil)
 	for _, l := range []struct {
@@ -122,7 +123,7 @@ func (m *menus) view() *fyne.Menu {
 		item("Zoom in", ctrl(fyne.KeyPlus), func() { w.view.Zoom(zoomStep) }),
 		item("Zoom out", ctrl(fyne.KeyMinus), func() { w.view.Zoom(1 / zoomStep) }),
 		fyne.NewMenuItemSeparator(),
-		m.isotherms, m.details, look,
+		m.isotherms, m.flow, m.details, look,
 	)
 }
 
@@ -142,6 +143,7 @@ func (m *menus) follow() {
 	n := len(k.Selection())
 	m.erase.Disabled, m.duplicate.Disabled, m.makeRoom.Disabled = n == 0, n == 0, n != 1
 	m.isotherms.Checked = m.w.view.Isotherms()
+	m.flow.Checked = m.w.view.Flow()
 	m.details.Checked = m.w.frame.showsDetails(m.w.frame.size.Width)
 	now := m.w.app.Preferences().StringWithFallback(prefLook, string(LookSystem))
 	for l, i := range m.looks {

@@ -45,3 +45,23 @@ func TestKeyboardSheetNamesEveryShortcut(t *testing.T) {
 		}
 	}
 }
+
+func TestHeatFlowLinesAreRemembered(t *testing.T) {
+	w, _ := testWindow(t, testDesign(), usualSize)
+	if w.menu.flow.Checked || w.view.Flow() {
+		t.Error("the lines are shown before anybody asks")
+	}
+	w.menu.flow.Action()
+	if !w.menu.flow.Checked || !w.view.Flow() || !w.app.Preferences().Bool(prefFlow) {
+		t.Error("the item does not show the lines, or not for good")
+	}
+	again := NewWindow(w.app, Options{Catalog: testCatalog(), Document: testDesign(), Rooms: newLoop().rooms(Rooms{})})
+	t.Cleanup(again.Close)
+	if !again.view.Flow() || !again.menu.flow.Checked {
+		t.Error("the next window forgets them")
+	}
+	w.menu.flow.Action()
+	if w.menu.flow.Checked || w.view.Flow() || w.app.Preferences().Bool(prefFlow) {
+		t.Error("the item does not hide the lines again")
+	}
+}

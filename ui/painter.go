@@ -30,6 +30,7 @@ type sheet struct {
 	paper     color.Color
 	coarse    bool // quick: the heat map is sampled coarsely unless the whole one is there
 	isotherms bool
+	flow      bool
 }
 
 // picture is a finished one.
@@ -67,9 +68,7 @@ func (p *painter) paint(_ context.Context, s sheet) *picture {
 	if heat != nil {
 		draw.Draw(img, img.Rect, heat, image.Point{}, draw.Over)
 	}
-	if !s.isotherms {
-		s.scene.Field = nil
-	}
+	s.scene.Plain, s.scene.Flow = !s.isotherms, s.flow
 	render.SectionLayer(render.NewRaster(img), s.scene, s.view, s.scale, s.style)
 	return &picture{img: img, view: s.view, coarse: coarse}
 }

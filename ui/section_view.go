@@ -32,6 +32,7 @@ type SectionView struct {
 	camera     camera
 	fitted     bool // the camera follows the size of the window and of the section
 	isotherms  bool
+	flow       bool
 	density    float64 // pixels a unit, as the raster was last asked for
 	pic        *picture
 	stretched  *image.RGBA // pic as the camera sees it now
@@ -120,6 +121,15 @@ func (v *SectionView) SetIsotherms(on bool) {
 // Isotherms tells whether the lines of equal temperature are shown.
 func (v *SectionView) Isotherms() bool { return v.isotherms }
 
+// SetFlow shows or hides the heat-flow lines.
+func (v *SectionView) SetFlow(on bool) {
+	v.flow = on
+	v.repaint()
+}
+
+// Flow tells whether the heat-flow lines are shown.
+func (v *SectionView) Flow() bool { return v.flow }
+
 // pixels returns the size of the picture in device pixels.
 func (v *SectionView) pixels() (w, h int) {
 	return int(float64(v.Size().Width)*v.density + 0.5), int(float64(v.Size().Height)*v.density + 0.5)
@@ -161,7 +171,7 @@ func (v *SectionView) ask(coarse bool) (view render.View, ok bool) {
 	}
 	v.painter.ask(sheet{
 		scene: scene, scale: render.ScaleOf(scene), view: view, style: v.style(), paper: themeColor(theme.ColorNameBackground),
-		coarse: coarse, isotherms: v.isotherms,
+		coarse: coarse, isotherms: v.isotherms, flow: v.flow,
 	})
 	return view, true
 }

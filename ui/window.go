@@ -48,6 +48,7 @@ type Window struct {
 const (
 	prefRecent  = "recent"
 	prefLook    = "look"
+	prefFlow    = "flow"
 	prefWidth   = "window.width"
 	prefHeight  = "window.height"
 	prefFolder  = "folder"
@@ -65,6 +66,7 @@ func NewWindow(a fyne.App, o Options) *Window {
 		w.remember(o.Path)
 	}
 	w.view = NewSectionView(w.desk)
+	w.view.SetFlow(a.Preferences().Bool(prefFlow))
 	w.trace = newTracer(w, o.Trace)
 	w.build()
 	w.menu = newMenus(w)

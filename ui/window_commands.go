@@ -114,6 +114,13 @@ func (w *Window) toggleIsotherms() {
 	w.menu.follow()
 }
 
+// toggleFlow shows or hides the heat-flow lines, for good.
+func (w *Window) toggleFlow() {
+	w.view.SetFlow(!w.view.Flow())
+	w.app.Preferences().SetBool(prefFlow, w.view.Flow())
+	w.menu.follow()
+}
+
 // setLook changes between light and dark, for good.
 func (w *Window) setLook(l Look) {
 	w.app.Preferences().SetString(prefLook, string(l))

@@ -227,6 +227,7 @@ func (w *Window) choosePicture() {
 
 func (w *Window) savePicture(path string) {
 	scene := w.desk.Scene()
+	scene.Plain, scene.Flow = !w.view.Isotherms(), w.view.Flow()
 	w.beside(func() func() {
 		err := WritePicture(path, scene)
 		return func() {
