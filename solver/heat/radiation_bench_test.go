@@ -18,11 +18,18 @@ func glowing(t testing.TB, name string) loaded {
 	return l
 }
 
+// glowingTimed adds a wireway to the round timing sections.
+func glowingTimed() []struct {
+	parts int
+	name  string
+} {
+	c := timed[0]
+	c.parts, c.name = 24, "r03_wireway24_steel"
+	return append(timed[:len(timed):len(timed)], c)
+}
+
 func BenchmarkRadiation(b *testing.B) {
-	for _, c := range append(timed, struct {
-		parts int
-		name  string
-	}{24, "r03_wireway24_steel"}) {
+	for _, c := range glowingTimed() {
 		l := glowing(b, c.name)
 		b.Run(fmt.Sprint(c.parts), func(b *testing.B) {
 			b.ReportAllocs()
@@ -32,5 +39,45 @@ func BenchmarkRadiation(b *testing.B) {
 			}
 			b.ReportMetric(float64(steps), "steps")
 		})
+	}
+}
+
+// BenchmarkRadiationDrag moves the topmost part by 0.1 mm a frame, up and down again, in a draft.
+func BenchmarkRadiationDrag(b *testing.B) {
+	for _, c := range glowingTimed() {
+		l := glowing(b, c.name)
+		top := 0
+		for i := range l.Parts {
+			if l.Parts[i].Y > l.Parts[top].Y {
+				top = i
+			}
+		}
+		m := heat.New(l.Problem, one(heat.Draft))
+		m.Solve(context.Background(), nil)
+		b.Run(fmt.Sprint(c.parts), func(b *testing.B) {
+			b.ReportAllocs()
+			frozen, n := 0, 0
+			for ; b.Loop(); n++ {
+				up := float64(min(n%24, 24-n%24)) * 0.1 * mm
+				m.Move(top, l.Parts[top].X, l.Parts[top].Y-up)
+				if m.Solve(context.Background(), nil).Frozen {
+					frozen++
+				}
+			}
+			b.ReportMetric(float64(frozen)/float64(n), "frozen/op")
+		})
+	}
+}
+
+func BenchmarkRadiationTangent(b *testing.B) {
+	l := glowing(b, "t37_settled_air")
+	heats := make([]float64, len(l.Parts))
+	m := heat.New(l.Problem, one(heat.Standard))
+	for n := 0; b.Loop(); n++ {
+		for i := range heats {
+			heats[i] = l.Parts[i].Heat * (1 + 0.01*float64(n%7))
+		}
+		m.Solve(context.Background(), heats)
+		m.Influence(context.Background())
 	}
 }

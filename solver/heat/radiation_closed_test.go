@@ -98,7 +98,7 @@ func TestConcentricAir(t *testing.T) {
 
 // The thinnest gas stands for all that are thinner.
 func TestThinnest(t *testing.T) {
-	l := load(t, "r01_conduit9_plastic")
+	l := load(t, "r04_loose7_conduit40")
 	at := func(k float64) float64 {
 		l.MediumK = k
 		r := heat.New(l.Problem, heat.Settings{Accuracy: heat.Draft}).Solve(bg, nil)
