@@ -79,3 +79,21 @@ func TestFitViewToAHull(t *testing.T) {
 		t.Errorf("a pocket hits %q", id)
 	}
 }
+
+// The heat map of a bundle ends at its string.
+func TestHeatLayerEndsAtTheHull(t *testing.T) {
+	shapes, _ := ribbon()
+	for _, coarse := range []bool{false, true} {
+		v := View{PxPerMM: 40, W: 440, H: 440}
+		img := HeatLayer(Scene{Shapes: shapes, Field: slope{edge: outlineOf(shapes)}}, v, Scale{0, 100}, coarse)
+		for _, c := range []struct {
+			at section.Point
+			in bool
+		}{{section.Point{}, true}, {section.Point{X: 1, Y: 0.95}, true}, {section.Point{X: 1, Y: 1.05}, false}, {section.Point{Y: 3}, false}, {section.Point{X: 4.95}, true}, {section.Point{X: 4.9, Y: 0.9}, false}} {
+			x, y := v.ToPx(c.at)
+			if got := img.RGBAAt(int(x), int(y)).A > 128; got != c.in {
+				t.Errorf("coarse %v: painted at %v: %v", coarse, c.at, got)
+			}
+		}
+	}
+}
