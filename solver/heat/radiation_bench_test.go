@@ -18,18 +18,8 @@ func glowing(t testing.TB, name string) loaded {
 	return l
 }
 
-// glowingTimed adds a wireway to the round timing sections.
-func glowingTimed() []struct {
-	parts int
-	name  string
-} {
-	c := timed[0]
-	c.parts, c.name = 24, "r03_wireway24_steel"
-	return append(timed[:len(timed):len(timed)], c)
-}
-
 func BenchmarkRadiation(b *testing.B) {
-	for _, c := range glowingTimed() {
+	for _, c := range timed {
 		l := glowing(b, c.name)
 		b.Run(fmt.Sprint(c.parts), func(b *testing.B) {
 			b.ReportAllocs()
@@ -44,7 +34,7 @@ func BenchmarkRadiation(b *testing.B) {
 
 // BenchmarkRadiationDrag moves the topmost part by 0.1 mm a frame, up and down again, in a draft.
 func BenchmarkRadiationDrag(b *testing.B) {
-	for _, c := range glowingTimed() {
+	for _, c := range timed {
 		l := glowing(b, c.name)
 		top := 0
 		for i := range l.Parts {
