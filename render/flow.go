@@ -33,7 +33,7 @@ func flowOf(s Scene) *flow {
 	if !(total > 1e-6) || !finite(total) {
 		return f
 	}
-	g, ok := newFlowGrid(s.Field, metals)
+	g, ok := newFlowGrid(s.Field, metals, wallMetal(s))
 	if !ok {
 		return f
 	}

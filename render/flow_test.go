@@ -217,6 +217,24 @@ func TestFlowOfABar(t *testing.T) {
 	}
 }
 
+// Lines end on a wireway's sheet metal, whose own slopes are too small to follow, and go through plastic to the outside.
+func TestFlowEndsOnSheetMetal(t *testing.T) {
+	for _, metal := range []bool{true, false} {
+		s := sourceScene(&sources{r: 10, rim: 30, at: []section.Point{{X: -3, Y: -2}, {X: 3, Y: 1}}, q: []float64{6, 4}}, 0.4)
+		s.Shapes[0] = section.Shape{
+			Kind: section.Wireway, At: section.Point{X: -6, Y: -6}, Width: 12, Height: 12, // its corners lie in the disc
+			Rings: []section.Ring{{Material: "pvc", R0: 0, R1: 0.5}, {Material: "steel", Metal: metal, R0: 0.5, R1: 2}},
+		}
+		for i, l := range flowOf(s).lines {
+			q := l.points[len(l.points)-1]
+			on := math.Abs(max(math.Abs(q.X), math.Abs(q.Y))-6.5) < 1e-3
+			if l.end != flowMet && (on != metal || (l.end == flowWall) != metal) {
+				t.Errorf("metal %v: line %d ends %v at %v", metal, i, l.end, q)
+			}
+		}
+	}
+}
+
 func TestFlowIsDrawnOnlyWhereItBelongs(t *testing.T) {
 	draw := func(s Scene) string {
 		r := NewRecorder(700, 600)

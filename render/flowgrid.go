@@ -23,10 +23,12 @@ type flowGrid struct {
 	t      []float64
 	known  []bool // the field has a value there
 	gx, gy []float64
+	edge   box                      // the field's bounds
+	wall   func(section.Point) bool // the metal of a rectangle's wall, at which lines end; nil for none
 }
 
 // newFlowGrid samples a field; ok is false where it has no size.
-func newFlowGrid(f Field, metals []flowMetal) (g *flowGrid, ok bool) {
+func newFlowGrid(f Field, metals []flowMetal, wall func(section.Point) bool) (g *flowGrid, ok bool) {
 	x0, y0, x1, y1 := f.Bounds()
 	long := max(x1-x0, y1-y0)
 	if !(long > 0) || !finite(long) || !(x1 > x0 && y1 > y0) {
@@ -36,9 +38,9 @@ func newFlowGrid(f Field, metals []flowMetal) (g *flowGrid, ok bool) {
 	for _, m := range metals {
 		n = max(n, min(flowMostNodes, flowMetalNodes*long/(2*m.r)))
 	}
-	g = &flowGrid{field: f, h: long / n}
-	g.x0, g.y0 = x0-2.5*g.h, y0-2.5*g.h
-	g.nx, g.ny = int((x1-x0)/g.h)+6, int((y1-y0)/g.h)+6
+	g = &flowGrid{field: f, h: long / n, edge: box{x0, y0, x1, y1}, wall: wall}
+	g.x0, g.y0 = x0-5.5*g.h, y0-5.5*g.h // room past the edge for what extend continues
+	g.nx, g.ny = int((x1-x0)/g.h)+12, int((y1-y0)/g.h)+12
 	g.t, g.known = make([]float64, g.nx*g.ny), make([]bool, g.nx*g.ny)
 	parallelRows(g.ny, func(next func() (int, bool)) {
 		for j, ok := next(); ok; j, ok = next() {
@@ -51,6 +53,13 @@ func newFlowGrid(f Field, metals []flowMetal) (g *flowGrid, ok bool) {
 	})
 	for _, m := range metals {
 		g.blank(m)
+	}
+	if wall != nil {
+		for k := range g.t {
+			if wall(section.Point{X: g.x0 + float64(k%g.nx)*g.h, Y: g.y0 + float64(k/g.nx)*g.h}) {
+				g.t[k] = math.NaN()
+			}
+		}
 	}
 	for range 3 {
 		g.extend()
@@ -166,7 +175,7 @@ func (g *flowGrid) temp(q section.Point) float64 {
 // inside tells whether the field has a value at a point. Only beside the edge is the field itself asked.
 func (g *flowGrid) inside(q section.Point) bool {
 	k, _, _, ok := g.cell(q)
-	if !ok {
+	if !ok || q.X < g.edge.x0 || q.X > g.edge.x1 || q.Y < g.edge.y0 || q.Y > g.edge.y1 {
 		return false
 	}
 	if g.known[k] && g.known[k+1] && g.known[k+g.nx] && g.known[k+g.nx+1] {

@@ -73,7 +73,7 @@ func (p *sectionPainter) inThinMetal(line []section.Point) []bool {
 func (p *sectionPainter) wallDepth(q section.Point) float64 {
 	h := p.holder
 	if h.Width > 0 && h.Height > 0 {
-		return max(h.At.X-q.X, q.X-h.At.X-h.Width, h.At.Y-q.Y, q.Y-h.At.Y-h.Height)
+		return rectDepth(h, q)
 	}
 	return math.Hypot(q.X-h.At.X, q.Y-h.At.Y)
 }

@@ -11,6 +11,7 @@ type flowEnd int
 
 const (
 	flowOut   flowEnd = iota // at the outer surface
+	flowWall                 // on the metal of a rectangle's wall
 	flowMet                  // on the metal of another part, from whose cooler side another goes on
 	flowStill                // where nothing falls any more: a sink inside the section
 )
@@ -22,6 +23,10 @@ type flowLine struct {
 	end      flowEnd
 }
 
+// flowPatience is for how many steps of the grid a line may go without getting colder: at the face of good metal the slopes on
+// either side are unlike, and the grid, which has their mean, leads along it for a while.
+const flowPatience = 12
+
 // follow walks from a metal's surface downhill by an embedded Runge–Kutta pair of orders 2 and 3 (Bogacki & Shampine 1989) over
 // the unit vectors of steepest fall: what it steps along is length.
 func (g *flowGrid) follow(metals []flowMetal, from int, at, out section.Point) flowLine {
@@ -31,6 +36,7 @@ func (g *flowGrid) follow(metals []flowMetal, from int, at, out section.Point) f
 		return l
 	}
 	most := 10 * float64(g.nx+g.ny) * g.h
+	low, lowAt, since := g.temp(q), len(l.points), 0.0
 	for step, long := g.h, 0.0; long < most; {
 		next, miss, ok := g.step(q, step)
 		tolerance := 0.004 * g.h
@@ -42,18 +48,23 @@ func (g *flowGrid) follow(metals []flowMetal, from int, at, out section.Point) f
 			step /= 2
 			continue
 		}
-		if !ok || !(g.temp(next) < g.temp(q)) {
-			l.end = flowStill
-			return l
+		if !ok {
+			break
 		}
-		long += step
+		long, since = long+step, since+step
 		q = next
 		if g.ends(&l, metals, q) {
 			return l
 		}
+		if t := g.temp(q); t < low {
+			low, lowAt, since = t, len(l.points), 0
+		}
+		if since > flowPatience*g.h {
+			break
+		}
 		step = min(1.5*g.h, step*min(3, 0.9*math.Cbrt(tolerance/max(miss, 1e-12*g.h))))
 	}
-	l.end = flowStill
+	l.end, l.points = flowStill, l.points[:lowAt]
 	return l
 }
 
@@ -83,6 +94,11 @@ func (g *flowGrid) ends(l *flowLine, metals []flowMetal, q section.Point) bool {
 			l.points = append(l.points, lastWhere(last, q, func(p section.Point) bool { return !m.has(p) }))
 			return true
 		}
+	}
+	if g.wall != nil && g.wall(q) {
+		l.end = flowWall
+		l.points = append(l.points, lastWhere(last, q, func(p section.Point) bool { return !g.wall(p) }))
+		return true
 	}
 	if !g.inside(q) {
 		l.end = flowOut

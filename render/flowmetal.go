@@ -57,6 +57,26 @@ func metalsOf(s Scene) []flowMetal {
 	return out
 }
 
+// wallMetal tells what lies in the metal of a rectangle's wall, nil where there is none. Thin sheet round corners spreads heat at
+// slopes of a few millikelvin, less than the field is good for: lines end where they reach it.
+func wallMetal(s Scene) func(section.Point) bool {
+	h := holderOf(s.Shapes)
+	if h == nil || !(h.Width > 0 && h.Height > 0) {
+		return nil
+	}
+	for _, r := range h.Rings {
+		if r.Metal {
+			return func(q section.Point) bool { return rectDepth(h, q) > r.R0 }
+		}
+	}
+	return nil
+}
+
+// rectDepth is how far a point lies outside the inside face of a rectangle, negative within.
+func rectDepth(h *section.Shape, q section.Point) float64 {
+	return max(h.At.X-q.X, q.X-h.At.X-h.Width, h.At.Y-q.Y, q.Y-h.At.Y-h.Height)
+}
+
 // flowPieces is into how many pieces of about one length an outline is cut.
 const flowPieces = 144
 
