@@ -30,7 +30,7 @@ func BenchmarkEnclosure(b *testing.B) {
 		b.Run(fmt.Sprint(n), func(b *testing.B) {
 			b.ReportAllocs()
 			for b.Loop() {
-				e := gas.NewEnclosure(d, ring(r, 72), 3)
+				e := gas.NewEnclosure(d, ring(r, 72), 3, 1, nil)
 				b.ReportMetric(float64(e.Entries()), "entries")
 			}
 		})
@@ -40,12 +40,12 @@ func BenchmarkEnclosure(b *testing.B) {
 func BenchmarkMove(b *testing.B) {
 	for _, n := range []int{37, 200} {
 		d, r := heap(n)
-		e := gas.NewEnclosure(d, ring(r, 72), 3)
+		e := gas.NewEnclosure(d, ring(r, 72), 3, 1, nil)
 		c := d[n-1].C
 		b.Run(fmt.Sprint(n), func(b *testing.B) {
 			b.ReportAllocs()
 			for k := 0; b.Loop(); k++ {
-				e.Move(n-1, c+complex(0, 0.1*float64(k&1)))
+				e.Move(n-1, c+complex(0, 0.1*float64(k&1)), 1)
 			}
 		})
 	}

@@ -41,7 +41,6 @@ type Enclosure struct {
 	path []float64
 	raw  [][]sight // what each patch sees, before reciprocity is enforced
 	sparse
-	eye eye
 }
 
 // sight is a share f of what a patch sees.
@@ -50,8 +49,9 @@ type sight struct {
 	f     float64
 }
 
-// NewEnclosure finds the view factors from the given number of Gauss points per patch (1 to 5).
-func NewEnclosure(discs []Disc, out Outline, points int) *Enclosure {
+// NewEnclosure finds the view factors from the given number of Gauss points per patch (1 to 5), on up to threads goroutines. It asks stop now and
+// then, nil for never, and returns nil if that asks for an end.
+func NewEnclosure(discs []Disc, out Outline, points, threads int, stop func() bool) *Enclosure {
 	e := &Enclosure{discs: append([]Disc(nil), discs...), out: out, points: min(max(points, 1), len(nodes))}
 	n, m := 0, 0
 	for _, d := range discs {
@@ -67,13 +67,16 @@ func NewEnclosure(discs []Disc, out Outline, points int) *Enclosure {
 	for k, s := range out.Segments {
 		e.gap = append(e.gap, s.A != out.Segments[(k+len(out.Segments)-1)%len(out.Segments)].B)
 	}
-	for i := range discs {
-		e.place(i)
+	all := make([]int, len(discs)+1)
+	for i := range all {
+		all[i] = len(discs) - i // the outline first: it takes longest
+		if i > 0 {
+			e.place(all[i])
+		}
 	}
-	for i := range discs {
-		e.lookFrom(i)
+	if !e.lookFrom(all, threads, stop) {
+		return nil
 	}
-	e.lookFrom(len(discs))
 	e.close()
 	return e
 }
@@ -103,19 +106,21 @@ func (e *Enclosure) Area(k int) float64 { return e.area[k] }
 func (e *Enclosure) Path(k int) float64 { return e.path[k] }
 
 // Move puts disc i elsewhere and looks anew from the discs that saw it, see it now, or both.
-func (e *Enclosure) Move(i int, c complex128) {
+func (e *Enclosure) Move(i int, c complex128, threads int) {
 	dirty := make([]bool, len(e.discs)+1)
 	e.seen(i, dirty)
 	e.discs[i].C = c
 	e.place(i)
-	e.lookFrom(i)
+	e.lookFrom([]int{i}, 1, nil)
 	e.seen(i, dirty)
 	dirty[i] = false
-	for j, d := range dirty {
-		if d {
-			e.lookFrom(j)
+	var again []int
+	for j := len(dirty) - 1; j >= 0; j-- {
+		if dirty[j] {
+			again = append(again, j)
 		}
 	}
+	e.lookFrom(again, threads, nil)
 	e.close()
 }
 

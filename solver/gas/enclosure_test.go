@@ -61,7 +61,7 @@ func span(e *gas.Enclosure, a0, a1, b0, b1 int) float64 {
 // Concentric cylinders: F is 1 outwards and r/R inwards (J. R. Howell, A Catalog of Radiation Heat Transfer Configuration Factors, C-91).
 func TestConcentric(t *testing.T) {
 	for _, r := range []float64{0.1, 0.5, 0.95} {
-		e := gas.NewEnclosure([]gas.Disc{{R: r, Cuts: around(24)}}, ring(1, 72), 3)
+		e := gas.NewEnclosure([]gas.Disc{{R: r, Cuts: around(24)}}, ring(1, 72), 3, 2, nil)
 		if f := between(e, 0, 1); math.Abs(f-1) > 1e-4 {
 			t.Errorf("r %g: %.6f outwards", r, f)
 		}
@@ -77,7 +77,7 @@ func TestTwoCylinders(t *testing.T) {
 		x := 1 + gap/2
 		want := (math.Sqrt(x*x-1) + math.Asin(1/x) - x) / math.Pi
 		for _, points := range []int{2, 3, 4} {
-			e := gas.NewEnclosure([]gas.Disc{{C: complex(-x, 0.3), R: 1, Cuts: around(24)}, {C: complex(x, 0.3), R: 1, Cuts: around(24)}}, ring(8, 72), points)
+			e := gas.NewEnclosure([]gas.Disc{{C: complex(-x, 0.3), R: 1, Cuts: around(24)}, {C: complex(x, 0.3), R: 1, Cuts: around(24)}}, ring(8, 72), points, 2, nil)
 			if f := between(e, 0, 1); math.Abs(f-want) > 5e-5 {
 				t.Errorf("gap %g, %d points: %.6f, want %.6f", gap, points, f, want)
 			}
@@ -89,7 +89,7 @@ func TestTwoCylinders(t *testing.T) {
 // cylinder of radius r whose axis is h above it; the same from the cylinder's side.
 func TestStripAndCylinder(t *testing.T) {
 	const b, h, r = 2.0, 1.5, 0.7
-	e := gas.NewEnclosure([]gas.Disc{{C: complex(b, h), R: r, Cuts: around(24)}}, box(2*b, 9, 12), 3)
+	e := gas.NewEnclosure([]gas.Disc{{C: complex(b, h), R: r, Cuts: around(24)}}, box(2*b, 9, 12), 3, 2, nil)
 	from, _ := e.Patches(1)
 	want := r / b * math.Atan(b/h)
 	if f := span(e, from, from+12, 0, 24); math.Abs(f-want) > 1e-4 {
@@ -100,7 +100,7 @@ func TestStripAndCylinder(t *testing.T) {
 // Opposite sides of a duct, F = √(1+(h/w)²) − h/w, and sides that meet, F = (1 + h/w − √(1+(h/w)²))/2 (Hottel's crossed strings; Howell, C-1 and C-3).
 func TestStrips(t *testing.T) {
 	for _, h := range []float64{0.2, 1, 3} {
-		e := gas.NewEnclosure(nil, box(1, h, 8), 3)
+		e := gas.NewEnclosure(nil, box(1, h, 8), 3, 2, nil)
 		d := math.Sqrt(1 + h*h)
 		if f := span(e, 0, 8, 16, 24); math.Abs(f-(d-h)) > 1e-5 {
 			t.Errorf("h %g: %.6f opposite, want %.6f", h, f, d-h)
@@ -177,14 +177,18 @@ func first(discs []gas.Disc, out gas.Outline, at, dir complex128, self int) int 
 
 // Random sections, many surfaces in each other's way: against plain rays from many points of every patch.
 func TestRays(t *testing.T) {
-	for seed := range 6 {
+	seeds := 6
+	if testing.Short() {
+		seeds = 2
+	}
+	for seed := range seeds {
 		r := rand.New(rand.NewPCG(uint64(seed), 7))
 		boxed := seed%2 == 1
 		discs, out := scatter(r, 14, boxed), ring(10, 60)
 		if boxed {
 			out = box(20, 15, 12)
 		}
-		e := gas.NewEnclosure(discs, out, 4)
+		e := gas.NewEnclosure(discs, out, 4, 2, nil)
 		const origins, rays = 24, 360
 		square, all := 0.0, 0.0
 		for i := range discs {
@@ -226,7 +230,7 @@ func TestRays(t *testing.T) {
 func TestReciprocalAndClosed(t *testing.T) {
 	r := rand.New(rand.NewPCG(3, 3))
 	discs := scatter(r, 12, false)
-	e := gas.NewEnclosure(discs, ring(10, 48), 3)
+	e := gas.NewEnclosure(discs, ring(10, 48), 3, 2, nil)
 	for i := range e.Len() {
 		sum := 0.0
 		for j := range e.Len() {
@@ -249,7 +253,7 @@ func TestReciprocalAndClosed(t *testing.T) {
 func TestMove(t *testing.T) {
 	r := rand.New(rand.NewPCG(5, 5))
 	discs := scatter(r, 16, false)
-	e := gas.NewEnclosure(discs, ring(10, 48), 3)
+	e := gas.NewEnclosure(discs, ring(10, 48), 3, 2, nil)
 	for range 4 {
 		i := r.IntN(len(discs))
 		discs[i].C *= complex(0.9, 0)
@@ -261,8 +265,8 @@ func TestMove(t *testing.T) {
 			discs[i].C /= complex(0.9, 0)
 			continue
 		}
-		e.Move(i, discs[i].C)
-		fresh := gas.NewEnclosure(discs, ring(10, 48), 3)
+		e.Move(i, discs[i].C, 2)
+		fresh := gas.NewEnclosure(discs, ring(10, 48), 3, 2, nil)
 		for a := range e.Len() {
 			for b := range e.Len() {
 				if d := math.Abs(e.Factor(a, b) - fresh.Factor(a, b)); d > 1e-9 {
@@ -279,12 +283,28 @@ func TestGrazing(t *testing.T) {
 	for k := range 9 {
 		discs = append(discs, gas.Disc{C: complex(1+2*float64(k), 1), R: 1, Cuts: around(24)})
 	}
-	e := gas.NewEnclosure(discs, box(18, 6, 18), 3)
+	e := gas.NewEnclosure(discs, box(18, 6, 18), 3, 2, nil)
 	// The floor between two neighbours sees nothing but them: by crossed strings π/4 of a radius to each quarter.
 	if f := between(e, 3, 4); math.Abs(f-(0.5-1/math.Pi)) > 3e-4 {
 		t.Errorf("neighbours see %.6f of each other, want %.6f", f, 0.5-1/math.Pi)
 	}
 	if f := between(e, 3, 6); math.Abs(f) > 1e-9 {
 		t.Errorf("a hidden disc is seen: %g", f)
+	}
+}
+
+// A look about that is to stop gives nothing; on one goroutine or several it gives the same.
+func TestStopAndThreads(t *testing.T) {
+	discs := scatter(rand.New(rand.NewPCG(9, 9)), 10, false)
+	if e := gas.NewEnclosure(discs, ring(10, 48), 2, 2, func() bool { return true }); e != nil {
+		t.Error("it did not stop")
+	}
+	one, four := gas.NewEnclosure(discs, ring(10, 48), 2, 1, nil), gas.NewEnclosure(discs, ring(10, 48), 2, 4, nil)
+	for a := range one.Len() {
+		for b := range one.Len() {
+			if one.Factor(a, b) != four.Factor(a, b) {
+				t.Fatalf("F of %d to %d depends on the number of goroutines", a, b)
+			}
+		}
 	}
 }

@@ -24,7 +24,7 @@ func fill(e *gas.Enclosure, by ...float64) []float64 {
 // table 13.3).
 func TestTwoSurfaces(t *testing.T) {
 	const r1, r2, t1, t2 = 0.004, 0.01, 370.0, 310.0
-	e := gas.NewEnclosure([]gas.Disc{{R: r1, Cuts: around(24)}}, ring(r2, 72), 3)
+	e := gas.NewEnclosure([]gas.Disc{{R: r1, Cuts: around(24)}}, ring(r2, 72), 3, 2, nil)
 	for _, eps := range [][2]float64{{0.9, 0.8}, {0.25, 0.9}, {1, 1}, {0.05, 0.05}, {1, 0.1}} {
 		x := gas.NewExchange(e, fill(e, eps[0], eps[1]))
 		out := make([]float64, e.Len())
@@ -49,7 +49,7 @@ func TestTwoSurfaces(t *testing.T) {
 // The exchange is symmetric in the emissive powers, takes nothing from uniform temperatures, and Change is its derivative.
 func TestExchange(t *testing.T) {
 	r := rand.New(rand.NewPCG(1, 2))
-	e := gas.NewEnclosure(scatter(r, 9, false), ring(10, 40), 2)
+	e := gas.NewEnclosure(scatter(r, 9, false), ring(10, 40), 2, 2, nil)
 	eps := make([]float64, e.Len())
 	for k := range eps {
 		eps[k] = r.Float64()
@@ -125,7 +125,7 @@ func TestAnnulus(t *testing.T) {
 // One wire in the middle of a pipe: what convection adds is what the annulus formula says.
 func TestStir(t *testing.T) {
 	const r1, r2, t1, t2 = 0.02, 0.05, 350.0, 310.0
-	e := gas.NewEnclosure([]gas.Disc{{R: r1, Cuts: around(24)}}, ring(r2, 72), 3)
+	e := gas.NewEnclosure([]gas.Disc{{R: r1, Cuts: around(24)}}, ring(r2, 72), 3, 2, nil)
 	x := gas.NewExchange(e, fill(e, 0, 0))
 	temps := fill(e, t1, t2)
 	nu, ok := x.Stir(temps, 101325)
@@ -145,11 +145,11 @@ func TestStir(t *testing.T) {
 	if math.Abs(sum) > 1e-12*q {
 		t.Errorf("the air keeps %g W/m", sum)
 	}
-	small := gas.NewExchange(gas.NewEnclosure([]gas.Disc{{R: 0.004, Cuts: around(24)}}, ring(0.0155, 72), 3), make([]float64, 96))
+	small := gas.NewExchange(gas.NewEnclosure([]gas.Disc{{R: 0.004, Cuts: around(24)}}, ring(0.0155, 72), 3, 2, nil), make([]float64, 96))
 	if nu, _ := small.Stir(temps, 101325); nu != 1 {
 		t.Errorf("31 mm convect: Nu %g", nu)
 	}
-	packed := gas.NewEnclosure([]gas.Disc{{R: 0.045, Cuts: around(24)}}, ring(r2, 72), 3)
+	packed := gas.NewEnclosure([]gas.Disc{{R: 0.045, Cuts: around(24)}}, ring(r2, 72), 3, 2, nil)
 	if nu, _ := gas.NewExchange(packed, make([]float64, 96)).Stir(temps, 101325); nu != 1 {
 		t.Errorf("a gap of 5 mm convects: Nu %g", nu)
 	}
@@ -158,7 +158,7 @@ func TestStir(t *testing.T) {
 // Seeking emissions along with temperatures ends at the same ones: NetOf returns the net emission when it is given it, and ChangeOf its change.
 func TestNetOf(t *testing.T) {
 	r := rand.New(rand.NewPCG(6, 2))
-	e := gas.NewEnclosure(scatter(r, 9, false), ring(10, 40), 2)
+	e := gas.NewEnclosure(scatter(r, 9, false), ring(10, 40), 2, 2, nil)
 	temp, dt := make([]float64, e.Len()), make([]float64, e.Len())
 	for k := range temp {
 		temp[k], dt[k] = 300+80*r.Float64(), r.Float64()-0.5

@@ -3,34 +3,58 @@ package gas
 import (
 	"math"
 	"slices"
+	"sync"
+	"sync/atomic"
 )
 
 // Near a contact a surface sees hardly more than what is opposite, so that the shares of its patches jump where the patches opposite end. The
 // patch that looks is divided there: where an end is nearer than closeBy times the length of the patch.
 const closeBy = 0.4
 
-// lookFrom finds what the patches of disc i, or of the outline, see.
-func (e *Enclosure) lookFrom(i int) {
-	if i == len(e.discs) {
-		e.lookFromOutline()
-		return
+// lookFrom finds what the patches of some discs see, and of the outline, which counts as a last disc. It reports whether it came to the end.
+func (e *Enclosure) lookFrom(discs []int, threads int, stop func() bool) bool {
+	var next atomic.Int64
+	var stopped atomic.Bool
+	work := func() {
+		var y eye
+		for k := int(next.Add(1)) - 1; k < len(discs); k = int(next.Add(1)) - 1 {
+			if stopped.Load() || stop != nil && stop() {
+				stopped.Store(true)
+				return
+			}
+			if i := discs[k]; i < len(e.discs) {
+				e.lookFromDisc(&y, i)
+			} else {
+				e.lookFromOutline(&y)
+			}
+		}
 	}
+	var all sync.WaitGroup
+	for range min(threads, len(discs)) - 1 {
+		all.Go(work)
+	}
+	work()
+	all.Wait()
+	return !stopped.Load()
+}
+
+func (e *Enclosure) lookFromDisc(y *eye, i int) {
 	d := &e.discs[i]
 	if len(d.Cuts) < 2 {
 		return
 	}
-	e.eye.queue(e, i, d.C, d.R)
-	stops := e.stops(i)
+	y.queue(e, i, d.C, d.R)
+	stops := e.stops(y, i)
 	for k := 1; k < len(d.Cuts); k++ {
 		a, b := d.Cuts[k-1], d.Cuts[k]
-		e.eye.open(e)
+		y.open(e)
 		for a < b && !d.blank(k-1) {
 			var m float64
 			m, stops = upTo(stops, a, b)
-			e.fromArc(d, a, m, (m-a)/(b-d.Cuts[k-1]))
+			e.fromArc(y, d, a, m, (m-a)/(b-d.Cuts[k-1]))
 			a = m
 		}
-		e.eye.close(e, e.first[i]+k-1)
+		y.close(e, e.first[i]+k-1)
 	}
 }
 
@@ -47,12 +71,12 @@ func upTo(stops []float64, a, b float64) (float64, []float64) {
 }
 
 // fromArc looks from the Gauss points between two angles on d.
-func (e *Enclosure) fromArc(d *Disc, a, b, weight float64) {
+func (e *Enclosure) fromArc(y *eye, d *Disc, a, b, weight float64) {
 	mid, half := (a+b)/2, (b-a)/2
 	for _, g := range e.rule(weight) {
 		s, c := math.Sincos(mid + half*g[0])
 		normal := complex(c, s)
-		e.eye.look(e, d.C+scale(d.R, normal), normal, g[1]*weight, -1)
+		y.look(e, d.C+scale(d.R, normal), normal, g[1]*weight, -1)
 	}
 }
 
@@ -62,7 +86,7 @@ func (e *Enclosure) rule(share float64) [][2]float64 {
 }
 
 // stops are the angles on disc i, rising from its first cut, at which it is divided besides.
-func (e *Enclosure) stops(i int) []float64 {
+func (e *Enclosure) stops(y *eye, i int) []float64 {
 	d := &e.discs[i]
 	longest := 0.0
 	for k := 1; k < len(d.Cuts); k++ {
@@ -75,7 +99,7 @@ func (e *Enclosure) stops(i int) []float64 {
 			at = append(at, d.Cuts[0]+t-2*math.Pi*math.Floor(t/(2*math.Pi)))
 		}
 	}
-	for _, o := range e.eye.order {
+	for _, o := range y.order {
 		if o.near > closeBy*longest {
 			break
 		}
@@ -92,11 +116,11 @@ func (e *Enclosure) stops(i int) []float64 {
 	return at
 }
 
-func (e *Enclosure) lookFromOutline() {
-	e.eye.queue(e, -1, 0, 0)
+func (e *Enclosure) lookFromOutline(y *eye) {
+	y.queue(e, -1, 0, 0)
 	from, _ := e.Patches(len(e.discs))
 	for k, s := range e.out.Segments {
-		e.eye.open(e)
+		y.open(e)
 		mid, half := scale(0.5, s.A+s.B), scale(0.5, s.B-s.A)
 		length := 2 * size(half)
 		p := rail{mid: mid, half: half, inward: scale(2/length, complex(-imag(half), real(half)))}
@@ -112,11 +136,11 @@ func (e *Enclosure) lookFromOutline() {
 			weight := (m - a) / 2
 			for _, g := range e.rule(weight) {
 				at, normal := p.at((a+m)/2 + (m-a)/2*g[0])
-				e.eye.look(e, at, normal, g[1]*weight, k)
+				y.look(e, at, normal, g[1]*weight, k)
 			}
 			a = m
 		}
-		e.eye.close(e, from+k)
+		y.close(e, from+k)
 	}
 }
 

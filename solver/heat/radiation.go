@@ -215,8 +215,8 @@ func (m *Model) emissivities(g *region, r *radiant) []float64 {
 	return e
 }
 
-// look lets the pieces look about, all of them or those that have moved.
-func (r *radiant) look(g *region) {
+// look lets the pieces look about, all of them or those that have moved; false if stop asked for an end.
+func (r *radiant) look(g *region, threads int, stop func() bool) bool {
 	if r.ex == nil {
 		if r.spare != nil && r.spare.Alike(r.discs, r.out, r.points) {
 			r.ex = gas.NewExchange(r.spare.Enclosure, r.eps)
@@ -224,19 +224,24 @@ func (r *radiant) look(g *region) {
 			for i := range g.pieces {
 				r.discs[i].C = g.pieces[i].at
 			}
-			r.ex = gas.NewExchange(gas.NewEnclosure(r.discs, r.out, r.points), r.eps)
+			e := gas.NewEnclosure(r.discs, r.out, r.points, threads, stop)
+			if e == nil {
+				return false
+			}
+			r.ex = gas.NewExchange(e, r.eps)
 		}
 		r.spare = nil
 	}
 	for i := range g.pieces {
 		if at := g.pieces[i].at; at != r.ex.Centre(i) {
-			r.ex.Move(i, at)
+			r.ex.Move(i, at, threads)
 		}
 	}
 	r.at = r.at[:0]
 	for i := range g.pieces {
 		r.at = append(r.at, g.pieces[i].at)
 	}
+	return true
 }
 
 // strays is how far any piece has moved since it looked about; +Inf if it has not.

@@ -177,12 +177,11 @@ func (m *Model) solveCoupled(ctx context.Context, q []float64) *Result {
 
 // look lets all surfaces look about; false if ctx ended first.
 func (c *coupled) look(ctx context.Context) bool {
+	ok := true
 	c.top.each(func(k *knot) {
-		if k.rad != nil && ctx.Err() == nil {
-			k.rad.look(k.g)
-		}
+		ok = ok && (k.rad == nil || k.rad.look(k.g, c.m.set.threads(), ended(ctx)))
 	})
-	return ctx.Err() == nil
+	return ok && ctx.Err() == nil
 }
 
 // widen adds to all estimates.
