@@ -122,7 +122,7 @@ func (h *hullWall) outside(w *Wall) {
 }
 
 // highest is the harmonic up to which the field near the hull is drawn.
-const highest = 64
+const highest = 32
 
 // solved finds the hull's answer to the whole solution, ground included, and adds the means that it sends back.
 func (h *hullWall) solved(g *region, charge, v, mean []float64) *bound {

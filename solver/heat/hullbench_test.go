@@ -74,3 +74,46 @@ func BenchmarkHullDrag(b *testing.B) {
 		}
 	}
 }
+
+// BenchmarkHullField samples a picture of 512 × 512.
+func BenchmarkHullField(b *testing.B) {
+	p := laidUp(37)
+	m := heat.New(p, one(heat.Standard))
+	half := 0.0
+	for _, q := range p.Parts {
+		half = max(half, q.X+2*mm, q.Y+2*mm, -q.X+2*mm, -q.Y+2*mm)
+	}
+	row := make([]float64, 512)
+	b.ReportAllocs()
+	for b.Loop() {
+		b.StopTimer()
+		f := m.Solve(context.Background(), nil).Field
+		b.StartTimer()
+		for i := range row {
+			f.Row(row, -half+2*half*float64(i)/512, -half, 2*half/512)
+		}
+	}
+}
+
+// BenchmarkHullRadiates is one load with surfaces and strings that radiate.
+func BenchmarkHullRadiates(b *testing.B) {
+	for _, n := range []int{7, 37, 91, 200} {
+		p := lit(laidUp(n))
+		b.Run(fmt.Sprint(n), func(b *testing.B) {
+			b.ReportAllocs()
+			for b.Loop() {
+				heat.New(p, one(heat.Standard)).Solve(context.Background(), nil)
+			}
+		})
+	}
+}
+
+// lit fills the pockets with a gas between dark surfaces.
+func lit(p heat.Problem) heat.Problem {
+	p.Filling, p.ZeroK, p.Wall.Emissivity = heat.Gas, 273.15, 0.9
+	p.Parts = append([]heat.Part(nil), p.Parts...)
+	for i := range p.Parts {
+		p.Parts[i].Emissivity, p.Parts[i].InsideEmissivity = 0.9, 0.9
+	}
+	return p
+}

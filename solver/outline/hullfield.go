@@ -58,11 +58,12 @@ type HullField struct {
 	s    *HullSystem
 	y    []float64
 	root cell
+	rim  []halfPlane
 }
 
 // Field prepares the hull's field for many points.
 func (s *HullSystem) Field(y []float64) *HullField {
-	f := &HullField{s: s, y: append([]float64(nil), y...)}
+	f := &HullField{s: s, y: append([]float64(nil), y...), rim: s.rim()}
 	lo, hi := complex(math.Inf(1), math.Inf(1)), complex(math.Inf(-1), math.Inf(-1))
 	for i := range s.discs {
 		d := &s.discs[i]
@@ -145,8 +146,10 @@ func (s *HullSystem) pocketless(q *cell) bool {
 
 // At returns the field at z in a pocket; NaN outside the hull.
 func (f *HullField) At(z complex128) float64 {
-	if !f.s.within(z) {
-		return math.NaN()
+	for i := range f.rim {
+		if f.rim[i].excludes(z) && !f.s.onArc(z) {
+			return math.NaN()
+		}
 	}
 	c := &f.root
 	for c.parts != nil {
@@ -175,22 +178,36 @@ func (f *HullField) At(z complex128) float64 {
 	return t
 }
 
-// within tells whether z lies inside the hull: to the left of every string and behind the chord of every arc, or in the disc of an arc.
-func (s *HullSystem) within(z complex128) bool {
-	left := true
+// halfPlane is what lies to the left of a line.
+type halfPlane struct{ x, y, most float64 }
+
+func (h *halfPlane) excludes(z complex128) bool { return real(z)*h.x+imag(z)*h.y > h.most }
+
+// rim returns the half planes that meet in the polygon of all strings and all chords of arcs: what of the hull lies beyond it is in a part. Nothing
+// is left where one arc goes all the way round.
+func (s *HullSystem) rim() []halfPlane {
+	var out []halfPlane
 	for i := range s.pieces {
 		p := &s.pieces[i]
-		if p.disc < 0 {
-			left = left && imag((z-p.start)*conj(p.dir)) >= -1e-9*p.length
-			continue
+		from, to := p.at(0), p.at(p.length)
+		if p.disc >= 0 && p.turn > 2*math.Pi-tinyArc {
+			return []halfPlane{{most: -1}}
 		}
-		if v := z - p.c; real(v)*real(v)+imag(v)*imag(v) <= p.a*p.a*(1+1e-12) {
-			return true
-		}
-		if p.turn < math.Pi {
-			from, to := p.at(0), p.at(p.length)
-			left = left && imag((z-from)*conj(to-from)) >= 0
+		n := -1i * (to - from)
+		n = scale(1/math.Hypot(real(n), imag(n)), n)
+		out = append(out, halfPlane{real(n), imag(n), real(from)*real(n) + imag(from)*imag(n) + 1e-9*p.length})
+	}
+	return out
+}
+
+// onArc tells whether z lies in the disc of an arc.
+func (s *HullSystem) onArc(z complex128) bool {
+	for i := range s.pieces {
+		if p := &s.pieces[i]; p.disc >= 0 {
+			if v := z - p.c; real(v)*real(v)+imag(v)*imag(v) <= p.a*p.a*(1+1e-12) {
+				return true
+			}
 		}
 	}
-	return left && len(s.pieces) > 1
+	return false
 }
