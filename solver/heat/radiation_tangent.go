@@ -86,11 +86,7 @@ func (m *Model) tangent(ctx context.Context) ([][]float64, bool) {
 		}
 	}
 	var all sync.WaitGroup
-	threads := min(m.set.threads(), n)
-	if c.top.rad != nil && c.top.rad.sides != nil {
-		threads = 1 // the patches of a border have one work space
-	}
-	for range threads - 1 {
+	for range min(m.set.threads(), n) - 1 {
 		mine := c.fork()
 		all.Go(func() { work(mine) })
 	}
@@ -131,11 +127,16 @@ func (k *knot) fork() *knot {
 	return &f
 }
 
-// fork is the same surfaces with room of their own, but for the patches of a border.
+// fork is the same surfaces with room of their own.
 func (r *radiant) fork() *radiant {
 	f := *r
 	f.ex = r.ex.Fork()
 	f.net, f.warm = make([]float64, len(r.net)), make([]float64, len(r.warm))
+	if r.sides != nil {
+		s, with := *r.sides, r.sides.with.fork()
+		s.with, s.taken = &with, make([]float64, len(r.sides.taken))
+		f.sides = &s
+	}
 	return &f
 }
 
