@@ -41,6 +41,8 @@ func (m *medium) filling() heat.Filling {
 // insideEmissivity is that of the face that looks at the parts.
 func (e *enclosure) insideEmissivity() float64 {
 	switch {
+	case e.kind == section.OpenBundle && len(e.layers) == 0:
+		return e.strings
 	case e.skin > 0:
 		return e.skin
 	case len(e.layers) > 0:
