@@ -13,6 +13,9 @@ func (m *Model) Outside(w Wall) {
 	w.check()
 	m.p.Wall = w
 	m.forget()
+	if m.glow != nil {
+		m.glow.cores = nil
+	}
 	switch {
 	case m.form != nil:
 		m.form.outside()

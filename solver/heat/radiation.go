@@ -4,7 +4,6 @@ import (
 	"math"
 
 	"packrise/solver/gas"
-	"packrise/solver/harmonic"
 )
 
 // Filling tells what a medium does besides conducting.
@@ -47,12 +46,6 @@ func (a Accuracy) grain() (part, wall float64, points int) {
 	return 24, 72, 3
 }
 
-// Harmonics of emissions that are told apart, at most.
-const (
-	maxRim  = 64
-	maxRing = 48
-)
-
 // radiant are the surfaces of one region that radiate to each other through its gas.
 type radiant struct {
 	discs  []gas.Disc
@@ -86,59 +79,6 @@ type nusselt struct {
 	inRange bool
 }
 
-// rim is a circle whose patches emit, in harmonics.
-type rim struct {
-	from, n   int       // patches
-	cuts      []float64 // angles of their ends
-	harmonics int       // that they are told apart in
-	rows      []float64 // per patch Re and Im of the mean of e^{inθ}/√n over it
-}
-
-// newRim prepares the patches between cuts, of which the first is from. Piecewise constant emissions are told apart by as many harmonics as half
-// the patches of that size would make a turn.
-func newRim(from int, cuts []float64, blank []bool, most int) rim {
-	narrow := 2 * math.Pi
-	for k := 1; k < len(cuts); k++ {
-		if blank == nil || !blank[k-1] {
-			narrow = math.Min(narrow, cuts[k]-cuts[k-1])
-		}
-	}
-	r := rim{from: from, n: len(cuts) - 1, cuts: cuts}
-	r.harmonics = min(max(int(math.Round(math.Pi/narrow))-1, 1), most)
-	r.rows = make([]float64, 2*r.n*r.harmonics)
-	for k := range r.n {
-		row := r.row(k)
-		mid, half := (cuts[k]+cuts[k+1])/2, (cuts[k+1]-cuts[k])/2
-		for n := 1; n <= r.harmonics; n++ {
-			x := float64(n)
-			f := math.Sin(x*half) / (x * half) / math.Sqrt(x)
-			s, c := math.Sincos(x * mid)
-			row[2*n-2], row[2*n-1] = f*c, f*s
-		}
-	}
-	return r
-}
-
-func (r *rim) row(k int) []float64 { return r.rows[2*k*r.harmonics:][:2*r.harmonics] }
-
-// emit sets e to the scaled harmonics Σ E w/√n of the emissions of the patches and returns their sum.
-func (r *rim) emit(e, emission []float64) (sum float64) {
-	clear(e)
-	for k := range r.n {
-		v := emission[r.from+k]
-		sum += v
-		axpy(e, v, r.row(k))
-	}
-	return sum
-}
-
-// feel sets the temperatures of the patches from the scaled harmonics tau = √n conj(T_n) of the rim and its mean.
-func (r *rim) feel(t, tau []float64, mean float64) {
-	for k := range r.n {
-		t[r.from+k] = mean + harmonic.Dot(r.row(k), tau)
-	}
-}
-
 // newRadiant divides the surfaces of region g. What an old one, of the same or another region, saw is kept if it is still so.
 func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 	part, turn, points := m.set.Accuracy.grain()
@@ -151,30 +91,7 @@ func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 	if r.press == 0 {
 		r.press = standardPressure
 	}
-	r.discs = append(r.discs, grain.Discs...)
-	for i := range r.discs {
-		d := &r.discs[i]
-		if w, ok := g.border.(patched); ok {
-			d.Cuts, d.Blank = grain.Between(i, w.exposed(i))
-		} else {
-			d.Cuts = grain.Cuts(i)
-		}
-		r.rims = append(r.rims, newRim(r.add(d.R, d.Cuts), d.Cuts, d.Blank, maxRim))
-	}
-	if g.border == nil {
-		cuts := grain.Around(g.wall.R)
-		r.out = gas.Ring(g.wall.R, cuts)
-		r.wall = newRim(r.add(g.wall.R, cuts), cuts, nil, maxRing)
-	} else {
-		r.sides = g.border.(patched).divide(&grain)
-		r.out = r.sides.outline()
-		r.ends = []float64{0}
-		for k, l := range r.sides.length {
-			r.ends = append(r.ends, r.ends[k]+l)
-		}
-		r.add(1, r.ends)
-	}
-	r.first = append(r.first, len(r.area))
+	r.divide(g, &grain)
 	for _, v := range []*[]float64{&r.base, &r.still, &r.net, &r.warm} {
 		*v = make([]float64, len(r.area))
 	}
@@ -185,6 +102,35 @@ func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 		}
 	}
 	return r
+}
+
+// divide cuts the pieces and the wall into patches.
+func (r *radiant) divide(g *region, grain *gas.Grain) {
+	r.discs = append(r.discs, grain.Discs...)
+	border, _ := g.border.(patched)
+	for i := range r.discs {
+		d := &r.discs[i]
+		if border != nil {
+			d.Cuts, d.Blank = grain.Between(i, border.exposed(i))
+		} else {
+			d.Cuts = grain.Cuts(i)
+		}
+		r.rims = append(r.rims, newRim(r.add(d.R, d.Cuts), d.Cuts, d.Blank, maxRim))
+	}
+	if border == nil {
+		cuts := grain.Around(g.wall.R)
+		r.out = gas.Ring(g.wall.R, cuts)
+		r.wall = newRim(r.add(g.wall.R, cuts), cuts, nil, maxRing)
+	} else {
+		r.sides = border.divide(grain)
+		r.out = r.sides.outline()
+		r.ends = []float64{0}
+		for k, l := range r.sides.length {
+			r.ends = append(r.ends, r.ends[k]+l)
+		}
+		r.add(1, r.ends)
+	}
+	r.first = append(r.first, len(r.area))
 }
 
 // add counts the patches between cuts on a circle of radius r, and returns the first of them.

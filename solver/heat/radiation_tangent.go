@@ -43,19 +43,8 @@ func (m *Model) Tangent(ctx context.Context) (k [][]float64, ground []float64, s
 
 // tangent returns the rises of all sources for 1 W/m more in each, about the last solution, bores being held: their rows and columns are nought.
 func (m *Model) tangent(ctx context.Context) ([][]float64, bool) {
-	c := m.glow
-	if c == nil || c.cores == nil || c.far() > 0 {
-		var heats []float64
-		if c != nil {
-			heats = c.heats
-		}
-		if heats == nil {
-			heats = m.metals(m.heats(nil))
-		}
-		if m.solveCoupled(ctx, heats).Status == Cancelled {
-			return nil, false
-		}
-		c = m.glow
+	if !m.solvedHere(ctx) {
+		return nil, false
 	}
 	n := len(m.top.sources)
 	held := make([]bool, n)
@@ -87,12 +76,25 @@ func (m *Model) tangent(ctx context.Context) ([][]float64, bool) {
 	}
 	var all sync.WaitGroup
 	for range min(m.set.threads(), n) - 1 {
-		mine := c.fork()
+		mine := m.glow.fork()
 		all.Go(func() { work(mine) })
 	}
-	work(c.fork())
+	work(m.glow.fork())
 	all.Wait()
 	return k, !failed.Load()
+}
+
+// solvedHere solves for the last heats, or the Problem's own, unless the last solution is that of the section as it is; false if ctx ended first.
+func (m *Model) solvedHere(ctx context.Context) bool {
+	c := m.glow
+	if c != nil && len(c.cores) > 0 && c.far() == 0 {
+		return true
+	}
+	heats := m.metals(m.heats(nil))
+	if c != nil && len(c.heats) == len(heats) {
+		copy(heats, c.heats)
+	}
+	return m.solveCoupled(ctx, heats).Status != Cancelled
 }
 
 // fork is the same system with work space of its own.
