@@ -215,3 +215,29 @@ func TestCancelShining(t *testing.T) {
 		t.Errorf("status %v", r.Status)
 	}
 }
+
+// A model that resumes from a like one, of another gas or another accuracy, gets where one gets from nothing, in fewer steps.
+func TestResume(t *testing.T) {
+	for _, rect := range []bool{false, true} {
+		r := rand.New(rand.NewPCG(5, 78))
+		p := shining(r, randomSection(r, wish{parts: 9, air: true, rect: rect, cables: true, held: true}), true)
+		old := heat.New(p, heat.Settings{Accuracy: heat.Draft})
+		old.Solve(bg, nil)
+		p.MediumK *= 1.03
+		for range 2 {
+			m := heat.New(p, heat.Settings{})
+			m.Resume(old)
+			warm, cold := m.Solve(bg, nil), heat.New(p, heat.Settings{}).Solve(bg, nil)
+			for i := range cold.Core {
+				if d := math.Abs(warm.Core[i] - cold.Core[i]); d > 1e-4*math.Abs(cold.Core[i]-p.Wall.Ambient)+1e-5 {
+					t.Errorf("rectangle %v, part %d: %.6f resumed, %.6f from nothing", rect, i, warm.Core[i], cold.Core[i])
+				}
+			}
+			if warm.Steps >= cold.Steps {
+				t.Errorf("rectangle %v: %d steps resumed, %d from nothing", rect, warm.Steps, cold.Steps)
+			}
+			old = m
+			p.MediumK *= 1.01
+		}
+	}
+}
