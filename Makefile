@@ -2,7 +2,7 @@
 SHELL := bash
 NODISPLAY := ./assets/... ./solver/... ./render/... ./ui/... ./cmd/packrise-cli/...
 
-.PHONY: run build cli test race lint e2e soak bench clean
+.PHONY: run build cli test race lint e2e soak validate bench clean
 
 run: build ## open the window on a demo design (FILE=… for another)
 	@bin/packrise $(FILE)
@@ -37,6 +37,11 @@ soak: ## long runs: more random sections, fuzzing; by hand
 	@.ci/setup go
 	CGO_ENABLED=0 PACKRISE_SOAK=1 go test -timeout 60m $(NODISPLAY)
 	CGO_ENABLED=0 go test ./solver/section -run '^$$' -fuzz FuzzRead -fuzztime 5m
+
+validate: ## computed against published ratings: writes testdata/validation and prints its summary
+	@.ci/setup go
+	CGO_ENABLED=0 PACKRISE_VALIDATE=1 go test ./solver/rating -count=1 -run Validation
+	@grep '^|' testdata/validation/table.md | sed '/^| case/,$$d'
 
 bench: ## speed, with allocations
 	@.ci/setup go
