@@ -1,6 +1,10 @@
 package outline
 
-import "math"
+import (
+	"cmp"
+	"math"
+	"slices"
+)
 
 // Hull is the outer boundary of an open bundle: the taut string round its parts. Where the string lies on a part the part's own
 // surface is the outside; where it runs straight from part to part it is an opaque line of no thickness.
@@ -105,10 +109,41 @@ func (h *Hull) pieces(discs []Disc) []piece {
 		start, end := d.C+polar(d.A, leaves[i]), e.C+polar(e.A, leaves[i])
 		l := math.Hypot(real(end-start), imag(end-start))
 		if n > 1 && l > tinyString*size {
-			all = append(all, piece{disc: -1, ends: [2]int{a.Disc, next}, start: start, dir: scale(1/l, end-start), length: l, out: a.String})
+			p := piece{disc: -1, ends: [2]int{a.Disc, next}, start: start, dir: scale(1/l, end-start), length: l, out: a.String}
+			all = append(all, p.split(discs)...)
 		}
 	}
 	return all
+}
+
+// grazed is the gap, as a share of its radius, under which a part divides the string that passes it as if it touched.
+const grazed = 0.02
+
+// split divides a string where parts graze it.
+func (p piece) split(discs []Disc) (all []piece) {
+	type graze struct {
+		disc  int
+		along float64
+	}
+	var on []graze
+	for i, d := range discs {
+		w := (d.C - p.start) * conj(p.dir)
+		if i != p.ends[0] && i != p.ends[1] && imag(w)-d.A < grazed*d.A && real(w) > grazed*d.A && real(w) < p.length-grazed*d.A {
+			on = append(on, graze{i, real(w)})
+		}
+	}
+	slices.SortFunc(on, func(a, b graze) int { return cmp.Compare(a.along, b.along) })
+	from := 0.0
+	for _, g := range on {
+		q := p
+		q.start, q.length, q.ends[1] = p.at(from), g.along-from, g.disc
+		all = append(all, q)
+		from, p.ends[0] = g.along, g.disc
+	}
+	if from > 0 {
+		p.start, p.length = p.at(from), p.length-from
+	}
+	return append(all, p)
 }
 
 // tangent is the angle at which a string round d and then e, counterclockwise, leaves d; angle, if there is none.

@@ -8,7 +8,6 @@ const (
 	bareShare   = 2.0
 	stringShare = 2.0
 	fromTangent = 2.0 // growth of lengths on a string away from the part that it leaves
-	kinShare    = 0.3 // a part whose gap to a string is below this share of its radius is solved with it to all orders
 )
 
 // hullGrading decides how long a panel of the hull may be.

@@ -65,7 +65,7 @@ func (s *HullSystem) Len() int { return s.n + 1 }
 // film returns 2h/k of a piece; what is held has a film through which nothing can be measured.
 func (s *HullSystem) film(p *piece) float64 {
 	h := p.out.Film
-	if most := 1e9 * s.hull.MediumK / s.size(); h > most {
+	if most := 1e8 * s.hull.MediumK / s.size(); h > most {
 		h = most
 	}
 	return 2 * h / s.hull.MediumK
