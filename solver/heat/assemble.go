@@ -39,8 +39,8 @@ func (g *region) assemble(cut float64, threads int, stop func() bool) bool {
 	}
 	g.sys = harmonic.NewSystem(discs, g.circle, g.weights(), cut)
 	g.setSigns()
-	if g.border != nil {
-		g.border.write(g)
+	if g.border != nil && !g.border.write(g, stop) {
+		return false
 	}
 	return g.sys.Build(threads, stop)
 }

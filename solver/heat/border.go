@@ -12,7 +12,7 @@ type border interface {
 	gap(c *piece) float64                            // between c's rim and the wall
 	metal() bool                                     // whether the inside is bare metal anywhere
 	order(g *region, c *piece, f float64, m int) int // that c needs beside the wall, 0 if it is not above m
-	write(g *region)                                 // discretises for the region's pieces
+	write(g *region, stop func() bool) bool          // discretises for the region's pieces; false if stop asked for an end
 	move(g *region, i int) bool                      // follows piece i; false if the wall has to be written again
 	bring(g *region, charge, v []float64, ground bool, y, mean []float64)
 	solved(g *region, charge, v, mean []float64) *bound

@@ -91,25 +91,32 @@ func (h *hullWall) shape() outline.Hull {
 }
 
 // write winds the string and discretises the hull; what of an older one still holds is kept.
-func (h *hullWall) write(g *region) {
+func (h *hullWall) write(g *region, stop func() bool) bool {
 	h.collect(g)
 	h.wrap(g)
 	mirrors := make([]outline.Mirror, len(g.pieces))
 	for i := range mirrors {
 		mirrors[i] = g.mirror(i)
 	}
+	shape := h.shape()
+	shape.Stop = stop
+	var sys *outline.HullSystem
 	if h.sys != nil {
-		h.sys = h.sys.Renew(h.shape(), h.discs, mirrors)
+		sys = h.sys.Renew(shape, h.discs, mirrors)
 	} else {
-		h.sys = outline.NewHull(h.shape(), h.discs, mirrors, h.fineness)
+		sys = outline.NewHull(shape, h.discs, mirrors, h.fineness)
 	}
-	h.begin(h.sys)
+	if sys == nil {
+		return false
+	}
+	h.sys = sys
+	h.begin(sys)
+	return true
 }
 
 // move winds the string anew and keeps what does not hang on piece i. Results that are out keep their hull.
 func (h *hullWall) move(g *region, _ int) bool {
-	h.write(g)
-	return true
+	return h.write(g, nil)
 }
 
 // outside takes other films and temperatures.

@@ -1,7 +1,9 @@
 package heat_test
 
 import (
+	"context"
 	"math"
+	"sync/atomic"
 	"testing"
 
 	"packrise/solver/heat"
@@ -189,5 +191,47 @@ func TestHullRefuses(t *testing.T) {
 			}()
 			heat.New(p, heat.Settings{})
 		}()
+	}
+}
+
+// fuse is a context that ends after it has been looked at so many times.
+type fuse struct {
+	context.Context
+	left atomic.Int64
+}
+
+func (f *fuse) Err() error {
+	if f.left.Add(-1) < 0 {
+		return context.Canceled
+	}
+	return nil
+}
+
+// Wherever a calculation is cut off it says so, and the model then solves as if nothing had been.
+func TestHullCancels(t *testing.T) {
+	l := bundle(t, "b03_mixed12_gas")
+	want := heat.New(l.Problem, heat.Settings{}).Solve(bg, nil)
+	looks := 0
+	for n := int64(0); ; n = n*3/2 + 1 {
+		m := heat.New(l.Problem, heat.Settings{Threads: 1})
+		f := &fuse{Context: bg}
+		f.left.Store(n)
+		r := m.Solve(f, nil)
+		if r.Status == heat.Converged {
+			break
+		}
+		looks++
+		if r.Status != heat.Cancelled {
+			t.Errorf("cut off after %d looks: %v", n, r.Status)
+		}
+		again := m.Solve(bg, nil)
+		for i := range want.Core {
+			if e := again.Core[i] - want.Core[i]; math.Abs(e) > 1e-3 || again.Status != heat.Converged {
+				t.Fatalf("after a cut at %d looks part %d is off by %g K, %v", n, i, e, again.Status)
+			}
+		}
+	}
+	if looks < 8 {
+		t.Errorf("looked at %d times only", looks)
 	}
 }

@@ -101,7 +101,7 @@ func (g *region) relocate(i int, factor float64) bool {
 		g.setSigns()
 	}
 	if g.border != nil && (len(changed) > 1 || grown || !g.border.move(g, i)) {
-		g.border.write(g)
+		g.border.write(g, nil)
 	}
 	return true
 }

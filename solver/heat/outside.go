@@ -29,7 +29,7 @@ func (m *Model) Outside(w Wall) {
 		factor, _, _ := m.set.Accuracy.settings()
 		m.top.border = newRectWall(&m.p, factor)
 		if m.ready {
-			m.top.border.write(m.top)
+			m.top.border.write(m.top, nil)
 		}
 		m.dim()
 	default:

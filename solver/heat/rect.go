@@ -94,10 +94,11 @@ func (r *rectWall) order(g *region, c *piece, f float64, m int) int {
 }
 
 // write discretises the wall for the region's pieces.
-func (r *rectWall) write(g *region) {
+func (r *rectWall) write(g *region, _ func() bool) bool {
 	r.collect(g)
 	r.sys = outline.New(r.rect, r.discs, r.fineness)
 	r.begin(r.sys)
+	return true
 }
 
 // move puts piece i elsewhere; false if the wall has to be discretised anew.

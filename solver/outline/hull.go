@@ -11,6 +11,8 @@ import (
 type Hull struct {
 	MediumK float64 // of what fills the pockets
 	Arcs    []Arc   // counterclockwise
+	// Stop, if any, is asked between pieces of work; when it says so NewHull and Renew return nil.
+	Stop func() bool
 }
 
 // Arc is where the string lies on disc Disc, from angle From to angle To (radians, To ≥ From, equal where it only touches), and the straight

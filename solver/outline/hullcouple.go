@@ -6,11 +6,16 @@ import (
 )
 
 // couple fills direct and means: what every density makes in every cell, and what the parts send straight back of it beyond their orders.
-func (s *HullSystem) couple(k *known) {
+func (s *HullSystem) couple(k *known) bool {
 	s.direct = newMeans(s.n)
-	each(len(s.panels), func(i int) { s.coupleRows(i, k) })
+	if !s.eachPiece(len(s.panels), func(i int) { s.coupleRows(i, k) }) {
+		return false
+	}
 	s.means = means{slices.Clone(s.direct.flux), slices.Clone(s.direct.temp)}
 	for i := range s.discs {
+		if stop := s.hull.Stop; stop != nil && stop() {
+			return false
+		}
 		s.reflect(i)
 	}
 	for i := range s.panels {
@@ -21,6 +26,7 @@ func (s *HullSystem) couple(k *known) {
 			}
 		}
 	}
+	return true
 }
 
 // coupleRows fills the rows of panel i in direct.

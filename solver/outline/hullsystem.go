@@ -50,13 +50,33 @@ func newHull(h Hull, discs []Disc, mirrors []Mirror, fineness float64, old *Hull
 		s.discs[i] = hullDisc{Disc: discs[i], mirror: mirrors[i]}
 	}
 	k := s.known(old)
-	each(len(discs), func(i int) { s.link(i, k) })
+	if !s.eachPiece(len(discs), func(i int) { s.link(i, k) }) {
+		return nil
+	}
 	if s.takeOver(k) {
+		s.hull.Stop = nil
 		return s
 	}
-	s.couple(k)
+	if !s.couple(k) {
+		return nil
+	}
 	s.factorise()
+	s.hull.Stop = nil
 	return s
+}
+
+// eachPiece is each, until it is stopped; it tells whether all was done.
+func (s *HullSystem) eachPiece(n int, f func(i int)) bool {
+	stop := s.hull.Stop
+	if stop == nil {
+		stop = func() bool { return false }
+	}
+	each(n, func(i int) {
+		if !stop() {
+			f(i)
+		}
+	})
+	return !stop()
 }
 
 // Len returns the number of unknowns.
