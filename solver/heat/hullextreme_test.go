@@ -38,7 +38,7 @@ func TestHullExtremes(t *testing.T) {
 	} {
 		for _, medium := range []float64{heat.ThinnestK, 0.01, 0.03, 0.2, 3} {
 			for _, film := range []float64{0.01, 10, 1e4, math.Inf(1)} {
-				if name == "a hundred and twenty" && (film != 10 || testing.Short()) || name == "bare" && math.IsInf(film, 1) {
+				if name == "a hundred and twenty" && (film != 10 || testing.Short()) {
 					continue
 				}
 				p := heat.Problem{MediumK: medium, Wall: heat.Wall{Shape: heat.Hull, Film: film, Ambient: 20, Taut: taut}}
@@ -81,7 +81,7 @@ func extreme(t *testing.T, name string, p heat.Problem) {
 	}
 	slack := 2e-3 * (hot - 20)
 	for i, v := range r.Core {
-		if !(v > 20 && v <= hot) {
+		if !(v > 20-1e-3 && v <= hot) { // bare metal held at 20 °C may read a little less
 			t.Errorf("%s: part %d at %g", name, i, v)
 		}
 	}
