@@ -5,6 +5,8 @@ import (
 	"slices"
 	"strings"
 	"unicode/utf8"
+
+	"packrise/solver/quantity"
 )
 
 // Nearest returns up to n ids of the group ("material", "type", "wire", "holder", "metal", "conductor") that are spelt most like id.
@@ -42,7 +44,7 @@ func nearest(words []string, word string, n int) []string {
 	var all []scored
 	for _, w := range words {
 		p := plainWord(w)
-		d, longer := distance(word, p), max(utf8.RuneCountInString(word), len(p))
+		d, longer := quantity.SpellingDistance(word, p), max(utf8.RuneCountInString(word), len(p))
 		if len(word) > 2 && strings.Contains(p, word) || len(p) > 2 && strings.Contains(word, p) {
 			d = min(d, 1+d/4)
 		}
@@ -61,28 +63,4 @@ func nearest(words []string, word string, n int) []string {
 // plainWord is a word as it is compared: small letters, hyphens for spaces and underscores.
 func plainWord(s string) string {
 	return strings.NewReplacer(" ", "-", "_", "-").Replace(strings.ToLower(strings.TrimSpace(s)))
-}
-
-// distance is the number of letters to insert, delete, change or swap with their neighbour (optimal string alignment).
-func distance(a, b string) int {
-	s, t := []rune(a), []rune(b)
-	before, last, row := make([]int, len(t)+1), make([]int, len(t)+1), make([]int, len(t)+1)
-	for j := range last {
-		last[j] = j
-	}
-	for i := 1; i <= len(s); i++ {
-		row[0] = i
-		for j := 1; j <= len(t); j++ {
-			cost := 1
-			if s[i-1] == t[j-1] {
-				cost = 0
-			}
-			row[j] = min(last[j]+1, row[j-1]+1, last[j-1]+cost)
-			if i > 1 && j > 1 && s[i-1] == t[j-2] && s[i-2] == t[j-1] {
-				row[j] = min(row[j], before[j-2]+1)
-			}
-		}
-		before, last, row = last, row, before
-	}
-	return last[len(t)]
 }

@@ -5,6 +5,8 @@ import (
 	"testing"
 
 	"pgregory.net/rapid"
+
+	"packrise/solver/quantity"
 )
 
 func TestNearest(t *testing.T) {
@@ -47,14 +49,14 @@ func TestDistance(t *testing.T) {
 		a, b string
 		want int
 	}{{"", "", 0}, {"", "abc", 3}, {"kitten", "sitting", 3}, {"pvc", "pcv", 1}, {"ca", "abc", 3}, {"ß", "s", 1}} {
-		if got := distance(c.a, c.b); got != c.want {
-			t.Errorf("distance(%q, %q) = %d, want %d", c.a, c.b, got, c.want)
+		if got := quantity.SpellingDistance(c.a, c.b); got != c.want {
+			t.Errorf("quantity.SpellingDistance(%q, %q) = %d, want %d", c.a, c.b, got, c.want)
 		}
 	}
 	rapid.Check(t, func(t *rapid.T) {
 		a, b := rapid.StringMatching(`[a-c]{0,6}`).Draw(t, "a"), rapid.StringMatching(`[a-c]{0,6}`).Draw(t, "b")
-		d := distance(a, b)
-		if d != distance(b, a) || (d == 0) != (a == b) || d > max(len(a), len(b)) || d < max(len(a)-len(b), len(b)-len(a)) {
+		d := quantity.SpellingDistance(a, b)
+		if d != quantity.SpellingDistance(b, a) || (d == 0) != (a == b) || d > max(len(a), len(b)) || d < max(len(a)-len(b), len(b)-len(a)) {
 			t.Fatalf("%q %q %d", a, b, d)
 		}
 	})

@@ -15,7 +15,7 @@ func near(t *testing.T, what string, got, want, tol float64) {
 	}
 }
 
-// TestPublishedNusselt holds the worked numbers of CHECKS check 6 and D, and handbook examples.
+// TestPublishedNusselt holds worked numbers of the published correlations and handbook examples.
 func TestPublishedNusselt(t *testing.T) {
 	nu, in := film.ChurchillChu(2.63e9*0.69, 0.69)
 	near(t, "Churchill–Chu, Pr 0.69, Gr 2.63e9 (check 6)", nu, 139.135, 1e-4)
@@ -42,7 +42,7 @@ func TestPublishedNusselt(t *testing.T) {
 	near(t, "side of a duct", nu, 63.6, 0.04)
 }
 
-// TestMorgan compares with Morgan's own pieces (CHECKS D, from memory) and looks for steps.
+// TestMorgan compares with Morgan's own pieces (Morgan 1975, from memory) and looks for steps.
 func TestMorgan(t *testing.T) {
 	for _, c := range []struct{ low, high, c, n float64 }{
 		{1e-10, 1e-2, 0.675, 0.058}, {1e-2, 1e2, 1.02, 0.148}, {1e2, 1e4, 0.850, 0.188}, {1e4, 1e7, 0.480, 0.250}, {1e7, 1e12, 0.125, 0.333},

@@ -331,7 +331,7 @@ func TestNotes(t *testing.T) {
 	}
 }
 
-// TestSoil: IEC 60287-2-1, depth 0.8 m, diameter 40 mm, 1 K·m/W gives 0.6974 K·m/W (CHECKS D); the film carries the same, also around a
+// TestSoil: IEC 60287-2-1, depth 0.8 m, diameter 40 mm, 1 K·m/W gives 0.6974 K·m/W (computed from its formula); the film carries the same, also around a
 // square box by Neher and McGrath's equivalent circle.
 func TestSoil(t *testing.T) {
 	near(t, "T4", film.Soil(0.8, 0.04, 1), 0.6974, 1e-4)

@@ -121,7 +121,7 @@ func TestAltitude(t *testing.T) {
 
 // TestFreeAirTable: NEC 310.17 (testdata/reference/nec_310_17.csv), 14 AWG to 500 kcmil at 75 and 90 °C, with resistances of chapter 9 table 8
 // and outsides of table 5 (THHN), emissivity 0.9, PVC 0.20 W/mK, skin effect at 60 Hz by IEC 60287-1-1. Computed over table within 0.92–1.20
-// (PHYSICS section 6): the table is rounded down.
+// (testdata/validation): the table is rounded down.
 func TestFreeAirTable(t *testing.T) {
 	outside, ohm75 := map[string]float64{}, map[string]float64{}
 	for _, row := range table(t, "nec_ch9_t5_thhn.csv") {

@@ -8,7 +8,7 @@ import (
 )
 
 // TestStandardPressure compares with the printed tables of U.S. Standard Atmosphere 1976 (geopotential altitude; from memory) and with the
-// ratios of CHECKS D for the altitudes of AC 43.13-1B.
+// ratios of the standard atmosphere (from memory) for the altitudes of AC 43.13-1B.
 func TestStandardPressure(t *testing.T) {
 	for _, c := range []struct{ m, pa, tol float64 }{
 		{0, 101325, 1e-12},

@@ -9,7 +9,7 @@ type Problem struct {
 	Filling   Filling // what the medium does besides; surfaces that radiate need emissivities
 	ZeroK     float64 // absolute temperature of the common zero: 273.15 for °C, 0 for K. Radiation needs it
 	Pressure  float64 // Pa, of air that moves; 0: the atmosphere's
-	Clearance float64 // mean clearance of loose parts from each other and the wall, 0 in a solid; see PHYSICS section 6 item 5
+	Clearance float64 // mean clearance of loose parts from each other and the wall, 0 in a solid; see DEVELOPERS.md, defaults
 }
 
 // Core kinds of a part.

@@ -7,7 +7,7 @@ import (
 	"gonum.org/v1/gonum/mat"
 )
 
-// rod is a round part: a metal core in layers (PHYSICS of layered cylinders, harmonic by harmonic).
+// rod is a round part: a metal core in layers (layered cylinders, harmonic by harmonic).
 type rod struct {
 	id     string
 	c      complex128

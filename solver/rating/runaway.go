@@ -20,7 +20,7 @@ type affine struct {
 }
 
 // runaway decides what a fixed point that does not settle means. With K the influence matrix a steady state exists up to the
-// factor s at which the largest eigenvalue of s² K diag(α I²R20) reaches 1 (PHYSICS: it is the gain of the loop resistance → heat
+// factor s at which the largest eigenvalue of s² K diag(α I²R20) reaches 1 (it is the gain of the loop resistance → heat
 // → temperature) or a metal reaches hottestC, whichever is lower. Where surfaces radiate K is a tangent, which is taken anew at the factor
 // that the last one gave.
 func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) (a answered) {
