@@ -46,6 +46,6 @@ func sameOutside(a, b *heat.Wall) bool {
 
 // samePart compares all but place and heat.
 func samePart(a, b heat.Part) bool {
-	return a.In == b.In && a.Core == b.Core && a.Radius == b.Radius && a.K == b.K && a.Fixed == b.Fixed && a.Filling == b.Filling &&
+	return a.In == b.In && a.Core == b.Core && a.Radius == b.Radius && a.Form == b.Form && a.K == b.K && a.Fixed == b.Fixed && a.Filling == b.Filling &&
 		a.Emissivity == b.Emissivity && a.InsideEmissivity == b.InsideEmissivity && slices.Equal(a.Rings, b.Rings)
 }
