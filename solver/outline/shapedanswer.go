@@ -4,6 +4,13 @@ import "math"
 
 // Respond solves for 'heats' of the contours (W/m, read for metals); ground adds the drive of held bores and of the surroundings.
 func (s *Shaped) Respond(heats []float64, ground bool) []float64 {
+	y := s.load(heats, ground)
+	s.solve(y)
+	return y
+}
+
+// load is the right-hand side of Respond.
+func (s *Shaped) load(heats []float64, ground bool) []float64 {
 	y := make([]float64, s.n+1)
 	for i := range s.bends {
 		b := &s.bends[i]
@@ -18,7 +25,6 @@ func (s *Shaped) Respond(heats []float64, ground bool) []float64 {
 			}
 		}
 	}
-	s.solve(y)
 	return y
 }
 
