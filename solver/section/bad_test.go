@@ -75,7 +75,6 @@ func badKeys() []bad {
 			"later: against", strings.Replace(head, "30}", "30, against: {share: 0.25}}", 1),
 			[]wanted{{2, "later-key", "key `surroundings.against` belongs to surroundings and shapes that this version does not read yet; take it out"}},
 		},
-		{"later: cases", head + "cases: []\n", []wanted{{4, "later-key", "key `cases` belongs to ratings that"}}},
 		{"later: prices", head + "prices: {}\n", []wanted{{4, "later-key", "drawings and prices"}}},
 		{"later: route", head + "route: []\n", []wanted{{4, "later-key", "time, length and electricity"}}},
 		{"sector", head + "parts:\n  - {id: S, kind: core, conductor: {shape: sector, size: 4/0, angle_deg: 90}}\n", []wanted{{5, "missing-key", "part S|`conductor.radius_mm`|a sector needs it"}}},
@@ -86,9 +85,6 @@ func badKeys() []bad {
 		{"bar of two areas", head + "parts:\n  - {id: S, kind: core, conductor: {shape: bar, width_mm: 6, height_mm: 3, size: 4/0, area_mm2: 15}}\n", []wanted{{5, "one-of", "`conductor` has size and area_mm2"}}},
 		{"round with width", head + "parts:\n  - {id: S, kind: core, conductor: {size: 4/0, width_mm: 3}}\n", []wanted{{5, "key-of-kind", "`conductor.width_mm` does not belong to a conductor of shape round"}}},
 		{"unknown shape", head + "parts:\n  - {id: S, kind: core, conductor: {shape: sektor, size: 4/0}}\n", []wanted{{5, "unknown-word", "conductor shape sektor is unknown|sector"}}},
-		{"later: screen", head + "parts:\n" + core("L1", ", layers: [{material: copper, thickness_mm: 0.2, screen: {}}]"), []wanted{{5, "later-key", "`layers[0].screen`"}}},
-		{"later: pinned", head + "parts:\n" + core("L1", ", pinned: true"), []wanted{{5, "later-key", "`pinned`|ratings"}}},
-		{"later: system", head + "parts:\n" + core("L1", "") + "loads:\n  - {id: a, conductors: [L1], current_a: 1, system: dc}\n", []wanted{{7, "later-key", "load a|`system`|ratings"}}},
 		{"decimal comma in braces", strings.Replace(head, "inside_mm: 10", "inside_mm: 10,5", 1), []wanted{{3, "unknown-key", "number `holder.5`|decimal point"}}},
 	}
 }

@@ -213,6 +213,17 @@ func (l list[E]) check(r *report, v []E, at path) {
 	}
 }
 
+// oneLiner is a dict that is written on one line.
+type oneLiner[E any] struct{ dict[E] }
+
+func (c oneLiner[E]) node(v []E) *yaml.Node {
+	n := c.dict.node(v)
+	if n != nil {
+		n.Style = yaml.FlowStyle
+	}
+	return n
+}
+
 // dict is the codec of a mapping whose keys are names, kept in the order of the file. An empty one is not written.
 type dict[E any] struct {
 	what  string // for sentences: "a material"

@@ -35,14 +35,20 @@ type Point struct{ X, Y float64 }
 // Document is one design. It is immutable: an edit returns a new Document that shares what it did not touch, so nobody may
 // write to a Document, its slices or what they point to once it has been handed out.
 type Document struct {
-	Title, Notes string
-	Surroundings Surroundings
-	Holder       Holder
-	Parts        []Part
-	Builds       []Build
-	Loads        []Load
-	Materials    []Material
-	StockUsed    []StockRow // rows of the catalogue that the design used when it was saved
+	Title, Notes  string
+	Surroundings  Surroundings
+	Holder        Holder
+	Parts         []Part
+	Builds        []Build
+	Loads         []Load
+	Materials     []Material
+	Cases         []Case
+	Ranges        Ranges
+	Measurements  []Measurement
+	Rules         Rules
+	DesignMarginK Opt[float64] // kept below every limit in ratings; default 10
+	Reasons       []Reason
+	StockUsed     []StockRow // rows of the catalogue that the design used when it was saved
 
 	origin *origin // the file as read: order of keys, style and comments, for the next save; nil for a new design
 }
@@ -68,6 +74,7 @@ type Holder struct {
 	Fill              string  // "" means air
 	ClearanceMM       Opt[float64]
 	StringEmissivity  Opt[float64] // open bundle: of the inner face of the strings or ties
+	LengthM           Opt[float64] // of the section's own holder only; not written: long
 	TouchLimitC       Opt[float64] // limit of the outside surface; of the section's own holder only
 }
 
@@ -91,6 +98,7 @@ type Side struct {
 type Layer struct {
 	Material    string
 	ThicknessMM float64
+	Screen      Screen // of a metal layer; the zero Screen is none
 }
 
 // Kinds of part.
@@ -126,6 +134,8 @@ type Part struct {
 	Material  string       // rod
 	At        Opt[Point]   // not written: the part is unplaced
 	LimitC    Opt[float64]
+	Pinned    bool   // stays where it is when places are sought
+	Group     string // parts of one group stay together when places are sought
 }
 
 // Bore is what fills a hose: air (also ""), a material's name, or a temperature it is held at.
@@ -184,12 +194,22 @@ type Build struct {
 
 // Load is what a group of conductors carries. Exactly one of CurrentA, Unknown and HeatWM is written.
 type Load struct {
-	ID          string
-	Conductors  []string     // ids, nested ones as C1/L1
-	CurrentA    Opt[float64] // r.m.s. in each
-	Unknown     bool         // current_a: unknown
-	HeatWM      Opt[float64] // a fixed heat per metre of each
-	FrequencyHz Opt[float64]
+	ID           string
+	Conductors   []string     // ids, nested ones as C1/L1
+	CurrentA     Opt[float64] // r.m.s. in each
+	Unknown      bool         // current_a: unknown
+	HeatWM       Opt[float64] // a fixed heat per metre of each
+	FrequencyHz  Opt[float64]
+	System       string
+	Neutral      string       // the conductor that is this load's neutral, in Conductors or not
+	VoltsV       Opt[float64] // between lines; of single-phase and dc between the two conductors
+	PowerFactor  Opt[float64]
+	Continuous   bool // said to run three hours or more; false is "not said"
+	Motor        bool // a motor's branch circuit
+	StartingDuty bool // runs only between a motor and its starter while starting
+	Protection   Protection
+	NotWith      []string // loads that can't be energised together with this one; either may name the other
+	Terminals    Terminals
 }
 
 // Material is a document's own material or its override of the catalogue's.

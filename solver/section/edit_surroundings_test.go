@@ -23,7 +23,7 @@ func TestSurround(t *testing.T) {
 			case Buried:
 				s.DepthM, s.SoilWMK = Some(0.7), Some(1.0)
 			case Insulation:
-				s.Wrap = &Layer{"mineral-wool", 20}
+				s.Wrap = &Layer{Material: "mineral-wool", ThicknessMM: 20}
 			}
 		})
 		if p := Check(got); len(p) > 0 {

@@ -64,7 +64,7 @@ func (m maker) id(taken map[string]bool) string {
 
 func (m maker) layers() (out []Layer) {
 	for range rapid.IntRange(0, 3).Draw(m.t, "layers") {
-		out = append(out, Layer{m.name(), m.num(0.01, 5)})
+		out = append(out, Layer{Material: m.name(), ThicknessMM: m.num(0.01, 5)})
 	}
 	return out
 }
@@ -225,7 +225,7 @@ func (m maker) put(s *Surroundings, key string) {
 	case "soil_w_mk":
 		s.SoilWMK = Some(m.num(0.1, 2))
 	case "wrap":
-		s.Wrap = &Layer{m.name(), m.num(1, 100)}
+		s.Wrap = &Layer{Material: m.name(), ThicknessMM: m.num(1, 100)}
 	case "wet":
 		s.Wet = true
 	}

@@ -172,7 +172,7 @@ func TestOnlyWhatChangedIsRewritten(t *testing.T) {
 		}, `
 -     - {material: fleece, thickness_mm: .1}   # wrapping`},
 		"thicken a layer": {func(d *Document) *Document {
-			return d.With(func(d *Document) { d.Holder.Layers = []Layer{d.Holder.Layers[0], {"pur", 1.5}} })
+			return d.With(func(d *Document) { d.Holder.Layers = []Layer{d.Holder.Layers[0], {Material: "pur", ThicknessMM: 1.5}} })
 		}, `
 -       thickness_mm: 1.40
 +       thickness_mm: 1.5`},

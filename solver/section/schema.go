@@ -1,6 +1,10 @@
 package section
 
-import "gopkg.in/yaml.v3"
+import (
+	"slices"
+
+	"gopkg.in/yaml.v3"
+)
 
 // The tables below are the format: every key that is read, in the order in which it is written. A key that comes to the format
 // is one line here (of surroundings in their own file), one field of its type, and its line in the list of later keys taken out.
@@ -8,7 +12,6 @@ import "gopkg.in/yaml.v3"
 // Blocks of the format that a later version reads.
 const (
 	laterSurroundings = "surroundings and shapes"
-	laterRatings      = "ratings"
 	laterDrawings     = "drawings and prices"
 	laterTime         = "time, length and electricity"
 )
@@ -43,7 +46,7 @@ var versionField = field[Document]{
 
 var documentTable = &table[Document]{
 	what: "a design", block: true,
-	fields: []field[Document]{
+	fields: slices.Concat([]field[Document]{
 		versionField,
 		on("title", func(d *Document) *string { return &d.Title }, text{free: true}),
 		on("notes", func(d *Document) *string { return &d.Notes }, text{free: true}),
@@ -54,10 +57,10 @@ var documentTable = &table[Document]{
 		on("loads", func(d *Document) *[]Load { return &d.Loads }, list[Load]{loadTable, true, 0}),
 		on("materials", func(d *Document) *[]Material { return &d.Materials },
 			dict[Material]{what: "a material", elem: materialTable, name: func(m *Material) *string { return &m.Name }, rules: checkMaterialName}),
+	}, documentRatings, []field[Document]{
 		on("stock_used", func(d *Document) *[]StockRow { return &d.StockUsed }, stockCodec{}),
-	},
-	later: merge(later(laterRatings, "cases", "ranges", "measurements", "rules", "design_margin_k", "reasons"),
-		later(laterDrawings, "buildup", "prices", "sheet"), later(laterTime, "terminals", "route")),
+	}),
+	later: merge(later(laterDrawings, "buildup", "prices", "sheet"), later(laterTime, "terminals", "route")),
 }
 
 var holderTable = &table[Holder]{
@@ -73,9 +76,9 @@ var holderTable = &table[Holder]{
 		on("fill", func(h *Holder) *string { return &h.Fill }, text{}),
 		on("clearance_mm", func(h *Holder) *Opt[float64] { return &h.ClearanceMM }, optNumber{notNegative}),
 		on("string_emissivity", func(h *Holder) *Opt[float64] { return &h.StringEmissivity }, optNumber{emissive}),
+		on("length_m", func(h *Holder) *Opt[float64] { return &h.LengthM }, optNumber{positive}),
 		on("touch_limit_c", func(h *Holder) *Opt[float64] { return &h.TouchLimitC }, optNumber{temperature}),
 	},
-	later: later(laterRatings, "length_m"),
 	rules: checkHolder,
 }
 
@@ -91,8 +94,8 @@ var layerTable = &table[Layer]{
 	fields: []field[Layer]{
 		need(on("material", func(l *Layer) *string { return &l.Material }, text{})),
 		need(on("thickness_mm", func(l *Layer) *float64 { return &l.ThicknessMM }, number{positive})),
+		on("screen", func(l *Layer) *Screen { return &l.Screen }, some[Screen]{screenTable}),
 	},
-	later: later(laterSurroundings, "screen"),
 }
 
 var partTable = &table[Part]{
@@ -113,8 +116,9 @@ var partTable = &table[Part]{
 		on("at_mm", func(p *Part) *Opt[Point] { return &p.At }, place{}),
 		on("turn_deg", func(p *Part) *Opt[float64] { return &p.TurnDeg }, optNumber{anyNumber}),
 		on("limit_c", func(p *Part) *Opt[float64] { return &p.LimitC }, optNumber{temperature}),
+		on("pinned", func(p *Part) *bool { return &p.Pinned }, yesNo{}),
+		on("group", func(p *Part) *string { return &p.Group }, text{}),
 	},
-	later: later(laterRatings, "pinned", "group"),
 	rules: checkPart,
 }
 
@@ -146,15 +150,14 @@ var buildTable = &table[Build]{
 
 var loadTable = &table[Load]{
 	what: "a load",
-	fields: []field[Load]{
+	fields: slices.Concat([]field[Load]{
 		need(on("id", func(l *Load) *string { return &l.ID }, ident{})),
 		need(on("conductors", func(l *Load) *[]string { return &l.Conductors }, list[string]{text{}, false, 0})),
 		currentField(),
 		on("heat_w_m", func(l *Load) *Opt[float64] { return &l.HeatWM }, optNumber{notNegative}),
 		on("frequency_hz", func(l *Load) *Opt[float64] { return &l.FrequencyHz }, optNumber{notNegative}),
-	},
-	later: merge(later(laterRatings, "system", "neutral", "volts_v", "power_factor", "continuous", "protection", "not_with", "terminals"),
-		later(laterTime, "duty", "length_m", "drop_limit_percent", "harmonics_percent", "phase_deg", "parallel")),
+	}, loadRatings),
+	later: later(laterTime, "duty", "length_m", "drop_limit_percent", "harmonics_percent", "phase_deg", "parallel"),
 	rules: checkLoad,
 }
 

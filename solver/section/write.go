@@ -103,7 +103,11 @@ func normal(d *Document) *Document {
 		b.Parts = normalParts(b.Parts)
 		return b
 	})
-	c.Loads = noEmpty(c.Loads)
+	c.Loads = mapped(c.Loads, func(l Load) Load {
+		l.NotWith = noEmpty(l.NotWith)
+		return l
+	})
+	normalRatings(&c)
 	c.Materials = noEmpty(c.Materials)
 	c.StockUsed = normalRows(c.StockUsed)
 	return &c
