@@ -20,7 +20,9 @@ solver/harmonic, solver/outline, solver/fluid, solver/gas, solver/film < solver/
 solver/harmonic < solver/electric
 solver/quantity < solver/section
 solver/quantity, assets < solver/catalog
-solver/section, solver/catalog, solver/pack, solver/heat, solver/electric < solver/rating < solver/study
+solver/quantity, solver/catalog < solver/rules
+solver/section, solver/catalog, solver/pack, solver/heat, solver/electric < solver/rating
+solver/rating, solver/rules < solver/study
 solver/section, solver/catalog < solver/wirelist
 solver/section < render
 solver/rating, solver/study < render/report
@@ -34,7 +36,7 @@ var guests = map[string][]string{
 	"fyne.io/fyne/v2":        {"ui", "cmd/packrise"},
 	"fyne.io/fyne/v2/app":    {"cmd/packrise"},
 	"github.com/fogleman/gg": {"render"},
-	"gopkg.in/yaml.v3":       {"solver/section", "solver/catalog"},
+	"gopkg.in/yaml.v3":       {"solver/section", "solver/catalog", "solver/rules"},
 }
 
 const module = "packrise/"
