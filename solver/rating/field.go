@@ -43,6 +43,19 @@ func (r *Result) Bounds() (x0, y0, x1, y1 float64) {
 	return r.bounds[0], r.bounds[1], r.bounds[2], r.bounds[3]
 }
 
+// layerK returns the conductivity (W/mK) of what lies between the parts, at its own temperature, and of the holder's layers.
+func (s *scene) layerK(a answered) []float64 {
+	k := []float64{a.air.k(-1, s.holder.fill)}
+	for _, l := range s.holder.layers {
+		k = append(k, l.material.k)
+	}
+	return k
+}
+
+// LayerK returns the conductivities (W/mK) of what lies between the parts and of the holder's layers, from the inside outwards, for
+// pictures of the heat flow; nil where nothing was solved. Not to be written to.
+func (r *Result) LayerK() []float64 { return r.layerK }
+
 // Solved tells whether there is a field to draw.
 func (r *Result) Solved() bool { return r.field != nil }
 

@@ -69,6 +69,7 @@ type Result struct {
 	surroundings string // "fixed film of 9 W/m²K"
 	origin       section.Point
 	bounds       [4]float64 // mm: x0, y0, x1, y1
+	layerK       []float64
 	field        heat.Field
 }
 
@@ -90,7 +91,7 @@ func (s *scene) result(a answered, o Options) *Result {
 	if a.heat != nil && a.status != heat.ThermalRunaway {
 		h := a.heat
 		r.Generated, r.Released, r.Unknowns, r.ErrorK = h.Generated, h.Released, h.Unknowns, h.ErrorK
-		r.SurfaceC, r.field = h.WallMean, h.Field
+		r.SurfaceC, r.field, r.layerK = h.WallMean, h.Field, s.layerK(a)
 		for _, w := range h.Absorbed {
 			r.Absorbed += w
 		}
