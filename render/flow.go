@@ -4,6 +4,8 @@ import (
 	"math"
 	"reflect"
 	"sync"
+
+	"packrise/solver/section"
 )
 
 // flow is the heat-flow lines of a field: each carries the same heat from the metal that makes it to the outer surface.
@@ -17,10 +19,12 @@ const (
 	flowPerPart = 16
 	flowLeast   = 32
 	flowMost    = 110
+
+	flowEdgeParts = 3 // as so many conductors an outline counts through which heat comes in
 )
 
-// flowOf finds the lines of a scene. A metal sends out a line for each round amount of its own heat and one for each that
-// reaches it from hotter ones, so that as many leave the section as there is heat.
+// flowOf finds the lines of a scene. What comes in from outside begins lines, and a metal sends out one for each round amount of its
+// own heat and one for each that reaches it from hotter ones, so that as many leave the section as there is heat.
 func flowOf(s Scene) *flow {
 	metals := metalsOf(s)
 	total, heated := 0.0, 0
@@ -30,26 +34,37 @@ func flowOf(s Scene) *flow {
 		}
 	}
 	f := &flow{}
-	if !(total > 1e-6) || !finite(total) {
-		return f
-	}
 	g, ok := newFlowGrid(s.Field, metals, wallMetal(s))
 	if !ok {
 		return f
 	}
+	edge := edgeOf(s, g.h)
+	if edge.heat > 0 {
+		heated += flowEdgeParts
+	}
+	if total += edge.heat; !(total > 1e-6) || !finite(total) {
+		return f
+	}
 	f.each = roundStep(total / float64(min(flowMost, max(flowLeast, flowPerPart*heated))))
 	arrived := make([]int, len(metals))
-	for i, m := range metals {
-		at, out := m.seeds(s.Field, int(math.Round(m.heat/f.each))+arrived[i], g.h)
+	guard := newFlowGuard(4 * g.h)
+	send := func(from int, at, out []section.Point) {
 		for k := range at {
-			l := g.follow(metals, i, at[k], out[k])
-			if l.to >= 0 {
-				arrived[l.to]++
+			if l, ok := g.follow(guard, metals, from, at[k], out[k]); ok {
+				if l.to >= 0 {
+					arrived[l.to]++
+				}
+				guard.add(l)
 			}
-			l.points = thinned(l.points, 0.03*g.h)
-			f.lines = append(f.lines, l)
 		}
 	}
+	at, out := seedsOn(edge.pieces, int(math.Round(edge.heat/f.each)))
+	send(-1, at, out)
+	for i, m := range metals {
+		at, out := seedsOn(m.pieces(s.Field, g.h), int(math.Round(m.heat/f.each))+arrived[i])
+		send(i, at, out)
+	}
+	f.lines = guard.lines
 	return f
 }
 

@@ -10,15 +10,14 @@ import (
 type flowEnd int
 
 const (
-	flowOut   flowEnd = iota // at the outer surface
-	flowWall                 // on the metal of a rectangle's wall
-	flowMet                  // on the metal of another part, from whose cooler side another goes on
-	flowStill                // where nothing falls any more: a sink inside the section
+	flowOut  flowEnd = iota // at the outer surface
+	flowWall                // on the metal of a rectangle's wall
+	flowMet                 // on the metal of another part, from whose cooler side another goes on
 )
 
 // flowLine is one line in mm, from hot to cold.
 type flowLine struct {
-	from, to int // metals; to is −1 unless the line ends on one
+	from, to int // metals; from is −1 where the line comes in from outside, to is −1 unless it ends on one
 	points   []section.Point
 	end      flowEnd
 }
@@ -27,16 +26,27 @@ type flowLine struct {
 // either side are unlike, and the grid, which has their mean, leads along it for a while.
 const flowPatience = 12
 
-// follow walks from a metal's surface downhill by an embedded Runge–Kutta pair of orders 2 and 3 (Bogacki & Shampine 1989) over
-// the unit vectors of steepest fall: what it steps along is length.
-func (g *flowGrid) follow(metals []flowMetal, from int, at, out section.Point) flowLine {
+// follow walks from a surface downhill by an embedded Runge–Kutta pair of orders 2 and 3 (Bogacki & Shampine 1989) over the unit
+// vectors of steepest fall: what it steps along is length. It is false where the heat does not go on by conduction: at the surface of
+// a part that radiates more than its own metal sends out, what comes through the gas ends.
+func (g *flowGrid) follow(guard *flowGuard, metals []flowMetal, from int, at, out section.Point) (flowLine, bool) {
 	l := flowLine{from: from, to: -1, points: []section.Point{at}}
-	q := section.Point{X: at.X + 0.75*g.h*out.X, Y: at.Y + 0.75*g.h*out.Y} // metal has one temperature: heat leaves it squarely
-	if g.ends(&l, metals, q) {
-		return l
+	if !g.descend(&l, guard, metals, section.Point{X: at.X + 0.75*g.h*out.X, Y: at.Y + 0.75*g.h*out.Y}) { // heat leaves metal squarely
+		return l, false
+	}
+	if thin := thinned(l.points, 0.03*g.h); guard.free(thin) {
+		l.points = thin
+	}
+	return l, guard.free(l.points)
+}
+
+// descend adds the points of a line, of which the first is given.
+func (g *flowGrid) descend(l *flowLine, guard *flowGuard, metals []flowMetal, q section.Point) bool {
+	if done, ok := g.advance(l, guard, metals, q); done {
+		return ok
 	}
 	most := 10 * float64(g.nx+g.ny) * g.h
-	low, lowAt, since := g.temp(q), len(l.points), 0.0
+	low, since := g.temp(q), 0.0
 	for step, long := g.h, 0.0; long < most; {
 		next, miss, ok := g.step(q, step)
 		tolerance := 0.004 * g.h
@@ -49,23 +59,34 @@ func (g *flowGrid) follow(metals []flowMetal, from int, at, out section.Point) f
 			continue
 		}
 		if !ok {
-			break
+			return false
 		}
 		long, since = long+step, since+step
 		q = next
-		if g.ends(&l, metals, q) {
-			return l
+		if done, ok := g.advance(l, guard, metals, q); done {
+			return ok
 		}
 		if t := g.temp(q); t < low {
-			low, lowAt, since = t, len(l.points), 0
+			low, since = t, 0
 		}
 		if since > flowPatience*g.h {
-			break
+			return false
 		}
 		step = min(1.5*g.h, step*min(3, 0.9*math.Cbrt(tolerance/max(miss, 1e-12*g.h))))
 	}
-	l.end, l.points = flowStill, l.points[:lowAt]
-	return l
+	return false
+}
+
+// advance takes a line one point further, beside another line where that is in the way; done tells that it has come to an end, ok
+// that it has a good one.
+func (g *flowGrid) advance(l *flowLine, guard *flowGuard, metals []flowMetal, q section.Point) (done, ok bool) {
+	last := len(l.points)
+	done = g.ends(l, metals, q)
+	if w, met := guard.meets(l.points[last-1], l.points[last]); met {
+		l.points, l.to = l.points[:last], -1
+		return true, guard.beside(l, w, 0.02*g.h)
+	}
+	return done, done
 }
 
 // step goes one step of a length and tells by how much the two orders differ.

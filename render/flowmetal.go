@@ -87,9 +87,21 @@ type flowPiece struct {
 	flow   float64       // heat that leaves it, in a unit common to the whole outline; negative where it comes in
 }
 
-// pieces cuts the outline, counterclockwise.
-func (m flowMetal) pieces() []flowPiece {
-	points := m.corners()
+// pieces cuts the outline, counterclockwise, and weighs what leaves.
+func (m flowMetal) pieces(f Field, reach float64) []flowPiece {
+	points := m.loop
+	if points == nil {
+		points = roundLoop(m.at, m.r)
+	} else {
+		points = cut(points)
+	}
+	out := piecesOf(points)
+	weigh(out, f, reach)
+	return out
+}
+
+// piecesOf makes pieces of the sides of an outline, counterclockwise.
+func piecesOf(points []section.Point) []flowPiece {
 	var out []flowPiece
 	for i, a := range points {
 		b := points[(i+1)%len(points)]
@@ -102,23 +114,27 @@ func (m flowMetal) pieces() []flowPiece {
 	return out
 }
 
-func (m flowMetal) corners() []section.Point {
-	var out []section.Point
-	if m.loop == nil {
-		for i := range flowPieces {
-			sin, cos := math.Sincos(2 * pi * (float64(i) - 0.5) / flowPieces)
-			out = append(out, section.Point{X: m.at.X + m.r*cos, Y: m.at.Y + m.r*sin})
-		}
-		return out
+// roundLoop is a polygon in place of one.
+func roundLoop(at section.Point, r float64) []section.Point {
+	out := make([]section.Point, flowPieces)
+	for i := range out {
+		sin, cos := math.Sincos(2 * pi * (float64(i) - 0.5) / flowPieces)
+		out[i] = section.Point{X: at.X + r*cos, Y: at.Y + r*sin}
 	}
+	return out
+}
+
+// cut divides the sides of an outline into pieces of about one length and turns it counterclockwise.
+func cut(loop []section.Point) []section.Point {
+	var out []section.Point
 	area, round := 0.0, 0.0
-	for i, a := range m.loop {
-		b := m.loop[(i+1)%len(m.loop)]
+	for i, a := range loop {
+		b := loop[(i+1)%len(loop)]
 		area += a.X*b.Y - b.X*a.Y
 		round += between(a, b)
 	}
-	for i, a := range m.loop {
-		b := m.loop[(i+1)%len(m.loop)]
+	for i, a := range loop {
+		b := loop[(i+1)%len(loop)]
 		n := math.Ceil(between(a, b) / round * flowPieces)
 		for k := 0.0; k < n; k++ {
 			out = append(out, section.Point{X: a.X + k/n*(b.X-a.X), Y: a.Y + k/n*(b.Y-a.Y)})
@@ -128,45 +144,4 @@ func (m flowMetal) corners() []section.Point {
 		slices.Reverse(out)
 	}
 	return out
-}
-
-// seeds returns n places on the metal's surface and the ways outwards there, so that between each and the next the same heat
-// leaves. They stand evenly about the place where least does.
-func (m flowMetal) seeds(f Field, n int, reach float64) (at, out []section.Point) {
-	pieces := m.pieces()
-	total, least, from := 0.0, math.Inf(1), 0
-	for i := range pieces {
-		p := &pieces[i]
-		mid := section.Point{X: (p.a.X + p.b.X) / 2, Y: (p.a.Y + p.b.Y) / 2}
-		far := section.Point{X: mid.X + reach*p.normal.X, Y: mid.Y + reach*p.normal.Y}
-		near := section.Point{X: mid.X + 0.02*reach*p.normal.X, Y: mid.Y + 0.02*reach*p.normal.Y}
-		density := fieldAt(f, near) - fieldAt(f, far)
-		if !finite(density) { // the metal is the outside
-			density = 0
-		}
-		p.flow = density * between(p.a, p.b)
-		total += max(0, p.flow)
-		if density < least-1e-6*math.Abs(least) {
-			least, from = density, i
-		}
-	}
-	if !(total > 0) {
-		return nil, nil
-	}
-	sum := 0.0
-	for k := range pieces {
-		p := pieces[(from+k)%len(pieces)]
-		flow := max(0, p.flow)
-		for len(at) < n {
-			want := (float64(len(at)) + 0.5) / float64(n) * total
-			if want > sum+flow {
-				break
-			}
-			u := (want - sum) / flow
-			at = append(at, section.Point{X: p.a.X + u*(p.b.X-p.a.X), Y: p.a.Y + u*(p.b.Y-p.a.Y)})
-			out = append(out, p.normal)
-		}
-		sum += flow
-	}
-	return at, out
 }
