@@ -50,7 +50,16 @@ func (s *shaped) outside() {
 	}
 	l := newPlan(&s.m.p)
 	s.plan = l
-	s.sys = s.sys.Outside(l.contours[len(l.contours)-1].Sides)
+	s.sys = s.sys.Outside(l.sides())
+}
+
+// sides are those of every contour.
+func (l *plan) sides() [][]outline.Side {
+	s := make([][]outline.Side, len(l.contours))
+	for i := range s {
+		s[i] = l.contours[i].Sides
+	}
+	return s
 }
 
 // solve finds the temperatures for heats by part.
@@ -60,7 +69,7 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 	}
 	r := s.m.blank(Converged)
 	y := s.sys.Respond(s.load(heats), true)
-	hot, mean, out := s.sys.Faces(y)
+	hot, mean, out := s.sys.Faces(y, outline.Sources{})
 	parts := s.m.p.Parts
 	for i := range parts {
 		q, c := &parts[i], s.plan.first[i]
@@ -85,7 +94,7 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 // walls fills in what the result says of the wall.
 func (s *shaped) walls(r *Result, hot []float64, mean float64, out []float64) {
 	w := &s.m.p.Wall
-	last := len(hot) - 1
+	last := len(hot) - 2
 	if w.Shape == BarePart {
 		r.WallMax = []float64{hot[last]}
 		for i := range s.m.p.Parts {
@@ -99,7 +108,7 @@ func (s *shaped) walls(r *Result, hot []float64, mean float64, out []float64) {
 			}
 		}
 	} else {
-		copy(r.WallMax, hot[s.plan.wall:])
+		copy(r.WallMax, hot[s.plan.wall:last+1])
 	}
 	r.WallMean = mean
 	for i, q := range out {

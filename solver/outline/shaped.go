@@ -13,7 +13,8 @@ type Contour struct {
 	In, Out float64
 	Held    bool
 	Fixed   float64
-	// Sides is how the outside meets the surroundings: one for each stroke, or one for all of them; nil for every other face.
+	// Sides is how the outside meets the surroundings: one for each stroke, or one for all of them; nil for every other face. On the outside of an
+	// open bundle some may be Covered: a face like every other.
 	Sides []Side
 }
 
@@ -26,9 +27,15 @@ func (c *Contour) side(stroke int) *Side { return &c.Sides[min(stroke, len(c.Sid
 // contour. Contours may touch but must leave a gap that lengths of the section can resolve in double precision (10 nm do). Safe for concurrent use.
 type Shaped struct {
 	contours []Contour
+	around   Around
+	grading  grading
+	metals   []int     // contours of metals
+	lengths  []float64 // of the contours
 	bends    []bend
+	order    []int // bends by their unknowns
+	discs    []shapedDisc
 	n        int       // densities
-	inner    int       // of them on all contours but the outside
+	inner    int       // of them on all that does not meet the surroundings
 	eq       []float64 // rows of n: conditions of the inside, mean ∂T/∂n on the outside
 	outT     []float64 // mean T on the outside, rows of n
 	temps    []float64 // T at the ends of cells, rows of n
@@ -43,13 +50,29 @@ const badContour = "outline: a contour's conductivity or film is not positive, o
 // NewShaped discretises the contours and refines until densities are resolved (fineness 1 is standard, 0.7 draft, 1.5 fine), and factorises. stop
 // is asked between pieces of work; nil if it asked for an end.
 func NewShaped(contours []Contour, fineness float64, stop func() bool) *Shaped {
+	return NewShapedAround(contours, Around{MediumK: 1}, nil, fineness, stop)
+}
+
+// NewShapedAround is NewShaped with discs among the contours, which exchange harmonics with them as with a System. What an old one, nil for none, knows
+// of contours and discs that are the same is kept.
+func NewShapedAround(contours []Contour, around Around, old *Shaped, fineness float64, stop func() bool) *Shaped {
+	s := &Shaped{contours: append([]Contour(nil), contours...), around: around, grading: grading{harmonic: perHarmonic / fineness}}
+	s.around.Discs = append([]Disc(nil), around.Discs...)
 	for i := range contours {
 		c := &contours[i]
-		if !(c.In > 0) || (c.Sides == nil) != (i < len(contours)-1) || c.Sides == nil && !(c.Out > 0) {
+		hulled := around.Hull != nil
+		if !(c.In > 0) || !hulled && (c.Sides == nil) != (i < len(contours)-1) || c.Sides == nil && !(c.Out > 0) {
 			panic(badContour)
 		}
+		if c.metal() {
+			s.metals = append(s.metals, i)
+		}
+		s.lengths = append(s.lengths, c.Loop.Perimeter())
 	}
-	s := &Shaped{contours: append([]Contour(nil), contours...)}
+	s.discs = make([]shapedDisc, len(s.around.Discs))
+	for i, d := range s.around.Discs {
+		s.discs[i].Disc = d
+	}
 	s.begin()
 	for round := 0; ; round++ {
 		if !s.write(stop) {
@@ -70,18 +93,31 @@ func (s *Shaped) Loose() float64 { return s.loose }
 // outside is the last contour.
 func (s *Shaped) outside() *Contour { return &s.contours[len(s.contours)-1] }
 
-// number gives the bends their unknowns.
+// number gives the bends their unknowns, those of the outside last.
 func (s *Shaped) number() {
 	s.n, s.cells, s.inner = 0, 0, 0
-	for i := range s.bends {
-		b := &s.bends[i]
-		b.dof, b.firstCell = s.n, s.cells
-		s.n += modes
-		s.cells += modes + 1
-		if b.contour < len(s.contours)-1 {
+	s.order = nil
+	for _, outer := range []bool{false, true} {
+		for i := range s.bends {
+			b := &s.bends[i]
+			if s.outer(b) != outer {
+				continue
+			}
+			s.order = append(s.order, i)
+			b.dof, b.firstCell = s.n, s.cells
+			s.n += modes
+			s.cells += modes + 1
+		}
+		if !outer {
 			s.inner = s.n
 		}
 	}
+}
+
+// outer tells whether a bend meets the surroundings.
+func (s *Shaped) outer(b *bend) bool {
+	c := &s.contours[b.contour]
+	return c.Sides != nil && c.side(b.stroke).Kind != Covered
 }
 
 // condition is the row of a bend of the inside, and of the outside under its film: as in row.
@@ -89,24 +125,22 @@ func (s *Shaped) condition(b *bend) row {
 	c := &s.contours[b.contour]
 	switch {
 	case c.Held:
-		return row{temp: 1 / scaleOf(c), outside: c.Fixed}
+		return row{temp: 4 / s.lengths[b.contour], outside: c.Fixed}
 	case c.metal():
 		return row{density: 1, flux: 2}
-	case c.Sides == nil:
+	case !s.outer(b):
 		return row{density: 1, flux: 2 * (c.In - c.Out) / (c.In + c.Out)}
 	}
-	side := c.side(b.stroke)
+	side, size := c.side(b.stroke), s.lengths[b.contour]/4
 	switch {
 	case side.Kind == Insulated:
 		return row{density: 1, flux: 2}
 	case side.Kind == Held || math.IsInf(side.Film, 1):
-		return row{temp: 1 / scaleOf(c), outside: side.Temp}
+		return row{temp: 1 / size, outside: side.Temp}
 	}
-	f := 1 / (1 + side.Film*scaleOf(c)/c.In)
+	f := 1 / (1 + side.Film*size/c.In)
 	return row{density: f, flux: 2 * f, temp: 2 * f * side.Film / c.In, outside: side.Temp}
 }
-
-func scaleOf(c *Contour) float64 { return c.Loop.Perimeter() / 4 }
 
 // write sets up the equations, keeping what is known, and takes them apart; false if stop asked for an end.
 func (s *Shaped) write(stop func() bool) bool {
@@ -121,6 +155,11 @@ func (s *Shaped) write(stop func() bool) bool {
 			s.rows(&s.bends[i], &old)
 		}
 	})
+	each(len(s.discs), func(j int) {
+		if !stop() {
+			s.link(j)
+		}
+	})
 	for i := range s.contours {
 		if c := &s.contours[i]; c.metal() {
 			_, at := c.Loop.Area()
@@ -132,7 +171,7 @@ func (s *Shaped) write(stop func() bool) bool {
 
 // rows writes the equations of one bend and the temperatures along it.
 func (s *Shaped) rows(to *bend, old *Shaped) {
-	outer := to.contour == len(s.contours)-1
+	outer := s.outer(to)
 	r := s.condition(to)
 	if outer {
 		r = row{flux: 1}

@@ -41,7 +41,7 @@ func TestShapedConcentric(t *testing.T) {
 	want := 30 + 5/(2*math.Pi)*(math.Log(1.5)/0.2+math.Log(8.0/3)/0.03+1/(0.008*9))
 	closeTo(t, "metal", s.Metal(y, 0), want, 1e-4)
 	closeTo(t, "heat", s.Leaves(y, 0), 5, 1e-6)
-	hot, mean, out := s.Faces(y)
+	hot, mean, out := s.Faces(y, Sources{})
 	closeTo(t, "outside", mean, 30+5/(2*math.Pi*0.008*9), 1e-5)
 	closeTo(t, "hottest outside", hot[2], mean, 1e-4)
 	closeTo(t, "released", out[0]+out[1]+out[2]+out[3], 5, 1e-5)
@@ -101,13 +101,13 @@ func TestShapedOutside(t *testing.T) {
 	}
 	a := []Side{{Film: 9, Temp: 20}}
 	b := []Side{{Film: 4, Temp: 20}, {Kind: Held, Temp: 60}, {Film: 7, Temp: 10}, {Kind: Insulated}}
-	s := NewShaped(section(a), 1.5, never).Outside(b)
+	s := NewShaped(section(a), 1.5, never).Outside([][]Side{nil, nil, nil, b})
 	fresh := NewShaped(section(b), 1.5, never)
 	heats := heatOf(4, 0, 3)
 	y, z := s.Respond(heats, true), fresh.Respond(heats, true)
 	closeTo(t, "metal", s.Metal(y, 0), fresh.Metal(z, 0), 5e-3)
-	_, mean, out := s.Faces(y)
-	_, want, fine := fresh.Faces(z)
+	_, mean, out := s.Faces(y, Sources{})
+	_, want, fine := fresh.Faces(z, Sources{})
 	closeTo(t, "mean", mean, want, 5e-3)
 	sum := 0.0
 	for i := range out {

@@ -27,6 +27,12 @@ func (s *Shaped) perContact(st *Stroke, contour int, lo, hi float64) bool {
 		if s.closer(st, contour, u, half) {
 			return true
 		}
+		z := st.At(u)
+		for i := range s.around.Discs {
+			if s.grading.near(&s.around.Discs[i], z, 2*half) < 2*half {
+				return true
+			}
+		}
 	}
 	return false
 }

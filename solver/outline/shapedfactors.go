@@ -5,6 +5,7 @@ import (
 
 	"gonum.org/v1/gonum/blas"
 	"gonum.org/v1/gonum/blas/blas64"
+	"gonum.org/v1/gonum/floats"
 	"gonum.org/v1/gonum/lapack/lapack64"
 )
 
@@ -62,7 +63,7 @@ func (s *Shaped) factorise(stop func() bool) bool {
 
 // carry adds to a metal's rows that all its density makes its heat: nothing else tells how much leaves it.
 func (s *Shaped) carry(contour int) {
-	p := s.contours[contour].Loop.Perimeter()
+	p := s.lengths[contour]
 	for i := range s.bends {
 		to := &s.bends[i]
 		if to.contour != contour {
@@ -131,11 +132,16 @@ func (s *Shaped) sealed() bool {
 	return true
 }
 
-// Outside returns the section with other sides, as many as before. Solutions of the one before stay good with it.
-func (s *Shaped) Outside(sides []Side) *Shaped {
+// Outside returns the section with other sides of its contours, as many as before, covered where they were (nil: as they are). Solutions of the one
+// before stay good with it.
+func (s *Shaped) Outside(sides [][]Side) *Shaped {
 	t := *s
 	t.contours = append([]Contour(nil), s.contours...)
-	t.outside().Sides = sides
+	for i, d := range sides {
+		if d != nil {
+			t.contours[i].Sides = d
+		}
+	}
 	t.close()
 	return &t
 }
@@ -143,16 +149,14 @@ func (s *Shaped) Outside(sides []Side) *Shaped {
 // solve overwrites the right-hand side y with the unknowns.
 func (s *Shaped) solve(y []float64) {
 	n1, n2 := s.inner, s.n-s.inner+1
-	inner := blas64.General{Rows: n1, Cols: 1, Stride: 1, Data: y[:n1]}
-	outer := blas64.General{Rows: n2, Cols: 1, Stride: 1, Data: y[n1:]}
 	if n1 > 0 {
-		lapack64.Getrs(blas.NoTrans, s.a, inner, s.pivots)
+		substitute(s.a, s.pivots, y[:n1])
 		for i := range n2 {
-			y[n1+i] -= dot(y[:n1], s.low.Data[i*s.low.Stride:])
+			y[n1+i] -= floats.Dot(y[:n1], s.low.Data[i*s.low.Stride:][:n1])
 		}
 	}
-	lapack64.Getrs(blas.NoTrans, s.rest, outer, s.swaps)
+	substitute(s.rest, s.swaps, y[n1:])
 	for i := range n1 {
-		y[i] -= dot(y[n1:], s.x.Data[i*n2:])
+		y[i] -= floats.Dot(y[n1:], s.x.Data[i*n2:][:n2])
 	}
 }

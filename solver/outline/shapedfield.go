@@ -5,7 +5,7 @@ import (
 	"sync"
 )
 
-// ShapedField is the temperature of a solution anywhere within the outside. Safe for concurrent use.
+// ShapedField is the temperature of a solution anywhere within the outside, but for what discs bring. Safe for concurrent use.
 type ShapedField struct {
 	s     *Shaped
 	y     []float64
@@ -49,9 +49,17 @@ func (s *Shaped) Field(y []float64) *ShapedField {
 			f.cloud = append(f.cloud, dipole{b.at(t), -q * b.half / (2 * math.Pi)})
 		}
 	}
-	lo, hi := s.contours[len(s.contours)-1].Loop.Bounds()
+	lo, hi := s.Bounds().Bounds()
 	f.lo, f.size = lo, math.Max(real(hi-lo), imag(hi-lo))/boxesAcross
 	return f
+}
+
+// Bounds is the outer boundary.
+func (s *Shaped) Bounds() Loop {
+	if s.around.Hull != nil {
+		return s.around.Hull
+	}
+	return s.outside().Loop
 }
 
 // Bounds returns the lower left and the upper right corner of a rectangle round the loop.
@@ -81,7 +89,7 @@ func (l Loop) Bounds() (lo, hi complex128) {
 
 // At returns the temperature at z, NaN outside.
 func (f *ShapedField) At(z complex128) float64 {
-	if !f.s.contours[len(f.s.contours)-1].Loop.Inside(z) {
+	if !f.s.Bounds().Inside(z) {
 		return math.NaN()
 	}
 	i := min(max(int(real(z-f.lo)/f.size), 0), boxesAcross-1)

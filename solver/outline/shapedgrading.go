@@ -34,7 +34,8 @@ func (s *Shaped) begin() {
 // refine halves the bends whose last modes are not small for some heat; false if there are none.
 func (s *Shaped) refine(fineness float64) bool {
 	tail := make([]float64, len(s.bends))
-	for _, y := range s.samples() {
+	samples := s.samples()
+	for k, y := range samples {
 		whole := 0.0
 		for i := range s.bends {
 			b := &s.bends[i]
@@ -42,6 +43,9 @@ func (s *Shaped) refine(fineness float64) bool {
 		}
 		if !(whole > 0) {
 			continue
+		}
+		if k >= len(samples)-2 && len(s.discs) > 0 {
+			whole /= float64(len(s.discs)) // each of them by itself
 		}
 		for i := range s.bends {
 			b := &s.bends[i]
@@ -92,7 +96,32 @@ func (s *Shaped) samples() [][]float64 {
 	if s.driven() {
 		all = append(all, s.Respond(heats, true))
 	}
-	return all
+	return append(all, s.lit()...)
+}
+
+// lit are the solutions for 1 W/m in every disc at once, and for what the discs send back of that.
+func (s *Shaped) lit() [][]float64 {
+	if len(s.discs) == 0 {
+		return nil
+	}
+	src := Sources{Q: make([]float64, len(s.discs)), D: make([][]complex128, len(s.discs))}
+	b := make([][]complex128, len(s.discs))
+	for j := range s.discs {
+		src.Q[j] = 1
+		src.D[j], b[j] = make([]complex128, s.discs[j].M), make([]complex128, s.discs[j].M+1)
+	}
+	first, second := make([]float64, s.n+1), make([]float64, s.n+1)
+	s.RespondTo(first, src, false)
+	s.Incoming(first, b)
+	for j, d := range src.D {
+		src.Q[j] = 0
+		for n := range d {
+			d[n] = scale(s.around.T[j][n], conj(b[j][n+1]))
+		}
+	}
+	s.RespondTo(second, src, false)
+	addScaled(second, 1, first)
+	return [][]float64{first, second}
 }
 
 // driven tells whether heat flows without any metal's heat.
@@ -110,7 +139,7 @@ func (s *Shaped) driven() bool {
 			return true
 		}
 		for _, d := range c.Sides {
-			if d.Kind != Insulated && differs(d.Temp) {
+			if d.Kind != Insulated && d.Kind != Covered && differs(d.Temp) {
 				return true
 			}
 		}

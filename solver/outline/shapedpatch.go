@@ -15,6 +15,7 @@ type ShapedPatches struct {
 	share []float64 // of each cell in the length of its patch
 	gain  []float64 // what 1 W/m² into a patch adds to the rows of its cells; of a metal, to all its rows for 1 W/m
 	temp  []float64 // mean temperature of each patch per density, n columns
+	feel  [][]touch // per disc and patch
 }
 
 // Patches divides the contours that faces tells of along their cells, longest telling how long a patch at z may be. Contours of metals take part with
@@ -50,6 +51,8 @@ func (s *Shaped) Patches(faces func(contour int) bool, longest func(z complex128
 		}
 	}
 	p.measure()
+	p.feel = make([][]touch, len(s.discs))
+	each(len(s.discs), p.Follow)
 	return p
 }
 
@@ -59,10 +62,10 @@ func (s *Shaped) gain(b *bend) float64 {
 	r := s.condition(b)
 	switch {
 	case c.metal():
-		return 1 / (c.Out * c.Loop.Perimeter())
+		return 1 / (c.Out * s.lengths[b.contour])
 	case c.Held:
 		return 0
-	case c.Sides != nil:
+	case s.outer(b):
 		return 2 * r.density / c.In
 	}
 	return 2 / (c.In + c.Out)
@@ -85,12 +88,55 @@ func (p *ShapedPatches) measure() {
 }
 
 // bendOf is the bend with unknown dof.
-func (s *Shaped) bendOf(dof int) *bend { return &s.bends[dof/modes] }
+func (s *Shaped) bendOf(dof int) *bend { return &s.bends[s.order[dof/modes]] }
+
+// Of tells whether the patches are those of s.
+func (p *ShapedPatches) Of(s *Shaped) bool { return p.s == s }
+
+// Follow works out anew what disc i brings to the patches, after MoveDisc.
+func (p *ShapedPatches) Follow(i int) {
+	s := p.s
+	d := &s.discs[i]
+	p.feel[i] = make([]touch, len(p.A))
+	for k := range p.A {
+		m := 0
+		for _, row := range p.row[p.first[k]:p.first[k+1]] {
+			m = max(m, d.reach(s.bendOf(row).distance(d.C), decayed))
+		}
+		row, cells := make(touch, 1+2*m), make([]float64, modes*(1+2*m))
+		var last *bend
+		for c := p.first[k]; c < p.first[k+1]; c++ {
+			b := s.bendOf(p.row[c])
+			if b != last {
+				clear(cells)
+				d.warms(b, -1, s.around.MediumK, m, cells)
+				last = b
+			}
+			addScaled(row, p.share[c], cells[(p.row[c]-b.dof)*len(row):][:len(row)])
+		}
+		p.feel[i][k] = row
+	}
+}
+
+// RespondTo is Shaped.RespondTo with w (W/m) going into each patch besides.
+func (p *ShapedPatches) RespondTo(y []float64, src Sources, ground bool, w []float64) {
+	p.s.loadFrom(y, src, ground)
+	p.add(y, w)
+	p.s.solve(y)
+}
 
 // Respond is Shaped.Respond with w (W/m) going into each patch besides.
 func (p *ShapedPatches) Respond(heats []float64, ground bool, w []float64) []float64 {
+	y := make([]float64, p.s.n+1)
+	p.s.loadTo(y, heats, ground)
+	p.add(y, w)
+	p.s.solve(y)
+	return y
+}
+
+// add adds what goes into the patches to the right-hand side y.
+func (p *ShapedPatches) add(y, w []float64) {
 	s := p.s
-	y := s.load(heats, ground)
 	for k, v := range w {
 		if b := s.bendOf(p.row[p.first[k]]); s.contours[b.contour].metal() {
 			for i := range s.bends {
@@ -107,14 +153,19 @@ func (p *ShapedPatches) Respond(heats []float64, ground bool, w []float64) []flo
 			y[row] += v
 		}
 	}
-	s.solve(y)
-	return y
 }
 
-// Means sets t to the mean temperatures of the patches.
-func (p *ShapedPatches) Means(t, y []float64) {
+// Means sets t to the mean temperatures of the patches, for the whole solution.
+func (p *ShapedPatches) Means(t, y []float64, src Sources) {
 	n := p.s.n
 	for k := range t {
 		t[k] = y[n] + dot(p.temp[k*n:][:n], y)
+	}
+	for j := range p.s.discs {
+		v := pack(make([]float64, 0, 1+2*usualOrder), src.Q[j], src.D[j])
+		for k, row := range p.feel[j] {
+			m := min(len(row), len(v))
+			t[k] += dot(row[:m], v)
+		}
 	}
 }

@@ -30,7 +30,7 @@ func TestShapedPatches(t *testing.T) {
 	}
 	y := p.Respond([]float64{q, 0, 0}, true, w)
 	means := make([]float64, len(w))
-	p.Means(means, y)
+	p.Means(means, y, Sources{})
 	tube := 20 + q/(2*math.Pi)*(math.Log(c/b)/kw+1/(h*c))
 	metal := tube + (q-shine)/(2*math.Pi*k)*math.Log(b/a)
 	for i, v := range means {
@@ -40,7 +40,7 @@ func TestShapedPatches(t *testing.T) {
 		}
 		within(t, "patch", v, want, 1e-6)
 	}
-	_, _, out := s.Faces(y)
+	_, _, out := s.Faces(y, Sources{})
 	sum := 0.0
 	for _, v := range out {
 		sum += v

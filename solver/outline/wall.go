@@ -20,6 +20,7 @@ const (
 	Open SideKind = iota
 	Insulated
 	Held
+	Covered // no outside at all: the medium goes on
 )
 
 // Side: Open has Film (W/m²K; +Inf for a fixed wall) to Temp; Held is at Temp.
