@@ -71,10 +71,6 @@ func badKeys() []bad {
 		{"duplicate version", head + "packrise: 1\n", []wanted{{4, "duplicate-key", "first on line 1"}}},
 		{"duplicate material", head + "materials:\n  a: {k_w_mk: 1}\n  a: {k_w_mk: 2}\n", []wanted{{6, "duplicate-key", "material a|line 5"}}},
 		{"key that is a list", head + "[a, b]: x\n", []wanted{{4, "wrong-type", "a key is not a word"}}},
-		{
-			"later: against", strings.Replace(head, "30}", "30, against: {share: 0.25}}", 1),
-			[]wanted{{2, "later-key", "key `surroundings.against` belongs to surroundings and shapes that this version does not read yet; take it out"}},
-		},
 		{"later: prices", head + "prices: {}\n", []wanted{{4, "later-key", "drawings and prices"}}},
 		{"later: route", head + "route: []\n", []wanted{{4, "later-key", "time, length and electricity"}}},
 		{"sector", head + "parts:\n  - {id: S, kind: core, conductor: {shape: sector, size: 4/0, angle_deg: 90}}\n", []wanted{{5, "missing-key", "part S|`conductor.radius_mm`|a sector needs it"}}},

@@ -29,12 +29,14 @@ func (r *report) check(d *Document) {
 		return
 	}
 	checkHolderParts(r, d)
+	checkAgainst(r, d)
 	checkIDs(r, d.Parts, path("").key("parts"))
 	for i := range d.Builds {
 		checkIDs(r, d.Builds[i].Parts, path("").key("builds").key(d.Builds[i].Name).key("parts"))
 	}
 	if checkNesting(r, d) {
 		checkLoads(r, d)
+		checkRatings(r, d)
 	}
 }
 
@@ -62,6 +64,9 @@ func checkHolder(r *report, h *Holder, at path) {
 	reject(h.Kind == NoHolder && h.ClearanceMM.OK, "clearance_mm", ", which encloses nothing", "take it out")
 	if h.TouchLimitC.OK && len(at.steps()) > 1 {
 		r.add(at.key("touch_limit_c"), "key-of-kind", "¤ belongs to the section's own holder, whose outside can be touched", "take it out, or give a layer's material a limit")
+	}
+	if h.LengthM.OK && len(at.steps()) > 1 {
+		r.add(at.key("length_m"), "key-of-kind", "¤ belongs to the section's own holder", "take it out")
 	}
 	if h.Stock != "" && !open {
 		both := h.InsideMM.OK || h.WidthMM.OK || h.HeightMM.OK || len(h.Layers) > 0

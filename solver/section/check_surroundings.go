@@ -54,6 +54,12 @@ var kindKeys = []kindKey{
 		func(s *Surroundings) { s.Wrap = nil }, wrapped, wrapped, "{material: …, thickness_mm: …}",
 	},
 	{
+		"against", func(s *Surroundings) bool { return s.Against != nil },
+		func(s *Surroundings) { s.Against = nil },
+		[]string{StillAir, MovingAir, FixedFilm, Water, Vacuum, Insulation},
+		nil, "",
+	},
+	{
 		"wet", func(s *Surroundings) bool { return s.Wet },
 		func(s *Surroundings) { s.Wet = false },
 		[]string{StillAir, MovingAir, FixedFilm, FixedWall, Buried, Water, Insulation},
@@ -68,6 +74,8 @@ var notThere = map[string]string{
 	Water + " sun_w_m2":         ": the sun on a run in water is not reckoned",
 	Water + " radiant_c":        ": water lets no heat radiation through",
 	Buried + " radiant_c":       ": soil lets no heat radiation through",
+	Buried + " against":         ": soil lies all round it",
+	FixedWall + " against":      ", which holds the whole outer surface at ambient_c",
 	Vacuum + " altitude_m":      ", where there is no air",
 	Vacuum + " wet":             ", where nothing stays wet",
 	StillAir + " air_speed_m_s": ", where the air moves by its own warmth only",
@@ -81,6 +89,7 @@ var instead = map[string]string{
 	FixedWall + " film_w_m2k":   "take it out, or write kind: fixed-film",
 	StillAir + " air_speed_m_s": "take it out, or write kind: moving-air",
 	StillAir + " air_direction": "take it out, or write kind: moving-air",
+	FixedWall + " against":      "take it out, or write the kind that cools the open part",
 }
 
 func checkSurroundings(r *report, s *Surroundings, at path) {

@@ -18,3 +18,14 @@ func Surround(d *Document, kind string, set func(*Surroundings)) *Document {
 		}
 	})
 }
+
+// RestAgainst returns the document with a part of its outside resting against something; nil takes that away.
+func RestAgainst(d *Document, a *Against) *Document {
+	return d.With(func(d *Document) {
+		d.Surroundings.Against = nil
+		if a != nil {
+			b := *a
+			d.Surroundings.Against = &b
+		}
+	})
+}

@@ -226,6 +226,12 @@ func (m maker) put(s *Surroundings, key string) {
 		s.SoilWMK = Some(m.num(0.1, 2))
 	case "wrap":
 		s.Wrap = &Layer{Material: m.name(), ThicknessMM: m.num(1, 100)}
+	case "against":
+		a := Against{AtDeg: m.num(-180, 180), Share: m.num(1, 99) / 100, Is: Side{Kind: SideInsulated}}
+		if m.coin("held") {
+			a.Is = Side{Kind: SideFixed, FixedC: m.num(-40, 90)}
+		}
+		s.Against = &a
 	case "wet":
 		s.Wet = true
 	}
@@ -242,6 +248,9 @@ func (m maker) document() *Document {
 		names = append(names, name)
 	}
 	d.Holder = m.holder(Jacket, Conduit, Wireway, OpenBundle, NoHolder)
+	if d.Holder.Kind == Wireway {
+		d.Surroundings.Against = nil
+	}
 	d.Holder.TouchLimitC = m.opt(30, 90)
 	n := 6
 	if d.Holder.Kind == NoHolder {

@@ -11,9 +11,8 @@ import (
 
 // Blocks of the format that a later version reads.
 const (
-	laterSurroundings = "surroundings and shapes"
-	laterDrawings     = "drawings and prices"
-	laterTime         = "time, length and electricity"
+	laterDrawings = "drawings and prices"
+	laterTime     = "time, length and electricity"
 )
 
 func later(block string, keys ...string) map[string]string {

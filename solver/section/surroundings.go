@@ -41,6 +41,7 @@ type Surroundings struct {
 	DepthM       Opt[float64] // buried: of the axis
 	SoilWMK      Opt[float64] // buried
 	Wrap         *Layer       // insulation
+	Against      *Against     // what a part of the outside rests against
 	Wet          bool         // the wire types' wet limits count
 }
 
@@ -60,9 +61,9 @@ var surroundingsTable = &table[Surroundings]{
 		on("depth_m", func(s *Surroundings) *Opt[float64] { return &s.DepthM }, optNumber{between(0.001, 100, "m")}),
 		on("soil_w_mk", func(s *Surroundings) *Opt[float64] { return &s.SoilWMK }, optNumber{between(0.01, 20, "W/mK")}),
 		on("wrap", func(s *Surroundings) **Layer { return &s.Wrap }, pointer[Layer]{layerTable}),
+		on("against", func(s *Surroundings) **Against { return &s.Against }, pointer[Against]{againstTable}),
 		on("wet", func(s *Surroundings) *bool { return &s.Wet }, yesNo{}),
 	},
-	later: later(laterSurroundings, "against"),
 	rules: checkSurroundings,
 }
 
