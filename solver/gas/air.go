@@ -38,21 +38,35 @@ type Space struct{ Inner, Outer float64 }
 // Free returns the space within the outline.
 func (e *Enclosure) Free() Space {
 	s := 0.0
-	for _, d := range e.discs {
-		s += 4 * d.R * d.R
+	for i := range e.discs {
+		if d := &e.discs[i]; d.Rim != nil {
+			area, _ := within(d.Rim)
+			s += 4 / math.Pi * area
+		} else {
+			s += 4 * d.R * d.R
+		}
 	}
 	outer := 2 * e.out.R
 	if outer == 0 {
-		twice, around := 0.0, 0.0 // hydraulic diameter: 4 area / perimeter
-		for _, g := range e.out.Segments {
-			twice += real(g.A)*imag(g.B) - imag(g.A)*real(g.B)
-			around += size(g.B - g.A)
-		}
-		if around > 0 {
-			outer = 2 * twice / around
+		if area, around := within(e.out.Segments); around > 0 {
+			outer = 4 * area / around // hydraulic diameter
 		}
 	}
 	return Space{math.Sqrt(s), outer}
+}
+
+// within returns the area within patches and their length.
+func within(patches []Segment) (area, around float64) {
+	for k := range patches {
+		s := &patches[k]
+		area += (real(s.A)*imag(s.B) - imag(s.A)*real(s.B)) / 2
+		p := newRail(s, true)
+		around += p.length
+		if s.R > 0 {
+			area += s.R * s.R / 2 * (2*p.arc - math.Sin(2*p.arc))
+		}
+	}
+	return area, around
 }
 
 // Stir sets the air node for patches at temperatures t (K) at the pressure p (Pa). The heat that convection adds to conduction goes between each free

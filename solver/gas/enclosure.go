@@ -6,21 +6,33 @@ import (
 )
 
 // Disc is a round surface with centre C and radius R. Its patches lie between Cuts, angles (rad) that rise by at most 2π in all; what they
-// leave out hides what is behind it and is no surface.
+// leave out hides what is behind it and is no surface. With a Rim it is a convex surface of any form.
 type Disc struct {
 	C     complex128
 	R     float64
 	Cuts  []float64
-	Blank []bool // patches between cuts that are no surface and see nothing either; nil: none
+	Blank []bool    // patches between cuts that are no surface and see nothing either; nil: none
+	Rim   []Segment // patches about C, counterclockwise, each from the end of the one before, within R of C; Cuts are not read
 }
 
 // blank tells whether patch k is none.
 func (d *Disc) blank(k int) bool { return k < len(d.Blank) && d.Blank[k] }
 
-// Segment is a patch of an outline.
-type Segment struct{ A, B complex128 }
+// patches is how many the disc has.
+func (d *Disc) patches() int {
+	if d.Rim != nil {
+		return len(d.Rim)
+	}
+	return max(0, len(d.Cuts)-1)
+}
 
-// Outline encloses the discs. Its patches stand counterclockwise, straight, or as arcs of radius R about the origin if R > 0. Together
+// Segment is a patch of an outline or a rim: straight, or an arc of radius R about Centre.
+type Segment struct {
+	A, B, Centre complex128
+	R            float64
+}
+
+// Outline encloses the discs. Its patches stand counterclockwise, straight or curved; all are arcs of radius R about the origin if R > 0. Together
 // they bound a convex space; where one does not begin at the end of the one before, discs must fill the gap.
 type Outline struct {
 	R        float64
@@ -34,7 +46,8 @@ type Enclosure struct {
 	points int
 	first  []int        // patch of each disc, then of the outline, then their number
 	ends   []complex128 // cuts of all discs as points
-	endOf  []int        // where each disc's begin
+	endOf  []int        // where each disc's begin, and their number
+	bodies []*body      // of discs with a rim, nil of others
 	gap    []bool       // a segment does not begin where the one before ends
 
 	area []float64
@@ -54,11 +67,15 @@ type sight struct {
 func NewEnclosure(discs []Disc, out Outline, points, threads int, stop func() bool) *Enclosure {
 	e := &Enclosure{discs: append([]Disc(nil), discs...), out: out, points: min(max(points, 1), len(nodes))}
 	n, m := 0, 0
-	for _, d := range discs {
+	for i := range discs {
+		d := &discs[i]
 		e.first, e.endOf = append(e.first, n), append(e.endOf, m)
-		n += max(0, len(d.Cuts)-1)
-		m += len(d.Cuts)
+		n += d.patches()
+		if m += len(d.Cuts); d.Rim != nil {
+			m += len(d.Rim) - len(d.Cuts)
+		}
 	}
+	e.bodies = make([]*body, len(discs))
 	e.first = append(e.first, n, n+len(out.Segments))
 	n += len(out.Segments)
 	e.endOf = append(e.endOf, m)
@@ -84,6 +101,10 @@ func NewEnclosure(discs []Disc, out Outline, points, threads int, stop func() bo
 // place works out the ends and areas of a disc's patches.
 func (e *Enclosure) place(i int) {
 	d := &e.discs[i]
+	if d.Rim != nil {
+		e.placeRim(i)
+		return
+	}
 	for k, t := range d.Cuts {
 		s, c := math.Sincos(t)
 		e.ends[e.endOf[i]+k] = d.C + complex(d.R*c, d.R*s)
@@ -93,6 +114,9 @@ func (e *Enclosure) place(i int) {
 	}
 }
 
+// endsOf are the ends of disc i's patches.
+func (e *Enclosure) endsOf(i int) []complex128 { return e.ends[e.endOf[i]:e.endOf[i+1]] }
+
 // Len is the number of patches.
 func (e *Enclosure) Len() int { return len(e.area) }
 
@@ -101,6 +125,15 @@ func (e *Enclosure) Patches(i int) (from, to int) { return e.first[i], e.first[i
 
 // Area of a patch, m² per metre of run.
 func (e *Enclosure) Area(k int) float64 { return e.area[k] }
+
+// Seen is the share of all round it that patch k finds before view factors are made complete: 1 where surfaces close up.
+func (e *Enclosure) Seen(k int) float64 {
+	sum := 0.0
+	for _, s := range e.raw[k] {
+		sum += s.f
+	}
+	return sum
+}
 
 // Path is the mean free path over a patch, m: the mean distance of what it sees, each by its view factor.
 func (e *Enclosure) Path(k int) float64 { return e.path[k] }
@@ -179,7 +212,7 @@ func (e *Enclosure) Alike(discs []Disc, out Outline, points int) bool {
 		return false
 	}
 	for i := range discs {
-		if o := &e.discs[i]; o.R != discs[i].R || !slices.Equal(o.Cuts, discs[i].Cuts) || !slices.Equal(o.Blank, discs[i].Blank) {
+		if o := &e.discs[i]; o.R != discs[i].R || !slices.Equal(o.Cuts, discs[i].Cuts) || !slices.Equal(o.Blank, discs[i].Blank) || !slices.Equal(o.Rim, discs[i].Rim) {
 			return false
 		}
 	}

@@ -134,7 +134,12 @@ func (y *eye) reach(e *Enclosure) float64 {
 		if a.disc < 0 {
 			return math.Inf(1)
 		}
-		far = math.Max(far, size(e.discs[a.disc].C-y.at))
+		d := &e.discs[a.disc]
+		r := size(d.C - y.at)
+		if d.Rim != nil {
+			r += d.R
+		}
+		far = math.Max(far, r)
 	}
 	return far
 }
@@ -142,7 +147,12 @@ func (y *eye) reach(e *Enclosure) float64 {
 // insert puts a disc with centre v (normal, tangent) among the arcs. Of two discs that do not overlap the same one is in front in every
 // direction that they share, so that one look per arc decides.
 func (y *eye) insert(e *Enclosure, d *Disc, v complex128, disc int32) {
-	lo, hi := extent(v, d.R)
+	lo, hi := 0.0, 0.0
+	if b := e.bodies[disc]; b != nil {
+		lo, hi = b.extent(y)
+	} else {
+		lo, hi = extent(v, d.R)
+	}
 	if hi-lo <= sliver {
 		return
 	}
@@ -150,7 +160,7 @@ func (y *eye) insert(e *Enclosure, d *Disc, v complex128, disc int32) {
 	changed := false
 	for _, a := range y.arcs {
 		s0, s1 := math.Max(a.s0, lo), math.Min(a.s1, hi)
-		if s1-s0 <= sliver || a.disc >= 0 && !nearer(v, d.R, (e.discs[a.disc].C-y.at)*y.turn, e.discs[a.disc].R, (s0+s1)/2) {
+		if s1-s0 <= sliver || a.disc >= 0 && !y.nearer(e, disc, a.disc, (s0+s1)/2) {
 			y.next = append(y.next, a)
 			continue
 		}
@@ -201,10 +211,19 @@ func extent(v complex128, r float64) (lo, hi float64) {
 	return lo, hi
 }
 
-// nearer tells whether disc v, r is met before disc w, q in direction s.
-func nearer(v complex128, r float64, w complex128, q, s float64) bool {
-	c := math.Sqrt(math.Max(0, 1-s*s))
-	return depth(v, r, c, s) < depth(w, q, c, s)
+// nearer tells whether disc i is met before disc j in direction s.
+func (y *eye) nearer(e *Enclosure, i, j int32, s float64) bool {
+	c := cosine(s)
+	return y.depth(e, i, c, s) < y.depth(e, j, c, s)
+}
+
+// depth is the distance at which a ray meets disc i.
+func (y *eye) depth(e *Enclosure, i int32, c, s float64) float64 {
+	d := &e.discs[i]
+	if b := e.bodies[i]; b != nil {
+		return b.depth(y, c, s, size(d.C-y.at))
+	}
+	return depth((d.C-y.at)*y.turn, d.R, c, s)
 }
 
 // depth is the distance at which a ray meets a disc.

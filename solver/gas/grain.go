@@ -11,7 +11,7 @@ import (
 type Grain struct {
 	PerTurn float64 // on a disc
 	Turn    float64 // on an outline
-	Discs   []Disc  // Cuts are not needed
+	Discs   []Disc  // Cuts are not needed; strokes do for the patches of a Rim
 }
 
 // finest is the shortest patch as a share of the usual one.
@@ -22,6 +22,10 @@ func (g *Grain) Longest(z complex128, usual float64, skip int) float64 {
 	l := usual
 	for j := range g.Discs {
 		d := &g.Discs[j]
+		if d.Rim != nil && j != skip {
+			l = math.Min(l, d.beside(z, l))
+			continue
+		}
 		if j == skip || d.R/2 >= l {
 			continue
 		}
@@ -30,6 +34,17 @@ func (g *Grain) Longest(z complex128, usual float64, skip int) float64 {
 		}
 	}
 	return math.Max(l, finest*usual)
+}
+
+// beside is what a rim allows: about half of its half thickness and how far off it is.
+func (d *Disc) beside(z complex128, most float64) float64 {
+	v := z - d.C
+	if size(v)-d.R > 2*most {
+		return most
+	}
+	area, around := within(d.Rim)
+	b := body{strokes: d.Rim}
+	return (area/around + size(b.nearest(v)-v)) / 2
 }
 
 // Cuts divides disc i.
@@ -102,7 +117,7 @@ func Ring(r float64, cuts []float64) Outline {
 		if k == len(o.Segments)-1 {
 			next = first
 		}
-		o.Segments[k] = Segment{last, next}
+		o.Segments[k] = Segment{A: last, B: next}
 		last = next
 	}
 	return o

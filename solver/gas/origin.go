@@ -40,6 +40,10 @@ func (e *Enclosure) lookFrom(discs []int, threads int, stop func() bool) bool {
 
 func (e *Enclosure) lookFromDisc(y *eye, i int) {
 	d := &e.discs[i]
+	if b := e.bodies[i]; b != nil {
+		e.lookFromRim(y, i, b.rim)
+		return
+	}
 	if len(d.Cuts) < 2 {
 		return
 	}
@@ -104,8 +108,12 @@ func (e *Enclosure) stops(y *eye, i int) []float64 {
 			break
 		}
 		j := int(o.disc)
-		for _, z := range e.ends[e.endOf[j]:][:len(e.discs[j].Cuts)] {
+		for _, z := range e.endsOf(j) {
 			add(z)
+		}
+		if b := e.bodies[j]; b != nil {
+			add(b.nearest(d.C))
+			continue
 		}
 		add(e.discs[j].C + scale(-e.discs[j].R/size(e.discs[j].C-d.C), e.discs[j].C-d.C))
 	}
@@ -119,78 +127,41 @@ func (e *Enclosure) stops(y *eye, i int) []float64 {
 func (e *Enclosure) lookFromOutline(y *eye) {
 	y.queue(e, -1, 0, 0)
 	from, _ := e.Patches(len(e.discs))
-	for k, s := range e.out.Segments {
+	for k := range e.out.Segments {
+		s := e.out.Segments[k]
+		if e.out.R > 0 {
+			s.R, s.Centre = e.out.R, 0
+		}
+		p := newRail(&s, true)
+		e.area[from+k] = p.length
 		y.open(e)
-		mid, half := scale(0.5, s.A+s.B), scale(0.5, s.B-s.A)
-		length := 2 * size(half)
-		p := rail{mid: mid, half: half, inward: scale(2/length, complex(-imag(half), real(half)))}
-		if p.r = e.out.R; p.r > 0 {
-			p.arc = math.Asin(math.Min(1, length/2/p.r))
-			length = 2 * p.arc * p.r
-		}
-		e.area[from+k] = length
-		stops := e.stopsOn(&p, length)
-		for a := -1.0; a < 1; {
-			var m float64
-			m, stops = upTo(stops, a, 1)
-			weight := (m - a) / 2
-			for _, g := range e.rule(weight) {
-				at, normal := p.at((a+m)/2 + (m-a)/2*g[0])
-				y.look(e, at, normal, g[1]*weight, k)
-			}
-			a = m
-		}
+		e.lookAlong(y, &p, -1, k)
 		y.close(e, from+k)
 	}
 }
 
-// rail is a patch of the outline, from −1 to 1.
-type rail struct {
-	mid, half, inward complex128
-	r, arc            float64 // of an arc: radius, half its angle
+// lookFromRim lets disc i look, whose patches are rim.
+func (e *Enclosure) lookFromRim(y *eye, i int, rim []Segment) {
+	y.queue(e, i, e.discs[i].C, e.discs[i].R)
+	for k := range rim {
+		p := newRail(&rim[k], false)
+		y.open(e)
+		e.lookAlong(y, &p, i, -1)
+		y.close(e, e.first[i]+k)
+	}
 }
 
-// at returns a point of the patch and its inward normal.
-func (p *rail) at(t float64) (z, normal complex128) {
-	if p.arc == 0 {
-		return p.mid + scale(t, p.half), p.inward
+// lookAlong looks from the Gauss points of a patch of disc i or, with i = −1, patch edge of the outline.
+func (e *Enclosure) lookAlong(y *eye, p *rail, i, edge int) {
+	stops := e.stopsOn(p, i)
+	for a := -1.0; a < 1; {
+		var m float64
+		m, stops = upTo(stops, a, 1)
+		weight := (m - a) / 2
+		for _, g := range e.rule(weight) {
+			at, normal := p.at((a+m)/2 + (m-a)/2*g[0])
+			y.look(e, at, normal, g[1]*weight, edge)
+		}
+		a = m
 	}
-	sin, cos := math.Sincos(p.arc * t)
-	normal = p.inward * complex(cos, sin)
-	return scale(-p.r, normal), normal
-}
-
-// stopsOn are the places on a patch of the outline, −1 to 1, at which it is divided besides.
-func (e *Enclosure) stopsOn(p *rail, length float64) []float64 {
-	var at []float64
-	add := func(z complex128) {
-		v := z - p.mid
-		if p.arc > 0 {
-			if t := (p.r - size(z)); t < closeBy*length {
-				w := -z * complex(real(p.inward), -imag(p.inward))
-				at = append(at, math.Atan2(imag(w), real(w))/p.arc)
-			}
-			return
-		}
-		w := v * complex(real(p.half), -imag(p.half))
-		if imag(w) < closeBy*length*length/2 {
-			at = append(at, 4*real(w)/(length*length))
-		}
-	}
-	for j := range e.discs {
-		d := &e.discs[j]
-		if size(d.C-p.mid) > d.R+length {
-			continue
-		}
-		for _, z := range e.ends[e.endOf[j]:][:len(d.Cuts)] {
-			add(z)
-		}
-		if p.arc > 0 {
-			add(scale(1+d.R/math.Max(size(d.C), 1e-300), d.C))
-		} else {
-			add(d.C - scale(d.R, p.inward))
-		}
-	}
-	slices.Sort(at)
-	return at
 }

@@ -9,6 +9,10 @@ import (
 func (y *eye) onDisc(e *Enclosure, a arc, weight float64) {
 	i := int(a.disc)
 	d := &e.discs[i]
+	if b := e.bodies[i]; b != nil {
+		b.share(y, a, e.first[i], weight)
+		return
+	}
 	n := len(d.Cuts) - 1
 	if n < 1 {
 		return
@@ -17,7 +21,7 @@ func (y *eye) onDisc(e *Enclosure, a arc, weight float64) {
 	c0, c1 := cosine(a.s0), cosine(a.s1)
 	r, r1 := depth(v, d.R, c0, a.s0), depth(v, d.R, c1, a.s1)
 	k := d.patchAt((complex(r*c0, r*a.s0) - v) * complex(real(y.turn), -imag(y.turn)))
-	ends := e.ends[e.endOf[i]:][:n+1]
+	ends := e.endsOf(i)
 	s := a.s0
 	for range n + 2 {
 		end := ends[k]
@@ -69,10 +73,10 @@ func (y *eye) onOutline(e *Enclosure, a arc, weight float64) {
 		return
 	}
 	u := complex(cosine(a.s0), a.s0)
-	k := y.edge
+	k, behind := y.edge, y.behind(e)
 	for range n { // to the first patch that ends beyond the direction s0
 		w := (segments[k].B - y.at) * y.turn
-		if real(u)*imag(w)-imag(u)*real(w) > 0 || real(w) < 0 && imag(w) > 0 {
+		if real(u)*imag(w)-imag(u)*real(w) > 0 || real(w) < 0 && imag(w) > 0 || k == y.own && a.s0 >= behind {
 			break
 		}
 		k = next(k, n)
@@ -93,6 +97,9 @@ func (y *eye) onOutline(e *Enclosure, a arc, weight float64) {
 		} else if imag(w) < 0 {
 			se = -1
 		}
+		if k == y.own && s >= behind {
+			l, se = 0, 1
+		}
 		if r < 0 {
 			r = l
 		}
@@ -105,6 +112,15 @@ func (y *eye) onOutline(e *Enclosure, a arc, weight float64) {
 		k = next(k, n)
 	}
 	y.edge = k
+}
+
+// behind is the direction from which the eye sees the patch that it lies on once more, beyond 1 if that is straight.
+func (y *eye) behind(e *Enclosure) float64 {
+	if y.own < 0 || e.out.R == 0 && e.out.Segments[y.own].R == 0 {
+		return 2
+	}
+	w := (e.out.Segments[y.own].A - y.at) * y.turn
+	return imag(w) / size(w) * (1 - 1e-14)
 }
 
 func next(k, n int) int {
