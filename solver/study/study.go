@@ -94,6 +94,7 @@ func refused(problems []section.Problem) (out []section.Problem) {
 
 // each runs f for 0 … n−1 on all engines, worker w taking w, w + workers, …, so that what is warm does not depend on chance. It stops at the
 // first error of the lowest index.
+// nolint
 func (s *Study) each(ctx context.Context, n int, o Options, f func(e *rating.Engine, i int) error) error {
 	errs := make([]error, n)
 	var wait sync.WaitGroup
