@@ -23,6 +23,7 @@ type Result struct {
 	PartErrorK []float64
 	MetalGap   float64 // m: how far bare metal was held from bare metal that it touches; 0 where none does
 	Field      Field
+	Bodies     []*Result // of a Group: each member's own; nil else
 }
 
 // Field is the temperature anywhere in the section.
