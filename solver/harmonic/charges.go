@@ -73,12 +73,16 @@ func (c *Charges) write(i, j int) {
 // Flow is all that goes between discs, monopoles and circle at once. In: amplitudes X like the system's unknowns, monopoles Q in units of
 // 1/(2πk), and Omega, regular scaled amplitudes √n conj(B_n) from elsewhere, n = 1 … at most Top. Out: Y as of Apply, what comes in; Mean, the mean
 // temperature of each disc's rim, without what a wall adds to all; Alpha, the scaled amplitudes √n A_n that leave for the circle; Regular, what
-// comes back from it but for the images.
+// comes back from it but for the images. A circle's Mix also answers to Taken, scaled amplitudes that the circle takes up for itself, and to Through, the
+// sum of all that goes through it (units of 1/(2πk)); it sends Back, which Regular has in it, and Lift, a constant temperature, which Mean has not.
 type Flow struct {
 	X, Q           []float64
-	Omega          []complex128
+	Omega, Taken   []complex128
+	Through        float64
 	Y, Mean        []float64
 	Alpha, Regular []complex128
+	Back           []complex128
+	Lift           float64
 }
 
 // NewFlow makes room for the system's flows; Omega is left out.
@@ -86,7 +90,7 @@ func (c *Charges) NewFlow() *Flow {
 	n, top := len(c.s.discs), c.s.Top()
 	return &Flow{
 		X: make([]float64, c.s.Len()), Q: make([]float64, n), Y: make([]float64, c.s.Len()), Mean: make([]float64, n),
-		Alpha: make([]complex128, top), Regular: make([]complex128, top),
+		Alpha: make([]complex128, top), Regular: make([]complex128, top), Back: make([]complex128, top),
 	}
 }
 
@@ -146,6 +150,7 @@ func (c *Charges) reflect(f *Flow) {
 			f.Regular[n] += scale(g, f.Alpha[n])
 		}
 	}
+	s.mixFlow(f)
 	s.Spread(f.Y, f.Regular)
 	for i := range f.Mean {
 		sum := 0.0

@@ -7,11 +7,12 @@ import (
 
 // Circle is a round wall about the origin: inside radius R, reflection B_n = (RhoInf + Sigma[n-1]) conj(A_n), where A_n are the outgoing
 // and B_n the regular coefficients about the origin, both referred to R. RhoInf acts by images in closed form; Sigma, for
-// n = 1 … len(Sigma), as a short sum; the rest of Sigma is nought. Logarithms are relative to R.
+// n = 1 … len(Sigma), as a short sum; the rest of Sigma is nought. Mix, if any, couples harmonics. Logarithms are relative to R.
 type Circle struct {
 	R      float64
 	RhoInf float64
 	Sigma  []float64
+	Mix    *Mix
 }
 
 // portCut drops entries of the maps from discs to the circle's own harmonics.
@@ -93,8 +94,12 @@ func (b *block) applyTo(xi, xj, yi, yj []float64, k int) {
 	b.apply8(xi, xj, yi, yj)
 }
 
-// reflect turns outgoing amplitudes of the circle into what Sigma sends back, for k vectors at once.
+// reflect turns outgoing amplitudes of the circle into what Sigma and Mix send back, for k vectors at once.
 func (s *System) reflect(alpha []float64, k int) {
+	mix := s.circle.Mix
+	if mix != nil {
+		mix.hear(s.feel[:k*len(mix.W0)], alpha, k)
+	}
 	for n := range s.weight {
 		f := 0.0
 		if n < len(s.circle.Sigma) {
@@ -103,6 +108,9 @@ func (s *System) reflect(alpha []float64, k int) {
 		for v := range alpha[2*n*k : (2*n+2)*k] {
 			alpha[2*n*k+v] *= f
 		}
+	}
+	if mix != nil {
+		mix.tell(alpha, s.feel[:k*len(mix.W0)], k)
 	}
 }
 

@@ -11,17 +11,50 @@ func (s *System) Mono(y, q []float64) {
 	for i := range s.discs {
 		s.monoAt(i, q, y[s.off[i]:s.off[i+1]])
 	}
-	if s.circle == nil || len(s.circle.Sigma) == 0 {
+	if s.circle.mute() {
 		return
 	}
-	alpha := make([]complex128, len(s.circle.Sigma))
+	s.Spread(y, s.monoBack(q))
+}
+
+// monoBack returns what Sigma and Mix send back of monopoles q.
+func (s *System) monoBack(q []float64) []complex128 {
+	m := s.circle.Mix
+	alpha := make([]complex128, max(len(s.circle.Sigma), m.Harmonics()))
 	for j, f := range q {
 		s.chargeOut(j, f, alpha)
 	}
-	for n, f := range s.circle.Sigma {
+	for n := range alpha {
+		f := 0.0
+		if n < len(s.circle.Sigma) {
+			f = s.circle.Sigma[n]
+		}
 		alpha[n] = scale(f, alpha[n])
 	}
-	s.Spread(y, alpha)
+	if m == nil {
+		return alpha
+	}
+	for r, u := range s.leans(q) {
+		for n := range m.Harmonics() {
+			alpha[n] += complex(u*m.W[r][2*n], u*m.W[r][2*n+1])
+		}
+	}
+	return alpha
+}
+
+// leans is what monopoles q make the mix feel, times its sign.
+func (s *System) leans(q []float64) []float64 {
+	m := s.circle.Mix
+	u := make([]float64, len(m.W0))
+	for j, f := range q {
+		if f == 0 {
+			continue
+		}
+		for r, v := range s.lean[j] {
+			u[r] += m.Sign * f * v
+		}
+	}
+	return u
 }
 
 // monoAt adds the direct and image parts at disc i.
@@ -105,10 +138,17 @@ func (s *System) MonoDot(out, x []float64) {
 			}
 		}
 	}
-	if s.circle == nil || len(s.circle.Sigma) == 0 {
+	if s.circle.mute() {
 		return
 	}
 	s.gather(s.alpha[:2*len(s.weight)], x, 1)
+	if m := s.circle.Mix; m != nil {
+		u := s.feel[:len(m.W0)]
+		m.hear(u, s.alpha, 1)
+		for j := range out {
+			out[j] += Dot(u, s.lean[j])
+		}
+	}
 	for j := range out {
 		z := scale(1/s.circle.R, s.discs[j].C)
 		p := complex(1, 0)
@@ -146,6 +186,9 @@ func (s *System) Log(i, j int) float64 {
 		p *= z
 		g += f / float64(n+1) * real(p)
 	}
+	if m := s.circle.Mix; m != nil {
+		g += m.Sign * Dot(s.lean[i], s.lean[j])
+	}
 	return g
 }
 
@@ -169,8 +212,14 @@ func (s *System) near(i, j int) float64 {
 // Logs sets out_i = Σ_j Log(i, j) q_j.
 func (s *System) Logs(out, q []float64) {
 	s.nearLogs(out, q)
-	if s.circle == nil || len(s.circle.Sigma) == 0 {
+	if s.circle.mute() {
 		return
+	}
+	if s.circle.Mix != nil {
+		u := s.leans(q)
+		for i := range out {
+			out[i] += Dot(u, s.lean[i])
+		}
 	}
 	alpha := make([]complex128, len(s.circle.Sigma))
 	for j, f := range q {

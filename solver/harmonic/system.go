@@ -28,8 +28,10 @@ type System struct {
 	logs   []float64 // the same of logarithms between monopoles, see near
 	ports  []block
 	work   builder
-	alpha  []float64 // room for the circle's amplitudes, many vectors
-	idle   []float64 // noughts that stand for what a product does not need
+	alpha  []float64   // room for the circle's amplitudes, many vectors
+	feel   []float64   // room for what its mix feels, many vectors
+	lean   [][]float64 // per disc, what its unit monopole makes the mix feel
+	idle   []float64   // noughts that stand for what a product does not need
 
 	parts []int       // discs whose columns different goroutines multiply with: from parts[p] to parts[p+1]
 	sums  [][]float64 // what all but the first of them bring
@@ -37,12 +39,15 @@ type System struct {
 
 // NewSystem lays out the discs; Build writes their blocks. A nil circle stands for a medium without end. The discs are mapped to the
 // circle's harmonics n ≤ len(weight), weight[n-1] being how much what goes to or comes from that harmonic counts, besides what Sigma
-// reflects.
+// and Mix reflect.
 func NewSystem(discs []Disc, circle *Circle, weight []float64, cut float64) *System {
 	s := &System{discs: discs, circle: circle, cut: cut}
 	if circle != nil {
-		s.weight = make([]float64, max(len(weight), len(circle.Sigma)))
+		s.weight = make([]float64, max(len(weight), len(circle.Sigma), circle.Mix.Harmonics()))
 		copy(s.weight, weight)
+		for n := range circle.Mix.Harmonics() {
+			s.weight[n] = math.Max(s.weight[n], math.Sqrt(circle.Mix.Weight(n+1)))
+		}
 		for n, f := range circle.Sigma {
 			s.weight[n] = math.Max(s.weight[n], math.Sqrt(math.Abs(f)))
 		}
@@ -52,7 +57,15 @@ func NewSystem(discs []Disc, circle *Circle, weight []float64, cut float64) *Sys
 	s.ports = make([]block, len(discs))
 	s.alpha = make([]float64, 2*many*len(s.weight))
 	s.layout()
+	s.room()
 	return s
+}
+
+// room makes room for what the circle's mix feels.
+func (s *System) room() {
+	if s.circle != nil && s.circle.Mix != nil {
+		s.feel = make([]float64, many*len(s.circle.Mix.W0))
+	}
 }
 
 func (s *System) layout() {
@@ -101,6 +114,7 @@ func (s *System) Build(threads int, stop func() bool) bool {
 	}
 	work(&s.work)
 	all.Wait()
+	s.leanAll()
 	s.share(threads)
 	return !stopped.Load()
 }
@@ -132,6 +146,7 @@ func (s *System) Put(i int, d Disc) {
 	for j := i + 1; j < len(s.discs); j++ {
 		s.couple(&s.work, i, j)
 	}
+	s.leanAll()
 }
 
 // Entries returns the number of stored reals.
@@ -143,8 +158,12 @@ func (s *System) Entries() int {
 	return n
 }
 
-// Reflect replaces the circle by one that differs in Sigma alone, no longer than Top.
-func (s *System) Reflect(c *Circle) { s.circle = c }
+// Reflect replaces the circle by one that differs in Sigma and Mix alone, no longer than Top.
+func (s *System) Reflect(c *Circle) {
+	s.circle = c
+	s.room()
+	s.leanAll()
+}
 
 // Fork returns a system with the same blocks and work space of its own, so that both can multiply at the same time. Neither may be
 // written to meanwhile.
@@ -152,6 +171,7 @@ func (s *System) Fork() *System {
 	f := *s
 	f.alpha, f.idle = make([]float64, len(s.alpha)), make([]float64, len(s.idle))
 	f.work, f.parts = builder{}, nil
+	f.room()
 	return &f
 }
 
@@ -171,7 +191,7 @@ func (s *System) apply(y, x []float64, k int) {
 	} else {
 		s.columns(y, x, 0, len(s.discs), k)
 	}
-	if s.circle == nil || len(s.circle.Sigma) == 0 {
+	if s.circle.mute() {
 		return
 	}
 	alpha := s.alpha[:2*k*len(s.weight)]
