@@ -30,6 +30,7 @@ func TestFlow(t *testing.T) {
 				c.Follow()
 			}
 			checkFlow(t, r, s, c)
+			checkFlows(t, r, s, c)
 		}
 	}
 }
@@ -87,6 +88,50 @@ func checkFlow(t *testing.T, r *rand.Rand, s *System, c *Charges) {
 		}
 		if d := want + f.Omega[n] - f.Regular[n]; size(d) > 1e-10 {
 			t.Errorf("regular %d is off by %v", n, d)
+		}
+	}
+}
+
+// Many flows at once are what each of them is alone.
+func checkFlows(t *testing.T, r *rand.Rand, s *System, c *Charges) {
+	t.Helper()
+	var flows []*Flow
+	for range 5 {
+		f := c.NewFlow()
+		for i := range f.X {
+			f.X[i] = r.NormFloat64()
+		}
+		for j := range f.Q {
+			f.Q[j] = r.NormFloat64()
+		}
+		for range s.Top() {
+			f.Omega = append(f.Omega, complex(r.NormFloat64(), r.NormFloat64()))
+		}
+		flows = append(flows, f)
+	}
+	c.SendMany(flows)
+	c.ReceiveMany(flows)
+	for _, f := range flows {
+		g := c.NewFlow()
+		copy(g.X, f.X)
+		copy(g.Q, f.Q)
+		g.Omega = f.Omega
+		c.Send(g)
+		c.Receive(g)
+		for i := range g.Y {
+			if math.Abs(f.Y[i]-g.Y[i]) > 1e-12 {
+				t.Fatalf("amplitude %d: %g, want %g", i, f.Y[i], g.Y[i])
+			}
+		}
+		for i := range g.Mean {
+			if math.Abs(f.Mean[i]-g.Mean[i]) > 1e-12 {
+				t.Errorf("mean %d: %g, want %g", i, f.Mean[i], g.Mean[i])
+			}
+		}
+		for n := range g.Alpha {
+			if size(f.Alpha[n]-g.Alpha[n]) > 1e-12 || size(f.Regular[n]-g.Regular[n]) > 1e-12 {
+				t.Errorf("the circle's harmonic %d: %g and %g, want %g and %g", n+1, f.Alpha[n], f.Regular[n], g.Alpha[n], g.Regular[n])
+			}
 		}
 	}
 }
