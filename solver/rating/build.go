@@ -39,7 +39,7 @@ func (a spaces) k(i int, m medium) float64 {
 }
 
 // build writes the heat problem of a scene at given temperatures of its air and, where they are free, given films. Temperatures are °C throughout.
-func (s *scene) build(air spaces, f *films) heat.Problem {
+func (s *scene) build(air spaces, f films) heat.Problem {
 	h := &s.holder
 	p := heat.Problem{
 		Parts:     make([]heat.Part, len(s.parts)),

@@ -19,8 +19,8 @@ type Engine struct {
 	grade   heat.Accuracy
 	temps   []float64 // °C per part, of the last answer
 	air     spaces
-	out     outside    // of the last answer, with the heat flows of its faces
-	flux    [4]float64 // W/m²
+	out     outside   // of the last answer, with the heat flows of its faces
+	flux    []float64 // W/m²
 }
 
 // NewEngine returns an engine that looks things up in cat.

@@ -2,19 +2,25 @@ package rating
 
 import (
 	"math"
+	"slices"
 
 	"packrise/solver/film"
 	"packrise/solver/heat"
 )
 
 // like tells whether two outsides differ by their sizes alone, so that flows per area of one are a good guess for the other.
-func (o outside) like(p *outside) bool {
-	o.wide = p.wide
-	for i := range o.faces {
-		f, g := &o.faces[i], &p.faces[i]
-		f.DiameterM, f.WidthM, f.HeightM = g.DiameterM, g.WidthM, g.HeightM
+func (o *outside) like(p *outside) bool {
+	if o.n != p.n || o.free != p.free || o.air != p.air || o.coat != p.coat || !slices.Equal(o.open, p.open) {
+		return false
 	}
-	return o == *p
+	for i, f := range o.faces {
+		g := &p.faces[i]
+		f.DiameterM, f.WidthM, f.HeightM = g.DiameterM, g.WidthM, g.HeightM
+		if f != *g {
+			return false
+		}
+	}
+	return true
 }
 
 // facet is the film of one face at present.
@@ -28,11 +34,12 @@ type facet struct {
 const leastFilm = 1e-3
 
 // films are those of all faces for the heat flows that they give off, W/m².
-type films [4]facet
+type films []facet
 
 // at returns the films for given flows. A face of fixed flow has one temperature whatever the section behind it is, so a guess of the
 // flow is worth more than one of the temperature.
-func (o *outside) at(flux [4]float64) (f films) {
+func (o *outside) at(flux []float64) films {
+	f := make(films, o.n)
 	for i := range o.n {
 		if o.open[i] {
 			_, a := o.air.Surface(o.faces[i], flux[i])
@@ -43,7 +50,8 @@ func (o *outside) at(flux [4]float64) (f films) {
 }
 
 // flux reads the heat flows of the faces off an answer.
-func (o *outside) flux(r *heat.Result) (q [4]float64) {
+func (o *outside) flux(r *heat.Result) []float64 {
+	q := make([]float64, o.n)
 	if o.n == 1 {
 		q[0] = r.Released / o.wide[0]
 		return q
@@ -55,7 +63,8 @@ func (o *outside) flux(r *heat.Result) (q [4]float64) {
 }
 
 // guess spreads a whole heat (W/m) evenly.
-func (o *outside) guess(heat float64) (q [4]float64) {
+func (o *outside) guess(heat float64) []float64 {
+	q := make([]float64, o.n)
 	around := 0.0
 	for i := range o.n {
 		if o.open[i] {
@@ -71,7 +80,7 @@ func (o *outside) guess(heat float64) (q [4]float64) {
 }
 
 // miss is the largest difference (K) between the temperature of a face in an answer, whose flows are q, and that at which its film was taken.
-func (o *outside) miss(f *films, q [4]float64) (worst float64) {
+func (o *outside) miss(f films, q []float64) (worst float64) {
 	for i := range o.n {
 		if !o.open[i] {
 			continue
@@ -83,7 +92,7 @@ func (o *outside) miss(f *films, q [4]float64) (worst float64) {
 }
 
 // coefficient is the mean film of the open faces, W/m²K; ok is false if there is none.
-func (o *outside) coefficient(f *films) (h float64, ok bool) {
+func (o *outside) coefficient(f films) (h float64, ok bool) {
 	sum, around := 0.0, 0.0
 	for i := range o.n {
 		if o.open[i] {
@@ -95,7 +104,7 @@ func (o *outside) coefficient(f *films) (h float64, ok bool) {
 }
 
 // wall puts the films on a heat problem's wall.
-func (o *outside) wall(w *heat.Wall, f *films) {
+func (o *outside) wall(w *heat.Wall, f films) {
 	if o.n == 1 {
 		w.Film, w.Ambient = f[0].film, f[0].toward
 		return

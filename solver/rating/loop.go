@@ -36,7 +36,7 @@ type loop struct {
 // around is what the conductors lie in: both conduct better the hotter they are.
 type around struct {
 	air  spaces
-	flux [4]float64 // W/m² of each face, that its film is taken at
+	flux []float64 // W/m² of each face, that its film is taken at
 }
 
 // answer runs the outer loop around the fixed point of the resistances.
@@ -98,7 +98,7 @@ func (l *loop) run(ctx context.Context) answered {
 // solve settles the resistances with the air and films at hand.
 func (l *loop) solve(ctx context.Context) answered {
 	f := l.s.out.at(l.flux)
-	l.e.prepare(l.s.build(l.air, &f), l.grade)
+	l.e.prepare(l.s.build(l.air, f), l.grade)
 	a := settle(ctx, l.e.model, l.s, l.temps, l.grade)
 	a.air, a.films = l.air, f
 	return a
@@ -114,7 +114,7 @@ func (l *loop) step(a *answered) (done bool) {
 	}
 	if l.s.out.free && !l.keep {
 		next.flux = l.s.out.flux(a.heat)
-		done = done && l.s.out.miss(&a.films, next.flux) <= filmTolerance(l.grade)
+		done = done && l.s.out.miss(a.films, next.flux) <= filmTolerance(l.grade)
 	}
 	if done {
 		return true
@@ -153,7 +153,7 @@ func (a *around) vector() []float64 {
 
 // with is the state of a vector.
 func (a *around) with(x []float64) around {
-	out := around{air: a.air.copy()}
+	out := around{air: a.air.copy(), flux: make([]float64, len(a.flux))}
 	for i := range out.flux {
 		out.flux[i] = x[i] * plainFilm
 	}
@@ -166,11 +166,16 @@ func (a *around) with(x []float64) around {
 // order lists the regions, so that vectors agree.
 func (a spaces) order() []int { return slices.Sorted(maps.Keys(a)) }
 
-func total(x [4]float64) float64 { return x[0] + x[1] + x[2] + x[3] }
+func total(x []float64) (sum float64) {
+	for _, v := range x {
+		sum += v
+	}
+	return sum
+}
 
 // between is half way.
 func (a *around) between(b *around) around {
-	m := around{air: a.air.copy()}
+	m := around{air: a.air.copy(), flux: make([]float64, len(a.flux))}
 	for i := range m.flux {
 		m.flux[i] = (a.flux[i] + b.flux[i]) / 2
 	}
@@ -224,7 +229,7 @@ func (l *loop) hotter() bool {
 	o := &l.s.out
 	ambient := l.s.doc.Surroundings.AmbientC.V
 	up := func(c float64) float64 { return ambient + 1.5*max(c-ambient, 10) }
-	l.air = l.air.copy()
+	l.air, l.flux = l.air.copy(), slices.Clone(l.flux)
 	hottest := math.Inf(-1)
 	for j, c := range l.air {
 		l.air[j] = up(c)
@@ -251,7 +256,7 @@ func (l *loop) critical(ctx context.Context, a answered) answered {
 	l.memory.forget()
 	for range loopRounds {
 		f := l.s.out.at(l.flux)
-		l.e.prepare(l.s.build(l.air, &f), l.grade)
+		l.e.prepare(l.s.build(l.air, f), l.grade)
 		w, _, status := writeOut(ctx, l.e.model, l.s)
 		if status != heat.Converged {
 			return answered{status: status}
@@ -263,7 +268,7 @@ func (l *loop) critical(ctx context.Context, a answered) answered {
 			return answered{status: r.Status}
 		}
 		flux := l.s.out.flux(r)
-		if l.s.out.miss(&f, flux) < 0.01 {
+		if l.s.out.miss(f, flux) < 0.01 {
 			break
 		}
 		l.follow(around{air: l.air, flux: flux})

@@ -10,13 +10,13 @@ import (
 	"packrise/solver/section"
 )
 
-// outside is what a scene gives its heat to. It is comparable: equal ones have equal films.
+// outside is what a scene gives its heat to.
 type outside struct {
 	free  bool // the film follows the surface's temperature; else scene.filmW counts
 	air   film.Outside
-	faces [4]film.Face // of a rectangle in heat's order of sides; else the first alone
-	wide  [4]float64   // m, around the section: what a face is of the perimeter
-	open  [4]bool      // faces that have a film
+	faces []film.Face // of a rectangle in heat's order of sides; else the first alone
+	wide  []float64   // m, around the section: what a face is of the perimeter
+	open  []bool      // faces that have a film
 	n     int
 	coat  coat
 }
@@ -47,14 +47,15 @@ func (r *resolver) outside() {
 	o.free, o.air, o.coat = true, r.weather(), r.coat()
 	h := &s.holder
 	if h.kind != section.Wireway {
-		o.n, o.open[0], o.wide[0] = 1, true, s.around()
+		o.face(1)
+		o.open[0], o.wide[0] = true, s.around()
 		d := o.wide[0] / math.Pi // a cylinder of the same circumference stands for what is not round
 		o.faces[0] = film.Face{Shape: film.Round, DiameterM: d, Emissivity: o.coat.emissivity, Absorptivity: o.coat.absorptivity}
 		r.deepEnough(s.outerRadius())
 		return
 	}
 	t := thickness(h.layers)
-	o.n = 4
+	o.face(4)
 	sides := s.doc.Holder.Sides
 	for i, of := range [4]section.Side{heat.Bottom: sides.Bottom, heat.Right: sides.Right, heat.Top: sides.Top, heat.Left: sides.Left} {
 		f := film.Face{Shape: film.Side, WidthM: h.w + 2*t, HeightM: h.h + 2*t, Emissivity: o.coat.emissivity, Absorptivity: o.coat.absorptivity}
@@ -68,6 +69,11 @@ func (r *resolver) outside() {
 		o.faces[i], o.open[i] = f, of.Kind == "" || of.Kind == section.SideOpen
 	}
 	r.deepEnough(h.h/2 + t)
+}
+
+// face makes room for n faces.
+func (o *outside) face(n int) {
+	o.n, o.faces, o.wide, o.open = n, make([]film.Face, n), make([]float64, n), make([]bool, n)
 }
 
 // deepEnough refuses a buried run that would stick out of the ground.

@@ -163,7 +163,7 @@ func (s *scene) touch() limit {
 func (s *scene) filmShown(a answered) (h section.Opt[float64]) {
 	switch {
 	case s.out.free && a.heat != nil && a.status != heat.ThermalRunaway:
-		h.V, h.OK = s.out.coefficient(&a.films)
+		h.V, h.OK = s.out.coefficient(a.films)
 	case !s.out.free && !math.IsInf(s.filmW, 0):
 		h = section.Some(s.filmW)
 	}
