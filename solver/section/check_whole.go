@@ -127,6 +127,9 @@ func checkLoad(r *report, l *Load, at path) {
 	case len(given) > 1 || l.CurrentA.OK && l.Unknown:
 		r.addWhole(at, "one-of", "it has both "+strings.Join(given, " and "), "keep one of them")
 	}
+	if l.StartingDuty && (l.Continuous || l.Motor) {
+		r.add(at.key("starting_duty"), "contradiction", "a load that runs only while a motor starts is neither a motor's own nor runs three hours", "keep one of starting_duty, motor and continuous")
+	}
 	if l.HeatWM.OK && l.FrequencyHz.OK {
 		r.add(at.key("frequency_hz"), "key-of-kind", "¤ belongs to a current, and this load is a fixed heat", "take it out")
 	}

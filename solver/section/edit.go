@@ -97,9 +97,9 @@ func Replace(d *Document, p Part) *Document {
 	return prune(out)
 }
 
-// RenamePart gives a part another id; the loads follow. It changes nothing where to is empty, holds a "/" or is taken.
+// RenamePart gives a part another id; loads, measurements and reasons follow. It changes nothing where to is empty, holds a "/" or is taken.
 func RenamePart(d *Document, id, to string) *Document {
-	if to == "" || strings.Contains(to, "/") || strings.TrimSpace(to) != to || Find(d, id[:strings.LastIndex(id, "/")+1]+to) != nil {
+	if !goodID(to) || Find(d, id[:strings.LastIndex(id, "/")+1]+to) != nil {
 		return d
 	}
 	out := change(d, id, func(p *Part) { p.ID = to })
@@ -111,17 +111,7 @@ func RenamePart(d *Document, id, to string) *Document {
 	for i := range before {
 		names[before[i].ID] = after[i].ID
 	}
-	return out.With(func(d *Document) {
-		d.Loads = mapped(d.Loads, func(l Load) Load {
-			l.Conductors = mapped(l.Conductors, func(c string) string {
-				if name, ok := names[c]; ok {
-					return name
-				}
-				return c
-			})
-			return l
-		})
-	})
+	return follow(out, names, nil)
 }
 
 // SetLimit sets the temperature limit of a part, or, not OK, leaves it to its wire type and layers.
@@ -147,8 +137,14 @@ func Duplicate(d *Document, id string) (out *Document, copyID string) {
 			}
 		}
 		if own != nil {
+			if rest, ok := strings.CutPrefix(l.Neutral, id+"/"); ok {
+				l.Neutral = c.ID + "/" + rest
+			} else if l.Neutral == id {
+				l.Neutral = c.ID
+			}
+			from := l.ID
 			l.ID, l.Conductors = freshLoadID(out, c.ID), own
-			out = out.With(func(d *Document) { d.Loads = append(slices.Clip(d.Loads), l) })
+			out = twin(out.With(func(d *Document) { d.Loads = append(slices.Clip(d.Loads), l) }), from, l.ID)
 		}
 	}
 	return out, c.ID

@@ -39,7 +39,7 @@ func Split(d *Document, conductor string) *Document {
 	}
 	own := *l
 	own.ID, own.Conductors = freshLoadID(d, conductor), []string{conductor}
-	return withLoads(unload(d, conductor), func(loads []Load) []Load { return append(loads, own) })
+	return twin(withLoads(unload(d, conductor), func(loads []Load) []Load { return append(loads, own) }), l.ID, own.ID)
 }
 
 // Unassign takes a conductor out of its load: it is then in none, which is not the same as idle.
@@ -50,11 +50,15 @@ func Unassign(d *Document, conductor string) *Document {
 	return unload(d, conductor)
 }
 
-// unload takes a conductor out of the loads and drops a load that ends up empty.
+// unload takes a conductor out of the loads and drops a load that ends up empty, with what is said about it.
 func unload(d *Document, conductor string) *Document {
-	return withLoads(d, func(loads []Load) []Load {
+	out := withLoads(d, func(loads []Load) []Load {
 		return keepConductors(loads, func(c string) bool { return c != conductor })
 	})
+	if len(out.Loads) == len(d.Loads) {
+		return out
+	}
+	return tidy(out)
 }
 
 func setLoad(d *Document, conductor string, set func(*Load)) *Document {
@@ -70,7 +74,11 @@ func setLoad(d *Document, conductor string, set func(*Load)) *Document {
 		if sameLoad(l, d.Loads[i]) {
 			return d
 		}
-		return withLoads(d, func(loads []Load) []Load { loads[i] = l; return loads })
+		out := withLoads(d, func(loads []Load) []Load { loads[i] = l; return loads })
+		if l.HeatWM.OK {
+			return fitStates(out)
+		}
+		return out
 	}
 	l := Load{ID: freshLoadID(d, conductor), Conductors: []string{conductor}}
 	set(&l)
@@ -119,20 +127,13 @@ func keepConductors(loads []Load, keep func(string) bool) []Load {
 	return out
 }
 
-// prune takes what is no conductor of the document out of its loads.
+// prune takes what is no conductor of the document out of its loads, and what points at parts and loads that are gone.
 func prune(d *Document) *Document {
 	there := map[string]bool{}
 	for _, p := range Unfold(d) {
 		there[p.ID] = true
 	}
-	for _, l := range d.Loads {
-		for _, c := range l.Conductors {
-			if !there[c] {
-				return withLoads(d, func(loads []Load) []Load {
-					return keepConductors(loads, func(c string) bool { return there[c] })
-				})
-			}
-		}
-	}
-	return d
+	return tidy(withLoads(d, func(loads []Load) []Load {
+		return keepConductors(loads, func(c string) bool { return there[c] })
+	}))
 }

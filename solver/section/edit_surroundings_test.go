@@ -12,6 +12,7 @@ func TestSurround(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		d := maker{t}.document()
 		d.Parts, d.Loads, d.Builds = nil, nil, nil
+		d = tidy(d)
 		kind := rapid.SampledFrom(kinds).Draw(t, "kind")
 		got := Surround(d, kind, func(s *Surroundings) {
 			s.FilmWM2K, s.AirSpeedMS, s.DepthM, s.SoilWMK = Opt[float64]{}, Opt[float64]{}, Opt[float64]{}, Opt[float64]{}

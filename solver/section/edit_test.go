@@ -19,7 +19,17 @@ func deep(t fataler, d *Document) *Document {
 		return b
 	})
 	c.Holder.Layers = mapped(d.Holder.Layers, id[Layer])
-	c.Loads = mapped(d.Loads, func(l Load) Load { l.Conductors = mapped(l.Conductors, id[string]); return l })
+	c.Loads = mapped(d.Loads, func(l Load) Load {
+		l.Conductors, l.NotWith = mapped(l.Conductors, id[string]), mapped(l.NotWith, id[string])
+		return l
+	})
+	c.Cases = mapped(d.Cases, func(c Case) Case {
+		c.Loads = mapped(c.Loads, id[CaseLoad])
+		c.Any = mapped(c.Any, func(a AnyOf) AnyOf { a.Of = mapped(a.Of, id[string]); return a })
+		return c
+	})
+	c.Measurements = mapped(d.Measurements, func(m Measurement) Measurement { m.Loads = mapped(m.Loads, id[CaseLoad]); return m })
+	c.Rules.Use, c.Rules.Files, c.Reasons = mapped(d.Rules.Use, id[string]), mapped(d.Rules.Files, id[string]), mapped(d.Reasons, id[Reason])
 	c.Materials = mapped(d.Materials, id[Material])
 	c.StockUsed = mapped(d.StockUsed, id[StockRow])
 	if s := exact(d, &c); s != "" {

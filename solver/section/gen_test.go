@@ -64,7 +64,11 @@ func (m maker) id(taken map[string]bool) string {
 
 func (m maker) layers() (out []Layer) {
 	for range rapid.IntRange(0, 3).Draw(m.t, "layers") {
-		out = append(out, Layer{Material: m.name(), ThicknessMM: m.num(0.01, 5)})
+		l := Layer{Material: m.name(), ThicknessMM: m.num(0.01, 5)}
+		if rapid.IntRange(0, 3).Draw(m.t, "screen") == 0 {
+			l.Screen = Screen{m.word([]string{Braid, Foil, Served, Tube, Armour}), m.opt(0.1, 0.8), m.word([]string{"", BondedNone, BondedOne, BondedBoth})}
+		}
+		out = append(out, l)
 	}
 	return out
 }
@@ -96,7 +100,10 @@ func (m maker) conductor() *Conductor {
 }
 
 func (m maker) part(id string, builds []string) Part {
-	p := Part{ID: id, LimitC: m.opt(-50, 250)}
+	p := Part{ID: id, LimitC: m.opt(-50, 250), Pinned: m.coin("pinned")}
+	if m.coin("group") {
+		p.Group = m.name()
+	}
 	if m.coin("placed") {
 		p.At = Some(Point{m.num(-50, 50), m.num(-50, 50)})
 	}
@@ -251,13 +258,16 @@ func (m maker) document() *Document {
 	if d.Holder.Kind == Wireway {
 		d.Surroundings.Against = nil
 	}
-	d.Holder.TouchLimitC = m.opt(30, 90)
+	d.Holder.TouchLimitC, d.Holder.LengthM = m.opt(30, 90), m.opt(0.1, 5)
 	n := 6
 	if d.Holder.Kind == NoHolder {
 		n = 1
 	}
 	d.Parts = m.parts(n, names)
 	d.Loads = m.loads(d)
+	if m.coin("ratings") {
+		m.ratings(d)
+	}
 	taken = map[string]bool{Air: true}
 	for range rapid.IntRange(0, 3).Draw(m.t, "materials") {
 		d.Materials = append(d.Materials, Material{m.id(taken), m.num(0.01, 400), m.opt(0.1, 5), m.opt(-50, 300), m.opt(0.01, 0.5), m.opt(0, 0.5), m.coin("gas"), m.text()})

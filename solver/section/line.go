@@ -10,7 +10,10 @@ import (
 )
 
 // rootKeys are the first words of keys that are counted from the top of a document rather than from a part.
-var rootKeys = []string{"surroundings", "holder", "parts", "builds", "loads", "materials", "stock_used"}
+var rootKeys = []string{
+	"surroundings", "holder", "parts", "builds", "loads", "materials", "stock_used",
+	"cases", "ranges", "measurements", "rules", "design_margin_k", "reasons",
+}
 
 var keyStep = regexp.MustCompile(`[^.\[\]]+|\[\d+\]`)
 

@@ -121,15 +121,41 @@ func (r *report) owner(at path) (name string, ids []string, key string) {
 		return fmt.Sprintf("part %s of build %s", id, show(b.Name)), r.placed(b, st[3].i), showSteps(st[4:])
 	case len(st) >= 2 && st[0].key == "builds":
 		return "build " + show(st[1].key), []string{st[1].key}, showSteps(st[2:])
-	case len(st) >= 2 && st[0].key == "loads" && st[1].i >= 0:
-		if i := st[1].i; i < len(r.doc.Loads) && r.doc.Loads[i].ID != "" {
-			return "load " + show(r.doc.Loads[i].ID), []string{r.doc.Loads[i].ID}, showSteps(st[2:])
+	case len(st) >= 2 && st[1].i >= 0 && listed[st[0].key] != nil:
+		l := listed[st[0].key](r.doc)
+		if i := st[1].i; i < len(l.ids) && l.ids[i] != "" {
+			if l.what == "load" {
+				ids = []string{l.ids[i]}
+			}
+			return l.what + " " + show(l.ids[i]), ids, showSteps(st[2:])
 		}
-		return fmt.Sprintf("load number %d", st[1].i+1), nil, showSteps(st[2:])
+		return fmt.Sprintf("%s number %d", l.what, st[1].i+1), nil, showSteps(st[2:])
 	case len(st) >= 2 && st[0].key == "materials":
 		return "material " + show(st[1].key), nil, showSteps(st[2:])
 	}
 	return "", nil, showSteps(st)
+}
+
+// listed are the lists whose items own what lies in them.
+var listed = map[string]func(*Document) items{
+	"loads": func(d *Document) items { return itemsOf("load", d.Loads, func(l *Load) string { return l.ID }) },
+	"cases": func(d *Document) items { return itemsOf("case", d.Cases, func(c *Case) string { return c.ID }) },
+	"measurements": func(d *Document) items {
+		return itemsOf("measurement", d.Measurements, func(m *Measurement) string { return m.ID })
+	},
+}
+
+type items struct {
+	what string
+	ids  []string
+}
+
+func itemsOf[E any](what string, list []E, id func(*E) string) items {
+	out := items{what: what}
+	for i := range list {
+		out.ids = append(out.ids, id(&list[i]))
+	}
+	return out
 }
 
 func known(id string, ok bool) []string {

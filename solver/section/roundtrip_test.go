@@ -69,7 +69,7 @@ func edited(t *rapid.T, d *Document) *Document {
 			ids = append(ids, p.ID)
 		}
 		id := rapid.SampledFrom(append(ids, "none")).Draw(t, "id")
-		switch rapid.IntRange(0, 11).Draw(t, "edit") {
+		switch rapid.IntRange(0, 15).Draw(t, "edit") {
 		case 0:
 			d = Move(d, id, Point{m.num(-9, 9), m.num(-9, 9)})
 		case 1:
@@ -106,6 +106,8 @@ func edited(t *rapid.T, d *Document) *Document {
 				}
 				d.Parts = parts
 			})
+		default:
+			d = m.editRatings(d, id)
 		}
 	}
 	return d
