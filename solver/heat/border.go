@@ -33,6 +33,7 @@ type bound struct {
 	mid      complex128 // of a square that covers everything
 	half     float64
 	field    func() pointField
+	sheet    *outline.Rect         // of a rectangle
 	arcs     []Arc                 // of a hull
 	high     func() [][]complex128 // of a hull: what comes to the pieces beyond their orders
 }

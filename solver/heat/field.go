@@ -122,7 +122,7 @@ func (s *state) wallLayers() layers {
 			top = math.Max(top, 2*float64(len(s.cloud.D[i]))*s.r/p.a)
 		}
 	}
-	a := s.outgoing(max(len(s.cloud.Circle.Sigma), int(math.Min(top, maxWallSeries))))
+	a := s.outgoing(max(len(s.cloud.Circle.Sigma), s.rest.harmonics(), int(math.Min(top, maxWallSeries))))
 	l := newLayers(s.wall.Rings, s.total, len(a))
 	mean := s.level
 	for i, g := range l.rings {
@@ -132,7 +132,7 @@ func (s *state) wallLayers() layers {
 	var w []harmonic.Waves
 	for n, v := range a {
 		w = s.wall.Waves(n+1, w[:0])
-		l.fill(n, w, 0, complex(real(v), -imag(v)))
+		l.fill(n, w, s.rest.at(n), complex(real(v), -imag(v)))
 	}
 	l.trim()
 	return l
@@ -148,6 +148,9 @@ func (s *state) at(z complex128) float64 {
 			}
 			return c.wall.at(z, r2)
 		}
+	}
+	if s.border != nil && s.border.sheet != nil {
+		z = calm(s.border.sheet, z)
 	}
 	t, i := c.tree.At(z)
 	if i >= 0 {

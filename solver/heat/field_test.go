@@ -191,3 +191,23 @@ func clearance(p heat.Problem, x, y float64) float64 {
 	}
 	return d
 }
+
+// Along the floor of a steel wireway, under its parts, the temperature has no bumps at any depth: second differences over half a
+// millimetre, of which some mK are true where a part touches.
+func TestFieldIsSmoothInSheetMetal(t *testing.T) {
+	p := load(t, "r09b_sides10_steel").Problem
+	r := solve(t, p, heat.Standard)
+	const h = 0.5e-3
+	for _, y := range []float64{-0.05e-3, -0.3e-3, -0.7e-3, -1.2e-3} {
+		worst, at := 0.0, 0.0
+		for x := 2e-3; x < p.Wall.W-2e-3; x += 0.2e-3 {
+			if d := math.Abs(r.Field.At(x-h, y) - 2*r.Field.At(x, y) + r.Field.At(x+h, y)); d > worst {
+				worst, at = d, x
+			}
+		}
+		t.Logf("%.2f mm deep: %.2f mK at %.1f mm", -1e3*y, 1e3*worst, 1e3*at)
+		if worst > 6e-3 {
+			t.Errorf("%.2f mm deep: a bump of %.2f mK at %.1f mm", -1e3*y, 1e3*worst, 1e3*at)
+		}
+	}
+}

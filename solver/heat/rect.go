@@ -127,6 +127,8 @@ func (r *rectWall) tell(s *bound) {
 	}
 	s.mid, s.half = complex(r.rect.W/2, r.rect.H/2), math.Max(r.rect.W, r.rect.H)/2+t
 	s.field = func() pointField { return sys.Field(y) }
+	rect := r.rect // a result never changes
+	s.sheet = &rect
 }
 
 func (r *rectWall) fork() border {
