@@ -74,7 +74,7 @@ func (p *sectionPainter) contoursOf(list []isoline, step float64) [][][]section.
 	}
 	lines := g.contours(values)
 	for i := range lines {
-		lines[i] = p.outsideMetal(lines[i], step)
+		lines[i] = p.outsidePlateaus(p.outsideMetal(lines[i], step))
 	}
 	lastContours.keep(key, lines)
 	return lines
