@@ -76,7 +76,7 @@ func (s *Stack) finish(n int, k, r float64) Port {
 		return Port{Rho: -1}
 	}
 	g := k * float64(n) / r
-	return Port{Rho: (g - s.Outer.V) / (g + s.Outer.V)}
+	return Port{Rho: (g - s.Outer.V) / (g + s.Outer.V), TauIn: 1} // what a source in the film sends in comes in whole
 }
 
 // Port returns the two-port for harmonic n.

@@ -140,6 +140,9 @@ func (g *region) newCircle() *harmonic.Circle {
 		}
 		c.Sigma = append(c.Sigma, s)
 	}
+	if g.rest != nil {
+		c.Mix = g.rest.mix
+	}
 	return c
 }
 

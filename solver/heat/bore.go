@@ -68,7 +68,7 @@ func (m *Model) unit(ctx context.Context, s int, x []float64) (_, t []float64, o
 	if len(x) != g.sys.Len() {
 		x = make([]float64, g.sys.Len())
 	}
-	if s < 0 && g.border == nil {
+	if s < 0 && g.border == nil && g.rest == nil {
 		for k := range q {
 			q[k] = m.p.Wall.Ambient
 		}
@@ -82,8 +82,12 @@ func (m *Model) unit(ctx context.Context, s int, x []float64) (_, t []float64, o
 	}
 	t = g.temperatures(q, x, s < 0)
 	if g.border == nil {
+		add := m.outsideR()
+		if s < 0 {
+			add = m.p.Wall.Ambient
+		}
 		for k := range t {
-			t[k] += m.outsideR()
+			t[k] += add
 		}
 	}
 	return x, t, true

@@ -79,6 +79,7 @@ func (w *Wall) check() {
 	if !good(w.Ambient) {
 		panic(badNumber)
 	}
+	w.Against.check(w)
 	for _, r := range w.Rings {
 		if !positive(r.K, r.Thickness) {
 			panic(badNumber)

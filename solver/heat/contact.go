@@ -80,9 +80,10 @@ func (g *region) orderAtWall(c *piece, f float64, m int) int {
 	if openEnough(f*c.a, reff, gap, m) {
 		return 0
 	}
-	return contact(f, c.a, reff, gap, g.k, between(c.skin(), face(&g.wall)), func(x float64) float64 {
+	wall := g.facing()
+	return contact(f, c.a, reff, gap, g.k, between(c.skin(), face(wall)), func(x float64) float64 {
 		n := int(math.Min(math.Max(g.r/x, 1), 2000))
-		return between(c.conductivity(x), shows(g.k, g.wall.Port(n).Rho))
+		return between(c.conductivity(x), shows(g.k, wall.Port(n).Rho))
 	})
 }
 

@@ -138,6 +138,7 @@ func (l *plan) bare() {
 		}
 	}
 	c.Sides = []outline.Side{{Film: l.p.Wall.Film, Temp: l.p.Wall.Ambient}}
+	l.p.Wall.Against.cut(&c)
 	l.contours = append(l.contours, c)
 }
 
@@ -171,6 +172,7 @@ func (l *plan) drawWall() {
 		t += r.Thickness
 	}
 	c.Loop, c.Sides = wallLoop(w, t), w.outlineSides(wallLoop(w, whole).Perimeter()/wallLoop(w, t).Perimeter())
+	w.Against.cut(&c)
 	l.contours = append(l.contours, c)
 }
 

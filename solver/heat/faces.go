@@ -116,7 +116,7 @@ func (s *state) wallFaces(w *Wall) (hot []float64, mean, released float64) {
 	rings := s.wall.Rings
 	hot = make([]float64, len(rings)+1)
 	mean = s.level
-	a := s.outgoing(max(len(s.cloud.Circle.Sigma), 12))
+	a := s.outgoing(max(len(s.cloud.Circle.Sigma), 12, s.rest.harmonics()))
 	waves := make([][]complex128, len(hot))
 	for i := range waves {
 		waves[i] = make([]complex128, len(a))
@@ -126,12 +126,12 @@ func (s *state) wallFaces(w *Wall) (hot []float64, mean, released float64) {
 		in := cmplx.Conj(a[n])
 		ws = s.wall.Waves(n+1, ws[:0])
 		for i := range ws {
-			f, g := ws[i].Split(0, in)
+			f, g := ws[i].Split(s.rest.at(n), in)
 			waves[i][n] = f*complex(ws[i].W, 0) + g
 			waves[i+1][n] = f + g*complex(ws[i].W, 0)
 		}
 		if len(ws) == 0 {
-			waves[0][n] = in * complex(1+s.wall.Port(n+1).Rho, 0)
+			waves[0][n] = in*complex(1+s.wall.Port(n+1).Rho, 0) + s.rest.at(n)
 		}
 	}
 	for i := range hot {
@@ -159,6 +159,10 @@ func (s *state) insideFace() float64 {
 
 // leaves is the heat that the film takes at the outside's mean temperature; where the outside is held, what the medium's sources carry.
 func (s *state) leaves(w *Wall, mean float64) float64 {
+	if s.rest != nil {
+		open, taken := s.rest.leaves(mean)
+		return open + taken
+	}
 	if math.IsInf(w.Film, 1) {
 		return s.carried()
 	}

@@ -29,7 +29,7 @@ func (g *region) clear() (changed []int) {
 // metalWall tells whether the wall's inside is bare metal, or held at one temperature.
 func (g *region) metalWall() bool {
 	if g.border == nil {
-		return face(&g.wall) > metalK
+		return face(g.facing()) > metalK
 	}
 	return g.border.metal()
 }

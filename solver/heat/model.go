@@ -89,6 +89,7 @@ func (m *Model) layout() {
 		m.top.loosen(p.Clearance)
 		m.top.wall = outerWall(p.MediumK, w.R, w.Rings, w.Film)
 		m.top.r = w.R + p.Clearance/2
+		m.top.lean(w)
 	case Rect:
 		m.top = newRegion(p, -1, p.MediumK)
 		m.top.loosen(p.Clearance)
@@ -273,6 +274,9 @@ func (m *Model) readWall(r *Result, s *state) {
 		return
 	}
 	r.WallMax, r.WallMean, r.Released = s.wallFaces(&m.p.Wall)
+	if s.rest != nil {
+		_, r.AgainstOut = s.rest.leaves(r.WallMean)
+	}
 	if i := m.bareCable(); i >= 0 {
 		r.Surfaces[i], r.Core[i] = r.WallMax, r.WallMax[0]
 		r.WallMax = r.WallMax[len(r.WallMax)-1:]

@@ -2,10 +2,13 @@ package heat
 
 const badOutside = "heat: only film, ambient and sides can change outside"
 
-// Outside gives the wall other films and outside temperatures: Film, Ambient and Sides of w; the rest of w must be as in the Problem. What does
+// Outside gives the wall other films and outside temperatures: Film, Ambient, Sides and Against.Temp of w; the rest of w must be as in the Problem. What does
 // not depend on them is kept, so that a fixed point over a film costs little: a round wall's matrix stays, a rectangle's wall is written again.
 func (m *Model) Outside(w Wall) {
 	old := m.p.Wall
+	if a, b := w.Against, old.Against; a.Share != b.Share || a.At != b.At || a.Held != b.Held {
+		panic(badOutside)
+	}
 	if w.Shape != old.Shape || w.R != old.R || w.W != old.W || w.H != old.H || len(w.Rings) != len(old.Rings) {
 		panic(badOutside)
 	}
@@ -34,6 +37,7 @@ func (m *Model) Outside(w Wall) {
 		m.dim()
 	default:
 		m.top.wall.Outer = outerWall(m.top.k, m.top.wall.R, nil, w.Film).Outer
+		m.top.lean(&w)
 		if m.ready = m.ready && m.top.reflectAnew(); m.ready && m.glow != nil {
 			m.glow.top.fit()
 		}
@@ -44,10 +48,11 @@ func (m *Model) Outside(w Wall) {
 // in than the parts are mapped to. Results that are out keep the old circle.
 func (g *region) reflectAnew() bool {
 	c := g.newCircle()
-	if c.RhoInf != g.circle.RhoInf || len(c.Sigma) > g.sys.Top()+2 {
+	if c.RhoInf != g.circle.RhoInf || len(c.Sigma) > g.sys.Top()+2 || (c.Mix == nil) != (g.circle.Mix == nil) {
 		return false
 	}
 	c.Sigma = c.Sigma[:min(len(c.Sigma), g.sys.Top())] // what is cut is as small as what newCircle leaves out
+	c.Mix = c.Mix.Cut(g.sys.Top())
 	g.circle = c
 	g.sys.Reflect(c)
 	return true

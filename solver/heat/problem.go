@@ -70,6 +70,7 @@ type Wall struct {
 	Ambient    float64
 	Emissivity float64 // of the inside, where it faces a gas
 	Sides      [4]Side // of a rectangle: Bottom, Right, Top, Left
+	Against    Against // of all others
 	// Taut winds the string round discs, counterclockwise, with an arc of 2π for one disc; it is needed for a Hull.
 	Taut func(x, y, r []float64) []Arc
 }

@@ -80,7 +80,9 @@ func (k *knot) receive(level float64, omega []complex128, ground bool) {
 			f.Omega[n] += complex(a*k.absorbed[2*n], a*k.absorbed[2*n+1])
 		}
 	}
+	k.lean(ground)
 	k.charges.Receive(f)
+	k.level += f.Lift
 	switch {
 	case k.rad != nil && k.rad.sides != nil:
 		k.rad.sides.bring(g, k.charge, f.X, ground, f.Y, f.Mean)
@@ -107,7 +109,7 @@ func (k *knot) receive(level float64, omega []complex128, ground bool) {
 				b.omega[n] = complex(b.in[n]*b.c[2*n], b.in[n]*b.c[2*n+1])
 			}
 		}
-		b.inside.receive(level+f.Mean[i]+k.heat[i]*g.pieces[i].series, b.omega, ground)
+		b.inside.receive(k.level+f.Mean[i]+k.heat[i]*g.pieces[i].series, b.omega, ground)
 	}
 	k.feel()
 }
@@ -141,7 +143,7 @@ func (k *knot) feel() {
 	tau := k.tau[:len(k.absorbed)]
 	clear(tau)
 	for n := range min(len(tau)/2, len(f.Alpha)) {
-		a := complex(1+k.reflect[n], 0)*f.Alpha[n] + f.Omega[n]
+		a := complex(1+k.reflect[n], 0)*f.Alpha[n] + f.Omega[n] + f.Back[n]
 		tau[2*n], tau[2*n+1] = real(a), imag(a)
 	}
 	k.rad.wall.feel(k.t, tau, k.level)

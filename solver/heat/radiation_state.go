@@ -10,7 +10,7 @@ func (k *knot) state(z, q []float64) *state {
 		s.total += v
 	}
 	s.tail = g.tail(z[k.x0:], f.X)
-	s.cloud = g.cloud(k.charge, f.X, k.level, f.Omega)
+	s.cloud = g.cloud(k.charge, f.X, k.level, k.regular())
 	for n := range len(k.absorbed) / 2 {
 		r := 1 / math.Sqrt(float64(n+1))
 		s.shone = append(s.shone, complex(r*k.absorbed[2*n], r*k.absorbed[2*n+1]))
@@ -21,6 +21,7 @@ func (k *knot) state(z, q []float64) *state {
 			s.taken -= v
 		}
 	}
+	s.leanOn(g.rest)
 	k.bound(s)
 	s.pieces = make([]pieceState, len(g.pieces))
 	for i := range s.pieces {

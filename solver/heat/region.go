@@ -14,6 +14,7 @@ type region struct {
 	r       float64        // inside radius, clearance added; 0 if there is a border
 	border  border         // nil of a round region
 	wall    harmonic.Stack // round: as drawn, from the medium outwards
+	rest    *rest          // of a round holder: what its outside rests against, nil for nothing
 	pieces  []piece
 	orders  []int
 

@@ -11,6 +11,8 @@ type Result struct {
 	Released  float64    // W/m through the outside, integrated there and not set equal to Generated
 	Absorbed  []float64  // W/m taken up by each part's FixedBore, 0 elsewhere
 	SideOut   [4]float64 // W/m through the outside of each side of a rectangle
+	// AgainstOut is what of Released (W/m) goes into what a part of the outside rests against.
+	AgainstOut float64
 
 	Status     Status
 	Unknowns   int     // real unknowns

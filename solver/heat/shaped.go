@@ -117,6 +117,7 @@ func (s *shaped) walls(r *Result, hot []float64, mean float64, out []float64) {
 			r.SideOut[boxOrder[i]] = q
 		}
 	}
+	r.AgainstOut = s.plan.against(out)
 }
 
 // load puts heats by part in the order of the contours.

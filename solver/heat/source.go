@@ -27,6 +27,9 @@ func (g *region) loadColumn(q []float64, ground bool) []float64 {
 	if g.border != nil {
 		g.border.bring(g, charge, v, ground, y, nil)
 	}
+	if g.rest != nil && ground {
+		g.sys.Drive(y, g.rest.ground)
+	}
 	for i := range charge {
 		charge[i] *= g.c2()
 	}
@@ -43,6 +46,9 @@ func (g *region) loadColumn(q []float64, ground bool) []float64 {
 func (g *region) temperatures(q, x []float64, ground bool) []float64 {
 	charge, v := g.outgoing(q, x)
 	mean := g.means(charge, v, nil)
+	if g.rest != nil && ground {
+		g.sys.Rise(mean, g.rest.ground)
+	}
 	y := make([]float64, len(x))
 	if g.border != nil {
 		g.border.bring(g, charge, v, ground, y, mean)

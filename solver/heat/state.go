@@ -16,6 +16,7 @@ type state struct {
 	total  float64      // W/m through the wall
 	taken  float64      // W/m of it that the wall takes up by radiation
 	shone  []complex128 // what that adds to A_n of a round wall
+	rest   *arcSource   // of a round wall's outside, where it rests against something
 	border *bound
 	tail   float64 // W/m·K, see region.tail
 	pieces []pieceState
@@ -42,7 +43,14 @@ func (g *region) solved(q, x []float64, level float64, omega []complex128) *stat
 	}
 	s.tail = g.tail(x, v)
 	mean := g.means(charge, v, omega)
-	s.cloud = g.cloud(charge, v, level, omega)
+	if g.rest != nil {
+		g.sys.Rise(mean, g.rest.ground)
+		var lift float64
+		lift, omega = g.sys.Answer(v, g.monopoles(charge), g.rest.ground)
+		s.level += lift
+	}
+	s.cloud = g.cloud(charge, v, s.level, omega)
+	s.leanOn(g.rest)
 	if g.border != nil {
 		s.border = g.border.solved(g, charge, v, mean)
 	}
