@@ -77,8 +77,6 @@ func (t *targets) checkNeutral(r *report, l *Load, at path) {
 		r.add(at, "not-a-conductor", fmt.Sprintf("%s is a %s and no conductor", show(l.Neutral), p.Kind), "name the neutral conductor", l.Neutral)
 	case p.Role != "" && p.Role != RoleNeutral && has(roles, p.Role):
 		r.add(at, "contradiction", fmt.Sprintf("%s is named as the neutral and its role is %s", show(l.Neutral), p.Role), "write role: neutral for it, or name another conductor", l.Neutral)
-	case l.System == ThreePhase && len(l.Conductors) == 1 && l.Conductors[0] == l.Neutral:
-		r.add(at, "contradiction", "its only conductor is its neutral", "name the conductors of the phases, or take the neutral out", l.Neutral)
 	}
 }
 

@@ -163,7 +163,11 @@ func SetSurroundings(d *Document, s Surroundings) *Document {
 	return d.With(func(d *Document) { d.Surroundings = s })
 }
 
-// SetHolder returns the document with another holder.
+// SetHolder returns the document with another holder. What the outside rests against goes with a holder that can't have it.
 func SetHolder(d *Document, h Holder) *Document {
-	return d.With(func(d *Document) { d.Holder = h })
+	return d.With(func(d *Document) {
+		if d.Holder = h; h.Kind == Wireway || h.Kind == Apart {
+			d.Surroundings.Against = nil
+		}
+	})
 }

@@ -53,7 +53,7 @@ func (m maker) rateLoad(d *Document, l *Load) {
 		l.Terminals.RatedA = Some(m.num(1, 100))
 	}
 	for _, p := range Unfold(d) {
-		if (p.Part.Role == "" || p.Part.Role == RoleNeutral) && m.coin("neutral") && !(l.System == ThreePhase && len(l.Conductors) == 1) {
+		if (p.Part.Role == "" || p.Part.Role == RoleNeutral) && m.coin("neutral") {
 			l.Neutral = p.ID
 			break
 		}
@@ -157,7 +157,7 @@ func (m maker) editRatings(d *Document, id string) *Document {
 	case 3:
 		return SetSystem(d, load, m.word([]string{"", DC, SinglePhase}))
 	case 4:
-		return SetNeutral(SetSystem(d, load, ""), load, id)
+		return SetNeutral(d, load, id)
 	case 5:
 		return SetNotWith(d, load, other, "none")
 	case 6:

@@ -234,7 +234,7 @@ func (m maker) put(s *Surroundings, key string) {
 	case "wrap":
 		s.Wrap = &Layer{Material: m.name(), ThicknessMM: m.num(1, 100)}
 	case "against":
-		a := Against{AtDeg: m.num(-180, 180), Share: m.num(1, 99) / 100, Is: Side{Kind: SideInsulated}}
+		a := Against{AtDeg: m.num(-180, 180), Share: m.num(1, 98) / 100, Is: Side{Kind: SideInsulated}}
 		if m.coin("held") {
 			a.Is = Side{Kind: SideFixed, FixedC: m.num(-40, 90)}
 		}
