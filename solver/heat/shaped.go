@@ -13,6 +13,10 @@ type shaped struct {
 	plan *plan
 	sys  *outline.Shaped // nil until it is needed
 	k    [][]float64     // influence, by part
+
+	glow   *shine    // what radiates, nil before it is known or where nothing does
+	before *shine    // the one before, of which a new one may keep something
+	heats  []float64 // of the last solution, by part
 }
 
 // newShaped prepares a section; it is discretised by the first call that needs it.
@@ -36,11 +40,19 @@ func (s *shaped) prepare(ctx context.Context) bool {
 	factor, _, _ := s.m.set.Accuracy.settings()
 	s.plan, s.k = newPlan(&s.m.p), nil
 	s.sys = outline.NewShaped(s.plan.contours, factor, ended(ctx))
+	if s.sys != nil {
+		s.glow, s.before = s.newShine(s.before), nil
+	}
 	return s.sys != nil
 }
 
 // move puts a part elsewhere.
-func (s *shaped) move() { s.sys, s.k = nil, nil }
+func (s *shaped) move() {
+	s.sys, s.k = nil, nil
+	if s.glow != nil {
+		s.glow, s.before = nil, s.glow
+	}
+}
 
 // outside takes other films and temperatures.
 func (s *shaped) outside() {
@@ -51,6 +63,9 @@ func (s *shaped) outside() {
 	l := newPlan(&s.m.p)
 	s.plan = l
 	s.sys = s.sys.Outside(l.sides())
+	if s.glow != nil {
+		s.glow.patch = s.glow.patch.On(s.sys)
+	}
 }
 
 // sides are those of every contour.
@@ -68,7 +83,10 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 		return s.m.blank(Cancelled)
 	}
 	r := s.m.blank(Converged)
-	y := s.sys.Respond(s.load(heats), true)
+	y := s.respond(ctx, r, heats)
+	if y == nil {
+		return s.m.blank(Cancelled)
+	}
 	hot, mean, out := s.sys.Faces(y, outline.Sources{})
 	parts := s.m.p.Parts
 	for i := range parts {
@@ -82,13 +100,40 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 			r.Generated += heats[i]
 		case FixedBore:
 			r.Core[i], r.Absorbed[i] = q.Fixed, -s.sys.Leaves(y, c)
+			if s.glow != nil && len(q.Rings) == 0 {
+				r.Absorbed[i] -= s.glow.given(c)
+			}
 		}
 	}
 	s.walls(r, hot, mean, out)
 	r.Unknowns = s.sys.Len()
 	s.estimate(r)
+	if g := s.glow; g != nil {
+		r.Unknowns += len(g.e)
+		part, _, _ := s.m.set.Accuracy.grain()
+		s.m.widen(r, s.m.rise(r)*grainError/(part*part))
+	}
 	r.Field = shapedField{s.sys.Field(y)}
 	return r
+}
+
+// respond solves, radiation and all; nil if ctx ended first.
+func (s *shaped) respond(ctx context.Context, r *Result, heats []float64) []float64 {
+	load, g := s.load(heats), s.glow
+	if g == nil {
+		return s.sys.Respond(load, true)
+	}
+	if !g.look(ctx) {
+		return nil
+	}
+	_, _, tol := s.m.set.Accuracy.settings()
+	if r.Steps, r.Status = g.solve(ctx, load, tol); r.Status == Cancelled {
+		return nil
+	}
+	s.heats, s.k = append(s.heats[:0], heats...), nil
+	h := g.hollows[0]
+	r.Radiates, r.Nusselt, r.Beyond = true, h.nu, !h.inRange
+	return g.answer(g.t, load, true, g.e)
 }
 
 // walls fills in what the result says of the wall.
@@ -111,6 +156,9 @@ func (s *shaped) walls(r *Result, hot []float64, mean float64, out []float64) {
 		copy(r.WallMax, hot[s.plan.wall:last+1])
 	}
 	r.WallMean = mean
+	if s.glow != nil && s.glow.hollows[0].wall == last {
+		s.glow.direct(out)
+	}
 	for i, q := range out {
 		r.Released += q
 		if w.Shape == Rect {

@@ -1,0 +1,180 @@
+package heat
+
+import (
+	"math"
+	"math/cmplx"
+
+	"packrise/solver/gas"
+	"packrise/solver/outline"
+)
+
+// hollow is a space full of gas between contours: its wall is one of them, seen from inside, what lies in it are parts, seen from outside.
+type hollow struct {
+	wall  int
+	parts []int
+	eps   float64 // emissivity of the wall
+	stirs bool
+	at    []int // patch of the contours for each patch of the exchange
+	ex    *gas.Exchange
+	t, e  []float64 // room
+	base  []float64
+	out   []float64
+	nusselt
+}
+
+// hollows lists the spaces that are full of gas, that of the top level first.
+func (l *plan) hollows() []*hollow {
+	var out []*hollow
+	add := func(in, wall int, f Filling, eps float64) {
+		if f == Solid {
+			return
+		}
+		h := &hollow{wall: wall, eps: eps, stirs: f == Air, nusselt: nusselt{1, true}}
+		for j := range l.p.Parts {
+			if l.p.Parts[j].In == in {
+				h.parts = append(h.parts, j)
+			}
+		}
+		out = append(out, h)
+	}
+	if l.p.Wall.Shape != BarePart {
+		add(-1, l.wall, l.p.Filling, l.p.Wall.Emissivity)
+	}
+	for i := range l.p.Parts {
+		if q := &l.p.Parts[i]; q.Core == Inside {
+			add(i, l.first[i], q.Filling, q.InsideEmissivity)
+		}
+	}
+	return out
+}
+
+// face is the contour of part i's outside.
+func (l *plan) face(i int) int { return l.first[i] + len(l.p.Parts[i].Rings) }
+
+// faces are the surfaces that look into hollows: of each contour, the hollow, and the place of its part there, −1 for the wall.
+type faces struct {
+	of    []*hollow
+	place []int
+}
+
+func (l *plan) faces(hollows []*hollow) faces {
+	f := faces{make([]*hollow, len(l.contours)), make([]int, len(l.contours))}
+	for _, h := range hollows {
+		f.of[h.wall], f.place[h.wall] = h, -1
+		for k, i := range h.parts {
+			f.of[l.face(i)], f.place[l.face(i)] = h, k
+		}
+	}
+	return f
+}
+
+// divide cuts the faces of all hollows of sys into patches.
+func (l *plan) divide(sys *outline.Shaped, hollows []*hollow, a Accuracy) *outline.ShapedPatches {
+	part, turn, _ := a.grain()
+	f := l.faces(hollows)
+	grains := map[*hollow]*gas.Grain{}
+	for _, h := range hollows {
+		g := &gas.Grain{PerTurn: part, Turn: turn}
+		for _, i := range h.parts {
+			g.Discs = append(g.Discs, l.disc(i, strokes(l.contours[l.face(i)].Loop)))
+		}
+		grains[h] = g
+	}
+	on, usual := 0, 0.0 // Patches asks for contours in turn
+	return sys.Patches(func(contour int) bool {
+		if f.of[contour] == nil {
+			return false
+		}
+		on, usual = contour, l.contours[contour].Loop.Perimeter()/turn
+		if f.place[contour] >= 0 {
+			usual *= turn / part
+		}
+		return true
+	}, func(z complex128) float64 { return grains[f.of[on]].Longest(z, usual, f.place[on]) })
+}
+
+// disc is part i with patches (or strokes) of its outside.
+func (l *plan) disc(i int, rim []gas.Segment) gas.Disc {
+	d := gas.Disc{C: l.at[i], Rim: rim}
+	for k := range rim {
+		s := &rim[k]
+		s.A, s.B, s.Centre = s.A-d.C, s.B-d.C, s.Centre-d.C
+		d.R = math.Max(d.R, cmplx.Abs(s.A))
+		if s.R > 0 {
+			d.R = math.Max(d.R, cmplx.Abs(s.Centre)+s.R)
+		}
+	}
+	return d
+}
+
+func strokes(l outline.Loop) []gas.Segment {
+	out := make([]gas.Segment, len(l))
+	for i := range l {
+		out[i] = gas.Segment{A: l[i].From, B: l[i].To, Centre: l[i].Centre, R: l[i].R}
+	}
+	return out
+}
+
+// segment is a patch from a to b of a loop, moved outwards by off.
+func segment(l outline.Loop, a, b complex128, off float64) gas.Segment {
+	const near = 1e-7 // of a radius
+	for i := range l {
+		s := &l[i]
+		if s.R == 0 || math.Abs(cmplx.Abs(a-s.Centre)-s.R) > near*s.R || math.Abs(cmplx.Abs(b-s.Centre)-s.R) > near*s.R {
+			continue
+		}
+		if m := (a+b)/2 - s.Centre; cmplx.Abs(s.At(0.5)-s.Centre-m*complex(s.R/cmplx.Abs(m), 0)) > cmplx.Abs(s.From-s.At(0.5)) {
+			continue // another arc about the same centre
+		}
+		r := complex((s.R+off)/s.R, 0)
+		return gas.Segment{A: s.Centre + r*(a-s.Centre), B: s.Centre + r*(b-s.Centre), Centre: s.Centre, R: s.R + off}
+	}
+	n := -1i * (b - a) * complex(off/cmplx.Abs(b-a), 0)
+	return gas.Segment{A: a + n, B: b + n}
+}
+
+// look lets the surfaces of the hollow see each other; false if stop asked for an end. Parts are seen as drawn, clearances and all.
+func (h *hollow) look(l *plan, p *outline.ShapedPatches, points, threads int, stop func() bool) bool {
+	var discs []gas.Disc
+	var eps []float64
+	h.at = nil
+	take := func(contour int, off, e float64) (out []gas.Segment) {
+		for k, c := range p.Contour {
+			if c == contour {
+				out = append(out, segment(l.contours[c].Loop, p.A[k], p.B[k], off))
+				h.at, eps = append(h.at, k), append(eps, e)
+			}
+		}
+		for k := range out { // neighbours meet exactly
+			out[(k+1)%len(out)].A = out[k].B
+		}
+		return out
+	}
+	for _, i := range h.parts {
+		c := l.face(i)
+		off := (l.outer(i).Perimeter() - l.contours[c].Loop.Perimeter()) / (2 * math.Pi)
+		discs = append(discs, l.disc(i, take(c, off, l.p.Parts[i].Emissivity)))
+	}
+	out := gas.Outline{Segments: take(h.wall, 0, h.eps)}
+	e := gas.NewEnclosure(discs, out, points, threads, stop)
+	if e == nil {
+		return false
+	}
+	h.ex = gas.NewExchange(e, eps)
+	n := e.Len()
+	h.t, h.e, h.base, h.out = make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n)
+	return true
+}
+
+// gather sets to to what of x belongs to the hollow.
+func (h *hollow) gather(to, x []float64) {
+	for k, i := range h.at {
+		to[k] = x[i]
+	}
+}
+
+func (h *hollow) scatter(to, x []float64) {
+	for k, i := range h.at {
+		to[i] = x[k]
+	}
+}
