@@ -98,9 +98,12 @@ type Fill struct {
 	Share     float64 // taken over inside
 	Limit     float64 // share that the rule permits
 	Over      bool
+	Rounded   bool     // within only because the rule rounds the number of equal conductors up
 	Unknown   []string // ids of parts whose outside diameter is unknown: the fill is then a lower bound
 	Text      string
 	limits    fillLimits
+	nipple    bool
+	equal     float64 // mm, outside diameter of all; −1 when they differ, 0 when nothing is in
 }
 
 // Harness is the whole-harness line of AC 43.13-1B: the sum of currents stays within a share of the sum of capacities.

@@ -18,6 +18,7 @@ type Run struct {
 	AltitudeM   float64 // m, pressure altitude; 0 is sea level
 	ListedPanel bool    // inside a listed panel, where the panel's own standard rules
 	Method      string  // reference method A1 … G of IEC 60364-5-52; "" takes the usual one of the holder
+	Arrangement string  // bunched (also ""), or a single layer: layer-wall, layer-ceiling, layer-tray, layer-ladder
 }
 
 // Conductor is one core, loose or in a cable.
@@ -142,6 +143,8 @@ const (
 	Apart      = "apart"
 	Single     = "none"
 )
+
+const bunched = "bunched"
 
 // Area returns the inside area in mm², 0 when it is unknown or the holder is open.
 func (h Holder) Area() float64 {
