@@ -80,7 +80,7 @@ func (g *Group) Solve(ctx context.Context, heats []float64) *Result {
 		Core: make([]float64, g.n), Surfaces: make([][]float64, g.n), Absorbed: make([]float64, g.n), PartErrorK: make([]float64, g.n),
 		WallMax: []float64{math.Inf(-1)}, Nusselt: 1, Bodies: make([]*Result, len(g.members)),
 	}
-	f := &groupField{g.members, r.Bodies}
+	f := make(groupField, len(g.members))
 	around := 0.0
 	for b, m := range g.members {
 		var own *Result
@@ -89,7 +89,7 @@ func (g *Group) Solve(ctx context.Context, heats []float64) *Result {
 		} else {
 			own = m.solve(ctx, heats)
 		}
-		r.Bodies[b] = own
+		r.Bodies[b], f[b] = own, groupPiece{m.X, m.Y, m.Box, own.Field}
 		r.take(own, m)
 		around += m.Around
 	}
@@ -211,44 +211,49 @@ func (m *Member) sway(ctx context.Context) (parts []float64, released float64, s
 	return parts, after.Released - before.Released, max(before.Status, after.Status)
 }
 
-// groupField is the field of all members.
-type groupField struct {
-	members []*Member
-	bodies  []*Result
+// groupField is the field of all members, as they lay.
+type groupField []groupPiece
+
+type groupPiece struct {
+	x, y float64
+	box  [4]float64
+	of   Field
 }
 
-func (f *groupField) At(x, y float64) float64 {
-	for b, m := range f.members {
-		u, v := x-m.X, y-m.Y
-		if u < m.Box[0] || v < m.Box[1] || u > m.Box[2] || v > m.Box[3] {
+func (f groupField) At(x, y float64) float64 {
+	for i := range f {
+		p := &f[i]
+		u, v := x-p.x, y-p.y
+		if u < p.box[0] || v < p.box[1] || u > p.box[2] || v > p.box[3] {
 			continue
 		}
-		if t := f.bodies[b].Field.At(u, v); !math.IsNaN(t) {
+		if t := p.of.At(u, v); !math.IsNaN(t) {
 			return t
 		}
 	}
 	return math.NaN()
 }
 
-func (f *groupField) Row(dst []float64, y, x0, dx float64) {
+func (f groupField) Row(dst []float64, y, x0, dx float64) {
 	for i := range dst {
 		dst[i] = math.NaN()
 	}
 	var buf []float64
-	for b, m := range f.members {
-		if v := y - m.Y; v < m.Box[1] || v > m.Box[3] {
+	for k := range f {
+		p := &f[k]
+		if v := y - p.y; v < p.box[1] || v > p.box[3] {
 			continue
 		}
 		lo, hi := 0, len(dst)
 		if dx > 0 {
-			lo = max(0, int(math.Ceil((m.X+m.Box[0]-x0)/dx)))
-			hi = min(hi, int(math.Floor((m.X+m.Box[2]-x0)/dx))+1)
+			lo = int(math.Ceil(max(0, (p.x+p.box[0]-x0)/dx)))
+			hi = int(math.Floor(min(float64(hi), (p.x+p.box[2]-x0)/dx+1)))
 		}
 		if lo >= hi {
 			continue
 		}
 		buf = append(buf[:0], dst[lo:hi]...)
-		f.bodies[b].Field.Row(buf, y-m.Y, x0+float64(lo)*dx-m.X, dx)
+		p.of.Row(buf, y-p.y, x0+float64(lo)*dx-p.x, dx)
 		for i, t := range buf {
 			if !math.IsNaN(t) {
 				dst[lo+i] = t

@@ -11,14 +11,20 @@ import (
 // zeroC is 0 °C in K.
 const zeroC = 273.15
 
-// spaces are the air-filled regions of a scene, whose conductivity follows their own temperature: the holder (index −1), cables and bores
-// by part index.
+// spaces are the air-filled regions of a scene, whose conductivity follows their own temperature: the holder (index −1; of bodies apart −1 less the
+// body's index), cables and bores by part index.
 type spaces map[int]float64 // °C
 
 // airSpaces lists the regions that hold air.
 func (s *scene) airSpaces(start float64) spaces {
 	out := spaces{}
-	if s.holder.fill.air && s.holder.kind != section.NoHolder {
+	if s.apart() {
+		for k := range s.bodies {
+			if s.holder.fill.air && s.bodies[k].several() {
+				out[-1-k] = start
+			}
+		}
+	} else if s.holder.fill.air && s.holder.kind != section.NoHolder {
 		out[-1] = start
 	}
 	for i := range s.parts {
@@ -38,7 +44,48 @@ func (a spaces) k(i int, m medium) float64 {
 	return m.k
 }
 
-// build writes the heat problem of a scene at given temperatures of its air and, where they are free, given films. Temperatures are °C throughout.
+// problems writes the heat problems of a scene, one a body, at given temperatures of its air and, where they are free, given films.
+func (s *scene) problems(air spaces, f films) []heat.Problem {
+	if !s.apart() {
+		return []heat.Problem{s.build(air, f)}
+	}
+	out := make([]heat.Problem, len(s.bodies))
+	for k := range out {
+		out[k] = s.buildBody(k, air, f)
+	}
+	return out
+}
+
+// buildBody writes the heat problem of one of several bodies, about its own origin.
+func (s *scene) buildBody(k int, air spaces, f films) heat.Problem {
+	b := &s.bodies[k]
+	p := heat.Problem{
+		Parts:   make([]heat.Part, len(b.all)),
+		MediumK: air.k(-1-k, s.holder.fill),
+		Wall:    heat.Wall{Shape: heat.BarePart, Film: s.filmW, Ambient: s.doc.Surroundings.AmbientC.V},
+	}
+	if b.several() {
+		p.Wall.Shape, p.Wall.Taut = heat.Hull, taut
+	}
+	if s.out.free {
+		p.Wall.Film, p.Wall.Ambient = f[k].film, f[k].toward
+	}
+	place := map[int]int{-1: -1}
+	about := func(v, origin float64) float64 { return nanometre * math.Round((v-origin)/nanometre) * mm }
+	for n, i := range b.all {
+		place[i] = n
+		q := s.heatPart(i, air)
+		if q.In < 0 {
+			q.X, q.Y = about(s.parts[i].abs.X, b.origin.X), about(s.parts[i].abs.Y, b.origin.Y)
+		}
+		q.In = place[q.In]
+		p.Parts[n] = q
+	}
+	s.shine(&p, b.all)
+	return p
+}
+
+// build writes the heat problem of a scene of one body. Temperatures are °C throughout.
 func (s *scene) build(air spaces, f films) heat.Problem {
 	h := &s.holder
 	p := heat.Problem{
@@ -67,7 +114,7 @@ func (s *scene) build(air spaces, f films) heat.Problem {
 	for i := range s.parts {
 		p.Parts[i] = s.heatPart(i, air)
 	}
-	s.shine(&p)
+	s.shine(&p, nil)
 	return p
 }
 
@@ -132,6 +179,9 @@ func (s *scene) airTemperature(i int, r *heat.Result) float64 {
 		wall, around = r.Surfaces[i][0], s.parts[i].loop(0).Perimeter()
 	case s.holder.kind == section.Wireway:
 		around = 2 * (s.holder.w + s.holder.h)
+	case s.apart():
+		b := s.holding(i)
+		wall, around = r.Bodies[-1-i].WallMean, b.around
 	case s.hulled():
 		wall = r.WallMean
 		_, around = s.hull()
@@ -139,7 +189,7 @@ func (s *scene) airTemperature(i int, r *heat.Result) float64 {
 		around = s.holder.loop(0).Perimeter()
 	}
 	sum, weight := wall*around, around
-	for _, j := range s.children(i) {
+	for _, j := range s.facing(i) {
 		c := s.parts[j].outside().Perimeter()
 		sum += c * r.Surfaces[j][len(r.Surfaces[j])-1]
 		weight += c

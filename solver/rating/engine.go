@@ -13,14 +13,14 @@ import (
 // last one by currents or by one part's place is solved again in a few milliseconds. Not safe for concurrent use: one Engine
 // belongs to one runner.
 type Engine struct {
-	cat     *catalog.Catalog
-	model   *heat.Model
-	problem heat.Problem
-	grade   heat.Accuracy
-	temps   []float64 // °C per part, of the last answer
-	air     spaces
-	out     outside   // of the last answer, with the heat flows of its faces
-	flux    []float64 // W/m²
+	cat    *catalog.Catalog
+	model  model
+	bodies []prepared
+	grade  heat.Accuracy
+	temps  []float64 // °C per part, of the last answer
+	air    spaces
+	out    outside   // of the last answer, with the heat flows of its faces
+	flux   []float64 // W/m²
 }
 
 // NewEngine returns an engine that looks things up in cat.
@@ -61,7 +61,9 @@ type answered struct {
 }
 
 // forget drops what a failed solution may have left in a warm start.
-func (e *Engine) forget() { e.model, e.temps, e.air, e.out = nil, nil, nil, outside{} }
+func (e *Engine) forget() {
+	e.model, e.bodies, e.temps, e.air, e.out = nil, nil, nil, nil, outside{}
+}
 
 func (e *Engine) startAir(s *scene) spaces {
 	out := s.airSpaces(s.doc.Surroundings.AmbientC.V + 20)
@@ -100,23 +102,4 @@ func (a spaces) copy() spaces {
 		out[i] = t
 	}
 	return out
-}
-
-// prepare makes the model fit the problem: kept when it is the same, moved when one part of the top level moved, given other films, else new.
-func (e *Engine) prepare(p heat.Problem, grade heat.Accuracy) {
-	if e.model != nil && e.grade == grade {
-		if moved := difference(&e.problem, &p); moved != other {
-			if moved >= 0 {
-				e.model.Move(moved, p.Parts[moved].X, p.Parts[moved].Y)
-			}
-			if !sameOutside(&e.problem.Wall, &p.Wall) {
-				e.model.Outside(p.Wall)
-			}
-			e.problem = p
-			return
-		}
-	}
-	m := heat.New(p, heat.Settings{Accuracy: grade})
-	m.Resume(e.model)
-	e.model, e.problem, e.grade = m, p, grade
 }

@@ -12,6 +12,9 @@ func (s *scene) bounds() [4]float64 {
 	for _, l := range s.holder.layers {
 		t += l.thickness / mm
 	}
+	if s.apart() && len(s.bodies) > 0 {
+		return s.outerBox()
+	}
 	if s.holder.kind == section.Wireway {
 		return [4]float64{-t, -t, s.holder.w/mm + t, s.holder.h/mm + t}
 	}
@@ -20,7 +23,7 @@ func (s *scene) bounds() [4]float64 {
 		return [4]float64{-x, -y, x, y}
 	}
 	if s.hulled() {
-		return boxOf(s.hullLoop())
+		return boxOf(hullLoop(s.drawn()))
 	}
 	r := s.holder.radius/mm + t
 	if s.holder.kind == section.NoHolder && len(s.parts) > 0 {

@@ -40,6 +40,13 @@ type films []facet
 // flow is worth more than one of the temperature.
 func (o *outside) at(flux []float64) films {
 	f := make(films, o.n)
+	if o.together != nil {
+		_, all := o.together.Surfaces(flux)
+		for i, a := range all {
+			f[i] = facet{math.Max(a.Coefficient(), leastFilm), a.TowardK - zeroC, a}
+		}
+		return f
+	}
 	for i := range o.n {
 		if o.open[i] {
 			_, a := o.air.Surface(o.faces[i], flux[i])
@@ -52,6 +59,12 @@ func (o *outside) at(flux []float64) films {
 // flux reads the heat flows of the faces off an answer.
 func (o *outside) flux(r *heat.Result) []float64 {
 	q := make([]float64, o.n)
+	if o.together != nil {
+		for i := range q {
+			q[i] = r.Bodies[i].Released / o.wide[i]
+		}
+		return q
+	}
 	if o.n == 1 {
 		q[0] = r.Released / o.wide[0]
 		return q
@@ -81,6 +94,13 @@ func (o *outside) guess(heat float64) []float64 {
 
 // miss is the largest difference (K) between the temperature of a face in an answer, whose flows are q, and that at which its film was taken.
 func (o *outside) miss(f films, q []float64) (worst float64) {
+	if o.together != nil {
+		all, _ := o.together.Surfaces(q)
+		for i, t := range all {
+			worst = math.Max(worst, math.Abs(t-zeroC-(f[i].toward+q[i]/f[i].film)))
+		}
+		return worst
+	}
 	for i := range o.n {
 		if !o.open[i] {
 			continue

@@ -30,11 +30,21 @@ func (s *scene) hulled() bool {
 
 // drawn returns the parts of the top level that are placed, in mm and in the plane of the section.
 func (s *scene) drawn() []pack.Disc {
-	var out []pack.Disc
+	var of []int
 	for i := range s.parts {
 		if p := &s.parts[i]; p.in < 0 && !p.unset && p.outer() > 0 {
-			out = append(out, pack.Disc{X: p.abs.X, Y: p.abs.Y, R: p.outer() / mm})
+			of = append(of, i)
 		}
+	}
+	return s.discsOf(of)
+}
+
+// discsOf returns parts in mm and in the plane of the section.
+func (s *scene) discsOf(of []int) []pack.Disc {
+	out := make([]pack.Disc, len(of))
+	for k, i := range of {
+		p := &s.parts[i]
+		out[k] = pack.Disc{X: p.abs.X, Y: p.abs.Y, R: p.outer() / mm}
 	}
 	return out
 }
@@ -48,9 +58,8 @@ func (s *scene) hull() (perimeter, strings float64) {
 // hullStep is the largest angle (rad) between points of the drawn hull: a polygon within 0.03 % of the radius.
 const hullStep = 0.05
 
-// hullLoop is the taut string as a polygon, mm.
-func (s *scene) hullLoop() []section.Point {
-	discs := s.drawn()
+// hullLoop is the taut string round discs as a polygon, mm.
+func hullLoop(discs []pack.Disc) []section.Point {
 	arcs, _, _ := pack.Hull(discs)
 	var out []section.Point
 	for _, a := range arcs {
@@ -69,7 +78,7 @@ func (s *scene) bundleShape(sh *section.Shape) {
 	x, y, r := pack.Enclose(s.drawn())
 	sh.At = section.Point{X: x, Y: y}
 	sh.Rings = []section.Ring{{Material: s.holder.fill.id, R1: r}}
-	if line := s.hullLoop(); len(line) > 0 {
+	if line := hullLoop(s.drawn()); len(line) > 0 {
 		sh.Loops = [][]section.Point{line}
 	}
 }
@@ -79,12 +88,15 @@ const nanometre = 1e-6
 
 // loosen moves the parts of an open bundle apart by their mean clearance. No radius is reduced: the hull follows.
 func (r *resolver) loosen() {
+	if s := &r.scene; s.hulled() && s.holder.gap > 0 {
+		r.loosenParts(s.children(-1))
+	}
+}
+
+// loosenParts moves parts of the top level apart from each other.
+func (r *resolver) loosenParts(of []int) {
 	s := &r.scene
 	h := &s.holder
-	if !s.hulled() || !(h.gap > 0) {
-		return
-	}
-	of := s.children(-1)
 	discs := s.discs(of)
 	moved, ok := pack.PushApart(discs, pack.Box{}, -1, h.gap/mm)
 	if !ok {

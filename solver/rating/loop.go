@@ -43,12 +43,15 @@ type around struct {
 func (e *Engine) answer(ctx context.Context, s *scene, o Options) answered {
 	l := loop{e: e, s: s, grade: o.Accuracy, temps: e.startTemps(s), around: around{air: e.startAir(s)}}
 	s.out.air.Cautious = o.Cautious
+	if t := s.out.together; t != nil {
+		t.Outside.Cautious = o.Cautious
+	}
 	warm := s.out.free && e.out.like(&s.out) && len(e.temps) == len(s.parts)
 	l.keep = warm && o.Accuracy == heat.Draft
 	if warm {
 		l.flux = e.flux
 	} else if s.out.free {
-		l.flux = s.out.guess(s.heatAt(l.temps))
+		l.flux = s.guess(l.temps)
 	}
 	a := l.run(ctx)
 	if a.status == heat.ThermalRunaway && s.out.free {
@@ -68,6 +71,20 @@ func (s *scene) heatAt(temps []float64) (sum float64) {
 		sum += s.parts[i].heat(temps[i])
 	}
 	return sum
+}
+
+// guess spreads the heat that metals at temps make over the faces: evenly, or body by body.
+func (s *scene) guess(temps []float64) []float64 {
+	if !s.apart() {
+		return s.out.guess(s.heatAt(temps))
+	}
+	q := make([]float64, s.out.n)
+	for b := range s.bodies {
+		for _, i := range s.bodies[b].all {
+			q[b] += s.parts[i].heat(temps[i]) / s.out.wide[b]
+		}
+	}
+	return q
 }
 
 // run goes round until nothing changes any more.
@@ -98,7 +115,7 @@ func (l *loop) run(ctx context.Context) answered {
 // solve settles the resistances with the air and films at hand.
 func (l *loop) solve(ctx context.Context) answered {
 	f := l.s.out.at(l.flux)
-	l.e.prepare(l.s.build(l.air, f), l.grade)
+	l.e.prepare(l.s, l.s.problems(l.air, f), l.grade)
 	a := settle(ctx, l.e.model, l.s, l.temps, l.grade)
 	a.air, a.films = l.air, f
 	return a
@@ -235,6 +252,9 @@ func (l *loop) hotter() bool {
 		l.air[j] = up(c)
 		hottest = max(hottest, l.air[j])
 	}
+	if o.together != nil {
+		return l.hotterBodies(up, hottest)
+	}
 	for i := range o.n {
 		if !o.open[i] {
 			continue
@@ -250,13 +270,29 @@ func (l *loop) hotter() bool {
 	return hottest > ambient && hottest <= hottestC
 }
 
+// hotterBodies does it for several bodies: all outsides at once, since each is in the films of the others.
+func (l *loop) hotterBodies(up func(float64) float64, hottest float64) bool {
+	t := l.s.out.together
+	surfaces, _ := t.Surfaces(l.flux)
+	for i, k := range surfaces {
+		c := up(k - zeroC)
+		surfaces[i] = c + zeroC
+		hottest = max(hottest, c)
+	}
+	l.flux = t.Flux(surfaces)
+	for j := range l.air {
+		l.air[j] = max(l.air[j], surfaces[0]-zeroC)
+	}
+	return hottest > l.s.doc.Surroundings.AmbientC.V && hottest <= hottestC
+}
+
 // critical finds the largest factor on all currents that settles, with films as they are there.
 func (l *loop) critical(ctx context.Context, a answered) answered {
 	l.failed, l.good = nil, nil
 	l.memory.forget()
 	for range loopRounds {
 		f := l.s.out.at(l.flux)
-		l.e.prepare(l.s.build(l.air, f), l.grade)
+		l.e.prepare(l.s, l.s.problems(l.air, f), l.grade)
 		w, _, status := writeOut(ctx, l.e.model, l.s)
 		if status != heat.Converged {
 			return answered{status: status}

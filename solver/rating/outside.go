@@ -19,6 +19,8 @@ type outside struct {
 	open  []bool      // faces that have a film
 	n     int
 	coat  coat
+
+	together *film.Together // of several bodies, one a face; nil else
 }
 
 // coat is how the outermost surface radiates, and why.
@@ -46,6 +48,10 @@ func (r *resolver) outside() {
 	o := &s.out
 	o.free, o.air, o.coat = true, r.weather(), r.coat()
 	h := &s.holder
+	if s.apart() {
+		r.outsides()
+		return
+	}
 	if h.kind != section.Wireway {
 		o.face(1)
 		o.open[0], o.wide[0] = true, s.around()
@@ -140,16 +146,16 @@ func (r *resolver) coat() coat {
 			k.emissivity, k.assumed = h.skin, false
 		}
 		return k
-	case h.kind == section.OpenBundle || h.kind == section.NoHolder:
-		return r.partsCoat()
+	case h.kind == section.OpenBundle || h.kind == section.NoHolder || s.apart():
+		return r.partsCoat(s.children(-1))
 	}
 	return coat{usualEmissivity, usualAbsorbed, "a wall without layers", true}
 }
 
 // partsCoat is the mean over the parts' own outsides, by their circumference.
-func (r *resolver) partsCoat() coat {
+func (r *resolver) partsCoat(of []int) coat {
 	sum, around := coat{}, 0.0
-	for _, i := range r.scene.children(-1) {
+	for _, i := range of {
 		p := &r.scene.parts[i]
 		m := r.outermost(p)
 		w := p.outside().Perimeter()

@@ -35,6 +35,7 @@ func (r *resolver) places() {
 	}
 	r.clearance()
 	r.loosen()
+	r.findBodies()
 }
 
 // placed tells whether every part has a place.
@@ -132,6 +133,10 @@ func (r *resolver) frame() {
 		if !s.hulled() {
 			s.notes = append(s.notes, fmt.Sprintf("the wrap is taken as round, about the bundle's enclosing circle of ⌀ %s mm", digits(2*rad, 2)))
 		}
+	case section.Apart:
+		x, y, rad := pack.Enclose(s.discs(top))
+		s.origin = section.Point{X: x, Y: y}
+		s.holder.radius = rad * mm
 	case section.NoHolder:
 		if len(top) != 1 {
 			r.refuse(&section.Problem{
@@ -245,7 +250,7 @@ func (r *resolver) clearance() {
 			small = min(small, r.scene.parts[i].least())
 		}
 		h.gap = min(0.2*mm, 0.06*small)
-	case section.OpenBundle:
+	case section.OpenBundle, section.Apart:
 		h.gap = 0.05 * mm
 	}
 }

@@ -11,14 +11,18 @@ import (
 	"packrise/solver/section"
 )
 
-// shine tells the heat problem which media are gases and how surfaces radiate through them.
-func (s *scene) shine(p *heat.Problem) {
+// shine tells the heat problem which media are gases and how surfaces radiate through them. of has the scene's index of each of its parts; nil: the same.
+func (s *scene) shine(p *heat.Problem, of []int) {
 	p.ZeroK = zeroC
 	p.Pressure, _ = fluid.StandardPressure(s.doc.Surroundings.AltitudeM.V)
 	p.Filling = s.holder.fill.filling()
 	p.Wall.Emissivity = s.holder.insideEmissivity()
-	for i := range s.parts {
-		it, q := &s.parts[i], &p.Parts[i]
+	for i := range p.Parts {
+		k, q := i, &p.Parts[i]
+		if of != nil {
+			k = of[i]
+		}
+		it := &s.parts[k]
 		q.Emissivity = it.skin
 		if it.inside != nil {
 			q.Filling = it.inside.fill.filling()
@@ -41,7 +45,7 @@ func (m *medium) filling() heat.Filling {
 // insideEmissivity is that of the face that looks at the parts.
 func (e *enclosure) insideEmissivity() float64 {
 	switch {
-	case e.kind == section.OpenBundle && len(e.layers) == 0:
+	case (e.kind == section.OpenBundle || e.kind == section.Apart) && len(e.layers) == 0:
 		return e.strings
 	case e.skin > 0:
 		return e.skin
@@ -59,18 +63,25 @@ func (s *scene) radiationNote(a answered) string {
 			skins = append(skins, e)
 		}
 	}
-	for i := -1; i < len(s.parts); i++ {
-		e := &s.holder
-		if i >= 0 {
-			e = s.parts[i].inside
-		}
-		if e == nil || !e.fill.gas || e.kind == section.NoHolder {
-			continue
+	look := func(e *enclosure, of []int) {
+		if e == nil || !e.fill.gas || e.kind == section.NoHolder || len(of) == 0 {
+			return
 		}
 		add(e.insideEmissivity())
-		for _, j := range s.children(i) {
+		for _, j := range of {
 			add(s.parts[j].skin)
 		}
+	}
+	if !s.apart() {
+		look(&s.holder, s.children(-1))
+	}
+	for k := range s.bodies {
+		if b := &s.bodies[k]; b.several() {
+			look(&s.holder, b.top)
+		}
+	}
+	for i := range s.parts {
+		look(s.parts[i].inside, s.children(i))
 	}
 	if len(skins) == 0 || a.heat == nil {
 		return ""

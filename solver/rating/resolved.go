@@ -16,6 +16,7 @@ type scene struct {
 	notes  []string
 	filmW  float64 // W/m²K where the film is fixed, +Inf for a fixed wall
 	out    outside
+	bodies []body // of several in one surroundings
 }
 
 // enclosure is a holder, or the jacket of a cable.

@@ -23,7 +23,7 @@ type affine struct {
 // factor s at which the largest eigenvalue of s² K diag(α I²R20) reaches 1 (it is the gain of the loop resistance → heat
 // → temperature) or a metal reaches hottestC, whichever is lower. Where surfaces radiate K is a tangent, which is taken anew at the factor
 // that the last one gave.
-func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) (a answered) {
+func runaway(ctx context.Context, m model, s *scene, grade heat.Accuracy) (a answered) {
 	last := math.Inf(1)
 	for range tangents {
 		w, ground, status := writeOut(ctx, m, s)
@@ -56,7 +56,7 @@ func runaway(ctx context.Context, m *heat.Model, s *scene, grade heat.Accuracy) 
 const tangents = 12
 
 // steady solves at the temperatures that the matrix gives, and compares.
-func (a *affine) steady(ctx context.Context, m *heat.Model, s *scene, ground []float64, grade heat.Accuracy) answered {
+func (a *affine) steady(ctx context.Context, m model, s *scene, ground []float64, grade heat.Accuracy) answered {
 	temps := make([]float64, len(s.parts))
 	copy(temps, ground)
 	for j, t := range a.temperatures(1) {
@@ -75,7 +75,7 @@ func (a *affine) steady(ctx context.Context, m *heat.Model, s *scene, ground []f
 }
 
 // writeOut finds the influence matrix and the temperatures without heat, or, where surfaces radiate, those of the tangent.
-func writeOut(ctx context.Context, m *heat.Model, s *scene) (a affine, ground []float64, status heat.Status) {
+func writeOut(ctx context.Context, m model, s *scene) (a affine, ground []float64, status heat.Status) {
 	k, ground, status := m.Tangent(ctx)
 	if status != heat.Converged {
 		return a, nil, status

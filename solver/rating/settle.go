@@ -27,7 +27,7 @@ func tolerance(grade heat.Accuracy) float64 {
 // settle finds temperatures and heats that agree: T = T(q), q = I²R(T). The plain iteration contracts by α·(rise due to I²R), mostly 0.1–0.3;
 // mixing in the step before (Anderson's method of depth one) leaves three to five steps. Where it does not settle, runaway decides
 // whether any steady state exists.
-func settle(ctx context.Context, m *heat.Model, s *scene, start []float64, grade heat.Accuracy) answered {
+func settle(ctx context.Context, m model, s *scene, start []float64, grade heat.Accuracy) answered {
 	x := start
 	var lastG, lastF []float64
 	q := make([]float64, len(s.parts))
@@ -69,7 +69,7 @@ func cooling(q []float64) bool {
 }
 
 // solveAt solves with the heats that belong to the temperatures x.
-func solveAt(ctx context.Context, m *heat.Model, s *scene, x, q []float64) *heat.Result {
+func solveAt(ctx context.Context, m model, s *scene, x, q []float64) *heat.Result {
 	for i := range s.parts {
 		q[i] = s.parts[i].heat(x[i])
 	}
