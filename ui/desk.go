@@ -14,8 +14,9 @@ type Desk struct {
 	rooms   Rooms
 	runner  *latest.Runner[request, answer]
 	listen  []func(Changed)
-	closed  bool // tells nothing any more
-	ended   bool // nothing runs any more
+	picture func(Changed) bool // told first; true: a picture is being painted, of which painted will be told
+	closed  bool               // tells nothing any more
+	ended   bool               // nothing runs any more
 	gesture int
 
 	history *section.History
@@ -94,6 +95,14 @@ func (k *Desk) tell(c Changed) {
 	if k.closed || c == 0 {
 		return
 	}
+	if k.picture != nil {
+		k.picture(c)
+	}
+	k.tellWords(c)
+}
+
+// tellWords tells all but the picture.
+func (k *Desk) tellWords(c Changed) {
 	for _, f := range k.listen {
 		if f != nil {
 			f(c)

@@ -24,11 +24,20 @@ type answered struct {
 	failure  error             // of the program
 	rev      uint64            // the document that it belongs to; 0: no answer yet
 	draft    bool
-	base     uint64 // revision with which the drag under way began: frames since then may be shown
-	asked    uint64 // number of the newest request
-	stale    bool   // the document has been another one for staleAfter
-	wanted   ask    // how the answer under way was asked for
-	stop     func() // of the timer that makes it stale
+	base     uint64     // revision with which the drag under way began: frames since then may be shown
+	asked    uint64     // number of the newest request
+	stale    bool       // the document has been another one for staleAfter
+	wanted   ask        // how the answer under way was asked for
+	stop     func()     // of the timer that makes it stale
+	serial   uint64     // raised by every answer that is taken
+	unsaid   Changed    // what is told when the picture of this answer has been painted; 0: nothing waits for it
+	next     *delivered // came meanwhile
+}
+
+// delivered is an answer that has come.
+type delivered struct {
+	q request
+	a answer
 }
 
 func (a *answered) stopWaiting() {
@@ -84,8 +93,13 @@ func (k *Desk) deliver(_ uint64, q request, a answer) {
 }
 
 // arrive takes an answer, or drops it: it must be the one asked for last, for the document as it is now, or, within a drag, a frame of that drag
-// newer than the one shown.
+// newer than the one shown. The words about it are told together with its picture, and a newer one waits until then, so that all that is in sight
+// belongs to one revision.
 func (k *Desk) arrive(q request, a answer) {
+	if k.answer.unsaid != 0 {
+		k.answer.next = &delivered{q, a}
+		return
+	}
 	frame := k.trial != nil && q.rev > k.answer.base && q.rev > k.answer.rev
 	if k.closed || (q.number != k.answer.asked && !frame) {
 		return
@@ -101,7 +115,25 @@ func (k *Desk) arrive(q request, a answer) {
 		k.trial.doc, k.outlined = a.doc, false
 		c |= ChangedDocument
 	}
-	k.tell(c)
+	k.answer.serial++
+	if k.picture != nil && k.picture(c) {
+		k.answer.unsaid = c
+		return
+	}
+	k.tellWords(c)
+}
+
+// painted tells that a picture made since the answer of that number was taken is in sight.
+func (k *Desk) painted(serial uint64) {
+	if k.answer.unsaid == 0 || serial != k.answer.serial {
+		return
+	}
+	c, next := k.answer.unsaid, k.answer.next
+	k.answer.unsaid, k.answer.next = 0, nil
+	k.tellWords(c)
+	if next != nil {
+		k.arrive(next.q, next.a)
+	}
 }
 
 // Result returns the answer; fresh is false when it belongs to an older document or none exists (nil). Within a drag the last frame of that drag

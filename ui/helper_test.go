@@ -136,10 +136,10 @@ func testDeskWith(t *testing.T, d *section.Document, r Rooms) (*Desk, *loop) {
 	return k, l
 }
 
-// solved runs the loop until the desk has its standard answer.
+// solved runs the loop until the desk has its standard answer and the picture of it, if there is a canvas, is in sight.
 func (l *loop) solved(t *testing.T, k *Desk) {
 	t.Helper()
-	l.until(t, "an answer", func() bool { return !k.Solving() && !k.Draft() })
+	l.until(t, "an answer", func() bool { return !k.Solving() && !k.Draft() && k.answer.unsaid == 0 })
 }
 
 // testDesign is a jacket of 20 mm with three cores of 4 mm at 16 A and one filler.

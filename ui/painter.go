@@ -31,6 +31,7 @@ type sheet struct {
 	coarse    bool // quick: the heat map is sampled coarsely unless the whole one is there
 	isotherms bool
 	flow      bool
+	serial    uint64 // of the desk's answer
 }
 
 // picture is a finished one.
@@ -38,6 +39,7 @@ type picture struct {
 	img    *image.RGBA
 	view   render.View
 	coarse bool
+	serial uint64
 }
 
 // heatKey tells heat maps apart. A field is a result's and a result never changes.
@@ -70,7 +72,7 @@ func (p *painter) paint(_ context.Context, s sheet) *picture {
 	}
 	s.scene.Plain, s.scene.Flow = !s.isotherms, s.flow
 	render.SectionLayer(render.NewRaster(img), s.scene, s.view, s.scale, s.style)
-	return &picture{img: img, view: s.view, coarse: coarse}
+	return &picture{img: img, view: s.view, coarse: coarse, serial: s.serial}
 }
 
 // heatLayer returns the heat map, nil where nothing is solved, and whether it is a coarse one.

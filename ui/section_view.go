@@ -70,21 +70,22 @@ func NewSectionView(k *Desk) *SectionView {
 	v.hint = newReadout()
 	v.painter = newPainter(k.rooms.Hop, v.show)
 	v.ExtendBaseWidget(v)
-	k.Listen(v.changed)
+	k.picture = v.changed
 	return v
 }
 
 // Close ends the painting and waits for it.
 func (v *SectionView) Close() { v.painter.close() }
 
-// changed repaints. Hints and lines follow the document.
-func (v *SectionView) changed(c Changed) {
+// changed repaints, and tells whether a picture will come. Hints and lines follow the document.
+func (v *SectionView) changed(c Changed) bool {
 	if c&ChangedFile != 0 && c&ChangedDocument != 0 { // another design
 		v.cancelDrag()
 		v.fitted = true
 	}
-	v.repaint()
+	asked := v.repaint()
 	v.hover()
+	return asked
 }
 
 // Fit shows everything, and keeps showing everything when sizes change.
@@ -148,14 +149,18 @@ func (v *SectionView) style() render.Style {
 	return render.Style{Dark: themeDark(), Scale: v.density}
 }
 
-// repaint asks for a new picture, a quick one first, and shows the old one as the camera sees it until then.
-func (v *SectionView) repaint() {
-	if view, ok := v.ask(true); ok {
-		v.placeLines()
-		if v.pic == nil || v.pic.view != view {
-			v.raster.Refresh()
-		}
+// repaint asks for a new picture, a quick one first, and shows the old one as the camera sees it until then. It is false while there is no room
+// for one.
+func (v *SectionView) repaint() bool {
+	view, ok := v.ask(true)
+	if !ok {
+		return false
 	}
+	v.placeLines()
+	if v.pic == nil || v.pic.view != view {
+		v.raster.Refresh()
+	}
+	return true
 }
 
 // ask wants the picture of the scene as it is; ok is false while there is no room for one.
@@ -171,7 +176,7 @@ func (v *SectionView) ask(coarse bool) (view render.View, ok bool) {
 	}
 	v.painter.ask(sheet{
 		scene: scene, scale: render.ScaleOf(scene), view: view, style: v.style(), paper: themeColor(theme.ColorNameBackground),
-		coarse: coarse, isotherms: v.isotherms, flow: v.flow,
+		coarse: coarse, isotherms: v.isotherms, flow: v.flow, serial: v.desk.answer.serial,
 	})
 	return view, true
 }
@@ -189,6 +194,7 @@ func (v *SectionView) show(p *picture) {
 	if v.OnPainted != nil {
 		v.OnPainted()
 	}
+	v.desk.painted(p.serial)
 }
 
 // draw is the raster's generator: it only hands out pictures that are there.

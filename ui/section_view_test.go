@@ -119,3 +119,45 @@ func TestViewLeavesNoGoroutines(t *testing.T) {
 	}
 	t.Errorf("%d goroutines, %d before", runtime.NumGoroutine(), before)
 }
+
+// TestWordsWaitForThePicture: whenever answers are told of, within a drag and after it, the picture in sight is of the same answer.
+func TestWordsWaitForThePicture(t *testing.T) {
+	h, v := testView(t)
+	told, drafts := 0, 0
+	h.k.Listen(func(c Changed) {
+		if c&ChangedResult == 0 || h.k.Stale() {
+			return
+		}
+		told++
+		if h.k.Draft() {
+			drafts++
+		}
+		if v.pic.serial != h.k.answer.serial {
+			t.Errorf("the words are of answer %d, the picture of %d", h.k.answer.serial, v.pic.serial)
+		}
+	})
+	from := h.on(t, "L1")
+	h.press(from)
+	for i := range 12 {
+		before := told
+		h.v.Dragged(&fyne.DragEvent{PointEvent: fyne.PointEvent{Position: from.AddXY(0, float32(3*i+4))}})
+		h.l.until(t, "a frame", func() bool { return told > before })
+	}
+	h.v.DragEnd()
+	h.v.MouseUp(h.event(from, desktop.MouseButtonPrimary))
+	h.l.until(t, "the drop", func() bool { return !h.k.Drafting() })
+	h.l.solved(t, h.k)
+	if drafts == 0 || told <= drafts {
+		t.Errorf("told %d times, %d drafts", told, drafts)
+	}
+}
+
+// A canvas that has no room for a picture doesn't keep the words waiting.
+func TestWordsDoNotWaitForNoPicture(t *testing.T) {
+	k, l := testDesk(t, testDesign())
+	v := NewSectionView(k)
+	t.Cleanup(v.Close)
+	told := false
+	k.Listen(func(c Changed) { told = told || c&ChangedResult != 0 })
+	l.until(t, "an answer", func() bool { return told })
+}
