@@ -16,7 +16,8 @@ type border interface {
 	move(g *region, i int) bool                      // follows piece i; false if the wall has to be written again
 	bring(g *region, charge, v []float64, ground bool, y, mean []float64)
 	solved(g *region, charge, v, mean []float64) *bound
-	fork() border // for products beside it
+	fork() border    // for products beside it
+	hand() *exchange // what goes between it and the pieces
 }
 
 // maxOrderBorder bounds the harmonics of a piece within a border, which keeps no more.
@@ -55,6 +56,8 @@ type responder interface {
 	Len() int
 	RespondTo(y []float64, src outline.Sources, ground bool)
 	Incoming(y []float64, b [][]complex128)
+	RespondMany(l *outline.Lot)
+	IncomingMany(l *outline.Lot)
 }
 
 // collect lists the region's pieces.

@@ -21,7 +21,9 @@ func gmres(a operator, x, f []float64, tol float64, stop func() bool) (steps int
 // gmresCycle improves x over one basis; done tells that the residual is below end.
 func gmresCycle(a operator, x, f []float64, end float64, stop func() bool) (steps int, done, ok bool) {
 	r := make([]float64, len(f))
-	a(r, x)
+	if !isNought(x) {
+		a(r, x)
+	}
 	for i := range r {
 		r[i] = f[i] - r[i]
 	}
@@ -42,6 +44,15 @@ func gmresCycle(a operator, x, f []float64, end float64, stop func() bool) (step
 	}
 	k.improve(x)
 	return len(k.h), ok && k.residual() <= end, ok
+}
+
+func isNought(x []float64) bool {
+	for _, v := range x {
+		if v != 0 {
+			return false
+		}
+	}
+	return true
 }
 
 // krylov is a basis with the triangle of its products, kept by rotations.
@@ -86,14 +97,20 @@ func (k *krylov) add(w []float64) bool {
 
 // improve solves the triangle and adds the combination of the basis to x.
 func (k *krylov) improve(x []float64) {
-	n := len(k.h)
-	y := make([]float64, n)
-	for i := n - 1; i >= 0; i-- {
+	for i, f := range k.shares() {
+		axpy(x, f, k.basis[i])
+	}
+}
+
+// shares solves the triangle: how much of each direction is in the solution.
+func (k *krylov) shares() []float64 {
+	y := make([]float64, len(k.h))
+	for i := len(y) - 1; i >= 0; i-- {
 		s := k.g[i]
-		for j := i + 1; j < n; j++ {
+		for j := i + 1; j < len(y); j++ {
 			s -= k.h[j][i] * y[j]
 		}
 		y[i] = s / k.h[i][i]
-		axpy(x, y[i], k.basis[i])
 	}
+	return y
 }

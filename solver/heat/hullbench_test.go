@@ -38,10 +38,14 @@ func BenchmarkHull(b *testing.B) {
 }
 
 func BenchmarkHullInfluence(b *testing.B) {
-	p := laidUp(37)
-	b.ReportAllocs()
-	for b.Loop() {
-		heat.New(p, one(heat.Standard)).Influence(context.Background())
+	for _, n := range []int{7, 37, 91, 200} {
+		p := laidUp(n)
+		b.Run(fmt.Sprint(n), func(b *testing.B) {
+			b.ReportAllocs()
+			for b.Loop() {
+				heat.New(p, one(heat.Standard)).Influence(context.Background())
+			}
+		})
 	}
 }
 

@@ -2,8 +2,6 @@ package heat
 
 import (
 	"context"
-	"sync"
-	"sync/atomic"
 
 	"packrise/solver/harmonic"
 )
@@ -32,48 +30,33 @@ func (m *Model) coefficients(ctx context.Context) ([][]float64, bool) {
 	return k, true
 }
 
-// coefficientsBorder is coefficients within a border, column by column. Rises are corrected by the residuals as in columns, the adjoint solutions
-// being the solutions but for the small asymmetry of the discretised border, which is averaged away: reciprocity is exact.
+// coefficientsBorder is coefficients within a border. Rises are corrected by the residuals as in columns, the adjoint solutions being the
+// solutions but for the small asymmetry of the discretised border, which is averaged away: reciprocity is exact.
 func (m *Model) coefficientsBorder(ctx context.Context) ([][]float64, bool) {
 	g := m.top
 	n := len(g.sources)
-	x, res, k := make([][]float64, n), make([][]float64, n), make([][]float64, n)
-	var next atomic.Int64
-	var failed atomic.Bool
-	work := func(g *region) {
-		for s := int(next.Add(1)) - 1; s < n && !failed.Load(); s = int(next.Add(1)) - 1 {
-			q := make([]float64, n)
-			q[s] = 1
-			f := g.loadColumn(q, false)
-			x[s], res[s] = make([]float64, len(f)), make([]float64, len(f))
-			if _, ok := g.iterate(x[s], f, m.set.Accuracy.rough(), ended(ctx)); !ok {
-				failed.Store(true)
-				return
-			}
-			g.product(res[s], x[s], make([]float64, len(f)))
-			for i, v := range f {
-				res[s][i] = v - res[s][i]
-			}
-			k[s] = g.temperatures(q, x[s], false)
-		}
-	}
-	var all sync.WaitGroup
-	for range min(m.set.threads(), n) - 1 {
-		mine := g.fork()
-		all.Go(func() { work(mine) })
-	}
-	work(g)
-	all.Wait()
-	if failed.Load() {
+	all, charges := make([]column, n), g.sys.Charges()
+	ok := inBatches(n, m.set.threads(), func() *crowd { return newCrowd(g, charges) }, func(c *crowd, first, last int) bool {
+		some, ok := c.columns(first, last, m.set.Accuracy.rough(), ended(ctx))
+		copy(all[first:], some)
+		return ok
+	})
+	if !ok {
 		return nil, false
 	}
+	k := make([][]float64, n)
 	for i := range k {
+		k[i] = make([]float64, n)
+	}
+	for i := range k {
+		a := &all[i]
 		for j := range i + 1 {
-			v := (k[i][j] + k[j][i] - (harmonic.Dot(x[i], res[j])+harmonic.Dot(x[j], res[i]))/g.c2()) / 2
+			b := &all[j]
+			v := (a.t[j] + b.t[i] - (harmonic.Dot(a.x, b.rest)+harmonic.Dot(b.x, a.rest))/g.c2()) / 2
 			k[i][j], k[j][i] = v, v
 		}
 	}
-	return k, true
+	return k, ctx.Err() == nil
 }
 
 // Influence returns K[i][j] in K per W/m: the rise of part i's Core temperature for 1 W/m made in part j; rows and columns of parts that

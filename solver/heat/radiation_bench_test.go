@@ -59,15 +59,29 @@ func BenchmarkRadiationDrag(b *testing.B) {
 	}
 }
 
+// BenchmarkRadiationTangent is the influence matrix about a solution, of round holders, a wireway and open bundles.
 func BenchmarkRadiationTangent(b *testing.B) {
-	l := glowing(b, "t37_settled_air")
-	heats := make([]float64, len(l.Parts))
-	m := heat.New(l.Problem, one(heat.Standard))
-	for n := 0; b.Loop(); n++ {
-		for i := range heats {
-			heats[i] = l.Parts[i].Heat * (1 + 0.01*float64(n%7))
-		}
-		m.Solve(context.Background(), heats)
-		m.Influence(context.Background())
+	for _, c := range timed {
+		benchTangent(b, fmt.Sprint(c.parts), glowing(b, c.name).Problem)
 	}
+	for _, n := range []int{7, 37, 91, 200} {
+		benchTangent(b, fmt.Sprint("bundle ", n), lit(laidUp(n)))
+	}
+}
+
+func benchTangent(b *testing.B, name string, p heat.Problem) {
+	heats := make([]float64, len(p.Parts))
+	b.Run(name, func(b *testing.B) {
+		m := heat.New(p, one(heat.Standard))
+		b.ReportAllocs()
+		for n := 0; b.Loop(); n++ {
+			b.StopTimer()
+			for i := range heats {
+				heats[i] = p.Parts[i].Heat * (1 + 0.01*float64(n%7))
+			}
+			m.Solve(context.Background(), heats)
+			b.StartTimer()
+			m.Tangent(context.Background())
+		}
+	})
 }

@@ -1,7 +1,18 @@
 package heat
 
-// send works out what everything in the knot sends out at unknowns z and heats q (W/m, by source), the insides of cables first.
+// send works out what everything in the knot sends out at unknowns z and heats q (W/m, by source), the insides of cables last.
 func (k *knot) send(z, q []float64) {
+	k.utter(z, q)
+	k.charges.Send(k.flow)
+	for i := range k.bonds {
+		if b := &k.bonds[i]; b.inside != nil {
+			b.inside.send(z, b.q)
+		}
+	}
+}
+
+// utter prepares the flow.
+func (k *knot) utter(z, q []float64) {
 	g := k.g
 	x := k.flow.X
 	copy(x, z[k.x0:])
@@ -27,12 +38,6 @@ func (k *knot) send(z, q []float64) {
 	k.shine(z)
 	for i, p := range k.charge {
 		k.flow.Q[i] = g.c2() * p
-	}
-	k.charges.Send(k.flow)
-	for i := range k.bonds {
-		if b := &k.bonds[i]; b.inside != nil {
-			b.inside.send(z, b.q)
-		}
 	}
 }
 
@@ -71,6 +76,33 @@ func (k *knot) shine(z []float64) {
 // inside, omega what a cable's jacket lets in; ground adds the drive of sides and ambient.
 func (k *knot) receive(level float64, omega []complex128, ground bool) {
 	g, f := k.g, k.flow
+	k.expect(level, omega, ground)
+	k.charges.Receive(f)
+	switch {
+	case k.rad != nil && k.rad.sides != nil:
+		k.rad.sides.bring(g, k.charge, f.X, ground, f.Y, f.Mean)
+	case g.border != nil:
+		g.border.bring(g, k.charge, f.X, ground, f.Y, f.Mean)
+	}
+	k.meet()
+	for i := range k.bonds {
+		if b := &k.bonds[i]; b.inside != nil {
+			b.inside.receive(k.within(i), b.omega, ground)
+		}
+	}
+	if k.feel(); k.rad != nil && k.rad.sides != nil {
+		k.rad.sides.means(k.t[k.rad.first[len(k.bonds)]:])
+	}
+}
+
+// within is the mean temperature of the inside of the jacket of piece i.
+func (k *knot) within(i int) float64 {
+	return k.level + k.flow.Mean[i] + k.heat[i]*k.g.pieces[i].series
+}
+
+// expect prepares what comes from outside.
+func (k *knot) expect(level float64, omega []complex128, ground bool) {
+	f := k.flow
 	k.level = level
 	clear(f.Omega)
 	copy(f.Omega, omega)
@@ -81,14 +113,12 @@ func (k *knot) receive(level float64, omega []complex128, ground bool) {
 		}
 	}
 	k.lean(ground)
-	k.charges.Receive(f)
+}
+
+// meet works out what the pieces' insides feel.
+func (k *knot) meet() {
+	g, f := k.g, k.flow
 	k.level += f.Lift
-	switch {
-	case k.rad != nil && k.rad.sides != nil:
-		k.rad.sides.bring(g, k.charge, f.X, ground, f.Y, f.Mean)
-	case g.border != nil:
-		g.border.bring(g, k.charge, f.X, ground, f.Y, f.Mean)
-	}
 	for i := range k.bonds {
 		b, o := &k.bonds[i], g.sys.Offset(i)
 		for n := range b.c {
@@ -109,12 +139,10 @@ func (k *knot) receive(level float64, omega []complex128, ground bool) {
 				b.omega[n] = complex(b.in[n]*b.c[2*n], b.in[n]*b.c[2*n+1])
 			}
 		}
-		b.inside.receive(k.level+f.Mean[i]+k.heat[i]*g.pieces[i].series, b.omega, ground)
 	}
-	k.feel()
 }
 
-// feel works out the temperatures of the patches.
+// feel works out the temperatures of the patches, but for those of a border.
 func (k *knot) feel() {
 	if k.rad == nil {
 		return
@@ -136,8 +164,6 @@ func (k *knot) feel() {
 		k.rad.rims[i].feel(k.t, tau, k.level+f.Mean[i])
 	}
 	if k.rad.sides != nil {
-		from, to := k.rad.first[len(k.bonds)], len(k.rad.area)
-		k.rad.sides.means(k.t[from:to])
 		return
 	}
 	tau := k.tau[:len(k.absorbed)]

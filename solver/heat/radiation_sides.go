@@ -29,6 +29,8 @@ type patched interface {
 type patches interface {
 	RespondTo(y []float64, src outline.Sources, ground bool, w []float64)
 	Means(t, y []float64, src outline.Sources)
+	RespondMany(l *outline.Lot, w []float64)
+	MeansMany(t []float64, l *outline.Lot)
 }
 
 func (s *sides) outline() gas.Outline {
