@@ -43,7 +43,7 @@ func (r *report) check(d *Document) {
 // checkHolder keeps the keys of a holder to those of its kind.
 func checkHolder(r *report, h *Holder, at path) {
 	round, rectangle := h.Kind == Jacket || h.Kind == Conduit, h.Kind == Wireway
-	open := h.Kind == OpenBundle || h.Kind == NoHolder
+	open := h.Kind == OpenBundle || h.Kind == NoHolder || h.Kind == Apart
 	if !round && !rectangle && !open {
 		return // of no kind: reported already
 	}
@@ -59,7 +59,7 @@ func checkHolder(r *report, h *Holder, at path) {
 	reject(!rectangle && h.Sides != Sides{}, "sides", ", which is no rectangle", "take it out")
 	reject(open && h.Stock != "", "stock", ", which has no wall", "take it out")
 	reject(open && len(h.Layers) > 0, "layers", ", which has no wall", "take it out")
-	reject(h.Kind != OpenBundle && h.StringEmissivity.OK, "string_emissivity", ", which has no strings", "take it out")
+	reject(h.Kind != OpenBundle && h.Kind != Apart && h.StringEmissivity.OK, "string_emissivity", ", which has no strings", "take it out")
 	reject(h.Kind == NoHolder && h.Fill != "", "fill", ", which encloses nothing", "take it out")
 	reject(h.Kind == NoHolder && h.ClearanceMM.OK, "clearance_mm", ", which encloses nothing", "take it out")
 	if h.TouchLimitC.OK && len(at.steps()) > 1 {
@@ -119,12 +119,13 @@ func holderWord(at path) string {
 func checkHolderParts(r *report, d *Document) {
 	if d.Holder.Kind == NoHolder && len(d.Parts) > 1 {
 		r.add(path("").key("holder").key("kind"), "one-bare-part", fmt.Sprintf("holder kind none is one bare part, but there are %d", len(d.Parts)),
-			"write kind: open-bundle, or take the other parts out")
+			"write kind: open-bundle, or apart where they lie beside each other, or take the other parts out")
 	}
+	checkApart(r, d)
 	for i := range d.Builds {
 		at := path("").key("builds").key(d.Builds[i].Name).key("holder").key("kind")
 		switch d.Builds[i].Holder.Kind {
-		case Wireway, NoHolder:
+		case Wireway, NoHolder, Apart:
 			r.add(at, "key-of-kind", "its holder is of kind "+d.Builds[i].Holder.Kind+", but a cable has a jacket", "write kind: jacket with inside_mm, or with width_mm and height_mm of a flat one")
 		}
 	}

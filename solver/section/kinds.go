@@ -7,12 +7,8 @@ import (
 	"gopkg.in/yaml.v3"
 )
 
-// word is one of the words that a key takes. A word that is not built yet is refused with a sentence that says what to use
-// meanwhile: building it means to delete instead.
-type word struct {
-	name    string
-	instead string
-}
+// word is one of the words that a key takes.
+type word struct{ name string }
 
 var (
 	surroundingsKinds = []word{
@@ -24,7 +20,7 @@ var (
 		{name: Wireway},
 		{name: OpenBundle},
 		{name: NoHolder},
-		{Apart, "use a holder, or kind: none with one bare part"},
+		{name: Apart},
 	}
 	partKinds       = []word{{name: Core}, {name: Cable}, {name: Rod}}
 	roles           = []word{{name: RoleLine}, {name: RoleNeutral}, {name: RoleEarth}, {name: RoleControl}, {name: RoleSpare}}
@@ -53,9 +49,7 @@ type oneOf struct {
 func (c oneOf) names() []string {
 	var out []string
 	for _, w := range c.words {
-		if w.instead == "" {
-			out = append(out, w.name)
-		}
+		out = append(out, w.name)
 	}
 	return out
 }
@@ -65,12 +59,7 @@ func (c oneOf) check(r *report, v string, at path) {
 		return
 	}
 	for _, w := range c.words {
-		switch {
-		case w.name != v:
-		case w.instead == "":
-			return
-		default:
-			r.add(at, "not-built", fmt.Sprintf("%s `%s` is not built yet in this version", c.what, v), w.instead)
+		if w.name == v {
 			return
 		}
 	}
