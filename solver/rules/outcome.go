@@ -149,7 +149,7 @@ type Check struct {
 	Limit      float64 // A
 	Within     bool    // Value ≤ Limit
 	Known      bool    // false: a number is missing, Text says which
-	NextSizeUp bool    // within only because 240.4(B) permits the next standard rating
+	NextSizeUp bool    // it exceeds the limit, and NEC 240.4(B) lets the next standard rating stand
 	Clause     string
 	FromMemory bool
 	Text       string
