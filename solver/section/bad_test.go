@@ -158,7 +158,7 @@ func badKinds() []bad {
 }
 
 func TestBadInput(t *testing.T) {
-	for _, group := range [][]bad{wholeFiles(), badKeys(), badNumbers(), badKinds(), badSurroundings(), badParts(), badLoads()} {
+	for _, group := range [][]bad{wholeFiles(), badKeys(), badNumbers(), badKinds(), badSurroundings(), badParts(), badLoads(), badRatings()} {
 		for _, c := range group {
 			t.Run(c.name, func(t *testing.T) { checkBad(t, c) })
 		}

@@ -80,11 +80,26 @@ func OwnBuild(d *Document, id string) *Document {
 		if b == nil || users(d, b.Name) < 2 {
 			continue
 		}
+		d = spreadReasons(d)
 		own := *b
 		own.Name = freshBuild(d, b.Name)
 		d = change(d.With(func(d *Document) { d.Builds = append(slices.Clip(d.Builds), own) }), cable, func(p *Part) { p.Build = own.Name })
 	}
 	return d
+}
+
+// spreadReasons writes the reason of a limit in a build under each of its cables, so that none loses it when they part.
+func spreadReasons(d *Document) *Document {
+	if len(d.Reasons) == 0 {
+		return d
+	}
+	out := d
+	for _, p := range UnfoldAll(d) {
+		if p.Depth > 0 {
+			out = SetReason(out, ReasonLimit+p.ID, d.LimitReason(p.ID))
+		}
+	}
+	return out
 }
 
 // users counts the parts that are written with a build.

@@ -12,16 +12,16 @@ import (
 // FuzzRead: reading never panics, and what it takes is written, reads back the same, and is then written to the byte. An edit of
 // it is written too.
 func FuzzRead(f *testing.F) {
-	for _, file := range append(feFiles(f), "testdata/commented.yaml") {
+	for _, file := range append(feFiles(f), "testdata/commented.yaml", "testdata/rated.yaml") {
 		text, err := os.ReadFile(file)
 		if err != nil {
 			f.Fatal(err)
 		}
-		if len(text) < 5000 || filepath.Base(file) == "commented.yaml" {
+		if len(text) < 5000 || filepath.Base(filepath.Dir(file)) == "testdata" {
 			f.Add(text)
 		}
 	}
-	for _, group := range [][]bad{wholeFiles(), badKeys(), badNumbers(), badKinds(), badParts(), badLoads()} {
+	for _, group := range [][]bad{wholeFiles(), badKeys(), badNumbers(), badKinds(), badParts(), badLoads(), badRatings()} {
 		for _, c := range group {
 			if len(c.text) < 5000 {
 				f.Add([]byte(c.text))

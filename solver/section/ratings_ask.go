@@ -99,7 +99,7 @@ func (t *targets) surface(at string) bool {
 		words = words[:len(words)-1]
 	}
 	wall, cable := words[len(words)-1], strings.Join(words[:len(words)-1], "/")
-	if cable == "" {
+	if len(words) == 1 {
 		return wall == Jacket || wall == Conduit || wall == Wireway
 	}
 	p := t.parts[cable]
