@@ -15,6 +15,15 @@ func (a *Against) side() outline.Side {
 	return outline.Side{Kind: outline.Insulated}
 }
 
+// hull is what a bundle's hull rests against.
+func (a *Against) hull() outline.Rest {
+	r := outline.Rest{Share: a.Share, At: a.At}
+	if a.Held {
+		r.Outside = outline.Outside{Film: math.Inf(1), Temp: a.Temp}
+	}
+	return r
+}
+
 // cut divides the outside's contour, which has one film all round, where it rests against something.
 func (a *Against) cut(c *outline.Contour) {
 	if a.Share == 0 {

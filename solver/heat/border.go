@@ -31,6 +31,7 @@ type bound struct {
 	mean     float64        // of the outer surface
 	sides    [4]float64
 	released float64
+	against  float64    // of it, what the outside rests against takes up
 	mid      complex128 // of a square that covers everything
 	half     float64
 	field    func() pointField

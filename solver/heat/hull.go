@@ -21,6 +21,7 @@ type hullWall struct {
 	k        float64
 	fineness float64
 	out      outline.Outside
+	rest     outline.Rest
 	arcs     []Arc // of the pieces as they lie
 	sys      *outline.HullSystem
 	exchange
@@ -28,7 +29,7 @@ type hullWall struct {
 
 func newHullWall(p *Problem, fineness float64) *hullWall {
 	w := &p.Wall
-	return &hullWall{taut: w.Taut, k: p.MediumK, fineness: fineness, out: outline.Outside{Film: w.Film, Temp: w.Ambient}}
+	return &hullWall{taut: w.Taut, k: p.MediumK, fineness: fineness, out: outline.Outside{Film: w.Film, Temp: w.Ambient}, rest: w.Against.hull()}
 }
 
 // wrap winds the string round the region's pieces.
@@ -83,7 +84,7 @@ func (g *region) mirror(i int) outline.Mirror {
 
 // shape is the hull round the pieces.
 func (h *hullWall) shape() outline.Hull {
-	s := outline.Hull{MediumK: h.k}
+	s := outline.Hull{MediumK: h.k, Rest: h.rest}
 	for _, a := range h.arcs {
 		s.Arcs = append(s.Arcs, outline.Arc{Disc: a.Disc, From: a.From, To: a.To, Bare: h.out, String: h.out})
 	}
@@ -121,9 +122,9 @@ func (h *hullWall) move(g *region, _ int) bool {
 
 // outside takes other films and temperatures.
 func (h *hullWall) outside(w *Wall) {
-	h.out = outline.Outside{Film: w.Film, Temp: w.Ambient}
+	h.out, h.rest = outline.Outside{Film: w.Film, Temp: w.Ambient}, w.Against.hull()
 	if h.sys != nil {
-		h.sys = h.sys.Outside(h.shape().Arcs)
+		h.sys = h.sys.Outsides(h.shape().Arcs, h.rest.Outside)
 		h.with = h.sys
 	}
 }
@@ -141,7 +142,9 @@ func (h *hullWall) solved(g *region, charge, v, mean []float64) *bound {
 // tell fills in what the hull's unknowns say of it.
 func (h *hullWall) tell(s *bound) {
 	y, sys := s.y, h.sys
-	hot, average, out := sys.Faces(sys.Temperatures(y, h.src))
+	t := sys.Temperatures(y, h.src)
+	hot, average, out := sys.Faces(t)
+	s.against = sys.RestOut(t)
 	s.hot, s.mean, s.released, s.arcs = []float64{hot}, average, out, h.arcs
 	lo, hi := complex(math.Inf(1), math.Inf(1)), complex(math.Inf(-1), math.Inf(-1))
 	for _, d := range h.discs {

@@ -268,6 +268,7 @@ func (m *Model) result(s *state) *Result {
 func (m *Model) readWall(r *Result, s *state) {
 	if s.border != nil {
 		r.WallMax, r.WallMean, r.SideOut, r.Released = s.border.hot, s.border.mean, s.border.sides, s.border.released
+		r.AgainstOut = s.border.against
 		if s.border.arcs != nil {
 			r.WallMax[0] = s.exposed(r.WallMax[0])
 		}

@@ -11,6 +11,7 @@ import (
 type Hull struct {
 	MediumK float64 // of what fills the pockets
 	Arcs    []Arc   // counterclockwise
+	Rest    Rest    // of all of them, in place of their own outsides
 	// Stop, if any, is asked between pieces of work; when it says so NewHull and Renew return nil.
 	Stop func() bool
 }
@@ -70,6 +71,9 @@ type piece struct {
 	start, dir complex128
 	length     float64
 	out        Outside
+	rests      bool    // see Rest
+	tip        [2]bool // where it begins or ends to
+	held       bool    // at a temperature, on one side of a tip
 }
 
 // at returns the point at s from the beginning.
@@ -115,7 +119,7 @@ func (h *Hull) pieces(discs []Disc) []piece {
 			all = append(all, p.split(discs)...)
 		}
 	}
-	return all
+	return h.lean(all)
 }
 
 // grazed is the gap, as a share of its radius, under which a part divides the string that passes it as if it touched.

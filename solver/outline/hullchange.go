@@ -3,8 +3,12 @@ package outline
 import "slices"
 
 // Outside returns the system with other outsides, as many as the hull has arcs: Bare and String of each are read.
-func (s *HullSystem) Outside(arcs []Arc) *HullSystem {
+func (s *HullSystem) Outside(arcs []Arc) *HullSystem { return s.Outsides(arcs, s.hull.Rest.Outside) }
+
+// Outsides is Outside where what the hull rests against changes too: not whether it is held.
+func (s *HullSystem) Outsides(arcs []Arc, rest Outside) *HullSystem {
 	t := *s
+	t.hull.Rest.Outside = rest
 	t.hull.Arcs = slices.Clone(s.hull.Arcs)
 	for i := range arcs {
 		t.hull.Arcs[i].Bare, t.hull.Arcs[i].String = arcs[i].Bare, arcs[i].String

@@ -36,7 +36,7 @@ func (g *hullGrading) length(p *piece, s float64) float64 {
 			l = math.Min(l, g.near(d, z, l))
 		}
 	}
-	return math.Max(l, p.length*1e-6)
+	return math.Max(g.tips(p, s, l), p.length*1e-6)
 }
 
 // cuts divides p into panels of those lengths, as a straight side is.
