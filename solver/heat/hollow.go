@@ -14,12 +14,19 @@ type hollow struct {
 	parts []int
 	eps   float64 // emissivity of the wall
 	stirs bool
-	at    []int // patch of the contours for each patch of the exchange
+	seen  *gas.Enclosure // what the surfaces saw of each other when they stood as they do; nil else
+	at    []int          // patch of the contours for each patch of the exchange
 	ex    *gas.Exchange
 	t, e  []float64 // room
 	base  []float64
 	out   []float64
 	nusselt
+}
+
+// hollowGrain is grain for patches along the cells of contours, which lie finer near contacts anyway.
+func (a Accuracy) hollowGrain() (part, wall float64, points int) {
+	part, wall, points = a.grain()
+	return 1.5 * part, wall, points
 }
 
 // hollows lists the spaces that are full of gas, that of the top level first.
@@ -70,7 +77,7 @@ func (l *plan) faces(hollows []*hollow) faces {
 
 // divide cuts the faces of all hollows of sys into patches.
 func (l *plan) divide(sys *outline.Shaped, hollows []*hollow, a Accuracy) *outline.ShapedPatches {
-	part, turn, _ := a.grain()
+	part, turn, _ := a.hollowGrain()
 	f := l.faces(hollows)
 	grains := map[*hollow]*gas.Grain{}
 	for _, h := range hollows {
@@ -156,9 +163,11 @@ func (h *hollow) look(l *plan, p *outline.ShapedPatches, points, threads int, st
 		discs = append(discs, l.disc(i, take(c, off, l.p.Parts[i].Emissivity)))
 	}
 	out := gas.Outline{Segments: take(h.wall, 0, h.eps)}
-	e := gas.NewEnclosure(discs, out, points, threads, stop)
-	if e == nil {
-		return false
+	e := h.seen
+	if e == nil || !e.Alike(discs, out, points) {
+		if e = gas.NewEnclosure(discs, out, points, threads, stop); e == nil {
+			return false
+		}
 	}
 	h.ex = gas.NewExchange(e, eps)
 	n := e.Len()

@@ -217,6 +217,10 @@ func (m *Model) glowOn(i int, old []int) {
 // Resume lets a model that has not solved yet start from what old, of a like section, knows: its solution, and what surfaces see of each other. The
 // old model must not be used any more.
 func (m *Model) Resume(old *Model) {
+	if m.form != nil && old != nil && old.form != nil {
+		m.form.resume(old.form)
+		return
+	}
 	if m.top == nil || old == nil || old.top == nil || m.ready {
 		return
 	}

@@ -12,7 +12,6 @@ type shaped struct {
 	m    *Model
 	plan *plan
 	sys  *outline.Shaped // nil until it is needed
-	k    [][]float64     // influence, by part
 
 	glow   *shine    // what radiates, nil before it is known or where nothing does
 	before *shine    // the one before, of which a new one may keep something
@@ -38,7 +37,7 @@ func (s *shaped) prepare(ctx context.Context) bool {
 		return true
 	}
 	factor, _, _ := s.m.set.Accuracy.settings()
-	s.plan, s.k = newPlan(&s.m.p), nil
+	s.plan = newPlan(&s.m.p)
 	s.sys = outline.NewShaped(s.plan.contours, factor, ended(ctx))
 	if s.sys != nil {
 		s.glow, s.before = s.newShine(s.before), nil
@@ -48,7 +47,7 @@ func (s *shaped) prepare(ctx context.Context) bool {
 
 // move puts a part elsewhere.
 func (s *shaped) move() {
-	s.sys, s.k = nil, nil
+	s.sys = nil
 	if s.glow != nil {
 		s.glow, s.before = nil, s.glow
 	}
@@ -56,7 +55,6 @@ func (s *shaped) move() {
 
 // outside takes other films and temperatures.
 func (s *shaped) outside() {
-	s.k = nil
 	if s.sys == nil {
 		return
 	}
@@ -64,7 +62,7 @@ func (s *shaped) outside() {
 	s.plan = l
 	s.sys = s.sys.Outside(l.sides())
 	if s.glow != nil {
-		s.glow.patch = s.glow.patch.On(s.sys)
+		s.glow.patch, s.glow.cores = s.glow.patch.On(s.sys), nil
 	}
 }
 
@@ -110,6 +108,7 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 	s.estimate(r)
 	if g := s.glow; g != nil {
 		r.Unknowns += len(g.e)
+		g.cores = append([]float64(nil), r.Core...)
 		part, _, _ := s.m.set.Accuracy.grain()
 		s.m.widen(r, s.m.rise(r)*grainError/(part*part))
 	}
@@ -130,7 +129,7 @@ func (s *shaped) respond(ctx context.Context, r *Result, heats []float64) []floa
 	if r.Steps, r.Status = g.solve(ctx, load, tol); r.Status == Cancelled {
 		return nil
 	}
-	s.heats, s.k = append(s.heats[:0], heats...), nil
+	s.heats = append([]float64(nil), heats...)
 	h := g.hollows[0]
 	r.Radiates, r.Nusselt, r.Beyond = true, h.nu, !h.inRange
 	return g.answer(g.t, load, true, g.e)
@@ -200,40 +199,6 @@ func (s *shaped) estimate(r *Result) {
 		}
 		r.ErrorK = math.Max(r.ErrorK, r.PartErrorK[i])
 	}
-}
-
-// influence fills in the rises for 1 W/m in each metal.
-func (s *shaped) influence(ctx context.Context, out [][]float64) Status {
-	if !s.prepare(ctx) {
-		return Cancelled
-	}
-	parts := s.m.p.Parts
-	for j := range parts {
-		if parts[j].Core != Metal {
-			continue
-		}
-		heats := make([]float64, len(parts))
-		heats[j] = 1
-		y := s.sys.Respond(s.load(heats), false)
-		for i := range parts {
-			if parts[i].Core != Metal {
-				continue
-			}
-			if out[i] == nil {
-				out[i] = make([]float64, len(parts))
-			}
-			out[i][j] = s.sys.Metal(y, s.plan.first[i])
-		}
-	}
-	for i := range out { // reciprocal but for what the densities lack
-		for j := range i {
-			if out[i] != nil && out[j] != nil {
-				v := (out[i][j] + out[j][i]) / 2
-				out[i][j], out[j][i] = v, v
-			}
-		}
-	}
-	return Converged
 }
 
 // shapedField is the field of a section that is not round.

@@ -4,6 +4,7 @@ import (
 	"context"
 	"math"
 	"math/cmplx"
+	"slices"
 
 	"packrise/solver/outline"
 )
@@ -22,7 +23,8 @@ type shine struct {
 	w       []float64 // room
 	zero    float64
 	press   float64
-	warm    bool // e is the solution of something alike
+	warm    bool      // e is the solution of something alike
+	cores   []float64 // by part, of the last solution; nil: that was of another section
 }
 
 // newShine divides the faces that look into gases; nil if there are none. What is known of a like section is a start.
@@ -47,17 +49,31 @@ func (s *shaped) newShine(old *shine) *shine {
 	for _, v := range []*[]float64{&g.e, &g.t, &g.base, &g.still, &g.w} {
 		*v = make([]float64, n)
 	}
-	if old != nil && len(old.e) == n {
-		copy(g.e, old.e)
-		g.warm = old.warm
-	}
+	g.inherit(old)
 	return g
+}
+
+// inherit starts from the emissions of an older section, and keeps what surfaces saw of each other where nothing stands elsewhere.
+func (g *shine) inherit(old *shine) {
+	if old == nil || len(old.e) != len(g.e) || len(old.hollows) != len(g.hollows) || !slices.Equal(old.patch.Contour, g.patch.Contour) {
+		return
+	}
+	copy(g.e, old.e)
+	g.warm = old.warm
+	if !slices.Equal(old.patch.A, g.patch.A) || !slices.Equal(old.patch.B, g.patch.B) || old.s.m.set.Accuracy != g.s.m.set.Accuracy {
+		return
+	}
+	for i, h := range g.hollows {
+		if o := old.hollows[i]; o.ex != nil && h.wall == o.wall && slices.Equal(h.parts, o.parts) {
+			h.seen = o.ex.Enclosure
+		}
+	}
 }
 
 // look lets all surfaces look about; false if ctx ended first.
 func (g *shine) look(ctx context.Context) bool {
 	set := g.s.m.set
-	_, _, points := set.Accuracy.grain()
+	_, _, points := set.Accuracy.hollowGrain()
 	for _, h := range g.hollows {
 		if h.ex == nil && !h.look(g.s.plan, g.patch, points, set.threads(), ended(ctx)) {
 			return false
@@ -196,6 +212,20 @@ func (g *shine) begin(ctx context.Context) (steps int, ok bool) {
 	}
 	g.change(f, d, g.e)
 	return g.improve(ctx, g.e, f, newtonRough)
+}
+
+// column is the contours' answer to 1 W/m more in a metal, about the last solution.
+func (g *shine) column(ctx context.Context, contour int) ([]float64, bool) {
+	heats := make([]float64, len(g.s.plan.contours))
+	heats[contour] = 1
+	n := len(g.e)
+	e, f, t := make([]float64, n), make([]float64, n), make([]float64, n)
+	g.answer(t, heats, false, e)
+	g.change(f, t, e)
+	if _, ok := g.improve(ctx, e, f, tangentTolerance); !ok {
+		return nil, false
+	}
+	return g.answer(t, heats, false, e), true
 }
 
 // level makes the emissions in each hollow add up to nothing, exactly.
