@@ -77,18 +77,23 @@ func (c *coupled) pass(z, heats []float64, ground bool) {
 	for i, s := range c.m.held {
 		c.q[s] = z[c.held+i] / c.grip[i]
 	}
-	level := 0.0
-	if c.m.top.border == nil {
-		for _, v := range c.q {
-			level += v
-		}
-		level *= c.m.outsideR()
-		if ground {
-			level += c.m.p.Wall.Ambient
-		}
+	level := c.levelOf(c.q)
+	if ground && c.m.top.border == nil {
+		level += c.m.p.Wall.Ambient
 	}
 	c.top.send(z, c.q)
 	c.top.receive(level, nil, ground)
+}
+
+// levelOf is how far heats q raise the mean temperature of a round wall's inside; 0 within a border.
+func (c *coupled) levelOf(q []float64) (level float64) {
+	if c.m.top.border != nil {
+		return 0
+	}
+	for _, v := range q {
+		level += v
+	}
+	return level * c.m.outsideR()
 }
 
 // miss sets r to how far z is from the solution for given heats, after pass.

@@ -2,15 +2,15 @@ package heat
 
 import (
 	"context"
-	"sync"
-	"sync/atomic"
 )
 
 // tangentTolerance is the residual of a column of the influence matrix of a section that radiates.
 const tangentTolerance = 1e-4
 
 // Radiates tells whether surfaces radiate to each other in the section.
-func (m *Model) Radiates() bool { return m.top != nil && m.top.opens() }
+func (m *Model) Radiates() bool {
+	return m.top != nil && m.top.opens() || m.form != nil && m.form.radiates()
+}
 
 // Tangent returns K and ground such that the Core temperatures of Metal parts are ground + K q near the last solution; rows and columns of parts
 // that aren't Metal are nil. Where nothing radiates they are so everywhere: Influence and Ground.
@@ -24,6 +24,9 @@ func (m *Model) Tangent(ctx context.Context) (k [][]float64, ground []float64, s
 	}
 	if k, status = m.Influence(ctx); status != Converged {
 		return k, nil, status
+	}
+	if m.form != nil {
+		return k, m.form.tangentAt(k), Converged
 	}
 	ground = make([]float64, len(m.p.Parts))
 	c := m.glow
@@ -51,37 +54,25 @@ func (m *Model) tangent(ctx context.Context) ([][]float64, bool) {
 	for _, s := range m.held {
 		held[s] = true
 	}
+	var free []int
 	k := make([][]float64, n)
 	for s := range k {
 		k[s] = make([]float64, n)
-	}
-	var next atomic.Int64
-	var failed atomic.Bool
-	work := func(c *coupled) {
-		for s := int(next.Add(1)) - 1; s < n && !failed.Load(); s = int(next.Add(1)) - 1 {
-			if held[s] {
-				continue
-			}
-			rise, ok := c.column(ctx, s)
-			if !ok {
-				failed.Store(true)
-				return
-			}
-			for i, t := range rise {
-				if !held[i] {
-					k[i][s] = t
-				}
-			}
+		if !held[s] {
+			free = append(free, s)
 		}
 	}
-	var all sync.WaitGroup
-	for range min(m.set.threads(), n) - 1 {
-		mine := m.glow.fork()
-		all.Go(func() { work(mine) })
-	}
-	work(m.glow.fork())
-	all.Wait()
-	return k, !failed.Load()
+	ok := inBatches(len(free), m.set.threads(), func() *throng { return newThrong(m.glow, len(free)) }, func(t *throng, first, last int) bool {
+		who := free[first:last]
+		rises, ok := t.columns(ctx, who)
+		for v, rise := range rises {
+			for _, i := range free {
+				k[i][who[v]] = rise[i]
+			}
+		}
+		return ok
+	})
+	return k, ok
 }
 
 // solvedHere solves for the last heats, or the Problem's own, unless the last solution is that of the section as it is; false if ctx ended first.
@@ -140,27 +131,6 @@ func (r *radiant) fork() *radiant {
 		f.sides = &s
 	}
 	return &f
-}
-
-// column is the rise of all sources for 1 W/m more in source s.
-func (c *coupled) column(ctx context.Context, s int) (rise []float64, ok bool) {
-	q := make([]float64, len(c.q))
-	q[s] = 1
-	z, r := make([]float64, len(c.z)), make([]float64, len(c.z))
-	c.pass(z, q, false)
-	c.miss(r, z, false, (*knot).change)
-	for i := range r {
-		r[i] = -r[i]
-	}
-	if _, ok = gmres(c.linear((*knot).change), z, r, tangentTolerance, ended(ctx)); !ok {
-		return nil, false
-	}
-	c.pass(z, q, false)
-	rise = make([]float64, len(q))
-	for i := range rise {
-		rise[i] = c.top.core(i, c.q)
-	}
-	return rise, true
 }
 
 // linear is how the miss changes with the unknowns.
