@@ -36,6 +36,16 @@ func (s *scene) airSpaces(start float64) spaces {
 	return out
 }
 
+// hottestHolder is the region between parts of the top level that is hottest: of bodies apart there are several.
+func (a spaces) hottestHolder() (region int, t float64, ok bool) {
+	for i, v := range a {
+		if i < 0 && (!ok || v > t) {
+			region, t, ok = i, v, true
+		}
+	}
+	return region, t, ok
+}
+
 // k returns the conductivity (W/mK) of what fills a region.
 func (a spaces) k(i int, m medium) float64 {
 	if m.air {

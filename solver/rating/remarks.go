@@ -34,6 +34,7 @@ func (s *scene) remarks(r *Result, a answered, o Options) []string {
 		out = append(out, "conductors of unknown or unassigned current are assumed idle")
 	}
 	out = append(out, s.weatherNotes(a)...)
+	out = append(out, s.bodyNotes(a)...)
 	out = append(out, s.limitNotes()...)
 	if s.anyAlternating() {
 		out = append(out, "skin effect by IEC 60287-1-1; proximity of conductors is left out")
@@ -51,11 +52,11 @@ func (s *scene) remarks(r *Result, a answered, o Options) []string {
 }
 
 func (s *scene) airNote(a answered) string {
-	t, ok := a.air[-1]
+	region, t, ok := a.air.hottestHolder()
 	if !ok || a.heat == nil || a.status == heat.ThermalRunaway {
 		return ""
 	}
-	return fmt.Sprintf("air between the parts conducts %s W/mK at its %s °C", digits(a.air.k(-1, s.holder.fill), 4), digits(math.Round(t), 0))
+	return fmt.Sprintf("air between the parts conducts %s W/mK at its %s °C", digits(a.air.k(region, s.holder.fill), 4), digits(math.Round(t), 0))
 }
 
 // limitNotes says which limits are assumed from the bare polymer.

@@ -164,6 +164,10 @@ func (s *scene) readOthers(r *Result, a answered) {
 		s.addBareWrap(r, h)
 	}
 	t := s.touch()
+	if s.apart() {
+		s.addOutsides(r, h, t)
+		return
+	}
 	r.Others = append(r.Others, Other{ID: "outside", Kind: "surface", TempC: h.WallMax[len(h.WallMax)-1], LimitC: t.c, LimitBy: t.by})
 }
 

@@ -65,7 +65,14 @@ func (s *scene) holderShape() section.Shape {
 	case h.kind == section.Wireway:
 		sh.Width, sh.Height = h.w/mm, h.h/mm
 		sh.Rings = rings(h.layers, 0)
-	case h.kind == section.NoHolder, h.kind == section.Apart:
+	case h.kind == section.Apart:
+		sh.At = s.origin
+		for _, top := range s.touchingParts() {
+			if len(top) > 1 && !s.formed(-1, top) {
+				sh.Loops = append(sh.Loops, hullLoop(s.discsOf(top)))
+			}
+		}
+	case h.kind == section.NoHolder:
 		sh.At = s.origin
 	default:
 		sh.At = s.origin
