@@ -121,6 +121,7 @@ func (s *scene) build(air spaces, f films) heat.Problem {
 	if s.out.free {
 		s.out.wall(&p.Wall, f)
 	}
+	s.lean(&p.Wall)
 	for i := range s.parts {
 		p.Parts[i] = s.heatPart(i, air)
 	}

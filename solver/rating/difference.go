@@ -36,12 +36,13 @@ func difference(a, b *heat.Problem) int {
 
 // sameWall compares all that stays while films change.
 func sameWall(a, b heat.Wall) bool {
-	return a.Shape == b.Shape && a.R == b.R && a.W == b.W && a.H == b.H && a.Emissivity == b.Emissivity && slices.Equal(a.Rings, b.Rings)
+	a.Against.Temp = b.Against.Temp
+	return a.Against == b.Against && a.Shape == b.Shape && a.R == b.R && a.W == b.W && a.H == b.H && a.Emissivity == b.Emissivity && slices.Equal(a.Rings, b.Rings)
 }
 
 // sameOutside compares what heat.Model.Outside changes.
 func sameOutside(a, b *heat.Wall) bool {
-	return a.Film == b.Film && a.Ambient == b.Ambient && a.Sides == b.Sides
+	return a.Film == b.Film && a.Ambient == b.Ambient && a.Sides == b.Sides && a.Against == b.Against
 }
 
 // samePart compares all but place and heat.

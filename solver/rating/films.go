@@ -10,7 +10,7 @@ import (
 
 // like tells whether two outsides differ by their sizes alone, so that flows per area of one are a good guess for the other.
 func (o *outside) like(p *outside) bool {
-	if o.n != p.n || o.free != p.free || o.air != p.air || o.coat != p.coat || !slices.Equal(o.open, p.open) {
+	if o.n != p.n || o.free != p.free || o.air != p.air || o.coat != p.coat || !slices.Equal(o.open, p.open) || o.rest != p.rest {
 		return false
 	}
 	for i, f := range o.faces {
@@ -66,7 +66,7 @@ func (o *outside) flux(r *heat.Result) []float64 {
 		return q
 	}
 	if o.n == 1 {
-		q[0] = r.Released / o.wide[0]
+		q[0] = (r.Released - r.AgainstOut) / o.wide[0]
 		return q
 	}
 	for i := range o.n {

@@ -19,6 +19,7 @@ type outside struct {
 	open  []bool      // faces that have a film
 	n     int
 	coat  coat
+	rest  section.Against // what a part of it rests against
 
 	together *film.Together // of several bodies, one a face; nil else
 }
@@ -42,6 +43,10 @@ func (r *resolver) outside() {
 		s.filmW = d.FilmWM2K.V
 		return
 	}
+	if s.heldAround() {
+		s.filmW = math.Inf(1)
+		return
+	}
 	if len(s.parts) == 0 || !r.placed() || r.unsound() {
 		return
 	}
@@ -56,7 +61,11 @@ func (r *resolver) outside() {
 		o.face(1)
 		o.open[0], o.wide[0] = true, s.around()
 		d := o.wide[0] / math.Pi // a cylinder of the same circumference stands for what is not round
-		o.faces[0] = film.Face{Shape: film.Round, DiameterM: d, Emissivity: o.coat.emissivity, Absorptivity: o.coat.absorptivity}
+		o.faces[0] = film.Face{Shape: film.Round, DiameterM: d, Emissivity: o.coat.emissivity, Absorptivity: o.coat.absorptivity * s.lit()}
+		o.wide[0] *= s.openShare()
+		if a := s.rests(); a != nil {
+			o.rest = *a
+		}
 		r.deepEnough(s.outerRadius())
 		return
 	}

@@ -13,6 +13,9 @@ func (s *scene) remarks(r *Result, a answered, o Options) []string {
 	if n := s.formNote(); n != "" {
 		out = append(out, n)
 	}
+	if n := s.restNote(a); n != "" {
+		out = append(out, n)
+	}
 	if n := s.radiationNote(a); n != "" {
 		out = append(out, n)
 	}

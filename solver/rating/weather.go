@@ -30,6 +30,9 @@ func (s *scene) surroundingsText() string {
 	if d.SunWM2.V > 0 {
 		say("sun of %s W/m²", digits(d.SunWM2.V, 0))
 	}
+	if n := s.restText(); n != "" {
+		say("%s", n)
+	}
 	if d.Wet {
 		say("wet")
 	}
