@@ -28,6 +28,7 @@ type Outside struct {
 	DepthM     float64 // Buried: of the axis
 	SoilWMK    float64 // Buried
 	Cautious   bool    // natural convection of horizontal cylinders by Churchill and Chu in place of Morgan
+	Convection float64 // times what the formulas for moving fluids give, for bands; 0 means 1
 }
 
 // Shape of a face.
@@ -90,6 +91,9 @@ func (o Outside) Film(f Face, surfaceK float64) Answer {
 		a.by("radiation alone (vacuum)")
 	default:
 		o.convect(&a, f, surfaceK)
+		if o.Convection > 0 {
+			a.Convective *= o.Convection
+		}
 	}
 	drive := a.Convective * o.AmbientK
 	if o.Kind != Buried && o.Kind != Water {

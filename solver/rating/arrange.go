@@ -2,6 +2,8 @@ package rating
 
 import (
 	"fmt"
+	"math"
+	"math/rand/v2"
 
 	"packrise/solver/catalog"
 	"packrise/solver/pack"
@@ -106,4 +108,30 @@ func MakeRoom(d *section.Document, cat *catalog.Catalog, held string) (at map[st
 		return nil, false
 	}
 	return s.at(placed, discs), true
+}
+
+// Jostle moves every part of the top level by up to mm millimetres (number n of many ways, the same each time) and pushes overlaps apart: how
+// the section may lie elsewhere along the run. ok is false if there is no room for that, or if something is not round.
+func Jostle(d *section.Document, cat *catalog.Catalog, n int, mm float64) (at map[string]section.Point, ok bool) {
+	s, top, err := sized(d, cat)
+	if err != nil {
+		return nil, false
+	}
+	for _, i := range top {
+		if !s.parts[i].src.At.OK {
+			return nil, false
+		}
+	}
+	discs := s.discs(top)
+	random := rand.New(rand.NewPCG(seed, uint64(n)))
+	for k := range discs {
+		angle, far := 2*math.Pi*random.Float64(), mm*math.Sqrt(random.Float64())
+		discs[k].X += far * math.Cos(angle)
+		discs[k].Y += far * math.Sin(angle)
+	}
+	moved, ok := pack.PushApart(discs, s.box(-1), -1, 0)
+	if !ok {
+		return nil, false
+	}
+	return s.at(top, moved), true
 }

@@ -31,12 +31,13 @@ type Options struct {
 	Accuracy   heat.Accuracy
 	AssumeIdle bool // count unknown and unassigned currents as 0
 	Cautious   bool // natural convection of a round outside by Churchill and Chu in place of Morgan: 5–7 % less current on thin wires
+	Vary       Vary // for bands
 }
 
 // Solve resolves and solves. The result is nil when a problem is Refused; all problems of substance come at once. An error is only
 // for a failure of the program.
 func (e *Engine) Solve(ctx context.Context, d *section.Document, o Options) (*Result, []section.Problem, error) {
-	s, problems := resolve(d, e.cat)
+	s, problems := resolveVaried(d, e.cat, o.Vary)
 	for _, p := range problems {
 		if p.Severity == section.Refused {
 			return nil, problems, nil

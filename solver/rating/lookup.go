@@ -14,6 +14,7 @@ type shelf struct {
 	cat   *catalog.Catalog
 	own   map[string]section.Material
 	notes []string
+	vary  Vary
 }
 
 // open lays the document's rows over the catalogue.
@@ -44,7 +45,7 @@ func open(d *section.Document, cat *catalog.Catalog) (shelf, []section.Problem) 
 // material finds a material by name; the problem names the nearest ones.
 func (s shelf) material(name, id, key string) (material, *section.Problem) {
 	if m, ok := s.own[name]; ok {
-		return ownMaterial(m), nil
+		return s.vary.material(name, ownMaterial(m)), nil
 	}
 	m, ok := s.cat.Material(name)
 	if !ok {
@@ -59,7 +60,7 @@ func (s shelf) material(name, id, key string) (material, *section.Problem) {
 	if m.LimitC.Low > 0 {
 		out.limitC = section.Some(m.LimitC.Low)
 	}
-	return out, nil
+	return s.vary.material(name, out), nil
 }
 
 // Defaults of a material that says nothing else: plastics and paint, bright metal.

@@ -21,8 +21,14 @@ type resolver struct {
 
 // resolve turns a document into SI with every name looked up. The scene is usable for drawing even when problems are Refused.
 func resolve(d *section.Document, cat *catalog.Catalog) (scene, []section.Problem) {
+	return resolveVaried(d, cat, Vary{})
+}
+
+// resolveVaried is resolve with inputs shifted.
+func resolveVaried(d *section.Document, cat *catalog.Catalog, v Vary) (scene, []section.Problem) {
 	r := &resolver{loads: map[string]*section.Load{}, builds: map[string]*section.Build{}}
 	r.shelf, r.problems = open(d, cat)
+	r.shelf.vary = v
 	r.scene.doc = d
 	r.scene.notes = append(r.scene.notes, r.shelf.notes...)
 	for i := range d.Loads {
@@ -38,6 +44,7 @@ func resolve(d *section.Document, cat *catalog.Catalog) (scene, []section.Proble
 	r.wrap()
 	r.places()
 	r.outside()
+	v.outside(&r.scene)
 	return r.scene, d.Locate(r.problems)
 }
 
@@ -64,7 +71,7 @@ func (r *resolver) layers(list []section.Layer, id, key string) []layer {
 func (r *resolver) enclosure(h *section.Holder, id, key string) enclosure {
 	e := enclosure{kind: h.Kind, round: h.Kind != section.Wireway, radius: h.InsideMM.V * mm / 2, w: h.WidthMM.V * mm, h: h.HeightMM.V * mm}
 	e.layers = r.layers(h.Layers, id, key)
-	e.strings = h.StringEmissivity.Or(usualEmissivity)
+	e.strings = r.vary.emissive(h.StringEmissivity.Or(usualEmissivity))
 	if h.Flat() {
 		e.flat, e.radius = true, max(e.w, e.h)/2
 	}
@@ -96,6 +103,9 @@ func (r *resolver) stockHolder(e *enclosure, h *section.Holder, id, key string) 
 		})
 	}
 	e.radius, e.w, e.h, e.skin = row.InsideM/2, row.WidthM, row.HeightM, row.Emissivity
+	if e.skin > 0 {
+		e.skin = r.vary.emissive(e.skin)
+	}
 	e.round = row.InsideM > 0
 	if row.WallM > 0 {
 		m, p := r.material(row.Wall, id, key+"stock")

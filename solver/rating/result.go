@@ -50,21 +50,23 @@ type Result struct {
 	Others     []Other
 	SurfaceC   float64              // mean of the outside
 	FilmWM2K   section.Opt[float64] // at the present temperature, mean of the open sides; not OK for a fixed wall
-	Generated  float64              // W/m
-	Released   float64              // W/m
-	Absorbed   float64              // W/m
-	Sides      map[string]float64   // rectangle only: bottom, right, top, left → W/m released
-	Hottest    string
-	Governing  *Governs // nil if nothing has a limit
-	Status     heat.Status
-	Notes      []string // what is assumed or left out, a sentence each
-	Unassigned []string // conductors in no load or of unknown current, that results depend on
-	Unknowns   int
-	ErrorK     float64
-	Seconds    float64
-	Settles    float64 // thermal runaway: largest factor on all currents that still settles, else 0
-	RunawayAt  string  // conductor that runs away
-	Shapes     []section.Shape
+	// ClearanceMM is the mean clearance of loose parts; not OK where they touch.
+	ClearanceMM section.Opt[float64]
+	Generated   float64            // W/m
+	Released    float64            // W/m
+	Absorbed    float64            // W/m
+	Sides       map[string]float64 // rectangle only: bottom, right, top, left → W/m released
+	Hottest     string
+	Governing   *Governs // nil if nothing has a limit
+	Status      heat.Status
+	Notes       []string // what is assumed or left out, a sentence each
+	Unassigned  []string // conductors in no load or of unknown current, that results depend on
+	Unknowns    int
+	ErrorK      float64
+	Seconds     float64
+	Settles     float64 // thermal runaway: largest factor on all currents that still settles, else 0
+	RunawayAt   string  // conductor that runs away
+	Shapes      []section.Shape
 
 	surroundings string // "fixed film of 9 W/m²K"
 	origin       section.Point
@@ -80,6 +82,9 @@ func (s *scene) result(a answered, o Options) *Result {
 		origin: s.origin, bounds: s.bounds(), surroundings: s.surroundingsText(),
 	}
 	r.FilmWM2K = s.filmShown(a)
+	if g := s.holder.gap; g > 0 {
+		r.ClearanceMM = section.Some(g / mm)
+	}
 	for i := range s.parts {
 		if p := &s.parts[i]; p.metal && !p.loadKnown() && !o.AssumeIdle {
 			r.Unassigned = append(r.Unassigned, p.id)
