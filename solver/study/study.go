@@ -71,7 +71,14 @@ func (s *Study) solve(ctx context.Context, d *section.Document, o Options) (*rat
 }
 
 func solveWith(ctx context.Context, e *rating.Engine, d *section.Document, o Options) (*rating.Result, error) {
-	r, problems, err := e.Solve(ctx, d, o.rating())
+	return solveVaried(ctx, e, d, o, rating.Vary{})
+}
+
+// solveVaried is solveWith with inputs shifted.
+func solveVaried(ctx context.Context, e *rating.Engine, d *section.Document, o Options, v rating.Vary) (*rating.Result, error) {
+	how := o.rating()
+	how.Vary = v
+	r, problems, err := e.Solve(ctx, d, how)
 	switch {
 	case err != nil:
 		return nil, err
