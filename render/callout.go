@@ -3,6 +3,7 @@ package render
 import (
 	"image/color"
 	"math"
+	"slices"
 	"sort"
 	"strings"
 	"sync"
@@ -203,11 +204,44 @@ func (p *sectionPainter) wallLeads(w wanted) []lead {
 		return nil
 	}
 	cx, cy := (b.x0+b.x1)/2, (b.y0+b.y1)/2
+	if d, ok := p.bodyOf(w.id); ok {
+		return ringLeads(d)
+	}
 	var out []lead
 	for n := range headings {
 		sin, cos := math.Sincos(2 * pi * float64(n) / headings)
 		t := p.edge.leave(cx, cy, cos, sin) - depth
 		out = append(out, lead{[]section.Point{{X: cx + t*cos, Y: cy + t*sin}}, cos, sin})
+	}
+	return out
+}
+
+// bodyOf finds, of bodies apart, a part of the one whose outside a reading is of: named in it, or that of the hottest conductor.
+func (p *sectionPainter) bodyOf(id string) (d disc, ok bool) {
+	if p.holder == nil || p.holder.Kind != section.Apart {
+		return d, false
+	}
+	name, named := strings.CutPrefix(id, "outside of ")
+	name, _, _ = strings.Cut(name, ", ")
+	name, _, _ = strings.Cut(name, " and ")
+	for _, s := range p.shapes {
+		if s.Unset || s.Depth > 0 {
+			continue
+		}
+		hot := slices.ContainsFunc(p.s.Readings, func(r section.Reading) bool { return r.Hottest && (r.ID == s.ID || isInside(r.ID, s.ID)) })
+		if named && s.ID == name || !named && hot {
+			return p.disc(s), true
+		}
+	}
+	return d, false
+}
+
+// ringLeads start on a circle and go straight outwards.
+func ringLeads(d disc) []lead {
+	out := make([]lead, headings)
+	for n := range out {
+		sin, cos := math.Sincos(2 * pi * float64(n) / headings)
+		out[n] = lead{[]section.Point{{X: d.x + d.r*cos, Y: d.y + d.r*sin}}, cos, sin}
 	}
 	return out
 }

@@ -16,6 +16,9 @@ func (o outline) coverRow(dst []uint8, x0, y int) {
 		for _, d := range o.parts {
 			coverDisc(dst, x0, y, d)
 		}
+		for _, l := range o.loops {
+			coverLoop(dst, x0, y, l)
+		}
 	}
 }
 

@@ -51,7 +51,7 @@ func (p *sectionPainter) halo(s section.Shape) color.NRGBA {
 }
 
 // holderOutline draws the outer surface and the wall's layers; an open bundle, which has no wall, gets a dashed line: the string
-// round it, or a circle where that is not known.
+// round it, or a circle where that is not known. Of bodies apart those of several parts get one.
 func (p *sectionPainter) holderOutline() {
 	if p.holder == nil {
 		return
@@ -59,7 +59,7 @@ func (p *sectionPainter) holderOutline() {
 	halo := Pen{Width: 3.6 * p.k, Color: p.halo(*p.holder)}
 	pen := Pen{Width: 1.7 * p.k, Color: p.line(*p.holder)}
 	inner := Pen{Width: p.k, Color: alpha(p.line(*p.holder), 0.8)}
-	if p.holder.Kind == section.OpenBundle {
+	if p.holder.Kind == section.OpenBundle || p.holder.Kind == section.Apart {
 		pen = Pen{Width: 1.5 * p.k, Color: p.pal.Ink, Dash: []float64{7 * p.k, 5 * p.k}}
 	}
 	switch e := p.edge; {
@@ -82,6 +82,13 @@ func (p *sectionPainter) holderOutline() {
 		for _, pen := range []Pen{halo, pen} {
 			p.outlinePath()
 			p.c.Stroke(pen)
+		}
+	default:
+		for _, l := range p.holder.Loops { // bodies apart: of several parts that touch
+			for _, pen := range []Pen{halo, pen} {
+				p.loopPath(l)
+				p.c.Stroke(pen)
+			}
 		}
 	}
 }

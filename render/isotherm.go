@@ -232,19 +232,24 @@ func (p *sectionPainter) isFree(b box) bool {
 func (p *sectionPainter) insideEdge(b box) bool {
 	switch e := p.edge; {
 	case e.poly != nil:
-		for _, q := range []section.Point{{X: b.x0, Y: b.y0}, {X: b.x1, Y: b.y0}, {X: b.x0, Y: b.y1}, {X: b.x1, Y: b.y1}} {
-			if !insideLoop(e.poly, q) {
-				return false
-			}
-		}
-		return true
+		return loopHoldsBox(e.poly, b)
 	case e.rect != nil:
 		return b.within(*e.rect)
 	case e.round != nil:
 		d := *e.round
 		return math.Hypot(max(math.Abs(b.x0-d.x), math.Abs(b.x1-d.x)), max(math.Abs(b.y0-d.y), math.Abs(b.y1-d.y))) <= d.r
 	}
-	return false
+	return slices.ContainsFunc(p.edge.loops, func(l []section.Point) bool { return loopHoldsBox(l, b) })
+}
+
+// loopHoldsBox tells whether a box lies wholly within a convex line.
+func loopHoldsBox(points []section.Point, b box) bool {
+	for _, q := range []section.Point{{X: b.x0, Y: b.y0}, {X: b.x1, Y: b.y0}, {X: b.x0, Y: b.y1}, {X: b.x1, Y: b.y1}} {
+		if !insideLoop(points, q) {
+			return false
+		}
+	}
+	return true
 }
 
 // degrees writes a temperature in whole degrees (fewer than needed only for odd steps) with a real minus sign.

@@ -63,7 +63,7 @@ func wall(s section.Shape) []section.Ring {
 func readingName(r section.Reading, s Scene) string {
 	switch r.Kind {
 	case "surface":
-		return "outside"
+		return r.ID
 	case "layer":
 	default:
 		return r.ID

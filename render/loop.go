@@ -8,7 +8,7 @@ import (
 
 // loopOutline is the outer surface of a holder, or of a lone bare part, that is not round.
 func loopOutline(h *section.Shape, shapes []section.Shape) (o outline, ok bool) {
-	if h == nil {
+	if h == nil || h.Kind == section.Apart {
 		return o, false
 	}
 	of := h
@@ -124,7 +124,7 @@ func coverLoop(dst []uint8, x0, y int, points []section.Point) {
 		}
 	}
 	for i, c := range cover {
-		dst[i] = uint8(255*min(1, c) + 0.5)
+		dst[i] = max(dst[i], uint8(255*min(1, c)+0.5))
 	}
 }
 

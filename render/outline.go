@@ -2,6 +2,7 @@ package render
 
 import (
 	"math"
+	"slices"
 
 	"packrise/solver/section"
 )
@@ -16,6 +17,7 @@ type outline struct {
 	poly  []section.Point // what is really the surface where round is only the circle round it; convex
 	rect  *box
 	parts []disc
+	loops [][]section.Point // beside parts: bodies that are not round; convex
 }
 
 // holderOf returns the holder, nil if the shapes have none.
@@ -42,8 +44,17 @@ func outlineOf(shapes []section.Shape) outline {
 		return outline{round: &disc{h.At.X, h.At.Y, h.OuterR()}}
 	}
 	var o outline
+	if h != nil && h.Kind == section.Apart {
+		o.loops = h.Loops
+	}
 	for _, s := range shapes {
-		if s.ID != "" && s.Depth == 0 && !s.Unset && s.OuterR() > 0 {
+		if s.ID == "" || s.Depth > 0 || s.Unset || !(s.OuterR() > 0) {
+			continue
+		}
+		switch n := len(s.Loops); {
+		case h != nil && h.Kind == section.Apart && n > 0:
+			o.loops = append(o.loops[:len(o.loops):len(o.loops)], s.Loops[n-1])
+		case !slices.ContainsFunc(o.loops, func(l []section.Point) bool { return insideLoop(l, s.At) }):
 			o.parts = append(o.parts, disc{s.At.X, s.At.Y, s.OuterR()})
 		}
 	}
@@ -54,7 +65,9 @@ func outlineOf(shapes []section.Shape) outline {
 	return o
 }
 
-func (o outline) known() bool { return o.round != nil || o.rect != nil || len(o.parts) > 0 }
+func (o outline) known() bool {
+	return o.round != nil || o.rect != nil || len(o.parts) > 0 || len(o.loops) > 0
+}
 
 // box returns the box around the outline, in its own unit.
 func (o outline) box() box {
@@ -70,6 +83,9 @@ func (o outline) box() box {
 	for _, d := range o.parts {
 		b = b.with(boxAround(d.x, d.y, d.r))
 	}
+	for _, l := range o.loops {
+		b = b.with(loopBox(l))
+	}
 	return b
 }
 
@@ -84,9 +100,16 @@ func (o outline) toPx(v View) outline {
 		d := one(*o.round)
 		p.round = &d
 	}
-	for _, q := range o.poly {
-		x, y := v.ToPx(q)
-		p.poly = append(p.poly, section.Point{X: x, Y: y})
+	line := func(of []section.Point) (out []section.Point) {
+		for _, q := range of {
+			x, y := v.ToPx(q)
+			out = append(out, section.Point{X: x, Y: y})
+		}
+		return out
+	}
+	p.poly = line(o.poly)
+	for _, l := range o.loops {
+		p.loops = append(p.loops, line(l))
 	}
 	if o.rect != nil {
 		x0, y0 := v.ToPx(section.Point{X: o.rect.x0, Y: o.rect.y1})
@@ -105,17 +128,24 @@ func (o outline) leave(x, y, dx, dy float64) float64 {
 	case o.rect != nil:
 		return max(0, leaveBox(*o.rect, x, y, dx, dy))
 	case o.poly != nil:
-		far := 0.0
-		for _, s := range chordOf(o.poly, x, y, dx, dy) {
-			far = max(far, s.b)
-		}
-		return far
+		return leaveLoop(o.poly, x, y, dx, dy)
 	case o.round != nil:
 		return max(0, leaveDisc(*o.round, x, y, dx, dy))
 	}
 	far := 0.0
 	for _, d := range o.parts {
 		far = max(far, leaveDisc(d, x, y, dx, dy))
+	}
+	for _, l := range o.loops {
+		far = max(far, leaveLoop(l, x, y, dx, dy))
+	}
+	return far
+}
+
+// leaveLoop returns the far crossing of a ray with a convex line, 0 if it misses.
+func leaveLoop(points []section.Point, x, y, dx, dy float64) (far float64) {
+	for _, s := range chordOf(points, x, y, dx, dy) {
+		far = max(far, s.b)
 	}
 	return far
 }
@@ -163,7 +193,7 @@ func (o outline) meetsBox(b box) bool {
 			return true
 		}
 	}
-	return false
+	return slices.ContainsFunc(o.loops, func(l []section.Point) bool { return loopMeetsBox(l, b) })
 }
 
 func discMeetsBox(d disc, b box) bool {

@@ -124,6 +124,11 @@ func (p *sectionPainter) fillHolder() {
 		for i := n - len(wall(*p.holder)); i < n; i++ {
 			p.ring(*p.holder, *e.round, i, p.pal.Wall)
 		}
+	case p.holder != nil:
+		for _, l := range p.holder.Loops {
+			p.loopPath(l)
+			p.c.Fill(p.pal.Fill)
+		}
 	}
 }
 
@@ -155,6 +160,9 @@ func (p *sectionPainter) outlinePath() {
 	default:
 		for _, d := range e.parts {
 			p.c.Circle(d.x, d.y, d.r)
+		}
+		for _, l := range e.loops {
+			pixelPath(p.c, l)
 		}
 	}
 }

@@ -149,6 +149,13 @@ func (l *ladder) wallSteps() []step {
 		if r.Over() {
 			s.color = l.pal.Over
 		}
+		if r.Kind == "surface" && r.ID != "outside" && !r.Over() && !r.Governs && len(out) > 0 && out[len(out)-1].color == s.color && !out[len(out)-1].bold {
+			g := &out[len(out)-1] // the outsides of bodies apart share one label
+			g.ids, g.name = append(g.ids, r.ID), "outsides"
+			g.low, g.high = min(g.low, s.low), max(g.high, s.high)
+			g.temp = (g.low + g.high) / 2
+			continue
+		}
 		if n := len(out); n > 0 && math.Abs(out[n-1].low-s.temp) < 0.5 && out[n-1].color == s.color && l.hasRoom(joinNames(out[n-1].name, s.name)) {
 			g := &out[n-1]
 			g.ids, g.name = append(g.ids, r.ID), joinNames(g.name, s.name)
