@@ -37,6 +37,7 @@ type bound struct {
 	field    func() pointField
 	sheet    *outline.Rect         // of a rectangle
 	arcs     []Arc                 // of a hull
+	drawn    *contourBound         // of contours
 	high     func() [][]complex128 // of a hull: what comes to the pieces beyond their orders
 }
 

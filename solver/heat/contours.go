@@ -9,18 +9,38 @@ import (
 // parting keeps faces apart that touch, m: far less than counts, far more than rounding.
 const parting = 10e-9
 
-// plan lists the contours of a section.
+// plan lists the contours of a section: of parts and their rings, of its wall, and of what is exposed in an open bundle.
 type plan struct {
 	p        *Problem
 	contours []outline.Contour
-	first    []int // per part: contour of its core; its rings' outsides follow
+	first    []int // per part: contour of its core, −1 of a part that stays a piece; its rings' outsides follow
+	skins    []int // per part: 1 where a skin of metal stands for a bare surface in an open bundle, whose outside follows that of the core
+	metals   []int // parts of contours of metals, in the order of these
 	wall     int   // contour of the wall's inside; of a bare part that of its core
 	at       []complex128
+	drawn    []bool       // per part: it is contours
+	hull     outline.Loop // of an open bundle
 }
 
 // newPlan draws every face of the problem.
 func newPlan(p *Problem) *plan {
-	l := &plan{p: p, first: make([]int, len(p.Parts)), at: make([]complex128, len(p.Parts))}
+	l := beginPlan(p)
+	for i := range l.drawn {
+		l.drawn[i] = true
+	}
+	return l.finish()
+}
+
+// newPlanAmong draws every face but those of round parts of the top level that nothing asks to be drawn.
+func newPlanAmong(p *Problem) *plan {
+	l := beginPlan(p)
+	l.choose()
+	return l.finish()
+}
+
+func beginPlan(p *Problem) *plan {
+	n := len(p.Parts)
+	l := &plan{p: p, first: make([]int, n), skins: make([]int, n), at: make([]complex128, n), drawn: make([]bool, n)}
 	for i := range p.Parts {
 		q := &p.Parts[i]
 		l.at[i] = complex(q.X, q.Y)
@@ -28,16 +48,63 @@ func newPlan(p *Problem) *plan {
 			l.at[i] += l.at[q.In]
 		}
 	}
-	less := l.slack()
-	for i := range p.Parts {
-		l.draw(i, less[i])
-	}
-	if p.Wall.Shape == BarePart {
-		l.bare()
-		return l
-	}
-	l.drawWall()
 	return l
+}
+
+func (l *plan) finish() *plan {
+	less := l.slack()
+	for i := range l.first {
+		l.first[i] = -1
+		if l.drawn[i] {
+			l.draw(i, less[i])
+		}
+	}
+	switch l.p.Wall.Shape {
+	case BarePart:
+		l.bare()
+	case Hull:
+		l.drawHull()
+	default:
+		l.drawWall()
+	}
+	return l
+}
+
+// choose finds the parts that have to be contours, with everything that lies in the same part of the top level: what is not round, and what is exposed in
+// an open bundle.
+func (l *plan) choose() {
+	parts := l.p.Parts
+	not := make([]bool, len(parts))
+	for i := range parts {
+		not[l.top(i)] = not[l.top(i)] || parts[i].Form.Kind != Disc
+	}
+	if l.p.Wall.Shape == Hull {
+		for _, i := range l.exposed() {
+			not[i] = true
+		}
+	}
+	for i := range parts {
+		l.drawn[i] = not[l.top(i)]
+	}
+}
+
+// top is the part of the top level that part i is or lies in.
+func (l *plan) top(i int) int {
+	for l.p.Parts[i].In >= 0 {
+		i = l.p.Parts[i].In
+	}
+	return i
+}
+
+// skinOf is the contour of the outside of part i.
+func (l *plan) skinOf(i int) int { return l.first[i] + len(l.p.Parts[i].Rings) + l.skins[i] }
+
+// bounds is the outer boundary.
+func (l *plan) bounds() outline.Loop {
+	if l.hull != nil {
+		return l.hull
+	}
+	return l.contours[len(l.contours)-1].Loop
 }
 
 // medium is the conductivity that part i lies in.
@@ -93,6 +160,10 @@ func (l *plan) draw(i int, less float64) {
 	switch q.Core {
 	case Metal:
 		c.In = math.Inf(1)
+		l.metals = append(l.metals, i)
+		if len(rings) == 0 && q.In < 0 && l.p.Wall.Shape == Hull {
+			l.skin(i, &c, t)
+		}
 	case FixedBore:
 		c.In, c.Held, c.Fixed = math.Inf(1), true, q.Fixed
 	}
@@ -113,6 +184,17 @@ const (
 	skinShare = 0.01
 	skinK     = 400
 )
+
+// skin begins bare metal with what lies under its skin; c becomes the skin's outside.
+func (l *plan) skin(i int, c *outline.Contour, t float64) {
+	q := &l.p.Parts[i]
+	lo, hi := q.Form.Loop(q.Radius, t).Bounds()
+	c.Loop = q.Form.Loop(q.Radius, t-skinShare*math.Min(real(hi-lo), imag(hi-lo))).Placed(0, l.at[i])
+	c.Out = skinK
+	l.contours = append(l.contours, *c)
+	l.skins[i] = 1
+	*c = outline.Contour{In: skinK}
+}
 
 // bare makes the outside of the only part of the top level that of the section.
 func (l *plan) bare() {
@@ -210,33 +292,57 @@ func (w *Wall) outlineSides(share float64) []outline.Side {
 // boxOrder is that of the strokes of outline.Box.
 var boxOrder = [4]int{Right, Top, Left, Bottom}
 
-// slack is by how much each part's outside has to be drawn in: for the clearance, for contacts, and 10 µm between bare metals (see metalGap).
+// slack is by how much each contour's outside has to be drawn in: for the clearance, for contacts, and 10 µm between bare metals (see metalGap).
 func (l *plan) slack() []float64 {
 	p := l.p
 	less := make([]float64, len(p.Parts))
 	for i := range p.Parts {
-		if p.Parts[i].In == -1 {
-			less[i] = math.Min(p.Clearance/2, thickness(p.Parts[i].Rings)/3)
-		}
+		less[i] = l.clearance(i)
 	}
 	add := make([]float64, len(p.Parts))
 	for i := range p.Parts {
-		if p.Parts[i].In < 0 && p.Wall.Shape == BarePart {
+		if !l.drawn[i] || p.Parts[i].In < 0 && p.Wall.Shape == BarePart {
 			continue
 		}
 		for j := range i {
-			if p.Parts[j].In == p.Parts[i].In {
+			if l.drawn[j] && p.Parts[j].In == p.Parts[i].In {
 				short := l.apart(p.Parts[i].metalSkin() && p.Parts[j].metalSkin()) - l.between(i, j) - less[i] - less[j]
 				add[i], add[j] = math.Max(add[i], short/2), math.Max(add[j], short/2)
 			}
 		}
-		room, metal := l.around(i)
-		add[i] = math.Max(add[i], l.apart(metal && p.Parts[i].metalSkin())-l.outer(i).Room(room)-less[i])
+		if room, metal := l.around(i); room != nil {
+			add[i] = math.Max(add[i], l.apart(metal && p.Parts[i].metalSkin())-l.outer(i).Room(room)-less[i])
+		}
 	}
 	for i := range less {
 		less[i] += math.Min(add[i], 2*metalGap)
 	}
 	return less
+}
+
+// clearance is what part i gives for the clearance.
+func (l *plan) clearance(i int) float64 {
+	if q := &l.p.Parts[i]; q.In == -1 && l.p.Wall.Shape != Hull {
+		return math.Min(l.p.Clearance/2, thickness(q.Rings)/3)
+	}
+	return 0
+}
+
+// slackOf is by how much a piece at z has to be drawn in to keep off the contours.
+func (l *plan) slackOf(i int, z complex128) float64 {
+	q := &l.p.Parts[i]
+	less, add := l.clearance(i), 0.0
+	r := q.Radius + thickness(q.Rings) - less
+	for j := range l.p.Parts {
+		if d := &l.p.Parts[j]; l.drawn[j] && d.In == -1 {
+			near := l.contours[l.skinOf(j)].Loop.Distance(z)
+			add = math.Max(add, l.apart(q.metalSkin() && d.metalSkin())-(near-r))
+		}
+	}
+	if room, metal := l.around(i); room != nil {
+		add = math.Max(add, l.apart(metal && q.metalSkin())-(room.Distance(z)-r))
+	}
+	return less + math.Min(add, 2*metalGap)
 }
 
 func (l *plan) apart(metals bool) float64 {
@@ -259,13 +365,16 @@ func (l *plan) between(i, j int) float64 {
 	return a.Gap(b)
 }
 
-// around is what part i lies in, and whether its inside is metal.
+// around is what part i lies in, nil in the open, and whether its inside is metal.
 func (l *plan) around(i int) (outline.Loop, bool) {
 	if in := l.p.Parts[i].In; in >= 0 {
 		q := &l.p.Parts[in]
 		return q.Form.Loop(q.Radius, 0).Placed(0, l.at[in]), len(q.Rings) > 0 && q.Rings[0].K > metalK
 	}
 	w := &l.p.Wall
+	if w.Shape == Hull || w.Shape == BarePart {
+		return nil, false
+	}
 	return wallLoop(w, l.widen()), len(w.Rings) > 0 && w.Rings[0].K > metalK
 }
 

@@ -48,6 +48,11 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 	for _, v := range q {
 		sum += math.Abs(v)
 	}
+	if m.contours != nil {
+		for _, v := range m.contours.drive.heats {
+			sum += math.Abs(v)
+		}
+	}
 	e := m.set.Accuracy.floor() * m.rise(r)
 	if m.top.border != nil && m.metalLayer() {
 		e *= 10 // panels on a foil
@@ -59,6 +64,7 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 		r.PartErrorK[i] = e
 	}
 	m.local(r, s)
+	m.looseContours(r)
 	r.MetalGap = s.metalGap()
 	r.ErrorK = 0
 	for _, v := range r.PartErrorK {

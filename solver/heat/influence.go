@@ -66,6 +66,9 @@ func (m *Model) Influence(ctx context.Context) ([][]float64, Status) {
 	if m.form != nil {
 		return out, m.form.influence(ctx, out)
 	}
+	if m.contours != nil {
+		return out, m.contourInfluence(ctx, out)
+	}
 	if m.top == nil {
 		m.bare.influence(out)
 		return out, Converged

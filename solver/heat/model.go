@@ -14,7 +14,9 @@ type Model struct {
 	set  Settings
 	top  *region // nil: one bare part without an inside
 	bare *bare
-	form *shaped // of sections in which not everything is round: nothing else is used
+	form *shaped // of sections in which not everything is round and nothing can stay a piece: nothing else is used
+
+	contours *contourWall // the top level's border where not everything is round, but round parts stay pieces
 
 	ready   bool
 	x       []float64   // last solution
@@ -76,6 +78,10 @@ func New(p Problem, s Settings) *Model {
 func (m *Model) layout() {
 	p := &m.p
 	w := &p.Wall
+	if !p.round() && p.amongPieces() {
+		m.layoutContours()
+		return
+	}
 	if !p.round() {
 		m.form = newShaped(m)
 		return
@@ -174,6 +180,7 @@ func (m *Model) Solve(ctx context.Context, heats []float64) *Result {
 	if !m.prepare(ctx) {
 		return m.blank(Cancelled)
 	}
+	m.loadContours(heats)
 	return m.solve(ctx, m.metals(heats))
 }
 
@@ -258,8 +265,12 @@ func (m *Model) blank(s Status) *Result {
 func (m *Model) result(s *state) *Result {
 	r := m.blank(Converged)
 	m.read(r, s)
+	m.readContours(r, s)
 	m.readWall(r, s)
 	r.Unknowns = m.top.sys.Len()
+	if m.contours != nil {
+		r.Unknowns += m.contours.sys.Len()
+	}
 	r.Field = &field{top: s, shift: m.shift()}
 	return r
 }

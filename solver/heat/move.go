@@ -15,6 +15,10 @@ func (m *Model) Move(part int, x, y float64) {
 		m.form.move()
 		return
 	}
+	if m.contours != nil && m.contours.holds(part) {
+		m.reshape()
+		return
+	}
 	if m.p.Wall.Shape == BarePart {
 		m.moveBare()
 		return
@@ -68,7 +72,7 @@ func (m *Model) shift() complex128 {
 	if i := m.bareCable(); i >= 0 {
 		return -complex(m.p.Parts[i].X, m.p.Parts[i].Y)
 	}
-	if m.p.Wall.Shape != Rect {
+	if m.p.Wall.Shape != Rect || m.contours != nil {
 		return 0
 	}
 	return complex(m.p.Clearance/2, m.p.Clearance/2)

@@ -23,13 +23,8 @@ func newShaped(m *Model) *shaped {
 	for i := range m.p.Parts {
 		m.p.Parts[i].Form.check()
 	}
-	if m.p.Wall.Shape == Hull {
-		panic(badShapedHull)
-	}
 	return &shaped{m: m}
 }
-
-const badShapedHull = "heat: an open bundle takes round parts only"
 
 // prepare discretises; false if ctx ended first.
 func (s *shaped) prepare(ctx context.Context) bool {

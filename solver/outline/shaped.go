@@ -3,6 +3,7 @@ package outline
 import (
 	"math"
 	"runtime"
+	"slices"
 )
 
 // Contour is a face between two materials, or of a metal, a held bore or the outside.
@@ -16,6 +17,8 @@ type Contour struct {
 	// Sides is how the outside meets the surroundings: one for each stroke, or one for all of them; nil for every other face. On the outside of an
 	// open bundle some may be Covered: a face like every other.
 	Sides []Side
+	// String tells that it is no loop but a straight string of an open bundle, from part to part, with In on its left.
+	String bool
 }
 
 // metal tells that a heat of its own leaves the contour.
@@ -74,8 +77,13 @@ func NewShapedAround(contours []Contour, around Around, old *Shaped, fineness fl
 		s.discs[i].Disc = d
 	}
 	s.begin()
+	s.recall(old)
 	for round := 0; ; round++ {
-		if !s.write(stop) {
+		if round > 0 {
+			was := *s
+			old = &was
+		}
+		if !s.write(old, stop) {
 			return nil
 		}
 		if round == maxRounds || s.n > maxUnknowns || !s.refine(fineness) {
@@ -142,9 +150,47 @@ func (s *Shaped) condition(b *bend) row {
 	return row{density: f, flux: 2 * f, temp: 2 * f * side.Film / c.In, outside: side.Temp}
 }
 
-// write sets up the equations, keeping what is known, and takes them apart; false if stop asked for an end.
-func (s *Shaped) write(stop func() bool) bool {
-	old := *s
+// recall marks the bends that an old section has as well.
+func (s *Shaped) recall(old *Shaped) {
+	if old == nil {
+		return
+	}
+	type key struct {
+		contour, stroke int
+		lo, hi          float64
+	}
+	was := map[key]int{}
+	for i := range old.bends {
+		b := &old.bends[i]
+		was[key{b.contour, b.stroke, b.lo, b.hi}] = b.dof
+	}
+	same := make([]int, len(s.contours))
+	for i := range s.contours {
+		same[i] = slices.IndexFunc(old.contours, s.contours[i].alike)
+	}
+	for i := range s.bends {
+		b := &s.bends[i]
+		if dof, ok := was[key{same[b.contour], b.stroke, b.lo, b.hi}]; ok {
+			b.known = dof
+		}
+	}
+}
+
+// alike tells whether two contours have the same equations but for what is outside.
+func (c *Contour) alike(d Contour) bool {
+	if c.In != d.In || c.Out != d.Out || c.Held != d.Held || c.String != d.String || len(c.Sides) != len(d.Sides) || !slices.Equal(c.Loop, d.Loop) {
+		return false
+	}
+	for i := range c.Sides {
+		if (c.Sides[i].Kind == Covered) != (d.Sides[i].Kind == Covered) {
+			return false
+		}
+	}
+	return true
+}
+
+// write sets up the equations, keeping what is known of an old section, and takes them apart; false if stop asked for an end.
+func (s *Shaped) write(old *Shaped, stop func() bool) bool {
 	s.number()
 	s.eq, s.temps = make([]float64, s.n*s.n), make([]float64, s.cells*s.n)
 	s.outT = make([]float64, (s.n-s.inner)*s.n)
@@ -152,7 +198,7 @@ func (s *Shaped) write(stop func() bool) bool {
 	workers := min(runtime.GOMAXPROCS(0), len(s.bends))
 	each(workers, func(w int) {
 		for i := w; i < len(s.bends) && !stop(); i += workers {
-			s.rows(&s.bends[i], &old)
+			s.rows(&s.bends[i], old)
 		}
 	})
 	each(len(s.discs), func(j int) {

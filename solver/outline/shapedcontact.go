@@ -43,7 +43,7 @@ func (s *Shaped) closer(st *Stroke, contour int, u, half float64) bool {
 	c := &s.contours[contour]
 	for i := range s.contours {
 		d := &s.contours[i]
-		if i == contour {
+		if i == contour || c.String || d.String {
 			continue
 		}
 		at, other := d.Loop.nearest(z)
@@ -117,6 +117,15 @@ func (l Loop) nearest(z complex128) (at complex128, on *Stroke) {
 	}
 	return at, on
 }
+
+// Distance from the loop to z.
+func (l Loop) Distance(z complex128) float64 {
+	at, _ := l.nearest(z)
+	return cmplx.Abs(at - z)
+}
+
+// Nearest is the point of the stroke nearest to z.
+func (s *Stroke) Nearest(z complex128) complex128 { return s.nearest(z) }
 
 func (s *Stroke) nearest(z complex128) complex128 {
 	if s.R == 0 {

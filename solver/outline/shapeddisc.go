@@ -166,11 +166,10 @@ func (b *bend) expand(c complex128, a float64, m int, out []float64) {
 	}
 }
 
-// MoveDisc puts a disc elsewhere and rewrites what depends on it: for dragging. It reports whether the bends are short enough there; if not, a new
+// MoveDisc puts disc i elsewhere and rewrites what depends on it: for dragging. It reports whether the bends are short enough there; if not, a new
 // Shaped is due. Not safe while others use the Shaped.
-func (s *Shaped) MoveDisc(i int, c complex128) (resolved bool) {
-	s.discs[i].C = c
-	s.around.Discs[i].C = c
+func (s *Shaped) MoveDisc(i int, to Disc) (resolved bool) {
+	s.discs[i].Disc, s.around.Discs[i] = to, to
 	s.link(i)
 	x := rules[4]
 	d := s.discs[i].Disc

@@ -23,6 +23,9 @@ func (s *Stroke) span() float64 {
 	return a
 }
 
+// Span is the angle of an arc, 0 of a straight piece.
+func (s *Stroke) Span() float64 { return s.span() }
+
 // Length of the stroke, m.
 func (s *Stroke) Length() float64 {
 	if s.R > 0 {
