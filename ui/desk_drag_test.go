@@ -1,7 +1,7 @@
 package ui
 
 import (
-	"slices"
+	"reflect"
 	"testing"
 	"time"
 
@@ -106,7 +106,7 @@ func TestDragShowsFramesThatFinish(t *testing.T) {
 		t.Error("the last answer is a draft")
 	}
 	want := []rating.Options{{}, {Accuracy: heat.Draft}, {Accuracy: heat.Draft}, {}}
-	if !slices.Equal(f.seen, want) {
+	if !reflect.DeepEqual(f.seen, want) {
 		t.Errorf("asked for %v, want %v", f.seen, want)
 	}
 }
