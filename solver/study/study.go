@@ -2,7 +2,6 @@ package study
 
 import (
 	"context"
-	"fmt"
 	"runtime"
 	"strings"
 	"sync"
@@ -35,6 +34,8 @@ type Options struct {
 	Cautious   bool // see rating.Options
 	// Progress is told how far a long question is, from any goroutine, one call at a time; nil if nobody cares.
 	Progress func(done, of int)
+	// Stage is given what Rate has found so far, each time a stage is done; nil if nobody cares.
+	Stage func(*Ratings)
 }
 
 func (o Options) rating() rating.Options {
@@ -57,11 +58,6 @@ func (r *Refusal) Error() string {
 		what = append(what, p.What)
 	}
 	return strings.Join(what, "; ")
-}
-
-// refuse makes a Refusal of one sentence.
-func refuse(rule, key, do, format string, args ...any) error {
-	return &Refusal{[]section.Problem{{Rule: rule, Key: key, What: fmt.Sprintf(format, args...), Do: do}}}
 }
 
 // solve solves one design with the first engine. A refused design is a *Refusal, a cancelled one the context's error. Results that are not

@@ -1,0 +1,159 @@
+package study
+
+import (
+	"context"
+	"math"
+
+	"packrise/solver/heat"
+	"packrise/solver/rating"
+	"packrise/solver/section"
+)
+
+// State words of a rated answer.
+const (
+	Within    = "within" // P95 of everything is inside its limit
+	Close     = "close"  // what is most likely is inside, P95 of something is not
+	Over      = "over"
+	Undecided = "undecided" // currents are unknown, or nothing has a limit
+)
+
+// Ratings is how much the conductors of a design may carry, how sure that is, and what the codes say.
+type Ratings struct {
+	Permits
+	Doc   *section.Document
+	Bands *Bands // at the currents as given; nil where no steady temperature exists
+	State string
+	// Done tells how far the answer is: what a later stage brings is nil until then.
+	Done Stage
+}
+
+// Stage of a rating, in order.
+type Stage int
+
+// Stages.
+const (
+	StageAll   Stage = iota + 1 // all scaled together, by the limits and the design margin
+	StageBands                  // the bands, and what may be relied on with them
+	StageLoads                  // each load with the others as given
+	StageAlone                  // each conductor alone here, and three of it
+)
+
+// Last is the last stage.
+const Last = StageAlone
+
+// Rate answers in stages; o.Stage, if there is one, gets a copy after each. base may be nil, or the solution of d at standard accuracy.
+func (s *Study) Rate(ctx context.Context, d *section.Document, base *rating.Result, o Options) (*Ratings, error) {
+	r := &rater{s: s, ctx: ctx, o: o, out: Ratings{Doc: d}}
+	if err := r.start(base); err != nil {
+		return nil, err
+	}
+	for _, stage := range []struct {
+		is Stage
+		do func() error
+	}{{StageAll, r.all}, {StageBands, r.bands}, {StageLoads, r.loads}, {StageAlone, r.alone}} {
+		if err := stage.do(); err != nil {
+			return nil, err
+		}
+		r.out.Done = stage.is
+		if o.Stage != nil {
+			c := r.out
+			o.Stage(&c)
+		}
+	}
+	return &r.out, nil
+}
+
+type rater struct {
+	s   *Study
+	ctx context.Context
+	o   Options
+	out Ratings
+}
+
+func (r *rater) start(base *rating.Result) (err error) {
+	d := r.out.Doc
+	if base == nil {
+		if base, err = r.s.solve(r.ctx, d, r.o); err != nil {
+			return err
+		}
+	}
+	r.out.Base, r.out.MarginK = base, MarginK(d)
+	return known(base, r.o)
+}
+
+func (r *rater) all() (err error) {
+	r.out.All, err = r.s.All(r.ctx, r.out.Doc, r.out.Base, nil, r.o)
+	r.out.State = StateOf(r.out.Base, nil)
+	return err
+}
+
+// bands finds the bands as loaded and, at what may be relied on, those that decide it: there they are found anew, since they do not grow
+// exactly with the rise.
+func (r *rater) bands() (err error) {
+	d, s := r.out.Doc, r.s
+	if r.out.Base.Status == heat.Converged {
+		if r.out.Bands, err = s.Bands(r.ctx, d, r.out.Base, r.o); err != nil {
+			return err
+		}
+		r.out.State = StateOf(r.out.Base, r.out.Bands.Spreads)
+	}
+	f := r.out.All.Rely.Factor
+	if f <= 0 || math.IsInf(f, 1) {
+		if r.out.Bands != nil {
+			r.out.Spreads = r.out.Bands.Spreads
+		}
+		return nil
+	}
+	for range 2 {
+		there := scaleAll(d, f)
+		at, err := s.solve(r.ctx, there, r.o)
+		if err != nil {
+			return err
+		}
+		if at.Status != heat.Converged {
+			return nil
+		}
+		b, err := s.Bands(r.ctx, there, at, r.o)
+		if err != nil {
+			return err
+		}
+		r.out.Spreads = b.Spreads
+		with := func(g float64) *section.Document { return scaleAll(d, g*f) }
+		c, err := s.climb(r.ctx, s.engines[0], at, with, rely(b.Spreads, at.AmbientC, r.out.MarginK), 0, r.o)
+		if err != nil {
+			return err
+		}
+		c.Factor *= f
+		r.out.All.Rely = c
+		if c.Factor <= 0 || math.Abs(c.Factor/f-1) < 0.05 {
+			return nil
+		}
+		f = c.Factor
+	}
+	return nil
+}
+
+func (r *rater) loads() (err error) {
+	r.out.Loads, err = r.s.One(r.ctx, r.out.Doc, r.out.Base, r.out.Spreads, r.o)
+	return err
+}
+
+func (r *rater) alone() (err error) {
+	r.out.Alone, err = r.s.AloneHere(r.ctx, r.out.Doc, r.out.Base, r.o)
+	return err
+}
+
+// StateOf judges a solution with the bands of its things (nil: without).
+func StateOf(r *rating.Result, spreads []Spread) string {
+	if r.Over() {
+		return Over
+	}
+	at, _, ok := closest(things(r), rely(spreads, r.AmbientC, 0))
+	switch {
+	case !ok || len(r.Unassigned) > 0 || r.Status != heat.Converged:
+		return Undecided
+	case rely(spreads, r.AmbientC, 0)(at, things(r)[at]) < 0:
+		return Close
+	}
+	return Within
+}
