@@ -71,6 +71,18 @@ func (s *scene) touchingParts() [][]int {
 	return out
 }
 
+// together lists the parts of each body; while parts have no place, of those that have.
+func (s *scene) together() [][]int {
+	if len(s.bodies) == 0 {
+		return s.touchingParts()
+	}
+	out := make([][]int, len(s.bodies))
+	for k := range out {
+		out[k] = s.bodies[k].top
+	}
+	return out
+}
+
 // findBodies makes the bodies of a section whose parts are placed.
 func (r *resolver) findBodies() {
 	s := &r.scene

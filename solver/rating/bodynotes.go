@@ -14,7 +14,7 @@ func (s *scene) addOutsides(r *Result, h *heat.Result, t limit) {
 	hot, of := math.Inf(-1), 0
 	at := func(k int) float64 { w := h.Bodies[k].WallMax; return w[len(w)-1] }
 	for k := range s.bodies {
-		if v := at(k); v > hot {
+		if v := at(k); v > hot+1e-6 {
 			hot, of = v, k
 		}
 	}
@@ -30,7 +30,7 @@ func (s *scene) addOutsides(r *Result, h *heat.Result, t limit) {
 }
 
 // mayBeHigh ends every sentence on what is left out between bodies.
-const mayBeHigh = ": the rating may be too high"
+const mayBeHigh = ", so the rating may be too high"
 
 // bodyNotes say what stands for the neighbours of bodies apart.
 func (s *scene) bodyNotes(a answered) []string {
@@ -60,7 +60,7 @@ func (s *scene) bodyNotes(a answered) []string {
 	case d.Kind == section.MovingAir && d.AirSpeedMS.V > 0:
 		return append(out, "how bodies shelter each other in moving air is not reckoned, each meets the flow as if alone"+mayBeHigh)
 	case d.Run == section.Vertical:
-		return append(out, "no constants are published for bodies beside each other on a vertical run: each has its convection as if alone"+mayBeHigh)
+		return append(out, "no constants are published for bodies beside each other on a vertical run; each has its convection as if alone"+mayBeHigh)
 	}
 	return append(out, s.rowNotes(a)...)
 }
@@ -104,14 +104,14 @@ func (s *scene) rowNotes(a answered) (out []string) {
 			s.bodyName(&s.bodies[at]), digits(100*least, 0), rowName(rows[at].row), digits(rows[at].row.Gap, 2)))
 	}
 	if far == len(rows) {
-		out = append(out, "the bodies are too far apart for the group constants of IEC 60287-2-1 (they reach to 0.5 or 0.75 diameters side by side, 2 or 4 above each other): each has its convection as if alone")
+		out = append(out, "the bodies are too far apart for the group constants of IEC 60287-2-1 (they reach to 0.5 or 0.75 diameters side by side, 2 or 4 above each other); each has its convection as if alone")
 	}
 	say(many, "the group constants of IEC 60287-2-1 end at three cables; %s count as one of three"+mayBeHigh)
-	say(unequal, "the group constants are for equal cables, and %s are not: they count as equal"+mayBeHigh)
-	say(crossed, "no constants are published for bodies both beside and above each other, or askew: for %s the row that leaves least counts alone"+mayBeHigh)
+	say(unequal, "the group constants are for equal cables; %s differ from their neighbours and count as equal"+mayBeHigh)
+	say(crossed, "no constants are published for bodies both beside and above each other, or askew; for %s the row that leaves least counts alone"+mayBeHigh)
 	say(uneven, "the gaps beside %s differ: the smaller counts on both sides")
 	say(beyond, "the group constants end at a diameter of 150 mm, and %s is thicker"+mayBeHigh)
-	say(tight, "%s lie too close for air to pass between: the group constants of touching cables are the nearest there are"+mayBeHigh)
+	say(tight, "%s lie too close to a neighbour for air to pass between; the group constants of touching cables are the nearest there are"+mayBeHigh)
 	return out
 }
 

@@ -93,7 +93,20 @@ func (s *scene) anyAlternating() bool {
 func (s *scene) bareOutside() bool {
 	for i := range s.parts {
 		p := &s.parts[i]
+		if p.in < 0 && s.alone(i) {
+			continue
+		}
 		if (p.metal && len(p.layers) == 0 || len(p.layers) > 0 && p.layers[len(p.layers)-1].material.metal) && len(s.parts) > 1 {
+			return true
+		}
+	}
+	return false
+}
+
+// alone tells whether part i of the top level is a body by itself.
+func (s *scene) alone(i int) bool {
+	for k := range s.bodies {
+		if b := &s.bodies[k]; !b.several() && b.top[0] == i {
 			return true
 		}
 	}

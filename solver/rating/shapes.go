@@ -67,7 +67,7 @@ func (s *scene) holderShape() section.Shape {
 		sh.Rings = rings(h.layers, 0)
 	case h.kind == section.Apart:
 		sh.At = s.origin
-		for _, top := range s.touchingParts() {
+		for _, top := range s.together() {
 			if len(top) > 1 && !s.formed(-1, top) {
 				sh.Loops = append(sh.Loops, hullLoop(s.discsOf(top)))
 			}

@@ -16,7 +16,7 @@ func (s *scene) surroundingsText() string {
 	w := []string{s.kindText()}
 	say := func(format string, args ...any) { w = append(w, fmt.Sprintf(format, args...)) }
 	if s.out.free && s.radiates() {
-		say("outside emissivity %s", digits(s.out.coat.emissivity, 2))
+		say("outside emissivity %s", s.emissivities())
 	}
 	if d.AltitudeM.V != 0 {
 		say("altitude %s m", digits(d.AltitudeM.V, 0))
@@ -37,6 +37,20 @@ func (s *scene) surroundingsText() string {
 		say("wet")
 	}
 	return strings.Join(w, ", ")
+}
+
+// emissivities are those of the outsides in words: "0.9", "0.08 to 0.9".
+func (s *scene) emissivities() string {
+	low, high := s.out.coat.emissivity, s.out.coat.emissivity
+	for k := range s.bodies {
+		e := s.bodies[k].coat.emissivity
+		low, high = min(low, e), max(high, e)
+	}
+	a, b := digits(low, 2), digits(high, 2)
+	if a == b {
+		return a
+	}
+	return a + " to " + b
 }
 
 // kindText tells the kind with what makes it up.
