@@ -90,7 +90,7 @@ func (r *resolver) ownWire(it *item, p *section.Part) {
 	}
 }
 
-// coreLimit: the person's own, else the wire type's dry limit, else the lowest of its layers, assumed.
+// coreLimit: the person's own, else the wire type's dry or wet limit, else that of its innermost insulation, assumed.
 func (r *resolver) coreLimit(it *item, p *section.Part, typ string) {
 	if p.LimitC.OK {
 		it.limit = limit{c: p.LimitC, by: "given"}
@@ -115,7 +115,7 @@ func (r *resolver) coreLimit(it *item, p *section.Part, typ string) {
 		it.limit = r.typeLimit(it.id, t)
 		return
 	}
-	it.limit = lowest(it.layers)
+	it.limit = innermost(it.layers)
 }
 
 // typeLimit is a wire type's limit, dry or wet. Types that must never be wet are refused there.
@@ -185,7 +185,7 @@ func (r *resolver) rod(it *item, p *section.Part) {
 		r.hose(it, p, own)
 	}
 	it.layers = append(it.layers, r.layers(p.Layers, it.id, "")...)
-	it.limit = lowest(append([]layer{own}, it.layers...))
+	it.limit = innermost(append([]layer{own}, it.layers...))
 	if p.LimitC.OK {
 		it.limit = limit{c: p.LimitC, by: "given"}
 	}

@@ -58,7 +58,7 @@ func (s shelf) material(name, id, key string) (material, *section.Problem) {
 		emissivity: m.Emissivity.V, absorptivity: m.Absorptivity,
 	}
 	if m.LimitC.Low > 0 {
-		out.limitC = section.Some(m.LimitC.Low)
+		out.limitC, out.usualC = section.Some(m.LimitC.Low), section.Some(m.LimitC.V)
 	}
 	return s.vary.material(name, out), nil
 }
@@ -71,7 +71,7 @@ const (
 )
 
 func ownMaterial(m section.Material) material {
-	out := material{name: m.Name, k: m.KWMK, gas: m.Gas, metal: !m.Gas && m.KWMK > 5, limitC: m.LimitC, source: m.Source}
+	out := material{name: m.Name, k: m.KWMK, gas: m.Gas, metal: !m.Gas && m.KWMK > 5, limitC: m.LimitC, usualC: m.LimitC, source: m.Source}
 	usual := usualEmissivity
 	if out.metal {
 		usual = brightEmissivity

@@ -44,6 +44,7 @@ func resolveVaried(d *section.Document, cat *catalog.Catalog, v Vary) (scene, []
 	r.wrap()
 	r.places()
 	r.outside()
+	r.limits()
 	v.outside(&r.scene)
 	return r.scene, d.Locate(r.problems)
 }

@@ -14,9 +14,11 @@ type scene struct {
 	parts  []item
 	origin section.Point // mm: the document's point that is the origin of the heat problem
 	notes  []string
-	filmW  float64 // W/m²K where the film is fixed, +Inf for a fixed wall
-	out    outside
-	bodies []body // of several in one surroundings
+	// parts with a limit above the catalogue's and no reason for it
+	unreasoned []string
+	filmW      float64 // W/m²K where the film is fixed, +Inf for a fixed wall
+	out        outside
+	bodies     []body // of several in one surroundings
 }
 
 // enclosure is a holder, or the jacket of a cable.
@@ -54,7 +56,8 @@ type material struct {
 	k      float64 // W/mK
 	gas    bool
 	metal  bool
-	limitC section.Opt[float64]
+	limitC section.Opt[float64] // lowest in use
+	usualC section.Opt[float64]
 	source string
 
 	emissivity, absorptivity float64

@@ -21,6 +21,8 @@ type Conductor struct {
 	Load          string // "" if in none
 	LoadKnown     bool
 	ErrorK        float64
+	Heats         bool    // it is known to make heat of its own
+	HottestC      float64 // of the metal and of the insulation that its limit speaks for; above TempC beside hotter neighbours
 }
 
 // Other is any other thing with a temperature.
@@ -39,6 +41,8 @@ type Governs struct {
 	TempC, LimitC float64
 	MarginK       float64
 	LimitAssumed  bool
+	Heats         bool   // it is a conductor that makes heat; else others heat it
+	Insulation    bool   // it is a conductor whose insulation is hotter than its metal: TempC is the insulation's
 	SetBy         string // what sets the limit: "THHN, dry", "given", "lowest for PVC, assumed"
 }
 
@@ -61,6 +65,7 @@ type Result struct {
 	Status      heat.Status
 	Notes       []string // what is assumed or left out, a sentence each
 	Unassigned  []string // conductors in no load or of unknown current, that results depend on
+	Unreasoned  []string // parts whose limit is above the catalogue's without a reason: nothing is rated
 	Unknowns    int
 	ErrorK      float64
 	Seconds     float64
@@ -80,6 +85,7 @@ func (s *scene) result(a answered, o Options) *Result {
 	r := &Result{
 		Title: s.doc.Title, AmbientC: s.doc.Surroundings.AmbientC.V, Status: a.status, Shapes: s.shapes(),
 		origin: s.origin, bounds: s.bounds(), surroundings: s.surroundingsText(),
+		Unreasoned: s.unreasoned,
 	}
 	r.FilmWM2K = s.filmShown(a)
 	if g := s.holder.gap; g > 0 {
@@ -122,7 +128,7 @@ func (s *scene) readConductors(r *Result, a answered) {
 		}
 		c := Conductor{
 			ID: p.id, TempC: math.NaN(), LimitC: p.limit.c, LimitAssumed: p.limit.assumed, LimitBy: p.limit.by, LoadKnown: p.loadKnown(),
-			HeatWM: math.NaN(), ResistanceOhm: math.NaN(),
+			HeatWM: math.NaN(), ResistanceOhm: math.NaN(), Heats: p.heats(), HottestC: math.NaN(),
 		}
 		if p.load != nil {
 			c.Load = p.load.ID
@@ -130,6 +136,7 @@ func (s *scene) readConductors(r *Result, a answered) {
 		}
 		if a.heat != nil && a.status != heat.ThermalRunaway {
 			c.TempC = a.temps[i]
+			c.HottestC = s.hottestAt(p, c.TempC, faces(a.heat, i))
 			c.HeatWM, c.ResistanceOhm = p.heat(c.TempC), p.resistance(c.TempC)
 			if i < len(a.heat.PartErrorK) {
 				c.ErrorK = a.heat.PartErrorK[i]
@@ -159,6 +166,9 @@ func (s *scene) readOthers(r *Result, a answered) {
 				o.AbsorbedWM = section.Some(h.Absorbed[i])
 			}
 			r.Others = append(r.Others, o)
+			s.addCoverings(r, p, h.Surfaces[i])
+		default:
+			s.addCoverings(r, p, h.Surfaces[i])
 		}
 	}
 	r.addLayers(s.holder.kind, s.holder.layers, h.WallMax, limit{})
@@ -218,8 +228,12 @@ func (r *Result) governing() *Governs {
 			g = &Governs{Part: id, TempC: t, LimitC: l.V, MarginK: m, LimitAssumed: assumed, SetBy: by}
 		}
 	}
-	for _, c := range r.Conductors {
-		try(c.ID, c.TempC, c.LimitC, c.LimitAssumed, c.LimitBy)
+	for i := range r.Conductors {
+		c := &r.Conductors[i]
+		was := g
+		if try(c.ID, c.judged(), c.LimitC, c.LimitAssumed, c.LimitBy); g != was {
+			g.Heats, g.Insulation = c.Heats, c.judged() > c.TempC
+		}
 	}
 	for _, o := range r.Others {
 		try(o.ID, o.TempC, o.LimitC, o.LimitAssumed, o.LimitBy)

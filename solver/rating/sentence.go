@@ -51,7 +51,11 @@ func (r *Result) finding() string {
 	}
 	var b strings.Builder
 	if g := r.Governing; g != nil {
-		fmt.Fprintf(&b, "%s governs: %s °C, limit %s °C (%s), margin %s K.", g.Part, degrees(g.TempC, g.LimitC, true), digits(g.LimitC, 1), g.SetBy, margin(g.TempC, g.LimitC))
+		by := " governs"
+		if g.Insulation {
+			by = " governs by its insulation"
+		}
+		fmt.Fprintf(&b, "%s%s: %s °C, limit %s °C (%s), margin %s K.", g.Part, by, degrees(g.TempC, g.LimitC, true), digits(g.LimitC, 1), g.SetBy, margin(g.TempC, g.LimitC))
 	} else {
 		fmt.Fprintf(&b, "%s is hottest: %s °C; no limit is known.", r.Hottest, degrees(r.hottest(), 0, false))
 	}
