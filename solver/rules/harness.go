@@ -123,7 +123,7 @@ func (u rule) byTable(r Run, c Conductor, n int, loaded float64) (d Rated, why s
 	if why != "" {
 		return d, why
 	}
-	s := base(p.a, p.label+", "+strings.TrimPrefix(u.currents.conditions, "tinned copper, "), u.currents.name, p.column.memory)
+	s := base(p.a, p.label+", "+strings.TrimPrefix(u.currents.conditions, "tinned copper, "), p.column.clause, p.column.memory)
 	return Rated{ID: c.ID, A: p.a, Steps: []Step{s}}, ""
 }
 

@@ -176,7 +176,9 @@ func (p *protecting) permitted(q Permitted) {
 		return
 	}
 	whose := "what " + q.By + " permits in " + id
-	if q.By == "computed" {
+	if u := p.book.find(q.By); u != nil {
+		whose = "what " + u.name + " permits in " + id
+	} else if q.By == "computed" {
 		whose = "the computed current of " + id
 	}
 	l := p.load

@@ -118,7 +118,7 @@ func (u rule) rate(r Run, c Conductor, counts []Count) Rated {
 	if why != "" {
 		return none(why)
 	}
-	out := Rated{ID: c.ID, Steps: []Step{base(p.a, p.label, u.currents.name, p.column.memory)}}
+	out := Rated{ID: c.ID, Steps: []Step{base(p.a, p.label, p.column.clause, p.column.memory)}}
 	together, why := u.together(r, c, method, countFor(counts, c))
 	if why != "" {
 		return none(why)

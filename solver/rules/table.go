@@ -30,6 +30,7 @@ type currentColumn struct {
 	method  string // "" any
 	loaded  int    // 0 any
 	memory  bool
+	clause  string    // what a step cites
 	amperes []float64 // by size; NaN none
 }
 
@@ -45,6 +46,7 @@ type currentsRow struct {
 		Method     string     `yaml:"method"`
 		Loaded     int        `yaml:"loaded"`
 		FromMemory bool       `yaml:"from_memory"`
+		Clause     string     `yaml:"clause"`
 		Amperes    []*float64 `yaml:"amperes"`
 	} `yaml:"columns"`
 }
@@ -72,7 +74,7 @@ func (row currentsRow) build(r *reader) currents {
 		}
 		a := r.numbers("amperes", c.Amperes, len(t.sizes), 1e-3, largestA)
 		r.growing(a, t.sizes)
-		t.columns = append(t.columns, currentColumn{c.Metal, c.RatingC, c.Method, c.Loaded, c.FromMemory || row.Source.FromMemory, a})
+		t.columns = append(t.columns, currentColumn{c.Metal, c.RatingC, c.Method, c.Loaded, c.FromMemory || row.Source.FromMemory, strings.TrimSpace(row.Name + " " + c.Clause), a})
 	}
 	return t
 }
