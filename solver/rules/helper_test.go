@@ -113,16 +113,6 @@ func (o Outcome) sentences() (out []string) {
 	return out
 }
 
-func show(t testing.TB, o Outcome) {
-	seen := map[string]bool{}
-	for _, s := range o.sentences() {
-		if s != "" && !seen[s] {
-			t.Log(o.Rule+":", s)
-		}
-		seen[s] = true
-	}
-}
-
 func (p Protected) check(t testing.TB, kind string) Check {
 	t.Helper()
 	for _, c := range p.Checks {
