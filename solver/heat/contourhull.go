@@ -7,7 +7,7 @@ import (
 	"packrise/solver/outline"
 )
 
-// knuckle is a round piece of a part's outside, or a corner, that the taut string may lie on.
+// knuckle is a corner of a part's outside that the taut string may lie on.
 type knuckle struct {
 	part int
 	c    complex128
@@ -16,15 +16,8 @@ type knuckle struct {
 
 // knuckles lists those of a loop.
 func knuckles(part int, l outline.Loop) (all []knuckle) {
-	for i := range l {
-		s, next := &l[i], &l[(i+1)%len(l)]
-		k := knuckle{part, s.Centre, s.R}
-		switch {
-		case s.R > 0 && (i == 0 || all[len(all)-1] != k) && (i < len(l)-1 || len(all) == 0 || all[0] != k):
-			all = append(all, k)
-		case s.R == 0 && next.R == 0:
-			all = append(all, knuckle{part, s.To, 0})
-		}
+	for _, k := range l.Corners() {
+		all = append(all, knuckle{part, k.C, k.R})
 	}
 	return all
 }
@@ -44,14 +37,19 @@ const (
 	tinyString = 1e-5
 )
 
-// exposed lists the parts of the top level that the string lies on or touches.
-func (l *plan) exposed() (parts []int) {
-	var k []knuckle
+// stringed are the knuckles of all parts of the top level as drawn.
+func (l *plan) stringed() (k []knuckle) {
 	for i := range l.p.Parts {
 		if l.p.Parts[i].In == -1 {
 			k = append(k, knuckles(i, l.outer(i))...)
 		}
 	}
+	return k
+}
+
+// exposed lists the parts of the top level that the string lies on or touches.
+func (l *plan) exposed() (parts []int) {
+	k := l.stringed()
 	for _, a := range l.taut(k) {
 		parts = append(parts, k[a.Disc].part)
 	}
@@ -67,7 +65,7 @@ func (l *plan) drawHull() {
 		}
 	}
 	arcs := l.taut(k)
-	open := outline.Side{Film: l.p.Wall.Film, Temp: l.p.Wall.Ambient}
+	open := outline.Side{Film: l.p.Wall.Film * l.drawnShare(k, arcs), Temp: l.p.Wall.Ambient}
 	size := 0.0
 	for _, d := range k {
 		size = math.Max(size, cmplx.Abs(d.c-k[0].c)+d.r)
@@ -98,6 +96,27 @@ func (l *plan) drawHull() {
 	for _, s := range strings {
 		l.contours = append(l.contours, outline.Contour{Loop: outline.Loop{s}, In: l.p.MediumK, Sides: []outline.Side{open}, String: true})
 	}
+}
+
+// drawnShare is the length of the string as drawn over that round parts drawn in by the clearance: the film's area stays.
+func (l *plan) drawnShare(k []knuckle, arcs []Arc) float64 {
+	if l.p.Clearance == 0 {
+		return 1
+	}
+	whole := l.stringed()
+	return along(whole, l.taut(whole)) / along(k, arcs)
+}
+
+// along is the length of the string.
+func along(k []knuckle, arcs []Arc) (sum float64) {
+	for i, a := range arcs {
+		d, e := k[a.Disc], k[arcs[(i+1)%len(arcs)].Disc]
+		sum += d.r * (a.To - a.From)
+		if len(arcs) > 1 {
+			sum += cmplx.Abs(e.at(a.To) - d.at(a.To))
+		}
+	}
+	return sum
 }
 
 // at is the point of the knuckle where the string's normal has the angle.

@@ -322,7 +322,7 @@ func (l *plan) slack() []float64 {
 
 // clearance is what part i gives for the clearance.
 func (l *plan) clearance(i int) float64 {
-	if q := &l.p.Parts[i]; q.In == -1 && l.p.Wall.Shape != Hull {
+	if q := &l.p.Parts[i]; q.In == -1 {
 		return math.Min(l.p.Clearance/2, thickness(q.Rings)/3)
 	}
 	return 0

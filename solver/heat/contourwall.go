@@ -26,13 +26,10 @@ type facing struct {
 	around bool             // the pieces lie within it
 }
 
-// amongPieces tells whether round parts can stay pieces: not where there is but one, nor where something that is not round has a gas inside.
+// amongPieces tells whether round parts can stay pieces: not where there is but one, nor where surfaces that are not round look into a gas.
 func (p *Problem) amongPieces() bool {
 	if p.Wall.Shape == BarePart {
 		return false
-	}
-	if p.Wall.Shape == Hull {
-		return true
 	}
 	l := beginPlan(p)
 	l.choose()

@@ -31,6 +31,27 @@ func (l Loop) Reach() float64 {
 	return far
 }
 
+// Corner is a rounded piece of a convex outline, or a sharp corner (R = 0): what a taut string can bend round.
+type Corner struct {
+	C complex128
+	R float64
+}
+
+// Corners are those of the loop, counterclockwise; one of a circle.
+func (l Loop) Corners() (all []Corner) {
+	for i := range l {
+		s, next := &l[i], &l[(i+1)%len(l)]
+		k := Corner{s.Centre, s.R}
+		switch {
+		case s.R > 0 && (len(all) == 0 || all[len(all)-1] != k && (i < len(l)-1 || all[0] != k)):
+			all = append(all, k)
+		case s.R == 0 && next.R == 0:
+			all = append(all, Corner{s.To, 0})
+		}
+	}
+	return all
+}
+
 // Gap is the distance between two loops; negative: by how much one has to be moved for them to touch.
 func (l Loop) Gap(m Loop) float64 {
 	return -least(func(phi float64) float64 {

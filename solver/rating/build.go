@@ -113,7 +113,10 @@ func (s *scene) build(air spaces, f films) heat.Problem {
 		p.Wall.Shape = heat.BarePart
 	}
 	if s.hulled() {
-		p.Wall.Shape, p.Wall.Taut, p.Clearance = heat.Hull, taut, 0 // the parts have been moved apart
+		p.Wall.Shape, p.Wall.Taut = heat.Hull, taut
+		if !s.formed(-1, s.children(-1)) {
+			p.Clearance = 0 // the parts have been moved apart
+		}
 	}
 	if h.flat {
 		p.Wall.Shape = heat.FlatWall

@@ -112,7 +112,6 @@ func TestFormedProblems(t *testing.T) {
 		"across":      {"holder: {kind: jacket, width_mm: 24, height_mm: 9}\n" + part(", turn_deg: 90"), "B reaches"},
 		"wire beside": {"holder: {kind: conduit, inside_mm: 40}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.5]}\n", ""},
 		"wire in it":  {"holder: {kind: conduit, inside_mm: 40}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.4]}\n", "B overlaps W by 0.1 mm"},
-		"bundle":      {"holder: {kind: open-bundle}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.5]}\n", "round parts only"},
 		"metal":       {"holder: {kind: conduit, inside_mm: 40}\n" + strings.Replace(part(""), "height_mm: 5", "height_mm: 5, area_mm2: 120", 1), "do not fit into an outline"},
 	} {
 		d, problems := section.Read([]byte(barHead + c.text))
@@ -128,5 +127,42 @@ func TestFormedProblems(t *testing.T) {
 		if c.want == "" && got != "" || !strings.Contains(got, c.want) {
 			t.Errorf("%s: %q, want %q", name, got, c.want)
 		}
+	}
+}
+
+// A busbar in an open bundle with three wires on it and one under it: its outside is the string round bar and wires, heat balances, and what is drawn of the
+// string reaches exactly as far as they do.
+func TestBarInBundle(t *testing.T) {
+	r := solve(t, parse(t, barHead+`holder: {kind: open-bundle, clearance_mm: 0}
+parts:
+  - {id: B, kind: core, conductor: {shape: bar, width_mm: 30, height_mm: 5, corner_mm: 0.5, metal: copper, class: solid}, layers: [{material: pvc, thickness_mm: 1}], at_mm: [0, 0]}
+  - {id: w1, kind: core, conductor: {diameter_mm: 2.04}, layers: [{material: pvc, thickness_mm: 0.8}], at_mm: [-4, 5.32]}
+  - {id: w2, kind: core, conductor: {diameter_mm: 2.04}, layers: [{material: pvc, thickness_mm: 0.8}], at_mm: [0, 5.32]}
+  - {id: w3, kind: core, conductor: {diameter_mm: 2.04}, layers: [{material: pvc, thickness_mm: 0.8}], at_mm: [4, 5.32]}
+  - {id: w4, kind: core, conductor: {diameter_mm: 2.04}, layers: [{material: pvc, thickness_mm: 0.8}], at_mm: [0, -5.32]}
+loads:
+  - {id: a, conductors: [B], current_a: 250}
+  - {id: b, conductors: [w1, w2, w3, w4], current_a: 12}
+`), rating.Options{})
+	if math.Abs(r.Released-r.Generated) > 1e-3*r.Generated {
+		t.Errorf("%g of %g W/m released", r.Released, r.Generated)
+	}
+	temp := map[string]float64{}
+	for _, c := range r.Conductors {
+		temp[c.ID] = c.TempC
+	}
+	if temp["w1"] != 0 && math.Abs(temp["w1"]-temp["w3"]) > 0.01 {
+		t.Errorf("mirrored wires at %g and %g °C", temp["w1"], temp["w3"])
+	}
+	if !(temp["w2"] > temp["w1"] && temp["w2"] > temp["w4"] && temp["w4"] > 36) {
+		t.Errorf("the wire between two others is not the hottest: %v", temp)
+	}
+	hull := r.Shapes[0].Loops[0]
+	lo, hi := hull[0], hull[0]
+	for _, p := range hull {
+		lo.X, lo.Y, hi.X, hi.Y = min(lo.X, p.X), min(lo.Y, p.Y), max(hi.X, p.X), max(hi.Y, p.Y)
+	}
+	if math.Abs(lo.X+16) > 1e-3 || math.Abs(hi.X-16) > 1e-3 || math.Abs(hi.Y+lo.Y) > 1e-2 || hi.Y < 7 || hi.Y > 7.2 {
+		t.Errorf("string from %v to %v", lo, hi)
 	}
 }

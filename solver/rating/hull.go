@@ -39,12 +39,18 @@ func (s *scene) drawn() []pack.Disc {
 	return s.discsOf(of)
 }
 
-// discsOf returns parts in mm and in the plane of the section.
+// discsOf returns parts in mm and in the plane of the section; of one that is not round, the corners round which a string bends.
 func (s *scene) discsOf(of []int) []pack.Disc {
-	out := make([]pack.Disc, len(of))
-	for k, i := range of {
+	out := make([]pack.Disc, 0, len(of))
+	for _, i := range of {
 		p := &s.parts[i]
-		out[k] = pack.Disc{X: p.abs.X, Y: p.abs.Y, R: p.outer() / mm}
+		if p.form.Kind == heat.Disc {
+			out = append(out, pack.Disc{X: p.abs.X, Y: p.abs.Y, R: p.outer() / mm})
+			continue
+		}
+		for _, c := range p.outside().Corners() {
+			out = append(out, pack.Disc{X: p.abs.X + real(c.C)/mm, Y: p.abs.Y + imag(c.C)/mm, R: c.R / mm})
+		}
 	}
 	return out
 }
@@ -86,9 +92,10 @@ func (s *scene) bundleShape(sh *section.Shape) {
 // nanometre is what moved places are rounded to, mm: what does not move from one drawing to the next stays where it is to the last digit.
 const nanometre = 1e-6
 
-// loosen moves the parts of an open bundle apart by their mean clearance. No radius is reduced: the hull follows.
+// loosen moves the parts of an open bundle apart by their mean clearance. No radius is reduced: the hull follows. Where some are not round they stay, and
+// their layers give the clearance as in a holder.
 func (r *resolver) loosen() {
-	if s := &r.scene; s.hulled() && s.holder.gap > 0 {
+	if s := &r.scene; s.hulled() && s.holder.gap > 0 && !s.formed(-1, s.children(-1)) {
 		r.loosenParts(s.children(-1))
 	}
 }

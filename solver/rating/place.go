@@ -121,12 +121,6 @@ func (r *resolver) frame() {
 	top := s.children(-1)
 	switch s.holder.kind {
 	case section.OpenBundle:
-		if s.formed(-1, top) {
-			r.refuse(&section.Problem{
-				Rule: "bundle-round", Key: "holder.kind", What: "an open bundle takes round parts only, and there are bars, sectors or flat cables in it",
-				Do: "use a jacket, conduit or wireway, or kind none for one bare bar or cable",
-			})
-		}
 		x, y, rad := pack.Enclose(s.discs(top))
 		s.origin = section.Point{X: x, Y: y}
 		s.holder.radius = rad * mm
