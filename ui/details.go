@@ -150,18 +150,23 @@ func (d *Details) refill() {
 
 // reveal scrolls a field into sight, for the keyboard.
 func (d *Details) reveal(f *field) {
-	top, bottom, at := f.Position().Y, f.Position().Y+f.Size().Height, d.scroll.Offset
 	seen := d.scroll.Size().Height
 	if d.helpShown {
 		seen -= d.helpBack.Size().Height
 	}
+	reveal(d.scroll, f, seen)
+}
+
+// reveal scrolls a field into the part of a height that is in sight.
+func reveal(scroll *container.Scroll, f *field, seen float32) {
+	top, bottom, at := f.Position().Y, f.Position().Y+f.Size().Height, scroll.Offset
 	switch {
 	case top < at.Y:
 		at.Y = max(0, top-proseLeading)
 	case bottom > at.Y+seen:
 		at.Y = bottom - seen + proseLeading
 	}
-	d.scroll.ScrollToOffset(at)
+	scroll.ScrollToOffset(at)
 }
 
 // about tells over the pane's lower edge what the entry with the focus takes, "" when none has it.

@@ -97,6 +97,7 @@ func (t *telling) whole() {
 		ambient = paragraph{say("Its outer surface is held at "), word(inputNamed(in, "ambient"))}
 	}
 	t.out = append(t.out, append(ambient, say(".")))
+	t.around(in)
 	t.balance()
 	t.wrong("")
 	if t.result == nil || len(t.result.Notes) == 0 {

@@ -2,6 +2,7 @@ package ui
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"packrise/solver/catalog"
@@ -26,25 +27,28 @@ func spelledHolder(cat *catalog.Catalog, h section.Holder) section.Holder {
 	return h
 }
 
-// withHolder returns d in a holder of the catalogue. Parts keep their place relative to the middle; fill and clearance stay.
+// withHolder returns d in a holder of the catalogue. Parts keep their place relative to the middle; what is not of the holder's size stays.
 func withHolder(cat *catalog.Catalog, d *section.Document, row catalog.Holder) *section.Document {
-	now := section.Holder{Kind: row.Kind, Stock: row.ID, Fill: d.Holder.Fill, ClearanceMM: d.Holder.ClearanceMM}
+	now := section.Holder{Kind: row.Kind, Stock: row.ID, Fill: d.Holder.Fill, ClearanceMM: d.Holder.ClearanceMM, LengthM: d.Holder.LengthM, TouchLimitC: d.Holder.TouchLimitC}
 	if row.Kind == d.Holder.Kind {
 		now.Sides = d.Holder.Sides
 	}
 	from, to := middleOf(cat, d.Holder), middleOf(cat, now)
+	return withMiddle(section.SetHolder(d, now), from, to)
+}
+
+// withMiddle returns d with its parts where they were from another middle.
+func withMiddle(d *section.Document, from, to section.Point) *section.Document {
+	if from == to {
+		return d
+	}
 	return d.With(func(d *section.Document) {
-		d.Holder = now
-		if from == to {
-			return
-		}
-		parts := make([]section.Part, len(d.Parts))
-		for i, p := range d.Parts {
-			if p.At.OK {
+		parts := slices.Clone(d.Parts)
+		for i := range parts {
+			if p := &parts[i]; p.At.OK {
 				p.At.V.X += to.X - from.X
 				p.At.V.Y += to.Y - from.Y
 			}
-			parts[i] = p
 		}
 		d.Parts = parts
 	})

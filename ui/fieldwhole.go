@@ -21,14 +21,19 @@ func wholeInputs(k *Desk) []*input {
 		in = append(in, holderInput(k))
 		in = append(in, holderSizeInputs(k)...)
 	}
-	in = append(in, fillInput(k))
-	return append(in, holderLayerInputs(k)...)
+	if d.Holder.Kind != section.NoHolder {
+		in = append(in, fillInput(k))
+	}
+	in = append(in, holderLayerInputs(k)...)
+	return append(in, aroundInputs(k)...)
 }
 
 // wholeInput makes an input of the document.
 func wholeInput(in input, read func(text string) (meant string, f func(*section.Document), err error)) *input {
 	in.on = "section"
-	in.step = strings.ToLower(in.label)
+	if in.step == "" {
+		in.step = strings.ToLower(in.label)
+	}
 	if in.shown == "" && in.text != "" {
 		in.shown = withUnit(in.text, in.unit)
 	}

@@ -24,16 +24,18 @@ func (w *Window) showHolder() {
 
 // showInputs is a dialog of fields that follow the document.
 func (w *Window) showInputs(title string, inputs func(*Desk) []*input) {
-	s := &inputSheet{desk: w.desk, inputs: inputs, known: map[string]*field{}}
+	s := &inputSheet{desk: w.desk, inputs: inputs, known: map[string]*field{}, help: newProse(w.desk)}
 	s.column = &fyne.Container{Layout: &fieldColumn{gap: 8, margin: 8}}
+	s.scroll = container.NewVScroll(s.column)
+	s.help.size = smallText(s.help)
 	s.follow()
 	stop := w.desk.listenUntil(func(c Changed) {
 		if c&ChangedDocument != 0 {
 			s.follow()
 		}
 	})
-	d := dialog.NewCustom(title, "Close", container.NewVScroll(s.column), w.win)
-	w.show(d, fyne.NewSize(460, 480))
+	d := dialog.NewCustom(title, "Close", container.NewBorder(nil, container.New(helpLines{}, s.help), nil, nil, s.scroll), w.win)
+	w.show(d, fyne.NewSize(460, 560))
 	w.closing(d, stop)
 }
 
@@ -43,6 +45,22 @@ type inputSheet struct {
 	inputs func(*Desk) []*input
 	known  map[string]*field
 	column *fyne.Container
+	scroll *container.Scroll
+	help   *prose // what the entry with the focus takes
+}
+
+// helpLines keeps room for what an entry takes, so that nothing moves when it is said.
+type helpLines struct{}
+
+// helpLeast is the height for that, of two lines at the width of the dialog.
+const helpLeast = 48
+
+// MinSize is the room that is kept.
+func (helpLines) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(80, helpLeast) }
+
+// Layout leaves a margin.
+func (helpLines) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	put(o[0], 8, 6, s.Width-16, s.Height-6)
 }
 
 func (s *inputSheet) follow() {
@@ -51,6 +69,7 @@ func (s *inputSheet) follow() {
 		f := s.known[in.key]
 		if f == nil {
 			f = newField(s.desk, in, s.relay)
+			f.about = func(text string) { s.about(f, text) }
 			s.known[in.key] = f
 		} else {
 			f.show(in)
@@ -61,6 +80,14 @@ func (s *inputSheet) follow() {
 }
 
 func (s *inputSheet) relay() { s.column.Refresh() }
+
+// about says what an entry takes, and brings it into sight for the keyboard.
+func (s *inputSheet) about(f *field, text string) {
+	s.help.say(run{text: text, tone: quiet})
+	if text != "" {
+		reveal(s.scroll, f, s.scroll.Size().Height)
+	}
+}
 
 // choice is one of few words, with what it does.
 type choice struct {
@@ -97,18 +124,25 @@ func holderKindInput(k *Desk) *input {
 		{section.Conduit, "conduit"},
 		{section.Wireway, "wireway"},
 		{section.OpenBundle, "bundle"},
+		{section.Apart, "bodies apart"},
 		{section.NoHolder, "bare part"},
 	}
-	in := input{key: "kind", label: "Kind", step: "kind of holder", about: "what is around the parts"}
+	if slices.Contains(wholeOnly, k.Document().Surroundings.Kind) {
+		kinds = slices.DeleteFunc(kinds, func(c choice) bool { return c.kind == section.Apart })
+	}
+	in := input{key: "kind", label: "Kind", step: "kind of holder", about: "What is around the parts. Bodies apart: each group of parts that touch has an outside of its own."}
 	return choiceInput(in, k.Document().Holder.Kind, kinds, func(d *section.Document, kind string) *section.Document {
 		return withHolderKind(k.Catalog(), d, kind)
 	})
 }
 
+// wholeOnly are surroundings of a section as a whole, which bodies apart can't have.
+var wholeOnly = []string{section.FixedWall, section.Insulation}
+
 // withHolderKind changes the kind of the holder and keeps what the new one can have; parts keep their place relative to the middle.
 func withHolderKind(cat *catalog.Catalog, d *section.Document, kind string) *section.Document {
 	was := spelledHolder(cat, d.Holder)
-	now := section.Holder{Kind: kind, Fill: was.Fill, ClearanceMM: was.ClearanceMM, Layers: was.Layers}
+	now := section.Holder{Kind: kind, Fill: was.Fill, ClearanceMM: was.ClearanceMM, Layers: was.Layers, LengthM: was.LengthM, TouchLimitC: was.TouchLimitC}
 	round := was.InsideMM.Or(min(was.WidthMM.Or(20), was.HeightMM.Or(20)))
 	switch kind {
 	case section.Jacket, section.Conduit:
@@ -116,19 +150,10 @@ func withHolderKind(cat *catalog.Catalog, d *section.Document, kind string) *sec
 	case section.Wireway:
 		now.WidthMM, now.HeightMM = section.Some(was.WidthMM.Or(round)), section.Some(was.HeightMM.Or(round))
 		now.Sides = was.Sides
+	case section.NoHolder:
+		now.Layers, now.Fill, now.ClearanceMM = nil, "", section.Opt[float64]{}
 	default:
-		now.Layers = nil
+		now.Layers, now.StringEmissivity = nil, was.StringEmissivity
 	}
-	from, to := middleOf(cat, was), middleOf(cat, now)
-	return d.With(func(d *section.Document) {
-		d.Holder = now
-		parts := slices.Clone(d.Parts)
-		for i := range parts {
-			if parts[i].At.OK {
-				parts[i].At.V.X += to.X - from.X
-				parts[i].At.V.Y += to.Y - from.Y
-			}
-		}
-		d.Parts = parts
-	})
+	return withMiddle(section.SetHolder(d, now), middleOf(cat, was), middleOf(cat, now))
 }

@@ -39,7 +39,7 @@ func surroundingsInputs(k *Desk) []*input {
 	if s.Kind != section.Vacuum {
 		all = append(all, wetInput(k))
 	}
-	return all
+	return append(all, againstInputs(k)...)
 }
 
 var (
@@ -147,7 +147,11 @@ var surroundingsKinds = []choice{
 // surroundingsKindInput is the kind of the surroundings. What the new kind needs is written out, so that it can be seen and changed.
 func surroundingsKindInput(k *Desk) *input {
 	in := input{key: "surroundings", label: "Kind", step: "kind of surroundings", about: "What takes the heat up. Fixed film: one coefficient all round. Surface held: the outside at one temperature."}
-	return choiceInput(in, k.Document().Surroundings.Kind, surroundingsKinds, func(d *section.Document, kind string) *section.Document {
+	kinds := surroundingsKinds
+	if k.Document().Holder.Kind == section.Apart {
+		kinds = slices.DeleteFunc(slices.Clone(kinds), func(c choice) bool { return slices.Contains(wholeOnly, c.kind) })
+	}
+	return choiceInput(in, k.Document().Surroundings.Kind, kinds, func(d *section.Document, kind string) *section.Document {
 		return section.Surround(d, kind, func(s *section.Surroundings) { completeSurroundings(s) })
 	})
 }
