@@ -111,13 +111,13 @@ func (p *item) outer() float64 {
 	return r
 }
 
-// loadKnown tells whether the heat of a conductor is known. Earth conductors and everything that is no conductor make none.
+// loadKnown tells whether the heat of a conductor is known. Earth and signal conductors and everything that is no conductor make none.
 func (p *item) loadKnown() bool {
 	if !p.metal {
 		return true
 	}
 	if p.load == nil {
-		return p.src.Role == section.RoleEarth
+		return p.src.Role == section.RoleEarth || p.src.Role == section.RoleSignal
 	}
 	return !p.load.Unknown
 }

@@ -43,6 +43,7 @@ func checkRatings(r *report, d *Document) {
 		t.checkNotWith(r, &d.Loads[i], path("").key("loads").at(i).key("not_with"))
 	}
 	t.checkCases(r)
+	t.checkChoices(r, d.Rules.AtMost, path("").key("rules").key("at_most"), nil, "")
 	t.checkMeasurements(r)
 	t.checkReasons(r)
 }
@@ -108,7 +109,7 @@ func (t *targets) checkCases(r *report) {
 		}
 		seen[c.ID] = true
 		states := t.checkStates(r, c.Loads, at.key("loads"))
-		t.checkAny(r, c, at.key("any"), states)
+		t.checkChoices(r, c.Any, at.key("any"), states, "any")
 		for _, s := range c.Loads {
 			for other := range excluded[s.Load] {
 				if o, ok := states[other]; ok && s.Load < other && s.on() && o.on() {
@@ -133,18 +134,23 @@ func (t *targets) checkStates(r *report, states []CaseLoad, at path) map[string]
 	return byLoad
 }
 
-// checkAny keeps a load of a case to one place, and counts to what there is.
-func (t *targets) checkAny(r *report, c *Case, at path, states map[string]CaseLoad) {
+// checkChoices keeps counts to what there is and, in a case (where is then "any"), a load to one place.
+func (t *targets) checkChoices(r *report, choices []AnyOf, at path, states map[string]CaseLoad, where string) {
 	taken := map[string]bool{}
-	for i, a := range c.Any {
+	for i, a := range choices {
 		at := at.at(i)
+		if where == "" {
+			taken = map[string]bool{}
+		}
 		for j, id := range a.Of {
 			at := at.key("of").at(j)
 			switch _, given := states[id]; {
 			case given:
 				r.add(at, "contradiction", "load "+show(id)+" stands under loads and in any", "take it out of one of them")
-			case taken[id]:
+			case taken[id] && where == "any":
 				r.add(at, "contradiction", "load "+show(id)+" stands twice in any", "take it out of one of them")
+			case taken[id]:
+				r.add(at, "duplicate-name", "load "+show(id)+" is named twice", "take one of them out")
 			default:
 				t.load(r, id, at)
 			}

@@ -115,6 +115,7 @@ const (
 	RoleEarth   = "earth"
 	RoleControl = "control"
 	RoleSpare   = "spare"
+	RoleSignal  = "signal" // of a data pair or sensor: said to carry nothing that could warm it
 )
 
 // Part is one thing inside the holder.
@@ -207,6 +208,7 @@ type Load struct {
 	Continuous   bool // said to run three hours or more; false is "not said"
 	Motor        bool // a motor's branch circuit
 	StartingDuty bool // runs only between a motor and its starter while starting
+	Nonlinear    bool // the major part of it is nonlinear: its neutral carries harmonics
 	Protection   Protection
 	NotWith      []string // loads that can't be energised together with this one; either may name the other
 	Terminals    Terminals

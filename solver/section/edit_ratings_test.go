@@ -35,6 +35,9 @@ func said(d *Document) string {
 		}
 		out = append(out, s)
 	}
+	for _, a := range d.Rules.AtMost {
+		out = append(out, fmt.Sprintf("at most %d of %s", a.Count, strings.Join(a.Of, ",")))
+	}
 	for _, m := range d.Measurements {
 		out = append(out, m.ID+" at "+m.At+states(m.Loads))
 	}
@@ -49,7 +52,7 @@ func TestReferencesFollow(t *testing.T) {
 	d = SetMeasurement(d, Measurement{ID: "pair", At: "C2/jacket", ReadingC: 50})
 	d = SetReason(d, "measurement pair", "read twice")
 	const all = "motor-1=L1,L2,L3 neutral N not motor-2; motor-2=M1; starter=K1; bench-heat=H1; night motor-1:20 bench-heat 1 of motor-2,starter; day motor-1:12 motor-2; " +
-		"survey at jacket motor-1:18; pair at C2/jacket; limit L1; limit C1/a; design_margin_k; measurement pair"
+		"at most 1 of motor-1,motor-2; survey at jacket motor-1:18; pair at C2/jacket; limit L1; limit C1/a; design_margin_k; measurement pair"
 	change := func(pairs ...string) string { return strings.NewReplacer(pairs...).Replace(all) }
 	for _, c := range []struct {
 		name string
@@ -66,19 +69,19 @@ func TestReferencesFollow(t *testing.T) {
 		{"the neutral becomes a rod", Replace(d, Part{ID: "N", Kind: Rod, Diameter: Some(2.0), Material: "pe"}), change(" neutral N", "")},
 		{"delete a cable", Delete(d, "C2"), change("; pair at C2/jacket", "", "; measurement pair", "")},
 		{"delete a part with a reason", Delete(d, "L1"), change("L1,", "", "limit L1; ", "")},
-		{"delete a load's last conductor", Delete(d, "M1"), change(" not motor-2", "", "motor-2=M1; ", "", "motor-2,", "", " motor-2;", ";")},
-		{"unassign it", Unassign(d, "M1"), change(" not motor-2", "", "motor-2=M1; ", "", "motor-2,", "", " motor-2;", ";")},
+		{"delete a load's last conductor", Delete(d, "M1"), change("motor-1,motor-2", "motor-1", " not motor-2", "", "motor-2=M1; ", "", "motor-2,", "", " motor-2;", ";")},
+		{"unassign it", Unassign(d, "M1"), change("motor-1,motor-2", "motor-1", " not motor-2", "", "motor-2=M1; ", "", "motor-2,", "", " motor-2;", ";")},
 		{"remove the load", RemoveLoad(d, "starter"), change("starter=K1; ", "", ",starter", "")},
-		{"and all of any", RemoveLoad(RemoveLoad(d, "starter"), "motor-2"), change(" not motor-2", "", "motor-2=M1; ", "", "starter=K1; ", "", " 1 of motor-2,starter", "", " motor-2;", ";")},
+		{"and all of any", RemoveLoad(RemoveLoad(d, "starter"), "motor-2"), change("motor-1,motor-2", "motor-1", " not motor-2", "", "motor-2=M1; ", "", "starter=K1; ", "", " 1 of motor-2,starter", "", " motor-2;", ";")},
 		{"rename a load", RenameLoad(d, "motor-2", "fan"), change("motor-2", "fan")},
 		{"to a name that is taken", RenameLoad(d, "motor-2", "starter"), all},
 		{"a load becomes a heat", SetHeat(d, "L1", 3), change(" motor-1:20", "", " motor-1:12", "", " motor-1:18", "")},
-		{"split", Split(d, "L3"), change("L2,L3", "L2", "bench-heat=H1", "bench-heat=H1; load-L3=L3 neutral N not motor-2", "bench-heat 1", "bench-heat load-L3:20 1", "motor-2; survey", "motor-2 load-L3:12; survey", ":18", ":18 load-L3:18")},
+		{"split", Split(d, "L3"), change("L2,L3", "L2", "bench-heat=H1", "bench-heat=H1; load-L3=L3 neutral N not motor-2", "bench-heat 1", "bench-heat load-L3:20 1", "motor-2; at", "motor-2 load-L3:12; at", ":18", ":18 load-L3:18")},
 		{"remove a survey", RemoveMeasurement(d, "pair"), change("; pair at C2/jacket", "", "; measurement pair", "")},
 		{"rename a survey", RenameMeasurement(d, "pair", "two"), change("; pair at", "; two at", "measurement pair", "measurement two")},
 		{"exchange what two carry", SwapLoads(d, "L1", "M1"), change("L1,L2", "M1,L2", "=M1", "=L1")},
 		{"and what a neutral is", SwapLoads(d, "N", "M1"), change("=M1", "=N", "neutral N", "neutral M1")},
-		{"assign", Assign(d, "M1", "starter"), change(" not motor-2", "", "motor-2=M1; ", "", "motor-2,", "", " motor-2;", ";", "=K1", "=K1,M1")},
+		{"assign", Assign(d, "M1", "starter"), change("motor-1,motor-2", "motor-1", " not motor-2", "", "motor-2=M1; ", "", "motor-2,", "", " motor-2;", ";", "=K1", "=K1,M1")},
 		{"not with", SetNotWith(d, "motor-2", "starter"), change(" not motor-2", "", "=M1", "=M1 not starter")},
 		{"not with what says so itself", SetNotWith(d, "motor-2", "motor-1", "starter", "motor-2", "none"), change("=M1", "=M1 not starter")},
 	} {

@@ -29,6 +29,7 @@ func deep(t fataler, d *Document) *Document {
 		return c
 	})
 	c.Measurements = mapped(d.Measurements, func(m Measurement) Measurement { m.Loads = mapped(m.Loads, id[CaseLoad]); return m })
+	c.Rules.AtMost = mapped(d.Rules.AtMost, func(a AnyOf) AnyOf { a.Of = mapped(a.Of, id[string]); return a })
 	c.Rules.Use, c.Rules.Files, c.Reasons = mapped(d.Rules.Use, id[string]), mapped(d.Rules.Files, id[string]), mapped(d.Reasons, id[Reason])
 	c.Materials = mapped(d.Materials, id[Material])
 	c.StockUsed = mapped(d.StockUsed, id[StockRow])

@@ -39,6 +39,7 @@ func rewrite(d *Document, part, load func(string) string) *Document {
 	return d.With(func(d *Document) {
 		d.Loads = noEmpty(mapped(d.Loads, w.ofLoad))
 		d.Cases = noEmpty(mapped(d.Cases, w.ofCase))
+		d.Rules.AtMost = w.choices(d.Rules.AtMost)
 		d.Measurements = kept(d.Measurements, w.measurement)
 		d.Reasons = kept(d.Reasons, func(v Reason) (Reason, bool) {
 			if id, ok := strings.CutPrefix(v.For, ReasonMeasurement); ok {
@@ -82,13 +83,16 @@ func (w rewriter) ofLoad(l Load) Load {
 }
 
 func (w rewriter) ofCase(c Case) Case {
-	c.Loads = w.states(c.Loads)
-	c.Any = kept(c.Any, func(a AnyOf) (AnyOf, bool) {
+	c.Loads, c.Any = w.states(c.Loads), w.choices(c.Any)
+	return c
+}
+
+func (w rewriter) choices(list []AnyOf) []AnyOf {
+	return kept(list, func(a AnyOf) (AnyOf, bool) {
 		a.Of = names(a.Of, w.load)
 		a.Count = min(a.Count, len(a.Of))
 		return a, len(a.Of) > 0
 	})
-	return c
 }
 
 func (w rewriter) states(list []CaseLoad) []CaseLoad {

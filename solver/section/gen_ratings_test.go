@@ -27,7 +27,10 @@ func (m maker) ratings(d *Document) {
 		d.Measurements = append(d.Measurements, m.measurement(d, m.id(taken)))
 	}
 	if m.coin("rules") {
-		d.Rules = Rules{Method: m.word([]string{"", "B1", "C"}), Inside: m.word([]string{"", InPanel, InMachine})}
+		d.Rules = Rules{Method: m.word([]string{"", "B1", "C"}), Inside: m.word([]string{"", InPanel, InMachine}), Arrangement: m.word([]string{"", Bunched, LayerTray})}
+		if len(d.Loads) > 0 {
+			d.Rules.AtMost = append(d.Rules.AtMost, AnyOf{[]string{d.Loads[0].ID}, rapid.IntRange(0, 1).Draw(m.t, "at most")})
+		}
 		for range rapid.IntRange(0, 2).Draw(m.t, "use") {
 			d.Rules.Use = append(d.Rules.Use, m.name())
 			d.Rules.Files = append(d.Rules.Files, m.name())
@@ -40,6 +43,7 @@ func (m maker) rateLoad(d *Document, l *Load) {
 	l.System = m.word([]string{"", DC, SinglePhase, ThreePhase})
 	l.VoltsV, l.PowerFactor = m.opt(1, 1000), m.opt(0.1, 0.8)
 	if m.coin("said") {
+		l.Nonlinear = m.coin("nonlinear")
 		l.Continuous, l.Motor = m.coin("continuous"), m.coin("motor")
 		l.StartingDuty = !l.Continuous && !l.Motor
 	}

@@ -126,7 +126,7 @@ func (m maker) part(id string, builds []string) Part {
 		if !p.Conductor.Round() {
 			p.TurnDeg = m.opt(-360, 360)
 		}
-		p.Role = m.word([]string{"", RoleLine, RoleNeutral, RoleEarth, RoleControl, RoleSpare})
+		p.Role = m.word([]string{"", RoleLine, RoleNeutral, RoleEarth, RoleControl, RoleSpare, RoleSignal})
 	}
 	return p
 }

@@ -23,7 +23,7 @@ var (
 		{name: Apart},
 	}
 	partKinds       = []word{{name: Core}, {name: Cable}, {name: Rod}}
-	roles           = []word{{name: RoleLine}, {name: RoleNeutral}, {name: RoleEarth}, {name: RoleControl}, {name: RoleSpare}}
+	roles           = []word{{name: RoleLine}, {name: RoleNeutral}, {name: RoleEarth}, {name: RoleControl}, {name: RoleSpare}, {name: RoleSignal}}
 	conductorShapes = []word{{name: RoundShape}, {name: BarShape}, {name: SectorShape}}
 
 	metals    = []word{{name: Copper}, {name: TinnedCopper}, {name: Aluminium}}
@@ -33,7 +33,7 @@ var (
 	// other spellings of words, for the suggestion
 	alsoWritten = map[string]string{
 		"aluminum": Aluminium, "al": Aluminium, "cu": Copper, "tinned copper": TinnedCopper, "tinned": TinnedCopper, "class 1": Solid, "class 2": Stranded,
-		"class 5": Flexible, "1": Solid, "2": Stranded, "5": Flexible, "fine-stranded": Flexible, "pe": RoleEarth, "ground": RoleEarth, "phase": RoleLine,
+		"class 5": Flexible, "1": Solid, "2": Stranded, "5": Flexible, "fine-stranded": Flexible, "pe": RoleEarth, "ground": RoleEarth, "phase": RoleLine, "data": RoleSignal,
 		"tray": Wireway, "trunking": Wireway, "pipe": Conduit, "tube": Conduit, "sheath": Jacket, "bundle": OpenBundle, "air": StillAir, "wire": Core,
 		"conductor": Core, "filler": Rod, "hose": Rod, "closed": SideInsulated,
 	}

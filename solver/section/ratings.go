@@ -93,12 +93,24 @@ const (
 	InMachine = "machine" // electrical equipment of a machine
 )
 
+// Arrangements, where a table asks.
+const (
+	Bunched      = "bunched"
+	LayerWall    = "layer-wall"
+	LayerCeiling = "layer-ceiling"
+	LayerTray    = "layer-tray"
+	LayerLadder  = "layer-ladder"
+)
+
 // Rules choose the tables beside the computed values.
 type Rules struct {
 	Use    []string // ids: nec-310, iec-52 …
 	Method string   // reference method of installation: B1, C, E, F, G
 	Inside string
-	Files  []string // rule sets of the user's own, beside the design
+	// Arrangement of cables or bundles beside each other: Bunched (also "") or a single layer.
+	Arrangement string
+	AtMost      []AnyOf  // what can run together beyond the loads' not_with, for counts
+	Files       []string // rule sets of the user's own, beside the design
 }
 
 // Reason is why something was set that needs one. For is "limit L1", "design_margin_k" or "measurement survey".
@@ -145,5 +157,5 @@ func normalRatings(d *Document) {
 		m.Loads = noEmpty(m.Loads)
 		return m
 	})
-	d.Rules.Use, d.Rules.Files, d.Reasons = noEmpty(d.Rules.Use), noEmpty(d.Rules.Files), noEmpty(d.Reasons)
+	d.Rules.Use, d.Rules.AtMost, d.Rules.Files, d.Reasons = noEmpty(d.Rules.Use), noEmpty(d.Rules.AtMost), noEmpty(d.Rules.Files), noEmpty(d.Reasons)
 }

@@ -28,7 +28,7 @@ func TestReadRatings(t *testing.T) {
 	want := []Load{
 		{
 			ID: "motor-1", Conductors: []string{"L1", "L2", "L3"}, CurrentA: Some(16.0), FrequencyHz: Some(50.0), System: ThreePhase, Neutral: "N", VoltsV: Some(400.0),
-			PowerFactor: Some(0.85), Continuous: true, Motor: true, Protection: Protection{Breaker, 20, Some(1.45)}, NotWith: []string{"motor-2"}, Terminals: Terminals{RatingC: Some(75.0)},
+			PowerFactor: Some(0.85), Continuous: true, Motor: true, Nonlinear: true, Protection: Protection{Breaker, 20, Some(1.45)}, NotWith: []string{"motor-2"}, Terminals: Terminals{RatingC: Some(75.0)},
 		},
 		{ID: "motor-2", Conductors: []string{"M1"}, CurrentA: Some(9.0), Protection: Protection{Kind: Fuse, RatingA: 16}, Terminals: Terminals{RatedA: Some(57.0)}},
 		{ID: "starter", Conductors: []string{"K1"}, CurrentA: Some(0.5), StartingDuty: true},
@@ -51,7 +51,7 @@ func TestReadRatings(t *testing.T) {
 		m.Along != Even || m.Cover != Opened || m.Loads[0] != (CaseLoad{Load: "motor-1", CurrentA: 18}) {
 		t.Errorf("%+v", m)
 	}
-	if d.Rules.Method != "B1" || d.Rules.Inside != InPanel || strings.Join(d.Rules.Use, " ") != "nec-310 iec-52" || d.Rules.Files[0] != "ours.yaml" {
+	if d.Rules.Method != "B1" || d.Rules.Inside != InPanel || d.Rules.Arrangement != LayerTray || d.Rules.AtMost[0].Count != 1 || strings.Join(d.Rules.Use, " ") != "nec-310 iec-52" || d.Rules.Files[0] != "ours.yaml" {
 		t.Errorf("%+v", d.Rules)
 	}
 	if d.DesignMarginK != Some(0.0) || d.Reason(ReasonMargin) != "tested at the maker's" || d.LimitReason("L1") != "data sheet 7" || d.LimitReason("L2") != "" || d.LimitReason("C2/a") != "tested" {

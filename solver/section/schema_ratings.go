@@ -7,6 +7,7 @@ var (
 	protectionKinds = []word{{name: Breaker}, {name: IndustrialBreaker}, {name: MotorBreaker}, {name: Fuse}, {name: OverloadRelay}, {name: ElectronicBreaker}}
 	alongs          = []word{{name: Even}, {name: FallsOff}}
 	covers          = []word{{name: Closed}, {name: Opened}}
+	arrangements    = []word{{name: Bunched}, {name: LayerWall}, {name: LayerCeiling}, {name: LayerTray}, {name: LayerLadder}}
 	insides         = []word{{name: InPanel}, {name: InMachine}}
 	screenForms     = []word{{name: Braid}, {name: Foil}, {name: Served}, {name: Tube}, {name: Armour}}
 	bondings        = []word{{name: BondedNone}, {name: BondedOne}, {name: BondedBoth}}
@@ -42,6 +43,7 @@ var loadRatings = []field[Load]{
 	on("continuous", func(l *Load) *bool { return &l.Continuous }, yesNo{}),
 	on("motor", func(l *Load) *bool { return &l.Motor }, yesNo{}),
 	on("starting_duty", func(l *Load) *bool { return &l.StartingDuty }, yesNo{}),
+	on("nonlinear", func(l *Load) *bool { return &l.Nonlinear }, yesNo{}),
 	on("protection", func(l *Load) *Protection { return &l.Protection }, some[Protection]{protectionTable}),
 	on("not_with", func(l *Load) *[]string { return &l.NotWith }, list[string]{text{}, false, MaxNamed}),
 	on("terminals", func(l *Load) *Terminals { return &l.Terminals }, optional[Terminals]{terminalsTable}),
@@ -96,6 +98,8 @@ var rulesTable = &table[Rules]{what: "rules", fields: []field[Rules]{
 	on("use", func(v *Rules) *[]string { return &v.Use }, list[string]{text{}, false, MaxNamed}),
 	on("method", func(v *Rules) *string { return &v.Method }, text{}),
 	on("inside", func(v *Rules) *string { return &v.Inside }, oneOf{what: "place", words: insides}),
+	on("arrangement", func(v *Rules) *string { return &v.Arrangement }, oneOf{what: "arrangement", words: arrangements}),
+	on("at_most", func(v *Rules) *[]AnyOf { return &v.AtMost }, list[AnyOf]{anyTable, false, MaxNamed}),
 	on("files", func(v *Rules) *[]string { return &v.Files }, list[string]{text{}, false, MaxNamed}),
 }}
 
