@@ -60,3 +60,10 @@ func dotPlain(a, b []float64) float64 {
 	}
 	return s
 }
+
+func axpyPlain(y []float64, f float64, x []float64) {
+	y = y[:len(x)]
+	for i, v := range x {
+		y[i] += f * v
+	}
+}

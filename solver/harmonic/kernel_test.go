@@ -68,3 +68,24 @@ func TestDot(t *testing.T) {
 		}
 	}
 }
+
+func TestAxpy(t *testing.T) {
+	r := rand.New(rand.NewPCG(9, 4))
+	for n := range 70 {
+		x, y := make([]float64, n), make([]float64, n+3)
+		for i := range x {
+			x[i] = r.NormFloat64()
+		}
+		for i := range y {
+			y[i] = r.NormFloat64()
+		}
+		want := append([]float64(nil), y...)
+		Axpy(y, 0.7, x)
+		axpyPlain(want, 0.7, x)
+		for i := range y {
+			if math.Abs(y[i]-want[i]) > 1e-14*(1+math.Abs(want[i])) {
+				t.Errorf("%d: %d is %g, want %g", n, i, y[i], want[i])
+			}
+		}
+	}
+}

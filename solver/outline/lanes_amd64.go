@@ -6,6 +6,12 @@ func in2AVX(r0, r1 *float64, n int, x, a *float64)
 //go:noescape
 func out2AVX(r0, r1 *float64, n int, u, y *float64)
 
+//go:noescape
+func in2AVX512(r0, r1 *float64, n int, x, a *float64)
+
+//go:noescape
+func out2AVX512(r0, r1 *float64, n int, u, y *float64)
+
 func cpuid(leaf, sub uint32) (a, b, c, d uint32)
 
 func xgetbv() (a uint32)
@@ -25,10 +31,24 @@ var wide = func() bool {
 	return b&avx2 != 0
 }()
 
+// wider tells whether there is AVX-512 besides (the same, volume 1, chapter 15).
+var wider = func() bool {
+	const avx512f, zmm = 1 << 16, 0xe6
+	if !wide || xgetbv()&zmm != zmm {
+		return false
+	}
+	_, b, _, _ := cpuid(7, 0)
+	return b&avx512f != 0
+}()
+
 func in2(r0, r1, x, a []float64) {
 	if n := len(r0); wide && n > 0 {
 		_, _, _ = r1[n-1], x[Lanes*n-1], a[2*Lanes-1]
-		in2AVX(&r0[0], &r1[0], n, &x[0], &a[0])
+		if wider {
+			in2AVX512(&r0[0], &r1[0], n, &x[0], &a[0])
+		} else {
+			in2AVX(&r0[0], &r1[0], n, &x[0], &a[0])
+		}
 		return
 	}
 	in2Plain(r0, r1, x, a)
@@ -37,7 +57,11 @@ func in2(r0, r1, x, a []float64) {
 func out2(r0, r1, u, y []float64) {
 	if n := len(r0); wide && n > 0 {
 		_, _, _ = r1[n-1], u[2*Lanes-1], y[Lanes*n-1]
-		out2AVX(&r0[0], &r1[0], n, &u[0], &y[0])
+		if wider {
+			out2AVX512(&r0[0], &r1[0], n, &u[0], &y[0])
+		} else {
+			out2AVX(&r0[0], &r1[0], n, &u[0], &y[0])
+		}
 		return
 	}
 	out2Plain(r0, r1, u, y)
