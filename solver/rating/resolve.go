@@ -26,6 +26,12 @@ func resolve(d *section.Document, cat *catalog.Catalog) (scene, []section.Proble
 
 // resolveVaried is resolve with inputs shifted.
 func resolveVaried(d *section.Document, cat *catalog.Catalog, v Vary) (scene, []section.Problem) {
+	r := resolved(d, cat, v)
+	return r.scene, d.Locate(r.problems)
+}
+
+// resolved is a resolver that has done its work.
+func resolved(d *section.Document, cat *catalog.Catalog, v Vary) *resolver {
 	r := &resolver{loads: map[string]*section.Load{}, builds: map[string]*section.Build{}}
 	r.shelf, r.problems = open(d, cat)
 	r.shelf.vary = v
@@ -46,7 +52,7 @@ func resolveVaried(d *section.Document, cat *catalog.Catalog, v Vary) (scene, []
 	r.outside()
 	r.limits()
 	v.outside(&r.scene)
-	return r.scene, d.Locate(r.problems)
+	return r
 }
 
 func (r *resolver) refuse(p *section.Problem) bool {
