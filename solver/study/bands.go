@@ -189,7 +189,7 @@ func (b *bander) follow(ctx context.Context) error {
 		for k := range row {
 			switch {
 			case k < len(temps):
-				row[k] = (temps[k] - b.list[k].tempC) / step
+				row[k] = (temps[k] - b.base.Conductors[k].TempC) / step
 			case !math.IsInf(last.HighK[k], 0):
 				row[k] = share * last.HighK[k] / more
 			}

@@ -4,6 +4,7 @@ import (
 	"context"
 	"math"
 	"math/rand/v2"
+	"os"
 	"slices"
 	"testing"
 
@@ -20,11 +21,13 @@ func ranged(d *section.Document) *section.Document {
 
 // TestBandsAgainstFull: P5 and P95 from responses one at a time, against solutions in full with everything drawn at once.
 func TestBandsAgainstFull(t *testing.T) {
-	draws := 200
-	if testing.Short() {
-		draws = 100
+	draws := 120
+	names := []string{"filled-control-cable"}
+	if os.Getenv("PACKRISE_SOAK") != "" {
+		draws = 600
+		names = append(names, "nine-in-emt", "roof-strings")
 	}
-	for _, name := range []string{"nine-in-emt", "filled-control-cable"} {
+	for _, name := range names {
 		d := ranged(demo(t, name))
 		d = d.With(func(d *section.Document) { d.Ranges.PositionMM = section.Some(0.0) })
 		s := New(cat)

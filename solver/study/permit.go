@@ -47,8 +47,15 @@ type Permits struct {
 // MarginK is the design margin of a document.
 func MarginK(d *section.Document) float64 { return d.DesignMarginK.Or(DesignMarginK) }
 
-// known refuses designs with currents that nobody wrote, unless idle is assumed.
+// known refuses designs with currents that nobody wrote, unless idle is assumed, and with limits raised for no reason.
 func known(r *rating.Result, o Options) error {
+	if len(r.Unreasoned) > 0 {
+		return &Refusal{[]section.Problem{{
+			Rule: rating.RuleNoReason, IDs: r.Unreasoned, Key: "limit_c",
+			What: "the limits of " + list(r.Unreasoned) + " are above the catalogue's and no reason is written",
+			Do:   "write reasons: {limit …: why} for each, or a lower limit",
+		}}}
+	}
 	if o.AssumeIdle || len(r.Unassigned) == 0 {
 		return nil
 	}

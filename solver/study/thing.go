@@ -18,7 +18,11 @@ type thing struct {
 func things(r *rating.Result) []thing {
 	out := make([]thing, 0, len(r.Conductors)+len(r.Others))
 	for _, c := range r.Conductors {
-		out = append(out, thing{c.ID, c.TempC, c.LimitC, c.LimitBy})
+		t := c.TempC
+		if c.HottestC > t { // insulation beside hotter neighbours
+			t = c.HottestC
+		}
+		out = append(out, thing{c.ID, t, c.LimitC, c.LimitBy})
 	}
 	for _, o := range r.Others {
 		out = append(out, thing{o.ID, o.TempC, o.LimitC, o.LimitBy})
