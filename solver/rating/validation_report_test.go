@@ -139,6 +139,9 @@ func summary(all []family, rows []outcome) string {
 		band := "reported only"
 		if f.banded() {
 			band = fmt.Sprintf("%.2f–%.2f", f.low, f.high)
+			if f.ofMean {
+				band += " (mean)"
+			}
 		}
 		line(f.name, band, func(o outcome) bool { return o.family == f })
 	}
