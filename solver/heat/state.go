@@ -202,11 +202,7 @@ func (s *state) outgoing(top int) []complex128 {
 }
 
 func axpy(y []float64, f float64, x []float64) {
-	if f == 0 {
-		return
-	}
-	y = y[:len(x)]
-	for i, v := range x {
-		y[i] += f * v
+	if f != 0 {
+		harmonic.Axpy(y, f, x)
 	}
 }
