@@ -44,11 +44,15 @@ func (s *scene) at(top []int, discs []pack.Disc) map[string]section.Point {
 	return out
 }
 
-// Settle returns the places of the top-level parts after falling to the bottom of the holder. A bundle, which has no bottom, is laid up.
+// Settle returns the places of the top-level parts after falling to the bottom of the holder. A bundle, which has no bottom, is laid up; of bodies
+// apart those without a place are put in a row.
 func Settle(d *section.Document, cat *catalog.Catalog) (map[string]section.Point, error) {
 	s, top, err := sized(d, cat)
 	if err != nil {
 		return nil, err
+	}
+	if s.apart() {
+		return s.inRow(top), nil
 	}
 	box := s.box(-1)
 	if box == (pack.Box{}) {
@@ -67,6 +71,9 @@ func LayUp(d *section.Document, cat *catalog.Catalog) (map[string]section.Point,
 	s, top, err := sized(d, cat)
 	if err != nil {
 		return nil, err
+	}
+	if s.apart() {
+		return nil, fmt.Errorf("lay up: bodies apart lie where they are drawn; use settle to put those without a place in a row, or an open bundle")
 	}
 	box := s.box(-1)
 	if box.W > 0 {
