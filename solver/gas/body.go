@@ -3,12 +3,15 @@ package gas
 import "math"
 
 // body is a convex surface that is not round, where it stands: its patches, and the strokes that they are pieces of.
-type body struct{ rim, strokes []Segment }
+type body struct {
+	rim, strokes []Segment
+	blank        []bool // as Disc.Blank
+}
 
 // placeRim puts the rim of disc i where its centre is.
 func (e *Enclosure) placeRim(i int) {
 	d := &e.discs[i]
-	b := &body{rim: make([]Segment, len(d.Rim))}
+	b := &body{rim: make([]Segment, len(d.Rim)), blank: d.Blank}
 	for k, s := range d.Rim {
 		s.A, s.B, s.Centre = s.A+d.C, s.B+d.C, s.Centre+d.C
 		b.rim[k] = s
@@ -144,7 +147,7 @@ func (b *body) share(y *eye, a arc, first int, weight float64) {
 	for k := range b.rim {
 		s := &b.rim[k]
 		p, q, ok := s.shows(y.at)
-		if !ok {
+		if !ok || k < len(b.blank) && b.blank[k] {
 			continue
 		}
 		lo, hi := sines(p*y.turn, q*y.turn)

@@ -11,8 +11,8 @@ type Disc struct {
 	C     complex128
 	R     float64
 	Cuts  []float64
-	Blank []bool    // patches between cuts that are no surface and see nothing either; nil: none
-	Rim   []Segment // patches about C, counterclockwise, each from the end of the one before, within R of C; Cuts are not read
+	Blank []bool    // patches that are no surface and see nothing either; nil: none
+	Rim   []Segment // patches about C, counterclockwise, each from the end of the one before, within R of C; Cuts are not read then
 }
 
 // blank tells whether patch k is none.

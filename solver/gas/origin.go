@@ -146,7 +146,9 @@ func (e *Enclosure) lookFromRim(y *eye, i int, rim []Segment) {
 	for k := range rim {
 		p := newRail(&rim[k], false)
 		y.open(e)
-		e.lookAlong(y, &p, i, -1)
+		if !e.discs[i].blank(k) {
+			e.lookAlong(y, &p, i, -1)
+		}
 		y.close(e, e.first[i]+k)
 	}
 }

@@ -8,9 +8,10 @@ import (
 	"packrise/solver/outline"
 )
 
-// hollow is a space full of gas between contours: its wall is one of them, seen from inside, what lies in it are parts, seen from outside.
+// hollow is a space full of gas between contours: its wall is one of them, seen from inside, or the strings of an open bundle; what lies in it are parts,
+// seen from outside.
 type hollow struct {
-	wall  int
+	walls []int // contours, counterclockwise
 	parts []int
 	eps   float64 // emissivity of the wall
 	stirs bool
@@ -32,11 +33,11 @@ func (a Accuracy) hollowGrain() (part, wall float64, points int) {
 // hollows lists the spaces that are full of gas, that of the top level first.
 func (l *plan) hollows() []*hollow {
 	var out []*hollow
-	add := func(in, wall int, f Filling, eps float64) {
-		if f == Solid {
+	add := func(in int, walls []int, f Filling, eps float64) {
+		if f == Solid || len(walls) == 0 {
 			return
 		}
-		h := &hollow{wall: wall, eps: eps, stirs: f == Air, nusselt: nusselt{1, true}}
+		h := &hollow{walls: walls, eps: eps, stirs: f == Air, nusselt: nusselt{1, true}}
 		for j := range l.p.Parts {
 			if l.p.Parts[j].In == in {
 				h.parts = append(h.parts, j)
@@ -45,18 +46,28 @@ func (l *plan) hollows() []*hollow {
 		out = append(out, h)
 	}
 	if l.p.Wall.Shape != BarePart {
-		add(-1, l.wall, l.p.Filling, l.p.Wall.Emissivity)
+		add(-1, l.walls(), l.p.Filling, l.p.Wall.Emissivity)
 	}
 	for i := range l.p.Parts {
 		if q := &l.p.Parts[i]; q.Core == Inside {
-			add(i, l.first[i], q.Filling, q.InsideEmissivity)
+			add(i, []int{l.first[i]}, q.Filling, q.InsideEmissivity)
 		}
 	}
 	return out
 }
 
-// face is the contour of part i's outside.
-func (l *plan) face(i int) int { return l.first[i] + len(l.p.Parts[i].Rings) }
+// walls are the contours about the top level: the wall's inside, or the strings of an open bundle.
+func (l *plan) walls() (w []int) {
+	if l.p.Wall.Shape != Hull {
+		return []int{l.wall}
+	}
+	for i := range l.contours {
+		if l.contours[i].String {
+			w = append(w, i)
+		}
+	}
+	return w
+}
 
 // faces are the surfaces that look into hollows: of each contour, the hollow, and the place of its part there, −1 for the wall.
 type faces struct {
@@ -67,23 +78,34 @@ type faces struct {
 func (l *plan) faces(hollows []*hollow) faces {
 	f := faces{make([]*hollow, len(l.contours)), make([]int, len(l.contours))}
 	for _, h := range hollows {
-		f.of[h.wall], f.place[h.wall] = h, -1
+		for _, w := range h.walls {
+			f.of[w], f.place[w] = h, -1
+		}
 		for k, i := range h.parts {
-			f.of[l.face(i)], f.place[l.face(i)] = h, k
+			f.of[l.skinOf(i)], f.place[l.skinOf(i)] = h, k
 		}
 	}
 	return f
+}
+
+// grained is a grain for a wall of a given length.
+type grained struct {
+	gas.Grain
+	around float64
 }
 
 // divide cuts the faces of all hollows of sys into patches.
 func (l *plan) divide(sys *outline.Shaped, hollows []*hollow, a Accuracy) *outline.ShapedPatches {
 	part, turn, _ := a.hollowGrain()
 	f := l.faces(hollows)
-	grains := map[*hollow]*gas.Grain{}
+	grains := map[*hollow]*grained{}
 	for _, h := range hollows {
-		g := &gas.Grain{PerTurn: part, Turn: turn}
+		g := &grained{}
+		for _, w := range h.walls {
+			g.around += l.contours[w].Loop.Perimeter()
+		}
 		for _, i := range h.parts {
-			g.Discs = append(g.Discs, l.disc(i, strokes(l.contours[l.face(i)].Loop)))
+			g.Discs = append(g.Discs, l.disc(i, strokes(l.contours[l.skinOf(i)].Loop)))
 		}
 		grains[h] = g
 	}
@@ -92,9 +114,8 @@ func (l *plan) divide(sys *outline.Shaped, hollows []*hollow, a Accuracy) *outli
 		if f.of[contour] == nil {
 			return false
 		}
-		on, usual = contour, l.contours[contour].Loop.Perimeter()/turn
-		if f.place[contour] >= 0 {
-			usual *= turn / part
+		if on, usual = contour, l.contours[contour].Loop.Perimeter()/part; f.place[contour] < 0 {
+			usual = grains[f.of[on]].around / turn
 		}
 		return true
 	}, func(z complex128) float64 { return grains[f.of[on]].Longest(z, usual, f.place[on]) })
@@ -145,24 +166,36 @@ func (h *hollow) look(l *plan, p *outline.ShapedPatches, points, threads int, st
 	var discs []gas.Disc
 	var eps []float64
 	h.at = nil
-	take := func(contour int, off, e float64) (out []gas.Segment) {
+	take := func(contour int, off, e float64) (out []gas.Segment, blank []bool) {
 		for k, c := range p.Contour {
 			if c == contour {
 				out = append(out, segment(l.contours[c].Loop, p.A[k], p.B[k], off))
+				blank = append(blank, l.blank(c, (p.A[k]+p.B[k])/2))
 				h.at, eps = append(h.at, k), append(eps, e)
 			}
 		}
 		for k := range out { // neighbours meet exactly
-			out[(k+1)%len(out)].A = out[k].B
+			if next := (k + 1) % len(out); next > 0 || !l.contours[contour].String {
+				out[next].A = out[k].B
+			}
 		}
-		return out
+		return out, blank
 	}
 	for _, i := range h.parts {
-		c := l.face(i)
-		off := (l.outer(i).Perimeter() - l.contours[c].Loop.Perimeter()) / (2 * math.Pi)
-		discs = append(discs, l.disc(i, take(c, off, l.p.Parts[i].Emissivity)))
+		c, off := l.skinOf(i), 0.0
+		if l.hull == nil {
+			off = (l.outer(i).Perimeter() - l.contours[c].Loop.Perimeter()) / (2 * math.Pi)
+		}
+		rim, blank := take(c, off, l.p.Parts[i].Emissivity)
+		d := l.disc(i, rim)
+		d.Blank = blank
+		discs = append(discs, d)
 	}
-	out := gas.Outline{Segments: take(h.wall, 0, h.eps)}
+	var out gas.Outline
+	for _, w := range h.walls {
+		s, _ := take(w, 0, h.eps)
+		out.Segments = append(out.Segments, s...)
+	}
 	e := h.seen
 	if e == nil || !e.Alike(discs, out, points) {
 		if e = gas.NewEnclosure(discs, out, points, threads, stop); e == nil {
@@ -173,6 +206,23 @@ func (h *hollow) look(l *plan, p *outline.ShapedPatches, points, threads int, st
 	n := e.Len()
 	h.t, h.e, h.base, h.out = make([]float64, n), make([]float64, n), make([]float64, n), make([]float64, n)
 	return true
+}
+
+// blank tells whether the contour faces the surroundings of an open bundle at z.
+func (l *plan) blank(contour int, z complex128) bool {
+	c := &l.contours[contour]
+	return l.hull != nil && !c.String && c.Sides != nil && c.Sides[nearestStroke(c.Loop, z)].Kind != outline.Covered
+}
+
+// nearestStroke is the one that z lies on.
+func nearestStroke(l outline.Loop, z complex128) (on int) {
+	least := math.Inf(1)
+	for i := range l {
+		if d := cmplx.Abs(l[i].Nearest(z) - z); d < least {
+			on, least = i, d
+		}
+	}
+	return on
 }
 
 // gather sets to to what of x belongs to the hollow.

@@ -33,7 +33,7 @@ func (s *shaped) prepare(ctx context.Context) bool {
 	}
 	factor, _, _ := s.m.set.Accuracy.settings()
 	s.plan = newPlan(&s.m.p)
-	s.sys = outline.NewShaped(s.plan.contours, factor, ended(ctx))
+	s.sys = outline.NewShapedAround(s.plan.contours, outline.Around{MediumK: s.m.p.MediumK, Hull: s.plan.hull}, nil, factor, ended(ctx))
 	if s.sys != nil {
 		s.glow, s.before = s.newShine(s.before), nil
 	}
@@ -84,8 +84,8 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 	parts := s.m.p.Parts
 	for i := range parts {
 		q, c := &parts[i], s.plan.first[i]
-		copy(r.Surfaces[i], hot[c:])
-		r.Core[i] = hot[c]
+		copy(r.Surfaces[i], hot[c+s.plan.skins[i]:])
+		r.Core[i] = r.Surfaces[i][0]
 		switch q.Core {
 		case Metal:
 			r.Core[i] = s.sys.Metal(y, c)
@@ -104,7 +104,7 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 	if g := s.glow; g != nil {
 		r.Unknowns += len(g.e)
 		g.cores = append([]float64(nil), r.Core...)
-		part, _, _ := s.m.set.Accuracy.grain()
+		part, _, _ := s.m.set.Accuracy.hollowGrain()
 		s.m.widen(r, s.m.rise(r)*grainError/(part*part))
 	}
 	r.Field = shapedField{s.sys.Field(y)}
@@ -149,8 +149,11 @@ func (s *shaped) walls(r *Result, hot []float64, mean float64, out []float64) {
 	} else {
 		copy(r.WallMax, hot[s.plan.wall:last+1])
 	}
+	if w.Shape == Hull {
+		r.WallMax = hot[last+1:]
+	}
 	r.WallMean = mean
-	if s.glow != nil && s.glow.hollows[0].wall == last {
+	if s.glow != nil {
 		s.glow.direct(out)
 	}
 	for i, q := range out {

@@ -62,8 +62,11 @@ func (s *shaped) solvedHere(ctx context.Context) bool {
 	return s.solve(ctx, heats).Status != Cancelled
 }
 
-// radiates tells whether surfaces radiate to each other.
+// radiates tells whether surfaces radiate to each other, as far as the problem tells.
 func (s *shaped) radiates() bool {
+	if s.sys != nil {
+		return s.glow != nil
+	}
 	p := &s.m.p
 	if p.Wall.Shape != BarePart && p.Filling != Solid {
 		return true

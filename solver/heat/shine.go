@@ -3,7 +3,6 @@ package heat
 import (
 	"context"
 	"math"
-	"math/cmplx"
 	"slices"
 
 	"packrise/solver/outline"
@@ -64,7 +63,7 @@ func (g *shine) inherit(old *shine) {
 		return
 	}
 	for i, h := range g.hollows {
-		if o := old.hollows[i]; o.ex != nil && h.wall == o.wall && slices.Equal(h.parts, o.parts) {
+		if o := old.hollows[i]; o.ex != nil && slices.Equal(h.walls, o.walls) && slices.Equal(h.parts, o.parts) {
 			h.seen = o.ex.Enclosure
 		}
 	}
@@ -196,7 +195,7 @@ func (g *shine) newton(ctx context.Context, heats []float64, tol float64) (steps
 func (g *shine) begin(ctx context.Context) (steps int, ok bool) {
 	t, length := 0.0, 0.0
 	for k, c := range g.patch.Contour {
-		if l := g.patch.Length[k]; c == g.hollows[0].wall {
+		if l := g.patch.Length[k]; slices.Contains(g.hollows[0].walls, c) {
 			t += l * g.t[k]
 			length += l
 		}
@@ -232,12 +231,12 @@ func (g *shine) column(ctx context.Context, contour int) ([]float64, bool) {
 func (g *shine) level() {
 	for _, h := range g.hollows {
 		sum, area := 0.0, 0.0
-		for _, k := range h.at {
+		for i, k := range h.at {
 			sum += g.e[k]
-			area += g.patch.Length[k]
+			area += h.ex.Seen(i) * g.patch.Length[k] // blank patches see nothing
 		}
-		for _, k := range h.at {
-			g.e[k] -= sum / area * g.patch.Length[k]
+		for i, k := range h.at {
+			g.e[k] -= sum / area * h.ex.Seen(i) * g.patch.Length[k]
 		}
 	}
 }
@@ -253,21 +252,16 @@ func (g *shine) given(contour int) float64 {
 	return sum
 }
 
-// direct adds to the heat through each stroke of the outside what its patches take up: there is no layer that would bring it.
+// direct adds to the heat through the strokes of the outside, of an open bundle in all, what its patches take up: no layer brings it.
 func (g *shine) direct(out []float64) {
-	last := len(g.s.plan.contours) - 1
-	l := g.s.plan.contours[last].Loop
+	l := g.s.plan
+	last := len(l.contours) - 1
 	for k, c := range g.patch.Contour {
-		if c != last {
-			continue
+		switch {
+		case l.contours[c].String:
+			out[0] -= g.e[k]
+		case c == last && l.hull == nil:
+			out[nearestStroke(l.contours[c].Loop, (g.patch.A[k]+g.patch.B[k])/2)] -= g.e[k]
 		}
-		z, on, least := (g.patch.A[k]+g.patch.B[k])/2, 0, math.Inf(1)
-		for i := range l { // the strokes of a rectangle; how others are shared out nobody asks
-			d := l[i].To - l[i].From
-			if far := math.Abs(imag((z-l[i].From)*cmplx.Conj(d)) / cmplx.Abs(d)); l[i].R == 0 && far < least {
-				on, least = i, far
-			}
-		}
-		out[on] -= g.e[k]
 	}
 }
