@@ -3,7 +3,7 @@ package rules
 import (
 	"fmt"
 	"math"
-	"strings"
+	"slices"
 
 	"packrise/solver/quantity"
 )
@@ -51,18 +51,18 @@ func (l fillLimits) limit(n int, nipple bool) float64 {
 type room struct {
 	id      string
 	outside float64 // mm
-	wire    bool    // counts among the conductors and cables
+	kind    string  // conductor | cable | rod
 }
 
 // rooms lists what lies directly in the holder.
 func (r Run) rooms() (out []room) {
 	for _, c := range r.Conductors {
 		if c.Cable == "" {
-			out = append(out, room{c.ID, c.OutsideMM, true})
+			out = append(out, room{c.ID, c.OutsideMM, "conductor"})
 		}
 	}
 	for _, p := range r.Parts {
-		out = append(out, room{p.ID, p.OutsideMM, p.Kind != "rod"})
+		out = append(out, room{p.ID, p.OutsideMM, p.Kind})
 	}
 	return out
 }
@@ -75,9 +75,10 @@ func (u rule) fillOf(r Run) *Fill {
 	}
 	f := &Fill{Rule: u.id, Clause: u.fill.Clause, InsideMM2: inside, limits: *u.fill, nipple: r.Holder.nipple()}
 	for _, p := range r.rooms() {
-		if p.wire {
+		if p.kind != "rod" {
 			f.N++
 		}
+		f.kinds[slices.Index(roomKinds, p.kind)+1]++
 		if !(p.outside > 0) {
 			f.Unknown = append(f.Unknown, p.id)
 			continue
@@ -107,10 +108,29 @@ func (f *Fill) judge() {
 	}
 }
 
+var roomKinds = []string{"conductor", "cable", "rod"}
+
+// what is "9 conductors", "1 conductor and 2 cables".
+func (f *Fill) what() string {
+	var words []string
+	for i, kind := range append([]string{"part"}, roomKinds...) {
+		if f.kinds[i] > 0 {
+			words = append(words, numbered(f.kinds[i], kind))
+		}
+	}
+	return andList(words)
+}
+
 func (f *Fill) sentence() string {
-	s := fmt.Sprintf("%s take %s mm² of %s mm² inside: %s %% of a limit of %s %% (%s)", numbered(f.N, "conductor or cable"), quantity.Fixed(f.TakenMM2, 0), quantity.Fixed(f.InsideMM2, 0),
+	if f.kinds == [4]int{} {
+		return "Nothing lies in the holder; up to " + trim(100*f.limits.More) + " % of it may be taken (" + f.Clause + ")."
+	}
+	take := "take"
+	if f.kinds[0]+f.kinds[1]+f.kinds[2]+f.kinds[3] == 1 {
+		take = "takes"
+	}
+	s := fmt.Sprintf("%s %s %s mm² of %s mm² inside: %s %% of a limit of %s %% (%s)", f.what(), take, quantity.Fixed(f.TakenMM2, 0), quantity.Fixed(f.InsideMM2, 0),
 		quantity.Trimmed(math.Ceil(f.Share*1000-1e-6)/10, 1), trim(100*f.Limit), f.Clause)
-	s = strings.Replace(s, "conductor or cables", "conductors and cables", 1)
 	switch {
 	case f.Over:
 		s += ", which is over"

@@ -71,7 +71,7 @@ func TestNineInEMT(t *testing.T) {
 	r := Run{AmbientC: 30, Holder: conduit(t, "emt-1"), Conductors: wires(t, "w", 9, "8 AWG", "", thhnWire("8 AWG"))}
 	f := one(t, r, "nec-ch9").Fill
 	near(t, "fill", f.Share, 0.381, 0.001)
-	if want := "9 conductors and cables take 213 mm² of 558 mm² inside: 38.2 % of a limit of 40 % (NEC chapter 9 table 1)."; f.Text != want || f.Over {
+	if want := "9 conductors take 213 mm² of 558 mm² inside: 38.2 % of a limit of 40 % (NEC chapter 9 table 1)."; f.Text != want || f.Over {
 		t.Errorf("%q", f.Text)
 	}
 	r.Holder.LengthM = 0.5

@@ -103,6 +103,7 @@ type Fill struct {
 	Text      string
 	limits    fillLimits
 	nipple    bool
+	kinds     [4]int  // others, conductors, cables, rods
 	equal     float64 // mm, outside diameter of all; −1 when they differ, 0 when nothing is in
 }
 

@@ -42,6 +42,8 @@ func (t *currents) pick(c Conductor, method string, loaded int) (p picked, why s
 		return p, fmt.Sprintf("%s has no method %q; it has %s", t.name, method, orList(t.methods()))
 	case math.IsInf(lowest, 1):
 		return p, fmt.Sprintf("%s has no %d loaded conductors by method %s", t.name, loaded, method)
+	case c.Size == (quantity.Size{}):
+		return p, fmt.Sprintf("it has no standard size (%s mm²), and %s lists standard sizes alone", trim(c.AreaMM2), t.name)
 	case best < 0:
 		return p, fmt.Sprintf("the wire is rated %s °C and %s starts at %s °C", trim(c.RatingC), t.name, trim(lowest))
 	}
@@ -91,7 +93,7 @@ func (t *currents) methods() (out []string) {
 
 func (c Conductor) sizeWord() string {
 	if c.Size == (quantity.Size{}) {
-		return "conductor of " + trim(c.AreaMM2) + " mm² without a standard size"
+		return trim(c.AreaMM2) + " mm²"
 	}
 	return c.Size.Pretty()
 }

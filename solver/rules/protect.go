@@ -31,6 +31,7 @@ const (
 // Protect compares each load with its device and both with the permitted currents of each origin. American sizes are judged by the NEC, others by
 // IEC 60364-4-43. A load without a device gets one check that says so, beside those that need none.
 func (b *Book) Protect(r Run, permitted []Permitted) (out []Protected) {
+	caps := b.Terminals(r)
 	for _, l := range r.Loads {
 		wires := r.wiresOf(l)
 		if len(wires) == 0 {
@@ -42,7 +43,7 @@ func (b *Book) Protect(r Run, permitted []Permitted) (out []Protected) {
 		} else {
 			p.add(Check{Kind: CheckDevice, Text: fmt.Sprintf("What protects %s is unknown: its permitted currents are not a device rating. Write protection with kind and rating_a.", l.ID)})
 		}
-		p.terminals(b.Terminals(r))
+		p.terminals(caps)
 		for _, q := range permitted {
 			p.permitted(q)
 		}
@@ -123,6 +124,9 @@ func (p *protecting) device() {
 	if l.Continuous && !l.Motor {
 		p.compare(Check{Kind: CheckContinuousDevice, Value: continuousFactor * l.CurrentA, Limit: l.Device.RatingA, Clause: "NEC 210.20(A), 215.3"},
 			"125 % of the continuous load of "+l.ID, "its "+name)
+		if last := &p.checks[len(p.checks)-1]; last.Known && !last.Within {
+			last.Text += " A device listed for continuous operation at 100 % of its rating is excepted."
+		}
 	}
 	p.smallConductor()
 }

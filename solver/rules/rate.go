@@ -54,6 +54,9 @@ func usualAmerican(r Run) []string {
 	case r.Holder.Kind == Wireway:
 		return []string{"nec-378-22"}
 	}
+	if r.cables() > 0 {
+		return []string{"nec-310", "nec-310-17"}
+	}
 	return []string{"nec-310-17"}
 }
 
@@ -71,6 +74,9 @@ func (u rule) apply(r Run) Outcome {
 	case u.currents == nil && out.Fill == nil:
 		return out.refuse(r, u.name+" does not apply: the inside of the holder is unknown.")
 	case u.currents == nil:
+		if u.source.FromMemory {
+			out.remark("from-memory", nil, "From memory, not read in the standard: "+u.fill.Clause+". Check these figures before relying on them.")
+		}
 		return out
 	case math.IsNaN(r.AmbientC):
 		return out.refuse(r, "No ambient temperature was entered, and "+u.name+" needs one.")
@@ -107,11 +113,11 @@ func (o *Outcome) remark(kind string, ids []string, text string) {
 // rate works out one conductor: table, count, ambient.
 func (u rule) rate(r Run, c Conductor, counts []Count) Rated {
 	none := func(why string) Rated { return Rated{ID: c.ID, A: math.NaN(), Why: c.ID + ": " + why + "."} }
-	switch {
-	case c.Role == Earth:
+	if c.Role == Earth {
 		return none("an earth carries no current in service, so it is not rated")
-	case u.counting.of == ofCores && c.Cable == "" && r.Holder.Kind == OpenBundle:
-		return none(u.name + " is for cables, and this is a loose wire")
+	}
+	if why := u.rates(r, c); why != "" {
+		return none(why)
 	}
 	method, loaded := u.method(r, c), u.loaded(r, c)
 	p, why := u.currents.pick(c, method, loaded)

@@ -13,6 +13,8 @@ type rule struct {
 	source                   catalog.Source
 	informative              bool
 	holders                  []string // nil: all
+	cableHolders             []string // where it rates only cores of cables
+	looseHolders             []string // where it rates only loose wires
 	metal                    string   // "yes", "no" or "": all
 	elsewhere                map[string]string
 	otherMetal, panel        string
@@ -70,6 +72,8 @@ type ruleRow struct {
 	Informative bool                  `yaml:"informative"`
 	Source      sourceRow             `yaml:"source"`
 	Holders     []string              `yaml:"holders"`
+	CablesIn    []string              `yaml:"cables_in"`
+	LooseIn     []string              `yaml:"loose_in"`
 	Metal       string                `yaml:"metal"`
 	Elsewhere   map[string]string     `yaml:"elsewhere"`
 	OtherMetal  string                `yaml:"other_metal"`
@@ -91,12 +95,14 @@ func (row ruleRow) build(r *reader, b *Book) rule {
 	r.text("name", row.Name)
 	row.Source.check(r)
 	r.words("holders", row.Holders, holderKinds)
+	r.words("cables_in", row.CablesIn, holderKinds)
+	r.words("loose_in", row.LooseIn, holderKinds)
 	r.words("elsewhere", slices.Sorted(maps.Keys(row.Elsewhere)), holderKinds)
 	r.words("methods", slices.Sorted(maps.Keys(row.Methods)), holderKinds)
 	r.words("metal", []string{row.Metal}, []string{"yes", "no", ""})
 	out := rule{
 		id: row.Rule, title: row.Title, name: row.Name, edition: row.Source.edition(), source: row.Source.source(), informative: row.Informative,
-		holders: row.Holders, metal: row.Metal, elsewhere: row.Elsewhere, otherMetal: row.OtherMetal, panel: row.Panel, methods: row.Methods, remarks: row.Remarks,
+		holders: row.Holders, cableHolders: row.CablesIn, looseHolders: row.LooseIn, metal: row.Metal, elsewhere: row.Elsewhere, otherMetal: row.OtherMetal, panel: row.Panel, methods: row.Methods, remarks: row.Remarks,
 	}
 	out.currents = refer(r, "currents", row.Currents, b.currents)
 	out.ambient = refer(r, "ambient", row.Ambient, b.ambients)
@@ -167,12 +173,38 @@ func (u rule) applies(r Run) (why string, ok bool) {
 	switch {
 	case r.ListedPanel && u.panel != "":
 		return u.name + " does not apply: " + u.panel + ".", false
-	case len(u.holders) > 0 && !slices.Contains(u.holders, r.Holder.Kind):
-		return u.name + " does not apply: " + wordOr(u.elsewhere[r.Holder.Kind], "it is for "+orList(u.holders)) + ".", false
+	case !u.isFor(r):
+		return u.name + " does not apply: " + wordOr(u.elsewhere[r.Holder.Kind], "it is for "+orList(slices.Concat(u.holders, u.cableHolders, u.looseHolders))) + ".", false
 	case u.metal == "yes" && !r.Holder.Metal, u.metal == "no" && r.Holder.Metal:
 		return u.name + " does not apply: " + wordOr(u.otherMetal, "the wall is of the other kind") + ".", false
 	}
 	return "", true
+}
+
+// isFor tells whether the rule rates anything in this kind of holder.
+func (u rule) isFor(r Run) bool {
+	some := func(cable bool) bool {
+		return slices.ContainsFunc(r.Conductors, func(c Conductor) bool { return c.Role != Earth && (c.Cable != "") == cable })
+	}
+	switch kind := r.Holder.Kind; {
+	case slices.Contains(u.cableHolders, kind):
+		return some(true)
+	case slices.Contains(u.looseHolders, kind):
+		return some(false)
+	default:
+		return len(u.holders) == 0 && len(u.cableHolders) == 0 && len(u.looseHolders) == 0 || slices.Contains(u.holders, kind)
+	}
+}
+
+// rates tells whether the rule rates this conductor where it lies; why is for the others.
+func (u rule) rates(r Run, c Conductor) (why string) {
+	switch kind := r.Holder.Kind; {
+	case c.Cable == "" && slices.Contains(u.cableHolders, kind):
+		return u.name + " is for cables here, and this is a loose wire"
+	case c.Cable != "" && slices.Contains(u.looseHolders, kind):
+		return u.name + " is for loose wires, and this is a core of a cable"
+	}
+	return ""
 }
 
 func wordOr(s, other string) string {

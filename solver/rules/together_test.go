@@ -142,3 +142,28 @@ func TestUsual(t *testing.T) {
 		}
 	}
 }
+
+// TestOpenAir: a core of a cable in an open bundle is rated by table 310.16 with the count of the whole bundle, a loose wire by 310.17 (NEC 310.15(C)(1)).
+func TestOpenAir(t *testing.T) {
+	r := Run{AmbientC: 30, Holder: Holder{Kind: OpenBundle}}
+	motors(t, &r, "m", 2, "12 AWG", Load{}, thhnWire("12 AWG"))
+	for i := range 3 {
+		r.Conductors[i].Cable = "C1"
+	}
+	loose, cable := one(t, r, "nec-310-17"), one(t, r, "nec-310")
+	near(t, "core", cable.of(t, "m-1-1").A, 30*0.8, 1e-9)
+	near(t, "wire", loose.of(t, "m-2-1").A, 40*0.8, 1e-9)
+	if d := cable.of(t, "m-2-1"); d.Why != "m-2-1: NEC table 310.16 is for cables here, and this is a loose wire." {
+		t.Errorf("%+v", d)
+	}
+	if d := loose.of(t, "m-1-1"); d.Why != "m-1-1: NEC table 310.17 is for loose wires, and this is a core of a cable." {
+		t.Errorf("%+v", d)
+	}
+	if got := Shipped().Usual(r); len(got) != 2 {
+		t.Errorf("%v", got)
+	}
+	r.Conductors = r.Conductors[3:]
+	if o := one(t, r, "nec-310"); o.Applies || o.Why != "NEC table 310.16 does not apply: wires in open air are judged by nec-310-17." {
+		t.Errorf("%q", o.Why)
+	}
+}
