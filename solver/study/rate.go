@@ -6,6 +6,7 @@ import (
 
 	"packrise/solver/heat"
 	"packrise/solver/rating"
+	"packrise/solver/rules"
 	"packrise/solver/section"
 )
 
@@ -23,6 +24,11 @@ type Ratings struct {
 	Doc   *section.Document
 	Bands *Bands // at the currents as given; nil where no steady temperature exists
 	State string
+
+	Codes     *Codes
+	Lowest    []Lowest // in the order of Base.Conductors
+	Protected []rules.Protected
+	Faults    []SoftFault
 	// Done tells how far the answer is: what a later stage brings is nil until then.
 	Done Stage
 }
@@ -32,14 +38,16 @@ type Stage int
 
 // Stages.
 const (
-	StageAll   Stage = iota + 1 // all scaled together, by the limits and the design margin
-	StageBands                  // the bands, and what may be relied on with them
-	StageLoads                  // each load with the others as given
-	StageAlone                  // each conductor alone here, and three of it
+	StageAll    Stage = iota + 1 // all scaled together, by the limits and the design margin
+	StageBands                   // the bands, and what may be relied on with them
+	StageLoads                   // each load with the others as given
+	StageCodes                   // code tables, terminals, devices, and the lowest of all
+	StageAlone                   // each conductor alone here, and three of it
+	StageFaults                  // each circuit at the tripping current of its device
 )
 
 // Last is the last stage.
-const Last = StageAlone
+const Last = StageFaults
 
 // Rate answers in stages; o.Stage, if there is one, gets a copy after each. base may be nil, or the solution of d at standard accuracy.
 func (s *Study) Rate(ctx context.Context, d *section.Document, base *rating.Result, o Options) (*Ratings, error) {
@@ -50,7 +58,7 @@ func (s *Study) Rate(ctx context.Context, d *section.Document, base *rating.Resu
 	for _, stage := range []struct {
 		is Stage
 		do func() error
-	}{{StageAll, r.all}, {StageBands, r.bands}, {StageLoads, r.loads}, {StageAlone, r.alone}} {
+	}{{StageAll, r.all}, {StageBands, r.bands}, {StageLoads, r.loads}, {StageCodes, r.codes}, {StageAlone, r.alone}, {StageFaults, r.faults}} {
 		if err := stage.do(); err != nil {
 			return nil, err
 		}
@@ -135,6 +143,19 @@ func (r *rater) bands() (err error) {
 
 func (r *rater) loads() (err error) {
 	r.out.Loads, err = r.s.One(r.ctx, r.out.Doc, r.out.Base, r.out.Spreads, r.o)
+	return err
+}
+
+func (r *rater) codes() error {
+	c := r.s.Codes(r.out.Doc, r.o.Dir)
+	r.out.Codes = c
+	r.out.Lowest = lowest(&r.out.Permits, c)
+	r.out.Protected = c.Protect(permitted(&r.out.Permits, c))
+	return nil
+}
+
+func (r *rater) faults() (err error) {
+	r.out.Faults, err = r.s.SoftFaults(r.ctx, r.out.Doc, r.o)
 	return err
 }
 

@@ -30,8 +30,9 @@ func New(cat *catalog.Catalog) *Study {
 
 // Options of all questions.
 type Options struct {
-	AssumeIdle bool // count unknown and unassigned currents as 0
-	Cautious   bool // see rating.Options
+	AssumeIdle bool   // count unknown and unassigned currents as 0
+	Cautious   bool   // see rating.Options
+	Dir        string // where the design's file lies, for rule files beside it; "" for none
 	// Progress is told how far a long question is, from any goroutine, one call at a time; nil if nobody cares.
 	Progress func(done, of int)
 	// Stage is given what Rate has found so far, each time a stage is done; nil if nobody cares.
