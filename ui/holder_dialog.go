@@ -41,12 +41,13 @@ func (w *Window) showInputs(title string, inputs func(*Desk) []*input) {
 
 // inputSheet is a column of fields, kept while their inputs stay.
 type inputSheet struct {
-	desk   *Desk
-	inputs func(*Desk) []*input
-	known  map[string]*field
-	column *fyne.Container
-	scroll *container.Scroll
-	help   *prose // what the entry with the focus takes
+	desk    *Desk
+	inputs  func(*Desk) []*input
+	known   map[string]*field
+	column  *fyne.Container
+	scroll  *container.Scroll
+	help    *prose // what the entry with the focus takes
+	focused *field // nil: none
 }
 
 // helpLines keeps room for what an entry takes, so that nothing moves when it is said.
@@ -79,13 +80,22 @@ func (s *inputSheet) follow() {
 	s.relay()
 }
 
-func (s *inputSheet) relay() { s.column.Refresh() }
+// relay lays the fields out and keeps the one with the focus in sight, with what it says.
+func (s *inputSheet) relay() {
+	s.column.Refresh()
+	s.scroll.Refresh()
+	if s.focused != nil {
+		reveal(s.scroll, s.focused, s.scroll.Size().Height)
+	}
+}
 
-// about says what an entry takes, and brings it into sight for the keyboard.
+// about says what an entry takes, and brings it into sight for the keyboard; "" says that it has lost the focus.
 func (s *inputSheet) about(f *field, text string) {
 	s.help.say(run{text: text, tone: quiet})
+	s.focused = nil
 	if text != "" {
-		reveal(s.scroll, f, s.scroll.Size().Height)
+		s.focused = f
+		s.relay()
 	}
 }
 

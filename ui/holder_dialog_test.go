@@ -3,6 +3,8 @@ package ui
 import (
 	"testing"
 
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/container"
 	"fyne.io/fyne/v2/test"
 
 	"packrise/solver/section"
@@ -54,4 +56,37 @@ func TestHolderDialogEdits(t *testing.T) {
 		t.Errorf("%+v", s)
 	}
 	l.solved(t, w.desk)
+}
+
+// TestDialogKeepsTheEntryInSight: in a small window the entry with the focus, and what it says, can be seen, and it tells what it takes.
+func TestDialogKeepsTheEntryInSight(t *testing.T) {
+	w, _ := testWindow(t, inWireway(), fyne.NewSize(1024, 640))
+	w.showHolder()
+	objects := test.LaidOutObjects(w.win.Canvas().Overlays().Top())
+	var scroll *container.Scroll
+	var entries []*fieldEntry
+	for _, o := range objects {
+		switch o := o.(type) {
+		case *container.Scroll:
+			if _, ok := o.Content.(*fyne.Container); ok {
+				scroll = o
+			}
+		case *fieldEntry:
+			entries = append(entries, o)
+		}
+	}
+	if scroll == nil || len(entries) < 12 {
+		t.Fatalf("%d entries", len(entries))
+	}
+	driver := fyne.CurrentApp().Driver()
+	for _, e := range entries {
+		w.win.Canvas().Focus(e)
+		e.SetText("nonsense that nothing takes")
+		e.OnSubmitted(e.Text)
+		top := driver.AbsolutePositionForObject(e).Y
+		from := driver.AbsolutePositionForObject(scroll).Y
+		if low := top + e.Size().Height; top < from || low > from+scroll.Size().Height {
+			t.Errorf("%s lies from %g to %g, in sight is %g to %g", e.in.key, top, low, from, from+scroll.Size().Height)
+		}
+	}
 }
