@@ -157,7 +157,7 @@ var promises = regexp.MustCompile(`(?i)\bsafe\b|\bsafely\b|complian|\bcomply|\bT
 // TestNothingIsPromised: no sentence says safe or compliant, none has a hole, and all of a run's sentences end as sentences do.
 func TestNothingIsPromised(t *testing.T) {
 	seen := map[string]bool{}
-	for seed := range uint64(100) {
+	for seed := range seeds() {
 		r := randomRun(t, seed, seed)
 		all, _ := Shipped().Apply(r, Shipped().IDs())
 		var texts []string
@@ -188,7 +188,7 @@ func TestNothingIsPromised(t *testing.T) {
 			seen[s] = true
 		}
 	}
-	if len(seen) < 2000 {
+	if len(seen) < 400 {
 		t.Errorf("only %d sentences", len(seen))
 	}
 }

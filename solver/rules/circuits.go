@@ -54,32 +54,36 @@ func countCircuits(r Run) (Count, []string) {
 	loose := 0
 	var cables []string
 	for _, c := range r.Conductors {
-		item := Counted{ID: c.ID}
-		loads := r.circuitsAt(c)
-		switch {
-		case c.Role == Earth:
-			item.Why = "earth"
-		case c.Role == Signal:
-			item.Why = "signal, which carries no current that warms"
-		case len(loads) == 0:
-			item.Counts, item.Why = true, "spare, which counts with others as a circuit"
-			if c.Cable == "" {
-				loose++
-			} else if !slices.Contains(cables, c.Cable) {
-				cables = append(cables, c.Cable)
-			}
-		case slices.ContainsFunc(loads, func(id string) bool { return on[id] }):
-			item.Counts, item.Why = true, why[loads[0]]
-		default:
-			item.Why = why[loads[0]] + ", which can't run together with others that count"
-		}
+		item, spare := r.inCircuit(c, on, why)
 		out.Items = append(out.Items, item)
+		switch {
+		case spare && c.Cable == "":
+			loose++
+		case spare && !slices.Contains(cables, c.Cable):
+			cables = append(cables, c.Cable)
+		}
 	}
 	spare := (loose+2)/3 + r.spareCables(cables)
 	out.N += spare
 	out.Total += spare
 	out.Text = numbered(out.N, "circuit")
 	return out, tangled
+}
+
+// inCircuit tells whether a conductor counts, given what runs and the reasons of the loads; spare is one that forms a circuit with others.
+func (r Run) inCircuit(c Conductor, on map[string]bool, why map[string]string) (item Counted, spare bool) {
+	loads := r.circuitsAt(c)
+	switch {
+	case c.Role == Earth:
+		return Counted{c.ID, false, "earth"}, false
+	case c.Role == Signal:
+		return Counted{c.ID, false, "signal, which carries no current that warms"}, false
+	case len(loads) == 0:
+		return Counted{c.ID, true, "spare, which counts with others as a circuit"}, true
+	case slices.ContainsFunc(loads, func(id string) bool { return on[id] }):
+		return Counted{c.ID, true, why[loads[0]]}, false
+	}
+	return Counted{c.ID, false, why[loads[0]] + ", which can't run together with others that count"}, false
 }
 
 // circuitsAt are the loads of a conductor; a spare has none, whatever it stands in.

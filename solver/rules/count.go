@@ -108,7 +108,7 @@ func (u rule) verdict(r Run, c Conductor) verdict {
 		return u.neutral(r, c)
 	case c.Role == Spare:
 		return verdict{true, nil, "spare, which counts as if it were loaded"}
-	case c.Load == "":
+	case !r.knows(c.Load):
 		return verdict{true, nil, "in no load, which counts as a spare"}
 	case c.Role == Control:
 		return verdict{true, []string{c.Load}, "control wire of " + c.Load}
@@ -171,6 +171,11 @@ func (r Run) loadsOfNeutral(c Conductor) (out []Load) {
 		}
 	}
 	return out
+}
+
+func (r Run) knows(load string) bool {
+	_, ok := r.load(load)
+	return ok
 }
 
 func (r Run) load(id string) (Load, bool) {

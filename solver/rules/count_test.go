@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math"
 	"math/rand/v2"
+	"os"
 	"reflect"
 	"testing"
 )
@@ -60,7 +61,7 @@ func TestReasons(t *testing.T) {
 	add("d", "fan", Line)
 	add("e", "", Earth)
 	add("f", "fan", Spare)
-	add("g", "", Line)
+	add("g", "gone", Line)
 	add("h", "", Signal)
 	add("i", "fan", Control)
 	add("j", "", Neutral)
@@ -153,10 +154,21 @@ func randomRun(t testing.TB, seed, currents uint64) Run {
 	return r
 }
 
+// seeds is how many random runs are drawn: few for the race detector, many with PACKRISE_SOAK=1.
+func seeds() uint64 {
+	switch {
+	case testing.Short():
+		return 20
+	case os.Getenv("PACKRISE_SOAK") == "1":
+		return 5000
+	}
+	return 150
+}
+
 // TestCountsReadNoCurrent: with any other currents and devices, counts, factors and permitted currents stay as they are, by every rule set.
 func TestCountsReadNoCurrent(t *testing.T) {
 	rated := 0
-	for seed := range uint64(300) {
+	for seed := range seeds() {
 		a, _ := Shipped().Apply(randomRun(t, seed, 1), Shipped().IDs())
 		b, _ := Shipped().Apply(randomRun(t, seed, 2+seed), Shipped().IDs())
 		for i := range a {
@@ -173,7 +185,7 @@ func TestCountsReadNoCurrent(t *testing.T) {
 			}
 		}
 	}
-	if rated < 1000 {
+	if rated < 10*int(seeds()) {
 		t.Errorf("only %d conductors were rated", rated)
 	}
 }
@@ -181,7 +193,7 @@ func TestCountsReadNoCurrent(t *testing.T) {
 // TestOutcomesHoldTogether: every conductor has a current or a reason, every count its items, every step its arithmetic and its clause; more conductors never
 // raise a current, but where idle ones lower the share in use (annex B, the harness).
 func TestOutcomesHoldTogether(t *testing.T) {
-	for seed := range uint64(300) {
+	for seed := range seeds() {
 		r := randomRun(t, seed, seed)
 		all, _ := Shipped().Apply(r, Shipped().IDs())
 		more := r

@@ -55,7 +55,6 @@ const (
 	StepAmbient  = "ambient"  // factor for the ambient temperature
 	StepCount    = "count"    // factor for conductors, circuits or cores together
 	StepAltitude = "altitude" // factor for thin air
-	StepLimit    = "limit"    // a limit that the current may not pass, for example the table's own
 	StepVariant  = "variant"  // the formula of an informative variant
 )
 
