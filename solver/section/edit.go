@@ -120,15 +120,15 @@ func SetLimit(d *Document, id string, limitC Opt[float64]) *Document {
 }
 
 // Duplicate adds an unplaced copy of a part of the top level and returns its id. What the copy's conductors carry is in loads of
-// their own.
+// their own; the reason of its limit goes along.
 func Duplicate(d *Document, id string) (out *Document, copyID string) {
 	p := Find(d, id)
 	if p == nil || strings.Contains(id, "/") {
 		return d, ""
 	}
 	c := *p
-	c.ID, c.At = FreshID(d, strings.TrimRight(id, "0123456789")), Opt[Point]{}
-	out = Add(d, c)
+	c.ID, c.At, c.Pinned = FreshID(d, strings.TrimRight(id, "0123456789")), Opt[Point]{}, false
+	out = SetReason(Add(d, c), ReasonLimit+c.ID, d.Reason(ReasonLimit+id))
 	for _, l := range d.Loads {
 		var own []string
 		for _, name := range l.Conductors {

@@ -101,6 +101,9 @@ func TestDuplicateKeepsWhatIsSaid(t *testing.T) {
 	if got := said(c); id != "M2" || !strings.Contains(got, "neutral N not motor-2,load-M2") || !strings.Contains(got, "load-M2=M2") || !strings.Contains(got, "day motor-1:12 motor-2 load-M2") {
 		t.Errorf("%s: %s", id, got)
 	}
+	if c, id := Duplicate(d, "L1"); c.LimitReason(id) != "data sheet 7" || Find(c, id).Pinned || Find(c, id).LimitC != Some(105.0) {
+		t.Errorf("%s: %+v %q", id, Find(c, id), c.LimitReason(id))
+	}
 	if l := LoadNamed(c, "load-M2"); l.Protection.RatingA != 16 || l.Terminals.RatedA != Some(57.0) {
 		t.Errorf("%+v", l)
 	}
