@@ -156,6 +156,11 @@ var promises = regexp.MustCompile(`(?i)\bsafe\b|\bsafely\b|complian|\bcomply|\bT
 
 // TestNothingIsPromised: no sentence says safe or compliant, none has a hole, and all of a run's sentences end as sentences do.
 func TestNothingIsPromised(t *testing.T) {
+	for _, s := range []string{"This is safe.", "The run is compliant.", "a margin of %!f(int=3)", "limit NaN A"} {
+		if !promises.MatchString(s) {
+			t.Errorf("%q is let through", s)
+		}
+	}
 	seen := map[string]bool{}
 	for seed := range seeds() {
 		r := randomRun(t, seed, seed)

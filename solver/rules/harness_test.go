@@ -112,6 +112,12 @@ func TestAltitudeAndBundleSteps(t *testing.T) {
 			t.Errorf("%d wires, %g loaded: %g %q, want %g", c.n, c.loaded, f, why, c.want)
 		}
 	}
+	// all loaded: 3, 7, 12 and 19 wires 0.725, 0.54, 0.43, 0.34 (bundle curves of MIL-W-5088L, read to ±0.01)
+	for n, want := range map[int]float64{3: 0.725, 7: 0.54, 12: 0.43, 19: 0.34} {
+		if f, _, _ := h.bundle.pick(n, 1); math.Abs(f-want) > 0.01 {
+			t.Errorf("%d wires, all loaded: %g, want %g", n, f, want)
+		}
+	}
 	if _, _, why := h.bundle.pick(25, 0.3); why == "" {
 		t.Error("25 wires at 30 % have a factor, and none is held")
 	}

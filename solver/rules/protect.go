@@ -230,7 +230,7 @@ func (p *protecting) devicePermitted(by, id string, a float64, whose string) {
 		last.Text += " The short-circuit device of a motor may be larger (NEC 430.52); its overload relay then protects the wire."
 	case next > 0 && l.Device.RatingA <= next && l.Device.RatingA <= nextSizeUpToA:
 		last.NextSizeUp = true
-		last.Text += " It is the next standard rating above it, which the code lets stand up to 800 A where the circuit does not feed several receptacles (NEC 240.4(B), 240.6(A), from memory)."
+		last.Text += " It is the next standard rating above what is permitted, which the code lets stand up to 800 A unless the circuit feeds several receptacles (NEC 240.4(B), 240.6(A), from memory)."
 	}
 }
 

@@ -201,6 +201,8 @@ func TestIECFigures(t *testing.T) {
 		{"ten take the row of 12, 21 × 0.45", build(10, "2.5 mm2", ThreePhase, trunking, 30, ""), "iec-52", 21 * 0.45},
 		{"at 33 °C the row of 35 °C", build(1, "2.5 mm2", ThreePhase, trunking, 33, ""), "iec-52", 21 * 0.94},
 		{"three-core cable in free air, E: 2.5 mm² 25 A", build(1, "2.5 mm2", ThreePhase, Holder{Kind: Jacket}, 30, ""), "iec-52", 25},
+		{"6 mm² 43 A", build(1, "6 mm2", ThreePhase, Holder{Kind: Jacket}, 30, ""), "iec-52", 43},
+		{"25 mm² 101 A", build(1, "25 mm2", ThreePhase, Holder{Kind: Jacket}, 30, ""), "iec-52", 101},
 		{"16 mm² 80 A", build(1, "16 mm2", ThreePhase, Holder{Kind: Single}, 30, "C1"), "iec-52", 80},
 		{"spaced singles, G vertical 25 mm² 130 A", build(1, "25 mm2", ThreePhase, Holder{Kind: Apart}, 30, ""), "iec-52", 130},
 		{"trefoil, F 25 mm² 110 A", build(1, "25 mm2", ThreePhase, Holder{Kind: OpenBundle}, 30, ""), "iec-52", 110},
