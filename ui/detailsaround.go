@@ -18,7 +18,7 @@ func (t *telling) around(in []*input) {
 		}
 	}
 	if h.TouchLimitC.OK {
-		t.add(say("Its outside may have "), word(inputNamed(in, "touch")), say(" to be touched."))
+		t.add(say("Its outside may reach "), word(inputNamed(in, "touch")), say(" where people can touch it."))
 	}
 }
 

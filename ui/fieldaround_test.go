@@ -131,7 +131,7 @@ func TestClearanceAndTouchLimit(t *testing.T) {
 		t.Errorf("no limit outside: %+v", r.Readings())
 	}
 	told := toldOf(k)
-	for _, want := range []string{"stand 0.3 mm apart on average", "Its outside may have 60 °C to be touched."} {
+	for _, want := range []string{"stand 0.3 mm apart on average", "Its outside may reach 60 °C where people can touch it."} {
 		if !strings.Contains(told, want) {
 			t.Errorf("the details don't say %q:\n%s", want, told)
 		}
