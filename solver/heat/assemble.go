@@ -39,8 +39,11 @@ func (g *region) assemble(cut float64, threads int, stop func() bool) bool {
 	}
 	g.sys = harmonic.NewSystem(discs, g.circle, g.weights(), cut)
 	g.setSigns()
-	if g.border != nil && !g.border.write(g, stop) {
-		return false
+	if g.border != nil {
+		g.border.hand().threads = threads
+		if !g.border.write(g, stop) {
+			return false
+		}
 	}
 	return g.sys.Build(threads, stop)
 }

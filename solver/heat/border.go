@@ -51,6 +51,8 @@ type exchange struct {
 	b     [][]complex128
 	y     []float64
 	with  responder
+
+	threads int // for discretising the border
 }
 
 // responder is a discretised border.

@@ -84,7 +84,7 @@ func (g *region) mirror(i int) outline.Mirror {
 
 // shape is the hull round the pieces.
 func (h *hullWall) shape() outline.Hull {
-	s := outline.Hull{MediumK: h.k, Rest: h.rest}
+	s := outline.Hull{MediumK: h.k, Rest: h.rest, Workers: h.threads}
 	for _, a := range h.arcs {
 		s.Arcs = append(s.Arcs, outline.Arc{Disc: a.Disc, From: a.From, To: a.To, Bare: h.out, String: h.out})
 	}

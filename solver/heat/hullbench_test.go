@@ -79,6 +79,34 @@ func BenchmarkHullDrag(b *testing.B) {
 	}
 }
 
+// BenchmarkHullRadiatesDrag moves a part of the outside of a bundle whose surfaces radiate, in a draft: most frames are frozen.
+func BenchmarkHullRadiatesDrag(b *testing.B) {
+	for _, n := range []int{37, 200} {
+		p := lit(laidUp(n))
+		top := 0
+		for i := range p.Parts {
+			p.Parts[i].X *= 1.1
+			p.Parts[i].Y *= 1.1
+			if p.Parts[i].Y > p.Parts[top].Y {
+				top = i
+			}
+		}
+		b.Run(fmt.Sprint(n), func(b *testing.B) {
+			m := heat.New(p, one(heat.Draft))
+			m.Solve(context.Background(), nil)
+			b.ReportAllocs()
+			frozen, k := 0, 0
+			for ; b.Loop(); k++ {
+				m.Move(top, p.Parts[top].X, p.Parts[top].Y+float64(min(k%40, 40-k%40))*0.05*mm)
+				if m.Solve(context.Background(), nil).Frozen {
+					frozen++
+				}
+			}
+			b.ReportMetric(float64(frozen)/float64(k), "frozen/op")
+		})
+	}
+}
+
 // BenchmarkHullField samples a picture of 512 × 512.
 func BenchmarkHullField(b *testing.B) {
 	p := laidUp(37)

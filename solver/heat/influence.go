@@ -49,6 +49,9 @@ func (m *Model) coefficientsBorder(ctx context.Context) ([][]float64, bool) {
 		k[i] = make([]float64, n)
 	}
 	for i := range k {
+		if ctx.Err() != nil {
+			return nil, false
+		}
 		a := &all[i]
 		for j := range i + 1 {
 			b := &all[j]
@@ -56,7 +59,7 @@ func (m *Model) coefficientsBorder(ctx context.Context) ([][]float64, bool) {
 			k[i][j], k[j][i] = v, v
 		}
 	}
-	return k, ctx.Err() == nil
+	return k, true
 }
 
 // Influence returns K[i][j] in K per W/m: the rise of part i's Core temperature for 1 W/m made in part j; rows and columns of parts that

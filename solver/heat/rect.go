@@ -94,9 +94,15 @@ func (r *rectWall) order(g *region, c *piece, f float64, m int) int {
 }
 
 // write discretises the wall for the region's pieces.
-func (r *rectWall) write(g *region, _ func() bool) bool {
+func (r *rectWall) write(g *region, stop func() bool) bool {
 	r.collect(g)
-	r.sys = outline.New(r.rect, r.discs, r.fineness)
+	rect := r.rect
+	rect.Workers, rect.Stop = r.threads, stop
+	sys := outline.New(rect, r.discs, r.fineness)
+	if sys == nil {
+		return false
+	}
+	r.sys = sys
 	r.begin(r.sys)
 	return true
 }

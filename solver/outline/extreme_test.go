@@ -21,15 +21,15 @@ func TestExtremes(t *testing.T) {
 		rods   []rod
 		within float64 // K, fineness 1 against 2
 	}{
-		{"one thin wire on the floor of a large box", Rect{0.3, 0.2, 0.026, []Layer{{0.2, 0.002}}, four}, []rod{plastic(0.1+0.00025i, 0.00025, 0.5, 16)}, 0.01},
-		{"thin beside thick", Rect{0.06, 0.06, 0.026, []Layer{{50, 0.0015}}, four}, []rod{plastic(0.025+0.025i, 0.025, 20, 32), plastic(0.0505+0.0005i, 0.0005, 0.5, 16)}, 0.02},
-		{"filling a slot", Rect{0.1, 0.01, 0.026, []Layer{{0.2, 0.002}}, four}, []rod{plastic(0.05+0.005i, 0.005, 3, 24)}, 0.01},
-		{"long and flat", Rect{0.5, 0.01, 0.3, nil, four}, []rod{plastic(0.1+0.004i, 0.003, 3, 8)}, 0.01},
-		{"walls of a hand's width", Rect{0.02, 0.02, 0.3, []Layer{{0.04, 0.1}}, four}, []rod{plastic(0.01+0.01i, 0.003, 1, 6)}, 0.05},
-		{"five layers", Rect{0.04, 0.02, 0.026, []Layer{{0.2, 0.0005}, {50, 0.001}, {110, 0.00002}, {0.2, 0.0001}, {0.04, 0.01}}, four}, []rod{plastic(0.01+0.003i, 0.003, 2, 24)}, 0.05},
-		{"a medium better than the wall", Rect{0.04, 0.02, 5, []Layer{{0.2, 0.002}}, four}, []rod{plastic(0.01+0.006i, 0.003, 2, 12)}, 0.01},
-		{"one side cools", Rect{0.04, 0.02, 0.3, []Layer{{0.2, 0.002}}, [4]Side{insulated, insulated, film(9, 20), insulated}}, []rod{plastic(0.01+0.006i, 0.003, 2, 12)}, 0.05},
-		{"neighbours held apart", Rect{0.04, 0.02, 0.3, nil, [4]Side{held(20), held(60), open, open}}, []rod{plastic(0.01+0.006i, 0.003, 2, 12)}, 0.02},
+		{"one thin wire on the floor of a large box", Rect{W: 0.3, H: 0.2, MediumK: 0.026, Layers: []Layer{{0.2, 0.002}}, Sides: four}, []rod{plastic(0.1+0.00025i, 0.00025, 0.5, 16)}, 0.01},
+		{"thin beside thick", Rect{W: 0.06, H: 0.06, MediumK: 0.026, Layers: []Layer{{50, 0.0015}}, Sides: four}, []rod{plastic(0.025+0.025i, 0.025, 20, 32), plastic(0.0505+0.0005i, 0.0005, 0.5, 16)}, 0.02},
+		{"filling a slot", Rect{W: 0.1, H: 0.01, MediumK: 0.026, Layers: []Layer{{0.2, 0.002}}, Sides: four}, []rod{plastic(0.05+0.005i, 0.005, 3, 24)}, 0.01},
+		{"long and flat", Rect{W: 0.5, H: 0.01, MediumK: 0.3, Layers: nil, Sides: four}, []rod{plastic(0.1+0.004i, 0.003, 3, 8)}, 0.01},
+		{"walls of a hand's width", Rect{W: 0.02, H: 0.02, MediumK: 0.3, Layers: []Layer{{0.04, 0.1}}, Sides: four}, []rod{plastic(0.01+0.01i, 0.003, 1, 6)}, 0.05},
+		{"five layers", Rect{W: 0.04, H: 0.02, MediumK: 0.026, Layers: []Layer{{0.2, 0.0005}, {50, 0.001}, {110, 0.00002}, {0.2, 0.0001}, {0.04, 0.01}}, Sides: four}, []rod{plastic(0.01+0.003i, 0.003, 2, 24)}, 0.05},
+		{"a medium better than the wall", Rect{W: 0.04, H: 0.02, MediumK: 5, Layers: []Layer{{0.2, 0.002}}, Sides: four}, []rod{plastic(0.01+0.006i, 0.003, 2, 12)}, 0.01},
+		{"one side cools", Rect{W: 0.04, H: 0.02, MediumK: 0.3, Layers: []Layer{{0.2, 0.002}}, Sides: [4]Side{insulated, insulated, film(9, 20), insulated}}, []rod{plastic(0.01+0.006i, 0.003, 2, 12)}, 0.05},
+		{"neighbours held apart", Rect{W: 0.04, H: 0.02, MediumK: 0.3, Layers: nil, Sides: [4]Side{held(20), held(60), open, open}}, []rod{plastic(0.01+0.006i, 0.003, 2, 12)}, 0.02},
 	} {
 		t.Run(c.name, func(t *testing.T) {
 			a, b := solveWhole(c.r, c.rods, 1, true), solveWhole(c.r, c.rods, 2, true)

@@ -12,6 +12,7 @@ type Hull struct {
 	MediumK float64 // of what fills the pockets
 	Arcs    []Arc   // counterclockwise
 	Rest    Rest    // of all of them, in place of their own outsides
+	Workers int     // goroutines at most, 0 for as many as there are processors
 	// Stop, if any, is asked between pieces of work; when it says so NewHull and Renew return nil.
 	Stop func() bool
 }

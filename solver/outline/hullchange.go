@@ -29,7 +29,7 @@ func (s *HullSystem) Outsides(arcs []Arc, rest Outside) *HullSystem {
 		}
 	}
 	t.discs = slices.Clone(s.discs)
-	each(len(t.discs), func(i int) {
+	eachOf(len(t.discs), t.hull.Workers, func(i int) {
 		d := &t.discs[i]
 		size := make([]int, len(d.send))
 		for c := range size {

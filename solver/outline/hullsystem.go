@@ -15,7 +15,8 @@ type HullSystem struct {
 	grading hullGrading
 	pieces  []piece
 	panels  []bow
-	n       int // densities; the unknown n is T_c
+	most    float64 // W/m²K, the film of what is held; the same in all that take anything over
+	n       int     // densities; the unknown n is T_c
 	discs   []hullDisc
 	direct  means // of the densities themselves
 	means         // with what parts send straight back
@@ -45,6 +46,9 @@ func newHull(h Hull, discs []Disc, mirrors []Mirror, fineness float64, old *Hull
 	h.Arcs = append([]Arc(nil), h.Arcs...)
 	s := &HullSystem{hull: h, grading: newHullGrading(append([]Disc(nil), discs...), fineness), pieces: h.pieces(discs)}
 	s.panels, s.n = s.grading.panels(s.pieces, old)
+	if s.most = old.most; s.most == 0 || old.hull.MediumK != h.MediumK {
+		s.most = 1e8 * h.MediumK / s.size()
+	}
 	s.discs = make([]hullDisc, len(discs))
 	for i := range discs {
 		s.discs[i] = hullDisc{Disc: discs[i], mirror: mirrors[i]}
@@ -71,7 +75,7 @@ func (s *HullSystem) eachPiece(n int, f func(i int)) bool {
 	if stop == nil {
 		stop = func() bool { return false }
 	}
-	each(n, func(i int) {
+	eachOf(n, s.hull.Workers, func(i int) {
 		if !stop() {
 			f(i)
 		}
@@ -85,8 +89,8 @@ func (s *HullSystem) Len() int { return s.n + 1 }
 // film returns 2h/k of a piece; what is held has a film through which nothing can be measured.
 func (s *HullSystem) film(p *piece) float64 {
 	h := p.out.Film
-	if most := 1e8 * s.hull.MediumK / s.size(); h > most {
-		h = most
+	if h > s.most {
+		h = s.most
 	}
 	return 2 * h / s.hull.MediumK
 }

@@ -56,7 +56,7 @@ func (s *System) Patches(longest func(z complex128) float64) *Patches {
 	p.join()
 	p.measure()
 	p.feel = make([][]touch, len(s.discs))
-	each(len(s.discs), p.Follow)
+	eachOf(len(s.discs), s.rect.Workers, p.Follow)
 	return p
 }
 
@@ -89,7 +89,7 @@ func (p *Patches) measure() {
 			owner = append(owner, k)
 		}
 	}
-	each(len(s.panels), func(j int) {
+	eachOf(len(s.panels), s.rect.Workers, func(j int) {
 		var b block
 		from := &s.panels[j]
 		c := 0

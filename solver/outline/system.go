@@ -37,13 +37,23 @@ func New(r Rect, discs []Disc, fineness float64) *System {
 	var ends int
 	s.panels, s.n, ends = s.grading.panels(s.edges, discs)
 	s.rows = s.rect.rows(s.edges)
-	s.factorise(ends)
+	stop := r.Stop
+	if s.rect.Stop = nil; stop == nil {
+		stop = func() bool { return false }
+	}
+	if !s.factorise(ends, stop) {
+		return nil
+	}
 	s.outer = s.newOuter()
 	s.discs = make([]disc, len(discs))
-	each(len(discs), func(i int) {
-		s.discs[i].Disc = discs[i]
-		s.link(&s.discs[i])
+	eachOf(len(discs), r.Workers, func(i int) {
+		if s.discs[i].Disc = discs[i]; !stop() {
+			s.link(&s.discs[i])
+		}
 	})
+	if stop() {
+		return nil
+	}
 	return s
 }
 
@@ -51,8 +61,19 @@ func New(r Rect, discs []Disc, fineness float64) *System {
 func (s *System) Len() int { return s.n + 1 }
 
 // each calls f for 0 … n−1 on all processors.
-func each(n int, f func(i int)) {
-	workers := min(runtime.GOMAXPROCS(0), n)
+func each(n int, f func(i int)) { eachOf(n, 0, f) }
+
+// eachOf is each on so many goroutines at most, 0 for all processors.
+func eachOf(n, workers int, f func(i int)) {
+	if workers < 1 {
+		workers = runtime.GOMAXPROCS(0)
+	}
+	if workers = min(workers, n); workers == 1 {
+		for i := range n {
+			f(i)
+		}
+		return
+	}
 	var wg sync.WaitGroup
 	for w := range workers {
 		wg.Go(func() {
@@ -64,12 +85,15 @@ func each(n int, f func(i int)) {
 	wg.Wait()
 }
 
-// factorise writes the wall's own equations and takes them apart.
-func (s *System) factorise(ends int) {
+// factorise writes the wall's own equations and takes them apart; false if stop asked for an end.
+func (s *System) factorise(ends int, stop func() bool) bool {
 	n := s.n + 1
 	s.lu = blas64.General{Rows: n, Cols: n, Stride: n, Data: make([]float64, n*n)}
 	s.temps = make([]float64, ends*s.n)
-	each(len(s.panels), func(i int) {
+	eachOf(len(s.panels), s.rect.Workers, func(i int) {
+		if stop() {
+			return
+		}
 		var b block
 		to := &s.panels[i]
 		for j := range s.panels {
@@ -85,10 +109,14 @@ func (s *System) factorise(ends int) {
 	for i := range s.panels { // no net source
 		s.lu.Data[s.n*n+s.panels[i].dof] = 2 * s.panels[i].half
 	}
+	if stop() {
+		return false
+	}
 	s.pivots = make([]int, n)
 	if ok := lapack64.Getrf(s.lu, s.pivots); !ok || s.rect.sealed() {
 		s.lu.Data[n*n-1] = math.NaN()
 	}
+	return !stop()
 }
 
 // solve overwrites the right-hand side y with the unknowns, row by row: twice as quick as the library's.

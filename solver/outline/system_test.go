@@ -300,3 +300,24 @@ func TestNoAllocation(t *testing.T) {
 		t.Errorf("%g allocations", n)
 	}
 }
+
+// New stops when it is asked to, and one worker builds what many do.
+func TestNewStops(t *testing.T) {
+	r := patchRect([]Layer{{K: 0.2, Thickness: 2e-3}})
+	discs := []Disc{{C: complex(0.02, 0.01), A: 0.005, M: 8}}
+	src := Sources{Q: []float64{3}, D: [][]complex128{{0.2}}}
+	want := New(r, discs, 1).Respond(src, true)
+	r.Workers = 1
+	for i, v := range New(r, discs, 1).Respond(src, true) {
+		if v != want[i] {
+			t.Fatalf("unknown %d is %g with one worker, %g with many", i, v, want[i])
+		}
+	}
+	for asked := range 5 {
+		n := 0
+		r.Stop = func() bool { n++; return n > asked }
+		if New(r, discs, 1) != nil {
+			t.Errorf("went on after %d questions", asked)
+		}
+	}
+}

@@ -37,6 +37,9 @@ type Rect struct {
 	MediumK float64
 	Layers  []Layer
 	Sides   [4]Side
+	Workers int // goroutines at most, 0 for as many as there are processors
+	// Stop, if any, is asked between pieces of work; when it says so New returns nil.
+	Stop func() bool
 }
 
 // Sources are what the parts send out: Q[j] net heat (W/m) and D[j][m-1] multipole coefficients d_m (K) of disc j, in the convention T = −Σ q/(2πk) ln|z−c| + Re Σ d_m
