@@ -176,18 +176,20 @@ func (r *resolver) usualLimit(p *item) (out limit) {
 	return out
 }
 
-// coldLimits warns of limits that the ambient alone passes.
+// coldLimits warns of limits that the ambient alone passes, those of one kind together.
 func (r *resolver) coldLimits() {
 	ambient := r.scene.doc.Surroundings.AmbientC
+	cold := map[limit]*section.Problem{}
+	var order []limit
 	below := func(id, key string, l limit) {
-		if !l.c.OK || !ambient.OK || l.c.V >= ambient.V {
-			return
+		switch {
+		case !l.c.OK || !ambient.OK || l.c.V >= ambient.V:
+		case cold[l] != nil:
+			cold[l].IDs = append(cold[l].IDs, id)
+		default:
+			cold[l] = &section.Problem{Rule: RuleTooCold, IDs: []string{id}, Key: key, Do: "choose what bears the ambient, or mend one of the two"}
+			order = append(order, l)
 		}
-		r.warn(section.Problem{
-			Rule: RuleTooCold, IDs: []string{id}, Key: key,
-			What: fmt.Sprintf("the limit of %s is %s °C (%s), below the ambient of %s °C", id, digits(l.c.V, 1), l.by, digits(ambient.V, 1)),
-			Do:   "choose what bears the ambient, or mend one of the two",
-		})
 	}
 	for i := range r.scene.parts {
 		p := &r.scene.parts[i]
@@ -198,6 +200,11 @@ func (r *resolver) coldLimits() {
 	}
 	below(r.scene.holder.kind, "holder.layers", lowest(r.scene.holder.layers))
 	below(section.Outside, "holder.touch_limit_c", r.scene.touch())
+	for _, l := range order {
+		p := *cold[l]
+		p.What = fmt.Sprintf("the limit of %s is %s °C (%s), below the ambient of %s °C", list(p.IDs), digits(l.c.V, 1), l.by, digits(ambient.V, 1))
+		r.warn(p)
+	}
 }
 
 // smallDevices warns of devices that would trip on the load that they protect.
