@@ -58,6 +58,7 @@ func (e *enclosure) insideEmissivity() float64 {
 // radiationNote says how surfaces radiate to each other, and how the air between them moves.
 func (s *scene) radiationNote(a answered) string {
 	var skins []float64
+	var dull []string // ids of what would radiate more under paint
 	add := func(e float64) {
 		if e = math.Round(e*100) / 100; !slices.Contains(skins, e) {
 			skins = append(skins, e)
@@ -70,6 +71,9 @@ func (s *scene) radiationNote(a answered) string {
 		add(e.insideEmissivity())
 		for _, j := range of {
 			add(s.parts[j].skin)
+			if s.parts[j].skin < bright {
+				dull = append(dull, s.parts[j].id)
+			}
 		}
 	}
 	if !s.apart() {
@@ -83,11 +87,8 @@ func (s *scene) radiationNote(a answered) string {
 	for i := range s.parts {
 		look(s.parts[i].inside, s.children(i))
 	}
-	if len(skins) == 0 || a.heat == nil {
+	if len(skins) == 0 || a.heat == nil || !a.heat.Radiates {
 		return ""
-	}
-	if !a.heat.Radiates {
-		return LeftOut
 	}
 	slices.Sort(skins)
 	words := make([]string, len(skins))
@@ -96,7 +97,11 @@ func (s *scene) radiationNote(a answered) string {
 	}
 	note := "surfaces radiate through the gas between them, emissivity " + strings.Join(words, ", ")
 	if s.thin() {
-		note += fmt.Sprintf("; a gas that conducts less than %s W/mK is reckoned with that, contacts in a vacuum being unknown", digits(heat.ThinnestK, 4))
+		note += fmt.Sprintf("; a gas that conducts less than %s W/mK is reckoned with that, contacts in a vacuum being unknown: across 0.2 mm it carries %s times what black surfaces at 27 °C "+
+			"exchange, across 1 mm %s times", digits(heat.ThinnestK, 4), digits(carries(0.2*mm), 2), digits(carries(1*mm), 2))
+	}
+	if len(dull) > 0 {
+		note += fmt.Sprintf("; bright metal radiates little (%s): painted or taped, emissivity about 0.9, it would run cooler", list(dull))
 	}
 	if h := a.heat; h.Nusselt > 1.005 {
 		note += fmt.Sprintf("; in the free space the air carries %s times what it conducts (Raithby and Hollands 1975, ±25 %%)", digits(h.Nusselt, 2))
@@ -105,6 +110,15 @@ func (s *scene) radiationNote(a answered) string {
 		}
 	}
 	return note
+}
+
+// bright is the emissivity below which a surface is told to radiate little.
+const bright = 0.2
+
+// carries is the conductance of the thinnest gas across a gap (m) over that of black surfaces at 300 K, 4σT³.
+func carries(gap float64) float64 {
+	const sigma = 5.670374419e-8 // W/m²K⁴, CODATA 2018
+	return heat.ThinnestK / gap / (4 * sigma * 300 * 300 * 300)
 }
 
 // thin tells whether a gas conducts less than the least that is reckoned.

@@ -11,9 +11,6 @@ import (
 // Caution is the standing caution of every window, picture and report.
 const Caution = "A calculation aid. Local codes, the maker's data and licensed practice decide; where the code's value is lower, it governs. Joints, faults and damage are not covered."
 
-// LeftOut is said where surfaces face each other through a gas and nothing is reckoned between them but conduction.
-const LeftOut = "radiation and convection between the parts left out: too hot"
-
 // State words of an answer.
 const (
 	Within    = "Within"
@@ -84,11 +81,6 @@ func (r *Result) assumptions() string {
 		parts = append(parts, fmt.Sprintf("%s of unknown current left out (%s): too cool", count(n, "conductor"), list(r.Unassigned)))
 	}
 	parts = append(parts, fmt.Sprintf("Ambient %s °C, %s", digits(r.AmbientC, 1), r.surroundings))
-	for _, n := range r.Notes {
-		if strings.Contains(n, "left out: too hot") || strings.Contains(n, "at rest: too hot") {
-			parts = append(parts, n)
-		}
-	}
 	if n := r.assumedLimits(); n > 0 {
 		parts = append(parts, fmt.Sprintf("limit assumed for %s", count(n, "item")))
 	}
