@@ -152,6 +152,42 @@ func TestAddNeverPanics(t *testing.T) {
 	}
 }
 
+// FuzzAdd reads anything and, where it reads, rates by it.
+func FuzzAdd(f *testing.F) {
+	names, err := filepath.Glob(filepath.Join("..", "..", "assets", "catalog", "rules", "*.yaml"))
+	if err != nil || len(names) != len(files) {
+		f.Fatal(names, err)
+	}
+	for _, name := range append(names, filepath.Join("testdata", "ours.yaml")) {
+		text, err := os.ReadFile(name)
+		if err != nil {
+			f.Fatal(err)
+		}
+		for _, sheet := range strings.Split(string(text), "\n---\n") {
+			f.Add([]byte(strings.NewReplacer("rule: ", "rule: x-", "table: ", "table: x-").Replace(sheet)))
+		}
+	}
+	r := randomRun(f, 5, 5)
+	f.Fuzz(func(t *testing.T, text []byte) {
+		b, problems := Shipped().Add("x.yaml", text)
+		for _, p := range problems {
+			if p.Text == "" {
+				t.Errorf("a problem without words: %+v", p)
+			}
+		}
+		if len(problems) == 0 {
+			out, _ := b.Apply(r, b.IDs()[len(Shipped().IDs()):])
+			b.Terminals(r)
+			b.Protect(r, []Permitted{{"computed", map[string]float64{r.Conductors[0].ID: 1}}})
+			for _, o := range out {
+				if o.Applies == (o.Why != "") {
+					t.Errorf("%+v", o)
+				}
+			}
+		}
+	})
+}
+
 var promises = regexp.MustCompile(`(?i)\bsafe\b|\bsafely\b|complian|\bcomply|\bTODO\b|%!|NaN|Inf\b|  | ,|\(\)`)
 
 // TestNothingIsPromised: no sentence says safe or compliant, none has a hole, and all of a run's sentences end as sentences do.

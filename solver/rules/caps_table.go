@@ -23,6 +23,7 @@ type terminalsRow struct {
 func (row terminalsRow) build(r *reader, b *Book) *terminals {
 	row.Source.check(r)
 	t := &terminals{name: row.Name, columnName: row.ColumnName, memory: row.Source.FromMemory, sizes: r.sizes(row.Sizes), column: refer(r, "column", row.Column, b.currents)}
+	r.text("column", row.Column)
 	t.amperes = r.numbers("amperes", row.Amperes, len(t.sizes), 1e-3, largestA)
 	return t
 }

@@ -3,6 +3,7 @@ package rules
 import (
 	"math"
 	"slices"
+	"strings"
 )
 
 // Apply returns one outcome for each known rule set, in the order of the ids, and a problem for each unknown one.
@@ -16,6 +17,9 @@ func (b *Book) Apply(r Run, ids []string) (out []Outcome, problems []Problem) {
 	}
 	return out, problems
 }
+
+// slottedDuct starts the catalogue ids of the ducts of panels.
+const slottedDuct = "duct-"
 
 // Usual lists the rule sets to show when the design names none: American sizes by the NEC, others by IEC, flexible cables and harnesses by their own.
 func (b *Book) Usual(r Run) []string {
@@ -33,7 +37,7 @@ func (b *Book) Usual(r Run) []string {
 		return []string{"ac-43-13"}
 	case american > 0:
 		return usualAmerican(r)
-	case r.ListedPanel:
+	case r.ListedPanel || strings.HasPrefix(r.Holder.Stock, slottedDuct):
 		return []string{"iec-60204"}
 	case r.Holder.Kind == Wireway:
 		return []string{"iec-52", "uk-trunking"}

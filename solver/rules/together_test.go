@@ -132,6 +132,7 @@ func TestUsual(t *testing.T) {
 		{Run{Conductors: hot, Holder: Holder{Kind: OpenBundle}}, "ac-43-13"},
 		{Run{Conductors: metric, Holder: emt1()}, "iec-52"},
 		{Run{Conductors: metric, Holder: wireway4x4(), ListedPanel: true}, "iec-60204"},
+		{Run{Conductors: metric, Holder: conduit(t, "duct-60x80")}, "iec-60204"},
 	} {
 		got := Shipped().Usual(c.r)
 		if got[0] != c.want {
