@@ -5,20 +5,20 @@ import "math"
 // At adds nothing for the parts: it is the wall's own field in the medium, T_c included. Field is quicker for many points.
 func (s *System) At(y []float64, z complex128) float64 {
 	t := y[s.n]
-	var f potential
+	var v sight
 	for i := range s.panels {
 		p := &s.panels[i]
-		t += p.temperature(&f, y[p.dof:], z)
+		t += p.temperature(&v, y[p.dof:], z)
 	}
 	return t
 }
 
 // temperature is what the density Σ y_k P_k on p makes at z.
-func (p *panel) temperature(f *potential, y []float64, z complex128) float64 {
-	f.at(p.frame(z), p.p, false, false)
+func (p *panel) temperature(v *sight, y []float64, z complex128) float64 {
+	v.at(p.frame(z), p.p, false, false)
 	sum := p.log() * y[0]
 	for k := range p.p {
-		sum += y[k] * real(f.first[k])
+		sum += y[k] * real(v.first[k])
 	}
 	return sum * p.unit()
 }

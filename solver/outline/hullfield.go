@@ -52,79 +52,27 @@ func (s *HullSystem) High(y []float64, top int) [][]complex128 {
 	return out
 }
 
-// HullField is the hull's own field (T_c included, the parts' multipoles not) made ready for very many points, as a Field is. Safe for
-// concurrent use.
+// HullField is the hull's own field (T_c included, the parts' multipoles not) made ready for very many points. Safe for concurrent use.
 type HullField struct {
-	s    *HullSystem
-	y    []float64
-	root cell
-	rim  []halfPlane
+	s   *HullSystem
+	rim []halfPlane
+	squares
 }
 
 // Field prepares the hull's field for many points.
 func (s *HullSystem) Field(y []float64) *HullField {
-	f := &HullField{s: s, y: append([]float64(nil), y...), rim: s.rim()}
 	lo, hi := complex(math.Inf(1), math.Inf(1)), complex(math.Inf(-1), math.Inf(-1))
 	for i := range s.discs {
 		d := &s.discs[i]
 		lo = complex(math.Min(real(lo), real(d.C)-d.A), math.Min(imag(lo), imag(d.C)-d.A))
 		hi = complex(math.Max(real(hi), real(d.C)+d.A), math.Max(imag(hi), imag(d.C)+d.A))
 	}
-	f.root.mid = (lo + hi) / 2
-	f.root.half = math.Max(real(hi-lo), imag(hi-lo)) / 2
-	f.root.series[0] = complex(y[s.n], 0)
-	all := make([]int, len(s.panels))
+	all := make([]carrier, len(s.panels))
 	for i := range all {
-		all[i] = i
+		all[i] = &s.panels[i]
 	}
-	f.build(&f.root, all, depth)
-	return f
-}
-
-// build sorts the panels into those of the series and those near, and divides the cell where many are near.
-func (f *HullField) build(c *cell, panels []int, levels int) {
-	for _, i := range panels {
-		b := &f.s.panels[i]
-		if b.distance(c.mid) < separate*math.Sqrt2*c.half {
-			c.near = append(c.near, i)
-			continue
-		}
-		b.series(c, f.y[b.dof:][:b.p])
-	}
-	if len(c.near) <= few || levels == 0 {
-		return
-	}
-	c.parts = new([4]cell)
-	for i := range c.parts {
-		q := &c.parts[i]
-		q.half = c.half / 2
-		shift := complex(float64(i%2)-0.5, float64(i/2)-0.5) // in units of c.half
-		q.mid = c.mid + scale(c.half, shift)
-		if f.s.pocketless(q) {
-			continue
-		}
-		q.series = shifted(c.series, shift)
-		f.build(q, c.near, levels-1)
-	}
-}
-
-// series adds the field of a panel to that of c.
-func (b *bow) series(c *cell, y []float64) {
-	var v sight
-	c.series[0] += complex(b.temperature(&v, y, c.mid), 0)
-	g := &rules[points(b.frame(c.mid), b.p, terms)]
-	for i, t := range g.x {
-		density := 0.0
-		for k, v := range y {
-			density += v * g.p[i][k]
-		}
-		x := scale(c.half, inverse(b.at(t)-c.mid))
-		v := complex(-b.unit()*density, 0)
-		for n := 1; n < terms; n++ {
-			v *= x
-			c.series[n] += scale(reciprocal[n], v)
-		}
-	}
+	half := math.Max(real(hi-lo), imag(hi-lo)) / 2
+	return &HullField{s: s, rim: s.rim(), squares: newSquares((lo+hi)/2, half, all, y[:s.n+1], s.pocketless)}
 }
 
 // pocketless tells whether all of q lies in one part, or beyond a string.
@@ -151,31 +99,7 @@ func (f *HullField) At(z complex128) float64 {
 			return math.NaN()
 		}
 	}
-	c := &f.root
-	for c.parts != nil {
-		i := 0
-		if real(z) > real(c.mid) {
-			i++
-		}
-		if imag(z) > imag(c.mid) {
-			i += 2
-		}
-		c = &c.parts[i]
-	}
-	w := scale(1/c.half, z-c.mid)
-	sum := c.series[terms-1]
-	for n := terms - 2; n >= 0; n-- {
-		sum = sum*w + c.series[n]
-	}
-	t := real(sum)
-	if len(c.near) > 0 {
-		var v sight
-		for _, i := range c.near {
-			b := &f.s.panels[i]
-			t += b.temperature(&v, f.y[b.dof:], z)
-		}
-	}
-	return t
+	return f.value(z)
 }
 
 // halfPlane is what lies to the left of a line.
