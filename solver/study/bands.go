@@ -2,6 +2,7 @@ package study
 
 import (
 	"context"
+	"fmt"
 	"math"
 	"math/rand/v2"
 	"slices"
@@ -17,6 +18,7 @@ type Bands struct {
 	Spreads []Spread // per thing of the base result: conductors, then others
 	Effects []Effect // one at a time; largest at the governing thing first
 	At      string   // that thing, "" if nothing has a limit
+	at      int      // its index, −1
 	// Ends are inputs at whose worse end no steady temperature exists: what they do has no bound.
 	Ends []string
 }
@@ -283,10 +285,11 @@ func (b *bander) sort() {
 	if len(b.lies) > 0 {
 		b.out.Effects = append(b.out.Effects, b.lyingEffect())
 	}
+	b.out.at = -1
 	if !ok {
 		return
 	}
-	b.out.At = b.list[at].id
+	b.out.At, b.out.at = b.list[at].id, at
 	slices.SortStableFunc(b.out.Effects, func(x, y Effect) int {
 		switch a, c := x.Size(at), y.Size(at); {
 		case a > c:
@@ -301,7 +304,7 @@ func (b *bander) sort() {
 // lyingEffect is what other ways to lie do: the coolest and the hottest of those solved.
 func (b *bander) lyingEffect() Effect {
 	far := b.d.Ranges.PositionMM
-	e := Effect{Input: Input{Name: "how the parts lie", From: "each up to", To: trimmed(far.Or(usualPositionMM)) + " mm elsewhere", Stated: far.OK}}
+	e := Effect{Input: Input{Name: "how the parts lie", From: "0", To: trimmed(far.Or(usualPositionMM)) + " mm elsewhere", Stated: far.OK}}
 	e.LowK, e.HighK = make([]float64, len(b.list)), make([]float64, len(b.list))
 	for _, r := range b.lies {
 		for i, k := range b.change(r) {
@@ -309,4 +312,28 @@ func (b *bander) lyingEffect() Effect {
 		}
 	}
 	return e
+}
+
+// AtGoverning returns what an effect does to the governing thing at its two ends, K; NaN where nothing governs.
+func (b *Bands) AtGoverning(e *Effect) (low, high float64) {
+	if b.at < 0 {
+		return math.NaN(), math.NaN()
+	}
+	return e.LowK[b.at], e.HighK[b.at]
+}
+
+// Largest words the n inputs that move the governing temperature most.
+func (b *Bands) Largest(n int) (out []string) {
+	if b == nil || b.at < 0 {
+		return nil
+	}
+	for i := range b.Effects {
+		e := &b.Effects[i]
+		if i >= n || e.Size(b.at) < 0.05 {
+			break
+		}
+		low, high := b.AtGoverning(e)
+		out = append(out, fmt.Sprintf("Not known exactly: %s, %s to %s: %s at %s to %s K.", e.Name, e.From, e.To, b.At, signed(low, 1), signed(high, 1)))
+	}
+	return out
 }

@@ -2,9 +2,11 @@ package study
 
 import (
 	"context"
+	"fmt"
 	"math"
 
 	"packrise/solver/heat"
+	"packrise/solver/quantity"
 	"packrise/solver/rating"
 	"packrise/solver/rules"
 	"packrise/solver/section"
@@ -83,4 +85,20 @@ func permitted(p *Permits, c *Codes) []rules.Permitted {
 		}
 	}
 	return out
+}
+
+// Sentence says what happens then.
+func (f *SoftFault) Sentence() string {
+	how := "its conventional tripping current"
+	if !f.Stated {
+		how += " (assumed for its kind)"
+	}
+	switch {
+	case f.Runaway:
+		return fmt.Sprintf("Should %s draw %s, %s, with the rest at load: no steady temperature exists, %s would keep heating, and nothing has to trip before.", f.Load, Amps(f.A), how, f.Governs)
+	case f.Governs == "":
+		return fmt.Sprintf("Should %s draw %s, %s, with the rest at load: nothing here has a limit.", f.Load, Amps(f.A), how)
+	}
+	return fmt.Sprintf("Should %s draw %s, %s, with the rest at load: %s at %s °C, limit %s °C.", f.Load, Amps(f.A), how, f.Governs,
+		quantity.Trimmed(quantity.BesideLimit(f.TempC, f.LimitC), 1), quantity.Trimmed(f.LimitC, 1))
 }

@@ -1,0 +1,397 @@
+package main
+
+import (
+	"encoding/json"
+	"errors"
+	"fmt"
+	"math"
+	"path/filepath"
+	"strings"
+	"text/tabwriter"
+
+	"packrise/solver/heat"
+	"packrise/solver/quantity"
+	"packrise/solver/rating"
+	"packrise/solver/section"
+	"packrise/solver/study"
+)
+
+type rateCommand struct {
+	Files      []string `arg:"" name:"file" help:"Section documents (YAML)."`
+	JSON       bool     `name:"json" help:"One JSON object a line and design, full precision."`
+	AssumeIdle bool     `help:"Count conductors of unknown or unassigned current as idle (the notes say so)."`
+	Nominal    bool     `help:"Exit with 1 only where something is over its limit, not where its band reaches it."`
+}
+
+// Run rates every file in turn.
+func (c *rateCommand) Run(a *app) error {
+	for i, file := range c.Files {
+		r := a.rate(file, study.Options{AssumeIdle: c.AssumeIdle, Dir: filepath.Dir(file)}, c.Nominal)
+		if r == nil {
+			continue
+		}
+		if c.JSON {
+			line, err := json.Marshal(ratesOf(r))
+			if err != nil {
+				return fmt.Errorf("%s: %w", file, err)
+			}
+			fmt.Fprintf(a.out, "%s\n", line)
+			continue
+		}
+		if i > 0 {
+			fmt.Fprintln(a.out)
+		}
+		printRates(a, file, r)
+	}
+	return nil
+}
+
+// open reads a design; nil when it can't be read, with the reasons on stderr and the status set.
+func (a *app) open(file string) *section.Document {
+	d, problems, err := section.Open(file)
+	if err != nil {
+		fmt.Fprintf(a.err, "%s: %v\n", file, err)
+		a.worse(exitInput)
+		return nil
+	}
+	if a.refused(file, problems) {
+		return nil
+	}
+	return d
+}
+
+// failed reports why a question was not answered.
+func (a *app) failed(file string, d *section.Document, err error) {
+	var no *study.Refusal
+	if errors.As(err, &no) {
+		a.refused(file, d.Locate(no.Problems))
+		return
+	}
+	fmt.Fprintf(a.err, "%s: %v\n", file, err)
+	a.worse(exitProgram)
+}
+
+// rate answers for one file, nil when it can't.
+func (a *app) rate(file string, o study.Options, nominal bool) *study.Ratings {
+	d := a.open(file)
+	if d == nil {
+		return nil
+	}
+	r, err := study.New(a.cat).Rate(a.ctx, d, nil, o)
+	if err != nil {
+		a.failed(file, d, err)
+		return nil
+	}
+	switch {
+	case r.Base.Status == heat.StoppedEarly:
+		a.worse(exitProgram)
+	case r.State == study.Within, r.State == study.Close && nominal:
+	default:
+		a.worse(exitOver)
+	}
+	return r
+}
+
+// printRates writes ratings for people.
+func printRates(a *app, file string, r *study.Ratings) {
+	title := r.Base.Title
+	if title == "" {
+		title = file
+	}
+	answer, amperes := r.Sentence()
+	_, assumed := r.Base.Sentence()
+	fmt.Fprintf(a.out, "%s\n%s\n%s\n%s\n\n", title, answer, amperes, assumed)
+	fmt.Fprintf(a.out, "Permitted currents%s. All loads together: %s to rely on, %s nominal.\n", unprotected(r), study.Percent(r.All.Rely.Factor), study.Percent(r.All.Nominal.Factor))
+	t := tabwriter.NewWriter(a.out, 0, 0, 2, ' ', tabwriter.AlignRight)
+	fmt.Fprintln(t, "\tto rely on\tnominal\tits load alone raised\talone here\tthree here\tlowest\tbecause of\t")
+	for i, c := range r.Base.Conductors {
+		row := rowOf(r, i)
+		fmt.Fprintln(t, c.ID+"\t"+strings.Join(row[:], "\t")+"\t")
+	}
+	t.Flush()
+	printCodes(a, r)
+	for _, n := range r.Base.Notes {
+		fmt.Fprintf(a.out, "Note: %s.\n", n)
+	}
+	fmt.Fprintf(a.out, "%s\n", rating.Caution)
+}
+
+// unprotected heads currents that no known device stands behind.
+func unprotected(r *study.Ratings) string {
+	for _, p := range r.Protected {
+		if p.Unknown {
+			return " (not a device rating)"
+		}
+	}
+	return ""
+}
+
+// rowOf is one conductor's currents for people.
+func rowOf(r *study.Ratings, i int) (row [7]string) {
+	c := r.Base.Conductors[i]
+	for k := range row {
+		row[k] = "–"
+	}
+	if now := c.CurrentA.V; now > 0 {
+		row[0], row[1] = study.Amps(now*r.All.Rely.Factor), study.Amps(now*r.All.Nominal.Factor)
+		for _, l := range r.Loads {
+			if l.ID == c.Load {
+				row[2] = study.Amps(now * l.Rely.Factor)
+			}
+		}
+	}
+	if al := r.Alone[i]; al.Why == "" {
+		row[3] = study.Amps(al.One.RelyA)
+		if !math.IsNaN(al.Three.RelyA) {
+			row[4] = study.Amps(al.Three.RelyA)
+		}
+	}
+	if l := r.Lowest[i]; !math.IsNaN(l.A) {
+		row[5], row[6] = study.Amps(l.A), l.Because
+	}
+	return row
+}
+
+// printCodes writes the arithmetic of every rule set, terminals and devices.
+func printCodes(a *app, r *study.Ratings) {
+	for k := range r.Codes.Outcomes {
+		o := &r.Codes.Outcomes[k]
+		fmt.Fprintf(a.out, "\n%s (%s)", o.Title, o.Edition)
+		if !o.Applies {
+			fmt.Fprintf(a.out, ": %s\n", o.Why)
+			continue
+		}
+		fmt.Fprintln(a.out)
+		for _, n := range o.Counts {
+			fmt.Fprintf(a.out, "  %s\n", n.Text)
+		}
+		seen := map[string]bool{}
+		for _, w := range o.Conductors {
+			var steps []string
+			for _, s := range w.Steps {
+				steps = append(steps, s.Text)
+			}
+			text := strings.Join(steps, "; ")
+			if text == "" {
+				text = w.Why
+			}
+			if text != "" && !seen[text] {
+				seen[text] = true
+				fmt.Fprintf(a.out, "  %s: %s\n", w.ID, text)
+			}
+		}
+		if o.Fill != nil {
+			fmt.Fprintf(a.out, "  %s\n", o.Fill.Text)
+		}
+		for _, m := range o.Remarks {
+			fmt.Fprintf(a.out, "  %s\n", m.Text)
+		}
+	}
+	fmt.Fprintln(a.out)
+	for _, p := range r.Codes.Problems {
+		fmt.Fprintf(a.out, "%s\n", p)
+	}
+	for _, p := range r.Protected {
+		for _, c := range p.Checks {
+			fmt.Fprintf(a.out, "%s\n", c.Text)
+		}
+	}
+	for _, f := range r.Faults {
+		fmt.Fprintf(a.out, "%s\n", f.Sentence())
+	}
+	for _, e := range r.Bands.Largest(5) {
+		fmt.Fprintf(a.out, "%s\n", e)
+	}
+}
+
+// rates is the JSON of `rate`.
+type rates struct {
+	Title      string                `json:"title"`
+	State      string                `json:"state"`
+	Answer     string                `json:"answer"`
+	Amperes    string                `json:"amperes"`
+	ScaleAll   scaleJSON             `json:"scale_all"`
+	Conductors []ratedJSON           `json:"conductors"`
+	Others     []bandedJSON          `json:"others"`
+	Rules      []ruleJSON            `json:"rules"`
+	Protection []protectedJSON       `json:"protection"`
+	Faults     []faultJSON           `json:"soft_faults"`
+	Inputs     []inputJSON           `json:"inputs"`
+	Lowest     map[string]lowestJSON `json:"lowest"`
+	MarginK    float64               `json:"design_margin_k"`
+	Notes      []string              `json:"notes"`
+	Caution    string                `json:"caution"`
+}
+
+type scaleJSON struct {
+	Factor      *float64 `json:"factor"` // null: nothing reaches its limit
+	Rely        *float64 `json:"rely_factor"`
+	Governs     *string  `json:"governs"`
+	RelyGoverns *string  `json:"rely_governs"`
+	Runaway     bool     `json:"runaway"`
+}
+
+type ratedJSON struct {
+	ID        string      `json:"id"`
+	LimitC    *float64    `json:"limit_c"`
+	Permitted *float64    `json:"permitted_a"`
+	Rely      *float64    `json:"rely_a"`
+	One       *float64    `json:"one_at_a_time_a"`
+	OneRely   *float64    `json:"one_at_a_time_rely_a"`
+	Alone     *float64    `json:"alone_a"`
+	Three     *float64    `json:"three_here_a"`
+	Grouping  *float64    `json:"grouping_factor"`       // permitted_a / alone_a
+	OfThree   *float64    `json:"grouping_factor_three"` // permitted_a / three_here_a
+	BandC     *[2]float64 `json:"band_c"`
+	Governs   *string     `json:"governs"`
+}
+
+type bandedJSON struct {
+	ID    string      `json:"id"`
+	TempC *float64    `json:"temperature_c"`
+	BandC *[2]float64 `json:"band_c"`
+}
+
+type ruleJSON struct {
+	Rule        string             `json:"rule"`
+	Title       string             `json:"title"`
+	Edition     string             `json:"edition"`
+	Informative bool               `json:"informative"`
+	Applies     bool               `json:"applies"`
+	Why         string             `json:"why,omitempty"`
+	Factor      *float64           `json:"factor"`
+	Permitted   map[string]float64 `json:"permitted_a"`
+	Counts      []string           `json:"counts"`
+	Steps       []string           `json:"steps"`
+	Fill        *fillJSON          `json:"fill"`
+	Remarks     []string           `json:"remarks"`
+}
+
+type fillJSON struct {
+	Share float64 `json:"share"`
+	Limit float64 `json:"limit"`
+	Text  string  `json:"text"`
+}
+
+type protectedJSON struct {
+	Load    string   `json:"load"`
+	Unknown bool     `json:"unknown"`
+	Checks  []string `json:"checks"`
+}
+
+type faultJSON struct {
+	Load    string   `json:"load"`
+	A       float64  `json:"current_a"`
+	Governs string   `json:"governs"`
+	TempC   *float64 `json:"temperature_c"`
+	LimitC  *float64 `json:"limit_c"`
+	Runaway bool     `json:"runaway"`
+}
+
+type inputJSON struct {
+	Name   string   `json:"name"`
+	From   string   `json:"from"`
+	To     string   `json:"to"`
+	Stated bool     `json:"stated"`
+	LowK   *float64 `json:"low_k"`  // change of the governing temperature at from
+	HighK  *float64 `json:"high_k"` // and at to
+}
+
+type lowestJSON struct {
+	A       *float64 `json:"a"`
+	Because string   `json:"because"`
+}
+
+func ratesOf(r *study.Ratings) rates {
+	out := rates{
+		Title: r.Base.Title, State: r.State, MarginK: r.MarginK, Notes: append([]string{}, r.Base.Notes...), Caution: rating.Caution,
+		ScaleAll: scaleJSON{
+			number(r.All.Nominal.Factor), number(r.All.Rely.Factor), text(r.All.Nominal.Governs), text(r.All.Rely.Governs), r.All.Nominal.Runaway,
+		},
+		Conductors: []ratedJSON{}, Others: []bandedJSON{}, Rules: []ruleJSON{}, Protection: []protectedJSON{}, Faults: []faultJSON{}, Inputs: []inputJSON{},
+		Lowest: map[string]lowestJSON{},
+	}
+	out.Answer, out.Amperes = r.Sentence()
+	for i := range r.Base.Conductors {
+		out.Conductors = append(out.Conductors, ratedOf(r, i))
+		l := r.Lowest[i]
+		out.Lowest[l.ID] = lowestJSON{number(l.A), l.Because}
+	}
+	for k, o := range r.Base.Others {
+		out.Others = append(out.Others, bandedJSON{o.ID, number(o.TempC), band(r, len(r.Base.Conductors)+k)})
+	}
+	for k := range r.Codes.Outcomes {
+		out.Rules = append(out.Rules, ruleOf(r, k))
+	}
+	for _, p := range r.Protected {
+		q := protectedJSON{p.Load, p.Unknown, []string{}}
+		for _, c := range p.Checks {
+			q.Checks = append(q.Checks, c.Text)
+		}
+		out.Protection = append(out.Protection, q)
+	}
+	for _, f := range r.Faults {
+		out.Faults = append(out.Faults, faultJSON{f.Load, f.A, f.Governs, number(f.TempC), number(f.LimitC), f.Runaway})
+	}
+	if r.Bands != nil {
+		for _, e := range r.Bands.Effects {
+			low, high := r.Bands.AtGoverning(&e)
+			out.Inputs = append(out.Inputs, inputJSON{e.Name, e.From, e.To, e.Stated, number(low), number(high)})
+		}
+	}
+	return out
+}
+
+func band(r *study.Ratings, i int) *[2]float64 {
+	low, high, ok := r.Band(i)
+	if !ok || math.IsInf(high, 0) {
+		return nil
+	}
+	return &[2]float64{low, high}
+}
+
+func ratedOf(r *study.Ratings, i int) ratedJSON {
+	c := r.Base.Conductors[i]
+	out := ratedJSON{ID: c.ID, LimitC: opt(c.LimitC), BandC: band(r, i), Governs: text(r.All.Nominal.Governs)}
+	al := r.Alone[i]
+	out.Alone, out.Three = number(al.One.NominalA), number(al.Three.NominalA)
+	now := c.CurrentA.V
+	if !(now > 0) {
+		out.Governs = nil
+		return out
+	}
+	out.Permitted, out.Rely = number(now*r.All.Nominal.Factor), number(now*r.All.Rely.Factor)
+	out.Grouping, out.OfThree = number(now*r.All.Nominal.Factor/al.One.NominalA), number(now*r.All.Nominal.Factor/al.Three.NominalA)
+	for _, l := range r.Loads {
+		if l.ID == c.Load {
+			out.One, out.OneRely = number(now*l.Nominal.Factor), number(now*l.Rely.Factor)
+		}
+	}
+	return out
+}
+
+func ruleOf(r *study.Ratings, k int) ruleJSON {
+	o := &r.Codes.Outcomes[k]
+	out := ruleJSON{
+		Rule: o.Rule, Title: o.Title, Edition: o.Edition, Informative: o.Informative, Applies: o.Applies, Why: o.Why, Factor: number(o.Factor),
+		Permitted: map[string]float64{}, Counts: []string{}, Steps: []string{}, Remarks: []string{},
+	}
+	for _, n := range o.Counts {
+		out.Counts = append(out.Counts, n.Text)
+	}
+	for _, w := range o.Conductors {
+		if !math.IsNaN(w.A) {
+			out.Permitted[w.ID] = quantity.RoundDown(w.A, 6)
+		}
+		for _, s := range w.Steps {
+			out.Steps = append(out.Steps, w.ID+": "+s.Text)
+		}
+	}
+	if f := o.Fill; f != nil {
+		out.Fill = &fillJSON{f.Share, f.Limit, f.Text}
+	}
+	for _, m := range o.Remarks {
+		out.Remarks = append(out.Remarks, m.Text)
+	}
+	return out
+}
