@@ -2,6 +2,7 @@ package heat
 
 import (
 	"math"
+	"math/cmplx"
 
 	"packrise/solver/harmonic"
 	"packrise/solver/outline"
@@ -43,7 +44,12 @@ func (a *Against) cut(c *outline.Contour) {
 
 // against sums up what the sides of the outside that rest against something take up.
 func (l *plan) against(out []float64) (sum float64) {
-	if a := &l.p.Wall.Against; a.Share > 0 && a.Held {
+	a := &l.p.Wall.Against
+	switch {
+	case a.Share == 0 || !a.Held:
+	case l.p.Wall.Shape == Hull:
+		return out[1]
+	default:
 		for i, s := range l.contours[len(l.contours)-1].Sides {
 			if s.Kind == outline.Held {
 				sum += out[i]
@@ -51,6 +57,90 @@ func (l *plan) against(out []float64) (sum float64) {
 		}
 	}
 	return sum
+}
+
+// lean divides exposed faces and strings where the hull begins and ends to rest against something.
+func (l *plan) lean() {
+	a := &l.p.Wall.Against
+	if a.Share == 0 {
+		return
+	}
+	cut, in := l.hull.Rest(a.At, a.Share)
+	var blocked outline.Loop
+	var ends []complex128
+	for i := range cut {
+		if in[i] {
+			blocked = append(blocked, cut[i])
+		}
+		if in[i] != in[(i+1)%len(in)] {
+			ends = append(ends, cut[i].To)
+		}
+	}
+	near := 1e-7 * l.hull.Perimeter()
+	for i := range l.contours {
+		c := &l.contours[i]
+		if c.Sides == nil {
+			continue
+		}
+		var loop outline.Loop
+		var sides []outline.Side
+		for j := range c.Loop {
+			side := c.Sides[min(j, len(c.Sides)-1)]
+			if side.Kind == outline.Covered {
+				loop, sides = append(loop, c.Loop[j]), append(sides, side)
+				continue
+			}
+			for _, s := range divided(&c.Loop[j], ends, near) {
+				mid, to := s.At(0.5), side
+				for k := range blocked {
+					if dist(blocked[k].Nearest(mid), mid) < near {
+						to = a.side()
+					}
+				}
+				loop, sides = append(loop, s), append(sides, to)
+			}
+		}
+		if !c.String {
+			c.Loop, c.Sides = loop, sides
+			continue
+		}
+		whole := *c
+		for j := range loop { // a string is one straight line
+			piece := whole
+			piece.Loop, piece.Sides = loop[j:j+1], sides[j:j+1]
+			if j == 0 {
+				l.contours[i] = piece
+			} else {
+				l.contours = append(l.contours, piece)
+			}
+		}
+	}
+}
+
+// divided cuts a stroke at those of some points that lie on it.
+func divided(s *outline.Stroke, at []complex128, near float64) (all outline.Loop) {
+	cuts := []float64{0}
+	for _, z := range at {
+		if dist(s.Nearest(z), z) > near {
+			continue
+		}
+		u := dist(z, s.From) / s.Length()
+		if s.R > 0 {
+			u = turned(cmplx.Phase((z-s.Centre)/(s.From-s.Centre))) / s.Span()
+		}
+		if e := near / s.Length(); u > e && u < 1-e {
+			cuts = insert(cuts, u)
+		}
+	}
+	cuts = append(cuts, 1)
+	for k := 1; k < len(cuts); k++ {
+		p := outline.Stroke{From: s.At(cuts[k-1]), To: s.At(cuts[k]), Centre: s.Centre, R: s.R}
+		if k > 1 {
+			p.From = all[k-2].To
+		}
+		all = append(all, p)
+	}
+	return all
 }
 
 // facing is the round wall as parts meet it: held, where it may rest against something that is.

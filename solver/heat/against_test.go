@@ -165,3 +165,17 @@ func TestAgainstLimits(t *testing.T) {
 		}
 	}
 }
+
+// TestAgainstMixedBundle: a bundle whose hull is reckoned by contours, since not everything on it is round, agrees with the round one.
+func TestAgainstMixedBundle(t *testing.T) {
+	for _, a := range []heat.Against{{Share: 0.25, At: -math.Pi / 2}, {Share: 0.2, At: 0.7, Held: true, Temp: 45}, {Share: 0.5, At: 2.5, Held: true}} {
+		p := heat.Problem{
+			Parts: rosette(4.2e-3), MediumK: 0.027,
+			Wall: heat.Wall{Shape: heat.Hull, Taut: taut, Film: 10, Ambient: 30, Against: a},
+		}
+		c := contoured(p)
+		w := &c.Parts[2] // on the hull
+		w.Form = heat.Form{Kind: heat.Flat, W: 2 * w.Radius, H: 2 * w.Radius}
+		sameAnswer(t, solveAt(c, heat.Standard), solveAt(p, heat.Fine), 0.01)
+	}
+}

@@ -96,6 +96,7 @@ func (l *plan) drawHull() {
 	for _, s := range strings {
 		l.contours = append(l.contours, outline.Contour{Loop: outline.Loop{s}, In: l.p.MediumK, Sides: []outline.Side{open}, String: true})
 	}
+	l.lean()
 }
 
 // drawnShare is the length of the string as drawn over that round parts drawn in by the clearance: the film's area stays.

@@ -226,6 +226,7 @@ func (c *contourWall) tell(s *bound) {
 			s.sides[boxOrder[i]] = q
 		}
 	}
+	s.against = l.against(out)
 	lo, hi := sys.Bounds().Bounds()
 	s.mid, s.half = (lo+hi)/2, 0.505*math.Max(real(hi-lo), imag(hi-lo))
 	s.field = func() pointField { return sys.Field(y) }
@@ -274,7 +275,6 @@ func (m *Model) readContours(r *Result, s *state) {
 			r.Core[i] = r.Surfaces[i][0]
 		}
 	}
-	r.AgainstOut = l.against(d.out)
 }
 
 // looseContours adds to the estimates what unresolved densities do: found on random sections against the fine setting (TestShapedProperties).

@@ -44,7 +44,7 @@ func (s *Shaped) Leaves(y []float64, contour int) float64 {
 }
 
 // Faces returns the hottest temperature of each contour and, last, of the outside; the mean of the outside; and the heat through each stroke of the
-// outside (W/m, out positive), of an open bundle through all of it.
+// outside (W/m, out positive), of an open bundle through all of it but what is held, and through that.
 func (s *Shaped) Faces(y []float64, src Sources) (hottest []float64, mean float64, out []float64) {
 	hottest = make([]float64, len(s.contours)+1)
 	for i := range hottest {
@@ -52,7 +52,7 @@ func (s *Shaped) Faces(y []float64, src Sources) (hottest []float64, mean float6
 	}
 	out = make([]float64, len(s.outside().Loop))
 	if s.around.Hull != nil {
-		out = out[:1]
+		out = make([]float64, 2)
 	}
 	around := 0.0
 	at := cellsOf[modes].at
@@ -77,11 +77,13 @@ func (s *Shaped) Faces(y []float64, src Sources) (hottest []float64, mean float6
 			around += length
 			mean += length * (dot(s.outT[k*s.n:][:s.n], y) + y[s.n] - warm[k])
 			f := dot(s.eq[(b.dof+l)*s.n:][:s.n], y) + dot(cellsOf[modes].mean[l], y[b.dof:])/2 - flux[k]
+			to := b.stroke
 			if s.around.Hull != nil {
-				out[0] -= c.In * f * length
-				continue
+				if to = 0; c.side(b.stroke).Kind == Held {
+					to = 1
+				}
 			}
-			out[b.stroke] -= c.In * f * length
+			out[to] -= c.In * f * length
 		}
 	}
 	return hottest, mean / around, out
