@@ -179,7 +179,34 @@ func (u rule) remarkRoles(r Run, out *Outcome) {
 	if len(balanced) > 0 {
 		out.remark("neutral", balanced, "Where the major part of the load is nonlinear the neutral counts as well ("+u.counting.neutrals+"(3)).")
 	}
-	if free := u.counting.controlFree; free != "" && slices.ContainsFunc(r.Conductors, func(c Conductor) bool { return c.Role == Control }) {
-		out.remark("control", nil, "Control wires are taken as serving only the starting of motors ("+free+"); others count.")
+	u.remarkStarting(r, out)
+}
+
+// remarkStarting names the control wires that are taken as serving only the starting of motors, and what would become of the factor if they served longer.
+func (u rule) remarkStarting(r Run, out *Outcome) {
+	var ids []string
+	for _, c := range r.Conductors {
+		if c.Role == Control {
+			ids = append(ids, c.ID)
+		}
 	}
+	if u.counting.controlFree == "" || len(ids) == 0 || len(out.Counts) == 0 {
+		return
+	}
+	text := andList(ids) + " are taken as serving only the starting of motors and do not count (" + u.counting.controlFree + ")"
+	if len(ids) == 1 {
+		text = ids[0] + " is taken as serving only the starting of motors and does not count (" + u.counting.controlFree + ")"
+	}
+	noun := countNoun[u.counting.of]
+	if c, method, ok := u.someone(r, out.Counts[0]); ok {
+		now, why := u.factorFor(r, c, method, out.Counts[0].N, noun)
+		then, whyThen := u.factorFor(r, c, method, out.Counts[0].N+len(ids), noun)
+		switch {
+		case why == "" && whyThen == "" && then.f < now.f:
+			text += fmt.Sprintf("; serving longer they would make it %s, with %s instead of %s", numbered(out.Counts[0].N+len(ids), noun), factor(then.f), factor(now.f))
+		case why == "" && whyThen == "":
+			text += "; serving longer they would count and change no factor here"
+		}
+	}
+	out.remark("control", ids, text+".")
 }

@@ -105,6 +105,14 @@ func TestWirewayOf38(t *testing.T) {
 		near(t, id, o.of(t, id).A, want, 1e-9)
 	}
 	near(t, "fill", o.Fill.Share, 0.627/16, 0.0002)
+	if got, want := o.remarked("control"), "c1, c2 and c3 are taken as serving only the starting of motors and do not count (NEC 376.22(B)); serving longer they would count and change no factor here."; got != want {
+		t.Errorf("got %q, want %q", got, want)
+	}
+	fewer := r
+	fewer.Conductors = r.Conductors[6:] // 29 loaded, three control
+	if got, want := one(t, fewer, "nec-376-22").remarked("control"), "c1, c2 and c3 are taken as serving only the starting of motors and do not count (NEC 376.22(B)); serving longer they would make it 32 current-carrying conductors, with 0.40 instead of 1.00."; got != want {
+		t.Errorf("got %q, want %q", got, want)
+	}
 	p := Shipped().Protect(r, []Permitted{{"nec-376-22", amounts(o)}})
 	motor := p[len(p)-1]
 	c := motor.check(t, CheckMotorWire)
