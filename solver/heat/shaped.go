@@ -178,8 +178,8 @@ func (s *shaped) load(heats []float64) []float64 {
 
 // What unresolved densities do to a metal's temperature is of second order in them: found on random sections against the fine setting (TestShapedProperties).
 const (
-	looseShare  = 8.0
-	shapedFloor = 4e-5 // of the rise
+	looseShare  = 1.0
+	shapedFloor = 1e-5 // of the rise
 )
 
 // estimate fills in ErrorK and PartErrorK.

@@ -31,7 +31,8 @@ type bend struct {
 	fit             [][modes]complex128 // of f for each mode
 	dof             int
 	firstCell       int
-	known           int // dof of a bend that has not changed since the equations were last written, −1 of others
+	corner          bool // at a sharp corner
+	known           int  // dof of a bend that has not changed since the equations were last written, −1 of others
 }
 
 func newBend(s *Stroke, contour, stroke int, lo, hi float64) bend {
@@ -203,44 +204,10 @@ type curved struct {
 
 func (f *curved) at(s spot, terms int) {
 	w := s.w
-	f.legendreQ(w, scale(0.5, s.lr-s.ll), terms)
+	legendreQ(f.q[:terms+1], w, scale(0.5, s.lr-s.ll))
 	f.first[0] = (w+1)*s.lr - (w-1)*s.ll - 2
 	for k := 1; k < terms; k++ {
 		f.first[k] = scale(2/float64(2*k+1), f.q[k+1]-f.q[k-1])
-	}
-}
-
-// legendreQ is that of potential, for more terms.
-func (f *curved) legendreQ(w, q0 complex128, n int) {
-	q := &f.q
-	q[0] = q0
-	size := real(w)*real(w) + imag(w)*imag(w)
-	if size < 4 {
-		q[1] = w*q0 - 1
-		for k := 1; k < n; k++ {
-			q[k+1] = scale(up[k], w*q[k]) - scale(over[k], q[k-1])
-		}
-		return
-	}
-	extra := 7
-	switch {
-	case size > 900:
-		extra = 2
-	case size > 64:
-		extra = 3
-	case size > 16:
-		extra = 5
-	}
-	a, b := complex128(0), complex(1, 0)
-	for k := n + extra; k > 0; k-- {
-		if k <= n {
-			q[k] = b
-		}
-		a, b = b, scale(down[k], w*b)-scale(under[k], a)
-	}
-	c := q0 * inverse(b)
-	for k := 1; k <= n; k++ {
-		q[k] *= c
 	}
 }
 

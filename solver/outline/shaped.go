@@ -32,6 +32,7 @@ type Shaped struct {
 	contours []Contour
 	around   Around
 	grading  grading
+	fineness float64
 	metals   []int     // contours of metals
 	lengths  []float64 // of the contours
 	bends    []bend
@@ -59,7 +60,7 @@ func NewShaped(contours []Contour, fineness float64, stop func() bool) *Shaped {
 // NewShapedAround is NewShaped with discs among the contours, which exchange harmonics with them as with a System. What an old one, nil for none, knows
 // of contours and discs that are the same is kept.
 func NewShapedAround(contours []Contour, around Around, old *Shaped, fineness float64, stop func() bool) *Shaped {
-	s := &Shaped{contours: append([]Contour(nil), contours...), around: around, grading: grading{harmonic: perHarmonic / fineness}}
+	s := &Shaped{contours: append([]Contour(nil), contours...), around: around, fineness: fineness, grading: grading{harmonic: perHarmonic / fineness}}
 	s.around.Discs = append([]Disc(nil), around.Discs...)
 	for i := range contours {
 		c := &contours[i]

@@ -2,13 +2,14 @@ package outline
 
 import (
 	"math"
+	"slices"
 )
 
 // How contours are cut: first by their own form, then halved where the densities are not resolved.
 const (
 	maxRounds   = 7
 	maxUnknowns = 3500
-	looseness   = 2e-3 // of a bend's last modes, as a share of the heat, at fineness 1
+	looseness   = 4e-3 // of a bend's last modes, as a share of the heat, at fineness 1
 	enough      = 3    // times that is left alone, rather than begin another round
 	perHalving  = 30   // what halving a bend takes off its last modes
 )
@@ -17,16 +18,105 @@ const (
 func (s *Shaped) begin() {
 	for i := range s.contours {
 		l := s.contours[i].Loop
-		longest := l.Perimeter() / 8
+		longest, first := l.Perimeter()/8, len(s.bends)
+		lo, hi := l.Bounds()
+		corner := math.Min(real(hi-lo), imag(hi-lo)) / (inCorner * s.fineness)
 		for j := range l {
 			st := &l[j]
-			n := max(1, int(math.Ceil(st.span()/(2*maxBend)-1e-9)), int(math.Ceil(st.Length()/longest-1e-9)))
-			if st.R == 0 {
-				n = max(2, n)
+			from, to := corner, corner
+			if !l.sharp(j) || s.contours[i].String {
+				from = longest
 			}
-			for k := range n {
-				s.cut(st, i, j, float64(k)/float64(n), float64(k+1)/float64(n))
+			if !l.sharp((j+1)%len(l)) || s.contours[i].String {
+				to = longest
 			}
+			at := st.shares(longest, from, to)
+			for k := 1; k < len(at); k++ {
+				s.cut(st, i, j, at[k-1], at[k])
+			}
+			s.singular(first, from < longest, to < longest, j)
+		}
+		s.balance(first, i)
+	}
+}
+
+// sharp tells whether the loop has a corner where stroke j begins: densities are singular there.
+func (l Loop) sharp(j int) bool {
+	s, before := &l[j], &l[(j+len(l)-1)%len(l)]
+	turn := s.normal(0) * conj(before.normal(1))
+	return real(turn) < 0.98
+}
+
+// shares are where a stroke is cut at first: into pieces no longer than longest, and from its ends into some that grow from the lengths from and to.
+func (s *Stroke) shares(longest, from, to float64) []float64 {
+	size := s.Length()
+	cuts := []float64{0, 1}
+	grow := func(l float64, at func(u float64) float64) {
+		if l >= longest {
+			return
+		}
+		for x := l; x < size/2; x += l + fromCorner*x {
+			cuts = append(cuts, at(x/size))
+		}
+	}
+	grow(from, func(u float64) float64 { return u })
+	grow(to, func(u float64) float64 { return 1 - u })
+	slices.Sort(cuts)
+	least := 1
+	if s.R == 0 && len(cuts) == 2 {
+		least = 2
+	}
+	out := []float64{0}
+	for k := 1; k < len(cuts); k++ {
+		share := cuts[k] - cuts[k-1]
+		n := max(least, int(math.Ceil(s.span()*share/(2*maxBend)-1e-9)), int(math.Ceil(size*share/longest-1e-9)))
+		for m := range n {
+			out = append(out, cuts[k-1]+share*float64(m+1)/float64(n))
+		}
+	}
+	return out
+}
+
+// singular marks the bends at the sharp ends of a stroke, which no halving resolves.
+func (s *Shaped) singular(first int, from, to bool, stroke int) {
+	for i := first; i < len(s.bends); i++ {
+		if b := &s.bends[i]; b.stroke == stroke {
+			b.corner = from && b.lo == 0 || to && b.hi == 1
+		}
+	}
+}
+
+// mostGrowth is how much longer a bend may be than its neighbour.
+const mostGrowth = 5
+
+// balance halves bends of a contour that are much longer than their neighbours.
+func (s *Shaped) balance(first, contour int) {
+	c := &s.contours[contour]
+	for again := true; again; {
+		again = false
+		old := append([]bend(nil), s.bends[first:]...)
+		s.bends = s.bends[:first]
+		n := len(old)
+		for k := range old {
+			b := &old[k]
+			next, last := &old[(k+1)%n], &old[(k+n-1)%n]
+			least := math.Min(next.half, last.half)
+			if c.String {
+				least = b.half // its ends have no neighbours of its own
+				if k > 0 {
+					least = math.Min(least, last.half)
+				}
+				if k < n-1 {
+					least = math.Min(least, next.half)
+				}
+			}
+			if b.corner || b.half <= mostGrowth*least {
+				s.bends = append(s.bends, *b)
+				continue
+			}
+			again = true
+			st, mid := &c.Loop[b.stroke], (b.lo+b.hi)/2
+			s.bends = append(s.bends, newBend(st, contour, b.stroke, b.lo, mid), newBend(st, contour, b.stroke, mid, b.hi))
 		}
 	}
 }
@@ -59,8 +149,10 @@ func (s *Shaped) refine(fineness float64) bool {
 	s.loose = 0
 	for i := range s.bends {
 		b := s.bends[i]
-		s.loose = math.Max(s.loose, tail[i])
-		if tail[i] < limit {
+		if !b.corner {
+			s.loose = math.Max(s.loose, tail[i])
+		}
+		if tail[i] < limit || b.corner {
 			b.known = b.dof
 			out = append(out, b)
 			continue

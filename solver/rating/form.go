@@ -3,6 +3,7 @@ package rating
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"packrise/solver/heat"
 	"packrise/solver/outline"
@@ -166,14 +167,40 @@ func loops(loop func(t float64) outline.Loop, layers []layer, at section.Point) 
 	return out
 }
 
-// formNote says what stands for the film of an outside that is not round.
+// formNote says what stands for what is not round: for the film of an outside, and for the skin effect of bars. For the plates that a bar's faces are, the
+// common correlations (4th roots of temperature difference over length, handbooks on heat transfer, from memory) give what is said of the film.
 func (s *scene) formNote() string {
-	formed := s.holder.flat
+	formed, flat := s.holder.flat, s.holder.flat
 	for i := range s.parts {
-		formed = formed || s.holder.kind == section.NoHolder && s.parts[i].in < 0 && s.parts[i].form.Kind != heat.Disc
+		p := &s.parts[i]
+		if s.holder.kind == section.NoHolder && p.in < 0 && p.form.Kind != heat.Disc {
+			lo, hi := p.outside().Bounds()
+			formed, flat = true, real(hi-lo) > 2*imag(hi-lo)
+		}
 	}
-	if !formed || !s.out.free {
-		return ""
+	var notes []string
+	if formed && s.out.free {
+		n := "the film of the outside, which is not round, is that of a cylinder of the same circumference"
+		if flat {
+			n += ": lying flat, it has about a fifth less convection, and its rise may be a tenth larger"
+		}
+		notes = append(notes, n)
 	}
-	return "the film of the outside, which is not round, is that of a cylinder of the same circumference"
+	if y, id := s.barSkin(); y > 0.0005 {
+		notes = append(notes, fmt.Sprintf("the skin effect of bars is that of a round conductor of the same resistance, which is more than a flat one has: it adds %s %% to %s", digits(100*y, 1), id))
+	}
+	return strings.Join(notes, "; ")
+}
+
+// barSkin is the largest skin effect factor of a bar.
+func (s *scene) barSkin() (most float64, id string) {
+	for i := range s.parts {
+		p := &s.parts[i]
+		if p.metal && p.form.Kind == heat.Bar && p.load != nil && !p.load.HeatWM.OK {
+			if y := skin(p.wire.R20, p.load.FrequencyHz.V); y > most {
+				most, id = y, p.id
+			}
+		}
+	}
+	return most, id
 }

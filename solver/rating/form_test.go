@@ -166,3 +166,20 @@ loads:
 		t.Errorf("string from %v to %v", lo, hi)
 	}
 }
+
+// What stands for the film of a bar that lies flat, and for the skin effect of a large one at 50 Hz, is said. A round copper conductor of 1000 mm² has x_s² =
+// 8π·50·10⁻⁷/(1.7241·10⁻⁵ Ω/m) = 7.29 at 20 °C, y_s = x⁴/(192 + 0.8x⁴) = 0.227 (IEC 60287-1-1, 2.1.2).
+func TestBarNotes(t *testing.T) {
+	r := solve(t, parse(t, barHead+`holder: {kind: none}
+parts:
+  - {id: B, kind: core, conductor: {shape: bar, width_mm: 100, height_mm: 10, metal: copper, class: solid}, at_mm: [0, 0]}
+loads:
+  - {id: a, conductors: [B], current_a: 1200, frequency_hz: 50}
+`), rating.Options{})
+	notes := strings.Join(r.Notes, "\n")
+	for _, want := range []string{"lying flat", "round conductor of the same resistance", "22.7 % to B"} {
+		if !strings.Contains(notes, want) {
+			t.Errorf("notes %q lack %q", notes, want)
+		}
+	}
+}
