@@ -134,7 +134,7 @@ func (v *SectionView) beginDrag() {
 		v.drag.mode = dragPan
 		return
 	}
-	shapes, _ := v.desk.Shapes()
+	shapes := v.desk.writtenShapes()
 	moving := topsOf(append([]string{v.drag.id}, v.desk.Selection()...))
 	d := &v.drag
 	for _, s := range shapes {

@@ -163,7 +163,7 @@ func (v *SectionView) nudge(dx, dy float64) {
 	if v.shifted() {
 		step = nudgeWide
 	}
-	shapes, _ := v.desk.Shapes()
+	shapes := v.desk.writtenShapes()
 	parts, others := apart(shapes, topsOf(v.desk.Selection()))
 	if len(parts) == 0 {
 		return

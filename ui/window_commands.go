@@ -3,6 +3,8 @@ package ui
 import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/driver/desktop"
+
+	"packrise/solver/section"
 )
 
 // shortcuts are the keys that no menu item can have: those without a modifier, and the second key for Redo.
@@ -76,8 +78,28 @@ func (w *Window) selectAll() {
 }
 
 func (w *Window) settle() {
+	if d := w.desk.Document(); d.Holder.Kind == section.Apart {
+		w.say("a row …")
+		w.desk.Settle(func(err error) {
+			w.arranged(err)
+			if err == nil {
+				w.say(inRowWords(d))
+			}
+		})
+		return
+	}
 	w.say("settling …")
 	w.desk.Settle(w.arranged)
+}
+
+// inRowWords say what settling does to bodies apart.
+func inRowWords(d *section.Document) string {
+	for _, p := range d.Parts {
+		if !p.At.OK {
+			return "what had no place lies in a row, a diameter apart"
+		}
+	}
+	return "bodies apart stay where they are drawn"
 }
 
 func (w *Window) layUp() {

@@ -107,8 +107,9 @@ func MakeRoom(d *section.Document, cat *catalog.Catalog, held string) (at map[st
 		}
 		placed = append(placed, i)
 	}
-	for _, i := range placed { // the document's own frame: bundles have their origin anywhere
-		s.parts[i].x, s.parts[i].y = s.parts[i].abs.X*mm, s.parts[i].abs.Y*mm
+	for _, i := range placed { // as written: bundles have their origin anywhere, and what is solved lies apart by a clearance
+		at := s.parts[i].src.At.V
+		s.parts[i].x, s.parts[i].y = at.X*mm, at.Y*mm
 	}
 	discs, ok := pack.PushApart(s.discs(placed), s.box(-1), hold, 0)
 	if !ok {
