@@ -28,7 +28,7 @@ func (f *potential) at(w complex128, p int, flipped, second bool) {
 	if second {
 		n++
 	}
-	f.legendreQ(w, scale(0.5, lr-ll), n)
+	legendreQ(f.q[:n+1], w, scale(0.5, lr-ll))
 	e := scale(0.5, right*lr-left*ll) // w Q_0 + ½ ln(w²−1), finite at ±1
 	q := &f.q
 	f.first[0] = e + e - 2
@@ -47,10 +47,10 @@ func (f *potential) at(w complex128, p int, flipped, second bool) {
 	}
 }
 
-// legendreQ fills q[0..n] given Q_0. Upwards the recurrence loses |w+√(w²−1)|^(2n), so away from the panel it runs downwards from a start far
+// legendreQ fills q[0..n], n ≥ 1, given Q_0. Upwards the recurrence loses |w+√(w²−1)|^(2n), so away from the panel it runs downwards from a start far
 // enough above n and is scaled to Q_0 (Miller's algorithm; Gautschi, SIAM Review 9, 1967).
-func (f *potential) legendreQ(w, q0 complex128, n int) {
-	q := &f.q
+func legendreQ(q []complex128, w, q0 complex128) {
+	n := len(q) - 1
 	q[0] = q0
 	size := real(w)*real(w) + imag(w)*imag(w)
 	if size < 4 {
