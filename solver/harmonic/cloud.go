@@ -250,9 +250,10 @@ func (c *Cloud) shifted(at complex128, a float64, b []complex128) {
 	z := scale(1/c.Circle.R, at)
 	t := a / c.Circle.R
 	top := len(c.B)
-	for r, s := size(z)+t, 0.0; top > 0 && r < 1; top-- { // what has died out this far inside
-		if s = size(c.B[top-1]) * math.Pow(r, float64(top)); s > 1e-7 {
-			break
+	if r := size(z) + t; r < 1 { // what has died out this far inside
+		top = min(top, int(-600/math.Log(r))) // so that the power is no nought
+		for p := math.Pow(r, float64(top)); top > 0 && size(c.B[top-1])*p <= 1e-7; top-- {
+			p /= r
 		}
 	}
 	// Repeated synthetic division by (z − at): the Taylor coefficients of the polynomial, one order a sweep.
