@@ -114,8 +114,10 @@ func (s *Study) run(d *section.Document) rules.Run {
 		switch {
 		case w.Role == "" && isNeutral(d, w.ID):
 			c.Role = rules.Neutral
-		case w.Role == "" && starting[w.Load]:
+		case (w.Role == "" || w.Role == section.RoleLine) && starting[w.Load]:
 			c.Role = rules.Control
+		case w.Role == section.RoleControl && w.Load != "" && !starting[w.Load]:
+			c.Role = rules.Line // only wires of starting duty may be left out of a count, and nobody said that these are
 		case w.Role == "":
 			c.Role = rules.Line
 		}
@@ -198,7 +200,9 @@ func lowest(p *Permits, c *Codes) []Lowest {
 		for _, cap := range c.Caps {
 			if cap.Conductor == w.ID && !math.IsNaN(cap.A) {
 				l.Terminal = cap.A
-				take(cap.A, "terminal", cap.Text)
+				if cap.Kind != "terminal-block" || !cap.Assumed { // nobody said that it ends in a terminal block
+					take(cap.A, "terminal", cap.Text)
+				}
 			}
 		}
 		for _, load := range c.Run.Loads {
