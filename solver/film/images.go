@@ -62,3 +62,24 @@ func (t *Together) buried(i int, surfaceK float64, heat []float64) Answer {
 	}
 	return a
 }
+
+// followSoil is Follow in the ground: of ΔT = R q without each body's own share.
+func (t *Together) followSoil() [][]float64 {
+	n := len(t.Bodies)
+	out := make([][]float64, n)
+	var inverse mat.Dense
+	if err := inverse.Inverse(t.soil); err != nil {
+		for i := range out {
+			out[i] = make([]float64, n)
+		}
+		return out
+	}
+	for i := range out {
+		out[i] = make([]float64, n)
+		for j := range n {
+			out[i][j] = -t.soil.At(i, i) * inverse.At(i, j)
+		}
+		out[i][i]++
+	}
+	return out
+}

@@ -92,22 +92,27 @@ func (t *Together) exchange(between [][]float64) {
 	}
 }
 
-// Links are the radiative conductances (W/m²K, per area of the first) between bodies at surface temperatures (K), as tangents or as secants.
-func (t *Together) Links(surfaceK []float64, tangent bool) [][]float64 {
+// Follow tells how the TowardK of each film, its coefficient as it is, rises with the surface temperature of each body (K/K), at given ones: what a
+// flow follows beyond its own film. The first index is that of the film.
+func (t *Together) Follow(surfaceK []float64) [][]float64 {
 	t.prepare()
+	if t.soil != nil {
+		return t.followSoil()
+	}
 	out := make([][]float64, len(t.Bodies))
-	for i := range out {
+	for i, s := range surfaceK {
 		out[i] = make([]float64, len(t.Bodies))
-		if t.pull == nil {
-			continue
-		}
-		for j, p := range t.pull[i] {
-			a, b := surfaceK[i], surfaceK[j]
-			if tangent {
-				a = b
+		h := t.Film(i, surfaceK).Coefficient()
+		if t.pull != nil {
+			for j, p := range t.pull[i] {
+				k := surfaceK[j]
+				out[i][j] = p * 4 * stefan * k * k * k / h
 			}
-			out[i][j] = p * stefan * (a*a + b*b) * (a + b)
 		}
+		const d = 1e-3
+		up, down := append([]float64(nil), surfaceK...), append([]float64(nil), surfaceK...)
+		up[i], down[i] = s+d, s-d
+		out[i][i] = 1 - (t.Film(i, up).Flux(s+d)-t.Film(i, down).Flux(s-d))/(2*d*h)
 	}
 	return out
 }

@@ -120,32 +120,45 @@ func TestTogetherBalances(t *testing.T) {
 			within(t, "flux", back[i], q[i], 1e-4)
 			within(t, "film", films[i].Flux(temps[i]), q[i], 1e-4)
 		}
-		links := to.Links(temps, false)
-		for i := range links {
-			for j := range links {
-				within(t, "exchange", links[i][j]*to.Bodies[i].Face.DiameterM, links[j][i]*to.Bodies[j].Face.DiameterM, 1e-12)
-				if links[i][j] < -1e-12 {
-					t.Errorf("body %d draws heat from a colder one: %g", i, links[i][j])
-				}
-			}
+		// all that bodies give each other by radiation adds up to nothing
+		still := *to
+		still.Outside.Kind, still.Outside.SunWM2, still.Outside.RadiantK = film.Vacuum, 0, 0
+		at := append([]float64(nil), temps...)
+		sum, away := 0.0, 0.0
+		for i := range at {
+			at[i] = 300 + 100*rng.Float64()
+		}
+		for i, f := range (&film.Together{Outside: still.Outside, Bodies: still.Bodies}).Flux(at) {
+			sum += f * still.Bodies[i].Face.DiameterM
+			alone := (&film.Together{Outside: still.Outside, Bodies: still.Bodies[i : i+1]}).Flux(at[i : i+1])
+			away += alone[0] * still.Bodies[i].Face.DiameterM
+		}
+		if !(sum > 0 && sum < away) { // what reaches the cold outside is less than all would radiate alone
+			t.Errorf("%g W/m leave, alone %g", sum, away)
 		}
 	}
 }
 
-// TestLinksAreTangents: the slope of one body's flow over another's temperature.
-func TestLinksAreTangents(t *testing.T) {
-	to := placed(room(), 0.02, 0.8, film.Row{}, [2]float64{0, 0}, [2]float64{1.2, 0}, [2]float64{0.4, 1.3})
-	s := []float64{340, 320, 355}
-	k := to.Links(s, true)
-	const d = 1e-3
-	for j := range s {
-		up, down := append([]float64{}, s...), append([]float64{}, s...)
-		up[j] += d
-		down[j] -= d
-		a, b := to.Flux(up), to.Flux(down)
-		for i := range s {
-			if i != j {
-				within(t, "slope", -(a[i]-b[i])/(2*d), k[i][j], 1e-6)
+// TestFollow: a film's end, the coefficient kept, against differences of the flow.
+func TestFollow(t *testing.T) {
+	ground := film.Outside{Kind: film.Buried, AmbientK: 288, DepthM: 0.6, SoilWMK: 0.8}
+	for _, o := range []film.Outside{room(), ground} {
+		to := placed(o, 0.02, 0.8, film.Row{N: 2, Gap: 0.2}, [2]float64{0, 0}, [2]float64{1.2, 0}, [2]float64{0.4, 1.3})
+		s := []float64{340, 320, 355}
+		k := to.Follow(s)
+		const d = 1e-3
+		for j := range s {
+			up, down := append([]float64{}, s...), append([]float64{}, s...)
+			up[j] += d
+			down[j] -= d
+			a, b := to.Flux(up), to.Flux(down)
+			for i := range s {
+				h := to.Film(i, s).Coefficient()
+				want := -(a[i] - b[i]) / (2 * d * h)
+				if i == j {
+					want++
+				}
+				within(t, "follow", k[i][j], want, 1e-6)
 			}
 		}
 	}

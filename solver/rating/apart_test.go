@@ -331,3 +331,37 @@ func BenchmarkApart2x19(b *testing.B)   { benchmarkApart(b, twoBundles(), 0, hea
 func BenchmarkApart2x19Drag(b *testing.B) {
 	benchmarkApart(b, twoBundles(), 0, heat.Draft)
 }
+
+// TestApartPoint: the influence matrix of bodies holds what one body does to the others through radiation, and through the ground.
+func TestApartPoint(t *testing.T) {
+	text := func(around string, heats ...float64) string {
+		s := wires(around, "kind: apart", 20, [2]float64{0, 0}, [2]float64{6, 0}, [2]float64{14, 0}, [2]float64{4, 14})
+		s = s[:strings.Index(s, "loads:")] + "loads:\n"
+		for i, q := range heats {
+			s += fmt.Sprintf("  - {id: q%d, conductors: [L%d], heat_w_m: %g}\n", i, i+1, q)
+		}
+		return s
+	}
+	for _, around := range []string{stillAir, "kind: vacuum, ambient_c: 30", "kind: buried, ambient_c: 15, depth_m: 0.7, soil_w_mk: 1"} {
+		e := rating.NewEngine(catalog.Load())
+		o := rating.Options{Accuracy: heat.Fine}
+		heats := []float64{4, 2, 6, 3}
+		p, _, problems, err := e.Point(context.Background(), parse(t, text(around, heats...)), o)
+		if p == nil {
+			t.Fatal(problems, err)
+		}
+		for j := range heats {
+			up, down := append([]float64(nil), heats...), append([]float64(nil), heats...)
+			up[j] += 0.2
+			down[j] -= 0.2
+			a, b := solve(t, parse(t, text(around, up...)), o), solve(t, parse(t, text(around, down...)), o)
+			for i := range heats {
+				want := (a.Conductors[i].TempC - b.Conductors[i].TempC) / 0.4
+				// air between the two that touch conducts as it is in K
+				if k := p.K[i][j]; !(math.Abs(k-want) < 0.02*p.K[j][j]) || !(k > 0) {
+					t.Errorf("%s: K[%d][%d] %.5f, by solving %.5f", around, i, j, k, want)
+				}
+			}
+		}
+	}
+}

@@ -22,7 +22,7 @@ type Source struct {
 type Point struct {
 	*Result
 	Sources []Source    // as Result.Conductors
-	K       [][]float64 // K per W/m, [conductor][source]; films and air as they are, see Learn
+	K       [][]float64 // K per W/m, [conductor][source]; films and air as they are, see Learn; of bodies apart films follow, so that each warms all others
 }
 
 // Point solves a document and writes its working point out. The point is nil when a problem is refused or the answer is not converged (its
@@ -32,7 +32,7 @@ func (e *Engine) Point(ctx context.Context, d *section.Document, o Options) (*Po
 	if r == nil || err != nil || r.Status != heat.Converged {
 		return nil, r, problems, err
 	}
-	k, _, status := e.model.Tangent(ctx)
+	k, status := e.tangent(ctx)
 	if status != heat.Converged {
 		c := *r
 		c.Status = status

@@ -13,6 +13,18 @@ type model interface {
 	Radiates() bool
 }
 
+// tangent is the influence matrix at the last answer, films and air as they are; of bodies apart the films follow the outsides of all bodies, so that
+// each warms the others.
+func (e *Engine) tangent(ctx context.Context) ([][]float64, heat.Status) {
+	g, ok := e.model.(*heat.Group)
+	if !ok || e.out.together == nil {
+		k, _, status := e.model.Tangent(ctx)
+		return k, status
+	}
+	surfaces, _ := e.out.together.Surfaces(e.flux)
+	return g.Coupled(ctx, e.out.together.Follow(surfaces))
+}
+
 // prepared is the heat model of one body with the problem that it is for.
 type prepared struct {
 	model   *heat.Model
