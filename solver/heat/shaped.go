@@ -12,6 +12,7 @@ type shaped struct {
 	m    *Model
 	plan *plan
 	sys  *outline.Shaped // nil until it is needed
+	old  *outline.Shaped // the one before, of which a new one may keep something
 
 	glow   *shine    // what radiates, nil before it is known or where nothing does
 	before *shine    // the one before, of which a new one may keep something
@@ -33,8 +34,9 @@ func (s *shaped) prepare(ctx context.Context) bool {
 	}
 	factor, _, _ := s.m.set.Accuracy.settings()
 	s.plan = newPlan(&s.m.p)
-	s.sys = outline.NewShapedAround(s.plan.contours, outline.Around{MediumK: s.m.p.MediumK, Hull: s.plan.hull}, nil, factor, ended(ctx))
+	s.sys = outline.NewShapedAround(s.plan.contours, outline.Around{MediumK: s.m.p.MediumK, Hull: s.plan.hull}, s.old, factor, ended(ctx))
 	if s.sys != nil {
+		s.old = nil
 		s.glow, s.before = s.newShine(s.before), nil
 	}
 	return s.sys != nil
@@ -42,7 +44,9 @@ func (s *shaped) prepare(ctx context.Context) bool {
 
 // move puts a part elsewhere.
 func (s *shaped) move() {
-	s.sys = nil
+	if s.sys != nil {
+		s.old, s.sys = s.sys, nil
+	}
 	if s.glow != nil {
 		s.glow, s.before = nil, s.glow
 	}

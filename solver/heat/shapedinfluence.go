@@ -102,4 +102,7 @@ func (s *shaped) resume(old *shaped) {
 	if s.before = old.glow; s.before == nil {
 		s.before = old.before
 	}
+	if s.old = old.sys; s.old == nil {
+		s.old = old.old
+	}
 }
