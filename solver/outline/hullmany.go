@@ -58,22 +58,58 @@ func (p *HullPatches) RespondMany(l *Lot, w []float64) {
 	substituteMany(p.s.lu.Data, p.s.pivots, l.Y)
 }
 
+// patchMeans are the mean temperatures of patches: what the densities and the discs bring to them.
+type patchMeans struct {
+	temp []float64 // per patch and density
+	feel [][]touch // per disc and patch
+}
+
 // MeansMany sets t to the mean temperatures of the patches, of Lanes vectors.
 func (p *HullPatches) MeansMany(t []float64, l *Lot) {
-	s := p.s
-	clear(l.cold)
-	for j := range s.discs {
-		d := &s.discs[j]
-		d.outMany(l.cold, d.warm, l.Src[j], l.tmp)
+	m := p.measured()
+	meansMany(t, l, m.temp, p.s.n, m.feel)
+}
+
+// measured works the means out once.
+func (p *HullPatches) measured() *patchMeans {
+	p.lock.Lock()
+	defer p.lock.Unlock()
+	if p.means != nil {
+		return p.means
 	}
+	n := p.s.n
+	m := &patchMeans{temp: make([]float64, len(p.Length)*n), feel: make([][]touch, len(p.s.discs))}
 	for k := range p.Length {
-		mean := (*lanes)(t[Lanes*k:])
-		*mean = lanes(l.Y[Lanes*s.n:])
 		for c := p.first[k]; c < p.first[k+1]; c++ {
-			var cell [Lanes]float64
-			in1(s.temp[p.row[c]*s.n:][:s.n], l.Y, cell[:])
-			takeUp(mean[:], cell[:], p.share[c])
-			takeUp(mean[:], l.cold[Lanes*p.row[c]:], -p.share[c])
+			addScaled(m.temp[k*n:][:n], p.share[c], p.s.temp[p.row[c]*n:][:n])
 		}
 	}
+	for j := range m.feel {
+		m.feel[j] = p.feltOf(&p.s.discs[j])
+	}
+	p.means = m
+	return m
+}
+
+// feltOf is what each patch feels of d.
+func (p *HullPatches) feltOf(d *hullDisc) []touch {
+	at := make([]int, p.s.n) // of each cell in d's order
+	for k, i := range d.order {
+		at[i] = k
+	}
+	rows := make([]touch, len(p.Length))
+	for k := range rows {
+		row := make(touch, len(d.warm))
+		cols := 0
+		for c := p.first[k]; c < p.first[k+1]; c++ {
+			for h, w := range d.warm {
+				if i := at[p.row[c]]; i < len(w) {
+					row[h] -= p.share[c] * w[i]
+					cols = max(cols, h+1)
+				}
+			}
+		}
+		rows[k] = append(touch(nil), row[:cols]...)
+	}
+	return rows
 }

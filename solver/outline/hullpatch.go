@@ -1,6 +1,11 @@
 package outline
 
-import "slices"
+import (
+	"slices"
+	"sync"
+
+	"gonum.org/v1/gonum/floats"
+)
 
 // HullPatches are pieces of the strings that take up heat on their inner side besides what the medium brings them, such as radiation, and whose
 // mean temperatures are wanted. They stand counterclockwise; where a patch does not begin at the end of the one before, parts lie between.
@@ -13,6 +18,9 @@ type HullPatches struct {
 	row   []int     // of each cell
 	share []float64 // of each cell in the length of its patch
 	gain  []float64 // what 1 W/m² into a cell adds to its row
+
+	lock  sync.Mutex
+	means *patchMeans // nil until they are wanted
 }
 
 // Patches divides the strings along their cells, longest telling how long a patch at z may be.
@@ -61,7 +69,7 @@ func (p *HullPatches) Follow(s *HullSystem) bool {
 	}) {
 		return false
 	}
-	p.s = s
+	p.s, p.means = s, nil
 	for c, row := range p.row {
 		p.gain[c] = s.gain(row)
 	}
@@ -96,11 +104,15 @@ func (p *HullPatches) RespondTo(y []float64, src Sources, ground bool, w []float
 
 // Means sets t to the mean temperatures of the patches, for the whole solution.
 func (p *HullPatches) Means(t, y []float64, src Sources) {
-	cells := p.s.Temperatures(y, src)
+	m, n := p.measured(), p.s.n
 	for k := range t {
-		t[k] = 0
-		for c := p.first[k]; c < p.first[k+1]; c++ {
-			t[k] += p.share[c] * cells[p.row[c]]
+		t[k] = y[n] + floats.Dot(m.temp[k*n:][:n], y[:n])
+	}
+	for j, feel := range m.feel {
+		v := pack(make([]float64, 0, 1+2*usualOrder), src.Q[j], src.D[j])
+		for k, row := range feel {
+			c := min(len(row), len(v))
+			t[k] += dot(row[:c], v)
 		}
 	}
 }

@@ -126,12 +126,11 @@ type Lot struct {
 	Src, In Many
 	Y       []float64
 	tmp     []float64
-	cold    []float64
 }
 
 // NewLot makes room for a border of n unknowns (Len) round the discs.
 func NewLot(discs []Disc, n int) *Lot {
-	return &Lot{Src: NewMany(discs), In: NewMany(discs), Y: make([]float64, Lanes*n), tmp: make([]float64, Lanes*n), cold: make([]float64, Lanes*n)}
+	return &Lot{Src: NewMany(discs), In: NewMany(discs), Y: make([]float64, Lanes*n), tmp: make([]float64, Lanes*n)}
 }
 
 // takeUp adds to the rows of a patch what w, of Lanes vectors, brings there.

@@ -50,12 +50,17 @@ func (p *Patches) RespondMany(l *Lot, w []float64) {
 
 // MeansMany sets t to the mean temperatures of the patches, of Lanes vectors.
 func (p *Patches) MeansMany(t []float64, l *Lot) {
-	n := p.s.n
-	for k := range p.Length {
+	meansMany(t, l, p.temp, p.s.n, p.feel)
+}
+
+// meansMany sets t from n densities and the constant, and from the discs.
+func meansMany(t []float64, l *Lot, temp []float64, n int, feel [][]touch) {
+	patches := len(temp) / max(n, 1)
+	for k := range patches {
 		copy(t[Lanes*k:][:Lanes], l.Y[Lanes*n:])
 	}
-	rowsMany(p.temp, n, 0, len(p.Length), n, l.Y, t)
-	for j, feel := range p.feel {
+	rowsMany(temp, n, 0, patches, n, l.Y, t)
+	for j, feel := range feel {
 		v := l.Src[j]
 		for k := range feel {
 			if k%2 > 0 {
