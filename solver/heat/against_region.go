@@ -25,6 +25,14 @@ func (a *Against) hull() outline.Rest {
 	return r
 }
 
+// gripped lists the pieces on whose rim a bundle's hull begins or ends to be held at a temperature.
+func (g *region) gripped() []int {
+	if h, ok := g.border.(*hullWall); ok && h.rest.Share > 0 && h.sys != nil {
+		return h.sys.Gripped()
+	}
+	return nil
+}
+
 // cut divides the outside's contour, which has one film all round, where it rests against something.
 func (a *Against) cut(c *outline.Contour) {
 	if a.Share == 0 {

@@ -17,7 +17,11 @@ const (
 // tail is the energy of the last harmonics, W/m·K, of unknowns x with outgoing amplitudes v.
 func (g *region) tail(x, v []float64) float64 {
 	sum := 0.0
+	gripped := g.gripped()
 	for i, m := range g.orders {
+		if slices.Contains(gripped, i) {
+			continue
+		}
 		o := g.sys.Offset(i)
 		for n := int(math.Ceil(tailShare * float64(m))); n < m; n++ {
 			if l := g.laws[i]; l == nil || 2*n >= l.n {
@@ -54,8 +58,8 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 		}
 	}
 	e := m.set.Accuracy.floor() * m.rise(r)
-	if m.top.border != nil && m.metalLayer() {
-		e *= 10 // panels on a foil
+	if m.top.border != nil && (m.metalLayer() || len(m.top.gripped()) > 0) {
+		e *= 10 // panels on a foil, or next to a jump from film to temperature
 	}
 	if sum > 0 {
 		e += worstShare * s.tail / sum

@@ -129,3 +129,14 @@ func (s *HullSystem) RestOut(t []float64) (out float64) {
 	}
 	return out
 }
+
+// Gripped lists the discs on whose rim what is held at a temperature begins or ends. The field there is singular: their harmonics hardly die out, though
+// what they send back to the hull is reckoned to all orders.
+func (s *HullSystem) Gripped() (discs []int) {
+	for i := range s.pieces {
+		if p := &s.pieces[i]; p.disc >= 0 && p.held && (p.tip[0] || p.tip[1]) {
+			discs = append(discs, p.disc)
+		}
+	}
+	return discs
+}
