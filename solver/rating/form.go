@@ -173,9 +173,9 @@ func (s *scene) formNote() string {
 	formed, flat := s.holder.flat, s.holder.flat
 	for i := range s.parts {
 		p := &s.parts[i]
-		if s.holder.kind == section.NoHolder && p.in < 0 && p.form.Kind != heat.Disc {
+		if (s.holder.kind == section.NoHolder || s.apart()) && p.in < 0 && p.form.Kind != heat.Disc {
 			lo, hi := p.outside().Bounds()
-			formed, flat = true, real(hi-lo) > 2*imag(hi-lo)
+			formed, flat = true, flat || real(hi-lo) > 2*imag(hi-lo)
 		}
 	}
 	var notes []string

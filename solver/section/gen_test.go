@@ -148,7 +148,7 @@ func (m maker) holder(kinds ...string) Holder {
 	if m.coin("fill") {
 		h.Fill = m.name()
 	}
-	if h.Kind == OpenBundle {
+	if h.Kind == OpenBundle || h.Kind == Apart {
 		h.StringEmissivity = m.opt(0.05, 0.9)
 		return h
 	}
@@ -254,9 +254,12 @@ func (m maker) document() *Document {
 		d.Builds = append(d.Builds, Build{name, m.holder(Jacket, Conduit, OpenBundle), m.parts(3, names)})
 		names = append(names, name)
 	}
-	d.Holder = m.holder(Jacket, Conduit, Wireway, OpenBundle, NoHolder)
-	if d.Holder.Kind == Wireway {
+	d.Holder = m.holder(Jacket, Conduit, Wireway, OpenBundle, Apart, NoHolder)
+	if d.Holder.Kind == Wireway || d.Holder.Kind == Apart {
 		d.Surroundings.Against = nil
+	}
+	if k := d.Surroundings.Kind; d.Holder.Kind == Apart && (k == FixedWall || k == Insulation) {
+		d.Surroundings = Surroundings{Kind: StillAir, AmbientC: d.Surroundings.AmbientC}
 	}
 	d.Holder.TouchLimitC, d.Holder.LengthM = m.opt(30, 90), m.opt(0.1, 5)
 	n := 6
