@@ -17,6 +17,7 @@ func SectionLayer(c Canvas, s Scene, v View, sc Scale, st Style) {
 	hatched := p.hatching()
 	flow := p.flowLines()
 	p.outlines()
+	p.against()
 	p.marks()
 	bar := p.planScaleBar()
 	p.planCallouts()

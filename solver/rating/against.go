@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"packrise/solver/heat"
+	"packrise/solver/outline"
 	"packrise/solver/section"
 )
 
@@ -115,4 +116,61 @@ func (s *scene) restNote(a answered) string {
 		out += "; the film of the whole circumference acts on the rest"
 	}
 	return out
+}
+
+// againstLine is where the outline rests against something, mm in the plane of the section, counterclockwise; nil for nowhere.
+func (s *scene) againstLine() []section.Point {
+	a := s.rests()
+	if a == nil {
+		return nil
+	}
+	outside, at := s.outsideLoop()
+	if len(outside) == 0 {
+		return nil
+	}
+	cut, in := outside.Rest(a.AtDeg*math.Pi/180, min(a.Share, 0.9999))
+	first := 0
+	for i := range in {
+		if in[i] && !in[(i+len(in)-1)%len(in)] {
+			first = i
+		}
+	}
+	var line outline.Loop
+	for k := range cut {
+		if i := (first + k) % len(cut); in[i] {
+			line = append(line, cut[i])
+		}
+	}
+	const sag = 2e-3 * mm
+	var out []section.Point
+	for _, z := range append(line.Polygon(sag), line[len(line)-1].To) {
+		out = append(out, section.Point{X: at.X + real(z)/mm, Y: at.Y + imag(z)/mm})
+	}
+	return out
+}
+
+// outsideLoop is the outer outline (m) about a point (mm) of the section, nil if there is none.
+func (s *scene) outsideLoop() (outline.Loop, section.Point) {
+	h := &s.holder
+	switch {
+	case s.hulled():
+		var l outline.Loop
+		line := hullLoop(s.drawn())
+		for i, p := range line {
+			q := line[(i+1)%len(line)]
+			l = append(l, outline.Stroke{From: complex(p.X*mm, p.Y*mm), To: complex(q.X*mm, q.Y*mm)})
+		}
+		return l, section.Point{}
+	case h.kind == section.NoHolder:
+		for i := range s.parts {
+			if p := &s.parts[i]; p.in < 0 && !p.unset && p.outer() > 0 {
+				return p.outside(), p.abs
+			}
+		}
+		return nil, section.Point{}
+	}
+	if !(h.radius > 0) {
+		return nil, section.Point{}
+	}
+	return h.loop(thickness(h.layers)), s.origin
 }

@@ -81,6 +81,7 @@ func (s *scene) holderShape() section.Shape {
 			sh.Loops = loops(h.loop, h.layers, s.origin)
 		}
 	}
+	sh.Against = s.againstLine()
 	return sh
 }
 

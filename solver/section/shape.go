@@ -13,8 +13,10 @@ type Shape struct {
 	Width  float64
 	Height float64   // rectangles: the inside; Rings then give wall layers with R = distance outwards from the inside face
 	Loops  [][]Point // of a shape that is not round and no rectangle: the outer outline of each of Rings, whose radii are then those of circles around them
-	Depth  int       // 0 for the holder and its parts, 1 for parts of a cable …
-	Label  string    // one line for people: "8 AWG copper THHN, ⌀ 5.49 mm"
+	// Against is, of the holder, what of the outline rests against something: a line, counterclockwise.
+	Against []Point
+	Depth   int    // 0 for the holder and its parts, 1 for parts of a cable …
+	Label   string // one line for people: "8 AWG copper THHN, ⌀ 5.49 mm"
 }
 
 // Ring is one material between two radii (mm) of a shape. R0 is 0 for a full disc.
