@@ -27,7 +27,7 @@ type hollow struct {
 // hollowGrain is grain for patches along the cells of contours, which lie finer near contacts anyway.
 func (a Accuracy) hollowGrain() (part, wall float64, points int) {
 	part, wall, points = a.grain()
-	return 1.5 * part, wall, points
+	return 2 * part, wall, points
 }
 
 // hollows lists the spaces that are full of gas, that of the top level first.
@@ -87,6 +87,9 @@ func (l *plan) faces(hollows []*hollow) faces {
 	}
 	return f
 }
+
+// hollowError is to sections of contours what grainError is to others, in patches per turn of grain: more than nineteen of twenty random ones.
+const hollowError = 0.25
 
 // grained is a grain for a wall of a given length.
 type grained struct {

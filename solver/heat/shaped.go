@@ -108,8 +108,8 @@ func (s *shaped) solve(ctx context.Context, heats []float64) *Result {
 	if g := s.glow; g != nil {
 		r.Unknowns += len(g.e)
 		g.cores = append([]float64(nil), r.Core...)
-		part, _, _ := s.m.set.Accuracy.hollowGrain()
-		s.m.widen(r, s.m.rise(r)*grainError/(part*part))
+		part, _, _ := s.m.set.Accuracy.grain()
+		s.m.widen(r, s.m.rise(r)*hollowError/(part*part))
 	}
 	r.Field = shapedField{s.sys.Field(y)}
 	return r

@@ -140,7 +140,7 @@ func TestBarInBlackPipe(t *testing.T) {
 func TestShapedAirMoves(t *testing.T) {
 	p := load(t, "r04_loose7_conduit40").Problem
 	p.Filling = heat.Air
-	round, r := solve(t, p, heat.Standard), solve(t, asContours(p), heat.Standard)
+	round, r := solve(t, p, heat.Standard), solve(t, allContours(p), heat.Standard)
 	if !(r.Nusselt > 1.1) || math.Abs(r.Nusselt/round.Nusselt-1) > 1e-3 {
 		t.Errorf("Nu %.4f, %.4f among round parts", r.Nusselt, round.Nusselt)
 	}

@@ -7,6 +7,17 @@ import (
 	"packrise/solver/heat"
 )
 
+// allContours gives every round part of the top level as a flat of equal sides, so that nothing stays a piece.
+func allContours(p heat.Problem) heat.Problem {
+	p.Parts = append([]heat.Part(nil), p.Parts...)
+	for i := range p.Parts {
+		if q := &p.Parts[i]; q.In == -1 && q.Form.Kind == heat.Disc {
+			q.Form = heat.Form{Kind: heat.Flat, W: 2 * q.Radius, H: 2 * q.Radius}
+		}
+	}
+	return p
+}
+
 // The reference sections whose surfaces radiate, solved by contours (testdata/fe-cases/README.md).
 func TestShapedRadiatingCases(t *testing.T) {
 	want := expected(t, "expected.csv", "temperature_c")
@@ -17,7 +28,7 @@ func TestShapedRadiatingCases(t *testing.T) {
 		l := load(t, name)
 		for _, acc := range grades[:soak(1, len(grades))] {
 			most := [...]float64{heat.Standard: 0.03, heat.Draft: 0.1, heat.Fine: 0.025}[acc]
-			r := solve(t, asContours(l.Problem), acc)
+			r := solve(t, allContours(l.Problem), acc)
 			worst, rise := 0.0, 0.0
 			for i, id := range l.ids {
 				if w, ok := want[name][id]; ok {
@@ -46,7 +57,7 @@ func TestShapedRadiatingBundles(t *testing.T) {
 	want := expected(t, "expected.csv", "temperature_c")
 	for _, name := range []string{"b01_three_gas", "b05_big_small_gas", "b03_mixed12_gas"}[:soak(2, 3)] {
 		l := bundle(t, name)
-		r := solve(t, asContours(l.Problem), heat.Standard)
+		r := solve(t, allContours(l.Problem), heat.Standard)
 		worst := 0.0
 		for i, id := range l.ids {
 			if w, ok := want[name][id]; ok {
@@ -92,4 +103,32 @@ func flatInConduit() heat.Problem {
 		{In: -1, X: 5 * mm, Y: 5 * mm, Radius: 1.5 * mm, Heat: 4, Emissivity: 0.8, Rings: []heat.Ring{{K: 0.25, Thickness: 0.8 * mm}}},
 	}
 	return p
+}
+
+// References of our own (testdata/fe-shaped/README.md): conduction by FreeFem++ 4 on quadratic triangles, radiation by crossed strings between some 400
+// patches, Richardson in their length; good to 0.005 K.
+func TestShapedRadiatingReferences(t *testing.T) {
+	for _, c := range []struct {
+		name string
+		p    heat.Problem
+		want map[int]float64
+	}{
+		{"two bars in a duct", duct(), map[int]float64{0: 96.125, 1: 87.656}},
+		{"a flat cable in a conduit", flatInConduit(), map[int]float64{1: 54.4176, 2: 52.8140, 3: 58.8254}},
+	} {
+		for acc, most := range map[heat.Accuracy]float64{heat.Draft: 0.06, heat.Standard: 0.03, heat.Fine: 0.02} {
+			r := solve(t, c.p, acc)
+			worst := 0.0
+			for i, w := range c.want {
+				worst = math.Max(worst, math.Abs(r.Core[i]-w))
+			}
+			t.Logf("%-26s %d: error %.4f K, estimate %.4f, %d unknowns, %d steps", c.name, acc, worst, r.ErrorK, r.Unknowns, r.Steps)
+			if worst > most || worst > 1.5*r.ErrorK {
+				t.Errorf("%s, accuracy %d: error %.4f K, estimated %.4f", c.name, acc, worst, r.ErrorK)
+			}
+			if d := r.Released - r.Generated; math.Abs(d) > 1e-4*r.Generated {
+				t.Errorf("%s: %g of %g W/m released", c.name, r.Released, r.Generated)
+			}
+		}
+	}
 }
