@@ -54,6 +54,8 @@ type Result struct {
 	Others     []Other
 	SurfaceC   float64              // mean of the outside
 	FilmWM2K   section.Opt[float64] // at the present temperature, mean of the open sides; not OK for a fixed wall
+	// OutsideEmissivity is the mean of the outside's; 0 where it does not radiate.
+	OutsideEmissivity float64
 	// ClearanceMM is the mean clearance of loose parts; not OK where they touch.
 	ClearanceMM section.Opt[float64]
 	Generated   float64            // W/m
@@ -88,6 +90,9 @@ func (s *scene) result(a answered, o Options) *Result {
 		Unreasoned: s.unreasoned,
 	}
 	r.FilmWM2K = s.filmShown(a)
+	if s.out.free {
+		r.OutsideEmissivity = s.out.coat.emissivity
+	}
 	if g := s.holder.gap; g > 0 {
 		r.ClearanceMM = section.Some(g / mm)
 	}
