@@ -37,6 +37,8 @@ type Options struct {
 	Progress func(done, of int)
 	// Stage is given what Rate has found so far, each time a stage is done; nil if nobody cares.
 	Stage func(*Ratings)
+
+	vary rating.Vary // shifts of every solution
 }
 
 func (o Options) rating() rating.Options {
@@ -68,7 +70,7 @@ func (s *Study) solve(ctx context.Context, d *section.Document, o Options) (*rat
 }
 
 func solveWith(ctx context.Context, e *rating.Engine, d *section.Document, o Options) (*rating.Result, error) {
-	return solveVaried(ctx, e, d, o, rating.Vary{})
+	return solveVaried(ctx, e, d, o, o.vary)
 }
 
 // solveVaried is solveWith with inputs shifted.
