@@ -3,6 +3,7 @@ package study
 import (
 	"context"
 	"math"
+	"slices"
 
 	"packrise/solver/heat"
 	"packrise/solver/rating"
@@ -23,7 +24,15 @@ type Ratings struct {
 	Permits
 	Doc   *section.Document
 	Bands *Bands // at the currents as given; nil where no steady temperature exists
-	State string
+	// State is the worst of the loads as written and of every case; StateHere that of the loads as written.
+	State, StateHere string
+	AtDevice         []string // loads of unknown current, taken at the rating of their device: Doc has it, and a note of Base says so
+
+	Heaters *Heaters
+	// Heater is the load that does most of the heating of the governing thing, where that makes little heat of its own: "A heats, B suffers".
+	Heater      string
+	HeaterShare int    // percent
+	Cases       *Cases // nil without any; All is then how far all loads may be scaled whichever case runs
 
 	Codes     *Codes
 	Lowest    []Lowest // in the order of Base.Conductors
@@ -38,12 +47,14 @@ type Stage int
 
 // Stages.
 const (
-	StageAll    Stage = iota + 1 // all scaled together, by the limits and the design margin
-	StageBands                   // the bands, and what may be relied on with them
-	StageLoads                   // each load with the others as given
-	StageCodes                   // code tables, terminals, devices, and the lowest of all
-	StageAlone                   // each conductor alone here, and three of it
-	StageFaults                  // each circuit at the tripping current of its device
+	StageAll     Stage = iota + 1 // all scaled together, by the limits and the design margin
+	StageBands                    // the bands, and what may be relied on with them
+	StageHeaters                  // who heats whom
+	StageCases                    // the load cases
+	StageLoads                    // each load with the others as given
+	StageCodes                    // code tables, terminals, devices, and the lowest of all
+	StageAlone                    // each conductor alone here, and three of it
+	StageFaults                   // each circuit at the tripping current of its device
 )
 
 // Last is the last stage.
@@ -58,7 +69,7 @@ func (s *Study) Rate(ctx context.Context, d *section.Document, base *rating.Resu
 	for _, stage := range []struct {
 		is Stage
 		do func() error
-	}{{StageAll, r.all}, {StageBands, r.bands}, {StageLoads, r.loads}, {StageCodes, r.codes}, {StageAlone, r.alone}, {StageFaults, r.faults}} {
+	}{{StageAll, r.all}, {StageBands, r.bands}, {StageHeaters, r.heaters}, {StageCases, r.cases}, {StageLoads, r.loads}, {StageCodes, r.codes}, {StageAlone, r.alone}, {StageFaults, r.faults}} {
 		if err := stage.do(); err != nil {
 			return nil, err
 		}
@@ -79,11 +90,19 @@ type rater struct {
 }
 
 func (r *rater) start(base *rating.Result) (err error) {
-	d := r.out.Doc
+	d, loads, notes := AtDevices(r.out.Doc)
+	if len(loads) > 0 {
+		r.out.Doc, r.out.AtDevice, base = d, loads, nil
+	}
 	if base == nil {
 		if base, err = r.s.solve(r.ctx, d, r.o); err != nil {
 			return err
 		}
+	}
+	if len(notes) > 0 {
+		c := *base
+		c.Notes = append(slices.Clone(notes), base.Notes...)
+		base = &c
 	}
 	r.out.Base, r.out.MarginK = base, MarginK(d)
 	return known(base, r.o)
@@ -91,9 +110,11 @@ func (r *rater) start(base *rating.Result) (err error) {
 
 func (r *rater) all() (err error) {
 	r.out.All, err = r.s.All(r.ctx, r.out.Doc, r.out.Base, nil, r.o)
-	r.out.State = StateOf(r.out.Base, nil)
+	r.judged(StateOf(r.out.Base, nil))
 	return err
 }
+
+func (r *rater) judged(state string) { r.out.State, r.out.StateHere = state, state }
 
 // bands finds the bands as loaded and, at what may be relied on, those that decide it: there they are found anew, since they do not grow
 // exactly with the rise.
@@ -103,7 +124,7 @@ func (r *rater) bands() (err error) {
 		if r.out.Bands, err = s.Bands(r.ctx, d, r.out.Base, r.o); err != nil {
 			return err
 		}
-		r.out.State = StateOf(r.out.Base, r.out.Bands.Spreads)
+		r.judged(StateOf(r.out.Base, r.out.Bands.Spreads))
 	}
 	f := r.out.All.Rely.Factor
 	if f <= 0 || math.IsInf(f, 1) {
@@ -139,6 +160,45 @@ func (r *rater) bands() (err error) {
 		f = c.Factor
 	}
 	return nil
+}
+
+// heaters finds who heats whom, and who heats what governs.
+func (r *rater) heaters() (err error) {
+	at, ok := r.out.governing()
+	if !ok || r.out.Base.Status != heat.Converged {
+		return nil
+	}
+	id := things(r.out.Base)[at].id
+	if r.out.Heaters, err = r.s.HeatersWith(r.ctx, r.out.Doc, r.out.Base, id, r.o); err != nil {
+		return err
+	}
+	if load, percent, ok := r.out.Heaters.heater(r.out.Doc, id); ok {
+		r.out.Heater, r.out.HeaterShare = load, percent
+	}
+	return nil
+}
+
+// cases solves the load cases. How far all loads may be scaled is then so whichever case runs.
+func (r *rater) cases() (err error) {
+	own := r.out.All
+	c, err := r.s.Cases(r.ctx, r.out.Doc, r.out.Base, &own, r.out.Spreads, r.o)
+	if err != nil || c == nil {
+		return err
+	}
+	r.out.Cases, r.out.All = c, c.Smallest
+	for i := range c.List[1:] {
+		r.out.State = worse(r.out.State, c.List[1+i].State)
+	}
+	return nil
+}
+
+// worse is the more serious of two states.
+func worse(a, b string) string {
+	order := []string{Within, Undecided, Close, Over}
+	if slices.Index(order, b) > slices.Index(order, a) {
+		return b
+	}
+	return a
 }
 
 func (r *rater) loads() (err error) {

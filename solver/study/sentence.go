@@ -59,22 +59,43 @@ func (r *Ratings) governing() (at int, ok bool) {
 func (r *Ratings) Sentence() (answer, amperes string) {
 	if r.Base.Status != heat.Converged {
 		answer, _ = r.Base.Sentence()
-		return answer, r.ampereLine(-1)
+		return answer + r.assumed(), r.ampereLine(-1)
 	}
 	at, ok := r.governing()
 	if !ok {
 		answer, _ = r.Base.Sentence()
-		return answer, ""
+		return answer + r.assumed(), ""
 	}
 	t := things(r.Base)[at]
 	var b strings.Builder
 	shown := quantity.Trimmed(quantity.BesideLimit(t.tempC, t.limit.V), 1)
-	fmt.Fprintf(&b, "%s. %s governs: %s °C", stateWord[r.State], t.id, shown)
+	fmt.Fprintf(&b, "%s. %s governs: %s °C", stateWord[r.StateHere], t.id, shown)
 	if low, high, ok := r.Band(at); ok {
 		fmt.Fprintf(&b, " (%s)", bandText(low, high))
 	}
 	fmt.Fprintf(&b, ", limit %s °C (%s).", quantity.Trimmed(t.limit.V, 1), t.by)
+	if r.Heater != "" {
+		fmt.Fprintf(&b, " %s heats it: %d %% of its rise.", r.Heater, r.HeaterShare)
+	}
+	b.WriteString(r.assumed() + r.worstCase())
 	return b.String(), r.ampereLine(at)
+}
+
+// worstCase is the sentence of the case that is more serious than the loads as written, "" if there is none.
+func (r *Ratings) worstCase() string {
+	if r.Cases == nil || r.State == r.StateHere {
+		return ""
+	}
+	at := -1
+	for i := range r.Cases.List {
+		if a := &r.Cases.List[i]; i > 0 && a.State == r.State && (at < 0 || a.Rely.Factor < r.Cases.List[at].Rely.Factor) {
+			at = i
+		}
+	}
+	if at < 0 {
+		return ""
+	}
+	return " " + stateWord[r.State] + ". " + r.Cases.List[at].Sentence()
 }
 
 // bandText writes a band in whole degrees, outwards.
@@ -104,7 +125,11 @@ func (r *Ratings) ampereLine(at int) string {
 	c := r.Base.Conductors[at]
 	var b strings.Builder
 	now := c.CurrentA.V
-	fmt.Fprintf(&b, "With all loads scaled together %s may carry %s to rely on, %s nominal", c.ID, Amps(now*r.All.Rely.Factor), Amps(now*r.All.Nominal.Factor))
+	whichever := ""
+	if r.Cases != nil {
+		whichever = ", whichever case runs,"
+	}
+	fmt.Fprintf(&b, "With all loads scaled together%s %s may carry %s to rely on, %s nominal", whichever, c.ID, Amps(now*r.All.Rely.Factor), Amps(now*r.All.Nominal.Factor))
 	if at < len(r.Lowest) {
 		r.beside(&b, at)
 	}
