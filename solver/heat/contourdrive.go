@@ -52,8 +52,16 @@ func (m *Model) contourInfluence(ctx context.Context, out [][]float64) Status {
 	if !m.prepare(ctx) {
 		return Cancelled
 	}
+	if m.Radiates() {
+		k, ok := m.contourTangent(ctx)
+		if !ok {
+			return Cancelled
+		}
+		m.spreadContours(k, out)
+		return Converged
+	}
 	g, c := m.top, m.contours
-	pieces, all := len(g.sources), len(g.sources)+len(c.plan.metals)
+	all := len(g.sources) + len(c.plan.metals)
 	k := make([][]float64, all)
 	for s := range k {
 		k[s] = make([]float64, all)
@@ -73,7 +81,14 @@ func (m *Model) contourInfluence(ctx context.Context, out [][]float64) Status {
 			k[i][j], k[j][i] = v, v
 		}
 	}
-	k = m.reduce(k)
+	m.spreadContours(m.reduce(k), out)
+	return Converged
+}
+
+// spreadContours puts a matrix by source, contours' metals last, in the order of the parts.
+func (m *Model) spreadContours(k, out [][]float64) {
+	g, c := m.top, m.contours
+	pieces := len(g.sources)
 	part := func(s int) int {
 		if s < pieces {
 			return g.sources[s].part
@@ -90,7 +105,6 @@ func (m *Model) contourInfluence(ctx context.Context, out [][]float64) Status {
 			out[i][part(t)] = v
 		}
 	}
-	return Converged
 }
 
 // contourColumn is the rise of every source, contours' metals last, for 1 W/m in source s.

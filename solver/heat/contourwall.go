@@ -2,6 +2,7 @@ package heat
 
 import (
 	"math"
+	"slices"
 
 	"packrise/solver/harmonic"
 	"packrise/solver/outline"
@@ -15,7 +16,10 @@ type contourWall struct {
 	plan     *plan
 	facing   []facing
 	sys      *outline.Shaped
+	was      *outline.Shaped // before other films
 	drive    *drive
+	cores    []float64 // of the last solution, by part
+	by       []float64 // W/m by part in it
 	exchange
 }
 
@@ -38,7 +42,7 @@ func (p *Problem) amongPieces() bool {
 			return false
 		}
 	}
-	return p.Filling == Solid
+	return p.Filling == Solid || p.Wall.Shape != Hull && slices.Contains(l.drawn, false)
 }
 
 // layoutContours makes the top level of a section in which not everything is round.
@@ -191,7 +195,7 @@ func (c *contourWall) move(g *region, i int) bool {
 func (c *contourWall) outside() {
 	c.plan = newPlanAmong(c.p)
 	if c.sys != nil {
-		c.sys = c.sys.Outside(c.plan.sides())
+		c.was, c.sys = c.sys, c.sys.Outside(c.plan.sides())
 		c.with = &driven{c.sys, c.drive}
 	}
 }
@@ -208,7 +212,8 @@ type contourBound struct {
 	faces  []float64 // hottest of each contour
 	metals []float64 // temperatures
 	leaves func(contour int) float64
-	out    []float64 // W/m through each stroke of the outside
+	out    []float64       // W/m through each stroke of the outside
+	taken  map[int]float64 // W/m that each contour takes up by radiation
 }
 
 // tell fills in what the contours' unknowns say of them.
@@ -235,12 +240,17 @@ func (c *contourWall) tell(s *bound) {
 }
 
 // temperatures of the metals for unknowns y and the sources that the exchange holds.
-func (c *contourWall) temperatures(y []float64) []float64 {
+func (c *contourWall) temperatures(y []float64) []float64 { return c.metalsOf(y, c.src) }
+
+// metalsAt are the temperatures of the metals after an exchange.
+func (c *contourWall) metalsAt(e *exchange) []float64 { return c.metalsOf(e.y, e.src) }
+
+func (c *contourWall) metalsOf(y []float64, src outline.Sources) []float64 {
 	t := make([]float64, len(c.plan.metals))
 	for k, i := range c.sys.Metals() {
 		t[k] = c.sys.Metal(y, i)
 	}
-	c.sys.Felt(c.src, t)
+	c.sys.Felt(src, t)
 	return t
 }
 
@@ -271,9 +281,26 @@ func (m *Model) readContours(r *Result, s *state) {
 			r.Surfaces[i][0] = r.Core[i]
 		case FixedBore:
 			r.Core[i], r.Absorbed[i] = q.Fixed, -d.leaves(l.first[i])
+			if len(q.Rings) == 0 {
+				r.Absorbed[i] += d.taken[l.first[i]]
+			}
 		default:
 			r.Core[i] = r.Surfaces[i][0]
 		}
+	}
+}
+
+// remember keeps the temperatures of a solution for q by source.
+func (c *contourWall) remember(m *Model, r *Result, q []float64) {
+	if c == nil {
+		return
+	}
+	c.cores, c.by = append([]float64(nil), r.Core...), make([]float64, len(r.Core))
+	for s, v := range q {
+		c.by[m.top.sources[s].part] = v
+	}
+	for k, i := range c.plan.metals {
+		c.by[i] = c.drive.heats[k]
 	}
 }
 

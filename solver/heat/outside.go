@@ -25,7 +25,9 @@ func (m *Model) Outside(w Wall) {
 	case m.top == nil: // a bare part reads the wall each time
 	case m.contours != nil:
 		m.contours.outside()
-		m.dim()
+		if c := m.glow; c != nil && c.top.rad != nil && !c.top.rad.sides.wall.follow(c.top.rad.sides, -1) {
+			m.dim()
+		}
 	case w.Shape == Hull:
 		m.top.border.(*hullWall).outside(&m.p.Wall)
 		if c := m.glow; c != nil && c.top.rad != nil && !c.top.rad.sides.wall.follow(c.top.rad.sides, -1) {

@@ -87,6 +87,9 @@ func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 		c := &g.pieces[i]
 		grain.Discs = append(grain.Discs, gas.Disc{C: c.at, R: c.drawn})
 	}
+	if c, ok := g.border.(*contourWall); ok {
+		grain.Discs = append(grain.Discs, c.bodies()...)
+	}
 	r := &radiant{zero: m.p.ZeroK, press: m.p.Pressure, points: points, stirs: g.filling == Air, nusselt: nusselt{1, true}}
 	if r.press == 0 {
 		r.press = standardPressure
@@ -108,7 +111,7 @@ func (m *Model) newRadiant(g *region, old *radiant) *radiant {
 func (r *radiant) divide(g *region, grain *gas.Grain) {
 	r.discs = append(r.discs, grain.Discs...)
 	border, _ := g.border.(patched)
-	for i := range r.discs {
+	for i := range g.pieces {
 		d := &r.discs[i]
 		if border != nil {
 			d.Cuts, d.Blank = grain.Between(i, border.exposed(i))
@@ -123,6 +126,7 @@ func (r *radiant) divide(g *region, grain *gas.Grain) {
 		r.wall = newRim(r.add(g.wall.R, cuts), cuts, nil, maxRing)
 	} else {
 		r.sides = border.divide(grain)
+		copy(r.discs[len(g.pieces):], r.sides.bodies)
 		r.out = r.sides.outline()
 		r.ends = []float64{0}
 		for k, l := range r.sides.length {
@@ -150,6 +154,9 @@ func (m *Model) emissivities(g *region, r *radiant) []float64 {
 		for range r.rims[i].n {
 			e = append(e, m.p.Parts[g.pieces[i].part].Emissivity)
 		}
+	}
+	if r.sides != nil && r.sides.eps != nil {
+		return append(e, r.sides.eps...)
 	}
 	wall := m.p.Wall.Emissivity
 	if g.part >= 0 {

@@ -13,6 +13,11 @@ type sides struct {
 	length []float64    // m
 	patch  patches
 	taken  []float64 // W/m that each patch takes up
+
+	// Of contours: parts that are not round, whose patches come first, then the wall; and the emissivity of each patch.
+	bodies []gas.Disc
+	walls  []gas.Segment
+	eps    []float64
 }
 
 // patched is a border whose inside can be divided.
@@ -34,6 +39,9 @@ type patches interface {
 }
 
 func (s *sides) outline() gas.Outline {
+	if s.walls != nil {
+		return gas.Outline{Segments: s.walls}
+	}
 	o := gas.Outline{Segments: make([]gas.Segment, len(s.length))}
 	for k := range o.Segments {
 		o.Segments[k] = gas.Segment{A: s.a[k], B: s.b[k]}

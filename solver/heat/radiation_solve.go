@@ -165,6 +165,7 @@ func (m *Model) solveCoupled(ctx context.Context, q []float64) *Result {
 	s := c.top.state(c.z, c.q)
 	r := m.result(s)
 	m.estimate(r, s, c.q)
+	m.contours.remember(m, r, q)
 	r.Steps, r.Status, r.Radiates, r.Frozen = steps, status, true, frozen
 	r.Unknowns = len(c.z)
 	if rad := c.top.rad; rad != nil {

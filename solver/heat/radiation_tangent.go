@@ -28,6 +28,9 @@ func (m *Model) Tangent(ctx context.Context) (k [][]float64, ground []float64, s
 	if m.form != nil {
 		return k, m.form.tangentAt(k), Converged
 	}
+	if m.contours != nil {
+		return k, m.contours.tangentAt(k), Converged
+	}
 	ground = make([]float64, len(m.p.Parts))
 	c := m.glow
 	for i, s := range m.top.sources {
