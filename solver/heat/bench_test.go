@@ -56,6 +56,16 @@ func BenchmarkInfluence(b *testing.B) {
 	}
 }
 
+// BenchmarkRectInfluence is a wireway whose air only conducts.
+func BenchmarkRectInfluence(b *testing.B) {
+	p := load(b, "r03_wireway24_steel").Problem
+	p.Filling = heat.Solid
+	b.ReportAllocs()
+	for b.Loop() {
+		heat.New(p, one(heat.Standard)).Influence(context.Background())
+	}
+}
+
 func BenchmarkField(b *testing.B) {
 	for _, name := range []string{"t37_settled_air", "t200_settled_air", "c09_rect7_floor_air"} {
 		l := load(b, name)

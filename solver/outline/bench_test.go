@@ -88,3 +88,25 @@ func BenchmarkCrowd(b *testing.B) {
 		}
 	})
 }
+
+// BenchmarkMany is the product of BenchmarkCrowd for Lanes right-hand sides at once.
+func BenchmarkMany(b *testing.B) {
+	r, rods := crowd()
+	orders(r, rods, 1)
+	var discs []Disc
+	for _, p := range rods {
+		discs = append(discs, Disc{C: p.c, A: p.radius, M: p.order})
+	}
+	s := New(r, discs, 1)
+	l := NewLot(discs, s.Len())
+	for _, v := range l.Src {
+		for i := range v {
+			v[i] = 1
+		}
+	}
+	b.ReportAllocs()
+	for b.Loop() {
+		s.RespondMany(l)
+		s.IncomingMany(l)
+	}
+}
