@@ -26,7 +26,7 @@ func edgeOf(s Scene, reach float64) (e flowEdge) {
 	if len(points) == 0 || !(k > 0) {
 		return e
 	}
-	e.pieces = piecesOf(cut(points))
+	e.pieces = piecesOf(points)
 	for i := range e.pieces {
 		n := &e.pieces[i].normal
 		n.X, n.Y = -n.X, -n.Y
@@ -43,23 +43,20 @@ func outerFace(s Scene, k []float64) (points []section.Point, inside float64) {
 	if len(k) == 0 {
 		return nil, 0
 	}
-	o := outlineOf(s.Shapes)
-	switch {
-	case o.rect != nil:
-		h, b, layer := holderOf(s.Shapes), *o.rect, len(k)-1
+	if o := outlineOf(s.Shapes); o.rect != nil {
+		h := holderOf(s.Shapes)
 		for i, r := range h.Rings {
 			if r.Metal {
-				b, layer = b.grown(r.R0-h.OuterR()), min(i, layer)
-				break
+				return cut(boxLoop(o.rect.grown(r.R0 - h.OuterR()))), k[min(i, len(k)-1)]
 			}
 		}
-		return []section.Point{{X: b.x0, Y: b.y0}, {X: b.x1, Y: b.y0}, {X: b.x1, Y: b.y1}, {X: b.x0, Y: b.y1}}, k[layer]
-	case o.poly != nil:
-		return o.poly, k[len(k)-1]
-	case o.round != nil:
-		return roundLoop(section.Point{X: o.round.x, Y: o.round.y}, o.round.r), k[len(k)-1]
 	}
-	return nil, 0
+	return surfaceLoop(s), k[len(k)-1]
+}
+
+// boxLoop is a box as a polygon, counterclockwise.
+func boxLoop(b box) []section.Point {
+	return []section.Point{{X: b.x0, Y: b.y0}, {X: b.x1, Y: b.y0}, {X: b.x1, Y: b.y1}, {X: b.x0, Y: b.y1}}
 }
 
 // weigh sets the flow of pieces by the fall of the temperature along their normals.

@@ -66,3 +66,16 @@ func TestRoundNumbers(t *testing.T) {
 		t.Error(got)
 	}
 }
+
+// A side that is held below the ambient is on the scale.
+func TestScaleReachesToACoolSide(t *testing.T) {
+	s := Scene{Field: &slab{60, 40, 12, 60}, AmbientC: 30, Shapes: []section.Shape{{Kind: section.Wireway, Width: 60, Height: 40}}}
+	s.Readings = []section.Reading{{ID: "outside", Kind: "surface", TempC: 60}}
+	if sc := ScaleOf(s); sc.Low > 12 || sc.Low < 5 || sc.High < 60 {
+		t.Errorf("%+v for 12 to 60 °C", sc)
+	}
+	s.Field = nil
+	if sc := ScaleOf(s); sc.Low < 25 {
+		t.Errorf("%+v for 30 to 60 °C", sc)
+	}
+}
