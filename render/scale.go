@@ -11,6 +11,9 @@ func (sc Scale) at(t float64) float64 { return (t - sc.Low) / (sc.High - sc.Low)
 // leastSpanK is the shortest automatic scale, so that a section of tenths of a kelvin does not look like a fire.
 const leastSpanK = 10
 
+// fieldSlackK is how far a side's own temperature may be missed without the scale reaching for the next round number.
+const fieldSlackK = 0.02
+
 // ScaleOf returns the automatic scale of a scene: ambient, or what the outside has below it, to the hottest reading or nearby limit, at
 // round numbers.
 func ScaleOf(s Scene) Scale {
@@ -23,7 +26,7 @@ func ScaleOf(s Scene) Scale {
 	if !finite(low) || !finite(high) {
 		return Scale{0, 100}
 	}
-	low = min(low, lastColdest.of(s))
+	low = min(low, lastColdest.of(s)+fieldSlackK)
 	top := high
 	for _, r := range s.Readings {
 		near := max(10, 0.35*(high-low))
