@@ -10,7 +10,7 @@ import (
 	"packrise/solver/section"
 )
 
-func read(t *testing.T, text string) *section.Document {
+func read(t testing.TB, text string) *section.Document {
 	t.Helper()
 	d, problems := section.Read([]byte(text))
 	if len(problems) > 0 {
@@ -19,7 +19,7 @@ func read(t *testing.T, text string) *section.Document {
 	return d
 }
 
-func demo(t *testing.T, name string) *section.Document {
+func demo(t testing.TB, name string) *section.Document {
 	t.Helper()
 	raw, err := assets.Designs.ReadFile("designs/" + name + ".yaml")
 	if err != nil {
