@@ -142,7 +142,7 @@ func points(d gas.Disc, per int) []complex128 {
 // Bars, flats and sectors in any position see of each other what crossed strings say.
 func TestCrossedStrings(t *testing.T) {
 	r := rand.New(rand.NewPCG(2, 11))
-	for k := range 8 {
+	for k := range 6 {
 		a := bar(1+3*r.Float64(), 1+r.Float64(), 0.1+0.3*r.Float64(), 6*r.Float64(), 6)
 		b := bar(1+4*r.Float64(), 1, 0.5, 6*r.Float64(), 6)
 		if k%2 == 1 { // a sector is a triangle with one bent side
@@ -218,6 +218,9 @@ func TestCrowd(t *testing.T) {
 
 // Rays from many points of every patch find the same.
 func TestCrowdRays(t *testing.T) {
+	if testing.Short() {
+		t.Skip("plain rays take long")
+	}
 	r := rand.New(rand.NewPCG(8, 4))
 	discs, out := crowd(r)
 	e := gas.NewEnclosure(discs, out, 4, 2, nil)
