@@ -15,13 +15,22 @@ func (s *HullSystem) loadMany(l *Lot) {
 	}
 }
 
+// together is how many densities are worked on for all harmonics while they are at hand.
+const together = 96
+
+// stretchOf are the next of a column from lo on.
+func stretchOf(col []float64, lo int) []float64 { return col[lo:min(lo+together, len(col))] }
+
 // outMany is out for many sources v.
 func (d *hullDisc) outMany(y []float64, cols [][]float64, v, tmp []float64) {
 	tmp = tmp[:Lanes*len(d.order)]
 	clear(tmp)
-	out1(cols[0], v[:Lanes], tmp)
-	for c := 1; c+1 < len(cols); c += 2 {
-		out2(cols[c], cols[c+1], v[Lanes*c:], tmp)
+	for lo := 0; lo < len(cols[0]); lo += together {
+		part := tmp[Lanes*lo:]
+		out1(stretchOf(cols[0], lo), v[:Lanes], part)
+		for c := 1; c+1 < len(cols) && len(cols[c]) > lo; c += 2 {
+			out2(stretchOf(cols[c], lo), stretchOf(cols[c+1], lo), v[Lanes*c:], part)
+		}
 	}
 	for k, i := range d.order {
 		to, from := (*lanes)(y[Lanes*i:]), (*lanes)(tmp[Lanes*k:])
@@ -39,9 +48,12 @@ func (s *HullSystem) IncomingMany(l *Lot) {
 		for k, i := range d.order {
 			*(*lanes)(l.tmp[Lanes*k:]) = lanes(l.Y[Lanes*i:])
 		}
-		in1(d.receive[0], l.tmp, v)
-		for c := 1; c+1 < len(d.receive); c += 2 {
-			in2(d.receive[c], d.receive[c+1], l.tmp, v[Lanes*c:])
+		for lo := 0; lo < len(d.receive[0]); lo += together {
+			part := l.tmp[Lanes*lo:]
+			in1(stretchOf(d.receive[0], lo), part, v)
+			for c := 1; c+1 < len(d.receive) && len(d.receive[c]) > lo; c += 2 {
+				in2(stretchOf(d.receive[c], lo), stretchOf(d.receive[c+1], lo), part, v[Lanes*c:])
+			}
 		}
 		add(v[:Lanes], l.Y[Lanes*s.n:][:Lanes])
 	}

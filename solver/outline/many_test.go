@@ -26,9 +26,14 @@ type patchesOf interface {
 // Many sources at once bring what each brings alone.
 func TestMany(t *testing.T) {
 	discs := four()
-	hull := NewHull(heap(discs, still), discs, mirrorsOf(discs, -0.7), 1)
-	strings := hull.Patches(func(complex128) float64 { return 1e-3 })
-	checkMany(t, "hull", discs, hull, strings, len(strings.A))
+	for _, fineness := range []float64{1, 4} {
+		hull := NewHull(heap(discs, still), discs, mirrorsOf(discs, -0.7), fineness)
+		strings := hull.Patches(func(complex128) float64 { return 1e-3 })
+		checkMany(t, "hull", discs, hull, strings, len(strings.A))
+		if fineness > 1 && hull.n <= together {
+			t.Errorf("no more than %d densities", hull.n)
+		}
+	}
 	within := append([]Disc(nil), discs...)
 	for i := range within {
 		within[i].C += 0.02 + 0.01i
