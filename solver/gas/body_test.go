@@ -143,11 +143,11 @@ func points(d gas.Disc, per int) []complex128 {
 func TestCrossedStrings(t *testing.T) {
 	r := rand.New(rand.NewPCG(2, 11))
 	for k := range 6 {
-		a := bar(1+3*r.Float64(), 1+r.Float64(), 0.1+0.3*r.Float64(), 6*r.Float64(), 6)
-		b := bar(1+4*r.Float64(), 1, 0.5, 6*r.Float64(), 6)
+		a := bar(1+3*r.Float64(), 1+r.Float64(), 0.1+0.3*r.Float64(), 6*r.Float64(), 4)
+		b := bar(1+4*r.Float64(), 1, 0.5, 6*r.Float64(), 4)
 		if k%2 == 1 { // a sector is a triangle with one bent side
 			s := cmplx.Rect(1, 6*r.Float64())
-			b = gas.Disc{R: 3, Rim: rim([]complex128{-0.6 * s, complex(1.4, -1.2) * s, complex(1.9, 0) * s, complex(1.4, 1.2) * s}, 0.2, 6)}
+			b = gas.Disc{R: 3, Rim: rim([]complex128{-0.6 * s, complex(1.4, -1.2) * s, complex(1.9, 0) * s, complex(1.4, 1.2) * s}, 0.2, 4)}
 		}
 		b.C = cmplx.Rect(a.R+b.R+0.05+2*r.Float64(), 6*r.Float64())
 		e := gas.NewEnclosure([]gas.Disc{a, b}, ring(20, 72), 4, 2, nil)
