@@ -76,6 +76,17 @@ func TestApartOrder(t *testing.T) {
 		}
 		last = two
 	}
+	// drawn together or into line, a body only gets hotter, but for 0.05 K where the row that counts changes, and never by a jump
+	before, aside := 0.0, 0.0
+	for k := 120; k > 0; k-- {
+		gap := 0.05 * float64(k)
+		three := hot(stillAir, [2]float64{0, 0}, [2]float64{6 + gap, 0}, [2]float64{3 + gap/2, (6 + gap) * math.Sqrt(0.75)})
+		line := hot(stillAir, [2]float64{0, 0}, [2]float64{1.5 * gap, 9})
+		if before > 0 && (three < before-0.05 || three > before+0.6 || line < aside-1e-3 || line > aside+0.6) {
+			t.Errorf("gap %g mm: trefoil %g after %g, %g mm out of line %g after %g °C", gap, three, before, 1.5*gap, line, aside)
+		}
+		before, aside = three, line
+	}
 	r := solve(t, parse(t, wires(stillAir, "kind: apart", 50, [2]float64{-20, 3}, [2]float64{0, 0}, [2]float64{7, 1}, [2]float64{-7, 1}, [2]float64{20, 3})), rating.Options{})
 	for _, p := range [][2]int{{0, 4}, {2, 3}} {
 		if d := r.Conductors[p[0]].TempC - r.Conductors[p[1]].TempC; math.Abs(d) > 2e-3 {

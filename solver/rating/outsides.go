@@ -53,36 +53,45 @@ const (
 	evenWithin  = 1.25
 	askewGap    = 0.5 // diameters within which a body askew counts as near
 	tightGap    = 0.1 // diameters below which no air passes
+	inLine      = 0.2 // how far out of line still counts as in line
 )
 
 // diameterM is that of a cylinder with the body's circumference.
 func (b *body) diameterM() float64 { return b.around / math.Pi }
 
-// way tells how body j lies from body i: beside it, above or below it, or askew, on the right or above, and the free gap between them, m.
-func (s *scene) way(i, j int) (a film.Arrangement, askew, after bool, gap float64) {
-	p, q := &s.bodies[i], &s.bodies[j]
-	gap = math.Inf(1)
+// gapBetween is the free distance between two bodies, m.
+func (s *scene) gapBetween(p, q *body) float64 {
+	gap := math.Inf(1)
 	for _, m := range p.top {
 		for _, n := range q.top {
 			gap = math.Min(gap, s.gapOf(m, n))
 		}
 	}
+	return gap
+}
+
+// way tells how body j lies from body i: beside it, or above or below it; on the right or above; and how far out of line, from 0 to 1 where the
+// narrower of the two has nothing of the other straight beside, above or below it.
+func (s *scene) way(i, j int) (a film.Arrangement, after bool, off float64) {
+	p, q := &s.bodies[i], &s.bodies[j]
 	dx, dy := (q.box[0]+q.box[2]-p.box[0]-p.box[2])/2, (q.box[1]+q.box[3]-p.box[1]-p.box[3])/2
-	across := math.Min(p.box[2], q.box[2]) - math.Max(p.box[0], q.box[0]) // what they have in common
-	up := math.Min(p.box[3], q.box[3]) - math.Max(p.box[1], q.box[1])
-	if math.Abs(dx) >= math.Abs(dy) {
-		return film.SideBySide, up <= 0, dx > 0, gap
+	line := func(lo, hi int) float64 {
+		common := math.Min(p.box[hi], q.box[hi]) - math.Max(p.box[lo], q.box[lo])
+		return 1 - math.Max(0, common/math.Min(p.box[hi]-p.box[lo], q.box[hi]-q.box[lo]))
 	}
-	return film.OneAboveAnother, across <= 0, dy > 0, gap
+	if math.Abs(dx) >= math.Abs(dy) {
+		return film.SideBySide, dx > 0, line(1, 3)
+	}
+	return film.OneAboveAnother, dy > 0, line(0, 2)
 }
 
 // neighbour is another body within the reach of a row.
 type neighbour struct {
-	body  int
-	way   film.Arrangement
-	askew bool
-	side  int     // 0 or 1: to the left or below, to the right or above
-	gap   float64 // over the mean diameter
+	body int
+	way  film.Arrangement
+	side int     // 0 or 1: to the left or below, to the right or above
+	gap  float64 // over the mean diameter
+	off  float64 // out of line, 0 to 1
 }
 
 // rows finds for each body the published arrangement that stands for its neighbours.
@@ -99,7 +108,8 @@ func (s *scene) rows() []standing {
 			if math.Hypot(s.bodies[i].origin.X-s.bodies[j].origin.X, s.bodies[i].origin.Y-s.bodies[j].origin.Y)*mm > 40*d && n > 40 {
 				continue
 			}
-			way, askew, after, gap := s.way(i, j)
+			way, after, off := s.way(i, j)
+			gap := s.gapBetween(&s.bodies[i], &s.bodies[j])
 			for k, p := range [][2]int{{i, j}, {j, i}} {
 				if st := &out[p[0]]; gap < st.nearGap {
 					st.near, st.nearGap = p[1], gap
@@ -108,7 +118,7 @@ func (s *scene) rows() []standing {
 				if after {
 					side = 1 - k
 				}
-				near[p[0]] = append(near[p[0]], neighbour{p[1], way, askew, side, gap / d})
+				near[p[0]] = append(near[p[0]], neighbour{p[1], way, side, gap / d, off})
 			}
 		}
 	}
@@ -118,36 +128,37 @@ func (s *scene) rows() []standing {
 	return out
 }
 
-// stand chooses the row of body i: of those beside it and of those above and below it the one that leaves it less of its convection.
+// stand chooses the row of body i: of the trefoil that it is in, those beside it and those above and below it the one that leaves it least of its
+// convection.
 func (s *scene) stand(st *standing, i int, near [][]neighbour) {
 	d := s.bodies[i].diameterM()
 	st.far, st.beyond = true, d > film.GroupLimitM
-	if of, gap, ok := trefoil(i, near); ok {
-		st.row, st.of, st.far = film.Row{N: 3, Arrangement: film.Trefoil, Gap: gap}, of, false
-		s.judge(st)
-		return
-	}
-	least := 1.0
-	sheltered := 0
-	for _, a := range []film.Arrangement{film.SideBySide, film.OneAboveAnother} {
-		of, gaps := chain(i, a, near)
-		if len(of) < 2 {
-			continue
-		}
-		row := film.Row{N: min(len(of), 3), Arrangement: a, Gap: gaps[0]}
-		if gaps[0] >= row.Reach() {
-			continue
+	least := math.Inf(1)
+	rows := 0
+	try := func(row film.Row, of []int, uneven bool) {
+		if row.Gap >= row.Reach() {
+			return
 		}
 		st.far = false
-		sheltered++
-		if c := row.Sheltered(d, row.Open(), 40); st.row.N == 0 || c < least {
-			least, st.row, st.of = c, row, of
-			st.uneven = len(gaps) > 1 && gaps[1] > gaps[0]*evenWithin && gaps[1] < row.Reach()
+		rows++
+		if c := row.Sheltered(d, row.Open(), 40); c < least {
+			least, st.row, st.of, st.uneven = c, row, of, uneven
 		}
 	}
-	st.crossed = sheltered > 1
+	of, gap, triangle := trefoil(i, near)
+	if triangle {
+		try(film.Row{N: 3, Arrangement: film.Trefoil, Gap: gap}, of, false)
+	}
+	for _, a := range []film.Arrangement{film.SideBySide, film.OneAboveAnother} {
+		of, gaps := chain(i, a, near)
+		if len(of) > 1 && len(gaps) > 0 {
+			n := min(len(of), 3)
+			try(film.Row{N: n, Arrangement: a, Gap: gaps[0]}, of, len(gaps) > 1 && gaps[1] > gaps[0]*evenWithin)
+		}
+	}
+	st.crossed = rows > 1 && !triangle
 	for _, o := range near[i] {
-		st.crossed = st.crossed || o.askew && o.gap < askewGap
+		st.crossed = st.crossed || !triangle && o.off > inLine && o.gap < askewGap
 	}
 	s.judge(st)
 }
@@ -184,28 +195,37 @@ func trefoil(i int, near [][]neighbour) (of []int, gap float64, ok bool) {
 	return of, (gaps[0] + gaps[1] + gaps[2]) / 3, hi < askewGap && hi-lo < 0.25
 }
 
-// chain lists the bodies that stand in one row with body i, itself first, and its own gaps to the nearest on each side, the smaller first.
+// chain lists the bodies that stand in one row with body i, itself first, and its own gaps to the nearest on each side, the smaller first. A
+// neighbour out of line counts as farther away, up to the gap from which it does not count.
 func chain(i int, a film.Arrangement, near [][]neighbour) (of []int, gaps []float64) {
 	reach := film.Row{N: 3, Arrangement: a}.Reach()
 	of = []int{i}
 	in := map[int]bool{i: true}
-	sides := [2]float64{math.Inf(1), math.Inf(1)}
+	inRow := func(body int) bool { // with all others of the row
+		for _, o := range near[body] {
+			if in[o.body] && o.way != a {
+				return false
+			}
+		}
+		return true
+	}
 	for k := 0; k < len(of); k++ {
 		for _, o := range near[of[k]] {
-			if o.way != a || o.askew || o.gap >= reach {
-				continue
-			}
-			if k == 0 {
-				sides[o.side] = math.Min(sides[o.side], o.gap)
-			}
-			if !in[o.body] {
+			if o.way == a && o.off < 1 && o.gap < reach && !in[o.body] && inRow(o.body) {
 				in[o.body] = true
 				of = append(of, o.body)
 			}
 		}
 	}
+	reach = film.Row{N: min(len(of), 3), Arrangement: a}.Reach()
+	sides := [2]float64{math.Inf(1), math.Inf(1)}
+	for _, o := range near[i] {
+		if in[o.body] && o.gap < reach {
+			sides[o.side] = math.Min(sides[o.side], o.gap+o.off*(reach-o.gap))
+		}
+	}
 	for _, g := range [2]float64{math.Min(sides[0], sides[1]), math.Max(sides[0], sides[1])} {
-		if !math.IsInf(g, 1) {
+		if g < reach {
 			gaps = append(gaps, g)
 		}
 	}
