@@ -19,6 +19,7 @@ func Ladder(c Canvas, s Scene, sc Scale, st Style) []Rung {
 	l.axis()
 	steps := l.steps()
 	l.place(steps)
+	l.bands(steps)
 	return l.draw(steps)
 }
 
@@ -141,7 +142,7 @@ func (l *ladder) drawStep(s step) {
 	if s.selected || s.pointed {
 		l.highlight(s)
 	}
-	if s.high-s.low > 0.5 { // a folded group: how far it reaches
+	if s.high-s.low > 0.5 && !s.banded { // a folded group: how far it reaches
 		y0, y1 := l.y(s.high), l.y(s.low)
 		rectangle(l.c, l.bar1+2*l.k, y0, 3.5*l.k, max(y1-y0, l.k))
 		l.c.Fill(alpha(l.pal.Quiet, 0.6))

@@ -16,9 +16,10 @@ type Field interface {
 
 // Scene is everything that a picture shows.
 type Scene struct {
-	Shapes   []section.Shape   // the holder first
-	Readings []section.Reading // empty: not solved
-	Field    Field             // nil: outlines only
+	Shapes   []section.Shape       // the holder first
+	Readings []section.Reading     // empty: not solved
+	Field    Field                 // nil: outlines only
+	Bands    map[string][2]float64 // P5 and P95 in °C by a reading's id; nil: not known
 	AmbientC float64
 	Title    string
 	Answer   string   // the sentence

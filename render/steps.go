@@ -8,6 +8,8 @@ import (
 	"sort"
 	"strconv"
 	"strings"
+
+	"packrise/solver/section"
 )
 
 // mostGroups keeps the ladder of a large section calm.
@@ -17,9 +19,12 @@ const mostGroups = 10
 type step struct {
 	ids       []string
 	name      string
-	short     string  // in its place where there is no room for it
-	temp      float64 // where it stands
-	low, high float64 // how far a folded group reaches
+	short     string     // in its place where there is no room for it
+	temp      float64    // where it stands
+	low, high float64    // how far a folded group reaches
+	band      [2]float64 // P5 and P95 of all in it
+	banded    bool       // the band is known
+	close     bool       // within its limit, which the band reaches over
 	limit     bool
 	bold      bool
 	color     color.NRGBA
@@ -28,13 +33,40 @@ type step struct {
 	label     float64 // height of the label in pixels
 }
 
-// number is what stands behind a step's name: its temperature, or the group's lowest and highest.
+// number is what stands behind a step's name: its temperature, or the group's lowest and highest, and that it is close.
 func (s step) number() string {
 	a, b := wholeC(s.low), wholeC(s.high)
-	if a == b {
-		return a
+	if a != b {
+		a += "–" + b
 	}
-	return a + "–" + b
+	if s.close {
+		a += " " + strings.ToLower(Near.Word())
+	}
+	return a
+}
+
+// mark gives a step of one reading its band, and the colour of what is over or close.
+func (l *ladder) mark(s *step, r section.Reading) {
+	s.band, s.banded = l.s.Bands[r.ID]
+	s.close = s.banded && r.LimitC.OK && !r.Over() && s.band[1] > r.LimitC.V
+	switch {
+	case r.Over():
+		s.color = l.pal.Over
+	case s.close:
+		s.color = l.pal.Close
+	}
+}
+
+// join takes another step into a folded one; the temperatures are the caller's.
+func (s *step) join(o step) {
+	s.ids = append(s.ids, o.ids...)
+	s.close = s.close || o.close
+	switch {
+	case o.banded && s.banded:
+		s.band = [2]float64{min(s.band[0], o.band[0]), max(s.band[1], o.band[1])}
+	case o.banded:
+		s.band, s.banded = o.band, true
+	}
 }
 
 // steps lists the ladder's labels, hottest first: parts of their own, folded groups, the holder's layers, ambient, limits.
@@ -78,9 +110,7 @@ func (l *ladder) partSteps() (named, over, others []step) {
 			ids: []string{id}, name: readingName(r, l.s), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs,
 			selected: slices.Contains(l.s.Selected, id), pointed: id == l.s.Pointed,
 		}
-		if r.Over() {
-			s.color = l.pal.Over
-		}
+		l.mark(&s, r)
 		if r.Governs || r.Hottest || s.pointed || s.selected && len(l.s.Selected) <= 3 {
 			named = append(named, s)
 		} else if r.Over() {
@@ -101,7 +131,10 @@ func (l *ladder) fold(parts []step, rows int, word string) []step {
 		for _, s := range parts {
 			if n := len(out); n > 0 && out[n-1].high-s.low <= tol {
 				g := &out[n-1]
-				g.ids = append(g.ids, s.ids...)
+				if s.close && !g.close {
+					g.color = s.color
+				}
+				g.join(s)
 				g.low = s.low
 				g.selected = g.selected || s.selected
 				continue
@@ -146,19 +179,19 @@ func (l *ladder) wallSteps() []step {
 			continue
 		}
 		s := step{ids: []string{r.ID}, name: readingName(r, l.s), temp: r.TempC, low: r.TempC, high: r.TempC, color: l.pal.Ink, bold: r.Governs}
-		if r.Over() {
-			s.color = l.pal.Over
-		}
+		l.mark(&s, r)
 		if r.Kind == "surface" && r.ID != "outside" && !r.Over() && !r.Governs && len(out) > 0 && out[len(out)-1].color == s.color && !out[len(out)-1].bold {
 			g := &out[len(out)-1] // the outsides of bodies apart share one label
-			g.ids, g.name = append(g.ids, r.ID), "outsides"
+			g.join(s)
+			g.name = "outsides"
 			g.low, g.high = min(g.low, s.low), max(g.high, s.high)
 			g.temp = (g.low + g.high) / 2
 			continue
 		}
 		if n := len(out); n > 0 && math.Abs(out[n-1].low-s.temp) < 0.5 && out[n-1].color == s.color && l.hasRoom(joinNames(out[n-1].name, s.name)) {
 			g := &out[n-1]
-			g.ids, g.name = append(g.ids, r.ID), joinNames(g.name, s.name)
+			g.join(s)
+			g.name = joinNames(g.name, s.name)
 			g.low, g.high = min(g.low, s.low), max(g.high, s.high)
 			g.temp, g.bold = (g.low+g.high)/2, g.bold || s.bold
 			continue
