@@ -101,6 +101,7 @@ func (s *System) leanOf(j int) []float64 {
 // leanAll works out what all discs' monopoles make the mix feel.
 func (s *System) leanAll() {
 	if s.circle == nil || s.circle.Mix == nil {
+		s.lean = nil
 		return
 	}
 	lean := make([][]float64, len(s.discs)) // forks keep theirs

@@ -2,6 +2,7 @@ package harmonic
 
 import (
 	"math"
+	"slices"
 	"sync"
 	"sync/atomic"
 )
@@ -146,7 +147,10 @@ func (s *System) Put(i int, d Disc) {
 	for j := i + 1; j < len(s.discs); j++ {
 		s.couple(&s.work, i, j)
 	}
-	s.leanAll()
+	if s.lean != nil {
+		s.lean = slices.Clone(s.lean) // forks keep theirs
+		s.lean[i] = s.leanOf(i)
+	}
 }
 
 // Entries returns the number of stored reals.

@@ -82,8 +82,8 @@ func outermost(s *harmonic.Stack) float64 {
 // How many terms the source gets: a few, and so many for each length over which the outside's temperature changes.
 const (
 	fewTerms  = 10
-	termsEach = 4.0
-	mostTerms = 90
+	termsEach = 3.0
+	mostTerms = 80
 )
 
 // modes is the number of terms of the source: temperatures outside change over the thickness of the wall.
@@ -123,9 +123,14 @@ func (t *rest) couple(stack *harmonic.Stack, k float64) {
 	if stack.Inner.Kind == harmonic.Held {
 		top = 0 // a metal's own rim: nothing but its heat comes out
 	}
+	f := 1.0
 	for n := 1; n <= top; n++ {
+		if n > 32 && f < faintPath {
+			top = n - 1
+			break
+		}
 		// Reciprocity: what comes out to the outside of A_n is what goes in of a source, times 2nk/r.
-		f := stack.Port(n).TauIn * t.enters(n) * 2 * k * math.Sqrt(float64(n)) / t.r
+		f = stack.Port(n).TauIn * t.enters(n) * 2 * k * math.Sqrt(float64(n)) / t.r
 		s, c := math.Sincos(float64(n) * t.At)
 		for j := range rows {
 			e := f * t.basis.at(j, n)
@@ -137,7 +142,10 @@ func (t *rest) couple(stack *harmonic.Stack, k float64) {
 		}
 	}
 	forward(t.root, rows)
-	f := math.Sqrt(t.unit)
+	for j := range rows {
+		rows[j] = rows[j][:2*top]
+	}
+	f = math.Sqrt(t.unit)
 	one := [][]float64{}
 	for j := range rows {
 		scale(rows[j], f)
@@ -149,11 +157,20 @@ func (t *rest) couple(stack *harmonic.Stack, k float64) {
 	if t.Held {
 		t.mix.Sign = -1
 	}
-	for top > 0 && t.mix.Weight(top) < 1e-12 {
+	for top > 0 && t.mix.Weight(top) < faintMix*faintMix {
 		top--
 	}
 	t.mix = t.mix.Cut(top)
+	for n := len(w0); n > 8 && dot(t.mix.W[n-1], t.mix.W[n-1])+w0[n-1]*w0[n-1] < faintMix*faintMix; n-- {
+		t.mix.W, t.mix.W0 = t.mix.W[:n-1], t.mix.W0[:n-1]
+	}
 }
+
+// What counts for nothing of a harmonic's way to the outside, as a share, and of what the mix has of it.
+const (
+	faintPath = 1e-9
+	faintMix  = 2e-6
+)
 
 // forward solves L y = b for the rows of b.
 func forward(l, b [][]float64) {
@@ -187,7 +204,7 @@ func (t *rest) answer(a []complex128, q float64) *arcSource {
 		}
 		c[j] *= m.Sign / math.Sqrt(t.unit)
 	}
-	for i := len(c) - 1; i >= 0; i-- { // Lᵀ
+	for i := len(c) - 1; i >= 0; i-- { // Lᵀ; terms that the mix has no more are nought
 		c[i] /= t.root[i][i]
 		for j := range i {
 			c[j] -= t.root[i][j] * c[i]
@@ -209,8 +226,16 @@ func (t *rest) answer(a []complex128, q float64) *arcSource {
 		f := t.enters(n+1) / math.Pi
 		s.wave[n] = complex(f*(even*cos-odd*sin), -f*(even*sin+odd*cos))
 	}
+	for n := len(s.wave); n > 64 && size(s.wave[n-1]) < faintWave; n-- {
+		s.wave = s.wave[:n-1]
+	}
 	return s
 }
+
+// faintWave ends the waves of a source, K.
+const faintWave = 2e-5
+
+func size(z complex128) float64 { return math.Sqrt(square(z)) }
 
 // at is wave n + 1.
 func (s *arcSource) at(n int) complex128 {

@@ -92,21 +92,22 @@ func (b *arcBasis) logarithm(a [][]float64, f float64) {
 	for j := 1; j < b.modes; j++ {
 		a[j][j] += f * math.Pi * math.Pi / (2 * float64(j))
 	}
-	q := max(48, 2*b.modes)
+	q := 48
 	if left := 1 - b.half/math.Pi; left < 0.15 { // near the other end of the arc
 		q = max(q, int(60/math.Sqrt(left)))
 	}
+	m := min(b.modes, q/2) // of what is so smooth, higher terms see nothing
 	x := make([]float64, q)
-	poly := make([]float64, q*b.modes)
+	poly := make([]float64, q*m)
 	for i := range x {
 		angle := math.Pi * (float64(i) + 0.5) / float64(q)
 		x[i] = math.Cos(angle)
-		for j := range b.modes {
-			poly[i*b.modes+j] = math.Cos(float64(j) * angle)
+		for j := range m {
+			poly[i*m+j] = math.Cos(float64(j) * angle)
 		}
 	}
 	weight := f * (math.Pi / float64(q)) * (math.Pi / float64(q))
-	v := make([]float64, b.modes)
+	v := make([]float64, m)
 	for i := range x {
 		clear(v)
 		for k := range x {
@@ -114,10 +115,10 @@ func (b *arcBasis) logarithm(a [][]float64, f float64) {
 			if u == 0 {
 				continue
 			}
-			axpy(v, -weight*math.Log(math.Abs(math.Sin(u)/u)), poly[k*b.modes:][:b.modes])
+			axpy(v, -weight*math.Log(math.Abs(math.Sin(u)/u)), poly[k*m:][:m])
 		}
-		for j := range a {
-			p := poly[i*b.modes+j]
+		for j := range m {
+			p := poly[i*m+j]
 			for k := j & 1; k <= j; k += 2 {
 				a[j][k] += p * v[k]
 			}

@@ -116,7 +116,10 @@ func (s *state) wallFaces(w *Wall) (hot []float64, mean, released float64) {
 	rings := s.wall.Rings
 	hot = make([]float64, len(rings)+1)
 	mean = s.level
-	a := s.outgoing(max(len(s.cloud.Circle.Sigma), 12, s.rest.harmonics()))
+	a := s.outgoing(max(len(s.cloud.Circle.Sigma), 12))
+	for len(a) < s.rest.harmonics() {
+		a = append(a, 0) // not heard outside
+	}
 	waves := make([][]complex128, len(hot))
 	for i := range waves {
 		waves[i] = make([]complex128, len(a))
