@@ -55,7 +55,7 @@ func TestStates(t *testing.T) {
 	d := demo(t, "stage-multicore")
 	ctx := context.Background()
 	all := map[string]bool{}
-	for _, f := range []float64{0.5, 0.92, 1.5} {
+	for _, f := range []float64{0.5, 0.75, 1.5} {
 		r, err := s.solve(ctx, scaleAll(d, f), Options{})
 		if err != nil {
 			t.Fatal(err)
