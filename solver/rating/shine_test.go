@@ -52,3 +52,36 @@ func TestVacuumIsTold(t *testing.T) {
 		t.Errorf("%s", notes)
 	}
 }
+
+// Whatever parts are not round, their surfaces radiate, nothing is left out, and heat balances: sectors loose in a conduit, a flat cable full of air in one,
+// round wires in a flat jacket, bars and wires in an open bundle.
+func TestNotRoundRadiates(t *testing.T) {
+	wire := func(id, at string) string {
+		return "  - {id: " + id + ", kind: core, conductor: {diameter_mm: 2, class: solid}, layers: [{material: pvc, thickness_mm: 0.8}], at_mm: " + at + "}\n"
+	}
+	sector := func(id, at, turn string) string {
+		return "  - {id: " + id + ", kind: core, conductor: {shape: sector, radius_mm: 9, angle_deg: 120, corner_mm: 1, class: stranded}, layers: [{material: xlpe, thickness_mm: 1}], at_mm: " + at + ", turn_deg: " + turn + "}\n"
+	}
+	for name, text := range map[string]string{
+		"sectors": "holder: {kind: conduit, inside_mm: 50, layers: [{material: pvc, thickness_mm: 2}]}\nparts:\n" + sector("A", "[9, 0]", "0") + sector("B", "[-9, 6]", "120") +
+			"loads: [{id: a, conductors: [A, B], current_a: 120}]\n",
+		"flat jacket": "holder: {kind: jacket, width_mm: 12, height_mm: 5, layers: [{material: pvc, thickness_mm: 1}]}\nparts:\n" + wire("A", "[-3.5, 0]") + wire("B", "[3, 0.4]") +
+			"loads: [{id: a, conductors: [A, B], current_a: 25}]\n",
+		"flat cable": "holder: {kind: conduit, inside_mm: 25, layers: [{material: pvc, thickness_mm: 1.5}]}\nbuilds:\n  twin:\n    holder: {kind: jacket, width_mm: 9, height_mm: 4.4, layers: [{material: pvc, thickness_mm: 1}]}\n    parts:\n    " +
+			wire("1", "[-2.5, 0]") + "    " + wire("2", "[2.5, 0]") + "parts:\n  - {id: C, kind: cable, build: twin, at_mm: [0, -3], turn_deg: 20}\n" +
+			"loads: [{id: a, conductors: [C/1, C/2], current_a: 18}]\n",
+		"bundle": "holder: {kind: open-bundle}\nparts:\n  - {id: B1, kind: core, conductor: {shape: bar, width_mm: 20, height_mm: 4, corner_mm: 0.5, metal: copper, class: solid}, layers: [{material: pvc, thickness_mm: 0.5}], at_mm: [0, 0]}\n" +
+			"  - {id: B2, kind: core, conductor: {shape: bar, width_mm: 20, height_mm: 4, corner_mm: 0.5, metal: copper, class: solid}, layers: [{material: pvc, thickness_mm: 0.5}], at_mm: [0, 12]}\n" +
+			wire("W", "[0, 6]") + "loads: [{id: a, conductors: [B1, B2], current_a: 200}, {id: w, conductors: [W], current_a: 10}]\n",
+	} {
+		r := solve(t, parse(t, head+text), rating.Options{})
+		notes := strings.Join(r.Notes, "; ")
+		if r.Status != heat.Converged || !strings.Contains(notes, "surfaces radiate through the gas") || strings.Contains(notes, "too hot") {
+			t.Errorf("%s: %v, %s", name, r.Status, notes)
+		}
+		if math.Abs(r.Released-r.Generated) > 2e-3*r.Generated {
+			t.Errorf("%s: %g W/m made, %g released", name, r.Generated, r.Released)
+		}
+		t.Logf("%s: %.2f °C", name, r.Conductors[0].TempC)
+	}
+}
