@@ -13,6 +13,7 @@ type Desk struct {
 	cat     *catalog.Catalog
 	rooms   Rooms
 	runner  *latest.Runner[request, answer]
+	rater   *latest.Runner[rateRequest, error]
 	listen  []func(Changed)
 	picture func(Changed) bool // told first; true: a picture is being painted, of which painted will be told
 	closed  bool               // tells nothing any more
@@ -33,6 +34,7 @@ type Desk struct {
 	problems []section.Problem
 
 	answer answered
+	rated  rated
 }
 
 // trial is the document within a drag, the edit that made it, and the document with which the drag began.
@@ -50,6 +52,7 @@ const (
 	ChangedSelection                     // other parts selected or pointed at
 	ChangedResult                        // a new answer, or the answer became stale
 	ChangedFile                          // path, saved state
+	ChangedRatings                       // ratings came, or became those of an older document
 )
 
 // NewDesk opens a desk on d; solving runs beside the window.
@@ -61,6 +64,7 @@ func NewDesk(cat *catalog.Catalog, d *section.Document) *Desk {
 func NewDeskWith(cat *catalog.Catalog, d *section.Document, r Rooms) *Desk {
 	k := &Desk{cat: cat, rooms: r.filled(cat), history: section.NewHistory(d)}
 	k.runner = latest.New(k.rooms.work, k.deliver)
+	k.rater = latest.New(k.rateWork, func(uint64, rateRequest, error) {})
 	k.changed(ChangedDocument|ChangedFile, ask{interrupt: true})
 	return k
 }
@@ -73,6 +77,7 @@ func (k *Desk) Close() {
 	k.mute()
 	k.ended = true
 	k.runner.Close()
+	k.rater.Close()
 }
 
 // mute makes the desk drop what still comes from beside the window, which is closing.
@@ -251,6 +256,7 @@ func (k *Desk) Pointed() string { return k.pointed }
 func (k *Desk) changed(c Changed, a ask) {
 	k.rev++
 	k.outlined = false
+	c |= k.dropRatings()
 	kept := slices.DeleteFunc(slices.Clone(k.selection), func(id string) bool { return section.Find(k.Document(), id) == nil })
 	if len(kept) != len(k.selection) {
 		k.selection = kept

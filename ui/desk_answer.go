@@ -116,6 +116,9 @@ func (k *Desk) arrive(q request, a answer) {
 		c |= ChangedDocument
 	}
 	k.answer.serial++
+	if !q.draft && q.rev == k.rev && k.trial == nil && a.doc != nil {
+		k.rate(a.doc, a.result)
+	}
 	if k.picture != nil && k.picture(c) {
 		k.answer.unsaid = c
 		return

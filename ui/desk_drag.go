@@ -16,9 +16,10 @@ func (k *Desk) Drag(e section.Edit) {
 	}
 	k.trial.edit = e
 	k.rev++
+	dropped := k.dropRatings()
 	k.solve(ask{draft: true, frame: e.Do})
 	if first {
-		k.tell(ChangedFile) // unsaved from now on
+		k.tell(ChangedFile | dropped) // unsaved from now on
 	}
 }
 

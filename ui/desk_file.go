@@ -13,7 +13,9 @@ func (k *Desk) Load(d *section.Document, path string, warnings []section.Problem
 	k.path, k.opened = path, warnings
 	c := ChangedDocument | ChangedFile | ChangedSelection
 	k.selection, k.pointed = nil, ""
-	k.changed(c, ask{interrupt: true})
+	k.dropRatings()
+	k.rated.was = nil // of another design
+	k.changed(c|ChangedRatings, ask{interrupt: true})
 }
 
 // Path returns the design's file, "" if it has none.

@@ -15,7 +15,8 @@ type State int
 // States.
 const (
 	Unknown State = iota // solving, or nothing to judge
-	Within               // everything is within its limit
+	Within               // everything is within its limit, its band too where that is known
+	Close                // everything is within its limit, but a band reaches over one
 	Over                 // something is over its limit, or no steady temperature exists
 	Refusal              // the section can't be solved as it is
 )
@@ -28,6 +29,10 @@ func (k *Desk) Sentence() (answer, assumed string, state State) {
 		return "The calculation failed: " + k.Failure().Error() + ".", "Undo the last step, or save the design and report this.", Refusal
 	case r != nil && (fresh || !k.Stale()):
 		answer, assumed = r.Sentence()
+		assumed = k.assumptions(assumed)
+		if better, state, ok := k.ratedAnswer(); ok {
+			return better, assumed, state
+		}
 		return answer, assumed, stateOf(r)
 	}
 	if len(k.Document().Parts) == 0 {
@@ -101,6 +106,9 @@ func (k *Desk) Scene() render.Scene {
 		Status:   k.Status(),
 	}
 	s.Answer, s.Assumed, _ = k.Sentence()
+	if text, known := k.Amperes(); known { // what leaves the desk leads with what may be relied on
+		s.Assumed = text + " " + s.Assumed + "."
+	}
 	shapes, _ := k.Shapes()
 	s.Shapes = shapes
 	s.Bad = badIDs(k.Problems())
@@ -114,7 +122,29 @@ func (k *Desk) Scene() render.Scene {
 	if r.Solved() {
 		s.Field = r
 	}
+	s.Bands = k.bands()
 	return s
+}
+
+// bands are P5 and P95 of all readings, °C; nil before they are known.
+func (k *Desk) bands() map[string][2]float64 {
+	rated := k.Ratings()
+	if rated == nil || rated.Bands == nil {
+		return nil
+	}
+	out := map[string][2]float64{}
+	note := func(i int, id string) {
+		if low, high, ok := rated.Band(i); ok {
+			out[id] = [2]float64{low, high}
+		}
+	}
+	for i, c := range rated.Base.Conductors {
+		note(i, c.ID)
+	}
+	for i, o := range rated.Base.Others {
+		note(len(rated.Base.Conductors)+i, o.ID)
+	}
+	return out
 }
 
 // shownShapes returns the shapes of the scene.

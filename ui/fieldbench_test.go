@@ -87,6 +87,9 @@ func (b *bench) open(d *section.Document, r Rooms) {
 	if fyne.CurrentApp().Settings().Theme() != fyne.Theme(NewTheme(LookLight)) { // another test had its own
 		fyne.CurrentApp().Settings().SetTheme(NewTheme(LookLight))
 	}
+	if r.Rate == nil {
+		r.Rate = noRatings
+	}
 	r.Hop = func(f func()) { b.hops <- f }
 	r.Beside = func(f func()) { f() }
 	r.After = func(_ time.Duration, f func()) func() {

@@ -10,12 +10,16 @@ import (
 	"packrise/solver/heat"
 	"packrise/solver/rating"
 	"packrise/solver/section"
+	"packrise/solver/study"
 )
 
 // Rooms are what a desk asks of the rest of the program, so that tests can stand in for it.
 type Rooms struct {
 	// Solve answers for a document. It is called on the runner's goroutine, one call at a time.
 	Solve func(context.Context, *section.Document, rating.Options) (*rating.Result, []section.Problem, error)
+	// Rate answers how much the conductors of a document may carry, whose solution is base; o.Stage is told what has come. It is called on a
+	// runner's goroutine, one call at a time.
+	Rate func(ctx context.Context, d *section.Document, base *rating.Result, o study.Options) (*study.Ratings, error)
 	// Outline returns what to draw of a document.
 	Outline func(*section.Document, *catalog.Catalog) ([]section.Shape, []section.Problem)
 	// Settle, LayUp and MakeRoom place the parts of the top level. They are called on the goroutine of Beside.
@@ -33,6 +37,9 @@ type Rooms struct {
 func (r Rooms) filled(cat *catalog.Catalog) Rooms {
 	if r.Solve == nil {
 		r.Solve = rating.NewEngine(cat).Solve
+	}
+	if r.Rate == nil {
+		r.Rate = study.New(cat).Rate
 	}
 	if r.Outline == nil {
 		r.Outline = rating.Outline

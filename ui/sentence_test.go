@@ -11,6 +11,7 @@ import (
 	"packrise/solver/catalog"
 	"packrise/solver/rating"
 	"packrise/solver/section"
+	"packrise/solver/study"
 )
 
 func TestSentenceTellsTheAnswer(t *testing.T) {
@@ -64,5 +65,46 @@ func TestSentenceWrapsAndNeverClips(t *testing.T) {
 	last.tap()
 	if shown != 1 {
 		t.Error("the words that lead to the problems lead nowhere")
+	}
+}
+
+// TestSentenceKeepsItsHeight: nothing below moves while ratings are worked out anew.
+func TestSentenceKeepsItsHeight(t *testing.T) {
+	f := newFakeRater()
+	k, l := testDeskWith(t, testDesign(), Rooms{Rate: f.rate})
+	v := NewSentenceView(k, nil)
+	heights := map[float32]bool{}
+	note := func() { heights[v.heightFor(1000)] = true }
+	l.solved(t, k)
+	note()
+	f.next <- study.StageBands
+	l.until(t, "the bands", func() bool { return k.Ratings() != nil })
+	note()
+	if !strings.Contains(v.amperes.String(), "to rely on") {
+		t.Errorf("it says %q", v.amperes.String())
+	}
+	k.Apply(setAmperes(15), false)
+	note()
+	l.solved(t, k)
+	note()
+	if len(heights) != 1 {
+		t.Errorf("heights %v", heights)
+	}
+}
+
+// TestSentenceOfACloseDesign: a state of its own, told by word and edge.
+func TestSentenceOfACloseDesign(t *testing.T) {
+	near := func(_ context.Context, d *section.Document, base *rating.Result, _ study.Options) (*study.Ratings, error) {
+		r := &study.Ratings{Permits: study.Permits{Base: base}, Doc: d, State: study.Close, StateHere: study.Close, Done: study.Last, Bands: &study.Bands{}}
+		for range len(base.Conductors) + len(base.Others) {
+			r.Bands.Spreads = append(r.Bands.Spreads, study.Spread{LowK: 5, HighK: 200})
+		}
+		return r, nil
+	}
+	k, l := testDeskWith(t, testDesign(), Rooms{Rate: near})
+	l.until(t, "ratings", func() bool { return k.Ratings() != nil })
+	v := NewSentenceView(k, nil)
+	if s := v.answer.String(); !strings.HasPrefix(s, "Close. ") || v.edge.name != ColorNameClose {
+		t.Errorf("%q with an edge of %s", s, v.edge.name)
 	}
 }

@@ -11,6 +11,7 @@ import (
 const (
 	ColorNameStrip   fyne.ThemeColorName = "packriseStrip"   // behind the command row and the caution
 	ColorNameQuiet   fyne.ThemeColorName = "packriseQuiet"   // text that stands back
+	ColorNameClose   fyne.ThemeColorName = "packriseClose"   // within a limit, but the band reaches over it
 	ColorNameRefusal fyne.ThemeColorName = "packriseRefusal" // a section that can't be solved as it is
 	ColorNameUnknown fyne.ThemeColorName = "packriseUnknown" // nothing to judge yet
 )
@@ -129,6 +130,7 @@ var lightPalette = map[fyne.ThemeColorName]color.Color{
 	theme.ColorNameShadow:              rgba(0x000000, 60),
 	ColorNameStrip:                     rgb(0xf4f2ec),
 	ColorNameQuiet:                     rgb(0x67665f),
+	ColorNameClose:                     rgb(0x9a6200),
 	ColorNameRefusal:                   rgb(0x8a5a00),
 	ColorNameUnknown:                   rgb(0xa3a098),
 }
@@ -161,6 +163,7 @@ var darkPalette = map[fyne.ThemeColorName]color.Color{
 	theme.ColorNameShadow:              rgba(0x000000, 120),
 	ColorNameStrip:                     rgb(0x242629),
 	ColorNameQuiet:                     rgb(0xa6a49d),
+	ColorNameClose:                     rgb(0xe3b04f),
 	ColorNameRefusal:                   rgb(0xdca94b),
 	ColorNameUnknown:                   rgb(0x7d7c77),
 }

@@ -57,6 +57,7 @@ func TestTextIsReadable(t *testing.T) {
 			{theme.ColorNameForegroundOnPrimary, theme.ColorNamePrimary, 4.5},
 			{theme.ColorNameForegroundOnError, theme.ColorNameError, 4.5},
 			{ColorNameRefusal, theme.ColorNameBackground, 3},
+			{ColorNameClose, theme.ColorNameBackground, 4.5},
 		}
 		for _, p := range pairs {
 			if c := contrast(col(p.fore), col(p.back)); c < p.need {

@@ -40,6 +40,21 @@ func (t *tracer) changed(c Changed) {
 		answer, _, _ := k.Sentence()
 		t.line("solved rev %d: %s", k.Revision(), answer)
 	}
+	if c&ChangedRatings != 0 {
+		t.rated()
+	}
+}
+
+// rated prints the stage that the ratings of the document as it is have reached.
+func (t *tracer) rated() {
+	k := t.w.desk
+	switch r := k.Ratings(); {
+	case r != nil && !k.Rating():
+		_, amperes := r.Sentence()
+		t.line("rated rev %d: %s", k.Revision(), amperes)
+	case len(k.RatingRefusal()) > 0:
+		t.line("not rated rev %d: %s", k.Revision(), refusalWords(k.RatingRefusal()))
+	}
 }
 
 func (t *tracer) line(format string, args ...any) {
