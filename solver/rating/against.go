@@ -174,3 +174,14 @@ func (s *scene) outsideLoop() (outline.Loop, section.Point) {
 	}
 	return h.loop(thickness(h.layers)), s.origin
 }
+
+// restOut is the heat (W/m) that the open part gives off, and what goes into what the rest lies against; nil if it lies against nothing.
+func (s *scene) restOut(h *heat.Result) map[string]float64 {
+	switch {
+	case s.rests() == nil:
+		return nil
+	case s.heldAround():
+		return map[string]float64{"open": 0, "against": h.Released}
+	}
+	return map[string]float64{"open": h.Released - h.AgainstOut, "against": h.AgainstOut}
+}

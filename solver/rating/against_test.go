@@ -68,6 +68,9 @@ func TestAgainst(t *testing.T) {
 			if !(cold < free-5 && free < quarter-2 && quarter < half-2) {
 				t.Errorf("cold %.1f, free %.1f, a quarter insulated %.1f, half %.1f °C", cold, free, quarter, half)
 			}
+			if s := held.Sides; !(s["against"] > 1) || math.Abs(s["open"]+s["against"]-held.Released) > 1e-9 || r.Sides["against"] != 0 {
+				t.Errorf("%v and %v", held.Sides, r.Sides)
+			}
 			if _, assumed := r.Sentence(); !strings.Contains(assumed, "a quarter of the outside against an insulating floor") {
 				t.Error(assumed)
 			}
@@ -87,6 +90,9 @@ func TestAgainstAll(t *testing.T) {
 		want := answered(t, onFloor(t, c.holder, "kind: fixed-wall, ambient_c: 66"))
 		got := answered(t, onFloor(t, c.holder, "kind: still-air, ambient_c: 30, against: {at_deg: 0, share: 1, is: {fixed_c: 66}}"))
 		for i, l := range got.Conductors {
+			if math.Abs(got.Sides["against"]-got.Released) > 1e-9 || want.Sides != nil {
+				t.Errorf("%s: %v", name, got.Sides)
+			}
 			if w := want.Conductors[i].TempC; math.Abs(l.TempC-w) > 0.02 {
 				t.Errorf("%s: %.3f, want %.3f", name, l.TempC, w)
 			}

@@ -61,7 +61,7 @@ type Result struct {
 	Generated   float64            // W/m
 	Released    float64            // W/m
 	Absorbed    float64            // W/m
-	Sides       map[string]float64 // rectangle only: bottom, right, top, left → W/m released
+	Sides       map[string]float64 // W/m released: of a rectangle bottom, right, top, left; of what rests against something open, against
 	Hottest     string
 	Governing   *Governs // nil if nothing has a limit
 	Status      heat.Status
@@ -113,6 +113,9 @@ func (s *scene) result(a answered, o Options) *Result {
 		}
 		if s.holder.kind == section.Wireway {
 			r.Sides = map[string]float64{"bottom": h.SideOut[heat.Bottom], "right": h.SideOut[heat.Right], "top": h.SideOut[heat.Top], "left": h.SideOut[heat.Left]}
+		}
+		if n := s.restOut(h); n != nil {
+			r.Sides = n
 		}
 	} else {
 		r.SurfaceC = math.NaN()
