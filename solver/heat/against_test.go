@@ -84,7 +84,11 @@ func TestAgainstContours(t *testing.T) {
 
 // TestAgainstRadiating: so it is with radiation in the gas inside.
 func TestAgainstRadiating(t *testing.T) {
-	for _, a := range []heat.Against{{Share: 0.25, At: -math.Pi / 2}, {Share: 0.2, At: 0.7, Held: true, Temp: 40}} {
+	some := []heat.Against{{Share: 0.2, At: 0.7, Held: true, Temp: 40}, {Share: 0.25, At: -math.Pi / 2}}
+	if testing.Short() {
+		some = some[:1]
+	}
+	for _, a := range some {
 		p := leaning(a, heat.Ring{K: 0.2, Thickness: 1.2e-3})
 		p.Filling = heat.Gas
 		got := solveAt(p, heat.Standard)
@@ -168,7 +172,11 @@ func TestAgainstLimits(t *testing.T) {
 
 // TestAgainstMixedBundle: a bundle whose hull is reckoned by contours, since not everything on it is round, agrees with the round one.
 func TestAgainstMixedBundle(t *testing.T) {
-	for _, a := range []heat.Against{{Share: 0.25, At: -math.Pi / 2}, {Share: 0.2, At: 0.7, Held: true, Temp: 45}, {Share: 0.5, At: 2.5, Held: true}} {
+	some := []heat.Against{{Share: 0.2, At: 0.7, Held: true, Temp: 45}, {Share: 0.25, At: -math.Pi / 2}}
+	if testing.Short() {
+		some = some[:1]
+	}
+	for _, a := range some {
 		p := heat.Problem{
 			Parts: rosette(4.2e-3), MediumK: 0.027,
 			Wall: heat.Wall{Shape: heat.Hull, Taut: taut, Film: 10, Ambient: 30, Against: a},
