@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"context"
 	"fmt"
 	"math"
@@ -180,13 +181,7 @@ func bound(sc *screen, on []choice, list []solved) float64 {
 }
 
 func byRoom(a, b solved) int {
-	switch {
-	case a.k < b.k:
-		return -1
-	case a.k > b.k:
-		return 1
-	}
-	return 0
+	return cmp.Compare(a.k, b.k)
 }
 
 // settle takes the worst choice of each case, and the worst case of each thing.

@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"math"
 	"slices"
 
@@ -189,13 +190,7 @@ func (s *screen) hottest(i int) choice {
 			order[l] = l
 		}
 		slices.SortStableFunc(order, func(a, b int) int {
-			switch x, y := s.adds[i][at+a], s.adds[i][at+b]; {
-			case x > y:
-				return -1
-			case x < y:
-				return 1
-			}
-			return 0
+			return cmp.Compare(s.adds[i][at+b], s.adds[i][at+a])
 		})
 		part := make(choice, len(of))
 		for _, l := range order[:min(len(of), s.counts[g])] {
@@ -219,13 +214,7 @@ func (s *screen) worst(most int) (out []choice, searched bool) {
 		}
 	}
 	slices.SortStableFunc(tried, func(a, b choice) int {
-		switch x, y := s.room(a), s.room(b); {
-		case x < y:
-			return -1
-		case x > y:
-			return 1
-		}
-		return 0
+		return cmp.Compare(s.room(a), s.room(b))
 	})
 	if searched && len(tried) > 0 {
 		tried = append([]choice{s.swapped(tried[0])}, tried...)

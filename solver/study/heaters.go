@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"context"
 	"fmt"
 	"math"
@@ -183,13 +184,7 @@ func heating(id string, now, off, ambient float64, from []HeatShare) Heating {
 		h.Shares = append(h.Shares, HeatShare{From: Around, K: off - ambient})
 	}
 	slices.SortStableFunc(h.Shares, func(a, b HeatShare) int {
-		switch {
-		case a.K > b.K:
-			return -1
-		case a.K < b.K:
-			return 1
-		}
-		return 0
+		return cmp.Compare(b.K, a.K)
 	})
 	wholePercents(h.Shares)
 	return h

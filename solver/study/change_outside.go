@@ -1,0 +1,143 @@
+package study
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"packrise/solver/catalog"
+	"packrise/solver/section"
+)
+
+// outside: holder, paint, ambient.
+func (a *adviser) outside() {
+	a.holder()
+	a.paint()
+	if c := a.w.Surroundings.AmbientC; c.OK {
+		a.add(candidate{
+			kind: ChangeAmbient, always: true, text: fmt.Sprintf("Bring the ambient down by %.0f K, to %s", lowerK, degrees(c.V-lowerK)),
+			make: func(d *section.Document) (*section.Document, bool) { return warmer(d, -lowerK), true },
+		})
+	}
+}
+
+func (a *adviser) holder() {
+	h := a.w.Holder
+	switch h.Kind {
+	case section.Conduit, section.Wireway, section.Jacket:
+	default:
+		return
+	}
+	name, next := "", func(d *section.Document) *section.Document { return wide(d, 1.1) }
+	if h.Stock != "" {
+		larger, ok := a.s.larger(h.Stock)
+		now, found := a.s.cat.Holder(h.Stock)
+		if !ok || !found {
+			return
+		}
+		name = larger.Name + " in place of " + now.Name
+		next = func(d *section.Document) *section.Document {
+			h := d.Holder
+			h.Stock = larger.ID
+			return section.SetHolder(d, h)
+		}
+	} else {
+		name = "a " + h.Kind + " 10 % wider inside"
+	}
+	a.add(candidate{
+		kind: ChangeHolder, always: true, text: "Use " + name,
+		make: func(d *section.Document) (*section.Document, bool) {
+			d = next(d)
+			if h.Kind == section.Conduit {
+				d = rest(d, a.s.cat)
+			}
+			return d, true
+		},
+	})
+}
+
+// larger is the next larger holder of a family, by the area inside.
+func (s *Study) larger(stock string) (next catalog.Holder, ok bool) {
+	now, found := s.cat.Holder(stock)
+	if !found {
+		return next, false
+	}
+	for _, h := range s.cat.Holders() {
+		if h.Kind == now.Kind && familyName(h.ID) == familyName(stock) && insideArea(h) > 1.001*insideArea(now) && (!ok || insideArea(h) < insideArea(next)) {
+			next, ok = h, true
+		}
+	}
+	return next, ok
+}
+
+func insideArea(h catalog.Holder) float64 {
+	if h.InsideM > 0 {
+		return math.Pi / 4 * h.InsideM * h.InsideM
+	}
+	return h.WidthM * h.HeightM
+}
+
+// familyName is an id without its sizes.
+func familyName(id string) string {
+	return strings.Map(func(r rune) rune {
+		if strings.ContainsRune("0123456789./x-", r) {
+			return -1
+		}
+		return r
+	}, id)
+}
+
+// Paint on metal: what it conducts, how thick it is, how it radiates (handbooks, from memory; a light colour absorbs 0.3 of the sun).
+const (
+	paintK, paintMM, paintEmits, paintAbsorbs = 0.2, 0.1, 0.9, 0.3
+	brightBelow                               = 0.5
+)
+
+// paint: a bright outside.
+func (a *adviser) paint() {
+	h := a.w.Holder
+	last := ""
+	if row, ok := a.s.cat.Holder(h.Stock); ok {
+		last = row.Wall
+	}
+	if n := len(h.Layers); n > 0 {
+		last = h.Layers[n-1].Material
+	}
+	if last == "" || a.w.Surroundings.Wrap != nil || a.emissivity(last) >= brightBelow {
+		return
+	}
+	switch a.w.Surroundings.Kind {
+	case section.StillAir, section.MovingAir, section.Vacuum:
+	default:
+		return
+	}
+	a.add(candidate{
+		kind: ChangePaint, always: true, text: "Paint the " + h.Kind + " outside, in a light colour",
+		make: func(d *section.Document) (*section.Document, bool) {
+			return d.With(func(d *section.Document) {
+				name := "paint"
+				for slices.ContainsFunc(d.Materials, func(m section.Material) bool { return m.Name == name }) {
+					name += "-light"
+				}
+				d.Materials = append(slices.Clip(d.Materials), section.Material{
+					Name: name, KWMK: paintK, Emissivity: section.Some(paintEmits), Absorptivity: section.Some(paintAbsorbs), Source: "handbooks, from memory; light colour",
+				})
+				d.Holder.Layers = append(slices.Clip(d.Holder.Layers), section.Layer{Material: name, ThicknessMM: paintMM})
+			}), true
+		},
+	})
+}
+
+// emissivity of a material of the design or the catalogue; 1 for what nobody knows.
+func (a *adviser) emissivity(id string) float64 {
+	for i := range a.w.Materials {
+		if m := &a.w.Materials[i]; m.Name == id && m.Emissivity.OK {
+			return m.Emissivity.V
+		}
+	}
+	if m, ok := a.s.cat.Material(id); ok {
+		return m.Emissivity.V
+	}
+	return 1
+}
