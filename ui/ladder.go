@@ -22,7 +22,8 @@ type Ladder struct {
 
 	desk   *Desk
 	raster *canvas.Raster
-	image  *image.RGBA // as painted last; nil: paint anew
+	scene  render.Scene // as told of last: what is drawn later still belongs to the picture in sight
+	image  *image.RGBA  // as painted last; nil: paint anew
 	dark   bool
 	rungs  []render.Rung // in device pixels
 	scale  float32       // device pixels a unit
@@ -40,8 +41,21 @@ func NewLadder(k *Desk) *Ladder {
 	l := &Ladder{desk: k, scale: 1}
 	l.raster = canvas.NewRaster(l.draw)
 	l.ExtendBaseWidget(l)
-	k.Listen(func(Changed) { l.Refresh() })
+	l.follow()
+	k.Listen(func(Changed) {
+		l.follow()
+		l.Refresh()
+	})
 	return l
+}
+
+// follow takes over what the desk shows; of an answer whose picture is still being painted only what is selected and pointed at.
+func (l *Ladder) follow() {
+	if l.desk.answer.unsaid == 0 {
+		l.scene = l.desk.Scene()
+		return
+	}
+	l.scene.Selected, l.scene.Pointed = l.desk.selection, l.desk.pointed
 }
 
 // MinSize leaves room for scale, numbers and names.
@@ -67,8 +81,7 @@ func (l *Ladder) draw(w, h int) image.Image {
 	if width := l.Size().Width; width > 0 {
 		l.scale = float32(w) / width
 	}
-	s := l.desk.Scene()
-	l.rungs = render.Ladder(render.NewRaster(img), s, render.ScaleOf(s), render.Style{Dark: dark, Scale: float64(l.scale)})
+	l.rungs = render.Ladder(render.NewRaster(img), l.scene, render.ScaleOf(l.scene), render.Style{Dark: dark, Scale: float64(l.scale)})
 	l.image, l.dark, l.over = img, dark, nil
 	return img
 }

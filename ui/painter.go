@@ -40,6 +40,7 @@ type picture struct {
 	view   render.View
 	coarse bool
 	serial uint64
+	scene  render.Scene
 }
 
 // heatKey tells heat maps apart. A field is a result's and a result never changes.
@@ -72,7 +73,7 @@ func (p *painter) paint(_ context.Context, s sheet) *picture {
 	}
 	s.scene.Plain, s.scene.Flow = !s.isotherms, s.flow
 	render.SectionLayer(render.NewRaster(img), s.scene, s.view, s.scale, s.style)
-	return &picture{img: img, view: s.view, coarse: coarse, serial: s.serial}
+	return &picture{img: img, view: s.view, coarse: coarse, serial: s.serial, scene: s.scene}
 }
 
 // heatLayer returns the heat map, nil where nothing is solved, and whether it is a coarse one.

@@ -9,6 +9,7 @@ import (
 	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/theme"
 
+	"packrise/render"
 	"packrise/solver/section"
 )
 
@@ -41,28 +42,29 @@ func (v *SectionView) hover() {
 	if v.drag.mode == dragParts {
 		id = v.drag.id
 	}
-	v.hint.say(v.desk.readOut(id, v.camera.toMM(v.at, v.Size())))
+	if v.pic != nil {
+		v.hint.say(readOut(v.pic.scene, id, v.camera.toMM(v.at, v.Size())))
+	}
 }
 
-// readOut says what is at a place: the part, and the temperature there.
-func (k *Desk) readOut(id string, p section.Point) []string {
+// readOut says what is at a place of a picture: the part, and the temperature there.
+func readOut(s render.Scene, id string, p section.Point) []string {
 	var lines []string
-	for _, s := range k.shownShapes() {
-		if s.ID == id && id != "" {
-			lines = append(lines, strings.TrimSuffix(s.ID+"  "+s.Label, "  "))
+	for _, shape := range s.Shapes {
+		if shape.ID == id && id != "" {
+			lines = append(lines, strings.TrimSuffix(shape.ID+"  "+shape.Label, "  "))
 		}
 	}
-	r, fresh := k.Result()
-	if r == nil || !fresh {
-		return lines
-	}
-	for _, q := range r.Readings() {
+	for _, q := range s.Readings {
 		if q.ID == id && id != "" {
 			return append(lines, readingLine(q))
 		}
 	}
+	if s.Field == nil {
+		return lines
+	}
 	var t [1]float64
-	r.Row(t[:], p.Y, p.X, 1)
+	s.Field.Row(t[:], p.Y, p.X, 1)
 	if math.IsNaN(t[0]) {
 		return lines
 	}

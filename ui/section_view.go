@@ -188,6 +188,7 @@ func (v *SectionView) show(p *picture) {
 	}
 	v.pic, v.stretched = p, nil
 	v.raster.Refresh()
+	v.hover()
 	if p.coarse && v.drag.mode != dragParts {
 		v.ask(false)
 	}

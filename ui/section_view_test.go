@@ -124,6 +124,7 @@ func TestViewLeavesNoGoroutines(t *testing.T) {
 func TestWordsWaitForThePicture(t *testing.T) {
 	h, v := testView(t)
 	told, drafts := 0, 0
+	ladder := NewLadder(h.k)
 	h.k.Listen(func(c Changed) {
 		if c&ChangedResult == 0 || h.k.Stale() {
 			return
@@ -141,7 +142,12 @@ func TestWordsWaitForThePicture(t *testing.T) {
 	for i := range 12 {
 		before := told
 		h.v.Dragged(&fyne.DragEvent{PointEvent: fyne.PointEvent{Position: from.AddXY(0, float32(3*i+4))}})
-		h.l.until(t, "a frame", func() bool { return told > before })
+		h.l.until(t, "a frame", func() bool {
+			if ladder.Refresh(); ladder.scene.Field != v.pic.scene.Field {
+				t.Error("the ladder and the picture show different answers")
+			}
+			return told > before
+		})
 	}
 	h.v.DragEnd()
 	h.v.MouseUp(h.event(from, desktop.MouseButtonPrimary))
