@@ -22,6 +22,8 @@ func knuckles(part int, l outline.Loop) (all []knuckle) {
 	return all
 }
 
+const badHullSector = "heat: the string of an open bundle can't be wound round a sector, whose arc is no part of a disc within it"
+
 // taut winds the string round knuckles.
 func (l *plan) taut(k []knuckle) []Arc {
 	x, y, r := make([]float64, len(k)), make([]float64, len(k)), make([]float64, len(k))
@@ -40,7 +42,10 @@ const (
 // stringed are the knuckles of all parts of the top level as drawn.
 func (l *plan) stringed() (k []knuckle) {
 	for i := range l.p.Parts {
-		if l.p.Parts[i].In == -1 {
+		if q := &l.p.Parts[i]; q.In == -1 {
+			if q.Form.Kind == Sector {
+				panic(badHullSector)
+			}
 			k = append(k, knuckles(i, l.outer(i))...)
 		}
 	}

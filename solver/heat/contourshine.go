@@ -50,7 +50,7 @@ func (c *contourWall) divide(grain *gas.Grain) *sides {
 	p := c.sys.Patches(func(contour int) bool {
 		k, ok := place[contour]
 		if on = k; ok {
-			if usual = l.contours[contour].Loop.Perimeter() / grain.Turn; k >= 0 {
+			if usual = l.contours[contour].Loop.Perimeter() / (1.5 * grain.Turn); k >= 0 {
 				usual *= grain.Turn / float64(grain.PerTurn)
 			}
 		}

@@ -304,13 +304,26 @@ func (c *contourWall) remember(m *Model, r *Result, q []float64) {
 	}
 }
 
+// imbalance is the share of the heat that got lost, which no contour should lose.
+func (r *Result) imbalance() float64 {
+	sum, whole := r.Generated-r.Released, r.Generated
+	for _, v := range r.Absorbed {
+		sum -= v
+		whole += math.Abs(v)
+	}
+	if whole == 0 {
+		return 0
+	}
+	return math.Abs(sum) / whole
+}
+
 // looseContours adds to the estimates what unresolved densities do: found on random sections against the fine setting (TestShapedProperties).
 func (m *Model) looseContours(r *Result) {
 	if m.contours == nil {
 		return
 	}
 	l, rise := m.contours.sys.Loose(), m.rise(r)
-	m.widen(r, rise*(looseShare*l*l+shapedFloor))
+	m.widen(r, rise*(looseShare*l*l+shapedFloor+2*r.imbalance()))
 	for i := range m.p.Parts {
 		if !m.contours.plan.drawn[i] {
 			continue

@@ -182,7 +182,7 @@ func (s *shaped) load(heats []float64) []float64 {
 
 // What unresolved densities do to a metal's temperature is of second order in them: found on random sections against the fine setting (TestShapedProperties).
 const (
-	looseShare  = 1.0
+	looseShare  = 0.4
 	shapedFloor = 1e-5 // of the rise
 )
 

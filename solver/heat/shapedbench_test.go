@@ -33,6 +33,35 @@ func BenchmarkShaped(b *testing.B) {
 	}
 }
 
+// The same with surfaces that radiate, and dragging a wire along the bar.
+func BenchmarkContours(b *testing.B) {
+	p := lit(besideBar(24))
+	b.Run("radiate", func(b *testing.B) {
+		b.ReportAllocs()
+		for b.Loop() {
+			heat.New(p, heat.Settings{}).Solve(context.Background(), nil)
+		}
+	})
+	for name, q := range map[string]heat.Problem{"drag": besideBar(24), "drag radiating": p} {
+		b.Run(name, func(b *testing.B) {
+			b.ReportAllocs()
+			m := heat.New(q, heat.Settings{Accuracy: heat.Draft})
+			m.Solve(context.Background(), nil)
+			x, y := q.Parts[24].X, q.Parts[24].Y
+			for i := 0; b.Loop(); i++ {
+				m.Move(24, x+float64(i%8)*0.05*mm, y+2*mm)
+				m.Solve(context.Background(), nil)
+			}
+		})
+	}
+	b.Run("influence", func(b *testing.B) {
+		b.ReportAllocs()
+		for b.Loop() {
+			heat.New(besideBar(24), heat.Settings{}).Influence(context.Background())
+		}
+	})
+}
+
 // A picture of 512 × 512 points: tables first, then every point.
 func BenchmarkShapedField(b *testing.B) {
 	m := heat.New(load(b, "s03_bar_two_wires").Problem, heat.Settings{})

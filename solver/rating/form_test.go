@@ -106,13 +106,15 @@ func TestFormedProblems(t *testing.T) {
 	bar := "{id: B, kind: core, conductor: {shape: bar, width_mm: 20, height_mm: 5}, layers: [{material: pvc, thickness_mm: 1}], at_mm: [0, 0]%s}"
 	part := func(more string) string { return "parts:\n  - " + strings.Replace(bar, "%s", more, 1) + "\n" }
 	for name, c := range map[string]struct{ text, want string }{
-		"fits":        {"holder: {kind: conduit, inside_mm: 24}\n" + part(""), ""},
-		"sticks out":  {"holder: {kind: conduit, inside_mm: 22}\n" + part(""), "B reaches"},
-		"turned":      {"holder: {kind: jacket, width_mm: 25, height_mm: 9}\n" + part(""), ""},
-		"across":      {"holder: {kind: jacket, width_mm: 24, height_mm: 9}\n" + part(", turn_deg: 90"), "B reaches"},
-		"wire beside": {"holder: {kind: conduit, inside_mm: 40}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.5]}\n", ""},
-		"wire in it":  {"holder: {kind: conduit, inside_mm: 40}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.4]}\n", "B overlaps W by 0.1 mm"},
-		"metal":       {"holder: {kind: conduit, inside_mm: 40}\n" + strings.Replace(part(""), "height_mm: 5", "height_mm: 5, area_mm2: 120", 1), "do not fit into an outline"},
+		"fits":          {"holder: {kind: conduit, inside_mm: 24}\n" + part(""), ""},
+		"sticks out":    {"holder: {kind: conduit, inside_mm: 22}\n" + part(""), "B reaches"},
+		"turned":        {"holder: {kind: jacket, width_mm: 25, height_mm: 9}\n" + part(""), ""},
+		"across":        {"holder: {kind: jacket, width_mm: 24, height_mm: 9}\n" + part(", turn_deg: 90"), "B reaches"},
+		"sector bundle": {"holder: {kind: open-bundle}\n" + part("") + "  - {id: S, kind: core, conductor: {shape: sector, angle_deg: 90, radius_mm: 8, corner_mm: 0.8}, at_mm: [0, 12]}\n", "no sector conductors"},
+		"bar bundle":    {"holder: {kind: open-bundle}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.5]}\n", ""},
+		"wire beside":   {"holder: {kind: conduit, inside_mm: 40}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.5]}\n", ""},
+		"wire in it":    {"holder: {kind: conduit, inside_mm: 40}\n" + part("") + "  - {id: W, kind: core, conductor: {diameter_mm: 4}, at_mm: [0, 5.4]}\n", "B overlaps W by 0.1 mm"},
+		"metal":         {"holder: {kind: conduit, inside_mm: 40}\n" + strings.Replace(part(""), "height_mm: 5", "height_mm: 5, area_mm2: 120", 1), "do not fit into an outline"},
 	} {
 		d, problems := section.Read([]byte(barHead + c.text))
 		if d == nil {
