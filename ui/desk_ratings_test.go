@@ -130,8 +130,7 @@ func TestDeskDoesNotRateWithinADrag(t *testing.T) {
 
 func TestDeskKeepsWhyNothingIsRated(t *testing.T) {
 	d := section.Unassign(testDesign(), "L3")
-	s := study.New(testCatalog())
-	k, l := testDeskWith(t, d, Rooms{Rate: s.Rate})
+	k, l := testDeskWith(t, d, Rooms{Rate: rateOnce})
 	l.solved(t, k)
 	l.until(t, "the refusal", func() bool { return !k.Rating() })
 	v := NewSentenceView(k, nil)
@@ -156,8 +155,7 @@ func TestDeskTellsOfAFailure(t *testing.T) {
 
 // TestDeskRatesForReal goes through the program's own ratings and holds the sentence to them.
 func TestDeskRatesForReal(t *testing.T) {
-	s := study.New(testCatalog())
-	k, l := testDeskWith(t, testDesign(), Rooms{Rate: s.Rate})
+	k, l := testDeskWith(t, testDesign(), Rooms{Rate: rateOnce})
 	v := NewSentenceView(k, nil)
 	l.until(t, "ratings", func() bool { return k.Ratings() != nil && !k.Rating() })
 	r := k.Ratings()

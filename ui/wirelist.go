@@ -25,12 +25,14 @@ type WireList struct {
 	rule   *canvas.Rectangle
 	unseen *canvas.Text // how many rows are out of sight
 
-	rows   []wireRow
-	aged   bool // the numbers belong to an older section
-	sorted bool // else in the document's order
-	by     wireColumn
-	down   bool
-	layout wireLayout
+	rows []wireRow
+	aged bool // the numbers belong to an older section
+
+	agedRatings bool // the permitted currents do
+	sorted      bool // else in the document's order
+	by          wireColumn
+	down        bool
+	layout      wireLayout
 
 	active wireCell // where the keyboard is
 	anchor string   // where a range of rows begins
@@ -61,7 +63,7 @@ func NewWireList(k *Desk) *WireList {
 }
 
 func (l *WireList) changed(c Changed) {
-	if c&(ChangedDocument|ChangedResult) != 0 {
+	if c&(ChangedDocument|ChangedResult|ChangedRatings) != 0 {
 		l.reload()
 	}
 	if c&ChangedSelection != 0 && !l.own {
@@ -74,6 +76,7 @@ func (l *WireList) changed(c Changed) {
 func (l *WireList) reload() {
 	_, fresh := l.desk.Result()
 	l.aged = !fresh && l.desk.Stale()
+	_, l.agedRatings = l.desk.shownRatings()
 	was := l.row(l.active.id)
 	first, last := l.inSight()
 	l.rows = wireRows(l.desk)

@@ -16,19 +16,42 @@ const (
 	wireSizeType
 	wireCurrent
 	wireTemp
+	wireBand
 	wireLimit
 	wireMargin
+	wireRely
+	wireNominal
+	wireLowest
 	wireRemark
 	wireColumns // how many there are
 )
 
 // wireHeads are the headers and the units behind them.
 var wireHeads = [wireColumns]struct{ name, unit string }{
-	{"Id", ""}, {"Circuit", ""}, {"Size", ""}, {"Current", "A"}, {"Temperature", "°C"}, {"Limit", "°C"}, {"Margin", "K"}, {"Remark", ""},
+	{"Id", ""},
+	{"Circuit", ""},
+	{"Size", ""},
+	{"Current", "A"},
+	{"Temperature", "°C"},
+	{"Band", "°C"},
+	{"Limit", "°C"},
+	{"Margin", "K"},
+	{"Rely on", "A"},
+	{"Nominal", "A"},
+	{"Lowest", "A"},
+	{"Remark", ""},
 }
 
+// wireShort are headers for where there is little room.
+var wireShort = [wireColumns]string{wireTemp: "Temp."}
+
 // number tells whether the column's cells are numbers, which stand at its right edge.
-func (c wireColumn) number() bool { return c >= wireCurrent && c <= wireMargin }
+func (c wireColumn) number() bool { return c >= wireCurrent && c <= wireLowest }
+
+// rated tells whether the column's cells come from the ratings.
+func (c wireColumn) rated() bool {
+	return c == wireBand || c >= wireRely && c <= wireLowest
+}
 
 // answered tells whether the column's cells come from the answer.
 func (c wireColumn) answered() bool { return c == wireTemp || c == wireMargin }
@@ -67,6 +90,14 @@ func (c wireColumn) text(r *wireRow) string {
 		return r.limitText()
 	case wireMargin:
 		return r.marginText()
+	case wireBand:
+		return r.band
+	case wireRely:
+		return ampereCell(r.rely)
+	case wireNominal:
+		return ampereCell(r.nominal)
+	case wireLowest:
+		return ampereCell(r.lowest)
 	}
 	return r.remark
 }
@@ -90,6 +121,14 @@ func (c wireColumn) value(r *wireRow) float64 {
 		if k, ok := r.margin(); ok {
 			return k
 		}
+	case wireBand:
+		return r.upper
+	case wireRely:
+		return r.rely
+	case wireNominal:
+		return r.nominal
+	case wireLowest:
+		return r.lowest
 	}
 	return math.NaN()
 }

@@ -127,10 +127,12 @@ func (r *wireBodyRenderer) dress(t *canvas.Text, row *wireRow, c wireColumn) {
 	t.TextStyle = fyne.TextStyle{}
 	t.Color = themeColor(theme.ColorNameForeground)
 	switch {
-	case l.aged && (c.answered() || c == wireRemark):
+	case l.aged && (c.answered() || c == wireRemark), l.agedRatings && c.rated():
 		t.Color = themeColor(theme.ColorNameDisabled)
 	case row.bad && c == wireRemark, row.over() && (c == wireMargin || c == wireTemp || c == wireRemark):
 		t.Color = themeColor(theme.ColorNameError)
+	case row.close() && (c == wireBand || c == wireRemark):
+		t.Color = themeColor(ColorNameClose)
 	case c == wireCurrent && row.unknown, c == wireRemark && row.unknown:
 		t.Color = themeColor(theme.ColorNameWarning)
 	case !row.part() || c == wireRemark || c == wireCircuit:
@@ -194,10 +196,16 @@ func (l *WireList) window() wireWindow {
 	return wireWindow{s.Offset.Y, s.Offset.Y + s.Size().Height, s.Offset.X + s.Size().Width}
 }
 
-// elidedUnderPointer returns the whole text of the cell under the pointer where it is elided.
+// elidedUnderPointer returns the whole text of the cell under the pointer where it is elided, and why the lowest current is what it is.
 func (r *wireBodyRenderer) elidedUnderPointer() string {
 	b, l := r.body, r.body.list
-	if b.hovered < 0 || b.hovered >= len(l.rows) || b.column < 0 || b.column.number() {
+	if b.hovered < 0 || b.hovered >= len(l.rows) || b.column < 0 {
+		return ""
+	}
+	if b.column == wireLowest {
+		return l.rows[b.hovered].because
+	}
+	if b.column.number() {
 		return ""
 	}
 	text := b.column.text(&l.rows[b.hovered])

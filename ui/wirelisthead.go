@@ -102,7 +102,7 @@ func (r *wireHeadRenderer) column(c wireColumn, m wireLayout) {
 	if !m.shown[c] {
 		return
 	}
-	name.Text, name.TextSize, name.TextStyle, name.Color = wireHeads[c].name, m.textSize, fyne.TextStyle{Bold: true}, themeColor(theme.ColorNameForeground)
+	name.Text, name.TextSize, name.TextStyle, name.Color = m.head(c), m.textSize, fyne.TextStyle{Bold: true}, themeColor(theme.ColorNameForeground)
 	if r.head.over == c {
 		name.Color = themeColor(theme.ColorNamePrimary)
 	}

@@ -8,6 +8,7 @@ import (
 	"packrise/solver/quantity"
 	"packrise/solver/rating"
 	"packrise/solver/section"
+	"packrise/solver/study"
 )
 
 // wireRow is one part or layer as the list shows it.
@@ -26,6 +27,8 @@ type wireRow struct {
 	area   float64 // of the conductor's metal in mm², for sorting by size
 	remark string
 	bad    bool // it stops the work
+
+	wireRated
 }
 
 // margin returns limit − temperature; ok is false where there is none, or where it is unknown because the conductor's own heat is.
@@ -68,6 +71,7 @@ func wireRows(k *Desk) []wireRow {
 	d := k.Document()
 	r, _ := k.Result()
 	facts := newWireFacts(d, r, k.Problems())
+	facts.rated, _ = k.shownRatings()
 	var cores, others []wireRow
 	for _, p := range section.UnfoldAll(d) {
 		row := facts.part(k, p)
@@ -88,6 +92,7 @@ type wireFacts struct {
 	answers map[string]wireAnswer
 	bad     map[string]string
 	sizes   map[string]wireSize
+	rated   *study.Ratings // nil: not known
 }
 
 type wireAnswer struct {
@@ -130,7 +135,7 @@ func newWireFacts(d *section.Document, r *rating.Result, problems []section.Prob
 }
 
 func (f *wireFacts) part(k *Desk, p section.Place) wireRow {
-	row := wireRow{id: p.ID, kind: p.Part.Kind, amperes: math.NaN()}
+	row := wireRow{id: p.ID, kind: p.Part.Kind, amperes: math.NaN(), wireRated: unrated}
 	size := f.size(k, *p.Part)
 	row.size, row.area = size.text, size.area
 	answer := p.ID
@@ -152,6 +157,7 @@ func (f *wireFacts) answer(row *wireRow, id string) (assumed bool) {
 		return false
 	}
 	row.temp, row.limit, row.solved = a.temp, a.limit, !math.IsNaN(a.temp)
+	f.rate(row, id)
 	return a.assumed && a.limit.OK
 }
 
@@ -229,6 +235,7 @@ func (f *wireFacts) remark(row wireRow, p *section.Part, answer string, assumed 
 	}
 	add(f.bad[row.id] != "" && (p == nil || p.At.OK), f.bad[row.id])
 	add(row.over(), "over")
+	add(row.close(), "close")
 	add(f.result != nil && f.result.Governing != nil && f.result.Governing.Part == answer, "governs")
 	add(f.result != nil && f.result.Hottest == answer, "hottest")
 	switch {
@@ -257,7 +264,7 @@ func (f *wireFacts) layers(d *section.Document, k *Desk) []wireRow {
 		if o.Kind != "layer" && o.Kind != "surface" || strings.HasSuffix(o.ID, "/"+section.Jacket) || strings.Contains(o.ID, "/"+section.Jacket+"/") {
 			continue
 		}
-		row := wireRow{id: o.ID, kind: o.Kind, amperes: math.NaN(), area: math.NaN()}
+		row := wireRow{id: o.ID, kind: o.Kind, amperes: math.NaN(), area: math.NaN(), wireRated: unrated}
 		if o.Kind == "layer" {
 			row.size = layerText(k, h, o.ID)
 		} else {
