@@ -90,13 +90,6 @@ func (r *resolver) findBodies() {
 		return
 	}
 	for _, top := range s.touchingParts() {
-		if len(top) > 1 && s.formed(-1, top) {
-			r.refuse(&section.Problem{
-				Rule: "bundle-round", IDs: s.ids(top), Key: "holder.kind",
-				What: fmt.Sprintf("%s touch each other, and parts that touch are reckoned as one bundle of round parts, but there are bars, sectors or flat cables among them", list(s.ids(top))),
-				Do:   "move them a little apart, or use a jacket, conduit or wireway",
-			})
-		}
 		s.bodies = append(s.bodies, body{top: top})
 	}
 	r.loosenBodies()
@@ -105,7 +98,8 @@ func (r *resolver) findBodies() {
 	}
 }
 
-// loosenBodies moves the parts of each body apart by their clearance, unless they would meet another body.
+// loosenBodies moves the parts of each body apart by their clearance, unless they would meet another body. Where some are not round they stay, as in an
+// open bundle.
 func (r *resolver) loosenBodies() {
 	s := &r.scene
 	any := false
@@ -116,6 +110,10 @@ func (r *resolver) loosenBodies() {
 		}
 		if !(s.holder.gap > 0) {
 			return
+		}
+		if s.formed(-1, top) {
+			any = true
+			continue
 		}
 		before := make([]item, len(s.parts))
 		copy(before, s.parts)
@@ -164,31 +162,18 @@ func (b *body) measure(s *scene) {
 			b.all = append(b.all, i)
 		}
 	}
-	if b.several() || first.form.Kind == heat.Disc {
-		discs := s.discsOf(b.top)
-		arcs, perimeter, _ := pack.Hull(discs)
-		b.around = perimeter * mm
-		for _, a := range arcs {
-			b.hull = append(b.hull, discs[a.Disc])
-		}
-		b.box = boxOf(hullLoop(discs))
-		if !b.several() {
-			d := discs[0]
-			b.box = [4]float64{d.X - d.R, d.Y - d.R, d.X + d.R, d.Y + d.R}
-		}
-		return
+	discs := s.discsOf(b.top)
+	arcs, perimeter, _ := pack.Hull(discs)
+	if b.around = perimeter * mm; !b.several() {
+		b.around = first.outside().Perimeter()
 	}
-	b.around = first.outside().Perimeter()
-	var line []section.Point
-	for _, z := range first.outside().Polygon(formSag * mm) {
-		p := section.Point{X: first.abs.X + real(z)/mm, Y: first.abs.Y + imag(z)/mm}
-		line, b.hull = append(line, p), append(b.hull, pack.Disc{X: p.X, Y: p.Y})
+	b.box = [4]float64{math.Inf(1), math.Inf(1), math.Inf(-1), math.Inf(-1)}
+	for _, a := range arcs {
+		d := discs[a.Disc]
+		b.hull = append(b.hull, d)
+		b.box = [4]float64{min(b.box[0], d.X-d.R), min(b.box[1], d.Y-d.R), max(b.box[2], d.X+d.R), max(b.box[3], d.Y+d.R)}
 	}
-	b.box = boxOf(line)
 }
-
-// formSag is how far the corners that stand for a part that is not round lie from it at most, mm, where bodies see each other.
-const formSag = 0.02
 
 // ids lists parts by their names.
 func (s *scene) ids(of []int) []string {

@@ -76,6 +76,9 @@ func (s *scene) buildBody(k int, air spaces, f films) heat.Problem {
 	}
 	if b.several() {
 		p.Wall.Shape, p.Wall.Taut = heat.Hull, taut
+		if s.formed(-1, b.top) {
+			p.Clearance = s.holder.gap
+		}
 	}
 	if s.out.free {
 		p.Wall.Film, p.Wall.Ambient = f[k].film, f[k].toward

@@ -55,7 +55,14 @@ func (e *Engine) answer(ctx context.Context, s *scene, o Options) answered {
 	}
 	a := l.run(ctx)
 	if a.status == heat.ThermalRunaway && s.out.free {
-		a = l.critical(ctx, a)
+		if a = l.critical(ctx, a); a.status == heat.StoppedEarly { // what hid between the films is found from their hotter side
+			l.failed, l.good = nil, nil
+			l.memory.forget()
+			l.temps = e.coldTemps(s)
+			if b := l.run(ctx); b.status == heat.Converged {
+				a = b
+			}
+		}
 	}
 	if a.status != heat.Converged {
 		e.forget()

@@ -68,7 +68,7 @@ func (s *scene) holderShape() section.Shape {
 	case h.kind == section.Apart:
 		sh.At = s.origin
 		for _, top := range s.together() {
-			if len(top) > 1 && !s.formed(-1, top) {
+			if len(top) > 1 {
 				sh.Loops = append(sh.Loops, hullLoop(s.discsOf(top)))
 			}
 		}
