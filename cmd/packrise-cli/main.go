@@ -31,9 +31,10 @@ so that nothing can be called within; 2 the input is wrong (one line a problem o
 
 // commands is the grammar of the command line.
 type commands struct {
-	Solve solveCommand `cmd:"" help:"Print every temperature, limit and margin of one or more designs."`
-	Rate  rateCommand  `cmd:"" help:"Print how much each conductor may carry, how sure that is, and what code tables say."`
-	Draw  drawCommand  `cmd:"" help:"Write the picture of a design: section, heat map, ladder, sentence."`
+	Solve  solveCommand  `cmd:"" help:"Print every temperature, limit and margin of one or more designs."`
+	Rate   rateCommand   `cmd:"" help:"Print how much each conductor may carry, how sure that is, and what code tables say."`
+	Advise adviseCommand `cmd:"" help:"Print what to change first: single changes, ranked by the kelvins that they gain."`
+	Draw   drawCommand   `cmd:"" help:"Write the picture of a design: section, heat map, ladder, sentence."`
 }
 
 // app is what a command needs from outside.

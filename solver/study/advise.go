@@ -4,10 +4,12 @@ import (
 	"cmp"
 	"context"
 	"errors"
+	"fmt"
 	"math"
 	"slices"
 
 	"packrise/solver/heat"
+	"packrise/solver/quantity"
 	"packrise/solver/rating"
 	"packrise/solver/section"
 )
@@ -32,7 +34,7 @@ const (
 )
 
 // mostOf is how many changes of a kind are solved, so that no kind crowds out the rest.
-var mostOf = map[string]int{ChangeOff: 2, ChangeOut: 2, ChangeCut: 3, ChangeUpsize: 3, ChangeSwap: 4, ChangeMove: 4}
+var mostOf = map[string]int{ChangeOff: 2, ChangeOut: 2, ChangeCut: 3, ChangeUpsize: 3, ChangeSwap: 4, ChangeMove: 2}
 
 // asBuilt are the kinds that leave the section as it is: solved first, while what is prepared for it is warm.
 var asBuilt = []string{ChangeOff, ChangeCut, ChangeAmbient}
@@ -210,4 +212,28 @@ func (a *adviser) solve(picked []candidate) error {
 	})
 	a.out.Changes = a.out.Changes[:min(len(a.out.Changes), mostChanges)]
 	return nil
+}
+
+// Now says how it stands before any change.
+func (a *Advice) Now() string {
+	at := ""
+	if a.Factor < 1 {
+		at = fmt.Sprintf("No steady temperature exists with the loads as written; all is compared with %s of every current. ", Percent(a.Factor))
+	}
+	if a.Governs == "" {
+		return at + "Nothing here has a limit, so nothing tells what would help."
+	}
+	list := things(a.Base)
+	i := slices.IndexFunc(list, func(t thing) bool { return t.id == a.Governs })
+	t := list[i]
+	return fmt.Sprintf("%s%s governs: %s °C, limit %s °C.", at, t.id, quantity.Trimmed(quantity.BesideLimit(t.tempC, t.limit.V), 1), quantity.Trimmed(t.limit.V, 1))
+}
+
+// Looked says what was looked at.
+func (a *Advice) Looked() string {
+	what := fmt.Sprintf("Of %s looked at, %d were solved in full and %d helped; each is one change by itself.", count(a.Screened, "change"), a.Solved, len(a.Changes))
+	if a.Governs != "" && len(a.Changes) == 0 {
+		what = fmt.Sprintf("Of %s looked at, none helps by %s K or more.", count(a.Screened, "change"), quantity.Trimmed(leastGainK, 1))
+	}
+	return what
 }

@@ -2,8 +2,11 @@ package study
 
 import (
 	"context"
+	"errors"
 	"math"
 	"os"
+	"slices"
+	"strings"
 	"testing"
 	"time"
 
@@ -49,5 +52,106 @@ func TestAdvise(t *testing.T) {
 		if len(a.Changes) < 2 || len(a.Changes) > mostChanges {
 			t.Errorf("%s: %d changes", name, len(a.Changes))
 		}
+	}
+}
+
+// kinds of the changes, with the first of each.
+func firsts(a *Advice) map[string]*Change {
+	out := map[string]*Change{}
+	for i := range a.Changes {
+		if c := &a.Changes[i]; out[c.Kind] == nil {
+			out[c.Kind] = c
+		}
+	}
+	return out
+}
+
+// TestAdvisePaint: a bright tube radiates more under paint; the coat goes on a tube of the catalogue and on one of its own sizes, alike.
+func TestAdvisePaint(t *testing.T) {
+	const tube = `
+packrise: 1
+surroundings: {kind: still-air, ambient_c: 30}
+holder: HOLDER
+materials: {ins: {k_w_mk: 0.2}}
+parts: [{id: W, kind: core, conductor: {area_mm2: 4}, layers: [{material: ins, thickness_mm: 1}], at_mm: [0, -5], limit_c: 90}]
+loads: [{id: a, conductors: [W], current_a: 30}]
+`
+	var gains []float64
+	for _, h := range []string{"{kind: conduit, stock: emt-1/2}", "{kind: conduit, inside_mm: 15.7988, layers: [{material: galvanised-steel, thickness_mm: 1.0668}]}"} {
+		a, err := New(cat).Advise(context.Background(), read(t, strings.Replace(tube, "HOLDER", h, 1)), nil, Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		c := firsts(a)[ChangePaint]
+		if c == nil || c.GainK < 1 {
+			t.Fatalf("%s: %+v", h, c)
+		}
+		gains = append(gains, c.GainK)
+	}
+	if math.Abs(gains[0]-gains[1]) > 0.2 {
+		t.Errorf("gains %v", gains)
+	}
+}
+
+// TestAdviseSwap: the cold core of a low limit sits in the middle; swapping it outwards is found, with what it costs.
+func TestAdviseSwap(t *testing.T) {
+	text := strings.Replace(aHeats, "at_mm: [0, 2.4]", "at_mm: [0, 0]", 1)
+	text = strings.Replace(text, "current_a: 20", "current_a: 24", 1)
+	d := section.Add(read(t, text), section.Part{
+		ID: "X", Kind: section.Core, Conductor: &section.Conductor{AreaMM2: section.Some(1.0)}, Layers: []section.Layer{{Material: "ins", ThicknessMM: 0.5}},
+		LimitC: section.Some(90.0), At: section.Some(section.Point{X: 0, Y: -5}), Role: section.RoleSpare,
+	})
+	a, err := New(cat).Advise(context.Background(), d, nil, Options{AssumeIdle: true})
+	if err != nil {
+		t.Fatal(err)
+	}
+	for i := range a.Changes {
+		t.Log(a.Changes[i].Sentence())
+	}
+	kinds := firsts(a)
+	if a.Governs != "B" || kinds[ChangeSwap] == nil || kinds[ChangeMove] == nil {
+		t.Fatalf("%s governs; %v", a.Governs, kinds)
+	}
+	if c := kinds[ChangeSwap]; !slices.Contains(c.IDs, "B") || c.GainK <= 0 || !(c.AtK > 0) {
+		t.Errorf("%+v", c)
+	}
+	if c := kinds[ChangeUpsize]; c == nil || c.CopperKgM <= 0 {
+		t.Errorf("one size up: %+v", c)
+	}
+}
+
+// TestAdviseRunaway: without a steady temperature all is compared at lower currents, and the changed designs keep the currents as written.
+func TestAdviseRunaway(t *testing.T) {
+	d := section.ScaleLoads(read(t, aHeats), 8)
+	a, err := New(cat).Advise(context.Background(), d, nil, Options{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if !(a.Factor < 1) || len(a.Changes) == 0 || !strings.Contains(a.Now(), "No steady temperature") {
+		t.Fatalf("factor %g, %d changes: %s", a.Factor, len(a.Changes), a.Now())
+	}
+	c := firsts(a)[ChangeCut]
+	if c == nil || math.Abs(section.LoadNamed(c.Doc, "motor").CurrentA.V-0.8*160) > 1e-9 {
+		t.Errorf("%+v", c)
+	}
+}
+
+// TestAdviseStops: cancelled, nothing more is solved; an unknown current is refused; without limits nothing is advised.
+func TestAdviseStops(t *testing.T) {
+	ctx, stop := context.WithCancel(context.Background())
+	d := read(t, aHeats)
+	stop()
+	if _, err := New(cat).Advise(ctx, d, nil, Options{}); !errors.Is(err, context.Canceled) {
+		t.Errorf("cancelled: %v", err)
+	}
+	unknown := section.ChangeLoad(d, "bell", func(l *section.Load) { l.CurrentA, l.Unknown = section.Opt[float64]{}, true })
+	var no *Refusal
+	if _, err := New(cat).Advise(context.Background(), unknown, nil, Options{}); !errors.As(err, &no) {
+		t.Errorf("unknown: %v", err)
+	}
+	bare := read(t, strings.NewReplacer(", limit_c: 70", "").Replace(oneWire))
+	a, err := New(cat).Advise(context.Background(), bare, nil, Options{})
+	if err != nil || len(a.Changes) > 0 || a.Governs != "" {
+		t.Errorf("%+v, %v", a, err)
 	}
 }

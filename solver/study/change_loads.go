@@ -148,14 +148,15 @@ func (a *adviser) split() {
 	if sums[1] > sums[0] {
 		keep = 1
 	}
-	go1 := halves[1-keep]
-	parts := wholeParts(a.w, go1)
-	if len(parts) == 0 || len(parts) == len(a.w.Parts) {
+	const worth = 0.2 // of all heat: less is no half
+	leave := halves[1-keep]
+	parts := wholeParts(a.w, leave)
+	if len(parts) == 0 || sums[1-keep] < worth*(sums[0]+sums[1]) || len(parts) == len(a.w.Parts) {
 		return
 	}
 	a.add(candidate{
-		kind: ChangeSplit, ids: go1, always: true,
-		text: fmt.Sprintf("Split it: lay %s into a second holder like this one; %s left here", list(go1), list(halves[keep])+isAre(halves[keep])),
+		kind: ChangeSplit, ids: leave, always: true,
+		text: fmt.Sprintf("Split it: lay %s into a second holder like this one; %s left here", list(leave), list(halves[keep])+isAre(halves[keep])),
 		make: func(d *section.Document) (*section.Document, bool) { return section.Delete(d, parts...), true },
 	})
 }

@@ -114,20 +114,34 @@ func (a *adviser) paint() {
 	}
 	a.add(candidate{
 		kind: ChangePaint, always: true, text: "Paint the " + h.Kind + " outside, in a light colour",
-		make: func(d *section.Document) (*section.Document, bool) {
-			return d.With(func(d *section.Document) {
-				name := "paint"
-				for slices.ContainsFunc(d.Materials, func(m section.Material) bool { return m.Name == name }) {
-					name += "-light"
-				}
-				d.Materials = append(slices.Clip(d.Materials), section.Material{
-					Name: name, KWMK: paintK, Emissivity: section.Some(paintEmits), Absorptivity: section.Some(paintAbsorbs), Source: "handbooks, from memory; light colour",
-				})
-				d.Holder.Layers = append(slices.Clip(d.Holder.Layers), section.Layer{Material: name, ThicknessMM: paintMM})
-			}), true
-		},
+		make: func(d *section.Document) (*section.Document, bool) { return a.s.painted(d), true },
 	})
 }
+
+// painted gives the outside a coat. A holder from the catalogue takes no layers of its own, so it is written out.
+func (s *Study) painted(d *section.Document) *section.Document {
+	coat := section.Material{
+		Name: "paint", KWMK: paintK, Emissivity: section.Some(paintEmits), Absorptivity: section.Some(paintAbsorbs), Source: "light paint: handbooks, from memory",
+	}
+	h := d.Holder
+	if row, ok := s.cat.Holder(h.Stock); ok {
+		h.Stock = ""
+		h.Layers = []section.Layer{{Material: row.Wall, ThicknessMM: micron(row.WallM)}}
+		if row.InsideM > 0 {
+			h.InsideMM = section.Some(micron(row.InsideM))
+		} else {
+			h.WidthMM, h.HeightMM = section.Some(micron(row.WidthM)), section.Some(micron(row.HeightM))
+		}
+	}
+	for slices.ContainsFunc(d.Materials, func(m section.Material) bool { return m.Name == coat.Name }) {
+		coat.Name += "-light"
+	}
+	h.Layers = append(slices.Clip(h.Layers), section.Layer{Material: coat.Name, ThicknessMM: paintMM})
+	return section.SetHolder(d.With(func(d *section.Document) { d.Materials = append(slices.Clip(d.Materials), coat) }), h)
+}
+
+// micron writes metres in millimetres, to a micrometre.
+func micron(m float64) float64 { return math.Round(m*1e6) / 1e3 }
 
 // emissivity of a material of the design or the catalogue; 1 for what nobody knows.
 func (a *adviser) emissivity(id string) float64 {
