@@ -12,6 +12,7 @@ import (
 	"packrise/solver/heat"
 	"packrise/solver/quantity"
 	"packrise/solver/rating"
+	"packrise/solver/rules"
 	"packrise/solver/section"
 	"packrise/solver/study"
 )
@@ -138,6 +139,9 @@ func rowOf(r *study.Ratings, i int) (row [7]string) {
 			if l.ID == c.Load {
 				row[2] = study.Amps(now * l.Rely.Factor)
 			}
+			if l.ID == c.Load && l.Rely.Hopeless {
+				row[2] = "none" // the others as given leave no room
+			}
 		}
 	}
 	if al := r.Alone[i]; al.Why == "" {
@@ -165,20 +169,8 @@ func printCodes(a *app, r *study.Ratings) {
 		for _, n := range o.Counts {
 			fmt.Fprintf(a.out, "  %s\n", n.Text)
 		}
-		seen := map[string]bool{}
-		for _, w := range o.Conductors {
-			var steps []string
-			for _, s := range w.Steps {
-				steps = append(steps, s.Text)
-			}
-			text := strings.Join(steps, "; ")
-			if text == "" {
-				text = w.Why
-			}
-			if text != "" && !seen[text] {
-				seen[text] = true
-				fmt.Fprintf(a.out, "  %s: %s\n", w.ID, text)
-			}
+		for _, line := range arithmetic(o) {
+			fmt.Fprintf(a.out, "  %s\n", line)
 		}
 		if o.Fill != nil {
 			fmt.Fprintf(a.out, "  %s\n", o.Fill.Text)
@@ -202,6 +194,33 @@ func printCodes(a *app, r *study.Ratings) {
 	for _, e := range r.Bands.Largest(5) {
 		fmt.Fprintf(a.out, "%s\n", e)
 	}
+}
+
+// arithmetic writes the steps of a rule set, one line for all conductors that have the same.
+func arithmetic(o *rules.Outcome) (out []string) {
+	ids := map[string][]string{}
+	var order []string
+	for _, w := range o.Conductors {
+		var steps []string
+		for _, s := range w.Steps {
+			steps = append(steps, s.Text)
+		}
+		text := strings.Join(steps, "; ")
+		if text == "" {
+			text = strings.TrimPrefix(w.Why, w.ID+": ")
+		}
+		if text == "" {
+			continue
+		}
+		if ids[text] == nil {
+			order = append(order, text)
+		}
+		ids[text] = append(ids[text], w.ID)
+	}
+	for _, text := range order {
+		out = append(out, study.List(ids[text])+": "+text)
+	}
+	return out
 }
 
 // rates is the JSON of `rate`.

@@ -58,14 +58,12 @@ func (s *Study) SoftFaults(ctx context.Context, d *section.Document, o Options) 
 	return out, err
 }
 
-// permitted are the currents to hold devices against: what each load may carry with the others as given, and each rule's.
+// permitted are the currents to hold devices against: what each conductor may carry to rely on when all loads go together, and each rule's.
 func permitted(p *Permits, c *Codes) []rules.Permitted {
 	own := rules.Permitted{By: Computed, A: map[string]float64{}}
-	for _, l := range p.Loads {
-		if a := l.NowA * l.Rely.Factor; !math.IsInf(a, 1) {
-			for _, id := range l.Conductors {
-				own.A[id] = a
-			}
+	for _, w := range p.Base.Conductors {
+		if a := w.CurrentA.V * p.All.Rely.Factor; w.CurrentA.V > 0 && !math.IsInf(a, 1) {
+			own.A[w.ID] = a
 		}
 	}
 	out := []rules.Permitted{own}

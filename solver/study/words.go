@@ -17,6 +17,9 @@ func list(ids []string) string {
 	return strings.Join(ids[:most], ", ") + " and " + count(len(ids)-most, "other")
 }
 
+// List writes ids for people: all of a few, else the first and how many more.
+func List(ids []string) string { return list(ids) }
+
 func count(n int, what string) string {
 	s := strconv.Itoa(n) + " " + what
 	if n != 1 {
