@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"math"
 
 	"packrise/solver/rating"
@@ -41,14 +42,32 @@ type within struct {
 
 func (a *adviser) inside() within {
 	inv, _ := rating.Take(a.w, a.s.cat)
-	in := within{falls: a.w.Holder.Kind == section.Conduit || a.w.Holder.Kind == section.Wireway}
-	switch inv.Holder.Kind {
+	return insideOf(a.w, &inv.Holder)
+}
+
+func insideOf(d *section.Document, h *rating.Enclosing) within {
+	in := within{falls: d.Holder.Kind == section.Conduit || d.Holder.Kind == section.Wireway}
+	switch h.Kind {
 	case section.Wireway:
-		in.w, in.h = inv.Holder.WidthMM, inv.Holder.HeightMM
+		in.w, in.h = h.WidthMM, h.HeightMM
 	case section.Conduit, section.Jacket:
-		in.r = inv.Holder.InsideMM / 2
+		in.r = h.InsideMM / 2
 	}
 	return in
+}
+
+// before orders places for one more part: where parts fall the lowest, else the nearest to the middle.
+func (in within) before(a, b section.Point, discs []disc) int {
+	if in.falls {
+		return cmp.Or(cmp.Compare(round3(a.Y), round3(b.Y)), cmp.Compare(a.X, b.X))
+	}
+	x, y := 0.0, 0.0
+	if in.r <= 0 {
+		for _, d := range discs {
+			x, y = x+d.x/float64(len(discs)), y+d.y/float64(len(discs))
+		}
+	}
+	return cmp.Or(cmp.Compare(round3(math.Hypot(a.X-x, a.Y-y)), round3(math.Hypot(b.X-x, b.Y-y))), cmp.Compare(a.Y, b.Y), cmp.Compare(a.X, b.X))
 }
 
 // free lists places where a part touches two others, or one and the wall, and overlaps nothing; where parts fall, only those that it rests in.
