@@ -111,6 +111,7 @@ func printRates(a *app, file string, r *study.Ratings) {
 	}
 	t.Flush()
 	printCodes(a, r)
+	printWhy(a, r)
 	for _, n := range r.Base.Notes {
 		fmt.Fprintf(a.out, "Note: %s.\n", n)
 	}
@@ -240,6 +241,7 @@ type rates struct {
 	MarginK    float64               `json:"design_margin_k"`
 	Notes      []string              `json:"notes"`
 	Caution    string                `json:"caution"`
+	whyJSON
 }
 
 type scaleJSON struct {
@@ -331,6 +333,7 @@ func ratesOf(r *study.Ratings) rates {
 		Lowest: map[string]lowestJSON{},
 	}
 	out.Answer, out.Amperes = r.Sentence()
+	out.whyJSON = whyOf(r)
 	for i := range r.Base.Conductors {
 		out.Conductors = append(out.Conductors, ratedOf(r, i))
 		l := r.Lowest[i]

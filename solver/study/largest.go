@@ -23,6 +23,7 @@ type Optimum struct {
 	Doc     *section.Document
 	// Hopeless: something is over with these loads off; all are 0. Unbounded: nothing here has a limit.
 	Hopeless, Unbounded bool
+	Weighted            bool // other weights than 1 were given
 }
 
 // LoadAmperes is what one load then carries, in each conductor.
@@ -77,7 +78,7 @@ func (s *Study) optimum(ctx context.Context, d *section.Document, weights map[st
 	}
 	list := things(off)
 	_, k, ok := closest(list, room)
-	none := Optimum{Loads: m.zeros(), Result: off, Doc: m.with(d, 0)}
+	none := Optimum{Loads: m.zeros(), Result: off, Doc: m.with(d, 0), Weighted: weights != nil}
 	switch {
 	case !ok || len(m.loads) == 0:
 		none.Unbounded = !ok
@@ -91,7 +92,9 @@ func (s *Study) optimum(ctx context.Context, d *section.Document, weights map[st
 		none.Hopeless = good == nil
 		return none, err
 	}
-	return good.optimum(m, d, room), nil
+	out := good.optimum(m, d, room)
+	out.Weighted = weights != nil
+	return out, nil
 }
 
 func newSummed(d *section.Document, weights map[string]float64) *summed {
@@ -230,5 +233,9 @@ func (b *Optimum) Sentence() string {
 	for _, l := range b.Loads {
 		each = append(each, l.ID+" "+Amps(l.A))
 	}
-	return "Largest sum of the loads' currents: " + quantity.Trimmed(quantity.RoundDown(b.Sum, 1), 1) + " A (" + listAnd(each) + "), held by " + list(b.Governs) + "."
+	what := "sum"
+	if b.Weighted {
+		what = "weighted sum"
+	}
+	return "Largest " + what + " of the loads' currents: " + quantity.Trimmed(quantity.RoundDown(b.Sum, 1), 1) + " A (" + listAnd(each) + "), held by " + list(b.Governs) + "."
 }

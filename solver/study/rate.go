@@ -38,6 +38,7 @@ type Ratings struct {
 	Lowest    []Lowest // in the order of Base.Conductors
 	Protected []rules.Protected
 	Faults    []SoftFault
+	Largest   *Largest // sum of the loads' currents; nil where fewer than two carry one
 	// Done tells how far the answer is: what a later stage brings is nil until then.
 	Done Stage
 }
@@ -55,10 +56,11 @@ const (
 	StageCodes                    // code tables, terminals, devices, and the lowest of all
 	StageAlone                    // each conductor alone here, and three of it
 	StageFaults                   // each circuit at the tripping current of its device
+	StageLargest                  // the largest sum of the loads' currents
 )
 
 // Last is the last stage.
-const Last = StageFaults
+const Last = StageLargest
 
 // Rate answers in stages; o.Stage, if there is one, gets a copy after each. base may be nil, or the solution of d at standard accuracy.
 func (s *Study) Rate(ctx context.Context, d *section.Document, base *rating.Result, o Options) (*Ratings, error) {
@@ -69,7 +71,17 @@ func (s *Study) Rate(ctx context.Context, d *section.Document, base *rating.Resu
 	for _, stage := range []struct {
 		is Stage
 		do func() error
-	}{{StageAll, r.all}, {StageBands, r.bands}, {StageHeaters, r.heaters}, {StageCases, r.cases}, {StageLoads, r.loads}, {StageCodes, r.codes}, {StageAlone, r.alone}, {StageFaults, r.faults}} {
+	}{
+		{StageAll, r.all},
+		{StageBands, r.bands},
+		{StageHeaters, r.heaters},
+		{StageCases, r.cases},
+		{StageLoads, r.loads},
+		{StageCodes, r.codes},
+		{StageAlone, r.alone},
+		{StageFaults, r.faults},
+		{StageLargest, r.largest},
+	} {
 		if err := stage.do(); err != nil {
 			return nil, err
 		}
@@ -216,6 +228,19 @@ func (r *rater) codes() error {
 
 func (r *rater) faults() (err error) {
 	r.out.Faults, err = r.s.SoftFaults(r.ctx, r.out.Doc, r.o)
+	return err
+}
+
+func (r *rater) largest() (err error) {
+	n := 0
+	for i := range r.out.Doc.Loads {
+		if r.out.Doc.Loads[i].CurrentA.V > 0 {
+			n++
+		}
+	}
+	if n > 1 {
+		r.out.Largest, err = r.s.Largest(r.ctx, r.out.Doc, r.out.Base, r.out.Spreads, nil, r.o)
+	}
 	return err
 }
 
