@@ -51,7 +51,7 @@ func NewDetails(k *Desk) *Details {
 
 func (d *Details) changed(c Changed) {
 	moved := !slices.Equal(d.selection, d.desk.Selection())
-	if c&(ChangedDocument|ChangedResult) == 0 && !moved {
+	if c&(ChangedDocument|ChangedResult|ChangedRatings) == 0 && !moved {
 		return // pointed at
 	}
 	d.rewrite(c&ChangedDocument != 0 || moved)
@@ -127,7 +127,7 @@ func (d *Details) refill() {
 	if d.folded {
 		return
 	}
-	ins := wholeInputs(d.desk)
+	ins := designInputs(d.desk)
 	if len(d.selection) > 0 {
 		ins = inputsOf(d.desk, d.selection)
 	}
@@ -202,12 +202,41 @@ func (d *Details) relay() {
 		objects = append(objects, f)
 	}
 	same := slices.Equal(objects, d.column.Objects)
+	held := d.held(objects)
+	was := float32(0)
+	if held != nil {
+		was = held.Position().Y
+	}
 	d.column.Objects = objects
 	d.column.Layout.Layout(objects, fyne.NewSize(d.scroll.Size().Width, 0))
 	if tall := d.column.MinSize(); !same || tall != d.tall {
 		d.tall = tall
 		d.scroll.Refresh()
 	}
+	if held != nil && held.Position().Y != was {
+		d.scroll.ScrollToOffset(d.scroll.Offset.AddXY(0, held.Position().Y-was))
+	}
+}
+
+// held is the sentence or field that the person is typing in: it stays where it is while sentences above it come and go.
+func (d *Details) held(objects []fyne.CanvasObject) fyne.CanvasObject {
+	c := fyne.CurrentApp().Driver().CanvasForObject(d)
+	if c == nil || c.Focused() == nil {
+		return nil
+	}
+	for _, o := range objects {
+		switch o := o.(type) {
+		case *prose:
+			if o.entry != nil && c.Focused() == fyne.Focusable(o.entry) {
+				return o
+			}
+		case *field:
+			if c.Focused() == fyne.Focusable(o.entry) {
+				return o
+			}
+		}
+	}
+	return nil
 }
 
 const (

@@ -42,7 +42,7 @@ func TestDetailsTellOfConductors(t *testing.T) {
 	b.Select("L2")
 	mustTell(t, d, "It runs at 86 °C; its limit is 90 °C (THHN, dry), margin 4 K.", "It lies at x 0 mm, y −9 mm.")
 	b.Select("N1")
-	mustTell(t, d, "It is in no load: its current is unknown.")
+	mustTell(t, d, "It is in no load: its current is unknown; its role: line.")
 	b.Select("L1", "L10")
 	mustTell(t, d, "2 conductors · L1, L10", "They carry different currents", "L1 is over its limit by 2 K.")
 }
@@ -227,7 +227,7 @@ func BenchmarkDetails200(b *testing.B) {
 func TestDetailsScroll(t *testing.T) {
 	b := newBench(t, benchDesign)
 	d := NewDetails(b.Desk)
-	c := b.show(d, 420, 320)
+	c := b.show(d, 420, 520)
 	b.Select("L1")
 	f := d.known["circuit"]
 	at := fyne.CurrentApp().Driver().AbsolutePositionForObject(f.entry).AddXY(20, 10)

@@ -9,6 +9,7 @@ import (
 	"packrise/solver/quantity"
 	"packrise/solver/rating"
 	"packrise/solver/section"
+	"packrise/solver/study"
 )
 
 // paragraph is one sentence or heading of the details.
@@ -22,6 +23,9 @@ type telling struct {
 	result *rating.Result // nil: none that may be shown
 	aged   bool           // the result belongs to an older section
 	out    []paragraph
+
+	ratings     *study.Ratings // nil: none that may be shown
+	agedRatings bool           // they belong to an older section
 }
 
 // tell returns the sentences about the selection, the title first.
@@ -30,6 +34,7 @@ func tell(k *Desk) []paragraph {
 	t := &telling{k: k, doc: k.Document(), shapes: shapes}
 	r, fresh := k.Result()
 	t.result, t.aged = r, !fresh && k.Stale()
+	t.ratings, t.agedRatings = k.shownRatings()
 	switch ids := k.Selection(); {
 	case len(ids) == 0:
 		t.whole()
@@ -90,6 +95,7 @@ func (t *telling) one(id string) {
 		t.cable(id, *p)
 	}
 	t.place(*p, in)
+	t.seat(in)
 	t.wrong(id)
 }
 
@@ -116,6 +122,13 @@ func (t *telling) core(id string, p section.Part, in []*input) {
 	t.out = append(t.out, append(title, t.over(id)...))
 	t.carries(id, p, in)
 	t.runs(id, inputNamed(in, "limit"))
+	t.heaters(id)
+	t.worst(id)
+	t.may(id)
+	t.circuit(in)
+	if l := section.LoadOf(t.doc, id); l != nil {
+		t.checks(l.ID)
+	}
 }
 
 // metal is the diameter of a conductor's metal in mm, 0 if unknown.
@@ -140,14 +153,14 @@ func (t *telling) over(id string) []run {
 
 // carries tells what a conductor carries and makes.
 func (t *telling) carries(id string, p section.Part, in []*input) {
-	current, circuit := word(inputNamed(in, "current")), word(inputNamed(in, "circuit"))
+	current, circuit, role := word(inputNamed(in, "current")), word(inputNamed(in, "circuit")), word(inputNamed(in, "role"))
 	l := section.LoadOf(t.doc, id)
 	switch {
 	case l == nil && p.Role == section.RoleEarth:
-		t.add(say("It is an earth and needs no load."))
+		t.add(say("It is an "), role, say(" and needs no load."))
 		return
 	case l == nil:
-		t.add(say("It is in no load: its current is "), current, say("."))
+		t.add(say("It is in no load: its current is "), current, say("; its role: "), role, say("."))
 		return
 	}
 	with := ""
@@ -192,7 +205,7 @@ func (t *telling) runs(id string, limit *input) {
 	if !ok || math.IsNaN(row.temp) {
 		return
 	}
-	temp := withUnit(degrees(row.temp, row.limit), "°C")
+	temp := withUnit(degrees(row.temp, row.limit), "°C") + t.band(id)
 	if t.unknown(id) {
 		t.fact(say("Without its own heat it runs at "+temp+"; its limit is "), t.limitWord(limit, row.limitWords()), say("."))
 		return
@@ -211,6 +224,7 @@ func (t *telling) runs(id string, limit *input) {
 	} else {
 		t.fact(say("It runs at "+temp+"; its limit is "), bound, say(by+", margin "+withUnit(marginWords(row.temp, row.limit.V), "K")+"."))
 	}
+	t.close(id, row)
 	switch governs, hottest := t.result.Governing != nil && t.result.Governing.Part == id, t.result.Hottest == id; {
 	case governs && hottest:
 		t.fact(say("It governs, with the smallest margin of all, and is the hottest conductor."))

@@ -84,7 +84,7 @@ func (t *telling) runTogether(ids []string) {
 
 // whole tells of the section.
 func (t *telling) whole() {
-	in := wholeInputs(t.k)
+	in := designInputs(t.k)
 	title := word(inputNamed(in, "title"))
 	title.tone = strong
 	t.add(title)
@@ -99,6 +99,7 @@ func (t *telling) whole() {
 	t.out = append(t.out, append(ambient, say(".")))
 	t.around(in)
 	t.balance()
+	t.rates(in)
 	t.wrong("")
 	if t.result == nil || len(t.result.Notes) == 0 {
 		return

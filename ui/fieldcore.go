@@ -230,17 +230,23 @@ func readOptTemperature(text, otherwise string) (section.Opt[float64], string, e
 
 // roleInput is a conductor's role.
 func roleInput(k *Desk, ids []string) *input {
-	words := []string{section.RoleLine, section.RoleNeutral, section.RoleEarth, section.RoleControl, section.RoleSpare}
-	in := input{key: "role", label: "Role", choices: words, about: "What the conductor is for; an earth needs no load."}
-	return partInput(k, ids, in, func(p section.Part) string { return orWord(p.Role, section.RoleLine) },
-		func(text string) (string, func(section.Part) (section.Part, error), error) {
-			w, err := oneOf(text, words)
-			role := w
-			if role == section.RoleLine {
-				role = ""
+	words := []string{section.RoleLine, section.RoleNeutral, section.RoleEarth, section.RoleControl, section.RoleSpare, section.RoleSignal}
+	in := input{key: "role", label: "Role", choices: words, about: "What the conductor is for. An earth needs no load; a signal carries nothing that could warm it. Tables count by it."}
+	out := partInput(k, ids, in, func(p section.Part) string { return orWord(p.Role, section.RoleLine) }, nil)
+	out.read = func(text string) (string, func(*section.Document) *section.Document, error) {
+		w, err := oneOf(text, words)
+		role := w
+		if role == section.RoleLine {
+			role = ""
+		}
+		return w, func(d *section.Document) *section.Document {
+			for _, id := range ids {
+				d = section.SetRole(d, id, role) // with what names it as a neutral
 			}
-			return w, always(func(p section.Part) section.Part { p.Role = role; return p }), err
-		})
+			return d
+		}, err
+	}
+	return out
 }
 
 // coreLayerInputs are material and thickness of every layer of the cores, where they have equally many.

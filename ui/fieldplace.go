@@ -134,12 +134,14 @@ func inputsOf(k *Desk, ids []string) []*input {
 	case section.Core:
 		in = append(in, circuitInput(k, ids), currentInput(k, ids))
 		in = append(in, coreInputs(k, ids)...)
+		in = append(in, loadInputs(k, ids)...)
 	case section.Rod:
 		in = append(in, rodInputs(k, ids)...)
 	case section.Cable:
 		in = append(in, cableInputs(k, ids)...)
 	}
-	return append(in, placeInputs(k, ids)...)
+	in = append(in, placeInputs(k, ids)...)
+	return append(in, seatInputs(k, ids)...)
 }
 
 // kindOf returns the kind that all parts share, "" where they differ.

@@ -13,6 +13,9 @@ type reading struct {
 	by      string // what sets the limit
 }
 
+// noLimit is a temperature's limit where there is none.
+var noLimit section.Opt[float64]
+
 // readingOf returns the answer for a part or layer; ok is false where there is none.
 func readingOf(r *rating.Result, id string) (reading, bool) {
 	if r == nil {
