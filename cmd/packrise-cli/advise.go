@@ -73,6 +73,7 @@ func printAdvice(a *app, file string, v *study.Advice) {
 // advice is the JSON of `advise`.
 type advice struct {
 	Title    string       `json:"title"`
+	Case     string       `json:"case"` // "": the loads as written
 	Governs  *string      `json:"governs"`
 	RoomK    *float64     `json:"room_k"`
 	Factor   float64      `json:"at_factor"` // below 1: no steady temperature exists as written, all is compared at this factor on currents
@@ -100,7 +101,7 @@ type changeJSON struct {
 
 func adviceOf(v *study.Advice) advice {
 	out := advice{
-		Title: v.Base.Title, Governs: text(v.Governs), Factor: v.Factor, Screened: v.Screened, Solved: v.Solved, Changes: []changeJSON{},
+		Title: v.Base.Title, Case: v.Case, Governs: text(v.Governs), Factor: v.Factor, Screened: v.Screened, Solved: v.Solved, Changes: []changeJSON{},
 		Notes: append([]string{}, v.Base.Notes...), Caution: rating.Caution,
 	}
 	if v.Governs != "" {

@@ -19,6 +19,7 @@ type Advice struct {
 	Base    *rating.Result // at Factor
 	Governs string         // now; "" where nothing has a limit
 	RoomK   float64
+	Case    string   // the load case that all is compared in, the worst; "" the loads as written
 	Changes []Change // best first; every one of them helps
 	// Factor is 1; where the loads as written have no steady temperature, all is compared with all currents at this factor.
 	Factor   float64
@@ -55,7 +56,8 @@ type adviser struct {
 	ctx  context.Context
 	o    Options
 	d    *section.Document // as written
-	w    *section.Document // with currents taken at devices, and at the factor
+	w    *section.Document // as it is solved: see work
+	off  []string          // loads that the case leaves off by choice
 	p    *rating.Point
 	e    [][]float64 // K per W/m with resistances following
 	list []thing
@@ -66,9 +68,12 @@ type adviser struct {
 }
 
 // Advise looks at every single change that might help, screens them to first order, solves the best in full and ranks them by what they gain:
-// the least room of anything, in kelvins. base may be nil.
+// the least room of anything, in kelvins. Of a design with load cases the worst is taken. base may be nil.
 func (s *Study) Advise(ctx context.Context, d *section.Document, base *rating.Result, o Options) (*Advice, error) {
 	a := &adviser{s: s, ctx: ctx, o: o, d: d, out: Advice{Factor: 1}}
+	if err := a.situation(base); err != nil {
+		return nil, err
+	}
 	if err := a.start(); err != nil || a.out.Governs == "" {
 		return &a.out, err
 	}
@@ -82,6 +87,39 @@ func (s *Study) Advise(ctx context.Context, d *section.Document, base *rating.Re
 		return nil, err
 	}
 	return &a.out, nil
+}
+
+// situation takes the case with the least room, with the worst choice of what it leaves open, if that is worse than the loads as written.
+func (a *adviser) situation(base *rating.Result) error {
+	d, loads, _ := AtDevices(a.d)
+	if len(d.Cases) == 0 {
+		return nil
+	}
+	worst := solved{r: base}
+	if base == nil || len(loads) > 0 {
+		var err error
+		if worst.r, err = a.s.solve(a.ctx, d, a.o); err != nil {
+			return err
+		}
+	}
+	if err := known(worst.r, a.o); err != nil {
+		return err
+	}
+	worst.rank()
+	for i := range d.Cases {
+		var answer CaseAnswer
+		list, err := a.s.choices(a.ctx, d, &d.Cases[i], &answer, a.o)
+		if err != nil {
+			return err
+		}
+		for _, v := range list {
+			if v.k < worst.k {
+				worst = v
+				a.out.Case, a.off = d.Cases[i].ID, v.off
+			}
+		}
+	}
+	return nil
 }
 
 // start finds the working point: the design as it is, or, where it has no steady temperature, at lower currents.
@@ -116,9 +154,12 @@ func (a *adviser) start() error {
 	return nil
 }
 
-// work is what is solved of a design: unknown currents at their devices' ratings, all at the factor.
+// work is what is solved of a design: unknown currents at their devices' ratings, in the worst case, all at the factor.
 func (a *adviser) work(d *section.Document) *section.Document {
 	d, _, _ = AtDevices(d)
+	if a.out.Case != "" {
+		d = section.SwitchOff(section.WithCase(d, a.out.Case), a.off...)
+	}
 	if a.out.Factor == 1 {
 		return d
 	}
@@ -201,14 +242,8 @@ func (a *adviser) solve(picked []candidate) error {
 			}
 		}
 	}
-	slices.SortStableFunc(a.out.Changes, func(x, y Change) int {
-		switch {
-		case x.GainK > y.GainK+1e-6:
-			return -1
-		case x.GainK < y.GainK-1e-6:
-			return 1
-		}
-		return 0
+	slices.SortStableFunc(a.out.Changes, func(x, y Change) int { // by twentieths of a kelvin, so that the last digits of a solution decide nothing
+		return cmp.Compare(math.Round(20*y.GainK), math.Round(20*x.GainK))
 	})
 	a.out.Changes = a.out.Changes[:min(len(a.out.Changes), mostChanges)]
 	return nil
@@ -217,8 +252,11 @@ func (a *adviser) solve(picked []candidate) error {
 // Now says how it stands before any change.
 func (a *Advice) Now() string {
 	at := ""
+	if a.Case != "" {
+		at = "In case " + a.Case + ", the worst: "
+	}
 	if a.Factor < 1 {
-		at = fmt.Sprintf("No steady temperature exists with the loads as written; all is compared with %s of every current. ", Percent(a.Factor))
+		at += fmt.Sprintf("no steady temperature exists with all of the currents; all is compared with %s of them. ", Percent(a.Factor))
 	}
 	if a.Governs == "" {
 		return at + "Nothing here has a limit, so nothing tells what would help."

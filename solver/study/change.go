@@ -32,7 +32,7 @@ type Change struct {
 	Kind  string
 	IDs   []string // parts or loads
 	Text  string   // what to do
-	GainK float64  // least room of anything after less before; +Inf where no steady temperature existed before
+	GainK float64  // least room of anything after less before
 	AtK   float64  // the same at the thing that governs now; NaN where it is gone
 	// Governs after the change, with its temperature and limit.
 	Governs       string

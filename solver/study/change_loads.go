@@ -45,10 +45,12 @@ func (a *adviser) loads() {
 		if !a.warm(&l) {
 			continue
 		}
-		a.add(candidate{
-			kind: ChangeOff, ids: []string{l.ID}, text: "Switch off " + l.ID + " while the others run", room: a.expect(a.less(l.ID, 1), nil),
-			make: func(d *section.Document) (*section.Document, bool) { return section.SwitchOff(d, l.ID), true },
-		})
+		if !a.chosen(l.ID) { // of N that run, another would
+			a.add(candidate{
+				kind: ChangeOff, ids: []string{l.ID}, text: "Switch off " + l.ID + " while the others run", room: a.expect(a.less(l.ID, 1), nil),
+				make: func(d *section.Document) (*section.Document, bool) { return switchedOff(d, l.ID), true },
+			})
+		}
 		if parts := wholeParts(a.w, []string{l.ID}); len(parts) > 0 && len(parts) < len(a.w.Parts) {
 			a.add(candidate{
 				kind: ChangeOut, ids: parts, text: fmt.Sprintf("Lay the wires of %s elsewhere (%s)", l.ID, list(parts)), room: a.expect(a.less(l.ID, 1), l.Conductors),
@@ -63,12 +65,44 @@ func (a *adviser) loads() {
 			a.add(candidate{
 				kind: ChangeCut, ids: []string{l.ID}, room: a.expect(a.less(l.ID, 1-(1-cut)*(1-cut)), nil),
 				text: fmt.Sprintf("Cut %s by %.0f %%, from %s to %s", l.ID, 100*cut, Amps(now), Amps(now*(1-cut))),
-				make: func(d *section.Document) (*section.Document, bool) {
-					return section.WithStates(d, []section.CaseLoad{{Load: l.ID, CurrentA: now * (1 - cut)}}), true
-				},
+				make: func(d *section.Document) (*section.Document, bool) { return scaledLoad(d, l.ID, 1-cut), true },
 			})
 		}
 	}
+}
+
+// chosen tells whether a load is one of any N in the case.
+func (a *adviser) chosen(load string) bool {
+	c := section.CaseNamed(a.d, a.out.Case)
+	return c != nil && slices.ContainsFunc(c.Any, func(g section.AnyOf) bool { return has(g.Of, load) })
+}
+
+// states changes what cases say of one load.
+func states(d *section.Document, load string, change func(*section.CaseLoad)) *section.Document {
+	for _, c := range d.Cases {
+		if i := slices.IndexFunc(c.Loads, func(l section.CaseLoad) bool { return l.Load == load }); i >= 0 {
+			c.Loads = slices.Clone(c.Loads)
+			change(&c.Loads[i])
+			d = section.SetCase(d, c)
+		}
+	}
+	return d
+}
+
+// switchedOff has a load off, in every case that names it too.
+func switchedOff(d *section.Document, load string) *section.Document {
+	return states(section.SwitchOff(d, load), load, func(l *section.CaseLoad) { *l = section.CaseLoad{Load: load, Off: true} })
+}
+
+// scaledLoad has a factor on the currents of a load, as written and in every case that names it. An unknown one is its device's rating.
+func scaledLoad(d *section.Document, load string, factor float64) *section.Document {
+	at, _, _ := AtDevices(d)
+	now := section.LoadNamed(at, load).CurrentA
+	d = states(d, load, func(l *section.CaseLoad) { l.CurrentA *= factor })
+	if !now.OK {
+		return d
+	}
+	return section.WithStates(d, []section.CaseLoad{{Load: load, CurrentA: now.V * factor}})
 }
 
 // wholeParts are the parts of the top level whose conductors are all in the loads: what goes when the loads go.

@@ -17,9 +17,21 @@ func (a *adviser) outside() {
 	if c := a.w.Surroundings.AmbientC; c.OK {
 		a.add(candidate{
 			kind: ChangeAmbient, always: true, text: fmt.Sprintf("Bring the ambient down by %.0f K, to %s", lowerK, degrees(c.V-lowerK)),
-			make: func(d *section.Document) (*section.Document, bool) { return warmer(d, -lowerK), true },
+			make: func(d *section.Document) (*section.Document, bool) { return cooler(d), true },
 		})
 	}
+}
+
+// cooler has every ambient lower, those of the cases too.
+func cooler(d *section.Document) *section.Document {
+	d = warmer(d, -lowerK)
+	for _, c := range d.Cases {
+		if c.AmbientC.OK {
+			c.AmbientC.V -= lowerK
+			d = section.SetCase(d, c)
+		}
+	}
+	return d
 }
 
 func (a *adviser) holder() {

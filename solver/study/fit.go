@@ -62,7 +62,7 @@ func (s *Study) Fit(ctx context.Context, d *section.Document, base *rating.Resul
 	if err := known(base, o); err != nil {
 		return nil, err
 	}
-	f := &fitter{s: s, ctx: ctx, o: o, docs: []*section.Document{d}, solved: map[int]*rating.Result{0: base}, out: Fit{ID: id}}
+	f := &filler{s: s, ctx: ctx, o: o, docs: []*section.Document{d}, solved: map[int]*rating.Result{0: base}, out: Fit{ID: id}}
 	f.rule()
 	if err := f.room(); err != nil {
 		return nil, err
@@ -73,7 +73,7 @@ func (s *Study) Fit(ctx context.Context, d *section.Document, base *rating.Resul
 	return f.finish()
 }
 
-type fitter struct {
+type filler struct {
 	s      *Study
 	ctx    context.Context
 	o      Options
@@ -98,7 +98,7 @@ func (s *Study) outsides(d *section.Document) map[string]float64 {
 }
 
 // rule: the least of what rules with a limit of fill let in.
-func (f *fitter) rule() {
+func (f *filler) rule() {
 	d := f.docs[0]
 	c := f.s.Codes(d, f.o.Dir)
 	across := f.s.outsides(d)[f.out.ID]
@@ -129,7 +129,7 @@ func (f *fitter) rule() {
 }
 
 // room puts in one after the other while a place is found.
-func (f *fitter) room() error {
+func (f *filler) room() error {
 	switch f.docs[0].Holder.Kind {
 	case section.NoHolder:
 		f.out.Room = HowMany{Known: true, Text: "a bare part has no room for others"}
@@ -193,7 +193,7 @@ func (s *Study) oneMore(d *section.Document, id string) (*section.Document, bool
 }
 
 // heat finds by bisection how many more leave everything its design margin.
-func (f *fitter) heat() error {
+func (f *filler) heat() error {
 	d := f.docs[0]
 	margin := MarginK(d)
 	fits := func(n int) (bool, error) {
@@ -245,7 +245,7 @@ func (f *fitter) heat() error {
 }
 
 // finish finds what stops first.
-func (f *fitter) finish() (*Fit, error) {
+func (f *filler) finish() (*Fit, error) {
 	o := &f.out
 	o.N = len(f.docs) - 1
 	for _, m := range []struct {
