@@ -261,7 +261,7 @@ func (t *telling) rates(in []*input) {
 	}
 	t.out = append(t.out, append(sentence, say(".")))
 	t.add(
-		say("Rules beside it: "), word(inputNamed(in, "rules")), say("; "), word(inputNamed(in, "inside")), say("; method "), word(inputNamed(in, "method")),
+		say("Rules beside it: "), word(inputNamed(in, "rules")), say("; "), word(inputNamed(in, "lies-in")), say("; method "), word(inputNamed(in, "method")),
 		say("; "), word(inputNamed(in, "arrangement")), say("."),
 	)
 	t.add(

@@ -202,7 +202,7 @@ var arrangementWords = []wordPair{
 }
 
 func insideInput(k *Desk) *input {
-	in := input{key: "inside", label: "It lies", about: "Inside a listed panel or on a machine their own standards count, and not the wiring rules of buildings."}
+	in := input{key: "lies-in", label: "It lies", about: "Inside a listed panel or on a machine their own standards count, and not the wiring rules of buildings."}
 	return pairInput(in, insideWords, k.Document().Rules.Inside, func(d *section.Document, id string) { d.Rules.Inside = id })
 }
 
