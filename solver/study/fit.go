@@ -194,8 +194,11 @@ func (s *Study) oneMore(d *section.Document, id string) (*section.Document, bool
 
 // heat finds by bisection how many more leave everything its design margin.
 func (f *filler) heat() error {
-	d := f.docs[0]
-	margin := MarginK(d)
+	margin := MarginK(f.docs[0])
+	if _, _, ok := closest(things(f.solved[0]), nominal); !ok && f.solved[0].Status == heat.Converged {
+		f.out.Heat.Text = "nothing here has a limit, so temperature says nothing"
+		return nil
+	}
 	fits := func(n int) (bool, error) {
 		r := f.solved[n]
 		if r == nil {
@@ -238,6 +241,8 @@ func (f *filler) heat() error {
 	switch {
 	case lo < 0:
 		f.out.Heat.Text = fmt.Sprintf("none by temperature: something has less than %s K left already", trimmed(margin))
+	case len(f.docs) == 1:
+		f.out.Heat.Text = "temperature was not tried for more"
 	case f.out.Heat.More:
 		f.out.Heat.Text = fmt.Sprintf("temperature does not stop the %d that were tried, each loaded like %s", n, f.out.ID)
 	}
@@ -280,7 +285,7 @@ func (f *Fit) Sentence() string {
 			s += "; " + m.Text
 		}
 	}
-	if f.NextName != "" {
+	if f.NextName != "" && (f.Stops == StopsRule || f.Stops == StopsRoom) {
 		s += "; next size: " + f.NextName
 	}
 	return s + "."

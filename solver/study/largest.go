@@ -83,7 +83,7 @@ func (s *Study) optimum(ctx context.Context, d *section.Document, weights map[st
 	case !ok || len(m.loads) == 0:
 		none.Unbounded = !ok
 		return none, nil
-	case k < 0 || off.Status != heat.Converged:
+	case k < 0 || off.Status == heat.ThermalRunaway:
 		none.Hopeless = true
 		return none, nil
 	}
