@@ -10,7 +10,7 @@ type bar struct {
 	back    *fill
 	put     fyne.CanvasObject
 	buttons []fyne.CanvasObject
-	right   []fyne.CanvasObject // at the right end
+	right   []fyne.CanvasObject // at the right end; the first gives way where there is no room for all
 }
 
 const (
@@ -40,6 +40,10 @@ func (b *bar) MinSize([]fyne.CanvasObject) fyne.Size {
 // Layout gives the line to put things in what the buttons leave.
 func (b *bar) Layout(objects []fyne.CanvasObject, s fyne.Size) {
 	b.back.Resize(s)
+	if len(b.right) > 1 { // its command stands in a menu too
+		b.right[0].Show()
+		setVisible(b.MinSize(objects).Width <= s.Width, b.right[0])
+	}
 	least := b.MinSize(objects).Width
 	wide := min(putMost, max(putLeast, putLeast+s.Width-least))
 	h := b.put.MinSize().Height
@@ -74,7 +78,7 @@ func elided(s string, most int) string {
 
 // commands are the buttons of the command row.
 type commands struct {
-	settle, layUp, undo, fit, out, in, details *widget.Button
+	settle, layUp, undo, fit, out, in, advice, details *widget.Button
 }
 
 func newCommands(w *Window) *commands {
@@ -85,6 +89,7 @@ func newCommands(w *Window) *commands {
 		fit:     widget.NewButton("Fit", w.view.Fit),
 		out:     widget.NewButton(minusSign, func() { w.view.Zoom(1 / zoomStep) }),
 		in:      widget.NewButton("+", func() { w.view.Zoom(zoomStep) }),
+		advice:  widget.NewButton(adviceTitle, w.asks.showAdvice),
 		details: widget.NewButton("Details", w.toggleDetails),
 	}
 }

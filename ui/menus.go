@@ -38,7 +38,7 @@ func item(label string, s fyne.Shortcut, f func()) *fyne.MenuItem {
 
 func newMenus(w *Window) *menus {
 	m := &menus{w: w, looks: map[Look]*fyne.MenuItem{}}
-	m.main = fyne.NewMainMenu(m.file(), m.edit(), m.section(), m.view(), m.help())
+	m.main = fyne.NewMainMenu(m.file(), m.edit(), m.section(), w.asks.menu(), m.view(), m.help())
 	m.follow()
 	return m
 }

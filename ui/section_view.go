@@ -40,6 +40,7 @@ type SectionView struct {
 
 	raster *canvas.Raster
 	wanted *canvas.Circle // where the pointer wants the part that it drags
+	ghost  *ghost
 	hint   *readout
 
 	drag    dragState
@@ -68,6 +69,7 @@ func NewSectionView(k *Desk) *SectionView {
 	v.wanted.StrokeWidth = 1.5
 	v.wanted.Hide()
 	v.hint = newReadout()
+	v.ghost = newGhost(v)
 	v.painter = newPainter(k.rooms.Hop, v.show)
 	v.ExtendBaseWidget(v)
 	k.picture = v.changed
@@ -157,6 +159,7 @@ func (v *SectionView) repaint() bool {
 		return false
 	}
 	v.placeLines()
+	v.ghost.follow()
 	if v.pic == nil || v.pic.view != view {
 		v.raster.Refresh()
 	}
@@ -245,7 +248,7 @@ func (r *sectionRenderer) Layout(s fyne.Size) {
 
 func (r *sectionRenderer) Objects() []fyne.CanvasObject {
 	v := r.v
-	return append([]fyne.CanvasObject{v.raster, v.wanted}, v.hint.objects()...)
+	return append([]fyne.CanvasObject{v.raster, v.ghost.raster, v.wanted}, v.hint.objects()...)
 }
 
 func (r *sectionRenderer) Refresh() {

@@ -35,6 +35,7 @@ type Window struct {
 	status  *quietLine
 	putLine fyne.CanvasObject
 	menu    *menus
+	asks    *asks
 	version string
 	trace   *tracer
 
@@ -89,6 +90,7 @@ func NewWindow(a fyne.App, o Options) *Window {
 // build makes the panes and lays them out.
 func (w *Window) build() {
 	k := w.desk
+	w.asks = newAsks(w, NewDetails(k))
 	w.cmds = newCommands(w)
 	w.putLine = NewPutLine(k)
 	w.status = newQuietLine()
@@ -97,11 +99,11 @@ func (w *Window) build() {
 	sentence.OnProblems, sentence.OnAssumed = w.showProblems, w.showSurroundings
 	f := &frame{
 		sentence: sentence,
-		bar:      newBar(w.putLine, []fyne.CanvasObject{c.settle, c.layUp, c.undo, c.fit, c.out, c.in}, []fyne.CanvasObject{c.details}),
+		bar:      newBar(w.putLine, []fyne.CanvasObject{c.settle, c.layUp, c.undo, c.fit, c.out, c.in}, []fyne.CanvasObject{c.advice, c.details}),
 		ladder:   NewLadder(k),
 		section:  w.view,
 		status:   w.status,
-		details:  NewDetails(k),
+		details:  w.asks.side,
 		list:     NewWireList(k),
 		caution:  newCaution(),
 
@@ -195,6 +197,7 @@ func (w *Window) ShowAndRun() {
 
 // Close ends what runs beside the window.
 func (w *Window) Close() {
+	w.asks.close()
 	w.view.Close()
 	w.desk.Close()
 }
