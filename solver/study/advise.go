@@ -77,7 +77,7 @@ func (s *Study) Advise(ctx context.Context, d *section.Document, base *rating.Re
 	if err := a.start(); err != nil || a.out.Governs == "" {
 		return &a.out, err
 	}
-	for _, look := range []func(){a.loads, a.idle, a.sizes, a.classes, a.outside, a.split, a.swaps, a.moves} {
+	for _, look := range []func(){a.loads, a.cables, a.idle, a.sizes, a.classes, a.outside, a.split, a.swaps, a.moves} {
 		if look(); ctx.Err() != nil {
 			return nil, context.Cause(ctx)
 		}

@@ -214,7 +214,7 @@ func TestAdviseScreen(t *testing.T) {
 		got, guess := r.Governing.MarginK-a.room, c.room-a.room
 		most := map[string]float64{ChangeMove: 3, ChangeSwap: 3}[c.kind]
 		if math.Abs(got-guess) > math.Max(most, 0.15*math.Abs(got)+0.5) {
-			t.Errorf("%s: expected %.2f K more room, got %.2f K", c.text, guess, got)
+			t.Errorf("%s: expected %.2f K more margin, got %.2f K", c.text, guess, got)
 		}
 	}
 	if screened < 8 {

@@ -79,7 +79,7 @@ func (a *adviser) judge(c *candidate, doc *section.Document, r *rating.Result) *
 			out.AtK = -less
 		}
 		if room := nominal(i, t); less > 0.5 && room < 3*DesignMarginK {
-			bad = append(bad, worse{fmt.Sprintf("%s has %s K less, at %s °C of %s °C", t.id, quantity.Fixed(less, 1),
+			bad = append(bad, worse{fmt.Sprintf("%s has %s K less margin, at %s °C of %s °C", t.id, quantity.Fixed(less, 1),
 				quantity.Trimmed(quantity.BesideLimit(t.tempC, t.limit.V), 1), quantity.Trimmed(t.limit.V, 1)), room})
 		}
 	}
@@ -143,7 +143,7 @@ func (s *Study) measure(d *section.Document, r *rating.Result) (m measured) {
 
 // Sentence says what a change does.
 func (c *Change) Sentence() string {
-	what := fmt.Sprintf("%s: %s K more room", c.Text, quantity.Fixed(quantity.RoundDown(c.GainK, 1), 1))
+	what := fmt.Sprintf("%s: %s K more margin", c.Text, quantity.Fixed(quantity.RoundDown(c.GainK, 1), 1))
 	what += fmt.Sprintf("; then %s governs, %s °C, limit %s °C", c.Governs, quantity.Trimmed(quantity.BesideLimit(c.TempC, c.LimitC), 1), quantity.Trimmed(c.LimitC, 1))
 	for _, v := range []struct {
 		is   float64

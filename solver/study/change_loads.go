@@ -133,6 +133,38 @@ func wholeParts(d *section.Document, loads []string) (out []string) {
 	return out
 }
 
+// cables: each with everything in it, where that is more than one load.
+func (a *adviser) cables() {
+	for i := range a.w.Parts {
+		id := a.w.Parts[i].ID
+		if a.w.Parts[i].Kind != section.Cable || len(a.w.Parts) < 2 {
+			continue
+		}
+		dq := map[int]float64{}
+		var inside []string
+		loads := map[string]bool{}
+		for j, c := range a.p.Conductors {
+			if strings.HasPrefix(c.ID, id+"/") {
+				dq[j] = -c.HeatWM
+				inside = append(inside, c.ID)
+				loads[c.Load] = true
+			}
+		}
+		if len(loads) < 2 { // with one it is among the loads
+			continue
+		}
+		for _, o := range a.list[len(a.p.Conductors):] {
+			if strings.HasPrefix(o.id, id+"/") {
+				inside = append(inside, o.id)
+			}
+		}
+		a.add(candidate{
+			kind: ChangeOut, ids: []string{id}, text: "Lay " + id + " elsewhere, with all that is in it", room: a.expect(dq, inside),
+			make: func(d *section.Document) (*section.Document, bool) { return section.Delete(d, id), true },
+		})
+	}
+}
+
 // idle: what governs and carries nothing may go.
 func (a *adviser) idle() {
 	id := a.out.Governs

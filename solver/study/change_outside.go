@@ -76,12 +76,15 @@ func (s *Study) larger(stock string) (next catalog.Holder, ok bool) {
 		return next, false
 	}
 	for _, h := range s.cat.Holders() {
-		if h.Kind == now.Kind && familyName(h.ID) == familyName(stock) && insideArea(h) > 1.001*insideArea(now) && (!ok || insideArea(h) < insideArea(next)) {
+		if h.Kind == now.Kind && familyName(h.ID) == familyName(stock) && insideArea(h) > worthwhile*insideArea(now) && (!ok || insideArea(h) < insideArea(next)) {
 			next, ok = h, true
 		}
 	}
 	return next, ok
 }
+
+// worthwhile is how much more area inside makes a holder the next larger one, and not another shape of the same.
+const worthwhile = 1.15
 
 func insideArea(h catalog.Holder) float64 {
 	if h.InsideM > 0 {

@@ -11,11 +11,12 @@ import (
 	"packrise/solver/section"
 )
 
-// cores are the parts that may change places: index of the conductor, diameter, group.
+// movable is a part that may change places: a core, or a cable of the top level.
 type movable struct {
-	j         int
+	js        []int // its conductors
 	id        string
-	prefix    string // of a cable, "" at the top level
+	prefix    string // of the cable that it lies in, "" at the top level
+	build     string // of a cable
 	outsideMM float64
 	group     string
 	at        section.Point
@@ -29,12 +30,26 @@ func (a *adviser) movables() (out []movable) {
 			continue
 		}
 		prefix := c.ID[:strings.LastIndex(c.ID, "/")+1]
-		out = append(out, movable{j, c.ID, prefix, inv.Wires[j].OutsideMM, p.Group, p.At.V})
+		out = append(out, movable{[]int{j}, c.ID, prefix, "", inv.Wires[j].OutsideMM, p.Group, p.At.V})
+	}
+	for i := range a.w.Parts {
+		p := &a.w.Parts[i]
+		if p.Kind != section.Cable || p.Pinned || !p.At.OK {
+			continue
+		}
+		m := movable{id: p.ID, build: p.Build, group: p.Group, at: p.At.V}
+		for j, c := range a.p.Conductors {
+			if strings.HasPrefix(c.ID, p.ID+"/") {
+				m.js = append(m.js, j)
+			}
+		}
+		out = append(out, m)
 	}
 	return out
 }
 
-// swaps: two conductors of one place exchange theirs. The matrix belongs to the places, the heats and limits go along.
+// swaps: two conductors of one place exchange theirs, or two cables of one construction. The matrix belongs to the places, the heats and limits go
+// along.
 func (a *adviser) swaps() {
 	list := a.movables()
 	for x := range list {
@@ -43,14 +58,10 @@ func (a *adviser) swaps() {
 		}
 		for _, n := range list[x+1:] {
 			m := list[x]
-			if m.prefix != n.prefix || m.group != n.group {
+			if m.prefix != n.prefix || m.group != n.group || m.build != n.build || len(m.js) != len(n.js) || a.alike(m, n) {
 				continue
 			}
-			qa, qb := a.p.Conductors[m.j].HeatWM, a.p.Conductors[n.j].HeatWM
-			if math.Abs(qa-qb) < 1e-9 && a.list[m.j].limit == a.list[n.j].limit {
-				continue
-			}
-			room := a.swapped(m.j, n.j, qb-qa)
+			room := a.swapped(m.js, n.js)
 			if room < a.room+leastGainK {
 				continue
 			}
@@ -69,23 +80,38 @@ func (a *adviser) swaps() {
 	}
 }
 
-// swapped is the least room when the heats at two places are exchanged, q more at the place i.
-func (a *adviser) swapped(i, j int, q float64) float64 {
+// alike tells whether it makes no difference which of two parts lies where.
+func (a *adviser) alike(m, n movable) bool {
+	for k, i := range m.js {
+		j := n.js[k]
+		if math.Abs(a.p.Conductors[i].HeatWM-a.p.Conductors[j].HeatWM) > 1e-9 || a.list[i].limit != a.list[j].limit {
+			return false
+		}
+	}
+	return true
+}
+
+// swapped is the least room when the conductors at two sets of places are exchanged, one by one.
+func (a *adviser) swapped(from, to []int) float64 {
 	least := math.Inf(1)
+	limit := map[int]section.Opt[float64]{}
+	for n, i := range from {
+		limit[i], limit[to[n]] = a.list[to[n]].limit, a.list[i].limit
+	}
 	for k, t := range a.list {
 		lim := t.limit
-		switch k {
-		case i:
-			lim = a.list[j].limit
-		case j:
-			lim = a.list[i].limit
+		if other, ok := limit[k]; ok {
+			lim = other
 		}
 		if !lim.OK || math.IsNaN(t.tempC) {
 			continue
 		}
 		c := t.tempC
 		if k < len(a.p.Conductors) {
-			c += q * (a.e[k][i] - a.e[k][j])
+			for n, i := range from {
+				j := to[n]
+				c += (a.p.Conductors[j].HeatWM - a.p.Conductors[i].HeatWM) * (a.e[k][i] - a.e[k][j])
+			}
 		}
 		least = math.Min(least, lim.V-c)
 	}
@@ -133,13 +159,13 @@ func (a *adviser) moves() {
 	if a.w.Holder.Kind == section.Apart || a.w.Holder.Kind == section.NoHolder || a.w.Holder.Flat() {
 		return
 	}
-	list := a.movables()
+	list := slices.DeleteFunc(a.movables(), func(m movable) bool { return len(m.js) != 1 || m.build != "" })
 	discs, ok := a.discs()
 	if !ok {
 		return
 	}
 	slices.SortStableFunc(list, func(x, y movable) int {
-		return cmp.Compare(a.share(y.j), a.share(x.j))
+		return cmp.Compare(a.share(y.js[0]), a.share(x.js[0]))
 	})
 	tried := 0
 	for _, m := range list {
@@ -182,9 +208,9 @@ func (a *adviser) moved(list []movable, m movable, to section.Point) float64 {
 	}
 	var about []near
 	for _, n := range list {
-		if n.j != m.j && n.prefix == "" {
+		if n.id != m.id && n.prefix == "" {
 			d := math.Hypot(n.at.X-to.X, n.at.Y-to.Y)
-			about = append(about, near{n.j, 1 / (d*d + 1e-3)})
+			about = append(about, near{n.js[0], 1 / (d*d + 1e-3)})
 		}
 	}
 	if len(about) == 0 {
@@ -204,7 +230,8 @@ func (a *adviser) moved(list []movable, m movable, to section.Point) float64 {
 		}
 		return k
 	}
-	q := a.p.Conductors[m.j].HeatWM
+	self := m.js[0]
+	q := a.p.Conductors[self].HeatWM
 	least := math.Inf(1)
 	for i, t := range a.list {
 		if !t.limit.OK || math.IsNaN(t.tempC) {
@@ -212,14 +239,14 @@ func (a *adviser) moved(list []movable, m movable, to section.Point) float64 {
 		}
 		c := t.tempC
 		switch {
-		case i == m.j:
+		case i == self:
 			for k := range a.p.Conductors {
-				if k != m.j {
-					c += (there(k) - a.e[m.j][k]) * a.p.Conductors[k].HeatWM
+				if k != self {
+					c += (there(k) - a.e[self][k]) * a.p.Conductors[k].HeatWM
 				}
 			}
 		case i < len(a.p.Conductors):
-			c += (there(i) - a.e[i][m.j]) * q
+			c += (there(i) - a.e[i][self]) * q
 		}
 		least = math.Min(least, t.limit.V-c)
 	}
