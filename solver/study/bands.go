@@ -281,7 +281,7 @@ func (b *bander) draw(random *rand.Rand, row []float64) {
 
 // sort brings the effects in the order of what they do to the governing thing.
 func (b *bander) sort() {
-	at, _, ok := closest(b.list, rely(b.out.Spreads, b.base.AmbientC, 0))
+	at, ok := governs(b.base, b.out.Spreads)
 	if len(b.lies) > 0 {
 		b.out.Effects = append(b.out.Effects, b.lyingEffect())
 	}

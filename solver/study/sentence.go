@@ -7,6 +7,7 @@ import (
 
 	"packrise/solver/heat"
 	"packrise/solver/quantity"
+	"packrise/solver/rating"
 )
 
 // Amps writes a permitted current, rounded down: two decimals below 10 A, one below 100 A, else none. "unlimited" where nothing reaches its limit.
@@ -46,12 +47,24 @@ func (r *Ratings) Band(i int) (low, high float64, ok bool) {
 
 // governing is the thing that decides the state: the least room with its band, as Sentence names it.
 func (r *Ratings) governing() (at int, ok bool) {
-	var spreads []Spread
-	if r.Bands != nil {
-		spreads = r.Bands.Spreads
+	if r.Bands == nil {
+		at, _, ok = closest(things(r.Base), nominal)
+		return at, ok
 	}
-	at, _, ok = closest(things(r.Base), rely(spreads, r.Base.AmbientC, 0))
-	return at, ok
+	return governs(r.Base, r.Bands.Spreads)
+}
+
+// governs is the thing with the least room to its limit, as pictures name it; where only P95 of another passes its limit, that one.
+func governs(r *rating.Result, spreads []Spread) (at int, ok bool) {
+	list, banded := things(r), rely(spreads, r.AmbientC, 0)
+	at, k, ok := closest(list, nominal)
+	if !ok || k < 0 || banded(at, list[at]) < 0 {
+		return at, ok
+	}
+	if other, k, _ := closest(list, banded); k < 0 {
+		return other, true
+	}
+	return at, true
 }
 
 // Sentence returns the answer: the state with what governs, its band and limit; and the amperes that go with it, to rely on first, each
@@ -69,11 +82,15 @@ func (r *Ratings) Sentence() (answer, amperes string) {
 	t := things(r.Base)[at]
 	var b strings.Builder
 	shown := quantity.Trimmed(quantity.BesideLimit(t.tempC, t.limit.V), 1)
-	fmt.Fprintf(&b, "%s. %s governs: %s °C", stateWord[r.StateHere], t.id, shown)
+	by := " governs"
+	if at < len(r.Base.Conductors) && r.Base.Conductors[at].HottestC > r.Base.Conductors[at].TempC+0.05 {
+		by += " by its insulation" // beside hotter neighbours
+	}
+	fmt.Fprintf(&b, "%s. %s%s: %s °C", stateWord[r.StateHere], t.id, by, shown)
 	if low, high, ok := r.Band(at); ok {
 		fmt.Fprintf(&b, " (%s)", bandText(low, high))
 	}
-	fmt.Fprintf(&b, ", limit %s °C (%s).", quantity.Trimmed(t.limit.V, 1), t.by)
+	fmt.Fprintf(&b, ", limit %s °C (%s), margin %s K.", quantity.Trimmed(t.limit.V, 1), t.by, quantity.Trimmed(t.limit.V-quantity.BesideLimit(t.tempC, t.limit.V), 1))
 	if r.Heater != "" {
 		fmt.Fprintf(&b, " %s heats it: %d %% of its rise.", r.Heater, r.HeaterShare)
 	}
@@ -129,11 +146,10 @@ func (r *Ratings) ampereLine(at int) string {
 	if r.Cases != nil {
 		whichever = ", whichever case runs,"
 	}
-	fmt.Fprintf(&b, "With all loads scaled together%s %s may carry %s to rely on, %s nominal", whichever, c.ID, Amps(now*r.All.Rely.Factor), Amps(now*r.All.Nominal.Factor))
+	fmt.Fprintf(&b, "With all loads scaled together%s %s may carry %s to rely on, %s nominal.", whichever, c.ID, Amps(now*r.All.Rely.Factor), Amps(now*r.All.Nominal.Factor))
 	if at < len(r.Lowest) {
 		r.beside(&b, at)
 	}
-	b.WriteString(".")
 	return b.String()
 }
 
@@ -143,22 +159,36 @@ func (r *Ratings) beside(b *strings.Builder, at int) {
 	for k := range r.Codes.Outcomes {
 		o := &r.Codes.Outcomes[k]
 		if a, ok := l.Rules[o.Rule]; ok && !o.Informative {
-			fmt.Fprintf(b, "; %s %s", o.Title, Amps(a))
+			fmt.Fprintf(b, " %s: %s.", o.Title, Amps(a))
 		}
 	}
 	if !math.IsNaN(l.Terminal) {
-		fmt.Fprintf(b, "; terminal %s", Amps(l.Terminal))
+		fmt.Fprintf(b, " %s: %s.", r.Codes.terminal(l.ID), Amps(l.Terminal))
 	}
 	if math.IsNaN(l.DeviceA) {
-		b.WriteString("; protection unknown, so this is not a device rating")
+		b.WriteString(" Protection unknown: not a device rating.")
 	} else {
-		fmt.Fprintf(b, "; device %s", Amps(l.DeviceA))
+		fmt.Fprintf(b, " Device: %s.", Amps(l.DeviceA))
 	}
 	if !math.IsNaN(l.A) {
-		because := map[string]string{Computed: "computed, to rely on", "terminal": "the terminal"}[l.Because]
+		because := map[string]string{Computed: "computed", "terminal": "the terminal"}[l.Because]
 		if because == "" {
 			because = l.Text
 		}
-		fmt.Fprintf(b, ". Lowest: %s (%s)", Amps(l.A), because)
+		fmt.Fprintf(b, " Lowest: %s (%s).", Amps(l.A), because)
 	}
+}
+
+// terminal says what caps a conductor at its end, and that nobody has said so where it is assumed.
+func (c *Codes) terminal(conductor string) string {
+	for i := range c.Caps {
+		switch k := &c.Caps[i]; {
+		case k.Conductor != conductor:
+		case k.Assumed && k.Kind == "terminal-block":
+			return "A terminal block, if it ends in one"
+		case k.Assumed:
+			return "Unmarked terminal"
+		}
+	}
+	return "Terminal"
 }
