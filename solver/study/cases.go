@@ -69,6 +69,9 @@ func (s *Study) Cases(ctx context.Context, d *section.Document, base *rating.Res
 	if len(d.Cases) == 0 {
 		return nil, nil
 	}
+	if err := known(base, o); err != nil {
+		return nil, err
+	}
 	out := &Cases{List: []CaseAnswer{{Of: 1, Tried: 1, BoundC: math.NaN(), Doc: d, Result: base, spread: spreads}}}
 	first := solved{doc: d, r: base}
 	first.rank()

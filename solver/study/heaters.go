@@ -21,6 +21,8 @@ const Around = "surroundings"
 type Heaters struct {
 	// Rows are the conductors of the result, in its order, and behind them the thing that was asked for if it is no conductor.
 	Rows []Heating
+	// Unknown are conductors whose currents nobody wrote: what they add is in no row.
+	Unknown []string
 }
 
 // Heating is where the rise of one thing comes from.
@@ -63,30 +65,33 @@ func (h Heating) Percent(from string) int {
 // Heaters splits the rise of every conductor of d, whose solution is base (nil: it is solved here), over what heats it, and that of the governing
 // thing if it is no conductor. nil where no steady temperature exists.
 func (s *Study) Heaters(ctx context.Context, d *section.Document, base *rating.Result, o Options) (*Heaters, error) {
+	if base == nil {
+		var err error
+		if base, err = s.solve(ctx, d, o); err != nil {
+			return nil, err
+		}
+	}
 	at := ""
-	if base != nil && base.Governing != nil {
+	if base.Governing != nil {
 		at = base.Governing.Part
 	}
-	return s.HeatersWith(ctx, d, base, at, o)
+	return s.HeatersWith(ctx, d, at, o)
 }
 
 // HeatersWith is Heaters with a row for another thing than the governing one: a layer, the outside, a rod.
 //
 // What all loads together add to a thing, over what it is with every load off, is split by K_ij·q_j: the influence matrix at the answer times
 // the heats. A thing that is no conductor has no row in the matrix; how it answers to half the heat of each load is solved in full.
-func (s *Study) HeatersWith(ctx context.Context, d *section.Document, base *rating.Result, thing string, o Options) (*Heaters, error) {
+func (s *Study) HeatersWith(ctx context.Context, d *section.Document, thing string, o Options) (*Heaters, error) {
 	p, r, err := s.point(ctx, d, o)
 	if err != nil || p == nil {
 		return nil, err
-	}
-	if base == nil || base.Status != heat.Converged {
-		base = r
 	}
 	off, err := s.solve(ctx, allOff(d), o)
 	if err != nil || off.Status == heat.ThermalRunaway { // with no heat at all a solution may stop early, and is right
 		return nil, err
 	}
-	h := &Heaters{}
+	h := &Heaters{Unknown: r.Unassigned}
 	for i, c := range r.Conductors {
 		var from []HeatShare
 		for j := range p.Sources {

@@ -83,7 +83,7 @@ func TestHeatersOfJacket(t *testing.T) {
 	s := New(cat)
 	ctx := context.Background()
 	d := demo(t, "roof-strings")
-	h, err := s.HeatersWith(ctx, d, nil, "outside", Options{AssumeIdle: true})
+	h, err := s.HeatersWith(ctx, d, "outside", Options{AssumeIdle: true})
 	if err != nil {
 		t.Fatal(err)
 	}

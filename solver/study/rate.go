@@ -181,7 +181,7 @@ func (r *rater) heaters() (err error) {
 		return nil
 	}
 	id := things(r.out.Base)[at].id
-	if r.out.Heaters, err = r.s.HeatersWith(r.ctx, r.out.Doc, r.out.Base, id, r.o); err != nil {
+	if r.out.Heaters, err = r.s.HeatersWith(r.ctx, r.out.Doc, id, r.o); err != nil {
 		return err
 	}
 	if load, percent, ok := r.out.Heaters.heater(r.out.Doc, id); ok {
