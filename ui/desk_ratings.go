@@ -25,6 +25,7 @@ type rated struct {
 	ratings *study.Ratings    // as far as they have come; nil: not yet, or refused
 	refusal []section.Problem // why nothing is rated
 	failure error             // of the program
+	named   bool              // the picture has been told what governs by the bands
 	was     *study.Ratings    // of the document before, shown greyed until newer ones are as far
 }
 
@@ -135,6 +136,13 @@ func (k *Desk) tellRatings() {
 	if k.answer.unsaid != 0 {
 		k.answer.unsaid |= ChangedRatings
 		return
+	}
+	if id, ok := k.governs(); ok && !k.rated.named {
+		k.rated.named = true
+		if g := k.answer.result.Governing; g == nil || g.Part != id {
+			k.tell(ChangedRatings) // the picture names it too
+			return
+		}
 	}
 	k.tellWords(ChangedRatings)
 }

@@ -123,7 +123,31 @@ func (k *Desk) Scene() render.Scene {
 		s.Field = r
 	}
 	s.Bands = k.bands()
+	if id, ok := k.governs(); ok {
+		for i := range s.Readings {
+			s.Readings[i].Governs = s.Readings[i].ID == id
+		}
+	}
 	return s
+}
+
+// governs returns what governs by the bands, once they are known.
+func (k *Desk) governs() (id string, ok bool) {
+	if r := k.Ratings(); r != nil && r.Bands != nil && r.Bands.At != "" {
+		return r.Bands.At, true
+	}
+	return "", false
+}
+
+// governing returns what governs the answer shown, by the bands where they are known; "" for nothing.
+func (k *Desk) governing() string {
+	if id, ok := k.governs(); ok {
+		return id
+	}
+	if r, _ := k.Result(); r != nil && r.Governing != nil {
+		return r.Governing.Part
+	}
+	return ""
 }
 
 // bands are P5 and P95 of all readings, °C; nil before they are known.

@@ -123,13 +123,13 @@ func (t *telling) alone(r *study.Ratings, i int) {
 	var factors []string
 	factor := func(base float64, name string) {
 		if base > 0 && !math.IsInf(base, 1) {
-			factors = append(factors, factorWords(now/base)+" of "+name)
+			factors = append(factors, factorWords(now/base)+" against "+name)
 		}
 	}
 	factor(a.Three.RelyA, "three loaded here")
 	factor(a.One.RelyA, "alone here")
 	if len(factors) > 0 {
-		t.rated(say("Grouping factor: " + strings.Join(factors, "; ") + "."))
+		t.rated(say("Grouping factor " + strings.Join(factors, ", ") + "."))
 	}
 }
 
@@ -265,7 +265,7 @@ func (t *telling) rates(in []*input) {
 		say("; "), word(inputNamed(in, "arrangement")), say("."),
 	)
 	t.add(
-		say("Not known exactly: ambient ± "), word(inputNamed(in, "range-ambient")), say(", currents ± "), word(inputNamed(in, "range-load")),
+		say("Bands take as off: ambient ± "), word(inputNamed(in, "range-ambient")), say(", currents ± "), word(inputNamed(in, "range-load")),
 		say(", film ± "), word(inputNamed(in, "range-film")), say(", emissivities ± "), word(inputNamed(in, "range-emissivity")),
 		say(", places ± "), word(inputNamed(in, "range-position")), say(", clearance "), word(inputNamed(in, "range-clearance")), say("."),
 	)
@@ -277,7 +277,7 @@ func (t *telling) wholeMay() {
 	if r == nil {
 		return
 	}
-	t.rated(say("All loads together may be " + study.Percent(r.All.Rely.Factor) + " of what is written to rely on, " + study.Percent(r.All.Nominal.Factor) + " nominal" + stopper(&r.All.Rely, "") + "."))
+	t.rated(say("Of the currents as written, all together, " + study.Percent(r.All.Rely.Factor) + " may be relied on, " + study.Percent(r.All.Nominal.Factor) + " nominal" + stopper(&r.All.Rely, "") + "."))
 	for _, o := range r.Base.Others {
 		if (o.Kind == "layer" || o.Kind == "surface") && o.LimitC.OK && !strings.Contains(o.ID, "/"+"layer") {
 			t.rated(say(upperFirst(o.ID) + ": " + withUnit(degrees(o.TempC, o.LimitC), "°C") + t.band(o.ID) + ", limit " + degreesC(o.LimitC.V) + " (" + o.LimitBy + ")."))

@@ -24,7 +24,7 @@ func TestDetailsTellWhatAConductorMayCarry(t *testing.T) {
 		"With all loads scaled together: rely on "+study.Amps(36*r.All.Rely.Factor)+", nominal "+study.Amps(36*r.All.Nominal.Factor),
 		"Its load alone changed, the others as they are: rely on ", "Alone here: rely on "+study.Amps(a.One.RelyA),
 		"Three of it loaded here: rely on "+study.Amps(a.Three.RelyA),
-		"Grouping factor: "+quantity.Fixed(quantity.RoundDown(factor, 2), 2)+" of three loaded here",
+		"Grouping factor "+quantity.Fixed(quantity.RoundDown(factor, 2), 2)+" against three loaded here",
 		"The lowest: "+study.Amps(r.Lowest[i].A), "It is protected by unknown.", "it makes itself")
 	if factor <= 0 || factor >= 1 {
 		t.Errorf("a grouping factor of %g", factor)
@@ -36,7 +36,7 @@ func TestDetailsTellWhatAConductorMayCarry(t *testing.T) {
 	low, high, _ := r.Band(indexIn(r.Base, "F1"))
 	mustTell(t, d, "°C ("+bandWords(low, high)+")")
 	b.Select()
-	mustTell(t, d, "All loads together may be "+study.Percent(r.All.Rely.Factor)+" of what is written to rely on, "+study.Percent(r.All.Nominal.Factor)+" nominal")
+	mustTell(t, d, "Of the currents as written, all together, "+study.Percent(r.All.Rely.Factor)+" may be relied on, "+study.Percent(r.All.Nominal.Factor)+" nominal")
 }
 
 // What is being typed stays where it is while ratings come above it.

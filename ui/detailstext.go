@@ -225,11 +225,11 @@ func (t *telling) runs(id string, limit *input) {
 		t.fact(say("It runs at "+temp+"; its limit is "), bound, say(by+", margin "+withUnit(marginWords(row.temp, row.limit.V), "K")+"."))
 	}
 	t.close(id, row)
-	switch governs, hottest := t.result.Governing != nil && t.result.Governing.Part == id, t.result.Hottest == id; {
+	switch governs, hottest := t.k.governing() == id, t.result.Hottest == id; {
 	case governs && hottest:
-		t.fact(say("It governs, with the smallest margin of all, and is the hottest conductor."))
+		t.fact(say("It governs, with the smallest margin of all" + strings.TrimSuffix(t.counting(), ",") + ", and is the hottest conductor."))
 	case governs:
-		t.fact(say("It governs: its margin is the smallest of all."))
+		t.fact(say("It governs: its margin" + t.counting() + " is the smallest of all."))
 	case hottest:
 		t.fact(say("It is the hottest conductor, though " + t.governing() + " governs."))
 	}
@@ -238,12 +238,15 @@ func (t *telling) runs(id string, limit *input) {
 // unknown tells whether the conductor's own heat is missing because nobody has said what it carries.
 func (t *telling) unknown(id string) bool { return slices.Contains(t.result.Unassigned, id) }
 
-func (t *telling) governing() string {
-	if t.result.Governing == nil {
-		return "nothing"
+// counting says that margins are compared with their bands, where those are known.
+func (t *telling) counting() string {
+	if _, ok := t.k.governs(); ok {
+		return ", less its band,"
 	}
-	return t.result.Governing.Part
+	return ""
 }
+
+func (t *telling) governing() string { return orWord(t.k.governing(), "nothing") }
 
 // limitWord is the limit's input where it may be set, under the words that stand there now.
 func (t *telling) limitWord(limit *input, now string) run {

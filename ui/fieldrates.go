@@ -243,17 +243,14 @@ func rangeInputs(k *Desk) []*input {
 	one := func(key, label, unit, hint, about string, of func(*section.Ranges) *section.Opt[float64], most float64) *input {
 		in := input{key: key, label: label, unit: unit, text: optText(*of(&r)), hint: hint, about: about + " Empty: " + hint + "."}
 		in.shown = withUnit(orWord(in.text, hint), unit)
-		if in.text == "" && hint == "exact" {
-			in.shown = hint
-		}
 		return wholeInput(in, func(text string) (string, func(*section.Document), error) {
 			v, err := readRange(text, unit, most)
 			return orWord(withUnitIf(optText(v), unit), hint), func(d *section.Document) { *of(&d.Ranges) = v }, err
 		})
 	}
 	return []*input{
-		one("range-ambient", "Ambient ±", "K", "exact", "How far the ambient may be off, either way.", func(r *section.Ranges) *section.Opt[float64] { return &r.AmbientK }, 100),
-		one("range-load", "Currents ±", "%", "exact", "How far every current may be off, either way.", func(r *section.Ranges) *section.Opt[float64] { return &r.LoadPercent }, 100),
+		one("range-ambient", "Ambient ±", "K", "0", "How far the ambient may be off, either way.", func(r *section.Ranges) *section.Opt[float64] { return &r.AmbientK }, 100),
+		one("range-load", "Currents ±", "%", "0", "How far every current may be off, either way.", func(r *section.Ranges) *section.Opt[float64] { return &r.LoadPercent }, 100),
 		one("range-film", "Film ±", "%", "15", "How far the heat transfer outside may be off, either way.", func(r *section.Ranges) *section.Opt[float64] { return &r.FilmPercent }, 95),
 		one("range-emissivity", "Emissivity ±", "", "0.1", "How far emissivities may be off, either way.", func(r *section.Ranges) *section.Opt[float64] { return &r.Emissivity }, 0.9),
 		one("range-position", "Places ±", "mm", "0.2", "How far loose parts may lie from where they are drawn.", func(r *section.Ranges) *section.Opt[float64] { return &r.PositionMM }, 100),
@@ -263,7 +260,7 @@ func rangeInputs(k *Desk) []*input {
 
 func readRange(text, unit string, most float64) (section.Opt[float64], error) {
 	text = strings.TrimSpace(text)
-	if text == "" || text == "exact" {
+	if text == "" {
 		return section.Opt[float64]{}, nil
 	}
 	v, err := quantity.ParseNumber(strings.TrimSpace(strings.TrimPrefix(strings.TrimSuffix(text, unit), "±")))

@@ -83,5 +83,5 @@ func TestDetailsTellOfMarginRulesAndRanges(t *testing.T) {
 	d := NewDetails(b.Desk)
 	b.show(d, 420, 600)
 	mustTell(t, d, "Permitted currents", "Kept below every limit: 10 K.", "Rules beside it: the usual ones; building wiring; method from the holder; bunched.",
-		"ambient ± exact, currents ± exact, film ± 15 %")
+		"Bands take as off: ambient ± 0 K, currents ± 0 %, film ± 15 %")
 }

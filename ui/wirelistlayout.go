@@ -13,11 +13,13 @@ const (
 	wireGap      = 14 // least space between two columns
 	wireGapTight = 7  // where there is little room
 	wireGapMost  = 44 // most
-	wireBarLeast = 48 // of the margin's bar
-	wireBarMost  = 96
-	wireBarSpace = 10  // between the margin's number and its bar
-	wireWordMost = 240 // of a column of words; more is elided, with the whole on hover
-	wireRowSpace = 8   // above and below a row's text together
+
+	wireRemarkOff = 8  // more before the remarks, whose words begin where numbers end
+	wireBarLeast  = 48 // of the margin's bar
+	wireBarMost   = 96
+	wireBarSpace  = 10  // between the margin's number and its bar
+	wireWordMost  = 240 // of a column of words; more is elided, with the whole on hover
+	wireRowSpace  = 8   // above and below a row's text together
 )
 
 // wireLayout is where the columns stand.
@@ -69,6 +71,9 @@ func measureColumns(l *WireList, tight bool) wireLayout {
 		}
 		m.wide[c] = l.columnWidth(c, m)
 		sum += m.wide[c]
+		if c == wireRemark {
+			sum += wireRemarkOff
+		}
 		n++
 	}
 	if tight {
@@ -83,6 +88,9 @@ func measureColumns(l *WireList, tight bool) wireLayout {
 	for c := range wireColumns {
 		if !m.shown[c] {
 			continue
+		}
+		if c == wireRemark {
+			x += wireRemarkOff
 		}
 		m.at[c] = x
 		if c == wireRemark {

@@ -72,6 +72,7 @@ func wireRows(k *Desk) []wireRow {
 	r, _ := k.Result()
 	facts := newWireFacts(d, r, k.Problems())
 	facts.rated, _ = k.shownRatings()
+	facts.governs = k.governing()
 	var cores, others []wireRow
 	for _, p := range section.UnfoldAll(d) {
 		row := facts.part(k, p)
@@ -93,6 +94,7 @@ type wireFacts struct {
 	bad     map[string]string
 	sizes   map[string]wireSize
 	rated   *study.Ratings // nil: not known
+	governs string         // "" for nothing
 }
 
 type wireAnswer struct {
@@ -236,7 +238,7 @@ func (f *wireFacts) remark(row wireRow, p *section.Part, answer string, assumed 
 	add(f.bad[row.id] != "" && (p == nil || p.At.OK), f.bad[row.id])
 	add(row.over(), "over")
 	add(row.close(), "close")
-	add(f.result != nil && f.result.Governing != nil && f.result.Governing.Part == answer, "governs")
+	add(f.governs != "" && f.governs == answer, "governs")
 	add(f.result != nil && f.result.Hottest == answer, "hottest")
 	switch {
 	case row.unknown && f.loads[row.id] == nil:
