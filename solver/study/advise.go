@@ -124,27 +124,18 @@ func (a *adviser) situation(base *rating.Result) error {
 
 // start finds the working point: the design as it is, or, where it has no steady temperature, at lower currents.
 func (a *adviser) start() error {
-	for range 6 {
-		a.w = a.work(a.d)
-		p, r, err := a.s.point(a.ctx, a.w, a.o)
-		if err != nil {
-			return err
-		}
-		if err := known(r, a.o); err != nil {
-			return err
-		}
-		if p != nil {
-			a.p, a.out.Base = p, r
-			break
-		}
-		a.out.Base = r
-		if r.Status != heat.ThermalRunaway || !(r.Settles > 0) {
-			break
-		}
-		a.out.Factor *= 0.8 * min(r.Settles, 1)
+	p, factor, err := a.s.settling(a.ctx, a.work(a.d), a.o)
+	if err != nil {
+		return err
 	}
-	if a.p == nil {
-		return nil
+	a.out.Factor = factor
+	if a.w = a.work(a.d); p == nil {
+		a.out.Base, err = a.s.solve(a.ctx, a.w, a.o)
+		return err
+	}
+	a.p, a.out.Base = p, p.Result
+	if err := known(p.Result, a.o); err != nil {
+		return err
 	}
 	a.list, a.e = things(a.p.Result), answers(a.p)
 	at, k, ok := closest(a.list, nominal)
@@ -257,6 +248,9 @@ func (a *Advice) Now() string {
 	}
 	if a.Factor < 1 {
 		at += fmt.Sprintf("no steady temperature exists with all of the currents; all is compared with %s of them. ", Percent(a.Factor))
+	}
+	if a.Base.Status == heat.ThermalRunaway {
+		return at + "No steady temperature was found at any of the currents tried, so nothing can be compared."
 	}
 	if a.Governs == "" {
 		return at + "Nothing here has a limit, so nothing tells what would help."

@@ -118,14 +118,14 @@ func (s *Study) choices(ctx context.Context, d *section.Document, c *section.Cas
 	var on []choice
 	answer.Of = 1
 	if len(c.Any) > 0 {
-		p, _, err := s.point(ctx, shared(doc, c.Any), o)
+		p, factor, err := s.settling(ctx, shared(doc, c.Any), o)
 		if err != nil {
 			return nil, err
 		}
-		if p == nil { // no steady state: the last of each group, one choice as good as another
+		if p == nil {
 			picks = [][]string{fallback(c.Any)}
 		} else {
-			sc = newScreen(p, c.Any)
+			sc = newScreen(p, c.Any, factor)
 			on, answer.Searched = sc.worst(fewChoices)
 			if answer.Of = sc.number(); answer.Searched {
 				answer.Of = 0
@@ -153,6 +153,19 @@ func (s *Study) choices(ctx context.Context, d *section.Document, c *section.Cas
 		answer.BoundC = bound(sc, on, list)
 	}
 	return list, err
+}
+
+// settling is a working point at the largest currents tried that have a steady temperature, and their factor; nil if none was found.
+func (s *Study) settling(ctx context.Context, d *section.Document, o Options) (*rating.Point, float64, error) {
+	factor := 1.0
+	for range 6 {
+		p, r, err := s.point(ctx, scaleAll(d, factor), o)
+		if err != nil || p != nil || r.Status != heat.ThermalRunaway || !(r.Settles > 0) {
+			return p, factor, err
+		}
+		factor *= 0.8 * min(r.Settles, 1)
+	}
+	return nil, factor, nil
 }
 
 // fallback leaves the last loads of each group off.

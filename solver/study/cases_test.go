@@ -170,3 +170,82 @@ func TestRateCases(t *testing.T) {
 		t.Errorf("%s: %.3f; lowest %.3f", r.Cases.NominalIn, r.All.Nominal.Factor, r.Lowest[0].Computed)
 	}
 }
+
+// TestChoices: combinations of several groups, and where the number of them ends.
+func TestChoices(t *testing.T) {
+	s := screen{groups: [][]string{{"a", "b", "c"}, {"d", "e"}}, counts: []int{2, 1}}
+	all := s.all()
+	if len(all) != 6 || s.number() != 6 {
+		t.Fatalf("%d listed, %d counted", len(all), s.number())
+	}
+	seen := map[string]bool{}
+	for _, on := range all {
+		off := s.off(on)
+		seen[strings.Join(off, " ")] = true
+		if len(off) != 2 {
+			t.Errorf("%v off", off)
+		}
+	}
+	if len(seen) != 6 {
+		t.Errorf("only %v", seen)
+	}
+	for _, c := range []struct{ n, k, want int }{{22, 3, 1540}, {24, 3, mostChoices + 1}, {5, 0, 1}, {5, 5, 1}, {3, 4, 0}} {
+		var of []string
+		for i := range c.n {
+			of = append(of, fmt.Sprint(i))
+		}
+		if got := (&screen{groups: [][]string{of}, counts: []int{c.k}}).number(); got != c.want {
+			t.Errorf("any %d of %d: %d combinations, want %d", c.k, c.n, got, c.want)
+		}
+	}
+}
+
+// TestCasesRunaway: of any one of two, the one without a steady temperature is found, in whatever order they stand.
+func TestCasesRunaway(t *testing.T) {
+	for _, of := range [][]string{{"l1", "l2"}, {"l2", "l1"}} {
+		d := row(t, 3, "", func(i int) float64 { return []float64{5, 500, 5}[i] })
+		d = section.SetCase(d, section.Case{ID: "one", Any: []section.AnyOf{{Of: of, Count: 1}}})
+		s := New(cat)
+		base, err := s.solve(context.Background(), section.SwitchOff(d, "l2"), Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		c, err := s.Cases(context.Background(), d, base, nil, nil, Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		if a := c.List[1]; a.State != Over || !slices.Equal(a.Off, []string{"l1"}) {
+			t.Errorf("%v: %s with %v off", of, a.State, a.Off)
+		}
+	}
+}
+
+// TestCasesEnds: none or all of a group, a case without a steady temperature, one that nothing but its ambient tells apart.
+func TestCasesEnds(t *testing.T) {
+	d := row(t, 4, "", func(int) float64 { return 12 })
+	of := []string{"l1", "l2", "l3"}
+	d = section.SetCase(d, section.Case{ID: "none", Any: []section.AnyOf{{Of: of, Count: 0}}})
+	d = section.SetCase(d, section.Case{ID: "all", Any: []section.AnyOf{{Of: of, Count: 3}}})
+	d = section.SetCase(d, section.Case{ID: "wild", Any: []section.AnyOf{{Of: of, Count: 2}}, Loads: []section.CaseLoad{{Load: "l4", CurrentA: 500}}})
+	s := New(cat)
+	base, err := s.solve(context.Background(), d, Options{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	c, err := s.Cases(context.Background(), d, base, nil, nil, Options{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	for i := range c.List {
+		t.Log(c.List[i].Sentence())
+	}
+	if n := len(c.List[1].Off); n != 3 {
+		t.Errorf("none: %d off", n)
+	}
+	if a := c.List[2]; len(a.Off) != 0 || math.Abs(a.Result.Governing.MarginK-base.Governing.MarginK) > 0.01 {
+		t.Errorf("all: %v off, %.3f K, as written %.3f K", a.Off, a.Result.Governing.MarginK, base.Governing.MarginK)
+	}
+	if a := c.List[3]; a.State != Over || a.Nominal.Factor >= 0.5 || a.Nominal.Factor <= 0 || !math.IsInf(c.Worst[3].TempC, 1) || c.RelyIn != "wild" {
+		t.Errorf("wild: %s, %.4f; worst %+v, smallest in %q", a.State, a.Nominal.Factor, c.Worst[3], c.RelyIn)
+	}
+}

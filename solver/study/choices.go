@@ -42,8 +42,8 @@ func shared(d *section.Document, any []section.AnyOf) *section.Document {
 	return d
 }
 
-// newScreen reads p, a working point of the shared design.
-func newScreen(p *rating.Point, any []section.AnyOf) *screen {
+// newScreen reads p, a working point of the shared design with a factor on all currents, as if rises went with its square.
+func newScreen(p *rating.Point, any []section.AnyOf, factor float64) *screen {
 	s := &screen{list: things(p.Result)}
 	e := answers(p)
 	s.low, s.adds = make([]float64, len(s.list)), make([][]float64, len(s.list))
@@ -63,6 +63,15 @@ func newScreen(p *rating.Point, any []section.AnyOf) *screen {
 				}
 				s.adds[i] = append(s.adds[i], k)
 				s.low[i] -= share * k
+			}
+		}
+	}
+	if factor < 1 {
+		f := factor * factor
+		for i := range s.low {
+			s.low[i] = p.AmbientC + (s.low[i]-p.AmbientC)/f
+			for l := range s.adds[i] {
+				s.adds[i][l] /= f
 			}
 		}
 	}
