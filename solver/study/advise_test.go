@@ -16,6 +16,9 @@ import (
 // TestAdvise holds every change to a full solution of its own document by a fresh study: the gain, what governs, what it costs.
 func TestAdvise(t *testing.T) {
 	names := []string{"nine-in-emt"}
+	if testing.Short() {
+		names = []string{"filled-control-cable"}
+	}
 	if os.Getenv("PACKRISE_SOAK") != "" {
 		names = append(names, "stage-multicore", "robot-umbilical", "wireway-38", "harness-altitude", "filled-control-cable", "roof-strings", "strings-spread")
 	}
@@ -219,5 +222,47 @@ func TestAdviseScreen(t *testing.T) {
 	}
 	if screened < 8 {
 		t.Errorf("%d changes", screened)
+	}
+}
+
+// TestAdviseNested: a circuit in a cable goes one size up; that cable's jacket and no other grows for it.
+func TestAdviseNested(t *testing.T) {
+	const cables = `
+packrise: 1
+surroundings: {kind: still-air, ambient_c: 30}
+holder: {kind: conduit, stock: emt-1-1/4}
+builds:
+  duo:
+    holder: {kind: jacket, inside_mm: 8, layers: [{material: pvc, thickness_mm: 1}]}
+    parts:
+      - {id: L, kind: core, conductor: {size: 2.5 mm2}, layers: [{material: pvc, thickness_mm: 0.8}], at_mm: [-2, 0]}
+      - {id: N, kind: core, conductor: {size: 2.5 mm2}, layers: [{material: pvc, thickness_mm: 0.8}], at_mm: [2, 0]}
+parts:
+  - {id: C1, kind: cable, build: duo, at_mm: [-5.5, -10]}
+  - {id: C2, kind: cable, build: duo, at_mm: [5.5, -10]}
+  - {id: C3, kind: cable, build: duo, at_mm: [0, 0]}
+loads:
+  - {id: a, conductors: [C1/L, C1/N], current_a: 15}
+  - {id: b, conductors: [C2/L, C2/N], current_a: 12}
+  - {id: c, conductors: [C3/L, C3/N], current_a: 5}
+`
+	d := read(t, cables)
+	a, err := New(cat).Advise(context.Background(), d, nil, Options{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	for i := range a.Changes {
+		t.Log(a.Changes[i].Sentence())
+	}
+	kinds := firsts(a)
+	up := kinds[ChangeUpsize]
+	if up == nil || up.GainK < 1 || len(up.Doc.Builds) != 2 || section.Find(up.Doc, "C2/L").Conductor.Size != "2.5 mm2" || section.Find(up.Doc, "C1/N").Conductor.Size == "2.5 mm2" {
+		t.Fatalf("%+v", up)
+	}
+	if up.Doc.Builds[1].Holder.InsideMM.V <= 8 || up.Doc.Builds[0].Holder.InsideMM.V != 8 {
+		t.Errorf("jackets of %g and %g mm inside", up.Doc.Builds[0].Holder.InsideMM.V, up.Doc.Builds[1].Holder.InsideMM.V)
+	}
+	if c := kinds[ChangeOut]; c == nil || c.IDs[0] != "C1" {
+		t.Errorf("%+v", c)
 	}
 }

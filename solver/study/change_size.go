@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"fmt"
 	"math"
 	"slices"
@@ -48,13 +49,11 @@ func (a *adviser) sizes() {
 	}
 }
 
-// upsized gives conductors their next size and makes room for them.
+// upsized gives conductors their next size and makes room for them, in the cables that they lie in and in the holder.
 func (s *Study) upsized(d *section.Document, conductors []string) (*section.Document, bool) {
-	nested := false
+	var cables []string
 	for _, id := range conductors {
-		if strings.Contains(id, "/") {
-			d, nested = section.OwnBuild(d, id), true
-		}
+		d = section.OwnBuild(d, id)
 		p := section.Find(d, id)
 		if p == nil {
 			return d, false
@@ -65,11 +64,33 @@ func (s *Study) upsized(d *section.Document, conductors []string) (*section.Docu
 		}
 		q.ID = id
 		d = section.Replace(d, q)
+		for at := strings.LastIndex(id, "/"); at > 0; at = strings.LastIndex(id[:at], "/") {
+			if !has(cables, id[:at]) {
+				cables = append(cables, id[:at])
+			}
+		}
 	}
-	if nested {
-		return d, true // the solver says whether it fits
+	slices.SortStableFunc(cables, func(a, b string) int { return cmp.Compare(strings.Count(b, "/"), strings.Count(a, "/")) }) // the innermost first
+	for _, id := range cables {
+		var ok bool
+		if d, ok = s.refitBuild(d, section.Find(d, id).Build); !ok {
+			return d, false
+		}
 	}
 	return s.refit(d)
+}
+
+// refitBuild is refit within a cable.
+func (s *Study) refitBuild(d *section.Document, name string) (*section.Document, bool) {
+	at := slices.IndexFunc(d.Builds, func(b section.Build) bool { return b.Name == name })
+	if at < 0 {
+		return d, false
+	}
+	inner, ok := s.refit(d.With(func(d *section.Document) { d.Holder, d.Parts = d.Builds[at].Holder, d.Builds[at].Parts }))
+	return d.With(func(d *section.Document) {
+		d.Builds = slices.Clone(d.Builds)
+		d.Builds[at].Holder, d.Builds[at].Parts = inner.Holder, inner.Parts
+	}), ok
 }
 
 // refit pushes parts apart where they overlap; a jacket of its own size grows by up to 15 % when it must.

@@ -222,7 +222,7 @@ func (f *filler) heat() error {
 		} else if lo < 0 {
 			n = 0
 		}
-		f.o.tell(len(f.solved), 8)
+		f.o.tell(min(len(f.solved), 8), 8)
 		ok, err := fits(n)
 		if err != nil {
 			return err

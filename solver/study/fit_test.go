@@ -35,6 +35,9 @@ loads: [{id: a, conductors: [W1, W2, W3], current_a: 2}]
 	if f.Room.N <= f.Rule.N || len(f.Doc.Parts) != 26 {
 		t.Errorf("%d find a place, %d parts", f.Room.N, len(f.Doc.Parts))
 	}
+	if testing.Short() {
+		return
+	}
 	// loaded, temperature stops first, and one more than that is not inside
 	hot := section.ScaleLoads(d, 9)
 	f, err = s.Fit(ctx, hot, nil, "W3", Options{})
