@@ -60,7 +60,7 @@ func (a *asks) askAdvice() {
 func (a *asks) adviceGone(why string) {
 	a.rows = nil
 	a.pane.waiting(false, nil)
-	a.pane.show(adviceTitle, a.askAdvice, a.note(why+" Ask again for what to change first."))
+	a.pane.show(adviceTitle, a.askAdvice, a.note(why+" Ask again for what to change next."))
 }
 
 // note is a quiet sentence in the pane.
@@ -70,6 +70,7 @@ func (a *asks) note(text string) fyne.CanvasObject { return newProse(a.w.desk, f
 func (a *asks) fillAdvice() {
 	a.pane.waiting(false, nil)
 	ad := a.advice
+	a.gone = "The design has changed since."
 	objects := []fyne.CanvasObject{a.note(ad.Now())}
 	a.rows = nil
 	for i := range ad.Changes {
@@ -111,6 +112,7 @@ func (a *asks) apply(c *study.Change) {
 	}
 	doc := c.Doc
 	a.w.view.SetGhost(nil)
+	a.gone = "Done: " + fullStop(stepName(c.Text)) + " Undo takes it back."
 	a.w.desk.Apply(section.Edit{Name: stepName(c.Text), Object: "advice", Do: func(*section.Document) *section.Document { return doc }}, false)
 }
 

@@ -100,20 +100,23 @@ func (r *askRow) gainWidth(width float32) float32 {
 // heightFor returns the height at a width.
 func (r *askRow) heightFor(width float32) float32 {
 	r.width = width
-	in := width - 2*askRowPad
-	g := r.gainWidth(in)
-	left := in
-	if g > 0 {
-		left -= g + 8
-	}
-	h := r.head.heightFor(left)
-	if g > 0 {
-		h = max(h, r.gain.heightFor(g))
+	head, gain := r.columns(width)
+	h := r.head.heightFor(head)
+	if gain > 0 {
+		h = max(h, r.gain.heightFor(gain))
 	}
 	if r.tail.String() != "" {
-		h += r.tail.heightFor(in) + 2
+		h += r.tail.heightFor(width) + 2
 	}
 	return h + 2*askRowPad
+}
+
+// columns are the widths of what to do and of what it brings.
+func (r *askRow) columns(width float32) (head, gain float32) {
+	if gain = r.gainWidth(width); gain > 0 {
+		return width - gain - 8, gain
+	}
+	return width, 0
 }
 
 // MinSize is the height at the width laid out last.
@@ -134,20 +137,15 @@ func (l askRowLayout) MinSize([]fyne.CanvasObject) fyne.Size { return l.r.MinSiz
 
 func (l askRowLayout) Layout(objects []fyne.CanvasObject, s fyne.Size) {
 	r := l.r
-	in := s.Width - 2*askRowPad
-	g := r.gainWidth(in)
-	left := in
-	if g > 0 {
-		left -= g + 8
+	head, gain := r.columns(s.Width)
+	h := r.head.heightFor(head)
+	put(r.back, -askRowPad, 0, s.Width+2*askRowPad, s.Height) // the text stands in line with the pane's other text
+	put(r.head, 0, askRowPad, head, h)
+	if gain > 0 {
+		h = max(h, r.gain.heightFor(gain))
+		put(r.gain, s.Width-gain, askRowPad, gain, r.gain.heightFor(gain))
 	}
-	h := r.head.heightFor(left)
-	put(r.back, 0, 0, s.Width, s.Height)
-	put(r.head, askRowPad, askRowPad, left, h)
-	if g > 0 {
-		h = max(h, r.gain.heightFor(g))
-		put(r.gain, s.Width-askRowPad-g, askRowPad, g, r.gain.heightFor(g))
-	}
-	put(r.tail, askRowPad, askRowPad+h+2, in, r.tail.heightFor(in))
+	put(r.tail, 0, askRowPad+h+2, s.Width, r.tail.heightFor(s.Width))
 	objects[len(objects)-1].Resize(s)
 }
 

@@ -15,6 +15,7 @@ type asks struct {
 	shown  askShown
 	advice *study.Advice // nil: not known for the document as it is
 	rows   []*askRow
+	gone   string // what is said when the design changes under the list
 }
 
 // askShown is what the pane at the side shows.
@@ -56,7 +57,7 @@ func (a *asks) changed(c Changed) {
 		if a.advice != nil {
 			a.advice = nil
 			if a.shown == paneAdvice {
-				a.adviceGone("The design has changed since.")
+				a.adviceGone(a.gone)
 			}
 		}
 	}

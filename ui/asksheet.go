@@ -3,6 +3,7 @@ package ui
 import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/theme"
 )
 
 // newInputSheet is a column of fields for a dialog, with room for a line of help below.
@@ -44,9 +45,23 @@ func (f *findings) say(paragraphs []ruleBlock, below ...fyne.CanvasObject) {
 	f.scroll.Refresh()
 }
 
-// twoSides lays out fields at the left and findings at the right of a dialog.
+// twoSides lays out fields at the left and findings at the right of a dialog, with a line between them.
 func twoSides(left, right fyne.CanvasObject) fyne.CanvasObject {
-	s := container.NewHSplit(left, right)
-	s.SetOffset(0.46)
-	return s
+	return &fyne.Container{Layout: twoSidesLayout{}, Objects: []fyne.CanvasObject{left, newFill(theme.ColorNameSeparator), right}}
+}
+
+type twoSidesLayout struct{}
+
+// twoSidesGap is the room on each side of the line.
+const twoSidesGap = 8
+
+// MinSize is small: both sides scroll.
+func (twoSidesLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(320, 160) }
+
+// Layout gives the left a little less.
+func (twoSidesLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	x := 0.46 * s.Width
+	put(o[0], 0, 0, x-twoSidesGap, s.Height)
+	put(o[1], x, 0, 1, s.Height)
+	put(o[2], x+twoSidesGap, 0, s.Width-x-twoSidesGap, s.Height)
 }

@@ -2,6 +2,7 @@ package ui
 
 import (
 	"context"
+	"strings"
 
 	"fyne.io/fyne/v2"
 
@@ -43,7 +44,11 @@ func (a *asks) fitOf() string {
 // fitText says how many more fit and what stops them first, a sentence each.
 func fitText(f *study.Fit) []string {
 	by := map[string]string{study.StopsRule: "The rule's fill stops first.", study.StopsRoom: "Room stops first.", study.StopsHeat: "Temperature stops first."}
-	out := []string{written(float64(f.N)) + " more like " + f.ID + " fit. " + by[f.Stops]}
+	n := "No"
+	if f.N > 0 {
+		n = written(float64(f.N))
+	}
+	out := []string{strings.TrimSpace(n + " more like " + f.ID + " fit. " + by[f.Stops])}
 	for _, m := range []struct {
 		name string
 		of   study.HowMany

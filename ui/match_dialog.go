@@ -78,7 +78,7 @@ func (s *matchSheet) begin(id string) {
 		return
 	}
 	for n := 1; ; n++ {
-		s.m.ID = "reading-" + strconv.Itoa(n)
+		s.m.ID = "M" + strconv.Itoa(n)
 		if !slices.ContainsFunc(d.Measurements, func(m section.Measurement) bool { return m.ID == s.m.ID }) {
 			break
 		}

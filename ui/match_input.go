@@ -27,7 +27,7 @@ func matchInputs(k *Desk, m *measured, changed func()) []*input {
 	}
 	if m.InstrumentEmissivity.OK {
 		all = append(all,
-			m.number("surface", "Surface emissivity", "", "Of what it was pointed at: 0.9 plastics and paint, 0.25 galvanised steel. Below 0.5 nothing can be fitted: tape it, wait and read again.", "the material's", &m.SurfaceEmissivity, readEmissivity),
+			m.number("surface", "Surface emissivity", "", "Of what it was pointed at: 0.9 plastics and paint, 0.25 galvanised steel. Below 0.5 nothing can be fitted: tape it, wait and read again.", "the outside's", &m.SurfaceEmissivity, readEmissivity),
 			m.number("reflected", "Reflected", "°C", "In °C or °F, of what is mirrored in the surface. Empty: the ambient.", "the ambient", &m.ReflectedC, readCelsius))
 	}
 	hint := "as the design says"

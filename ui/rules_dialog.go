@@ -1,6 +1,8 @@
 package ui
 
 import (
+	"strings"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/container"
 	"fyne.io/fyne/v2/dialog"
@@ -78,9 +80,7 @@ func (s *rulesSheet) fill(blocks []ruleBlock) {
 	s.box.Objects = nil
 	for _, b := range blocks {
 		s.box.Add(selectable(b.title, true))
-		for _, l := range b.lines {
-			s.box.Add(selectable(l, false))
-		}
+		s.box.Add(selectable(strings.Join(b.lines, "\n"), false))
 	}
 	s.box.Refresh()
 }

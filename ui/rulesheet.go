@@ -31,7 +31,7 @@ func ruleBlocks(c *study.Codes, r *study.Ratings) (blocks []ruleBlock) {
 	if c.Run.ListedPanel {
 		first.add("This lies inside a listed panel: there the panel's own standard rules, not the wiring code.")
 	} else {
-		first.add("Inside a listed panel the panel's own standard rules, not the wiring code; write inside: panel under rules for that.")
+		first.add("Inside a listed panel the panel's own standard rules, not the wiring code: where this lies is said in the details.")
 	}
 	for _, p := range c.Problems {
 		first.add(fullStop(upperFirst(p.String())))
@@ -175,15 +175,15 @@ func againstLines(o *rules.Outcome, r *study.Ratings) (lines []string) {
 		if !ok || !(l.Computed > 0) {
 			continue
 		}
-		d := a - l.Computed
+		d := asShown(a) - asShown(l.Computed)
 		words := ampsWords(a) + " by this rule, " + ampsWords(l.Computed) + " computed, to rely on"
 		switch {
-		case math.Abs(d) < 0.05:
+		case math.Abs(d) < 0.005:
 			words += ": the same"
 		case d > 0:
-			words += ": the rule permits " + withUnit(quantity.Fixed(d, 1), "A") + " more"
+			words += ": the rule permits " + withUnit(quantity.Trimmed(d, 2), "A") + " more"
 		default:
-			words += ": the rule permits " + withUnit(quantity.Fixed(-d, 1), "A") + " less"
+			words += ": the rule permits " + withUnit(quantity.Trimmed(-d, 2), "A") + " less"
 		}
 		if math.Abs(a/l.Computed-1) > farOff {
 			words += ", more than 20 % apart"
@@ -194,6 +194,17 @@ func againstLines(o *rules.Outcome, r *study.Ratings) (lines []string) {
 		lines = append(lines, "Difference for "+allIDs(g.ids[n])+": "+w+".")
 	}
 	return lines
+}
+
+// asShown is a current as study.Amps writes it, so that a difference agrees with the numbers beside it.
+func asShown(a float64) float64 {
+	switch {
+	case a < 10:
+		return quantity.RoundDown(a, 2)
+	case a < 100:
+		return quantity.RoundDown(a, 1)
+	}
+	return quantity.RoundDown(a, 0)
 }
 
 // ampsWords is a current rounded down, its unit on the same line.

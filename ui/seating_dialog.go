@@ -38,7 +38,7 @@ func seatingWords(s *study.Seating) []string {
 	}
 	out := []string{
 		"As it is: " + seatWords(&s.Present),
-		"Random seatings: " + kelvinsDown(s.MeanK) + " of margin on average, " + kelvinsDown(s.WorstK) + " in the worst of " + written(float64(s.Random)) + ", by estimate.",
+		"Random seatings: " + wholeKelvins(s.MeanK) + " of margin on average, " + wholeKelvins(s.WorstK) + " in the worst of " + written(float64(s.Random)) + ", by estimate.",
 	}
 	if len(s.Swaps) == 0 {
 		out = append(out, "No seating that was tried has more margin: leave it as it is.")
@@ -56,14 +56,15 @@ func seatingWords(s *study.Seating) []string {
 }
 
 func seatWords(s *study.Seat) string {
-	return kelvinsDown(s.MarginK) + " of margin, " + s.Governs + " governs at " + withUnit(quantity.Trimmed(quantity.BesideLimit(s.TempC, s.TempC+s.MarginK), 1), "°C") +
+	limit := s.TempC + s.MarginK
+	return withUnit(marginWords(s.TempC, limit), "K") + " of margin, " + s.Governs + " governs at " + withUnit(degrees(s.TempC, section.Some(limit)), "°C") +
 		"; all loads together could be " + study.Percent(s.Factor) + " of what they are, by the limits alone."
 }
 
-// kelvinsDown is a difference in whole kelvins, rounded down.
-func kelvinsDown(k float64) string {
+// wholeKelvins is a difference in whole kelvins.
+func wholeKelvins(k float64) string {
 	if math.IsInf(k, 0) || math.IsNaN(k) {
 		return "nothing"
 	}
-	return withUnit(quantity.Fixed(math.Floor(k+1e-9), 0), "K")
+	return withUnit(quantity.Trimmed(k, 0), "K")
 }

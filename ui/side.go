@@ -81,7 +81,7 @@ func newAskPane(k *Desk, onShut func()) *askPane {
 	p.shut = widget.NewButton("Close", p.close)
 	p.again = widget.NewButton("Ask again", func() {})
 	p.stop = widget.NewButton("Cancel", func() {})
-	p.column = &fyne.Container{Layout: &fieldColumn{gap: 4, margin: 8}}
+	p.column = &fyne.Container{Layout: &fieldColumn{gap: 4, margin: detailsEdge}}
 	p.scroll = container.NewVScroll(p.column)
 	p.wait = container.NewBorder(nil, nil, nil, p.stop, p.bar)
 	p.head = container.NewBorder(nil, nil, nil, container.NewHBox(p.again, p.shut), container.New(titleLine{}, p.title))
@@ -97,8 +97,8 @@ func (titleLine) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(60
 
 // Layout centres it.
 func (titleLine) Layout(o []fyne.CanvasObject, s fyne.Size) {
-	h := o[0].(*prose).heightFor(s.Width - 14)
-	put(o[0], 14, max(0, (s.Height-h)/2), s.Width-14, h)
+	h := o[0].(*prose).heightFor(s.Width - detailsEdge)
+	put(o[0], detailsEdge, max(0, (s.Height-h)/2), s.Width-detailsEdge, h)
 }
 
 // close puts the pane away.
@@ -154,7 +154,7 @@ func (l askPaneLayout) Layout(_ []fyne.CanvasObject, s fyne.Size) {
 	y += h + 2
 	if p.wait.Visible() {
 		h = p.wait.MinSize().Height
-		put(p.wait, 14, y, s.Width-20, h)
+		put(p.wait, detailsEdge, y, s.Width-detailsEdge-6, h)
 		y += h + 2
 	}
 	put(p.scroll, 0, y, s.Width, s.Height-y)
