@@ -57,6 +57,7 @@ func (a *asker) close() {
 // ask puts a question about the document as it is.
 func (a *asker) ask(q question) {
 	a.cancel()
+	a.desk.long()
 	q.doc, q.rev = a.desk.Document(), a.desk.Revision()
 	q.dir = a.desk.folder()
 	a.now = &q

@@ -20,10 +20,13 @@ type Desk struct {
 	ended   bool               // nothing runs any more
 	gesture int
 
+	beforeLong func() // told before work that takes long; nil: nobody cares
+
 	history *section.History
 	trial   *trial // what a drag under way shows and the history does not have yet
 	rev     uint64 // of the document: raised by every change of it
 	path    string // "" for a design that has no file yet
+	differs bool   // the file holds something else, whatever the history says
 	opened  []section.Problem
 
 	selection []string

@@ -13,6 +13,7 @@ func (k *Desk) Settle(done func(error)) { k.arrange("settle", k.rooms.Settle, do
 func (k *Desk) LayUp(done func(error)) { k.arrange("lay up", k.rooms.LayUp, done) }
 
 func (k *Desk) arrange(name string, f func(*section.Document, *catalog.Catalog) (map[string]section.Point, error), done func(error)) {
+	k.long()
 	d, rev := k.Document(), k.rev
 	k.rooms.Beside(func() {
 		at, err := f(d, k.cat)
@@ -34,6 +35,7 @@ func placing(name string, at map[string]section.Point) section.Edit {
 
 // MakeRoom pushes the other parts off the one held, beside the window; done is told whether there is room.
 func (k *Desk) MakeRoom(held string, done func(ok bool)) {
+	k.long()
 	d, rev := k.Document(), k.rev
 	k.rooms.Beside(func() {
 		at, ok := k.rooms.MakeRoom(d, k.cat, held)

@@ -1,8 +1,6 @@
 package ui
 
 import (
-	"path/filepath"
-
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/driver/desktop"
 )
@@ -55,6 +53,7 @@ func (m *menus) file() *fyne.Menu {
 		item("New", ctrl(fyne.KeyN), w.newDesign),
 		item("Open …", ctrl(fyne.KeyO), w.chooseOpen),
 		demos, m.recent,
+		fyne.NewMenuItem("Recover unsaved work …", w.findKept),
 		fyne.NewMenuItemSeparator(),
 		item("Save", ctrl(fyne.KeyS), func() { w.save(nil) }),
 		item("Save as …", ctrlShift(fyne.KeyS), func() { w.saveAs(nil) }),
@@ -161,16 +160,6 @@ func labelled(verb, name string) string {
 		return verb
 	}
 	return verb + " " + elided(name, 40)
-}
-
-func (m *menus) followRecent() {
-	var items []*fyne.MenuItem
-	for _, path := range m.w.app.Preferences().StringList(prefRecent) {
-		label := filepath.Base(path) + "  –  " + filepath.Dir(path)
-		items = append(items, fyne.NewMenuItem(elided(label, 80), func() { m.w.open(path) }))
-	}
-	m.recent.Disabled = len(items) == 0
-	m.recent.ChildMenu.Items = items
 }
 
 // String lists all items with their marks.

@@ -10,6 +10,7 @@ import (
 
 	"packrise/solver/catalog"
 	"packrise/solver/section"
+	"packrise/ui/keep"
 )
 
 // Options of a window.
@@ -20,6 +21,8 @@ type Options struct {
 	Warnings []section.Problem // what its reader warned of
 	Version  string            // for About
 	Trace    io.Writer         // one line for each thing that a script may wait for; nil: none
+	Open     string            // a file that the window shall open itself and say why it can't, "" for none
+	KeepIn   string            // folder for unsaved work that can't be kept beside its file; "": nothing is kept aside
 	Rooms    Rooms             // for tests
 }
 
@@ -43,6 +46,10 @@ type Window struct {
 	saving  bool          // a save is under way
 	savedBy []func()      // what waits for it
 	quiet   string        // said in the status line until the document changes
+
+	keeper  *keeper
+	decided bool            // about unsaved work, on closing
+	missing map[string]bool // recent files that are not there
 }
 
 // Preferences of the program.
@@ -82,8 +89,14 @@ func NewWindow(a fyne.App, o Options) *Window {
 		width, height = 1400, 875
 	}
 	w.win.Resize(fyne.NewSize(float32(width), float32(height)))
+	w.win.SetOnDropped(w.dropped)
+	w.keeper = newKeeper(w, o.KeepIn, keep.Me())
 	w.desk.Listen(w.changed)
 	w.changed(ChangedDocument | ChangedFile)
+	w.checkRecent()
+	if o.Open != "" {
+		w.load(o.Open)
+	}
 	return w
 }
 
@@ -136,6 +149,7 @@ func (w *Window) changed(c Changed) {
 	if w.menu != nil {
 		w.menu.follow()
 	}
+	w.keeper.changed(c)
 	w.trace.changed(c)
 }
 
@@ -197,6 +211,7 @@ func (w *Window) ShowAndRun() {
 
 // Close ends what runs beside the window.
 func (w *Window) Close() {
+	w.keeper.close(w.decided)
 	w.asks.close()
 	w.view.Close()
 	w.desk.Close()
@@ -209,6 +224,7 @@ func (w *Window) quit() {
 		return
 	}
 	w.guard("closing", func() {
+		w.decided = true
 		size := w.win.Canvas().Size()
 		w.app.Preferences().SetFloat(prefWidth, float64(size.Width))
 		w.app.Preferences().SetFloat(prefHeight, float64(size.Height))

@@ -1,17 +1,13 @@
 package ui
 
 import (
-	"errors"
-	"io/fs"
 	"os"
 	"path/filepath"
-	"slices"
 
 	"packrise/solver/rating"
 	"packrise/solver/section"
+	"packrise/ui/keep"
 )
-
-const mostRecent = 8
 
 // beside runs f beside the window; what f returns is run on the window's goroutine.
 func (w *Window) beside(f func() func()) {
@@ -77,7 +73,9 @@ func (w *Window) load(path string) {
 	rev := w.desk.Revision()
 	w.say("opening " + filepath.Base(path) + " …")
 	w.beside(func() func() {
+		print, printErr := keep.Look(path) // before it is read: what changes between is noticed
 		d, problems, err := section.Open(path)
+		open := func() { w.opened(d, path, problems, print, printErr) }
 		return func() {
 			w.say("")
 			switch {
@@ -87,16 +85,17 @@ func (w *Window) load(path string) {
 			case d == nil:
 				w.showProblemList(filepath.Base(path)+" can't be opened", path, problems)
 			case w.desk.Revision() != rev && w.desk.Dirty(): // changed while the file was read
-				w.guard("opening "+filepath.Base(path), func() { w.opened(d, path, problems) })
+				w.guard("opening "+filepath.Base(path), open)
 			default:
-				w.opened(d, path, problems)
+				open()
 			}
 		}
 	})
 }
 
-func (w *Window) opened(d *section.Document, path string, warnings []section.Problem) {
+func (w *Window) opened(d *section.Document, path string, warnings []section.Problem, print keep.Print, printErr error) {
 	w.remember(path)
+	w.keeper.expect(print, printErr)
 	w.desk.Load(d, path, warnings)
 }
 
@@ -112,27 +111,6 @@ func (w *Window) folder() string {
 		return f
 	}
 	return string(filepath.Separator)
-}
-
-// remember puts a file on top of the recent ones.
-func (w *Window) remember(path string) {
-	if abs, err := filepath.Abs(path); err == nil {
-		path = abs
-	}
-	p := w.app.Preferences()
-	recent := slices.DeleteFunc(slices.Clone(p.StringList(prefRecent)), func(s string) bool { return s == path })
-	recent = append([]string{path}, recent...)
-	p.SetStringList(prefRecent, recent[:min(len(recent), mostRecent)])
-	p.SetString(prefFolder, filepath.Dir(path))
-}
-
-// forget takes a file that is gone out of the recent ones.
-func (w *Window) forget(path string, err error) {
-	if errors.Is(err, fs.ErrNotExist) {
-		p := w.app.Preferences()
-		p.SetStringList(prefRecent, slices.DeleteFunc(slices.Clone(p.StringList(prefRecent)), func(s string) bool { return s == path }))
-		w.menu.follow()
-	}
 }
 
 // save writes the design into its file, or asks for one; then is called only when it is saved.
@@ -165,16 +143,26 @@ func (w *Window) saveTo(path string, then func()) {
 	w.view.cancelDrag()
 	d, cat := w.desk.Document(), w.desk.Catalog()
 	w.saving = true
+	was := w.keeper.printOf(path)
 	w.beside(func() func() {
+		if now, changed := changedSince(was, path); changed {
+			return func() {
+				w.saving, w.savedBy = false, nil
+				w.keeper.changedBeforeSave(path, now, then)
+			}
+		}
 		err := section.Save(path, rating.Snapshot(d, cat))
+		print, printErr := keep.Look(path)
 		return func() {
 			w.saving = false
 			if err != nil {
 				w.savedBy = nil
+				w.keeper.now()
 				w.showMessage("Not saved", sentence(err)+" The design is still open and the old file is as it was.")
 				return
 			}
 			w.remember(path)
+			w.keeper.expect(print, printErr)
 			w.desk.Saved(d, path)
 			w.say("saved " + filepath.Base(path))
 			if then != nil {

@@ -19,6 +19,7 @@ import (
 	"packrise/solver/catalog"
 	"packrise/solver/section"
 	"packrise/ui"
+	"packrise/ui/keep"
 )
 
 const help = `packrise – how hot each run of a packed section gets, and which one governs
@@ -51,19 +52,34 @@ func run(args []string, out, errs io.Writer) int {
 			path = a
 		}
 	}
+	why := whyNoDisplay(os.Getenv)
+	if why != "" {
+		d, _, status := begin(path, errs)
+		if d == nil {
+			return status
+		}
+		fmt.Fprintf(out, "packrise: there is no display (%s), so the picture goes into a file\n", why)
+		return withoutDisplay(catalog.Load(), d, path, out, errs)
+	}
+	return window(path, errs)
+}
+
+// window opens the window. A file that can't be opened does not stop it: it says why itself, for those who started it with the mouse.
+func window(path string, errs io.Writer) int {
+	o := ui.Options{Path: path, Version: version(), Trace: trace()}
 	d, warnings, status := begin(path, errs)
 	if d == nil {
-		return status
+		o.Path, o.Open = "", path
+		if d, warnings, status = begin("", errs); d == nil {
+			return status
+		}
 	}
-	cat := catalog.Load()
-	if why := whyNoDisplay(os.Getenv); why != "" {
-		fmt.Fprintf(out, "packrise: there is no display (%s), so the picture goes into a file\n", why)
-		return withoutDisplay(cat, d, path, out, errs)
+	folder, err := keep.Folder()
+	if err != nil {
+		fmt.Fprintln(errs, "packrise: unsaved work is not kept aside:", err)
 	}
-	w := ui.NewWindow(newApp(), ui.Options{
-		Catalog: cat, Document: d, Path: path, Warnings: warnings, Version: version(), Trace: trace(),
-	})
-	w.ShowAndRun()
+	o.Catalog, o.Document, o.Warnings, o.KeepIn = catalog.Load(), d, warnings, folder
+	ui.NewWindow(newApp(), o).ShowAndRun()
 	return 0
 }
 
