@@ -28,7 +28,7 @@ type keeper struct {
 	print   keep.Print       // of the file when it was read or written last
 	known   bool             // print has been taken
 	next    *keep.Print      // print of what is about to be told by the desk
-	asked   keep.Print       // the change that the person was asked about
+	asked   *keep.Print      // the change that the person was asked about
 
 	kept     *section.Document // in the side file, nil for none
 	due      bool              // a timer runs
