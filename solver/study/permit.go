@@ -2,6 +2,7 @@ package study
 
 import (
 	"context"
+	"fmt"
 	"math"
 
 	"packrise/solver/rating"
@@ -132,48 +133,98 @@ func (s *Study) One(ctx context.Context, d *section.Document, base *rating.Resul
 	return out, err
 }
 
-// AloneHere finds what each conductor may carry with every other part taken out.
+// AloneHere finds what each conductor may carry with every other part taken out. Those that then lie alike are solved once.
 func (s *Study) AloneHere(ctx context.Context, d *section.Document, base *rating.Result, o Options) ([]Alone, error) {
 	out := make([]Alone, len(base.Conductors))
-	err := s.each(ctx, len(out), o, func(e *rating.Engine, i int) (err error) {
-		out[i], err = s.alone(ctx, e, d, base.Conductors[i], o)
+	jobs := map[string]int{}
+	var list []soloist
+	of := make([]int, len(out))
+	for i, c := range base.Conductors {
+		if ctx.Err() != nil {
+			return nil, context.Cause(ctx)
+		}
+		of[i] = -1
+		job, why := s.soloist(d, c.ID)
+		if out[i] = (Alone{ID: c.ID, One: noAmperes, Three: noAmperes, Why: why}); why != "" {
+			continue
+		}
+		k, known := jobs[job.key]
+		if !known {
+			k = len(list)
+			jobs[job.key], list = k, append(list, job)
+		}
+		of[i] = k
+	}
+	found := make([]Alone, len(list))
+	err := s.each(ctx, len(list), o, func(e *rating.Engine, k int) (err error) {
+		found[k], err = s.alone(ctx, e, &list[k], o)
 		return err
 	})
+	for i, k := range of {
+		if k < 0 {
+			continue
+		}
+		a := found[k]
+		if a.Governs == list[k].id {
+			a.Governs = out[i].ID
+		}
+		a.ID = out[i].ID
+		out[i] = a
+	}
 	return out, err
+}
+
+// soloist is a design with one conductor left.
+type soloist struct {
+	id   string
+	nowA float64 // the current it starts from
+	d    *section.Document
+	key  string // equal for conductors that differ in name alone
 }
 
 // usualA starts a search for a conductor that carries nothing.
 const usualA = 1
 
-func (s *Study) alone(ctx context.Context, e *rating.Engine, d *section.Document, c rating.Conductor, o Options) (Alone, error) {
-	a := Alone{ID: c.ID, One: noAmperes, Three: noAmperes}
+// soloist takes everything else out. why is not empty for what has no permitted current.
+func (s *Study) soloist(d *section.Document, id string) (job soloist, why string) {
 	now, hertz := usualA+0.0, section.Opt[float64]{}
-	if p := section.Find(d, c.ID); p != nil && p.Role == section.RoleEarth {
-		a.Why = "an earth conductor"
-		return a, nil
+	if p := section.Find(d, id); p != nil && p.Role == section.RoleEarth {
+		return job, "an earth conductor"
 	}
-	if l := section.LoadOf(d, c.ID); l != nil {
+	if l := section.LoadOf(d, id); l != nil {
 		if l.HeatWM.OK {
-			a.Why = "its heat is fixed"
-			return a, nil
+			return job, "its heat is fixed"
 		}
 		hertz = l.FrequencyHz
 		if l.CurrentA.V > 0 {
 			now = l.CurrentA.V
 		}
 	}
-	one := isolate(d, c.ID, now, hertz)
-	p, err := s.fromScratch(ctx, e, rest(one, s.cat), o)
+	job = soloist{id: id, nowA: now, d: rest(isolate(d, id, now, hertz), s.cat), key: id}
+	if p := job.d.Parts; len(p) == 1 && p[0].ID == id {
+		q, wire := p[0], section.Conductor{}
+		if q.Conductor != nil {
+			wire = *q.Conductor
+		}
+		q.ID, q.Conductor, q.Role, q.Group, q.Pinned = "", nil, "", "", false
+		job.key = fmt.Sprintf("%v %v %v", q, wire, hertz)
+	}
+	return job, ""
+}
+
+func (s *Study) alone(ctx context.Context, e *rating.Engine, job *soloist, o Options) (Alone, error) {
+	a := Alone{ID: job.id, One: noAmperes, Three: noAmperes}
+	p, err := s.fromScratch(ctx, e, job.d, o)
 	if err != nil {
 		return a, err
 	}
-	a.One, a.Governs = Amperes{now * p.Nominal.Factor, now * p.Rely.Factor}, p.Nominal.Governs
-	three, ok := thrice(one, s.cat)
+	a.One, a.Governs = Amperes{job.nowA * p.Nominal.Factor, job.nowA * p.Rely.Factor}, p.Nominal.Governs
+	three, ok := thrice(job.d, s.cat)
 	if !ok {
 		return a, nil
 	}
 	if p, err = s.fromScratch(ctx, e, three, o); err == nil {
-		a.Three = Amperes{now * p.Nominal.Factor, now * p.Rely.Factor}
+		a.Three = Amperes{job.nowA * p.Nominal.Factor, job.nowA * p.Rely.Factor}
 	}
 	return a, err
 }
