@@ -131,12 +131,12 @@ func (k *Desk) Scene() render.Scene {
 	return s
 }
 
-// governs returns what governs by the bands, once they are known.
+// governs returns what governs with the bands in sight, once they are known: where only the band of another part reaches over its limit, that one.
 func (k *Desk) governs() (id string, ok bool) {
-	if r := k.Ratings(); r != nil && r.Bands != nil && r.Bands.At != "" {
-		return r.Bands.At, true
+	if r := k.Ratings(); r != nil && r.Bands != nil {
+		id = r.Governs()
 	}
-	return "", false
+	return id, id != ""
 }
 
 // governing returns what governs the answer shown, by the bands where they are known; "" for nothing.

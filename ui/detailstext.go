@@ -238,9 +238,9 @@ func (t *telling) runs(id string, limit *input) {
 // unknown tells whether the conductor's own heat is missing because nobody has said what it carries.
 func (t *telling) unknown(id string) bool { return slices.Contains(t.result.Unassigned, id) }
 
-// counting says that margins are compared with their bands, where those are known.
+// counting says that the margin is the smallest only with its band.
 func (t *telling) counting() string {
-	if _, ok := t.k.governs(); ok {
+	if id, ok := t.k.governs(); ok && (t.result.Governing == nil || t.result.Governing.Part != id) {
 		return ", less its band,"
 	}
 	return ""

@@ -54,6 +54,15 @@ func (r *Ratings) governing() (at int, ok bool) {
 	return governs(r.Base, r.Bands.Spreads)
 }
 
+// Governs returns the id of what Sentence names, "" where nothing has a limit.
+func (r *Ratings) Governs() string {
+	at, ok := r.governing()
+	if !ok {
+		return ""
+	}
+	return things(r.Base)[at].id
+}
+
 // governs is the thing with the least room to its limit, as pictures name it; where only P95 of another passes its limit, that one.
 func governs(r *rating.Result, spreads []Spread) (at int, ok bool) {
 	list, banded := things(r), rely(spreads, r.AmbientC, 0)
