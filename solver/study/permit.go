@@ -157,7 +157,7 @@ func (s *Study) AloneHere(ctx context.Context, d *section.Document, base *rating
 	}
 	found := make([]Alone, len(list))
 	err := s.each(ctx, len(list), o, func(e *rating.Engine, k int) (err error) {
-		found[k], err = s.alone(ctx, e, &list[k], o)
+		found[k], err = s.solo(ctx, e, &list[k], o)
 		return err
 	})
 	for i, k := range of {
@@ -212,7 +212,7 @@ func (s *Study) soloist(d *section.Document, id string) (job soloist, why string
 	return job, ""
 }
 
-func (s *Study) alone(ctx context.Context, e *rating.Engine, job *soloist, o Options) (Alone, error) {
+func (s *Study) solo(ctx context.Context, e *rating.Engine, job *soloist, o Options) (Alone, error) {
 	a := Alone{ID: job.id, One: noAmperes, Three: noAmperes}
 	p, err := s.fromScratch(ctx, e, job.d, o)
 	if err != nil {

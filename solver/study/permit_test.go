@@ -6,6 +6,7 @@ import (
 	"math"
 	"testing"
 
+	"packrise/solver/rating"
 	"packrise/solver/section"
 )
 
@@ -125,4 +126,13 @@ func TestSpread(t *testing.T) {
 	if got := s.Lower(20); math.Abs(got-1) > 1e-12 {
 		t.Errorf("below, at half the rise %.3f", got)
 	}
+}
+
+// alone is what one conductor may carry with everything else taken out.
+func (s *Study) alone(ctx context.Context, e *rating.Engine, d *section.Document, c rating.Conductor, o Options) (Alone, error) {
+	job, why := s.soloist(d, c.ID)
+	if why != "" {
+		return Alone{ID: c.ID, One: noAmperes, Three: noAmperes, Why: why}, nil
+	}
+	return s.solo(ctx, e, &job, o)
 }
