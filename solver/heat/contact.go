@@ -55,6 +55,9 @@ func lowest(f, ratio float64) int {
 func (g *region) orderBeside(c, d *piece, f float64, m int) int {
 	gap := dist(c.at, d.at) - c.a - d.a
 	reff := c.a * d.a / (c.a + d.a)
+	if _, open := g.border.(*hullWall); open && (c.rod() || d.rod()) {
+		f *= rodFactor
+	}
 	if openEnough(f*c.a, reff, gap, m) {
 		return 0
 	}
@@ -62,6 +65,12 @@ func (g *region) orderBeside(c, d *piece, f float64, m int) int {
 		return between(c.conductivity(x), d.conductivity(x))
 	})
 }
+
+// rodFactor is how many more harmonics are kept where a body without layers touches something in a bundle: its hottest place is there.
+const rodFactor = 1.5
+
+// rod tells that the piece has neither a temperature of its own nor layers nor an inside.
+func (c *piece) rod() bool { return !c.source && c.inside == nil && len(c.stack.Rings) == 0 }
 
 // contact is the order of a piece of radius a at a contact: see harmonic.Scale.
 func contact(f, a, reff, gap, k, skin float64, y func(x float64) float64) int {

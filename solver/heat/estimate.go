@@ -11,7 +11,11 @@ import (
 const (
 	tailShare  = 0.7 // harmonics above this share of the order stand for those that are left out
 	worstShare = 3.0 // the largest error of a metal over the mean rise
-	localShare = 1.0 // a body's hottest place: its last harmonics there
+	localShare = 1.3 // a body's hottest place: the harmonics that are left out there
+
+	// What holds the outside of a bundle at a temperature puts energy into harmonics that no conductor feels. Their error is the product of what the last
+	// ones of the solution carry and of what those of a conductor's own field would, about strayShare of 1/(2πk) K·m/W.
+	strayShare = 2e-6
 )
 
 // tail is the energy of the last harmonics, W/m·K, of unknowns x with outgoing amplitudes v.
@@ -58,11 +62,22 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 		}
 	}
 	e := m.set.Accuracy.floor() * m.rise(r)
-	if m.top.border != nil && (m.metalLayer() || len(m.top.gripped()) > 0) {
-		e *= 10 // panels on a foil, or next to a jump from film to temperature
+	if m.p.Wall.Shape == Hull {
+		e /= 2 // its panels are the better ones
 	}
+	if m.top.border != nil && m.metalLayer() {
+		e *= 10 // panels on a foil
+	}
+	tail := math.Inf(1)
 	if sum > 0 {
-		e += worstShare * s.tail / sum
+		tail = worstShare * s.tail / sum
+	}
+	if m.p.Wall.Shape == Hull && m.p.Wall.Against.Held {
+		e *= 2.5 // panels next to a jump from film to temperature
+		tail = math.Min(tail, worstShare*math.Sqrt(s.tail*strayShare*m.top.c2()))
+	}
+	if !math.IsInf(tail, 1) {
+		e += tail
 	}
 	for i := range r.PartErrorK {
 		r.PartErrorK[i] = e
@@ -87,7 +102,7 @@ func (m *Model) local(r *Result, s *state) {
 		p := &s.pieces[i]
 		switch m.p.Parts[p.part].Core {
 		case Body, Bore, Inside:
-			r.PartErrorK[p.part] += localShare * p.last()
+			r.PartErrorK[p.part] += localShare * p.left()
 		case FixedBore:
 			r.PartErrorK[p.part] = 0
 		}
@@ -97,10 +112,23 @@ func (m *Model) local(r *Result, s *state) {
 	}
 }
 
-// last is the size of the last two harmonics where Result.Core looks for a body's or cable's hottest place.
-func (p *pieceState) last() float64 {
-	sum := 0.0
-	for n := max(0, len(p.b)-2); n < len(p.b); n++ {
+// left is what the harmonics beyond the last may add where Result.Core looks for a body's or cable's hottest place, if they go on dying out as the last
+// quarter did after the one before.
+func (p *pieceState) left() float64 {
+	const slowest = 0.95
+	n := len(p.b)
+	quarter := max(2, n/4)
+	late, early := p.size(n-quarter, n), p.size(n-2*quarter, n-quarter)
+	if late == 0 {
+		return 0
+	}
+	ratio := math.Min(late/math.Max(early, 1e-300), slowest)
+	return late * ratio / (1 - ratio)
+}
+
+// size sums what the harmonics from … to−1 do at most there.
+func (p *pieceState) size(from, to int) (sum float64) {
+	for n := max(0, from); n < to; n++ {
 		a := p.from(n)
 		port := p.stack.Port(n + 1)
 		x := p.b[n]*complex(1+port.T, 0) + a*complex(port.Tau, 0)

@@ -3,7 +3,6 @@ package heat_test
 import (
 	"math"
 	"math/rand/v2"
-	"slices"
 	"testing"
 
 	"packrise/solver/heat"
@@ -211,46 +210,4 @@ func TestHullScalesAndMirrors(t *testing.T) {
 			}
 		}
 	})
-}
-
-// The estimate bounds the error against the fine setting nearly always, and is not far too large, with and without radiation.
-func TestHullEstimate(t *testing.T) {
-	n := soak(6, 60)
-	if testing.Short() {
-		n = 1
-	}
-	for _, acc := range []heat.Accuracy{heat.Draft, heat.Standard} {
-		bounded, all, worst := 0, 0, 0.0
-		var over []float64
-		for k, w := range []wish{{parts: 3, air: true}, {parts: 9, air: true}, {parts: 9, air: true, loose: true}, {parts: 8, air: true, cables: true}, {parts: 7}} {
-			for i := range n {
-				p := randomBundle(rand.New(rand.NewPCG(70+uint64(k), uint64(i))), w)
-				if w.air && i%2 == 1 {
-					p = lit(p)
-				}
-				fine := heat.New(p, heat.Settings{Accuracy: heat.Fine}).Solve(bg, nil)
-				r := heat.New(p, heat.Settings{Accuracy: acc}).Solve(bg, nil)
-				e := 0.0
-				for i := range r.Core {
-					e = math.Max(e, math.Abs(r.Core[i]-fine.Core[i]))
-				}
-				worst = math.Max(worst, e)
-				all++
-				if e <= r.ErrorK {
-					bounded++
-				} else {
-					t.Logf("accuracy %d, bundle %d of %+v: off by %.5f K, estimated %.5f", acc, i, w, e, r.ErrorK)
-				}
-				over = append(over, r.ErrorK/math.Max(e, 1e-9))
-			}
-		}
-		slices.Sort(over)
-		t.Logf("accuracy %d: bounded %d of %d, median %.1f times the error, worst error %.4f K", acc, bounded, all, over[all/2], worst)
-		if bounded*100 < 95*all {
-			t.Errorf("accuracy %d: only %d of %d bounded", acc, bounded, all)
-		}
-		if over[all/2] > 10 {
-			t.Errorf("accuracy %d: %.1f times too large in the median", acc, over[all/2])
-		}
-	}
 }

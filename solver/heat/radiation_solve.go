@@ -98,9 +98,12 @@ func (c *coupled) finish(heats []float64, status Status) {
 	c.pass(c.z, heats, true)
 }
 
-// grainError over the square of the patches per turn is what patches of one temperature and radiosity each may do, as a share of the largest
-// rise: more than nineteen of twenty random sections.
-const grainError = 0.35
+// Over the square of the patches per turn, what patches of one temperature and radiosity each may do, as a share of the largest rise: more than nineteen of
+// twenty random sections, and of bundles.
+const (
+	grainError     = 0.35
+	hullGrainError = 0.2
+)
 
 // level0 takes the sum of the emissions off them.
 func (k *knot) level0(z []float64) {
@@ -172,7 +175,12 @@ func (m *Model) solveCoupled(ctx context.Context, q []float64) *Result {
 		r.Nusselt, r.Beyond = rad.nu, !rad.inRange
 	}
 	part, _, _ := m.set.Accuracy.grain()
-	m.widen(r, m.rise(r)*(grainError/(part*part)+frozenError*far))
+	if m.p.Wall.Shape == Hull {
+		r.blend(m.rise(r) * hullGrainError / (part * part))
+	} else {
+		m.widen(r, m.rise(r)*grainError/(part*part))
+	}
+	m.widen(r, m.rise(r)*frozenError*far)
 	return r
 }
 
@@ -191,6 +199,14 @@ func (m *Model) widen(r *Result, add float64) {
 		r.PartErrorK[i] += add
 	}
 	r.ErrorK += add
+}
+
+// blend adds an error that has nothing to do with the others.
+func (r *Result) blend(add float64) {
+	for i, v := range r.PartErrorK {
+		r.PartErrorK[i] = math.Hypot(v, add)
+	}
+	r.ErrorK = math.Hypot(r.ErrorK, add)
 }
 
 // dim sets the coupled problem aside, of which a new one may keep something.

@@ -65,7 +65,7 @@ func (p *HullPatches) Follow(s *HullSystem) bool {
 		return true
 	}
 	if s.n != p.s.n || !slices.EqualFunc(s.panels, p.s.panels, func(a, b bow) bool {
-		return a.disc == b.disc && a.mid == b.mid && a.half == b.half && a.dir == b.dir
+		return a.disc == b.disc && a.p == b.p && a.mid == b.mid && a.half == b.half && a.dir == b.dir
 	}) {
 		return false
 	}
