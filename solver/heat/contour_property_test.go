@@ -26,15 +26,16 @@ func randomBunch(rnd *rand.Rand) heat.Problem {
 }
 
 // Any open bundle with parts that are not round is solved: heat balances, nothing is below ambient, the influence is reciprocal and that of the
-// solution, the finer answer lies within the estimate 19 times of 20, and moving a part is making the bundle anew. 3 bundles, 60 under PACKRISE_SOAK.
+// solution, the finer answer lies within the estimate 19 times of 20, and moving a part is making the bundle anew. 2 bundles, 60 under PACKRISE_SOAK.
 func TestContourHullProperties(t *testing.T) {
-	count, held := soak(3, 60), 0
-	for seed := range count {
+	count, held := soak(2, 60), 0
+	for k := range count {
+		seed := 4 * (k + 1)
 		p := randomBunch(rand.New(rand.NewPCG(uint64(seed), 11)))
 		m := heat.New(p, heat.Settings{})
 		r := m.Solve(bg, nil)
 		fine := solve(t, p, heat.Fine)
-		if d := r.Released - r.Generated; !(math.Abs(d) < 3e-3*(r.Generated+0.1)) {
+		if d := r.Released - r.Generated; !(math.Abs(d) < 1e-4*(r.Generated+0.1)) {
 			t.Errorf("%d: %g of %g W/m released", seed, r.Released, r.Generated)
 		}
 		k, _ := m.Influence(bg)
@@ -56,7 +57,7 @@ func TestContourHullProperties(t *testing.T) {
 			held++
 		}
 		t.Logf("%2d: %d parts, %4d unknowns, fine %4d, off by %.5f K, estimated %.5f, rise %.1f", seed, len(p.Parts), r.Unknowns, fine.Unknowns, worst, r.ErrorK, heatRise(r, p))
-		if worst > 0.1 {
+		if worst > 0.05 {
 			t.Errorf("%d: off by %g K", seed, worst)
 		}
 		p.Parts = append([]heat.Part(nil), p.Parts...)
@@ -70,7 +71,7 @@ func TestContourHullProperties(t *testing.T) {
 			}
 		}
 	}
-	if float64(held) < 0.95*float64(count)-1 {
+	if float64(held) < 0.95*float64(count) {
 		t.Errorf("the estimate held %d of %d times", held, count)
 	}
 }

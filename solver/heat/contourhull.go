@@ -3,6 +3,7 @@ package heat
 import (
 	"math"
 	"math/cmplx"
+	"slices"
 
 	"packrise/solver/outline"
 )
@@ -79,8 +80,10 @@ func (l *plan) drawHull() {
 	var strings []outline.Stroke
 	for i, a := range arcs {
 		d, e := k[a.Disc], k[arcs[(i+1)%len(arcs)].Disc]
-		if a.To-a.From > tinyArc && d.r > 0 {
+		if d.r > 0 {
 			bare[d.part] = append(bare[d.part], a)
+		}
+		if a.To-a.From > tinyArc && d.r > 0 {
 			l.hull = append(l.hull, arcStrokes(d, a.From, a.To)...)
 		}
 		p, q := d.at(a.To), e.at(a.To)
@@ -138,7 +141,7 @@ func arcStrokes(k knuckle, from, to float64) (l outline.Loop) {
 	return l
 }
 
-// expose cuts a part's outside where the string leaves it, and tells for each piece whether it is covered. A straight piece lies bare if the hull runs
+// expose cuts a part's outside where the string leaves it or touches it, and tells for each piece whether it is covered. A straight piece lies bare if the hull runs
 // along all of it.
 func (l *plan) expose(c *outline.Contour, k []knuckle, arcs []Arc, size float64, open outline.Side) {
 	var loop outline.Loop
@@ -164,7 +167,7 @@ func (l *plan) expose(c *outline.Contour, k []knuckle, arcs []Arc, size float64,
 				continue
 			}
 			for _, angle := range []float64{a.From, a.To} {
-				if t := turned(angle - from); t > tinyArc && t < span-tinyArc {
+				if t := turned(angle - from); t < span && !slices.ContainsFunc(cuts, func(c float64) bool { return math.Abs(t-c) <= tinyArc }) {
 					cuts = insert(cuts, t)
 				}
 			}
@@ -186,7 +189,7 @@ func (l *plan) expose(c *outline.Contour, k []knuckle, arcs []Arc, size float64,
 			loop, sides = append(loop, p), append(sides, side)
 		}
 	}
-	if exposed {
+	if exposed || len(loop) > len(c.Loop) {
 		c.Loop, c.Sides = loop, sides
 	}
 }

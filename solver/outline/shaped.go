@@ -293,11 +293,13 @@ func (b *bend) flux(to *bend, l int, spots *[modes + 1]spot, g *[modes + 1][mode
 	}
 }
 
-// turns is by how many turns the logarithms at the ends of cell l of to have to be brought to one branch.
+// turns is by how many turns the logarithms at the ends of cell l of to have to be brought to one branch: as seen from the end of b that keeps farther
+// off the cell's ends, for the other may be one of them but for rounding.
 func (b *bend) turns(to *bend, l int, spots *[modes + 1]spot) float64 {
 	at := cellsOf[modes].at
-	p, change := b.b, imag(spots[l+1].ll)-imag(spots[l].ll) // seen from the end farther away
-	if real(spots[l].w+spots[l+1].w) > 0 {
+	u, v := spots[l].w, spots[l+1].w
+	p, change := b.b, imag(spots[l+1].ll)-imag(spots[l].ll)
+	if math.Min(dist(u, -1), dist(v, -1)) > math.Min(dist(u, 1), dist(v, 1)) {
 		p, change = b.a, imag(spots[l+1].lr)-imag(spots[l].lr)
 	}
 	return math.Round((to.sweep(at[l], at[l+1], p) - change) / (2 * math.Pi))
