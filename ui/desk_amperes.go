@@ -61,11 +61,17 @@ func (k *Desk) amperes() amperes {
 	return amperes{}
 }
 
+// ratedByHand says what to do in the window about what stands against a rating; the problems say it for a file.
+var ratedByHand = map[string]string{
+	"unknown-current":   "enter them, 0 where idle, or what protects them",
+	rating.RuleNoReason: "write the reason with each, or lower it",
+}
+
 // refusalWords joins what stands against a rating.
 func refusalWords(all []section.Problem) string {
 	first := all[0].What
-	if all[0].Do != "" {
-		first += "; " + all[0].Do
+	if do := orWord(ratedByHand[all[0].Rule], all[0].Do); do != "" {
+		first += "; " + do
 	}
 	if n := len(all) - 1; n > 0 {
 		first += fmt.Sprintf(" (and %d more)", n)

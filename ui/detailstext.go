@@ -94,6 +94,9 @@ func (t *telling) one(id string) {
 	case section.Cable:
 		t.cable(id, *p)
 	}
+	if reason := inputNamed(in, "limit-reason"); reason != nil {
+		t.add(say("Its limit is above the catalogue's because "), word(reason), say("."))
+	}
 	t.place(*p, in)
 	t.seat(in)
 	t.wrong(id)

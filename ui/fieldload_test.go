@@ -101,3 +101,26 @@ func TestDeviceKeepsWhenItTrips(t *testing.T) {
 		b.wait()
 	}
 }
+
+// A limit above the catalogue's asks for its reason in the sentence, and is rated once it is there.
+func TestRaisedLimitAsksForItsReason(t *testing.T) {
+	b := newRatedBench(t, strings.Replace(ratedDesign, "{id: L1, kind: core, stock: thhn-8,", "{id: L1, kind: core, stock: thhn-8, limit_c: 105,", 1))
+	d := NewDetails(b.Desk)
+	b.show(d, 420, 600)
+	b.Select("L1")
+	if b.Ratings() != nil || len(b.RatingRefusal()) == 0 {
+		t.Fatal("a limit raised for no reason is rated")
+	}
+	mustTell(t, d, "Its limit is above the catalogue's because no reason given.", "No permitted currents: ", "write the reason with each, or lower it")
+	if err := enter(b, inputOf(b, "limit-reason", "L1"), "tested by the maker"); err != nil {
+		t.Fatal(err)
+	}
+	b.rated()
+	mustTell(t, d, "Its limit is above the catalogue's because tested by the maker.")
+	if b.Ratings() == nil || b.Document().LimitReason("L1") != "tested by the maker" {
+		t.Errorf("not rated: %v", b.RatingRefusal())
+	}
+	if inputOf(b, "limit-reason", "L2") != nil {
+		t.Error("a limit of the catalogue asks for a reason")
+	}
+}

@@ -198,6 +198,24 @@ func notWithInput(k *Desk, load string) *input {
 		})
 }
 
+// limitReasonInput is why a part's limit is above the catalogue's; nil where it isn't and no reason stands.
+func limitReasonInput(k *Desk, id string) *input {
+	d := k.Document()
+	r, _ := k.Result()
+	raised := r != nil && slices.Contains(r.Unreasoned, id)
+	now := d.LimitReason(id)
+	if !raised && now == "" {
+		return nil
+	}
+	key := section.ReasonLimit + id
+	in := &input{key: "limit-reason", label: "Why this limit", text: now, shown: now, hint: "no reason given", on: id, step: "reason of the limit of " + id, missing: raised}
+	in.about = "Its limit is above the catalogue's: nothing is rated until the reason is written, and it stands on every result."
+	in.read = func(text string) (string, func(*section.Document) *section.Document, error) {
+		return "", func(d *section.Document) *section.Document { return section.SetReason(d, key, text) }, nil
+	}
+	return in
+}
+
 // seatInputs say what may happen to parts when places are sought.
 func seatInputs(k *Desk, ids []string) []*input {
 	if slices.ContainsFunc(ids, func(id string) bool { return !isTop(id) }) {

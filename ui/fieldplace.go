@@ -140,6 +140,11 @@ func inputsOf(k *Desk, ids []string) []*input {
 	case section.Cable:
 		in = append(in, cableInputs(k, ids)...)
 	}
+	if len(ids) == 1 {
+		if reason := limitReasonInput(k, ids[0]); reason != nil {
+			in = append(in, reason)
+		}
+	}
 	in = append(in, placeInputs(k, ids)...)
 	return append(in, seatInputs(k, ids)...)
 }
