@@ -1,8 +1,9 @@
 # Packrise. `make run` opens the window, `make test` checks the engine; each does its own set-up.
 SHELL := bash
+export PREFIX DESTDIR
 NODISPLAY := ./assets/... ./solver/... ./render/... ./ui/... ./cmd/packrise-cli/...
 
-.PHONY: run build cli test race lint e2e soak validate bench clean
+.PHONY: run build cli test race lint e2e soak validate bench package install uninstall package-test clean
 
 run: build ## open the window on a demo design (FILE=… for another)
 	@bin/packrise $(FILE)
@@ -46,6 +47,18 @@ validate: ## computed against published ratings: writes testdata/validation and 
 bench: ## speed, with allocations
 	@.ci/setup go
 	CGO_ENABLED=0 go test -run '^$$' -bench . -benchmem $(NODISPLAY)
+
+package: build cli ## out/packrise-VERSION-linux-ARCH.tar.gz, which runs on a plain Debian
+	@bash packaging/package.sh
+
+package-test: package ## unpack it elsewhere, install, run, take away
+	@bash .ci/package.sh
+
+install: package ## into PREFIX (~/.local, as root /usr/local); DESTDIR is put before it
+	@sh out/package/packrise-*/install.sh
+
+uninstall: ## takes it away again, PREFIX as for install
+	@sh packaging/install.sh --uninstall
 
 clean:
 	rm -rf bin out

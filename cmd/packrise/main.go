@@ -67,8 +67,9 @@ func run(args []string, out, errs io.Writer) int {
 // window opens the window. A file that can't be opened does not stop it: it says why itself, for those who started it with the mouse.
 func window(path string, errs io.Writer) int {
 	o := ui.Options{Path: path, Version: version(), Trace: trace()}
-	d, warnings, status := begin(path, errs)
+	d, warnings, _ := begin(path, errs)
 	if d == nil {
+		status := 0
 		o.Path, o.Open = "", path
 		if d, warnings, status = begin("", errs); d == nil {
 			return status
