@@ -227,6 +227,9 @@ func TestAdviseScreen(t *testing.T) {
 
 // TestAdviseNested: a circuit in a cable goes one size up; that cable's jacket and no other grows for it.
 func TestAdviseNested(t *testing.T) {
+	if testing.Short() {
+		t.Skip("many sections of cables in a tube")
+	}
 	const cables = `
 packrise: 1
 surroundings: {kind: still-air, ambient_c: 30}
