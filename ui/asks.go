@@ -8,14 +8,15 @@ import (
 
 // asks is what the menu Ask leads to: the questions that are put to the open design, and where their answers stand.
 type asks struct {
-	w      *Window
-	asker  *asker
-	side   *side
-	pane   *askPane
-	shown  askShown
-	advice *study.Advice // nil: not known for the document as it is
-	rows   []*askRow
-	gone   string // what is said when the design changes under the list
+	w        *Window
+	asker    *asker
+	side     *side
+	pane     *askPane
+	shown    askShown
+	advice   *study.Advice // nil: not known for the document as it is
+	rows     []*askRow
+	gone     string      // what is said when the design changes under the list
+	matching *matchSheet // the dialog of a measurement that was opened last
 }
 
 // askShown is what the pane at the side shows.

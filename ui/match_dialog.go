@@ -28,6 +28,7 @@ type matchSheet struct {
 func (a *asks) showMatch() {
 	k := a.w.desk
 	s := &matchSheet{a: a, found: newFindings(), bar: widget.NewProgressBar()}
+	a.matching = s
 	s.begin("")
 	if list := k.Document().Measurements; len(list) > 0 {
 		s.begin(list[0].ID)
