@@ -11,6 +11,9 @@ import (
 // rated is a sentence from the ratings: with less ink while they are those of an older section.
 func (t *telling) rated(runs ...run) {
 	for i := range runs {
+		if runs[i].in == nil {
+			runs[i].text = unbroken(runs[i].text)
+		}
 		if (t.aged || t.agedRatings) && runs[i].in == nil {
 			runs[i].tone = old
 		}

@@ -2,6 +2,7 @@ package ui
 
 import (
 	"math"
+	"regexp"
 	"strconv"
 	"strings"
 
@@ -44,6 +45,12 @@ func withUnit(number, unit string) string {
 	}
 	return number + noBreak + unit
 }
+
+// unitAfter finds numbers with a plain space before their unit.
+var unitAfter = regexp.MustCompile(`(\d) (A|K|%|°C|W/m|W|mm)([^\pL]|$)`)
+
+// unbroken keeps numbers and their units on one line in a sentence that came from elsewhere.
+func unbroken(s string) string { return unitAfter.ReplaceAllString(s, "$1"+noBreak+"$2$3") }
 
 // someIDs joins ids for a sentence and cuts a long list.
 func someIDs(ids []string, most int) string {

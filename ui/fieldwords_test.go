@@ -70,3 +70,16 @@ func TestWords(t *testing.T) {
 		}
 	}
 }
+
+func TestUnbrokenKeepsUnitsWithNumbers(t *testing.T) {
+	for in, want := range map[string]string{
+		"may carry 8.06 A to rely on":      "may carry 8.06" + noBreak + "A to rely on",
+		"79 °C (72–89), margin 11 K.":      "79" + noBreak + "°C (72–89), margin 11" + noBreak + "K.",
+		"14 % it makes itself":             "14" + noBreak + "% it makes itself",
+		"L1 Also, 3 Kelvin and 5 markings": "L1 Also, 3 Kelvin and 5 markings", // words that begin like units
+	} {
+		if got := unbroken(in); got != want {
+			t.Errorf("%q: %q, want %q", in, got, want)
+		}
+	}
+}

@@ -48,8 +48,10 @@ func NewSentenceView(k *Desk, moved func()) *SentenceView {
 func (v *SentenceView) write() {
 	answer, assumed, state := v.desk.Sentence()
 	before := v.heightFor(v.width)
-	v.answer.say(run{text: answer, tone: strong})
-	v.amperes.say(amperesRun(v.desk.amperes()))
+	v.answer.say(run{text: unbroken(answer), tone: strong})
+	a := v.desk.amperes()
+	a.text = unbroken(a.text)
+	v.amperes.say(amperesRun(a))
 	runs := []run{{text: assumed, tone: quiet}}
 	link := func(text string, f *func()) {
 		if runs[len(runs)-1].text != "" {
