@@ -88,6 +88,12 @@ func (c *contourWall) segments(p *outline.ShapedPatches, contour int, off float6
 	return out
 }
 
+// measure works out what patches of contours are asked for; false if stop asked for an end.
+func (s *sides) measure(stop func() bool) bool {
+	p, ok := s.patch.(*drivenPatches)
+	return !ok || p.Measure(stop)
+}
+
 func (c *contourWall) exposed(int) [][2]float64 { return nil }
 
 // direct adds what patches of an outside without layers give off.

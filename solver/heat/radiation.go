@@ -170,6 +170,9 @@ func (m *Model) emissivities(g *region, r *radiant) []float64 {
 
 // look lets the pieces look about, all of them or those that have moved; false if stop asked for an end.
 func (r *radiant) look(g *region, threads int, stop func() bool) bool {
+	if r.sides != nil && !r.sides.measure(stop) {
+		return false
+	}
 	if r.ex == nil {
 		if r.spare != nil && r.spare.Alike(r.discs, r.out, r.points) {
 			r.ex = gas.NewExchange(r.spare.Enclosure, r.eps)

@@ -73,6 +73,9 @@ func (g *shine) inherit(old *shine) {
 func (g *shine) look(ctx context.Context) bool {
 	set := g.s.m.set
 	_, _, points := set.Accuracy.hollowGrain()
+	if !g.patch.Measure(ended(ctx)) {
+		return false
+	}
 	for _, h := range g.hollows {
 		if h.ex == nil && !h.look(g.s.plan, g.patch, points, set.threads(), ended(ctx)) {
 			return false

@@ -19,7 +19,7 @@ type ShapedPatches struct {
 }
 
 // Patches divides the contours that faces tells of along their cells, longest telling how long a patch at z may be. Contours of metals take part with
-// one temperature; what a held one takes up goes to what holds it.
+// one temperature; what a held one takes up goes to what holds it. Measure is due before Means.
 func (s *Shaped) Patches(faces func(contour int) bool, longest func(z complex128) float64) *ShapedPatches {
 	p := &ShapedPatches{s: s}
 	at := cellsOf[modes].at
@@ -50,9 +50,7 @@ func (s *Shaped) Patches(faces func(contour int) bool, longest func(z complex128
 			p.share[c] /= length
 		}
 	}
-	p.measure()
 	p.feel = make([][]touch, len(s.discs))
-	each(len(s.discs), p.Follow)
 	return p
 }
 
@@ -71,20 +69,37 @@ func (s *Shaped) gain(b *bend) float64 {
 	return 2 / (c.In + c.Out)
 }
 
-// measure fills temp.
-func (p *ShapedPatches) measure() {
+// Measure works out what every density and disc brings to the patches, which Means needs, unless that is known; false if stop, asked after every
+// millisecond or so of work, asked for an end.
+func (p *ShapedPatches) Measure(stop func() bool) bool {
+	if p.temp != nil {
+		return true
+	}
 	s := p.s
-	p.temp = make([]float64, len(p.A)*s.n)
+	temp := make([]float64, len(p.A)*s.n)
 	each(len(p.A), func(k int) {
+		if stop() {
+			return
+		}
 		var f curved
 		for c := p.first[k]; c < p.first[k+1]; c++ {
 			to := s.bendOf(p.row[c])
 			for j := range s.bends {
 				from := &s.bends[j]
-				from.meanTemp(&f, to, p.row[c]-to.dof, p.share[c], p.temp[k*s.n+from.dof:][:modes])
+				from.meanTemp(&f, to, p.row[c]-to.dof, p.share[c], temp[k*s.n+from.dof:][:modes])
 			}
 		}
 	})
+	each(len(s.discs), func(i int) {
+		if !stop() {
+			p.Follow(i)
+		}
+	})
+	if stop() {
+		return false
+	}
+	p.temp = temp
+	return true
 }
 
 // bendOf is the bend with unknown dof.

@@ -14,6 +14,9 @@ func TestShapedPatches(t *testing.T) {
 		{Loop: Circle(c), In: kw, Sides: []Side{{Film: h, Temp: 20}}},
 	}, 1, func() bool { return false })
 	p := s.Patches(func(contour int) bool { return contour < 2 }, func(complex128) float64 { return 1e-3 })
+	if p.Measure(func() bool { return true }) || !p.Measure(func() bool { return false }) {
+		t.Error("measuring does not end when it should")
+	}
 	w := make([]float64, len(p.A))
 	around := map[int]float64{}
 	for i, l := range p.Length {
