@@ -10,6 +10,7 @@ import (
 	"testing"
 	"time"
 
+	"packrise/assets"
 	"packrise/solver/section"
 )
 
@@ -267,5 +268,19 @@ loads:
 	}
 	if c := kinds[ChangeOut]; c == nil || c.IDs[0] != "C1" {
 		t.Errorf("%+v", c)
+	}
+}
+
+// BenchmarkAdvise: 37 cores, from nothing prepared.
+func BenchmarkAdvise(b *testing.B) {
+	raw, err := assets.Designs.ReadFile("designs/robot-umbilical.yaml")
+	if err != nil {
+		b.Fatal(err)
+	}
+	d, _ := section.Read(raw)
+	for b.Loop() {
+		if _, err := New(cat).Advise(context.Background(), d, nil, Options{AssumeIdle: true}); err != nil {
+			b.Fatal(err)
+		}
 	}
 }
