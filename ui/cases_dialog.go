@@ -9,7 +9,6 @@ import (
 	"fyne.io/fyne/v2/dialog"
 	"fyne.io/fyne/v2/widget"
 
-	"packrise/solver/quantity"
 	"packrise/solver/section"
 	"packrise/solver/study"
 )
@@ -22,7 +21,6 @@ type casesSheet struct {
 	remove *widget.Button
 	sheet  *inputSheet
 	found  *findings
-	filled bool
 }
 
 // showCases edits the load cases. Each entry is an undo step of its own.
@@ -113,7 +111,7 @@ func caseFindings(k *Desk) []ruleBlock {
 	r := k.Ratings()
 	switch {
 	case r != nil && r.Cases != nil:
-		return caseBlocks(r.Cases)
+		return caseBlocks(r)
 	case len(k.RatingRefusal()) > 0:
 		return []ruleBlock{{"Not solved", []string{fullStop(upperFirst(refusalWords(k.RatingRefusal())))}}}
 	case k.RatingFailure() != nil:
@@ -125,7 +123,8 @@ func caseFindings(k *Desk) []ruleBlock {
 }
 
 // caseBlocks are a sentence for each case and the worst one for each thing, alike ones together.
-func caseBlocks(c *study.Cases) []ruleBlock {
+func caseBlocks(r *study.Ratings) []ruleBlock {
+	c := r.Cases
 	each := ruleBlock{title: "What each case comes to"}
 	for i := range c.List {
 		a := &c.List[i]
@@ -146,7 +145,8 @@ func caseBlocks(c *study.Cases) []ruleBlock {
 		if math.IsInf(w.TempC, -1) || math.IsNaN(w.TempC) {
 			continue
 		} else if !math.IsInf(w.TempC, 1) {
-			t = withUnit(quantity.Fixed(math.Ceil(w.TempC-1e-9), 0), "°C")
+			q, _ := readingOf(r.Base, w.ID)
+			t = withUnit(degrees(w.TempC, q.limit), "°C")
 		}
 		g.add(w.ID+" ("+t+")", name)
 	}

@@ -181,7 +181,7 @@ func caseAnyInput(d *section.Document, c *section.Case, i int) *input {
 	if i < len(c.Any) {
 		in.text = anyText(c.Any[i])
 	} else if i > 0 {
-		in.label = "Any of, too"
+		in.label = "And any of"
 	}
 	in.step = "choice of case " + c.ID
 	return caseInput(c.ID, in, func(text string) (string, func(*section.Case), error) {
