@@ -179,6 +179,9 @@ func (h *hullWall) direct(*bound, *sides) {}
 
 func (h *hullWall) follow(s *sides, _ int) bool { return s.patch.(*outline.HullPatches).Follow(h.sys) }
 
+// refit is follow where the strings have moved but are divided alike: patches keep what they saw, which is for frozen drafts alone.
+func (h *hullWall) refit(s *sides) bool { return s.patch.(*outline.HullPatches).Refit(h.sys) }
+
 func (h *hullWall) fork() border {
 	f := *h
 	f.exchange = h.exchange.fork()

@@ -18,6 +18,7 @@ type coupled struct {
 	heats []float64 // by source, of the last solution
 	cores []float64 // by source, of the last solution
 	warm  bool      // z is the solution of something alike
+	stale bool      // a bundle's string has moved since the surfaces looked about: with it arcs and strings have
 }
 
 // newCoupled prepares the model's system, which is written; old may be that of an older model or section.

@@ -153,7 +153,11 @@ func (m *Model) solveCoupled(ctx context.Context, q []float64) *Result {
 	c := m.glow
 	frozen, far := c.freezes()
 	if !frozen {
-		far = 0
+		if far = 0; c.stale {
+			m.dim()
+			m.glow, m.before = m.newCoupled(m.before), nil
+			c = m.glow
+		}
 		if !c.look(ctx) {
 			return m.blank(Cancelled)
 		}
@@ -224,8 +228,12 @@ func (m *Model) glowOn(i int, old []int) {
 	}
 	if r := c.top.rad; r != nil && r.sides != nil {
 		if !r.sides.wall.follow(r.sides, i) {
-			m.dim() // the wall was divided anew
-			return
+			h, hull := r.sides.wall.(*hullWall)
+			if frozen, _ := c.freezes(); !hull || !frozen || !h.refit(r.sides) {
+				m.dim() // the wall was divided anew
+				return
+			}
+			c.stale = true
 		}
 	}
 	c.follow(old, m.top.offsets())

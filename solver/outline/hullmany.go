@@ -96,32 +96,43 @@ func (p *HullPatches) measured() *patchMeans {
 			addScaled(m.temp[k*n:][:n], p.share[c], p.s.temp[p.row[c]*n:][:n])
 		}
 	}
+	patch, share := make([]int, n), make([]float64, n) // of each cell
+	for i := range patch {
+		patch[i] = -1
+	}
+	for k := range p.Length {
+		for c := p.first[k]; c < p.first[k+1]; c++ {
+			patch[p.row[c]], share[p.row[c]] = k, p.share[c]
+		}
+	}
 	for j := range m.feel {
-		m.feel[j] = p.feltOf(&p.s.discs[j])
+		m.feel[j] = feltOf(&p.s.discs[j], patch, share, len(p.Length))
 	}
 	p.means = m
 	return m
 }
 
-// feltOf is what each patch feels of d.
-func (p *HullPatches) feltOf(d *hullDisc) []touch {
-	at := make([]int, p.s.n) // of each cell in d's order
-	for k, i := range d.order {
-		at[i] = k
-	}
-	rows := make([]touch, len(p.Length))
-	for k := range rows {
-		row := make(touch, len(d.warm))
-		cols := 0
-		for c := p.first[k]; c < p.first[k+1]; c++ {
-			for h, w := range d.warm {
-				if i := at[p.row[c]]; i < len(w) {
-					row[h] -= p.share[c] * w[i]
-					cols = max(cols, h+1)
-				}
+// feltOf is what each of so many patches feels of d; patch of each cell, −1 for none, and the cell's share in it.
+func feltOf(d *hullDisc, patch []int, share []float64, patches int) []touch {
+	cols, size := make([]int, patches), 0
+	for h := len(d.warm) - 1; h >= 0; h-- {
+		for _, i := range d.order[:len(d.warm[h])] {
+			if k := patch[i]; k >= 0 && cols[k] == 0 {
+				cols[k] = h + 1
+				size += h + 1
 			}
 		}
-		rows[k] = append(touch(nil), row[:cols]...)
+	}
+	rows, room := make([]touch, patches), make([]float64, size)
+	for k, c := range cols {
+		rows[k], room = room[:c:c], room[c:]
+	}
+	for h, w := range d.warm {
+		for k, v := range w {
+			if i := d.order[k]; patch[i] >= 0 {
+				rows[patch[i]][h] -= share[i] * v
+			}
+		}
 	}
 	return rows
 }

@@ -51,11 +51,7 @@ func (s *HullSystem) Patches(longest func(z complex128) float64) *HullPatches {
 		}
 	}
 	p.first = append(p.first, len(p.row))
-	for k, length := range p.Length {
-		for c := p.first[k]; c < p.first[k+1]; c++ {
-			p.share[c] /= length
-		}
-	}
+	p.spread()
 	return p
 }
 
@@ -74,6 +70,48 @@ func (p *HullPatches) Follow(s *HullSystem) bool {
 		p.gain[c] = s.gain(row)
 	}
 	return true
+}
+
+// Refit leads the patches over to a system whose hull has as many panels on as many arcs and strings, of the same discs, wherever they are now: every patch keeps
+// its cells, and gets new ends and a new length. False, and nothing is done, if it has not.
+func (p *HullPatches) Refit(s *HullSystem) bool {
+	if s.n != p.s.n || !slices.EqualFunc(s.panels, p.s.panels, func(a, b bow) bool { return a.disc == b.disc && a.p == b.p && a.piece == b.piece }) ||
+		!slices.EqualFunc(s.pieces, p.s.pieces, func(a, b piece) bool { return a.ends == b.ends }) {
+		return false
+	}
+	p.s, p.means = s, nil
+	c, k, before := 0, -1, -1
+	for i := range s.panels {
+		b := &s.panels[i]
+		if b.disc >= 0 {
+			continue
+		}
+		at := cellsOf[b.p].at
+		for l := range b.p {
+			if k+1 < len(p.Length) && c == p.first[k+1] {
+				k++
+				p.A[k], p.Length[k] = b.at(at[l]), 0
+				if b.piece == before {
+					p.A[k] = p.B[k-1]
+				}
+			}
+			p.B[k], before = b.at(at[l+1]), b.piece
+			p.Length[k] += b.cell(l)
+			p.share[c], p.gain[c] = b.cell(l), s.gain(p.row[c])
+			c++
+		}
+	}
+	p.spread()
+	return true
+}
+
+// spread makes shares of lengths.
+func (p *HullPatches) spread() {
+	for k, length := range p.Length {
+		for c := p.first[k]; c < p.first[k+1]; c++ {
+			p.share[c] /= length
+		}
+	}
 }
 
 // gain is what 1 W/m² on the inner side adds to row i.
