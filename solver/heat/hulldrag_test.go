@@ -54,7 +54,14 @@ func TestHullFreezes(t *testing.T) {
 			}
 		}
 		draft.Move(k, at.X, at.Y)
-		draft.Solve(bg, nil)
+		back, _, _ := draft.Tangent(bg)
+		p.Parts[k].X, p.Parts[k].Y = at.X, at.Y
+		want, _, _ := heat.New(p, heat.Settings{Accuracy: heat.Draft}).Tangent(bg)
+		for j := range want {
+			if want[j] != nil && math.Abs(back[j][j]-want[j][j]) > 2e-3*want[j][j] {
+				t.Errorf("bundle %d: back again, tangent %.5f K per W/m, of a new draft %.5f", i, back[j][j], want[j][j])
+			}
+		}
 	}
 	t.Logf("%d of %d frames frozen, at most %.4f K from a new draft", frozen, frames, worst)
 	if frozen*2 < frames || frozen == frames {

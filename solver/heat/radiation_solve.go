@@ -226,6 +226,7 @@ func (m *Model) glowOn(i int, old []int) {
 	if c == nil || !m.ready {
 		return
 	}
+	c.cores = nil // of another place, even if the piece comes back to where surfaces looked about
 	if r := c.top.rad; r != nil && r.sides != nil {
 		if !r.sides.wall.follow(r.sides, i) {
 			h, hull := r.sides.wall.(*hullWall)
