@@ -33,6 +33,7 @@ lint:
 e2e: build cli ## the real window under a display without a screen
 	@.ci/setup look
 	bash .ci/e2e.sh
+	bash .ci/keep.sh
 
 soak: ## long runs: more random sections, fuzzing; by hand
 	@.ci/setup go
@@ -42,6 +43,7 @@ soak: ## long runs: more random sections, fuzzing; by hand
 validate: ## computed against published ratings: writes testdata/validation and prints its summary
 	@.ci/setup go
 	CGO_ENABLED=0 PACKRISE_VALIDATE=1 go test ./solver/rating -count=1 -run Validation
+	CGO_ENABLED=0 PACKRISE_VALIDATE=1 go test ./solver/study -count=1 -timeout 60m -run 'Published|Scenario'
 	@grep '^|' testdata/validation/table.md | sed '/^| case/,$$d'
 
 bench: ## speed, with allocations

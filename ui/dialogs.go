@@ -60,9 +60,14 @@ func wrapped(text string) (*widget.Label, fyne.CanvasObject) {
 
 // ask puts a question with its answers, and Cancel.
 func (w *Window) ask(title, text string, answers ...answerOf) {
+	w.askOr("Cancel", title, text, answers...)
+}
+
+// askOr is ask with another word for changing nothing.
+func (w *Window) askOr(stay, title, text string, answers ...answerOf) {
 	_, body := wrapped(text)
 	d := dialog.NewCustomWithoutButtons(title, body, w.win)
-	buttons := []fyne.CanvasObject{widget.NewButton("Cancel", w.hide)}
+	buttons := []fyne.CanvasObject{widget.NewButton(stay, w.hide)}
 	for i, a := range answers {
 		b := widget.NewButton(a.label, func() {
 			w.hide()

@@ -133,10 +133,10 @@ func (g *keeper) askOther(path string, other keep.Held) {
 	if other.Host != g.me.Host {
 		where += " on " + other.Host
 	}
-	text := fmt.Sprintf("Another window (%s) has had it open since %s. You can work on it in both: who saves second is asked before anything is overwritten. Or work on a copy without a file.",
+	text := fmt.Sprintf("Another window (%s) has had it open since %s. You can work on it in both: who saves second is asked before anything is overwritten. Or work on a copy that has no file yet.",
 		where, other.Since.Format("15:04"))
 	if time.Since(other.Since) > 20*time.Hour {
-		text = fmt.Sprintf("Another window (%s) has it open. You can work on it in both: who saves second is asked before anything is overwritten. Or work on a copy without a file.", where)
+		text = fmt.Sprintf("Another window (%s) has it open. You can work on it in both: who saves second is asked before anything is overwritten. Or work on a copy that has no file yet.", where)
 	}
-	g.w.ask(filepath.Base(path)+" is open elsewhere", text, answerOf{"Work on a copy", g.w.desk.Detach})
+	g.w.askOr("Work in both", filepath.Base(path)+" is open elsewhere", text, answerOf{"Work on a copy", g.w.desk.Detach})
 }

@@ -95,7 +95,7 @@ func (w *Window) showKept(f keep.Found) {
 		label = "Close"
 	}
 	d.SetButtons([]fyne.CanvasObject{widget.NewButton(label, w.hide)})
-	w.show(d, fyne.NewSize(620, min(480, 190+float32(len(f.Kept)-1+len(f.Broken))*105)))
+	w.show(d, fyne.NewSize(620, min(520, 290+float32(len(f.Kept)-1+len(f.Broken))*110)))
 }
 
 func wrappedLabel(s string) *widget.Label {
