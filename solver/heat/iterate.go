@@ -15,6 +15,9 @@ type operator func(y, x []float64)
 // conjugate solves A x = f by conjugate gradients (Hestenes and Stiefel 1952) from the x given, until the residual is below tol times f.
 // ok is false if stop asked for an end; steps < 0 tells that A turned out not to be positive.
 func conjugate(a operator, x, f []float64, tol float64, stop func() bool) (steps int, ok bool) {
+	if nought(x, f) {
+		return 0, true
+	}
 	n := len(f)
 	w := make([]float64, 3*n)
 	r, p, q := w[:n], w[n:2*n], w[2*n:]
@@ -49,8 +52,20 @@ func conjugate(a operator, x, f []float64, tol float64, stop func() bool) (steps
 	return steps, true
 }
 
+// nought answers a right side of nothing, for which a tolerance in shares of it has no meaning.
+func nought(x, f []float64) bool {
+	if dot(f, f) != 0 {
+		return false
+	}
+	clear(x)
+	return true
+}
+
 // minres solves A x = f for a symmetric A of either sign by minimal residuals (Paige and Saunders 1975).
 func minres(a operator, x, f []float64, tol float64, stop func() bool) (steps int, ok bool) {
+	if nought(x, f) {
+		return 0, true
+	}
 	l := lanczos{x: x}
 	for _, v := range []*[]float64{&l.v0, &l.v, &l.t, &l.d0, &l.d1, &l.d2} {
 		*v = make([]float64, len(f))
