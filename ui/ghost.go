@@ -109,38 +109,47 @@ func opaqueColor(n fyne.ThemeColorName) color.NRGBA {
 	return c
 }
 
-// drawGhost strokes the marks dashed on a halo, so that they stand out on the heat map. k is pixels a unit.
+// drawGhost strokes the marks dashed on a halo, so that they stand out on the heat map; all halos lie under all lines. k is pixels a unit.
 func drawGhost(c render.Canvas, view render.View, marks []ghostMark, k float64, accent, paper color.NRGBA) {
-	halo := render.Pen{Width: 4.5 * k, Color: paper}
-	pen := render.Pen{Width: 2.2 * k, Color: accent, Dash: []float64{6 * k, 4 * k}}
-	both := func(path func()) {
-		path()
-		c.Stroke(halo)
-		path()
+	for _, over := range []bool{false, true} {
+		for i := range marks {
+			m := &marks[i]
+			f := k * fineness(max(m.shape.OuterR(), m.shape.Width/2)*view.PxPerMM/k)
+			pen := render.Pen{Width: 4.5 * f, Color: paper}
+			if over {
+				pen = render.Pen{Width: 2.2 * f, Color: accent, Dash: []float64{6 * f, 4 * f}}
+			}
+			m.stroke(c, view, pen)
+			if over && m.from != nil {
+				x, y := view.ToPx(*m.from)
+				c.Circle(x, y, 3*f)
+				c.Fill(accent)
+			}
+		}
+	}
+}
+
+// fineness makes lines about small shapes thinner. r is in units.
+func fineness(r float64) float64 { return math.Min(1, math.Max(0.45, r/12)) }
+
+// stroke draws a mark's outline, the cross over what would be gone, and the way of what would move.
+func (m *ghostMark) stroke(c render.Canvas, view render.View, pen render.Pen) {
+	ghostPath(c, view, &m.shape)
+	c.Stroke(pen)
+	x, y := view.ToPx(m.shape.At)
+	if m.gone {
+		r := 0.7 * m.shape.InnerR() * view.PxPerMM
+		c.MoveTo(x-r, y-r)
+		c.LineTo(x+r, y+r)
+		c.MoveTo(x-r, y+r)
+		c.LineTo(x+r, y-r)
 		c.Stroke(pen)
 	}
-	for i := range marks {
-		m := &marks[i]
-		both(func() { ghostPath(c, view, &m.shape) })
-		x, y := view.ToPx(m.shape.At)
-		if m.gone {
-			r := 0.7 * m.shape.InnerR() * view.PxPerMM
-			both(func() {
-				c.MoveTo(x-r, y-r)
-				c.LineTo(x+r, y+r)
-				c.MoveTo(x-r, y+r)
-				c.LineTo(x+r, y-r)
-			})
-		}
-		if m.from != nil {
-			fx, fy := view.ToPx(*m.from)
-			both(func() {
-				c.MoveTo(fx, fy)
-				c.LineTo(x, y)
-			})
-			c.Circle(fx, fy, 3*k)
-			c.Fill(accent)
-		}
+	if m.from != nil {
+		fx, fy := view.ToPx(*m.from)
+		c.MoveTo(fx, fy)
+		c.LineTo(x, y)
+		c.Stroke(pen)
 	}
 }
 
