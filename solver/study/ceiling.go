@@ -42,6 +42,7 @@ type climber struct {
 	below *step   // the one before it
 	hi    *step   // smallest x with something over and temperatures known
 	wall  float64 // smallest x known to have no steady state
+	falls int     // solutions without a steady state
 }
 
 type step struct {
@@ -82,7 +83,7 @@ func (s *Study) climb(ctx context.Context, e *rating.Engine, base *rating.Result
 // note keeps a solution. False if nothing in it has a limit.
 func (c *climber) note(x float64, r *rating.Result) bool {
 	if r.Status == heat.ThermalRunaway {
-		c.wall = math.Min(c.wall, x)
+		c.wall, c.falls = math.Min(c.wall, x), c.falls+1
 		if r.Settles > 0 && r.Settles < 1 { // of all currents: right when all are scaled, else a place to look
 			c.found.Runaway = true
 		}
@@ -120,7 +121,7 @@ func (c *climber) done() bool {
 		top := c.top()
 		return !math.IsInf(top, 1) && top-c.lo.x <= narrow*top
 	}
-	return c.hi != nil && c.hi.x == 0
+	return c.hi != nil && c.hi.x == 0 || c.wall == 0
 }
 
 // next proposes an x: where the first thing reaches its limit by a line through two solutions, or through one and the outside.
@@ -135,7 +136,7 @@ func (c *climber) next() float64 {
 	case c.hi != nil:
 		return c.down(c.hi)
 	}
-	if c.wall < 1e-6 {
+	if c.falls > 2 { // where others run away nothing is found below, and each of these takes long
 		return 0
 	}
 	return c.wall / 4
