@@ -323,14 +323,14 @@ func (m *Model) looseContours(r *Result) {
 		return
 	}
 	l, rise := m.contours.sys.Loose(), m.rise(r)
-	m.widen(r, rise*(looseShare*l*l+shapedFloor+2*r.imbalance()))
+	m.widen(r, rise*(looseShare*l*l+2*r.imbalance()))
 	for i := range m.p.Parts {
 		if !m.contours.plan.drawn[i] {
 			continue
 		}
 		switch m.p.Parts[i].Core {
 		case Body, Bore, Inside: // a hottest place is of first order
-			r.PartErrorK[i] += rise * l
+			r.PartErrorK[i] += rise * hottestShare * l
 		case FixedBore:
 			r.PartErrorK[i] = 0
 		}

@@ -62,10 +62,14 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 		}
 	}
 	e := m.set.Accuracy.floor() * m.rise(r)
-	if m.p.Wall.Shape == Hull {
+	switch {
+	case m.contours != nil && m.p.Wall.Shape == Hull:
+		e /= 10
+	case m.contours != nil:
+		e /= 3 // bends lie where densities ask for them, on foils too
+	case m.p.Wall.Shape == Hull:
 		e /= 2 // its panels are the better ones
-	}
-	if m.top.border != nil && m.metalLayer() {
+	case m.top.border != nil && m.metalLayer():
 		e *= 10 // panels on a foil
 	}
 	tail := math.Inf(1)
