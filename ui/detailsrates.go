@@ -229,7 +229,7 @@ func (t *telling) circuit(in []*input) {
 	sentence := paragraph{say("It is protected by "), word(device)}
 	if trips := inputNamed(in, "trips"); trips != nil {
 		at := word(trips)
-		at.text = orWord(withUnitIf(trips.text, "× that"), trips.hint)
+		at.text = orWord(withUnitIf(trips.text, "× that"), strings.Replace(trips.hint, ",", noBreak+"× that,", 1))
 		sentence = append(sentence, say(", which trips at "), at)
 	}
 	t.out = append(t.out, append(sentence, say(".")))

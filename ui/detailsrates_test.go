@@ -30,7 +30,7 @@ func TestDetailsTellWhatAConductorMayCarry(t *testing.T) {
 		t.Errorf("a grouping factor of %g", factor)
 	}
 	b.Select("N1")
-	mustTell(t, d, "What it may carry\n", "It is protected by breaker 10 A, which trips at 1.45, usual of its kind.", "10 A is the rating of its device",
+	mustTell(t, d, "What it may carry\n", "It is protected by breaker 10 A, which trips at 1.45 × that, usual of its kind.", "10 A is the rating of its device",
 		"Should lamp draw 14.5 A, its conventional tripping current (assumed for its kind), with the rest at load", "made for 24 A")
 	b.Select("F1")
 	low, high, _ := r.Band(indexIn(r.Base, "F1"))
