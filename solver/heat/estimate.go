@@ -62,10 +62,11 @@ func (m *Model) estimate(r *Result, s *state, q []float64) {
 		}
 	}
 	e := m.set.Accuracy.floor() * m.rise(r)
+	bends := m.contours != nil && m.set.Accuracy != Draft
 	switch {
-	case m.contours != nil && m.p.Wall.Shape == Hull:
+	case bends && m.p.Wall.Shape == Hull:
 		e /= 10
-	case m.contours != nil:
+	case bends:
 		e /= 3 // bends lie where densities ask for them, on foils too
 	case m.p.Wall.Shape == Hull:
 		e /= 2 // its panels are the better ones

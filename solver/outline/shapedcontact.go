@@ -5,7 +5,7 @@ import (
 	"math/cmplx"
 )
 
-// perContact is the longest half of a bend near a contact, over the scale on which the gap opens there.
+// perContact is the longest half of a bend near a contact, over the scale on which the gap opens there; less at a fineness above 1.
 const perContact = 1.0 // measured: finite-element sections and wires on a bar need no second round
 
 // cut adds a piece of a stroke, halved as often as contacts with other contours ask.
@@ -59,7 +59,7 @@ func (s *Shaped) closer(st *Stroke, contour int, u, half float64) bool {
 		}
 		k := math.Max(share(c, outwards), share(d, facing))
 		r := 1 / math.Max(bend, 1e-9)
-		if half > perContact*math.Max(math.Sqrt(2*r*gap), r*math.Min(k, 1)) {
+		if half > perContact/math.Max(1, s.fineness)*math.Max(math.Sqrt(2*r*gap), r*math.Min(k, 1)) {
 			return true
 		}
 	}

@@ -18,7 +18,7 @@ const (
 func (s *Shaped) begin() {
 	for i := range s.contours {
 		l := s.contours[i].Loop
-		longest, first := l.Perimeter()/8, len(s.bends)
+		longest, first := l.Perimeter()/(8*math.Max(1, s.fineness)), len(s.bends)
 		lo, hi := l.Bounds()
 		corner := math.Min(real(hi-lo), imag(hi-lo)) / (inCorner * s.fineness)
 		for j := range l {
