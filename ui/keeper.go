@@ -146,6 +146,10 @@ func (g *keeper) mark(path string, first bool) {
 		}
 		found := keep.Find(g.folder, first, designs...)
 		return func() {
+			if g.path != path { // another design came meanwhile, whose note this one may have taken away
+				now := g.path
+				g.w.desk.rooms.Beside(func() { g.note.Take(now) })
+			}
 			if g.finished || g.history != history || g.path != path {
 				return
 			}
@@ -252,5 +256,5 @@ func (g *keeper) close(decided bool) {
 			g.side.End()
 		}
 	}
-	g.note.Release()
+	g.note.End()
 }

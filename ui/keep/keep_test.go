@@ -332,6 +332,9 @@ func TestNotes(t *testing.T) {
 		}
 	}
 	ours.Take("")
+	ours.Take(path)
+	ours.End()
+	ours.Take(path)
 	if got := names(t, filepath.Dir(path)); len(got) != 0 {
 		t.Errorf("left behind: %v", got)
 	}

@@ -22,6 +22,7 @@ type Note struct {
 	mu   sync.Mutex
 	me   Owner
 	file string // "" while none is held
+	over bool
 }
 
 // NewNote returns a note of an owner that marks nothing yet.
@@ -37,7 +38,7 @@ func (n *Note) Take(path string) (other *Held) {
 	n.mu.Lock()
 	defer n.mu.Unlock()
 	n.release()
-	if path == "" {
+	if path == "" || n.over {
 		return nil
 	}
 	file := noteOf(path)
@@ -78,6 +79,14 @@ func (n *Note) Release() {
 	n.mu.Lock()
 	defer n.mu.Unlock()
 	n.release()
+}
+
+// End takes the mark away for good.
+func (n *Note) End() {
+	n.mu.Lock()
+	defer n.mu.Unlock()
+	n.release()
+	n.over = true
 }
 
 func (n *Note) release() {
