@@ -5,6 +5,7 @@ import (
 	"os"
 	"path/filepath"
 	"slices"
+	"strings"
 
 	"packrise/solver/quantity"
 	"packrise/solver/rating"
@@ -200,7 +201,7 @@ func lowest(p *Permits, c *Codes) []Lowest {
 		for _, cap := range c.Caps {
 			if cap.Conductor == w.ID && !math.IsNaN(cap.A) {
 				l.Terminal = cap.A
-				if cap.Kind != "terminal-block" || !cap.Assumed { // nobody said that it ends in a terminal block
+				if !cap.Assumed || cap.Kind != "terminal-block" && c.wired() { // nobody said that it ends in a terminal block
 					take(cap.A, "terminal", cap.Text)
 				}
 			}
@@ -213,6 +214,14 @@ func lowest(p *Permits, c *Codes) []Lowest {
 		out[i] = l
 	}
 	return out
+}
+
+// wired tells whether a rule of the NEC gives currents here: its terminals, where nobody states any, belong to its wiring and not to a harness or a
+// cable that other rules rate.
+func (c *Codes) wired() bool {
+	return slices.ContainsFunc(c.Outcomes, func(o rules.Outcome) bool {
+		return o.Applies && !o.Informative && strings.HasPrefix(o.Rule, "nec-") && len(o.Conductors) > 0
+	})
 }
 
 func finite(a float64) float64 {

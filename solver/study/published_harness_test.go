@@ -122,6 +122,15 @@ func TestHarnessDocuments(t *testing.T) {
 	}
 }
 
+// TestHarnessHasNoAssumedTerminal: terminals that nobody stated are those of NEC 110.14(C) and cap nothing that the NEC does not rate.
+func TestHarnessHasNoAssumedTerminal(t *testing.T) {
+	for _, l := range rated(t, exampleB.doc(t), false).Lowest {
+		if a := l.Rules["ac-43-13"]; l.Because != "ac-43-13" || l.A != a || math.Abs(a-23.1) > 0.05 {
+			t.Errorf("%s: %.2f A because of %s, the circular has 23.1 A", l.ID, l.A, l.Because)
+		}
+	}
+}
+
 // TestFillDocuments: NEC annex C for THHN in EMT through documents: ½ in 12, 9, 5, 3 of 14, 12, 10, 8 AWG, 1 in 35, 26, 16, 9; one more is over.
 func TestFillDocuments(t *testing.T) {
 	s := New(cat)

@@ -200,7 +200,7 @@ func holds(t *testing.T, s *Study, d *section.Document, r *Ratings, kinds map[st
 // reliable holds P95 at what is relied on, found anew there.
 func reliable(s *Study, d *section.Document, r *Ratings) string {
 	f := r.All.Rely.Factor
-	if f <= 0 || math.IsInf(f, 1) {
+	if f <= 0 || math.IsInf(f, 1) || len(d.Parts) > 2 && !soaking {
 		return ""
 	}
 	there := scaleAll(d, f)
