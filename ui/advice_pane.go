@@ -32,7 +32,7 @@ func (a *asks) showAdvice() {
 func (a *asks) askAdvice() {
 	a.rows = nil
 	a.pane.show(adviceTitle, nil, a.note("Every single change that might help is looked at, and the best are solved in full …"))
-	a.asker.ask(question{
+	a.asked = a.asker.ask(question{
 		work: func(ctx context.Context, s *study.Study, d *section.Document, o study.Options) (any, error) {
 			return s.Advise(ctx, d, nil, o)
 		},
@@ -52,9 +52,12 @@ func (a *asks) askAdvice() {
 			}
 		},
 	})
-	a.pane.waiting(true, a.asker.cancel)
+	a.pane.waiting(true, a.withdraw)
 	a.side.Refresh()
 }
+
+// withdraw stops looking for what to change first.
+func (a *asks) withdraw() { a.asker.withdraw(a.asked) }
 
 // adviceGone says why there is no list any more.
 func (a *asks) adviceGone(why string) {

@@ -19,6 +19,7 @@ type askSheet struct {
 	body   *fyne.Container
 	bar    *widget.ProgressBar
 	before string // what is said meanwhile
+	asked  *question
 	work   func(ctx context.Context, s *study.Study, d *section.Document, o study.Options) (any, error)
 	// answered returns what to show, and buttons beside Close.
 	answered func(answer any) (text []string, buttons []fyne.CanvasObject)
@@ -30,14 +31,14 @@ func (a *asks) askIn(title string, size fyne.Size, s *askSheet) {
 	s.d = dialog.NewCustomWithoutButtons(title, s.body, a.w.win)
 	s.ask()
 	a.w.show(s.d, size)
-	a.w.closing(s.d, a.asker.cancel)
+	a.w.closing(s.d, func() { a.asker.withdraw(s.asked) })
 }
 
 func (s *askSheet) ask() {
 	s.bar.SetValue(0)
 	s.say([]string{s.before}, s.bar)
 	s.d.SetButtons([]fyne.CanvasObject{widget.NewButton("Cancel", s.a.w.hide)})
-	s.a.asker.ask(question{
+	s.asked = s.a.asker.ask(question{
 		work: s.work,
 		told: forward(s.bar.SetValue),
 		then: func(answer any, err error) {

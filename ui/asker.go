@@ -54,17 +54,25 @@ func (a *asker) close() {
 	a.runner.Close()
 }
 
-// ask puts a question about the document as it is.
-func (a *asker) ask(q question) {
+// ask puts a question about the document as it is, and returns it for cancelling.
+func (a *asker) ask(q question) *question {
 	a.cancel()
 	a.desk.long()
 	q.doc, q.rev = a.desk.Document(), a.desk.Revision()
 	q.dir = a.desk.folder()
 	a.now = &q
 	a.runner.Ask(&q, true)
+	return &q
 }
 
-// cancel drops the question that is under way.
+// withdraw drops a question if it is still the one under way.
+func (a *asker) withdraw(q *question) {
+	if q != nil && a.now == q {
+		a.cancel()
+	}
+}
+
+// cancel drops the question that is under way, whosever it is.
 func (a *asker) cancel() {
 	q := a.now
 	if q == nil {

@@ -15,6 +15,7 @@ type asks struct {
 	shown    askShown
 	advice   *study.Advice // nil: not known for the document as it is
 	rows     []*askRow
+	asked    *question   // for the list of what to change first
 	gone     string      // what is said when the design changes under the list
 	matching *matchSheet // the dialog of a measurement that was opened last
 }
@@ -79,9 +80,7 @@ func (a *asks) showPane(what askShown) {
 
 // hidePane puts the pane away and ends what runs for it.
 func (a *asks) hidePane() {
-	if a.shown == paneAdvice {
-		a.asker.cancel()
-	}
+	a.withdraw()
 	a.shown, a.rows = paneNothing, nil
 	a.w.view.SetGhost(nil)
 	a.pane.Hide()

@@ -207,3 +207,18 @@ func TestPaneAndDetailsShareTheSide(t *testing.T) {
 		}
 	}
 }
+
+func TestClosingADialogLeavesOtherQuestions(t *testing.T) {
+	w, l := testWindow(t, hotDesign(), usualSize)
+	w.desk.Select("L1")
+	w.asks.showSeating()
+	w.asks.showFit() // takes the place of the dialog, and of its question
+	mustHave(t, dialogText(w), "How many more like L1 fit", "[Cancel]")
+	w.asks.showAdvice()
+	mustHave(t, dialogText(w), "something else was asked meanwhile")
+	w.hide()
+	if w.asks.asker.now == nil {
+		t.Fatal("closing the dialog ends what the pane asks")
+	}
+	l.until(t, "advice", func() bool { return w.asks.advice != nil })
+}

@@ -22,6 +22,7 @@ type matchSheet struct {
 	sheet *inputSheet
 	found *findings
 	bar   *widget.ProgressBar
+	asked *question
 }
 
 // showMatch asks about a measurement and fits the section to it.
@@ -46,7 +47,7 @@ func (a *asks) showMatch() {
 	match.Importance = widget.HighImportance
 	d.SetButtons([]fyne.CanvasObject{widget.NewButton("Close", a.w.hide), match})
 	a.w.show(d, fyne.NewSize(940, 620))
-	a.w.closing(d, a.asker.cancel)
+	a.w.closing(d, func() { a.asker.withdraw(s.asked) })
 }
 
 const newMeasurement = "a new measurement"
@@ -105,9 +106,9 @@ func (s *matchSheet) match() {
 		return section.SetReason(section.SetMeasurement(d, m), section.ReasonMeasurement+m.ID, reason)
 	}}, false)
 	s.bar.SetValue(0)
-	stop := widget.NewButton("Cancel", s.a.asker.cancel)
+	stop := widget.NewButton("Cancel", func() { s.a.asker.withdraw(s.asked) })
 	s.found.say([]ruleBlock{{"", []string{"The section is being solved as it was at the reading …"}}}, s.bar, container.NewHBox(stop))
-	s.a.asker.ask(question{
+	s.asked = s.a.asker.ask(question{
 		work: func(ctx context.Context, st *study.Study, d *section.Document, o study.Options) (any, error) {
 			return st.Match(ctx, d, m.ID, o)
 		},

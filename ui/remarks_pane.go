@@ -9,7 +9,7 @@ const remarksTitle = "Remarks"
 // showRemarks lists what is worth knowing about the answer.
 func (a *asks) showRemarks() {
 	if a.shown == paneAdvice {
-		a.asker.cancel()
+		a.withdraw()
 		a.w.view.SetGhost(nil)
 	}
 	a.showPane(paneRemarks)
