@@ -384,3 +384,27 @@ func TestApartPoint(t *testing.T) {
 		}
 	}
 }
+
+// TestApartSector: a sector that touches another part is refused in words, one by itself is not.
+func TestApartSector(t *testing.T) {
+	text := `
+packrise: 1
+surroundings: {kind: still-air, ambient_c: 30}
+holder: {kind: apart}
+parts:
+  - {id: S1, kind: core, conductor: {shape: sector, angle_deg: 90, radius_mm: 6.5, corner_mm: 1, metal: copper}, at_mm: [4, 4], turn_deg: 45}
+  - {id: L1, kind: core, stock: thhn-12, at_mm: [%s, %s]}
+loads: [{id: a, conductors: [S1, L1], current_a: 16}]
+`
+	for at, want := range map[string]bool{"6.9967": true, "9": false} {
+		d, problems := section.Read([]byte(strings.ReplaceAll(text, "%s", at)))
+		if len(problems) > 0 {
+			t.Fatal(problems)
+		}
+		r, problems, err := rating.NewEngine(catalog.Load()).Solve(context.Background(), d, rating.Options{})
+		refused := r == nil && len(problems) == 1 && problems[0].Rule == "bundle-sector"
+		if err != nil || refused != want {
+			t.Errorf("at %s: %v %v", at, problems, err)
+		}
+	}
+}

@@ -3,6 +3,7 @@ package rating
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"packrise/solver/heat"
 	"packrise/solver/pack"
@@ -92,9 +93,24 @@ func (r *resolver) findBodies() {
 	for _, top := range s.touchingParts() {
 		s.bodies = append(s.bodies, body{top: top})
 	}
+	for k := range s.bodies {
+		if s.bodies[k].several() {
+			r.noSectors(s.bodies[k].top, "bodies that touch share a string round them, which takes round parts, bars and flat cables, no sector conductors by themselves",
+				"move them apart, or put the sectors into a cable")
+		}
+	}
 	r.loosenBodies()
 	for k := range s.bodies {
 		s.bodies[k].measure(s)
+	}
+}
+
+// noSectors refuses sector conductors under a string, which can't be wound round their arcs.
+func (r *resolver) noSectors(top []int, what, do string) {
+	s := &r.scene
+	if i := slices.IndexFunc(top, func(i int) bool { return s.parts[i].form.Kind == heat.Sector }); i >= 0 {
+		id := s.parts[top[i]].id
+		r.refuse(&section.Problem{Rule: "bundle-sector", IDs: []string{id}, Key: "holder.kind", What: id + ": " + what, Do: do})
 	}
 }
 

@@ -3,9 +3,7 @@ package rating
 import (
 	"fmt"
 	"math"
-	"slices"
 
-	"packrise/solver/heat"
 	"packrise/solver/pack"
 	"packrise/solver/section"
 )
@@ -123,13 +121,7 @@ func (r *resolver) frame() {
 	top := s.children(-1)
 	switch s.holder.kind {
 	case section.OpenBundle:
-		if i := slices.IndexFunc(top, func(i int) bool { return s.parts[i].form.Kind == heat.Sector }); i >= 0 {
-			r.refuse(&section.Problem{
-				Rule: "bundle-sector", IDs: []string{s.parts[top[i]].id}, Key: "holder.kind",
-				What: s.parts[top[i]].id + ": an open bundle takes round parts, bars and flat cables, no sector conductors by themselves",
-				Do:   "put the sectors into a cable, or use a jacket or conduit",
-			})
-		}
+		r.noSectors(top, "an open bundle takes round parts, bars and flat cables, no sector conductors by themselves", "put the sectors into a cable, or use a jacket or conduit")
 		x, y, rad := pack.Enclose(s.discs(top))
 		s.origin = section.Point{X: x, Y: y}
 		s.holder.radius = rad * mm
