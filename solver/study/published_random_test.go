@@ -189,7 +189,7 @@ func holds(t *testing.T, s *Study, d *section.Document, r *Ratings, kinds map[st
 				return "1 % above a ceiling said to be a runaway is steady and within"
 			}
 		}
-	case k > closeK:
+	case k > closeK+0.01: // a second solution at standard accuracy differs a little
 		return fmt.Sprintf("%.3f K left at nominal", k)
 	default:
 		kinds["limit"]++
