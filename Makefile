@@ -51,7 +51,7 @@ bench: ## speed, with allocations
 	CGO_ENABLED=0 go test -run '^$$' -bench . -benchmem $(NODISPLAY)
 
 package: build cli ## out/packrise-VERSION-linux-ARCH.tar.gz, which runs on a plain Debian
-	@bash packaging/package.sh
+	@bash .ci/packaging/package.sh
 
 package-test: package ## unpack it elsewhere, install, run, take away
 	@bash .ci/package.sh
@@ -60,7 +60,7 @@ install: package ## into PREFIX (~/.local, as root /usr/local); DESTDIR is put b
 	@sh out/package/packrise-*/install.sh
 
 uninstall: ## takes it away again, PREFIX as for install
-	@sh packaging/install.sh --uninstall
+	@sh .ci/packaging/install.sh --uninstall
 
 clean:
 	rm -rf bin out

@@ -14,7 +14,7 @@ import (
 
 // arrows says who may import whom: in "a < b", b may import a and all that a may import. Rooms that are not built yet stand here too.
 const arrows = `
-none < cmd/packrise/internal/locale, solver, solver/quantity, assets, solver/pack, solver/harmonic, solver/outline, solver/fluid, ui/latest, ui/keep, packaging/icon
+none < cmd/packrise/internal/locale, solver, solver/quantity, assets, solver/pack, solver/harmonic, solver/outline, solver/fluid, ui/latest, ui/keep
 solver/fluid < solver/gas, solver/film
 solver/harmonic, solver/outline, solver/fluid, solver/gas, solver/film < solver/heat
 solver/harmonic < solver/electric

@@ -1,7 +1,7 @@
 #!/usr/bin/env bash
-# Makes out/packrise-VERSION-linux-ARCH.tar.gz of the built programs: ./packaging/package.sh, best by `make package`.
+# Makes out/packrise-VERSION-linux-ARCH.tar.gz of the built programs: .ci/packaging/package.sh, best by `make package`.
 set -euo pipefail
-cd "$(dirname "$0")/.."
+cd "$(dirname "$0")/../.."
 version=$(sed -n 's/^ *Version = "\(.*\)"$/\1/p' FyneApp.toml)
 [ -n "$version" ] || { echo "package: FyneApp.toml names no version" >&2; exit 1; }
 for b in packrise packrise-cli; do
@@ -14,16 +14,16 @@ mkdir -p "$tree"/bin "$tree"/share/{applications,mime/packages,doc/packrise/desi
 
 cp bin/packrise bin/packrise-cli "$tree/bin/"
 if command -v strip >/dev/null; then strip "$tree/bin/packrise" "$tree/bin/packrise-cli"; fi
-sed 's/@EXEC@/packrise/; s/@TRYEXEC@/packrise/' packaging/app.packrise.desktop >"$tree/share/applications/app.packrise.desktop"
-cp packaging/app.packrise.xml "$tree/share/mime/packages/"
+sed 's/@EXEC@/packrise/; s/@TRYEXEC@/packrise/' .ci/packaging/app.packrise.desktop >"$tree/share/applications/app.packrise.desktop"
+cp .ci/packaging/app.packrise.xml "$tree/share/mime/packages/"
 for size in 48 128 256 512; do
   icon=$tree/share/icons/hicolor/${size}x$size/apps
   mkdir -p "$icon"
-  go run ./packaging/icon assets/icon.png $size "$icon/app.packrise.png"
+  go run ./.ci/packaging/icon assets/icon.png $size "$icon/app.packrise.png"
 done
 cp README.md LICENSE "$tree/share/doc/packrise/"
 cp assets/designs/*.yaml "$tree/share/doc/packrise/designs/"
-cp README.md LICENSE packaging/INSTALL.txt packaging/install.sh "$tree/"
+cp README.md LICENSE .ci/packaging/INSTALL.txt .ci/packaging/install.sh "$tree/"
 chmod 755 "$tree/install.sh"
 
 # the licences of the libraries that are in the programs
