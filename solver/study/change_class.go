@@ -103,6 +103,9 @@ func (s *Study) typeLimit(p *section.Part, wet bool) float64 {
 	return t.DryC
 }
 
+// widestClass is how far a next class may lie above the present limit, K: wire of a wholly different trade is no next step.
+const widestClass = 50
+
 // hotterType is a core of the wire type with the next higher limit around the same conductor.
 func (s *Study) hotterType(p *section.Part, wet bool, limit float64) (q section.Part, name string, c float64, ok bool) {
 	q = *p
@@ -126,7 +129,7 @@ func (s *Study) hotterType(p *section.Part, wet bool, limit float64) (q section.
 	var stock string
 	for _, t := range s.cat.WireTypes() {
 		k := stands(t)
-		if t.American != american || t.Metal != metal || k <= limit || wet && t.NeverWet || best != nil && k >= stands(*best) {
+		if t.American != american || t.Metal != metal || k <= limit || k > limit+widestClass || wet && t.NeverWet || best != nil && k >= stands(*best) {
 			continue
 		}
 		id, listed := "", false

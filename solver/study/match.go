@@ -162,12 +162,35 @@ func (f *fitter) surface() error {
 	return nil
 }
 
-// emissivity is what the design says of the surface that was read: the outside's, since that is what one sees.
+// emissivity is what the design says of the surface that was read: the outside's, or the outermost material's of a part.
 func (f *fitter) emissivity() float64 {
-	if e := f.base.OutsideEmissivity; e > 0 {
-		return e
+	const usual = 0.9
+	if f.place() == section.Outside {
+		if e := f.base.OutsideEmissivity; e > 0 {
+			return e
+		}
+		return usual
 	}
-	return 0.9
+	p := section.Find(f.then, f.m.At)
+	if p == nil {
+		return usual
+	}
+	id := p.Material
+	if w, ok := f.s.cat.Wire(p.Stock); ok {
+		id = w.Insulation
+	}
+	if n := len(p.Layers); n > 0 {
+		id = p.Layers[n-1].Material
+	}
+	for _, m := range f.then.Materials {
+		if m.Name == id {
+			return m.Emissivity.Or(usual)
+		}
+	}
+	if m, ok := f.s.cat.Material(id); ok && m.Emissivity.V > 0 {
+		return m.Emissivity.V
+	}
+	return usual
 }
 
 // ask lists what a fit rests on and nobody said.
