@@ -56,7 +56,7 @@ func heldRosette(r *rand.Rand) heat.Problem {
 // TestHullEstimate: of every kind the estimate bounds the error against the fine setting on 95 % of random bundles, and is at most ten times too large in
 // the median at standard; of all kinds together in a draft too. No error at standard is above 0.03 K.
 func TestHullEstimate(t *testing.T) {
-	n := soak(6, 60)
+	n := soak(12, 60)
 	if testing.Short() {
 		n = 2
 	}
@@ -106,9 +106,9 @@ func (s *ratios) hold(t *testing.T, name string) {
 	}
 	most := 10.0
 	if all < 50 {
-		most = 20 // the median of a dozen scatters
+		most = 20 // the median of a dozen scatters, and that of two says nothing
 	}
-	if s.over[all/2] > most {
+	if all >= 10 && s.over[all/2] > most {
 		t.Errorf("%s: %.1f times too large in the median", name, s.over[all/2])
 	}
 }
