@@ -20,9 +20,10 @@ test: ## no display, no C compiler, no OpenGL
 	@.ci/setup go
 	CGO_ENABLED=0 go test $(NODISPLAY)
 
-race: ## the same under the race detector, shortened
+race: ## what runs side by side under the race detector, shortened
 	@.ci/setup go race
-	CGO_ENABLED=1 go test -race -short $(NODISPLAY)
+	CGO_ENABLED=1 go test -race -short ./assets/... ./solver/... ./render/... ./ui/keep ./ui/latest
+	CGO_ENABLED=1 go test -race -short ./ui -run 'Desk|Advice|Drag|Frame|Words|Rated|Recover|Closing'
 
 lint:
 	@.ci/setup go window

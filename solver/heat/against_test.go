@@ -60,6 +60,9 @@ func sameAnswer(t *testing.T, got, want *heat.Result, kelvin float64) {
 
 // TestAgainstContours: the harmonics agree with boundary integrals on all faces, whatever the wall and whatever it rests against.
 func TestAgainstContours(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	jacket := []heat.Ring{{K: 0.2, Thickness: 1.2e-3}}
 	for _, c := range []struct {
 		name  string
@@ -172,6 +175,9 @@ func TestAgainstLimits(t *testing.T) {
 
 // TestAgainstMixedBundle: a bundle whose hull is reckoned by contours, since not everything on it is round, agrees with the round one.
 func TestAgainstMixedBundle(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	some := []heat.Against{{Share: 0.2, At: 0.7, Held: true, Temp: 45}, {Share: 0.25, At: -math.Pi / 2}}
 	if testing.Short() {
 		some = some[:1]

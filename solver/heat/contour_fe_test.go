@@ -43,6 +43,9 @@ func besides() []beside {
 
 // A bar beside round wires, in a conduit and in an open bundle, against finite elements.
 func TestContoursAgainstFiniteElements(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	for _, c := range besides() {
 		for acc, within := range map[heat.Accuracy]float64{heat.Draft: 0.05, heat.Standard: 0.01, heat.Fine: 0.005} {
 			r := solve(t, c.p, acc)

@@ -28,6 +28,9 @@ func randomBunch(rnd *rand.Rand) heat.Problem {
 // Any open bundle with parts that are not round is solved: heat balances, nothing is below ambient, the influence is reciprocal and that of the
 // solution, the finer answer lies within the estimate 19 times of 20, and moving a part is making the bundle anew. 2 bundles, 60 under PACKRISE_SOAK.
 func TestContourHullProperties(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	count, held := soak(2, 60), 0
 	for k := range count {
 		seed := 4 * (k + 1)

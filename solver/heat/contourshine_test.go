@@ -22,6 +22,9 @@ func lightedConduit(wires int, filling heat.Filling) heat.Problem {
 // Round parts that stay pieces beside a bar radiate as they do as contours, in conduits and wireways, with metals bare or not and where they are moved or the film
 // changes; the tangent is the change of the solutions.
 func TestContoursRadiate(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	for name, change := range map[string]func(*heat.Problem){
 		"conduit": func(*heat.Problem) {},
 		"bare bar in a wireway": func(p *heat.Problem) {

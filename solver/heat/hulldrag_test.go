@@ -11,6 +11,9 @@ import (
 // TestHullFreezes: while a part of the outside of a bundle that radiates is dragged, drafts keep what surfaces saw until it has moved 1 mm, say so, and are
 // as far from a draft that looked about as they say; nothing else is frozen.
 func TestHullFreezes(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	frozen, frames, worst := 0, 0, 0.0
 	for i := range soak(4, 40) {
 		r := rand.New(rand.NewPCG(15, uint64(i)))

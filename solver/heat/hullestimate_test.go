@@ -56,10 +56,10 @@ func heldRosette(r *rand.Rand) heat.Problem {
 // TestHullEstimate: of every kind the estimate bounds the error against the fine setting on 95 % of random bundles, and is at most ten times too large in
 // the median at standard; of all kinds together in a draft too. No error at standard is above 0.03 K.
 func TestHullEstimate(t *testing.T) {
-	n := soak(12, 60)
 	if testing.Short() {
-		n = 2
+		t.Skip("one thread, and slow under the race detector")
 	}
+	n := soak(12, 60)
 	var rough ratios
 	for k, kind := range estimateKinds {
 		var usual ratios

@@ -12,6 +12,9 @@ import (
 // TestHullExtremes: rows on one string, parts just off a string, size ratio 50, enamel, bare metal, media from vacuum-like to better than the
 // insulation, films from almost none to held. The answer converges, conserves heat, and stays between ambient and the hottest metal.
 func TestHullExtremes(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	at := func(xy ...float64) (p [][2]float64) {
 		for i := 0; i < len(xy); i += 2 {
 			p = append(p, [2]float64{xy[i], xy[i+1]})

@@ -151,6 +151,9 @@ func TestShiningCold(t *testing.T) {
 
 // Moving a part gives what a new model gives; a draft may freeze the radiation on the way and says so.
 func TestMoveShining(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	for _, rect := range []bool{false, true} {
 		r := rand.New(rand.NewPCG(3, 77))
 		p := shining(r, randomSection(r, wish{parts: 8, air: true, rect: rect, loose: true, cables: true}), true)

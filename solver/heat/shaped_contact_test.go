@@ -36,6 +36,9 @@ func sectorCentroid(f heat.Form) float64 {
 // Contacts along lines and at points, with parts a little into each other as coordinates of few digits leave them: all settle, balance and change
 // little with the accuracy.
 func TestShapedContacts(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	cases := map[string]heat.Problem{}
 	counts := []int{2, 3, 5}
 	for _, n := range counts[:soak(1, len(counts))] { // under PACKRISE_SOAK all

@@ -81,6 +81,9 @@ func randomShaped(rnd *rand.Rand) heat.Problem {
 // Any section that can be drawn is solved: heat balances, reciprocity, nothing is below ambient, the finer answer lies within the estimate
 // 19 times of 20. 2 sections, 120 under PACKRISE_SOAK.
 func TestShapedProperties(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	count, held := soak(2, 120), 0
 	for seed := range count {
 		rnd := rand.New(rand.NewPCG(uint64(seed), 7))

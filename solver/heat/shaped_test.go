@@ -10,6 +10,9 @@ import (
 
 // The reference sections with parts that are not round (testdata/fe-cases/README.md).
 func TestShapedReferenceCases(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	want := expected(t, "expected.csv", "temperature_c")
 	for _, name := range []string{"s01_sector4", "s02b_flat_air", "s03_bar_two_wires"} {
 		l := load(t, name)

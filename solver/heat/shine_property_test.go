@@ -26,6 +26,9 @@ func randomShine(seed uint64) heat.Problem {
 // Heat is conserved, radiation cools, the tangent tells what a little more heat does, and the finer answer lies within the estimate 19 times of 20.
 // 2 sections, 100 under PACKRISE_SOAK.
 func TestShineProperties(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	count, held := soak(2, 100), 0
 	for seed := range count {
 		p := randomShine(uint64(seed))
@@ -153,6 +156,9 @@ func TestShapedAirMoves(t *testing.T) {
 
 // A moved part leaves nothing behind: the answer is that of a new model; other films are taken over.
 func TestShineMoves(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	p := duct()
 	m := heat.New(p, heat.Settings{})
 	m.Solve(bg, nil)

@@ -108,6 +108,9 @@ func flatInConduit() heat.Problem {
 // References of our own (testdata/fe-shaped/README.md): conduction by FreeFem++ 4 on quadratic triangles, radiation by crossed strings between some 400
 // patches, Richardson in their length; good to 0.005 K.
 func TestShapedRadiatingReferences(t *testing.T) {
+	if testing.Short() {
+		t.Skip("one thread, and slow under the race detector")
+	}
 	for _, c := range []struct {
 		name string
 		p    heat.Problem
