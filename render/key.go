@@ -1,8 +1,7 @@
 package render
 
-// key says what hatching, dashed lines and heat-flow lines mean, when there are any: at the bottom beside the scale in mm, else in another corner
-// that is free.
-func (p *sectionPainter) key(after bar, hatched bool, lines []isoline, heat *flow) {
+// key says what hatching, dashed lines, heat-flow lines and shades mean, when there are any.
+func (p *sectionPainter) key(after bar, hatched bool, lines []isoline, heat *flow, shaded bool) {
 	var entries []keyEntry
 	if hatched {
 		entries = append(entries, keyEntry{"over its limit", p.hatchSwatch})
@@ -16,6 +15,14 @@ func (p *sectionPainter) key(after bar, hatched bool, lines []isoline, heat *flo
 	if heat != nil && len(heat.lines) > 0 {
 		entries = append(entries, keyEntry{heat.keyText(), p.flowSwatch})
 	}
+	p.placeKey(after, entries)
+	if shaded {
+		p.placeKey(after, []keyEntry{{"shaded: share of the rise of " + p.s.Heated, p.shadeSwatch}})
+	}
+}
+
+// placeKey writes entries at the bottom beside the scale in mm, else in another corner that is free.
+func (p *sectionPainter) placeKey(after bar, entries []keyEntry) {
 	wide := 0.0
 	for i, e := range entries {
 		if i > 0 {

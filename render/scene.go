@@ -28,13 +28,15 @@ type Scene struct {
 	Status   string   // the quiet line below: heat in and out, numerical error, time
 	Caution  string
 
-	Selected []string // ringed
-	Pointed  string   // lit up
-	Stale    bool     // the readings belong to an older section: greyed
-	Draft    bool     // within a drag: lines of equal temperature are drawn more coarsely
-	Plain    bool     // without lines of equal temperature
-	Flow     bool     // with heat-flow lines, unless Stale or Draft
-	Bad      []string // ids that overlap or lie outside: marked
+	Selected []string       // ringed
+	Pointed  string         // lit up
+	Heated   string         // the part whose heaters are shaded, "" for none
+	Heaters  map[string]int // percent of its rise that a part gives to it
+	Stale    bool           // the readings belong to an older section: greyed
+	Draft    bool           // within a drag: lines of equal temperature are drawn more coarsely
+	Plain    bool           // without lines of equal temperature
+	Flow     bool           // with heat-flow lines, unless Stale or Draft
+	Bad      []string       // ids that overlap or lie outside: marked
 }
 
 // solved tells whether the scene has temperatures.

@@ -13,6 +13,7 @@ func SectionLayer(c Canvas, s Scene, v View, sc Scale, st Style) {
 	p := newSectionPainter(c, s, v, sc, st)
 	p.fills()
 	p.veil()
+	shaded := p.shades()
 	lines := p.isotherms()
 	hatched := p.hatching()
 	flow := p.flowLines()
@@ -23,7 +24,7 @@ func SectionLayer(c Canvas, s Scene, v View, sc Scale, st Style) {
 	p.planCallouts()
 	p.ids()
 	p.drawScaleBar(bar)
-	p.key(bar, hatched, lines, flow)
+	p.key(bar, hatched, lines, flow, shaded)
 	p.callouts()
 	p.isothermLabels(lines)
 }
