@@ -26,6 +26,7 @@ type rated struct {
 	refusal []section.Problem // why nothing is rated
 	failure error             // of the program
 	named   bool              // the picture has been told what governs by the bands
+	shaded  bool              // and who heats whom
 	was     *study.Ratings    // of the document before, shown greyed until newer ones are as far
 }
 
@@ -133,6 +134,10 @@ func (k *Desk) takeRatings(q rateRequest, r *study.Ratings, err error) {
 
 // tellRatings tells of ratings, together with the answer's picture where that is still being painted.
 func (k *Desk) tellRatings() {
+	if id, _ := k.heaters(); id != "" && !k.rated.shaded && k.picture != nil {
+		k.rated.shaded = true
+		k.picture(ChangedRatings)
+	}
 	if k.answer.unsaid != 0 {
 		k.answer.unsaid |= ChangedRatings
 		return

@@ -7,6 +7,7 @@ import (
 	"packrise/render"
 	"packrise/solver/rating"
 	"packrise/solver/section"
+	"packrise/solver/study"
 )
 
 // State is the colour of the sentence's edge. It never speaks alone: the sentence begins with the same word.
@@ -123,6 +124,7 @@ func (k *Desk) Scene() render.Scene {
 		s.Field = r
 	}
 	s.Bands = k.bands()
+	s.Heated, s.Heaters = k.heaters()
 	if id, ok := k.governs(); ok {
 		for i := range s.Readings {
 			s.Readings[i].Governs = s.Readings[i].ID == id
@@ -169,6 +171,30 @@ func (k *Desk) bands() map[string][2]float64 {
 		note(len(rated.Base.Conductors)+i, o.ID)
 	}
 	return out
+}
+
+// heaters returns the one selected conductor and what percent of its rise each other one gives to it; "" where none or several are selected, within
+// a drag, and while nobody knows.
+func (k *Desk) heaters() (id string, percent map[string]int) {
+	r := k.Ratings()
+	if r == nil || r.Heaters == nil || k.Drafting() || len(k.selection) != 1 {
+		return "", nil
+	}
+	id = k.selection[0]
+	if i := indexIn(r.Base, id); i < 0 || i >= len(r.Base.Conductors) { // the shares of other things are loads'
+		return "", nil
+	}
+	h, ok := r.Heaters.Of(id)
+	if !ok {
+		return "", nil
+	}
+	percent = map[string]int{}
+	for _, s := range h.Shares {
+		if s.From != id && s.From != study.Around {
+			percent[s.From] = s.Percent
+		}
+	}
+	return id, percent
 }
 
 // shownShapes returns the shapes of the scene.

@@ -258,6 +258,7 @@ func (t *telling) rates(in []*input) {
 	t.heading("Permitted currents")
 	t.notRated()
 	t.wholeMay()
+	t.largest()
 	sentence := paragraph{say("Kept below every limit: "), word(inputNamed(in, "margin"))}
 	if reason := inputNamed(in, "margin-reason"); reason != nil {
 		sentence = append(sentence, say(", because "), word(reason))

@@ -74,6 +74,7 @@ const (
 // WritePicture draws the scene on light paper and writes it as PNG, whole or not at all.
 func WritePicture(path string, scene render.Scene) error {
 	scene.Selected, scene.Pointed = nil, ""
+	scene.Heated, scene.Heaters = "", nil
 	var png bytes.Buffer
 	if err := render.WritePNG(&png, scene, pictureWide, pictureHigh, render.Style{Scale: pictureScale}); err != nil {
 		return fmt.Errorf("draw the picture: %w", err)
