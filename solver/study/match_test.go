@@ -32,6 +32,9 @@ func surveyed(d *section.Document, m section.Measurement) *section.Document {
 
 // TestMatchFinds plants a film and a clearance and finds them again from the temperature that they give.
 func TestMatchFinds(t *testing.T) {
+	if testing.Short() {
+		t.Skip("many full solutions")
+	}
 	s := New(cat)
 	ctx := context.Background()
 	d := demo(t, "nine-in-emt")

@@ -12,6 +12,9 @@ import (
 
 // TestPermits holds the three questions of a demo to each other.
 func TestPermits(t *testing.T) {
+	if testing.Short() {
+		t.Skip("many full solutions")
+	}
 	d := demo(t, "nine-in-emt")
 	s := New(cat)
 	ctx := context.Background()
