@@ -23,7 +23,7 @@ func readingOf(r *rating.Result, id string) (reading, bool) {
 	}
 	for i := range r.Conductors {
 		if c := &r.Conductors[i]; c.ID == id {
-			return reading{c.TempC, c.LimitC, c.LimitAssumed, c.LimitBy}, true
+			return reading{c.JudgedC(), c.LimitC, c.LimitAssumed, c.LimitBy}, true
 		}
 	}
 	for i := range r.Others {

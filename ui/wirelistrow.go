@@ -117,7 +117,7 @@ func newWireFacts(d *section.Document, r *rating.Result, problems []section.Prob
 	}
 	if r != nil {
 		for _, c := range r.Conductors {
-			f.answers[c.ID] = wireAnswer{c.TempC, c.LimitC, c.LimitAssumed}
+			f.answers[c.ID] = wireAnswer{c.JudgedC(), c.LimitC, c.LimitAssumed}
 		}
 		for _, o := range r.Others {
 			f.answers[o.ID] = wireAnswer{o.TempC, o.LimitC, o.LimitAssumed}

@@ -81,7 +81,7 @@ func (r *Result) Readings() []section.Reading {
 	out := make([]section.Reading, 0, len(r.Conductors)+len(r.Others))
 	for _, c := range r.Conductors {
 		out = append(out, section.Reading{
-			ID: c.ID, Kind: section.Core, TempC: c.TempC, LimitC: c.LimitC, Assumed: c.LimitAssumed, CurrentA: c.CurrentA, HeatWM: c.HeatWM,
+			ID: c.ID, Kind: section.Core, TempC: c.JudgedC(), LimitC: c.LimitC, Assumed: c.LimitAssumed, CurrentA: c.CurrentA, HeatWM: c.HeatWM,
 			Hottest: c.ID == r.Hottest, Unloaded: c.HeatWM == 0, LoadKnown: c.LoadKnown, Governs: r.governs(c.ID),
 		})
 	}

@@ -254,8 +254,8 @@ func (r *resolver) screens() {
 	}
 }
 
-// judged is what the limit of a conductor is held against.
-func (c *Conductor) judged() float64 {
+// JudgedC is what the limit of a conductor is held against, and what is shown of it: its metal, or its insulation beside hotter neighbours, °C.
+func (c *Conductor) JudgedC() float64 {
 	if c.HottestC > c.TempC {
 		return c.HottestC
 	}

@@ -239,8 +239,8 @@ func (r *Result) governing() *Governs {
 	for i := range r.Conductors {
 		c := &r.Conductors[i]
 		was := g
-		if try(c.ID, c.judged(), c.LimitC, c.LimitAssumed, c.LimitBy); g != was {
-			g.Heats, g.Insulation = c.Heats, c.judged() > c.TempC
+		if try(c.ID, c.JudgedC(), c.LimitC, c.LimitAssumed, c.LimitBy); g != was {
+			g.Heats, g.Insulation = c.Heats, c.JudgedC() > c.TempC
 		}
 	}
 	for _, o := range r.Others {

@@ -14,7 +14,7 @@ func (r *Result) Table() [][6]string {
 		case !c.LoadKnown:
 			carries = "unknown"
 		}
-		out = append(out, r.row(c.ID, carries, digits(c.HeatWM, 3)+" W/m", c.TempC, c.LimitC))
+		out = append(out, r.row(c.ID, carries, digits(c.HeatWM, 3)+" W/m", c.JudgedC(), c.LimitC))
 	}
 	for _, o := range r.Others {
 		makes := ""
