@@ -60,14 +60,14 @@ func installFamilies(t testing.TB) []family {
 		f := &out[i]
 		f.source, f.conditions, f.unit = installations, "copper, PVC, conductor 70 °C, 30 °C, 50 Hz", "A"
 		for _, m := range methods {
-			f.rows = append(f.rows, m.rows(t, !f.later)...)
+			f.rows = append(f.rows, m.rows(t)...)
 		}
 	}
 	return out
 }
 
 // rows makes the comparisons of a method; 2.5 and 25 mm² are quick.
-func (m method) rows(t testing.TB, drawable bool) []comparison {
+func (m method) rows(t testing.TB) []comparison {
 	table := open(t, "iec60364_ampacity_cu.csv")
 	var out []comparison
 	for _, size := range m.sizes {
@@ -76,7 +76,7 @@ func (m method) rows(t testing.TB, drawable bool) []comparison {
 		out = append(out, comparison{
 			name:      fmt.Sprintf("%s mm², %d loaded%s", size, m.loaded, m.word),
 			published: table.number("I", "PVC", m.key, fmt.Sprint(m.loaded), size),
-			compute:   ask(p), quick: drawable && (size == "2.5" || size == "25"),
+			compute:   ask(p), quick: size == "2.5" || size == "25",
 		})
 	}
 	return out

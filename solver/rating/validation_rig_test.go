@@ -22,7 +22,6 @@ type family struct {
 	unit         string
 	low, high    float64 // band of computed over published; both 0: reported only
 	ofMean       bool    // the band is that of the family's mean: single figures may leave it, for the reason that drawn gives
-	later        bool    // the format names what is drawn, a version may not read it yet
 	rows         []comparison
 }
 
